@@ -1,0 +1,70 @@
+package study
+
+import (
+	"github.com/paulmach/orb"
+
+	"enfilade/solver/plan"
+)
+
+// EdgeKind says what a piece of a region's border is.
+type EdgeKind uint8
+
+// The kinds of border.
+const (
+	EdgeWall      EdgeKind = iota // on something that stops sight
+	EdgeOccluding                 // open floor goes on behind it
+	EdgeClip                      // a side of the view angle or the arc of the range
+)
+
+// Sight is the region seen from one observer, or the places that see one target, in the plane of the eye.
+type Sight struct {
+	Item        plan.Ref
+	Name        string
+	At          orb.Point  // where the eye was taken to be, mm; it differs from the item's place when that was moved to a face's free side
+	Eye         float64    // height of the eye, mm
+	Problem     string     // why nothing was solved for this item; empty when it was
+	Area        float64    // m²
+	Perimeter   float64    // m, the whole border
+	Wall        float64    // m, border on things that stop sight
+	Occluding   float64    // m, border where floor goes on
+	Clip        float64    // m, border on the sides of the view angle and the arc of the range
+	Boundary    orb.Ring   // mm, counter-clockwise, first point not repeated
+	Kinds       []EdgeKind // Kinds[i] is the border from Boundary[i] to the next point
+	TargetsSeen []string   // observers only: ids of the targets in the region, in the plan's order
+}
+
+// Status says how an approach ends.
+type Status uint8
+
+// The ends of an approach.
+const (
+	StatusNone     Status = iota // no walk leads to a place that sees the target
+	StatusSeen                   // the start already sees it
+	StatusApproach               // a walk of positive length
+)
+
+// Approach is the shortest walk from a start to first sight of a target, and the full walk to the target itself.
+type Approach struct {
+	Start, Target string
+	Problem       string // why this pair was not solved; empty when it was
+	Status        Status
+	Length        float64     // mm, to first sight
+	FirstSight    orb.Point   // mm
+	Points        []orb.Point // mm, the walk from start to first sight; one point when the start sees the target
+	SightLine     float64     // mm, from first sight to the target
+	HasFullWalk   bool
+	FullWalk      float64     // mm
+	FullPoints    []orb.Point // mm
+	Reason        string      // why there is no approach or no full walk: what closes the way
+	Seconds       float64     // of the approach at the walker's pace
+	Ties          bool        // another way is equally short
+}
+
+// Result is everything studied about one plan.
+type Result struct {
+	Sight      []Sight    // one for each observer, in the plan's order
+	SeenFrom   []Sight    // one for each target
+	Approaches []Approach // one for each start and target, starts outermost
+	WalkerEye  float64    // mm
+	Problems   []plan.Problem
+}
