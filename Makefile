@@ -1,0 +1,27 @@
+# Everything is done by the scripts in .ci; this file names them. `make help` lists what there is.
+.PHONY: help run build test check bench shots clean
+.DEFAULT_GOAL := help
+
+help: ## list these targets
+	@awk -F ':.*## ' '/^[a-z]+:.*## /{printf "  make %-7s %s\n", $$1, $$2}' Makefile
+
+run: ## install what is missing, build, and open the sample gallery
+	@bash .ci/start
+
+build: ## build the program with its window: bin/enfilade
+	@bash .ci/build
+
+test: ## install what is missing and run every test
+	@bash .ci/test
+
+check: test ## every test, then staticcheck and ten seconds of each fuzz target
+	@bash .ci/check
+
+bench: ## measure mesh, region and approach, beside CGAL
+	@bash .ci/bench
+
+shots: ## take screenshots of the real window on each sample, light and dark, into out/
+	@bash .ci/shots
+
+clean: ## remove bin/ and out/
+	@rm -rf bin out
