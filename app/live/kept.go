@@ -1,0 +1,61 @@
+package live
+
+import (
+	"iter"
+
+	"enfilade/solver/plan"
+)
+
+// kept holds the last answers of the stages that do not look at observers, so that dragging an observer does not solve
+// the approaches again.
+type kept struct {
+	approaches, seenFrom Update
+}
+
+// fill answers u from what is kept and reports whether it could.
+func (k *kept) fill(u *Update) bool {
+	switch {
+	case u.Stage == StageApproaches && k.approaches.Plan != nil && sameWalks(k.approaches.Plan, u.Plan):
+		u.Approaches = k.approaches.Approaches
+	case u.Stage == StageSeenFrom && k.seenFrom.Plan != nil && sameWalks(k.seenFrom.Plan, u.Plan):
+		u.Sights = k.seenFrom.Sights
+	default:
+		return false
+	}
+	return true
+}
+
+func (k *kept) keep(u Update) {
+	switch u.Stage {
+	case StageApproaches:
+		k.approaches = u
+	case StageSeenFrom:
+		k.seenFrom = u
+	}
+}
+
+// sameWalks reports whether p and q have the same approaches and the same regions of targets, for all that can be told
+// quickly: the same obstacles, targets, starts and walker. A plan without a floor has one that follows its marks, so
+// there nothing may differ.
+func sameWalks(p, q *plan.Plan) bool {
+	if p.Obstacles() != q.Obstacles() || p.Floor().Len() == 0 && p.Marks() != q.Marks() {
+		return false
+	}
+	if p.Marks() == q.Marks() {
+		return true
+	}
+	return p.Walker() == q.Walker() && p.NumTargets() == q.NumTargets() && p.NumStarts() == q.NumStarts() &&
+		equal(p.Targets(), q.Targets()) && equal(p.Starts(), q.Starts())
+}
+
+// equal compares two lists of the same length.
+func equal[T comparable](a, b iter.Seq2[int, T]) bool {
+	next, stop := iter.Pull2(b)
+	defer stop()
+	for _, x := range a {
+		if _, y, ok := next(); !ok || x != y {
+			return false
+		}
+	}
+	return true
+}

@@ -1,0 +1,180 @@
+package live
+
+import (
+	"context"
+	"errors"
+	"fmt"
+	"runtime/debug"
+	"sync"
+	"time"
+
+	"enfilade/solver/plan"
+	"enfilade/solver/study"
+)
+
+// Stage is one part of the study, in the order the stages run.
+type Stage uint8
+
+// The stages.
+const (
+	StageMesh Stage = iota
+	StageSights
+	StageApproaches
+	StageSeenFrom
+	NumStages
+)
+
+// String names the stage as the window says it: what is being worked out.
+func (s Stage) String() string {
+	return [...]string{"the mesh of the plan", "what observers see", "approaches", "where targets are seen from"}[s]
+}
+
+// Solver does the work of the stages. It is used by one goroutine; [study.Solver] is one.
+type Solver interface {
+	Mesh(ctx context.Context, p *plan.Plan) error
+	Sights(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
+	Approaches(ctx context.Context, p *plan.Plan) ([]study.Approach, error)
+	SeenFrom(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
+}
+
+// Update is what one stage found out about one plan.
+type Update struct {
+	Rev        uint64
+	Plan       *plan.Plan
+	Stage      Stage
+	Sights     []study.Sight    // of StageSights and StageSeenFrom
+	Approaches []study.Approach // of StageApproaches
+	Err        error            // why the stage has no answer; the later stages of this plan are then left out only after StageMesh
+	Took       time.Duration
+}
+
+// patience is how long a drag may go without a fresh mesh: when every mesh of that long was cancelled half way, the next
+// one is built to its end. A quarter of a second is the longest a drag may look frozen.
+const patience = 250 * time.Millisecond
+
+type job struct {
+	ctx  context.Context
+	rev  uint64
+	plan *plan.Plan
+}
+
+// Runner recomputes the newest plan on a goroutine of its own.
+type Runner struct {
+	fresh   func() Solver
+	solver  Solver
+	deliver func(Update)
+	slot    chan job
+	done    chan struct{}
+	cancel  context.CancelFunc
+	closed  sync.Once
+	kept    kept
+	starved time.Time // when a mesh was first cancelled since the last one that was finished; zero when none was
+}
+
+// New starts a runner whose solver fresh makes, now and again after a crash. deliver is called on the runner's goroutine and must not wait for the goroutine that calls Submit
+// and Close.
+func New(fresh func() Solver, deliver func(Update)) *Runner {
+	r := &Runner{fresh: fresh, solver: fresh(), deliver: deliver, slot: make(chan job, 1), done: make(chan struct{}),
+		cancel: func() {}}
+	go r.loop()
+	return r
+}
+
+// Submit asks for the study of p, whose revision is rev, and lets go of every plan submitted before. It never waits. It is
+// called from one goroutine only, and not after Close.
+func (r *Runner) Submit(rev uint64, p *plan.Plan) {
+	r.cancel()
+	var ctx context.Context
+	ctx, r.cancel = context.WithCancel(context.Background())
+	select {
+	case <-r.slot: // a waiting job nobody will look at
+	default:
+	}
+	r.slot <- job{ctx, rev, p}
+}
+
+// Close cancels the work, waits for the goroutine to end, and returns. Nothing is delivered after it.
+func (r *Runner) Close() {
+	r.closed.Do(func() {
+		r.cancel()
+		close(r.slot)
+	})
+	<-r.done
+}
+
+func (r *Runner) loop() {
+	defer close(r.done)
+	for j := range r.slot {
+		r.run(j)
+	}
+}
+
+// run does the stages of one job until one is cancelled or there is no mesh.
+func (r *Runner) run(j job) {
+	for s := StageMesh; s < NumStages; s++ {
+		ctx := j.ctx
+		// The regions of the observers on a ready mesh take less than a frame, and a drag must show them: they are
+		// finished for a plan that is already superseded, and delivered.
+		if s == StageSights || s == StageMesh && !r.starved.IsZero() && time.Since(r.starved) > patience {
+			ctx = context.WithoutCancel(ctx)
+		}
+		if ctx.Err() != nil {
+			return
+		}
+		u := r.stage(ctx, j, s)
+		if errors.Is(u.Err, context.Canceled) && ctx.Err() != nil {
+			if s == StageMesh && r.starved.IsZero() {
+				r.starved = time.Now()
+			}
+			return
+		}
+		if s == StageMesh {
+			r.starved = time.Time{}
+		}
+		r.deliver(u)
+		if s == StageMesh && u.Err != nil {
+			return
+		}
+	}
+}
+
+// stage does one stage. A panic of the solver becomes the stage's error; what the solver held may be half done, so the
+// next stage gets a new one.
+func (r *Runner) stage(ctx context.Context, j job, s Stage) (u Update) {
+	began := time.Now()
+	u = Update{Rev: j.rev, Plan: j.plan, Stage: s}
+	defer func() {
+		if v := recover(); v != nil {
+			u.Sights, u.Approaches = nil, nil
+			u.Err = &Crash{Stage: s, Value: v, Stack: debug.Stack()}
+			r.solver = r.fresh()
+		}
+		u.Took = time.Since(began)
+	}()
+	if r.kept.fill(&u) {
+		return u
+	}
+	switch s {
+	case StageMesh:
+		u.Err = r.solver.Mesh(ctx, j.plan)
+	case StageSights:
+		u.Sights, u.Err = r.solver.Sights(ctx, j.plan)
+	case StageApproaches:
+		u.Approaches, u.Err = r.solver.Approaches(ctx, j.plan)
+	case StageSeenFrom:
+		u.Sights, u.Err = r.solver.SeenFrom(ctx, j.plan)
+	}
+	if u.Err == nil {
+		r.kept.keep(u)
+	}
+	return u
+}
+
+// Crash is the error of a stage that panicked.
+type Crash struct {
+	Stage Stage
+	Value any
+	Stack []byte
+}
+
+func (c *Crash) Error() string { return fmt.Sprintf("live: %v: crashed: %v", c.Stage, c.Value) }

@@ -1,0 +1,271 @@
+package live_test
+
+import (
+	"context"
+	"errors"
+	"slices"
+	"strings"
+	"sync"
+	"testing"
+	"testing/synctest"
+	"time"
+
+	"enfilade/app/live"
+	"enfilade/solver/plan"
+	"enfilade/solver/study"
+)
+
+// fake is a solver whose stages take a given time of a fake clock and say what they did.
+type fake struct {
+	take  [live.NumStages]time.Duration
+	panic [live.NumStages]bool
+	fail  [live.NumStages]error
+	calls []live.Stage
+}
+
+func (f *fake) do(ctx context.Context, s live.Stage) error {
+	f.calls = append(f.calls, s)
+	if f.panic[s] {
+		panic("broken " + s.String())
+	}
+	if f.fail[s] != nil {
+		return f.fail[s]
+	}
+	select {
+	case <-ctx.Done():
+		return ctx.Err()
+	case <-time.After(f.take[s]):
+		return nil
+	}
+}
+
+func (f *fake) Mesh(ctx context.Context, _ *plan.Plan) error { return f.do(ctx, live.StageMesh) }
+func (f *fake) Sights(ctx context.Context, p *plan.Plan) ([]study.Sight, error) {
+	return []study.Sight{{Name: p.Sheet().Title}}, f.do(ctx, live.StageSights)
+}
+func (f *fake) Approaches(ctx context.Context, p *plan.Plan) ([]study.Approach, error) {
+	return []study.Approach{{Start: p.Sheet().Title}}, f.do(ctx, live.StageApproaches)
+}
+func (f *fake) SeenFrom(ctx context.Context, p *plan.Plan) ([]study.Sight, error) {
+	return []study.Sight{{Name: p.Sheet().Title}}, f.do(ctx, live.StageSeenFrom)
+}
+
+// rig is a runner with its solver and what it delivered.
+type rig struct {
+	*live.Runner
+	fake *fake
+	mu   sync.Mutex
+	all  []live.Update
+}
+
+// got returns what was delivered so far.
+func (r *rig) got() []live.Update {
+	r.mu.Lock()
+	defer r.mu.Unlock()
+	return slices.Clone(r.all)
+}
+
+func (r *rig) deliver(u live.Update) {
+	r.mu.Lock()
+	defer r.mu.Unlock()
+	r.all = append(r.all, u)
+}
+
+func newRig(f *fake) *rig {
+	r := &rig{fake: f}
+	r.Runner = live.New(func() live.Solver { return f }, r.deliver)
+	return r
+}
+
+func ms(n int) time.Duration { return time.Duration(n) * time.Millisecond }
+
+// titled returns a new plan that shares nothing with any other.
+func titled(title string) *plan.Plan { return plan.From(plan.Parts{Sheet: plan.Sheet{Title: title}}) }
+
+func revs(got []live.Update, s live.Stage) (r []uint64) {
+	for _, u := range got {
+		if u.Stage == s {
+			r = append(r, u.Rev)
+		}
+	}
+	return r
+}
+
+func TestRunnerDeliversEachStageInOrder(t *testing.T) {
+	synctest.Test(t, func(t *testing.T) {
+		r := newRig(&fake{take: [live.NumStages]time.Duration{ms(3), ms(1), ms(5), ms(7)}})
+		p := titled("a")
+		r.Submit(7, p)
+		time.Sleep(ms(100))
+		synctest.Wait()
+		if len(r.got()) != int(live.NumStages) {
+			t.Fatalf("%d updates, want %d", len(r.got()), live.NumStages)
+		}
+		for s, u := range r.got() {
+			if u.Stage != live.Stage(s) || u.Rev != 7 || u.Plan != p || u.Err != nil || u.Took != r.fake.take[s] {
+				t.Errorf("update %d: %+v", s, u)
+			}
+		}
+		if r.got()[1].Sights[0].Name != "a" || r.got()[2].Approaches[0].Start != "a" || r.got()[3].Sights[0].Name != "a" {
+			t.Error("an update carries another plan's answer")
+		}
+		r.Close()
+	})
+}
+
+func TestRunnerNewestWins(t *testing.T) {
+	synctest.Test(t, func(t *testing.T) {
+		r := newRig(&fake{take: [live.NumStages]time.Duration{ms(10), 0, ms(10), ms(10)}})
+		for rev := uint64(1); rev <= 50; rev++ {
+			r.Submit(rev, titled("a"))
+		}
+		time.Sleep(ms(100))
+		synctest.Wait()
+		if last := r.got()[len(r.got())-1]; last.Rev != 50 || last.Stage != live.StageSeenFrom {
+			t.Errorf("last update is %v of revision %d, want the last stage of 50", last.Stage, last.Rev)
+		}
+		if a := revs(r.got(), live.StageApproaches); !slices.Equal(a, []uint64{50}) {
+			t.Errorf("approaches of revisions %v, want 50 alone: plans between were superseded", a)
+		}
+		r.Close()
+	})
+}
+
+// TestRunnerShowsRegionsWhileDragging drags for two seconds with a plan each 10 ms while the later stages take 200 ms.
+func TestRunnerShowsRegionsWhileDragging(t *testing.T) {
+	synctest.Test(t, func(t *testing.T) {
+		r := newRig(&fake{take: [live.NumStages]time.Duration{0, ms(4), ms(200), ms(200)}})
+		for rev := uint64(1); rev <= 200; rev++ {
+			r.Submit(rev, titled("a"))
+			time.Sleep(ms(10))
+		}
+		synctest.Wait()
+		if n := len(revs(r.got(), live.StageSights)); n < 190 {
+			t.Errorf("%d regions shown in a drag of 200 moves", n)
+		}
+		if n := len(revs(r.got(), live.StageApproaches)); n != 0 {
+			t.Errorf("%d approaches of superseded plans", n)
+		}
+		if !slices.IsSorted(revs(r.got(), live.StageSights)) {
+			t.Error("regions out of order")
+		}
+		time.Sleep(time.Second)
+		synctest.Wait()
+		if a := revs(r.got(), live.StageApproaches); !slices.Equal(a, []uint64{200}) {
+			t.Errorf("after the drag approaches of %v, want 200", a)
+		}
+		r.Close()
+	})
+}
+
+// TestRunnerShowsMeshesWhileDragging drags a wall for three seconds while a mesh takes longer than the pause between moves.
+func TestRunnerShowsMeshesWhileDragging(t *testing.T) {
+	synctest.Test(t, func(t *testing.T) {
+		r := newRig(&fake{take: [live.NumStages]time.Duration{ms(100), ms(1), ms(50), ms(50)}})
+		for rev := uint64(1); rev <= 150; rev++ {
+			r.Submit(rev, titled("a"))
+			time.Sleep(ms(20))
+		}
+		synctest.Wait()
+		if n := len(revs(r.got(), live.StageSights)); n < 6 || n > 15 {
+			t.Errorf("%d regions shown in 3 s of dragging with a mesh of 100 ms, want one each 250 to 500 ms", n)
+		}
+		r.Close()
+	})
+}
+
+func TestRunnerKeepsApproachesWhenAnObserverMoves(t *testing.T) {
+	synctest.Test(t, func(t *testing.T) {
+		f := &fake{}
+		r := newRig(f)
+		one := plan.From(plan.Parts{Sheet: plan.Sheet{Title: "one"}})
+		r.Submit(1, one)
+		time.Sleep(ms(1))
+		r.Submit(2, one) // the same parts
+		time.Sleep(ms(1))
+		synctest.Wait()
+		want := []live.Stage{0, 1, 2, 3, 0, 1}
+		if !slices.Equal(f.calls, want) {
+			t.Errorf("stages solved %v, want %v", f.calls, want)
+		}
+		if a := revs(r.got(), live.StageApproaches); !slices.Equal(a, []uint64{1, 2}) {
+			t.Errorf("approaches delivered for %v, want 1 and 2", a)
+		}
+		r.Submit(3, titled("two"))
+		time.Sleep(ms(1))
+		synctest.Wait()
+		if last := r.got()[len(r.got())-2]; last.Approaches[0].Start != "two" {
+			t.Errorf("approaches of another plan were kept: %+v", last)
+		}
+		r.Close()
+	})
+}
+
+func TestRunnerSurvivesPanics(t *testing.T) {
+	for s := range live.NumStages {
+		t.Run(s.String(), func(t *testing.T) {
+			synctest.Test(t, func(t *testing.T) {
+				f := &fake{}
+				f.panic[s] = true
+				r := newRig(f)
+				r.Submit(1, titled("a"))
+				time.Sleep(ms(1))
+				synctest.Wait()
+				var crash *live.Crash
+				if u := r.got()[s]; u.Stage != s || !errors.As(u.Err, &crash) || !strings.Contains(u.Err.Error(), s.String()) {
+					t.Fatalf("update %+v, want a crash that names %q", u, s)
+				}
+				if want := 1; s == live.StageMesh && len(r.got()) != want {
+					t.Errorf("%d updates after a plan without a mesh, want %d", len(r.got()), want)
+				}
+				if s != live.StageMesh && len(r.got()) != int(live.NumStages) {
+					t.Errorf("%d updates, want the other stages to be solved", len(r.got()))
+				}
+				f.panic[s] = false
+				r.all = nil
+				r.Submit(2, titled("b"))
+				time.Sleep(ms(1))
+				synctest.Wait()
+				if len(r.got()) != int(live.NumStages) || r.got()[s].Err != nil {
+					t.Errorf("after a crash the next plan gave %+v", r.got())
+				}
+				r.Close()
+			})
+		})
+	}
+}
+
+func TestRunnerDeliversErrors(t *testing.T) {
+	synctest.Test(t, func(t *testing.T) {
+		f := &fake{}
+		f.fail[live.StageApproaches] = errors.New("too long a wall")
+		r := newRig(f)
+		r.Submit(1, titled("a"))
+		time.Sleep(ms(1))
+		synctest.Wait()
+		if len(r.got()) != 4 || r.got()[2].Err == nil || r.got()[3].Err != nil {
+			t.Errorf("updates %+v, want an error of the approaches alone", r.got())
+		}
+		r.Close()
+	})
+}
+
+// TestRunnerCloseJoins closes at every moment of a job; synctest fails the test if a goroutine is left.
+func TestRunnerCloseJoins(t *testing.T) {
+	for after := range 12 {
+		synctest.Test(t, func(t *testing.T) {
+			r := newRig(&fake{take: [live.NumStages]time.Duration{ms(2), ms(2), ms(2), ms(2)}})
+			r.Submit(1, titled("a"))
+			r.Submit(2, titled("b"))
+			time.Sleep(ms(after))
+			r.Close()
+			n := len(r.got())
+			r.Close()
+			time.Sleep(time.Second)
+			synctest.Wait()
+			if len(r.got()) != n {
+				t.Errorf("%d updates delivered after Close", len(r.got())-n)
+			}
+		})
+	}
+}
