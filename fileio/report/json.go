@@ -1,0 +1,209 @@
+package report
+
+import (
+	"bufio"
+	"bytes"
+	"encoding/json"
+	"io"
+	"math"
+
+	"github.com/paulmach/orb"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/plan"
+	"enfilade/solver/study"
+)
+
+// jsonRegion is what the entries of "sight" and "seen_from" have in common.
+type jsonRegion struct {
+	Name       string   `json:"name"`
+	EyeMM      *float64 `json:"eye_mm"`
+	Problem    *string  `json:"problem"`
+	AreaM2     *float64 `json:"area_m2"`
+	PerimeterM *float64 `json:"perimeter_m"`
+	WallM      *float64 `json:"wall_m"`
+	OccludingM *float64 `json:"occluding_m"`
+	ClipM      *float64 `json:"clip_m"`
+	Boundary   orb.Ring `json:"boundary"`
+}
+
+// jsonObserver is one entry of "sight".
+type jsonObserver struct {
+	Observer string `json:"observer"`
+	jsonRegion
+	TargetsSeen []string `json:"targets_seen"`
+}
+
+// jsonTarget is one entry of "seen_from".
+type jsonTarget struct {
+	Target string `json:"target"`
+	jsonRegion
+}
+
+// jsonApproach is one entry of "approaches".
+type jsonApproach struct {
+	Start          string      `json:"start"`
+	Target         string      `json:"target"`
+	EyeMM          *float64    `json:"eye_mm"`
+	Problem        *string     `json:"problem"`
+	Status         *string     `json:"status"`
+	LengthMM       *float64    `json:"length_mm"`
+	FirstSight     *orb.Point  `json:"first_sight"`
+	Points         []orb.Point `json:"points"`
+	SightLineMM    *float64    `json:"sight_line_mm"`
+	Seconds        *float64    `json:"seconds"`
+	FullWalkMM     *float64    `json:"full_walk_mm"`
+	FullWalkPoints []orb.Point `json:"full_walk_points"`
+	Reason         *string     `json:"reason"`
+	Ties           bool        `json:"ties"`
+}
+
+// jsonItem names one item.
+type jsonItem struct {
+	Kind string `json:"kind"`
+	ID   string `json:"id"`
+}
+
+// jsonProblem is one entry of "problems".
+type jsonProblem struct {
+	Kind  string     `json:"kind"`
+	Items []jsonItem `json:"items"`
+	At    orb.Point  `json:"at"`
+	Text  string     `json:"text"`
+}
+
+// JSON writes the result as one JSON object, one entry a line.
+//
+//   - Members: title, sight, seen_from, approaches, problems, caution; their entries as in README.
+//   - Units: as the end of each name says; coordinates in mm, rings counter-clockwise, first point not repeated.
+//   - Errors: those of w.
+func JSON(w io.Writer, p *plan.Plan, r *study.Result) error {
+	j := &jsonWriter{out: bufio.NewWriter(w)}
+	j.write("{\"title\": ", p.Sheet().Title)
+	list(j, ",\n\"sight\": [", r.Sight, observerEntry)
+	list(j, ",\n\"seen_from\": [", r.SeenFrom, targetEntry)
+	list(j, ",\n\"approaches\": [", r.Approaches, func(a study.Approach) any { return approachEntry(a, r.WalkerEye) })
+	list(j, ",\n\"problems\": [", r.Problems, problemEntry)
+	j.write(",\n\"caution\": ", Caution)
+	j.text("}\n")
+	if j.err != nil {
+		return j.err
+	}
+	return j.out.Flush()
+}
+
+// jsonWriter keeps the first error and writes nothing after it.
+type jsonWriter struct {
+	out *bufio.Writer
+	err error
+}
+
+func (j *jsonWriter) text(s string) {
+	if j.err == nil {
+		_, j.err = j.out.WriteString(s)
+	}
+}
+
+// write writes before, then v as JSON on one line, with <, > and & left as they are.
+func (j *jsonWriter) write(before string, v any) {
+	j.text(before)
+	var b bytes.Buffer
+	enc := json.NewEncoder(&b)
+	enc.SetEscapeHTML(false)
+	if err := enc.Encode(v); err != nil && j.err == nil {
+		j.err = err
+	}
+	j.text(string(bytes.TrimRight(b.Bytes(), "\n")))
+}
+
+// list writes a JSON array with one entry a line.
+func list[T any](j *jsonWriter, head string, all []T, entry func(T) any) {
+	j.text(head)
+	for i, v := range all {
+		if i > 0 {
+			j.text(",")
+		}
+		j.write("\n  ", entry(v))
+	}
+	j.text("]")
+}
+
+func observerEntry(s study.Sight) any {
+	e := jsonObserver{Observer: s.Item.ID, jsonRegion: region(s)}
+	if s.Problem == "" {
+		e.TargetsSeen = append([]string{}, s.TargetsSeen...) // none is [], not null
+	}
+	return e
+}
+
+func targetEntry(s study.Sight) any { return jsonTarget{s.Item.ID, region(s)} }
+
+// region leaves the numbers out where there is a problem.
+func region(s study.Sight) jsonRegion {
+	e := jsonRegion{Name: s.Name, EyeMM: number(s.Eye), Problem: words(s.Problem)}
+	if s.Problem == "" {
+		e.AreaM2, e.PerimeterM = number(s.Area), number(s.Perimeter)
+		e.WallM, e.OccludingM, e.ClipM = number(s.Wall), number(s.Occluding), number(s.Clip)
+		e.Boundary = points(s.Boundary)
+	}
+	return e
+}
+
+func approachEntry(a study.Approach, eye float64) any {
+	e := &jsonApproach{Start: a.Start, Target: a.Target, EyeMM: number(eye), Problem: words(a.Problem),
+		Reason: words(a.Reason), Ties: a.Ties}
+	if a.Problem != "" {
+		return e
+	}
+	e.Status = words(nameOf(statusNames[:], a.Status))
+	if a.Status != study.StatusNone {
+		e.LengthMM, e.SightLineMM, e.Seconds = number(a.Length), number(a.SightLine), number(a.Seconds)
+		first := unsigned(a.FirstSight)
+		e.FirstSight, e.Points = &first, points(a.Points)
+	}
+	if a.HasFullWalk {
+		e.FullWalkMM, e.FullWalkPoints = number(a.FullWalk), points(a.FullPoints)
+	}
+	return e
+}
+
+func problemEntry(p plan.Problem) any {
+	e := jsonProblem{Kind: nameOf(problemNames[:], p.Kind), Items: []jsonItem{}, At: millimetres(p.At), Text: p.Text}
+	for _, item := range p.Items {
+		e.Items = append(e.Items, jsonItem{nameOf(kindNames[:], item.Kind), item.ID})
+	}
+	return e
+}
+
+func millimetres(p exact.Pt) orb.Point {
+	return orb.Point{float64(p.X) / exact.PerMM, float64(p.Y) / exact.PerMM}
+}
+
+// number returns nil for what JSON has no number for, and 0 for negative zero.
+func number(v float64) *float64 {
+	if math.IsNaN(v) || math.IsInf(v, 0) {
+		return nil
+	}
+	v += 0
+	return &v
+}
+
+// words returns nil for no words.
+func words(s string) *string {
+	if s == "" {
+		return nil
+	}
+	return &s
+}
+
+// points copies a list, with 0 for negative zero; an empty list stays a list.
+func points[L ~[]orb.Point](all L) L {
+	out := make(L, len(all))
+	for i, p := range all {
+		out[i] = unsigned(p)
+	}
+	return out
+}
+
+// unsigned turns the negative zeros of a point into zeros.
+func unsigned(p orb.Point) orb.Point { return orb.Point{p[0] + 0, p[1] + 0} }

@@ -1,0 +1,156 @@
+package report_test
+
+import (
+	"bytes"
+	"encoding/json"
+	"errors"
+	"flag"
+	"io"
+	"math"
+	"os"
+	"path/filepath"
+	"strings"
+	"testing"
+
+	"github.com/paulmach/orb"
+
+	"enfilade/fileio/report"
+	"enfilade/solver/exact"
+	"enfilade/solver/plan"
+	"enfilade/solver/study"
+)
+
+var update = flag.Bool("update", false, "write the golden files anew")
+
+// sample is a plan and a result with every kind of entry, its numbers chosen to show rounding, not to fit each other.
+func sample(unit string) (*plan.Plan, *study.Result) {
+	p := plan.From(plan.Parts{
+		Sheet:     plan.Sheet{Title: "Lamp room <north>", Place: "Quarry museum", Unit: unit},
+		Walker:    plan.DefaultWalker(),
+		Observers: []plan.Observer{{ID: "A", Name: "Keeper"}, {ID: "B", Name: "Über seat"}},
+		Targets:   []plan.Target{{ID: "T1", Name: "Lamp"}, {ID: "T2", Name: "Drill"}, {ID: "T3"}, {ID: "T4", Name: "Cage"}},
+		Starts:    []plan.Start{{ID: "S1", Name: "Shaft"}},
+	})
+	square := orb.Ring{{0, math.Copysign(0, -1)}, {1e4 / 3, 0}, {1e4 / 3, 1000}, {0, 1000}}
+	r := &study.Result{
+		WalkerEye: 1600,
+		Sight: []study.Sight{
+			{Item: plan.Ref{Kind: plan.KindObserver, ID: "A"}, Name: "Keeper", Eye: 1600, Area: 10.0 / 3, Perimeter: 26.0 / 3,
+				Wall: 20.0 / 3, Occluding: 2, Boundary: square, TargetsSeen: []string{"T1", "T3"}},
+			{Item: plan.Ref{Kind: plan.KindObserver, ID: "B"}, Name: "Über seat", Eye: 1200, Problem: "stands inside a body"},
+		},
+		SeenFrom: []study.Sight{{Item: plan.Ref{Kind: plan.KindTarget, ID: "T1"}, Name: "Lamp", Eye: 1600, Area: 104.2,
+			Perimeter: 50, Wall: 40.25, Occluding: 9.125, Clip: 0.625, Boundary: square}},
+		Approaches: []study.Approach{
+			{Start: "S1", Target: "T1", Status: study.StatusApproach, Length: 9862.0481, FirstSight: orb.Point{14223, 9531.25},
+				Points: []orb.Point{{23600, 8100}, {14223, 9531.25}}, SightLine: 13049, HasFullWalk: true, FullWalk: 21383,
+				FullPoints: []orb.Point{{23600, 8100}, {4900, 410}}, Seconds: 8.2184, Ties: true},
+			{Start: "S1", Target: "T2", Status: study.StatusSeen, FirstSight: orb.Point{23600, 8100},
+				Points: []orb.Point{{23600, 8100}}, SightLine: 23200, Reason: "it lies in the low block B2"},
+			{Start: "S1", Target: "T3", Status: study.StatusNone, Reason: "glazing G1 closes the way"},
+			{Start: "S1", Target: "T4", Problem: "the target lies outside the floor"},
+		},
+		Problems: []plan.Problem{{Kind: plan.ProblemInside, Items: []plan.Ref{{Kind: plan.KindObserver, ID: "B"},
+			{Kind: plan.KindWall, ID: "W3"}}, At: exact.Pt{X: 12345, Y: -20}, Text: "stands inside a body; move it onto the floor"}},
+	}
+	return p, r
+}
+
+// golden compares got with the file of that name, or writes the file with -update.
+func golden(t *testing.T, name, got string) {
+	t.Helper()
+	path := filepath.Join("testdata", name)
+	if *update {
+		if err := os.WriteFile(path, []byte(got), 0o644); err != nil {
+			t.Fatal(err)
+		}
+	}
+	want, err := os.ReadFile(path)
+	if err != nil {
+		t.Fatal(err)
+	}
+	if got != string(want) {
+		t.Errorf("%s differs; got:\n%s\nwant:\n%s", name, got, want)
+	}
+}
+
+func TestTextGolden(t *testing.T) {
+	for _, unit := range []string{"m", "ft"} {
+		var b bytes.Buffer
+		p, r := sample(unit)
+		if err := report.Text(&b, p, r); err != nil {
+			t.Fatal(err)
+		}
+		golden(t, "every-entry-"+unit+".txt", b.String())
+	}
+}
+
+func TestTextOfNothing(t *testing.T) {
+	var b bytes.Buffer
+	if err := report.Text(&b, plan.New(), &study.Result{WalkerEye: 1600}); err != nil {
+		t.Fatal(err)
+	}
+	want := "Untitled plan\n\nNo observers.\n\nNo targets.\n\nNo approaches: the plan needs a start and a target.\n\n" +
+		"No problems in the plan.\n\n" + report.Caution + "\n"
+	if b.String() != want {
+		t.Errorf("got %q, want %q", b.String(), want)
+	}
+}
+
+func TestJSONGolden(t *testing.T) {
+	var b bytes.Buffer
+	p, r := sample("m")
+	if err := report.JSON(&b, p, r); err != nil {
+		t.Fatal(err)
+	}
+	golden(t, "every-entry.json", b.String())
+}
+
+// Full precision: every number reads back as the float64 that it was.
+func TestJSONLaws(t *testing.T) {
+	p, r := sample("m")
+	values := []float64{math.Pi, 1.0 / 3, 5e-324, math.MaxFloat64, 1e21, 123456789.12345679}
+	for _, v := range values {
+		r.Sight[0].Area, r.Approaches[0].Length = v, v
+		var b bytes.Buffer
+		if err := report.JSON(&b, p, r); err != nil {
+			t.Fatal(err)
+		}
+		var got struct {
+			Sight []struct {
+				Area float64 `json:"area_m2"`
+			}
+			Approaches []struct {
+				Length float64 `json:"length_mm"`
+			}
+		}
+		if err := json.Unmarshal(b.Bytes(), &got); err != nil {
+			t.Fatal(err)
+		}
+		if got.Sight[0].Area != v || got.Approaches[0].Length != v {
+			t.Errorf("%v came back as %v and %v", v, got.Sight[0].Area, got.Approaches[0].Length)
+		}
+	}
+	for _, v := range []float64{math.NaN(), math.Inf(1), math.Inf(-1)} {
+		r.Sight[0].Area = v
+		var b bytes.Buffer
+		if err := report.JSON(&b, p, r); err != nil || !strings.Contains(b.String(), `"area_m2":null`) {
+			t.Errorf("%v: error %v, not null in %s", v, err, b.String())
+		}
+	}
+}
+
+type broken struct{}
+
+var errFull = errors.New("disk full")
+
+func (broken) Write([]byte) (int, error) { return 0, errFull }
+
+func TestWriteErrors(t *testing.T) {
+	p, r := sample("m")
+	for name, write := range map[string]func(io.Writer, *plan.Plan, *study.Result) error{"Text": report.Text, "JSON": report.JSON} {
+		if err := write(broken{}, p, r); !errors.Is(err, errFull) {
+			t.Errorf("%s: got error %v, want %v", name, err, errFull)
+		}
+	}
+}
