@@ -1,0 +1,137 @@
+package arrange
+
+import (
+	"context"
+
+	"enfilade/solver/mesh"
+	"enfilade/solver/plan"
+)
+
+// Build triangulates the graph and finds out which triangles are solid.
+//
+//   - Errors: the context's when it is cancelled; mesh.ErrCrossing if g is not planar, which Round never yields.
+//   - Cost: O(n log n) expected; the solid triangles are found in one pass over the mesh.
+func Build(ctx context.Context, g *Graph) (*mesh.Mesh, error) {
+	ends := make([][2]int32, len(g.Edges))
+	tags := make([]mesh.Tag, len(g.Edges))
+	for i, e := range g.Edges {
+		ends[i] = [2]int32{e.A, e.B}
+		tags[i] = mesh.Tag{Top: e.Top, Walk: e.Walk}
+	}
+	tr, err := mesh.Triangulate(ctx, g.Pts, ends)
+	if err != nil {
+		return nil, err
+	}
+	return tr.Finish(tags, g.solids(tr)), nil
+}
+
+// solids returns what each triangle stops: it walks over the whole mesh from the box inwards, keeping the winding number
+// of the place about every body, and takes each step back when it has seen what lies behind it.
+func (g *Graph) solids(tr *mesh.Triangulation) []mesh.Tag {
+	solid := make([]mesh.Tag, tr.Len())
+	seen := make([]bool, tr.Len())
+	w := winding{count: make([]int32, len(g.Bodies)), bodies: g.Bodies}
+	type step struct {
+		tri  int32
+		edge int32 // constraint crossed to get here, or -1
+		sign int32 // +1 when it was crossed from its right to its left
+		back bool
+	}
+	stack := []step{{tri: g.outside(tr), edge: -1}}
+	for len(stack) > 0 {
+		s := stack[len(stack)-1]
+		stack = stack[:len(stack)-1]
+		if s.back {
+			w.cross(g, s.edge, -s.sign)
+			continue
+		}
+		if seen[s.tri] {
+			continue
+		}
+		seen[s.tri] = true
+		if s.edge >= 0 {
+			w.cross(g, s.edge, s.sign)
+			stack = append(stack, step{edge: s.edge, sign: s.sign, back: true})
+		}
+		solid[s.tri] = w.stops()
+		v := tr.Corners(s.tri)
+		for i := range 3 {
+			next, edge := tr.Neighbour(s.tri, i)
+			if next < 0 || seen[next] {
+				continue
+			}
+			sign := int32(0)
+			if edge >= 0 {
+				// The triangle lies to the left of its half-edge, so leaving through it goes from left to right.
+				if sign = 1; v[i] == g.Edges[edge].A {
+					sign = -1
+				}
+			}
+			stack = append(stack, step{tri: next, edge: edge, sign: sign})
+		}
+	}
+	return solid
+}
+
+// outside returns a triangle at a corner of the box, which lies outside every body.
+func (g *Graph) outside(tr *mesh.Triangulation) int32 {
+	corner := int32(len(g.Pts))
+	for t := range int32(tr.Len()) {
+		v := tr.Corners(t)
+		if v[0] == corner || v[1] == corner || v[2] == corner {
+			return t
+		}
+	}
+	panic("arrange: the box has no triangle")
+}
+
+// winding is the winding number of a place about every body.
+type winding struct {
+	bodies []Body
+	count  []int32
+	inside []int32 // the bodies other than the floor about which it is not zero
+}
+
+// cross takes the place across a graph edge, from its right to its left when sign is +1.
+func (w *winding) cross(g *Graph, edge, sign int32) {
+	if edge < 0 {
+		return
+	}
+	e := &g.Edges[edge]
+	for _, x := range g.Winds[e.Wind0:e.Wind1] {
+		was := w.count[x.Body]
+		w.count[x.Body] += sign * x.Delta
+		if x.Body == 0 {
+			continue
+		}
+		switch {
+		case was == 0:
+			w.inside = append(w.inside, x.Body)
+		case w.count[x.Body] == 0:
+			w.drop(x.Body)
+		}
+	}
+}
+
+func (w *winding) drop(body int32) {
+	for i, b := range w.inside {
+		if b == body {
+			w.inside[i] = w.inside[len(w.inside)-1]
+			w.inside = w.inside[:len(w.inside)-1]
+			return
+		}
+	}
+}
+
+// stops returns what the bodies around the place stop together; off the floor nothing passes.
+func (w *winding) stops() mesh.Tag {
+	if w.count[0] == 0 {
+		return mesh.Tag{Top: plan.Ceiling, Walk: true}
+	}
+	var t mesh.Tag
+	for _, b := range w.inside {
+		t.Top = max(t.Top, w.bodies[b].Top)
+		t.Walk = t.Walk || w.bodies[b].Walk
+	}
+	return t
+}

@@ -1,0 +1,185 @@
+package mesh
+
+import (
+	"context"
+	"fmt"
+
+	"enfilade/solver/exact"
+)
+
+// constrainAll forces every edge into the triangulation and restores the Delaunay property around it.
+func (tr *Triangulation) constrainAll(ctx context.Context, edges [][2]int32) error {
+	tr.out = make([]Edge, len(tr.Pts))
+	for t := range tr.tris {
+		for i, v := range tr.tris[t].v {
+			tr.out[v] = EdgeOf(int32(t), i)
+		}
+	}
+	for k, e := range edges {
+		if k&1023 == 0 && ctx.Err() != nil {
+			return ctx.Err()
+		}
+		if err := tr.constrain(e[0], e[1], int32(k)); err != nil {
+			return err
+		}
+	}
+	return nil
+}
+
+// constrain forces the edge from a to b in as constraint k.
+func (tr *Triangulation) constrain(a, b, k int32) error {
+	e, crossed, err := tr.towards(a, b)
+	if err != nil {
+		return err
+	}
+	if crossed {
+		if err := tr.flipThrough(a, b, e); err != nil {
+			return err
+		}
+		e = tr.find(a, b)
+	}
+	f := tr.tris[e.Tri()].n[e.Corner()]
+	if tr.tris[e.Tri()].c[e.Corner()] >= 0 {
+		return fmt.Errorf("%w: edge %v to %v twice", ErrCrossing, tr.Pts[a], tr.Pts[b])
+	}
+	tr.tris[e.Tri()].c[e.Corner()] = k
+	tr.tris[f.Tri()].c[f.Corner()] = k
+	if crossed {
+		tr.restore()
+	}
+	return nil
+}
+
+// towards looks around a for b: the half-edge from a to b, or else the half-edge opposite a that the segment crosses first.
+func (tr *Triangulation) towards(a, b int32) (e Edge, crossed bool, err error) {
+	pa, pb := tr.Pts[a], tr.Pts[b]
+	start := tr.out[a]
+	e = start
+	for {
+		r := &tr.tris[e.Tri()]
+		i := e.Corner()
+		v, w := r.v[inc[i]], r.v[inc[inc[i]]]
+		if v == b {
+			return e, false, nil
+		}
+		sv := exact.Area2(pa, pb, tr.Pts[v])
+		if sv == 0 && tr.Pts[v].Sub(pa).Dot(pb.Sub(pa)) > 0 {
+			return None, false, fmt.Errorf("%w: %v lies on the edge from %v to %v", ErrCrossing, tr.Pts[v], pa, pb)
+		}
+		if sv < 0 && exact.Area2(pa, pb, tr.Pts[w]) > 0 {
+			return e.Next(), true, nil
+		}
+		e = r.n[inc[inc[i]]] // the twin of the edge that ends at a leaves a: counter-clockwise onwards
+		if e == start || e == None {
+			return None, false, fmt.Errorf("mesh: no triangle at %v towards %v", pa, pb)
+		}
+	}
+}
+
+// find returns the half-edge from a to b, which must be there. Corners of the box are open to one side, so they are looked
+// for from the other end; no edge between two of them is ever asked for.
+func (tr *Triangulation) find(a, b int32) Edge {
+	if int(a) >= len(tr.Pts)-4 {
+		e := tr.find(b, a)
+		return tr.tris[e.Tri()].n[e.Corner()]
+	}
+	e := tr.out[a]
+	for {
+		r := &tr.tris[e.Tri()]
+		if r.v[inc[e.Corner()]] == b {
+			return e
+		}
+		e = r.n[e.Prev().Corner()]
+	}
+}
+
+// flipThrough flips every edge that crosses the segment from a to b, the first of which is e, until the segment is an edge.
+// Edges are remembered by their ends, since flips move half-edges about. The new edges are left in tr.work.
+func (tr *Triangulation) flipThrough(a, b int32, e Edge) error {
+	pa, pb := tr.Pts[a], tr.Pts[b]
+	var queue [][2]int32
+	for {
+		r := &tr.tris[e.Tri()]
+		i := e.Corner()
+		if r.c[i] >= 0 {
+			return fmt.Errorf("%w: near %v", ErrCrossing, tr.Pts[r.v[i]])
+		}
+		queue = append(queue, [2]int32{r.v[i], r.v[inc[i]]})
+		f := r.n[i]
+		apex := tr.tris[f.Tri()].v[f.Prev().Corner()]
+		if apex == b {
+			break
+		}
+		switch s := exact.Area2(pa, pb, tr.Pts[apex]); {
+		case s > 0:
+			e = f.Next()
+		case s < 0:
+			e = f.Prev()
+		default:
+			return fmt.Errorf("%w: %v lies on the edge from %v to %v", ErrCrossing, tr.Pts[apex], pa, pb)
+		}
+	}
+	tr.work = tr.work[:0]
+	for len(queue) > 0 {
+		q := queue[0]
+		queue = queue[1:]
+		d := tr.find(q[0], q[1])
+		if !tr.convex(d) {
+			queue = append(queue, q)
+			continue
+		}
+		t, u := tr.flipTracked(d)
+		c, x := tr.tris[t].v[0], tr.tris[u].v[0] // the new diagonal
+		if (c != a && c != b && x != a && x != b) &&
+			exact.Orient(pa, pb, tr.Pts[c])*exact.Orient(pa, pb, tr.Pts[x]) < 0 {
+			queue = append(queue, [2]int32{c, x})
+		} else {
+			tr.work = append(tr.work, [2]int32{c, x})
+		}
+	}
+	return nil
+}
+
+// convex reports whether the two triangles at e form a strictly convex quadrilateral.
+func (tr *Triangulation) convex(e Edge) bool {
+	r := &tr.tris[e.Tri()]
+	i := e.Corner()
+	f := r.n[i]
+	a, b, c := tr.Pts[r.v[i]], tr.Pts[r.v[inc[i]]], tr.Pts[r.v[inc[inc[i]]]]
+	d := tr.Pts[tr.tris[f.Tri()].v[f.Prev().Corner()]]
+	return exact.Area2(c, a, d) > 0 && exact.Area2(d, b, c) > 0
+}
+
+// flipTracked flips e and keeps the half-edges that leave its four corners known.
+func (tr *Triangulation) flipTracked(e Edge) (t, u int32) {
+	t, u = tr.flip(e)
+	for i, v := range tr.tris[t].v {
+		tr.out[v] = EdgeOf(t, i)
+	}
+	b := tr.tris[u].v[1]
+	tr.out[b] = EdgeOf(u, 1)
+	return t, u
+}
+
+// restore makes the edges of tr.work Delaunay where no constraint holds them.
+func (tr *Triangulation) restore() {
+	for changed := true; changed; {
+		changed = false
+		for k, w := range tr.work {
+			e := tr.find(w[0], w[1])
+			r := &tr.tris[e.Tri()]
+			i := e.Corner()
+			if r.c[i] >= 0 || r.n[i] == None {
+				continue
+			}
+			f := r.n[i]
+			d := tr.tris[f.Tri()].v[f.Prev().Corner()]
+			if exact.InCircle(tr.Pts[r.v[0]], tr.Pts[r.v[1]], tr.Pts[r.v[2]], tr.Pts[d]) <= 0 {
+				continue
+			}
+			t, u := tr.flipTracked(e)
+			tr.work[k] = [2]int32{tr.tris[t].v[0], tr.tris[u].v[0]}
+			changed = true
+		}
+	}
+}

@@ -1,0 +1,118 @@
+package mesh
+
+import "enfilade/solver/exact"
+
+// grid is a uniform grid over the mesh; each cell names a triangle near its middle, so that a walk from there is short
+// whatever the size of the plan.
+type grid struct {
+	lo     exact.Pt
+	shiftX uint
+	nx, ny int32
+	near   []int32
+}
+
+// makeGrid lays a grid of about half as many square cells as there are triangles. O(n) expected: the walk from one cell's
+// middle to the next is short.
+func makeGrid(m *Mesh) grid {
+	n := len(m.Pts)
+	lo, hi := m.Pts[n-4], m.Pts[n-2]
+	w, h := int64(hi.X)-int64(lo.X), int64(hi.Y)-int64(lo.Y)
+	g := grid{lo: lo}
+	for (w>>g.shiftX+1)*(h>>g.shiftX+1) > int64(len(m.Tris)/2+1) {
+		g.shiftX++
+	}
+	g.nx, g.ny = int32(w>>g.shiftX)+1, int32(h>>g.shiftX)+1
+	g.near = make([]int32, g.nx*g.ny)
+	half := int32(1) << g.shiftX >> 1
+	t := int32(0)
+	for y := range g.ny {
+		for k := range g.nx {
+			x := k
+			if y&1 == 1 {
+				x = g.nx - 1 - k
+			}
+			p := exact.Pt{X: min(lo.X+x<<g.shiftX+half, hi.X), Y: min(lo.Y+y<<g.shiftX+half, hi.Y)}
+			t, _, _ = m.walkTo(t, p)
+			g.near[y*g.nx+x] = t
+		}
+	}
+	return g
+}
+
+// Place is where a point lies in the mesh.
+type Place struct {
+	Tri    int32 // a triangle that holds it
+	Edge   Edge  // the half-edge of Tri that it lies on, strictly between its ends; None otherwise
+	Corner int   // the corner of Tri that it is; -1 otherwise
+}
+
+// Locate finds p, and reports false when p lies outside the mesh's rectangle. Expected time is constant for meshes whose
+// triangles are spread evenly.
+func (m *Mesh) Locate(p exact.Pt) (Place, bool) {
+	g := &m.grid
+	n := len(m.Pts)
+	if !exact.InBox(m.Pts[n-4], m.Pts[n-2], p) {
+		return Place{}, false
+	}
+	x, y := (p.X-g.lo.X)>>g.shiftX, (p.Y-g.lo.Y)>>g.shiftX
+	t, zero, zeros := m.walkTo(g.near[y*g.nx+x], p)
+	place := Place{Tri: t, Edge: None, Corner: -1}
+	switch {
+	case zeros == 2:
+		for i, q := range m.Tris[t].P {
+			if q == p {
+				place.Corner = i
+			}
+		}
+	case zeros == 1:
+		place.Edge = EdgeOf(t, zero)
+	}
+	return place, true
+}
+
+// walkTo walks from triangle t to one that holds p, which must lie in the mesh's rectangle: see Triangulation.walk. It
+// returns the triangle, the last of its edges with p on their line, and how many such edges there are.
+func (m *Mesh) walkTo(t int32, p exact.Pt) (tri int32, zero, zeros int) {
+	came := int32(-1)
+	for turn := uint32(1); ; turn = turn*1664525 + 1013904223 {
+		r := &m.Tris[t]
+		first := int(turn>>16) % 3
+		next := None
+		zero, zeros = -1, 0
+		for k := range 3 {
+			i := first + k
+			if i > 2 {
+				i -= 3
+			}
+			n := r.N[i]
+			if came >= 0 && n != None && n.Tri() == came {
+				continue
+			}
+			s := exact.Area2(r.P[i], r.P[inc[i]], p)
+			if s < 0 {
+				next = n
+				break
+			}
+			if s == 0 {
+				zero = i
+				zeros++
+			}
+		}
+		if next == None {
+			return t, zero, zeros
+		}
+		came, t = t, next.Tri()
+	}
+}
+
+// Around calls f for each corner at the point of place p, counter-clockwise, with the half-edge that leaves the point
+// there, and starts over a whole turn. The point must be a corner of the mesh strictly inside its rectangle.
+func (m *Mesh) Around(start Edge, f func(Edge)) {
+	for e := start; ; {
+		f(e)
+		e = m.Twin(e.Prev())
+		if e == start || e == None {
+			return
+		}
+	}
+}

@@ -1,0 +1,98 @@
+package mesh
+
+import (
+	"slices"
+
+	"enfilade/solver/exact"
+)
+
+// insertionOrder returns the indices of pts in the order in which they are to be inserted: rounds of doubling size chosen
+// by a hash of the coordinates, so that the expected number of flips stays constant, and each round along a Hilbert curve,
+// so that the walk to the next point is short. It depends on the points alone. O(n log n).
+func insertionOrder(pts []exact.Pt) []int32 {
+	lo, shift := curveFrame(pts)
+	keys := make([]uint64, len(pts))
+	for i, p := range pts {
+		round := uint64(trailingRound(hash(p)))
+		keys[i] = (^round&7)<<61 | uint64(hilbert(uint32(p.X-lo.X)>>shift, uint32(p.Y-lo.Y)>>shift))<<29 | uint64(i)
+	}
+	slices.Sort(keys)
+	order := make([]int32, len(pts))
+	for i, k := range keys {
+		order[i] = int32(k & (1<<29 - 1))
+	}
+	return order
+}
+
+// curveFrame returns the lower left corner of pts and the shift that brings their extent to 16 bits.
+func curveFrame(pts []exact.Pt) (lo exact.Pt, shift uint) {
+	if len(pts) == 0 {
+		return lo, 0
+	}
+	lo, hi := pts[0], pts[0]
+	for _, p := range pts {
+		lo.X, lo.Y = min(lo.X, p.X), min(lo.Y, p.Y)
+		hi.X, hi.Y = max(hi.X, p.X), max(hi.Y, p.Y)
+	}
+	for uint32(max(hi.X-lo.X, hi.Y-lo.Y))>>shift >= 1<<16 {
+		shift++
+	}
+	return lo, shift
+}
+
+// trailingRound counts the trailing zero bits of h, at most 7: half of all points are of round 0, a quarter of round 1.
+func trailingRound(h uint32) int {
+	r := 0
+	for h&1 == 0 && r < 7 {
+		h >>= 1
+		r++
+	}
+	return r
+}
+
+// hash mixes the coordinates of p (constants of the finaliser of MurmurHash3, Appleby, public domain).
+func hash(p exact.Pt) uint32 {
+	h := uint32(p.X)*0x9e3779b1 ^ uint32(p.Y)*0x85ebca6b
+	h ^= h >> 16
+	h *= 0x85ebca6b
+	h ^= h >> 13
+	h *= 0xc2b2ae35
+	return h ^ h>>16
+}
+
+// hilbert returns the position of the cell x, y of a 2^16 square along the Hilbert curve of that order.
+func hilbert(x, y uint32) uint32 {
+	var d uint32
+	for s := uint32(1) << 15; s > 0; s >>= 1 {
+		var rx, ry uint32
+		if x&s != 0 {
+			rx = 1
+		}
+		if y&s != 0 {
+			ry = 1
+		}
+		d += s * s * (3*rx ^ ry)
+		if ry == 0 {
+			if rx == 1 {
+				x, y = 1<<16-1-x, 1<<16-1-y
+			}
+			x, y = y, x
+		}
+	}
+	return d
+}
+
+// curveRank returns the position of each point along a Hilbert curve through all of them.
+func curveRank(pts []exact.Pt) []int32 {
+	lo, shift := curveFrame(pts)
+	keys := make([]uint64, len(pts))
+	for i, p := range pts {
+		keys[i] = uint64(hilbert(uint32(p.X-lo.X)>>shift, uint32(p.Y-lo.Y)>>shift))<<32 | uint64(i)
+	}
+	slices.Sort(keys)
+	rank := make([]int32, len(pts))
+	for r, k := range keys {
+		rank[uint32(k)] = int32(r)
+	}
+	return rank
+}

@@ -1,0 +1,260 @@
+package mesh
+
+import (
+	"context"
+	"errors"
+	"fmt"
+
+	"enfilade/solver/exact"
+)
+
+// Edge is a half-edge: triangle index times four plus the corner it starts at. It runs from that corner to the next one,
+// counter-clockwise, with its triangle to the left. None is no edge.
+type Edge int32
+
+// None marks a missing neighbour.
+const None Edge = -1
+
+// Tri returns the triangle to the left of e.
+func (e Edge) Tri() int32 { return int32(e) >> 2 }
+
+// Corner returns which corner of its triangle e starts at: 0, 1 or 2.
+func (e Edge) Corner() int { return int(e) & 3 }
+
+// Next returns the half-edge that follows e around its triangle.
+func (e Edge) Next() Edge {
+	if e&3 == 2 {
+		return e - 2
+	}
+	return e + 1
+}
+
+// Prev returns the half-edge before e around its triangle.
+func (e Edge) Prev() Edge {
+	if e&3 == 0 {
+		return e + 2
+	}
+	return e - 1
+}
+
+// EdgeOf returns half-edge corner of triangle t.
+func EdgeOf(t int32, corner int) Edge { return Edge(t<<2 | int32(corner)) }
+
+// ErrCrossing reports input edges that do not meet only at shared ends.
+var ErrCrossing = errors.New("mesh: edges cross or pass through a point")
+
+// Triangulation is a constrained Delaunay triangulation under construction.
+type Triangulation struct {
+	Pts  []exact.Pt // the given points, then the four corners of the box around them
+	tris []rawTri
+	rank []int32 // position of each point in the order of insertion
+	out  []Edge  // some half-edge leaving each point
+	todo []Edge  // stack of edges to examine
+	work []([2]int32)
+}
+
+// rawTri is a triangle: its corners, the twins of its three half-edges, and the constraint on each, or -1.
+type rawTri struct {
+	v [3]int32
+	n [3]Edge
+	c [3]int32
+}
+
+// margin is how far the box reaches beyond the points, in grid units; any positive number will do.
+const margin = 10000
+
+// Triangulate returns the constrained Delaunay triangulation of pts and of the edges between them, given by index.
+//
+//   - Input: distinct points; edges that meet only at shared ends, each once.
+//   - Errors: ErrCrossing when they do not; the context's error when it is cancelled.
+//   - Cost: O(n log n) expected for the points; an edge costs time proportional to what it crosses.
+func Triangulate(ctx context.Context, pts []exact.Pt, edges [][2]int32) (*Triangulation, error) {
+	tr := &Triangulation{Pts: boxed(pts)}
+	if err := tr.insertAll(ctx, len(pts)); err != nil {
+		return nil, err
+	}
+	if err := tr.constrainAll(ctx, edges); err != nil {
+		return nil, err
+	}
+	return tr, nil
+}
+
+// boxed returns pts followed by the corners of a box that holds them strictly inside.
+func boxed(pts []exact.Pt) []exact.Pt {
+	lo, hi := exact.Pt{}, exact.Pt{}
+	if len(pts) > 0 {
+		lo, hi = pts[0], pts[0]
+	}
+	for _, p := range pts {
+		lo.X, lo.Y = min(lo.X, p.X), min(lo.Y, p.Y)
+		hi.X, hi.Y = max(hi.X, p.X), max(hi.Y, p.Y)
+	}
+	const most = exact.Limit - 1
+	lo = exact.Pt{X: max(lo.X-margin, -most), Y: max(lo.Y-margin, -most)}
+	hi = exact.Pt{X: min(hi.X+margin, most), Y: min(hi.Y+margin, most)}
+	all := make([]exact.Pt, len(pts), len(pts)+4)
+	copy(all, pts)
+	return append(all, lo, exact.Pt{X: hi.X, Y: lo.Y}, hi, exact.Pt{X: lo.X, Y: hi.Y})
+}
+
+// insertAll starts from the box and inserts the first n points.
+func (tr *Triangulation) insertAll(ctx context.Context, n int) error {
+	a, b, c, d := int32(n), int32(n+1), int32(n+2), int32(n+3)
+	tr.tris = make([]rawTri, 0, 2*n+2)
+	free := [3]int32{-1, -1, -1}
+	tr.tris = append(tr.tris,
+		rawTri{[3]int32{a, b, c}, [3]Edge{None, None, EdgeOf(1, 0)}, free},
+		rawTri{[3]int32{a, c, d}, [3]Edge{EdgeOf(0, 2), None, None}, free})
+	tr.rank = make([]int32, n+4)
+	last := int32(0)
+	for i, p := range insertionOrder(tr.Pts[:n]) {
+		if i&1023 == 0 && ctx.Err() != nil {
+			return ctx.Err()
+		}
+		tr.rank[p] = int32(i)
+		t, on, ok := tr.walk(last, tr.Pts[p])
+		if !ok {
+			return fmt.Errorf("mesh: point %v twice or outside the box", tr.Pts[p])
+		}
+		if on < 0 {
+			tr.splitTri(t, p)
+		} else {
+			tr.splitEdge(EdgeOf(t, on), p)
+		}
+		tr.legalise(p)
+		last = int32(len(tr.tris) - 1)
+	}
+	for k := range 4 {
+		tr.rank[n+k] = int32(n + k)
+	}
+	return nil
+}
+
+// walk finds the triangle that holds p, starting at t: its index, the corner whose half-edge holds p or -1, and false when
+// p is a corner of it. The order in which the sides are tried changes from step to step, so the walk cannot go round in
+// circles for ever (Devillers, Pion and Teillaud, "Walking in a triangulation", SoCG 2001).
+func (tr *Triangulation) walk(t int32, p exact.Pt) (tri int32, on int, ok bool) {
+	came := int32(-1)
+	for turn := uint32(1); ; turn = turn*1664525 + 1013904223 {
+		r := &tr.tris[t]
+		first := int(turn>>16) % 3
+		next := None
+		zero, zeros := -1, 0
+		for k := range 3 {
+			i := first + k
+			if i > 2 {
+				i -= 3
+			}
+			n := r.n[i]
+			if came >= 0 && n != None && n.Tri() == came {
+				continue // p lies on this side of the edge just crossed
+			}
+			s := exact.Area2(tr.Pts[r.v[i]], tr.Pts[r.v[inc[i]]], p)
+			if s < 0 {
+				if n == None {
+					return t, -1, false
+				}
+				next = n
+				break
+			}
+			if s == 0 {
+				zero = i
+				zeros++
+			}
+		}
+		if next == None {
+			return t, zero, zeros < 2
+		}
+		came, t = t, next.Tri()
+	}
+}
+
+// inc is the next corner counter-clockwise.
+var inc = [3]int{1, 2, 0}
+
+func (tr *Triangulation) link(e, f Edge) {
+	if e != None {
+		tr.tris[e.Tri()].n[e.Corner()] = f
+	}
+	if f != None {
+		tr.tris[f.Tri()].n[f.Corner()] = e
+	}
+}
+
+// splitTri puts p strictly inside t and leaves the three edges around it to examine.
+func (tr *Triangulation) splitTri(t, p int32) {
+	r := tr.tris[t]
+	u, w := int32(len(tr.tris)), int32(len(tr.tris)+1)
+	free := [3]int32{-1, -1, -1}
+	tr.tris[t] = rawTri{[3]int32{r.v[0], r.v[1], p}, [3]Edge{r.n[0], EdgeOf(u, 2), EdgeOf(w, 1)}, free}
+	tr.tris = append(tr.tris,
+		rawTri{[3]int32{r.v[1], r.v[2], p}, [3]Edge{r.n[1], EdgeOf(w, 2), EdgeOf(t, 1)}, free},
+		rawTri{[3]int32{r.v[2], r.v[0], p}, [3]Edge{r.n[2], EdgeOf(t, 2), EdgeOf(u, 1)}, free})
+	tr.link(r.n[1], EdgeOf(u, 0))
+	tr.link(r.n[2], EdgeOf(w, 0))
+	tr.todo = append(tr.todo, EdgeOf(t, 0), EdgeOf(u, 0), EdgeOf(w, 0))
+}
+
+// splitEdge puts p on e, inside the box, and leaves the four edges around it to examine.
+func (tr *Triangulation) splitEdge(e Edge, p int32) {
+	f := tr.tris[e.Tri()].n[e.Corner()]
+	t, u := e.Tri(), f.Tri()
+	i, j := e.Corner(), f.Corner()
+	rt, ru := tr.tris[t], tr.tris[u]
+	a, b, c, d := rt.v[i], rt.v[inc[i]], rt.v[inc[inc[i]]], ru.v[inc[inc[j]]]
+	bc, ca := rt.n[inc[i]], rt.n[inc[inc[i]]]
+	ad, db := ru.n[inc[j]], ru.n[inc[inc[j]]]
+	w, x := int32(len(tr.tris)), int32(len(tr.tris)+1)
+	free := [3]int32{-1, -1, -1}
+	// Around p: c a | a d | d b | b c.
+	tr.tris[t] = rawTri{[3]int32{c, a, p}, [3]Edge{ca, EdgeOf(u, 2), EdgeOf(x, 1)}, free}
+	tr.tris[u] = rawTri{[3]int32{a, d, p}, [3]Edge{ad, EdgeOf(w, 2), EdgeOf(t, 1)}, free}
+	tr.tris = append(tr.tris,
+		rawTri{[3]int32{d, b, p}, [3]Edge{db, EdgeOf(x, 2), EdgeOf(u, 1)}, free},
+		rawTri{[3]int32{b, c, p}, [3]Edge{bc, EdgeOf(t, 2), EdgeOf(w, 1)}, free})
+	tr.link(ca, EdgeOf(t, 0))
+	tr.link(ad, EdgeOf(u, 0))
+	tr.link(db, EdgeOf(w, 0))
+	tr.link(bc, EdgeOf(x, 0))
+	tr.todo = append(tr.todo, EdgeOf(t, 0), EdgeOf(u, 0), EdgeOf(w, 0), EdgeOf(x, 0))
+}
+
+// legalise flips the edges on the stack, each opposite the new point p, until all are Delaunay.
+func (tr *Triangulation) legalise(p int32) {
+	pt := tr.Pts[p]
+	for len(tr.todo) > 0 {
+		e := tr.todo[len(tr.todo)-1]
+		tr.todo = tr.todo[:len(tr.todo)-1]
+		f := tr.tris[e.Tri()].n[e.Corner()]
+		if f == None {
+			continue
+		}
+		r := &tr.tris[f.Tri()]
+		if exact.InCircle(tr.Pts[r.v[0]], tr.Pts[r.v[1]], tr.Pts[r.v[2]], pt) <= 0 {
+			continue
+		}
+		t, u := tr.flip(e)
+		tr.todo = append(tr.todo, EdgeOf(t, 1), EdgeOf(u, 0))
+	}
+}
+
+// flip replaces the diagonal e of its two triangles by the other one. With e from a to b and apexes c (left) and d
+// (right), the triangles become (c, a, d) and (d, b, c), in that order of corners; constraints move with their edges.
+func (tr *Triangulation) flip(e Edge) (t, u int32) {
+	i := e.Corner()
+	t = e.Tri()
+	rt := tr.tris[t]
+	f := rt.n[i]
+	j := f.Corner()
+	u = f.Tri()
+	ru := tr.tris[u]
+	i1, i2, j1, j2 := inc[i], inc[inc[i]], inc[j], inc[inc[j]]
+	a, b, c, d := rt.v[i], rt.v[i1], rt.v[i2], ru.v[j2]
+	tr.tris[t] = rawTri{[3]int32{c, a, d}, [3]Edge{rt.n[i2], ru.n[j1], EdgeOf(u, 2)}, [3]int32{rt.c[i2], ru.c[j1], -1}}
+	tr.tris[u] = rawTri{[3]int32{d, b, c}, [3]Edge{ru.n[j2], rt.n[i1], EdgeOf(t, 2)}, [3]int32{ru.c[j2], rt.c[i1], -1}}
+	tr.link(rt.n[i2], EdgeOf(t, 0))
+	tr.link(ru.n[j1], EdgeOf(t, 1))
+	tr.link(ru.n[j2], EdgeOf(u, 0))
+	tr.link(rt.n[i1], EdgeOf(u, 1))
+	return t, u
+}

@@ -1,0 +1,75 @@
+package mesh
+
+import "enfilade/solver/exact"
+
+// Sector is the floor around a point between two edges there that stop walking. Someone who walks past the point turns
+// within one sector; a point where several walls meet has several, and they are different places.
+type Sector struct {
+	At     exact.Pt
+	First  Edge      // half-edge that leaves the point along the sector's clockwise border, the sector to its left
+	Lo, Hi exact.Vec // directions of the borders, the sector running counter-clockwise from Lo to Hi
+	LoV    int32     // the points at the far ends of the borders
+	HiV    int32
+}
+
+// turning holds the sectors in which a shortest walk may turn: those wider than half a turn.
+type turning struct {
+	sectors []Sector
+	at      []int32 // for each half-edge the sector that its starting corner belongs to, or -1
+}
+
+// SectorAt returns the turning sector that the starting corner of e belongs to, or -1 where no shortest walk turns.
+func (m *Mesh) SectorAt(e Edge) int32 { return m.turn.at[e] }
+
+// Sector returns turning sector s.
+func (m *Mesh) Sector(s int32) *Sector { return &m.turn.sectors[s] }
+
+// NumSectors returns the number of turning sectors.
+func (m *Mesh) NumSectors() int { return len(m.turn.sectors) }
+
+// makeTurning finds the turning sectors by going around every point from each edge that stops walking. O(n).
+func makeTurning(m *Mesh) turning {
+	turn := turning{at: make([]int32, 4*len(m.Tris))}
+	for i := range turn.at {
+		turn.at[i] = -1
+	}
+	for t := range m.Tris {
+		tri := &m.Tris[t]
+		if tri.Flags&FlagNoWalk != 0 || tri.Flags&flagBoundary == 0 {
+			continue
+		}
+		for i := range 3 {
+			if tri.StopsWalk(i) {
+				turn.add(m, EdgeOf(int32(t), i))
+			}
+		}
+	}
+	return turn
+}
+
+// add records the sector that begins at first, an edge that stops walking with walkable floor to its left, when it is
+// wider than half a turn.
+func (turn *turning) add(m *Mesh, first Edge) {
+	a, b := m.Ends(first)
+	s := Sector{At: a, First: first, Lo: b.Sub(a), LoV: m.Tris[first.Tri()].V[inc[first.Corner()]]}
+	last := first
+	for !m.Tris[last.Tri()].StopsWalk(last.Prev().Corner()) {
+		last = m.Twin(last.Prev())
+	}
+	c := last.Prev().Corner()
+	s.Hi, s.HiV = m.Tris[last.Tri()].P[c].Sub(a), m.Tris[last.Tri()].V[c]
+	// Wider than half a turn: Hi lies strictly to the right of Lo, or both are one edge seen from its two sides. One corner
+	// alone (first == last) is never that wide.
+	cross := s.Lo.Cross(s.Hi)
+	if first == last || cross > 0 || cross == 0 && s.LoV != s.HiV {
+		return
+	}
+	id := int32(len(turn.sectors))
+	turn.sectors = append(turn.sectors, s)
+	for e := first; ; e = m.Twin(e.Prev()) {
+		turn.at[e] = id
+		if e == last {
+			return
+		}
+	}
+}
