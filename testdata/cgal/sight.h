@@ -1,0 +1,55 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+// Sight regions with exact numbers.
+#pragma once
+
+#include <map>
+#include <memory>
+#include <vector>
+
+#include "expansion.h"
+#include "field.h"
+
+// One border piece of a region, from one corner to the next.
+struct Border {
+  ExactPoint from, to;
+  bool radial; // it points away from the eye
+};
+
+// What is seen into one free sector around the eye: one sector for an eye on open floor, one on each free side of an edge
+// or between two neighbouring edges of a corner. The sectors overlap nowhere.
+struct Sector {
+  std::vector<ExactPoint> corners; // counter-clockwise, out-and-back spikes taken out
+  std::vector<Border> border;
+};
+
+struct Measure {
+  double area = 0, perimeter = 0, wall = 0, occluding = 0;
+};
+
+class Sight {
+public:
+  explicit Sight(const Field &field);
+
+  // Throws std::runtime_error when the eye is in a body that stops sight or off the floor.
+  std::vector<Sector> region(const Point &eye);
+
+  Measure measure(const Point &eye, const std::vector<Sector> &region) const;
+
+  // Whether p lies in the closed region.
+  bool holds(const Point &eye, const std::vector<Sector> &region, const Point &p) const;
+
+private:
+  typedef Expansion<Exact>::Halfedge Halfedge;
+
+  const Field &field;
+  Expansion<Exact> whole;
+  std::map<int, std::unique_ptr<Expansion<Exact>>> without; // by the edge left out
+  std::map<std::pair<double, double>, int> index;           // of a graph point
+  std::map<int, Expansion<Exact>::Arrangement::Vertex_const_handle> node; // of the points where edges stop sight
+
+  Halfedge halfedge(int from, int to) const;
+  int name(const ExactPoint &p) const;
+  bool open(int from, int to) const { return !(field.left(from, to)->info().solid & SIGHT); }
+  std::vector<Sector> atNode(const ExactPoint &eye, int v);
+  std::vector<Sector> onEdge(const ExactPoint &eye, int e);
+};
