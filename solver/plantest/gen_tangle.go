@@ -221,7 +221,7 @@ func crossing(a, b, c, d exact.Pt) (exact.Pt, bool) {
 		return exact.Pt{}, false
 	}
 	k := big.NewRat(exact.Area2(c, d, a), exact.Area2(c, d, a)-exact.Area2(c, d, b))
-	return spotOf(a).toward(spotOf(b), k).nearest(), true
+	return spotAt(a, b.Sub(a), k).nearest(), true
 }
 
 func gcd(a, b int32) int32 {

@@ -27,18 +27,18 @@ func Text(p *plan.Plan) string {
 		fmt.Fprintf(&b, "block%s id=%s%s\n", places(k.Ring), k.ID, setting("h", k.Height, plan.Ceiling))
 	}
 	for _, o := range parts.Observers {
-		fmt.Fprintf(&b, "observer %s id=%s eye=%s heading=%v view=%v%s\n", place(o.At), o.ID, metres(o.Eye), o.Heading, o.View,
+		fmt.Fprintf(&b, "observer %s id=%s eye=%s heading=%v view=%v%s\n", written(o.At), o.ID, metres(o.Eye), o.Heading, o.View,
 			setting("range", o.Range, 0))
 	}
 	for _, t := range parts.Targets {
 		if t.Face != nil {
-			fmt.Fprintf(&b, "target %s %s id=%s\n", place(t.Face[0]), place(t.Face[1]), t.ID)
+			fmt.Fprintf(&b, "target %s %s id=%s\n", written(t.Face[0]), written(t.Face[1]), t.ID)
 		} else {
-			fmt.Fprintf(&b, "target %s id=%s\n", place(t.At), t.ID)
+			fmt.Fprintf(&b, "target %s id=%s\n", written(t.At), t.ID)
 		}
 	}
 	for _, s := range parts.Starts {
-		fmt.Fprintf(&b, "start %s id=%s\n", place(s.At), s.ID)
+		fmt.Fprintf(&b, "start %s id=%s\n", written(s.At), s.ID)
 	}
 	w := parts.Walker
 	fmt.Fprintf(&b, "walker radius=%s pace=%v eye=%s\n", metres(w.Radius), w.Pace, metres(w.Eye))
@@ -79,12 +79,12 @@ func setting(key string, v, silent int32) string {
 func places(c plan.Chain) string {
 	var b strings.Builder
 	for _, p := range c.All() {
-		b.WriteString(" " + place(p))
+		b.WriteString(" " + written(p))
 	}
 	return b.String()
 }
 
-func place(p exact.Pt) string { return metres(p.X) + "," + metres(p.Y) }
+func written(p exact.Pt) string { return metres(p.X) + "," + metres(p.Y) }
 
 // metres writes grid units as metres without losing one.
 func metres(v int32) string {
