@@ -1,0 +1,225 @@
+package sight
+
+import (
+	"slices"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/mesh"
+)
+
+// piece is a stretch of border that ends cones: on the line from a (right) to b (left), between the directions r and l. A
+// cut end lies where the line meets another one instead of on its direction.
+type piece struct {
+	kind       Kind
+	a, b       exact.Pt
+	r, l       exact.Vec
+	cutR, cutL bool
+	start, end Vertex // the cut ends
+}
+
+// span is a stretch of a ray along which something that stops sight is seen edge-on: from t0 to t1 of the ray's direction.
+type span struct {
+	t0, t1 fraction
+}
+
+type fraction struct{ num, den int64 } // den > 0
+
+func (a fraction) compare(b fraction) int { return exact.CompareFractions(a.num, a.den, b.num, b.den) }
+
+// assemble turns the hits into the ring of f.region.
+func (f *Finder) assemble(eye exact.Pt, c Clip) {
+	f.region.reset(eye)
+	j := joiner{f: f, eye: eye, clip: &c}
+	// Walk the hits once around, from one that is a piece back to it.
+	first := 0
+	for f.hits[first].in < 0 {
+		first++
+	}
+	var begin, last piece
+	for k := range f.hits {
+		h := f.hits[(first+k)%len(f.hits)]
+		switch {
+		case h.in >= 0:
+			for i, p := range f.cut(h, &j) {
+				if k == 0 && i == 0 {
+					begin = p
+				} else {
+					j.join(&last, &p)
+				}
+				last = p
+			}
+		case h.in == breakEdge:
+			j.broken, j.split = true, len(f.spans)
+		default:
+			f.addSpan(eye, ^h.in, h.r)
+		}
+	}
+	j.join(&last, &begin)
+	f.region.canonical()
+}
+
+// cut returns the pieces of border that hit h makes: one, unless the clip's range runs through it. The result is valid until the
+// next call.
+func (f *Finder) cut(h hit, j *joiner) []piece {
+	a, b := f.m.Ends(h.in)
+	f.pieces = append(f.pieces[:0], piece{kind: Wall, a: a, b: b, r: h.r, l: h.l})
+	if j.clip.Range != nil {
+		whole := f.pieces[0]
+		f.pieces = f.pieces[:0]
+		f.cutByRange(whole, j)
+	}
+	return f.pieces
+}
+
+// addSpan notes that half-edge e is seen edge-on along direction d.
+func (f *Finder) addSpan(eye exact.Pt, e mesh.Edge, d exact.Vec) {
+	a, b := f.m.Ends(e)
+	ta, tb := a.Sub(eye).Dot(d), b.Sub(eye).Dot(d)
+	if ta > tb {
+		ta, tb = tb, ta
+	}
+	den := d.Len2()
+	f.spans = append(f.spans, span{fraction{max(ta, 0), den}, fraction{tb, den}})
+}
+
+// joiner strings pieces together.
+type joiner struct {
+	f      *Finder
+	eye    exact.Pt
+	clip   *Clip
+	broken bool // the border runs through the eye between the two pieces
+	split  int  // the spans before this one lie on the ray to the eye, the others on the ray from it
+}
+
+// join adds the border from the end of p to the start of q, and q's own border.
+func (j *joiner) join(p, q *piece) {
+	r, spans := &j.f.region, j.f.spans
+	if j.broken {
+		j.through(p, q)
+	} else if p.cutL && q.cutR {
+		r.add(q.start, q.kind)
+	} else {
+		end, start := p.endOn(j.eye, p.l), q.startOn(j.eye, p.l)
+		te, ts := along(j.eye, end, p.l), along(j.eye, start, p.l)
+		if te.compare(ts) == 0 {
+			if p.kind != q.kind || exact.Area2(p.a, p.b, q.a) != 0 || exact.Area2(p.a, p.b, q.b) != 0 {
+				r.add(start, q.kind)
+			}
+		} else {
+			j.stretch(end, te, ts, p.l, spans, Occluding)
+			r.add(start, q.kind)
+		}
+	}
+	j.f.spans = spans[:0]
+	j.broken, j.split = false, 0
+}
+
+// through adds the border from p to the eye and on to q.
+func (j *joiner) through(p, q *piece) {
+	r, spans := &j.f.region, j.f.spans
+	zero := fraction{0, 1}
+	end, start := p.endOn(j.eye, p.l), q.startOn(j.eye, q.r)
+	in, out := Occluding, Occluding
+	if j.clip.Sides && sameWay(p.l, j.clip.Left) {
+		in = ClipSide
+	}
+	if j.clip.Sides && sameWay(q.r, j.clip.Right) {
+		out = ClipSide
+	}
+	j.stretch(end, along(j.eye, end, p.l), zero, p.l, spans[:j.split], in)
+	at, before := r.Len(), r.kinds[r.Len()-1]
+	j.stretch(gridVertex(j.eye), zero, along(j.eye, start, q.r), q.r, spans[j.split:], out)
+	if p.l.Cross(q.r) == 0 && p.l.Dot(q.r) < 0 && r.kinds[at] == before {
+		r.drop(at) // a straight wall at the eye's back
+	}
+	r.add(start, q.kind)
+}
+
+// stretch adds the border along direction d from vertex v at t0 up to t1, where another vertex follows: base, and Wall
+// where a span covers it.
+func (j *joiner) stretch(v Vertex, t0, t1 fraction, d exact.Vec, spans []span, base Kind) {
+	r := &j.f.region
+	outward := t0.compare(t1) < 0
+	slices.SortFunc(spans, func(a, b span) int {
+		if outward {
+			return a.t0.compare(b.t0)
+		}
+		return b.t1.compare(a.t1)
+	})
+	sign := 1
+	if !outward {
+		sign = -1
+	}
+	now, kind := t0, base
+	r.add(v, base)
+	for _, s := range spans {
+		from, to := s.t0, s.t1
+		if !outward {
+			from, to = to, from
+		}
+		if from.compare(t1)*sign >= 0 || to.compare(now)*sign <= 0 {
+			continue
+		}
+		if from.compare(now)*sign > 0 { // free up to the span
+			if kind != base {
+				r.add(j.onRay(d, now), base)
+			}
+			r.add(j.onRay(d, from), Wall)
+		} else if kind == base { // the span covers the present point
+			r.kinds[r.Len()-1] = Wall
+		}
+		kind, now = Wall, to
+		if to.compare(t1)*sign >= 0 {
+			return
+		}
+	}
+	if kind != base {
+		r.add(j.onRay(d, now), base)
+	}
+}
+
+// onRay returns the vertex at t along direction d.
+func (j *joiner) onRay(d exact.Vec, t fraction) Vertex { return Vertex{j.eye, d, t.num, t.den} }
+
+// startOn returns where p starts on direction d, which is its own r or runs the same way.
+func (p *piece) startOn(eye exact.Pt, d exact.Vec) Vertex {
+	if p.cutR {
+		return p.start
+	}
+	return p.meet(eye, d, p.a)
+}
+
+// endOn returns where p ends on direction d, which is its own l or runs the same way.
+func (p *piece) endOn(eye exact.Pt, d exact.Vec) Vertex {
+	if p.cutL {
+		return p.end
+	}
+	return p.meet(eye, d, p.b)
+}
+
+// meet returns where direction d meets the line of p, which is end itself when that lies on the direction.
+func (p *piece) meet(eye exact.Pt, d exact.Vec, end exact.Pt) Vertex {
+	if d.Cross(end.Sub(eye)) == 0 {
+		return gridVertex(end)
+	}
+	num, den := exact.Line{At: eye, Dir: d}.Meet(exact.Through(p.a, p.b))
+	return Vertex{eye, d, num, den}
+}
+
+// along returns where v lies along direction d from the eye.
+func along(eye exact.Pt, v Vertex, d exact.Vec) fraction {
+	if v.OnGrid() {
+		return fraction{v.At.Sub(eye).Dot(d), d.Len2()}
+	}
+	return fraction{v.Num, v.Den}
+}
+
+// sameWay reports whether a and b point the same way.
+func sameWay(a, b exact.Vec) bool { return a.Cross(b) == 0 && a.Dot(b) > 0 }
+
+// drop removes vertex i.
+func (r *Region) drop(i int) {
+	r.ring = slices.Delete(r.ring, i, i+1)
+	r.kinds = slices.Delete(r.kinds, i, i+1)
+	r.xy = slices.Delete(r.xy, i, i+1)
+}

@@ -1,0 +1,127 @@
+package sight
+
+import (
+	"math"
+
+	"enfilade/solver/exact"
+)
+
+// Kind says what a piece of a region's border is.
+type Kind uint8
+
+// The kinds of border.
+const (
+	Wall      Kind = iota // on something that stops sight
+	Occluding             // the floor goes on behind it
+	ClipSide              // a side of the view angle or the border of the range
+	numKinds
+)
+
+// Vertex is a point of a region's border: At + Dir·Num/Den. On the grid Num is 0.
+type Vertex struct {
+	At       exact.Pt
+	Dir      exact.Vec
+	Num, Den int64 // Den > 0
+}
+
+// gridVertex returns the vertex at a grid point.
+func gridVertex(p exact.Pt) Vertex { return Vertex{At: p, Den: 1} }
+
+// OnGrid reports whether v is a grid point as written.
+func (v Vertex) OnGrid() bool { return v.Num == 0 }
+
+// Offset returns v minus origin in grid units; it only measures, to a few parts in 2^53 of the offset.
+func (v Vertex) Offset(origin exact.Pt) (x, y float64) {
+	t := float64(v.Num) / float64(v.Den)
+	return float64(v.At.X-origin.X) + t*float64(v.Dir.X), float64(v.At.Y-origin.Y) + t*float64(v.Dir.Y)
+}
+
+// Region is what is seen from a point: one counter-clockwise ring around it.
+type Region struct {
+	Eye      exact.Pt
+	Expanded int // triangles entered: the measure of the work done
+	ring     []Vertex
+	kinds    []Kind
+	xy       [][2]float64 // offsets of the vertices from the eye
+}
+
+// Len returns the number of vertices.
+func (r *Region) Len() int { return len(r.ring) }
+
+// Vertex returns vertex i.
+func (r *Region) Vertex(i int) Vertex { return r.ring[i] }
+
+// Kind returns what the border from vertex i to the next one is.
+func (r *Region) Kind(i int) Kind { return r.kinds[i] }
+
+// Point returns vertex i in grid units.
+func (r *Region) Point(i int) (x, y float64) {
+	return float64(r.Eye.X) + r.xy[i][0], float64(r.Eye.Y) + r.xy[i][1]
+}
+
+// Area returns the area in grid units squared. The ring is star-shaped around the eye, so no term is negative and nothing
+// cancels.
+func (r *Region) Area() float64 {
+	sum := 0.0
+	for i, a := range r.xy {
+		b := r.xy[r.next(i)]
+		sum += a[0]*b[1] - a[1]*b[0]
+	}
+	return sum / 2
+}
+
+// Lengths returns the length of the border by kind, in grid units, indexed by Kind.
+func (r *Region) Lengths() [3]float64 {
+	var sum [numKinds]float64
+	for i, a := range r.xy {
+		b := r.xy[r.next(i)]
+		sum[r.kinds[i]] += math.Hypot(b[0]-a[0], b[1]-a[1])
+	}
+	return sum
+}
+
+func (r *Region) next(i int) int {
+	if i+1 == len(r.xy) {
+		return 0
+	}
+	return i + 1
+}
+
+func (r *Region) reset(eye exact.Pt) {
+	r.Eye = eye
+	r.ring, r.kinds, r.xy = r.ring[:0], r.kinds[:0], r.xy[:0]
+}
+
+func (r *Region) add(v Vertex, k Kind) {
+	x, y := v.Offset(r.Eye)
+	r.ring = append(r.ring, v)
+	r.kinds = append(r.kinds, k)
+	r.xy = append(r.xy, [2]float64{x, y})
+}
+
+// canonical turns the ring so that it begins at its lowest left corner: the same region then has the same bits, however
+// the mesh under it came about.
+func (r *Region) canonical() {
+	first := 0
+	for i, p := range r.xy {
+		if q := r.xy[first]; p[0] < q[0] || p[0] == q[0] && p[1] < q[1] {
+			first = i
+		}
+	}
+	turn(r.ring, first)
+	turn(r.kinds, first)
+	turn(r.xy, first)
+}
+
+// turn rotates s so that element k comes first.
+func turn[T any](s []T, k int) {
+	flip(s[:k])
+	flip(s[k:])
+	flip(s)
+}
+
+func flip[T any](s []T) {
+	for i, j := 0, len(s)-1; i < j; i, j = i+1, j-1 {
+		s[i], s[j] = s[j], s[i]
+	}
+}
