@@ -89,20 +89,3 @@ func TestRoundByHand(t *testing.T) {
 		}
 	}
 }
-
-// Rounding what is rounded changes nothing.
-func TestRoundIsStable(t *testing.T) {
-	rapid.Check(t, func(t *rapid.T) {
-		p := plantest.Specks().Draw(t, "plan")
-		o, _ := arrange.Draw(p)
-		g := arrange.Round(o)
-		again := &arrange.Outline{Items: g.Items, Bodies: g.Bodies}
-		for _, e := range g.Edges {
-			again.Segments = append(again.Segments, arrange.Segment{A: g.Pts[e.A], B: g.Pts[e.B], Stops: e.Stops, Item: e.Item, Body: arrange.NoBody})
-		}
-		h := arrange.Round(again)
-		if !slices.Equal(g.Pts, h.Pts) || len(g.Edges) != len(h.Edges) {
-			t.Fatalf("%s\nrounded again from %d points and %d edges to %d and %d", plantest.Text(p), len(g.Pts), len(g.Edges), len(h.Pts), len(h.Edges))
-		}
-	})
-}
