@@ -16,24 +16,24 @@ type Piece struct {
 // border finds the pieces of a region's border: the far side of every gap, and along each critical direction the stretch
 // that lies in the region of one of its two gaps only.
 //
-// Such a stretch is wall where an edge that stops sight runs along it (a face or a thin wall seen edge-on, with the region
+// The pieces are in order and run counter-clockwise. A stretch along a direction is wall where an edge that stops sight runs along it (a face or a thin wall seen edge-on, with the region
 // on one side of it) and occluding elsewhere. Where the region lies on both sides there is no border, wall or not.
 func (w *Twin) border(r *Region, height int32) {
 	zero := new(big.Rat)
 	for i, g := range r.Gaps {
 		before := r.Gaps[(i+len(r.Gaps)-1)%len(r.Gaps)]
-		lo, hi := before.K2, g.K1
+		from, to := before.K2, g.K1
 		if before.Edge < 0 {
-			lo = zero
+			from = zero
 		}
 		if g.Edge < 0 {
-			hi = zero
+			to = zero
 		}
-		if lo.Cmp(hi) > 0 {
-			lo, hi = hi, lo
-		}
-		if lo.Cmp(hi) < 0 {
-			w.alongRay(r, g.D1, lo, hi, height)
+		switch from.Cmp(to) {
+		case -1:
+			r.Border = append(r.Border, w.alongRay(r.Eye, g.D1, from, to, height)...)
+		case 1:
+			r.Border = append(r.Border, reversed(w.alongRay(r.Eye, g.D1, to, from, height))...)
 		}
 		if g.Edge >= 0 {
 			r.Border = append(r.Border, Piece{g.P1, g.P2, true})
@@ -41,12 +41,21 @@ func (w *Twin) border(r *Region, height int32) {
 	}
 }
 
-// alongRay adds the border from eye + lo d to eye + hi d, cut where walls run along it.
-func (w *Twin) alongRay(r *Region, d exact.Vec, lo, hi *big.Rat, height int32) {
+// reversed returns the pieces run through the other way.
+func reversed(pieces []Piece) []Piece {
+	slices.Reverse(pieces)
+	for i, p := range pieces {
+		pieces[i].A, pieces[i].B = p.B, p.A
+	}
+	return pieces
+}
+
+// alongRay returns the border from eye + lo d to eye + hi d, cut where walls run along it.
+func (w *Twin) alongRay(eye exact.Pt, d exact.Vec, lo, hi *big.Rat, height int32) []Piece {
 	type stretch struct{ from, to *big.Rat }
 	var walls []stretch
 	for i, e := range w.g.Edges {
-		a, b := w.g.Pts[e.A].Sub(r.Eye), w.g.Pts[e.B].Sub(r.Eye)
+		a, b := w.g.Pts[e.A].Sub(eye), w.g.Pts[e.B].Sub(eye)
 		if d.Cross(a) != 0 || d.Cross(b) != 0 || !w.stopsSight(int32(i), height) {
 			continue
 		}
@@ -57,9 +66,10 @@ func (w *Twin) alongRay(r *Region, d exact.Vec, lo, hi *big.Rat, height int32) {
 		walls = append(walls, s)
 	}
 	slices.SortFunc(walls, func(a, b stretch) int { return a.from.Cmp(b.from) })
+	var pieces []Piece
 	add := func(from, to *big.Rat, wall bool) {
 		if from.Cmp(to) < 0 {
-			r.Border = append(r.Border, Piece{spotAt(r.Eye, d, from), spotAt(r.Eye, d, to), wall})
+			pieces = append(pieces, Piece{spotAt(eye, d, from), spotAt(eye, d, to), wall})
 		}
 	}
 	at := lo
@@ -78,6 +88,30 @@ func (w *Twin) alongRay(r *Region, d exact.Vec, lo, hi *big.Rat, height int32) {
 		}
 	}
 	add(at, hi, false)
+	return pieces
+}
+
+// Ring returns the border with neighbouring pieces made one where they lie on one line and are of one kind. It touches
+// itself where the region does, and runs through the eye where the eye is on the border.
+func (r *Region) Ring() []Piece {
+	ring := slices.Clone(r.Border)
+	goOn := func(p, q Piece) bool {
+		d, e := p.A.arrow(p.B), q.A.arrow(q.B)
+		return p.Wall == q.Wall && d.same(e)
+	}
+	for i := 0; i < len(ring) && len(ring) > 1; {
+		next := (i + 1) % len(ring)
+		if !goOn(ring[i], ring[next]) {
+			i++
+			continue
+		}
+		ring[i].B = ring[next].B
+		ring = slices.Delete(ring, next, next+1)
+		if next < i {
+			i--
+		}
+	}
+	return ring
 }
 
 // WallLength and OccludingLength return the two parts of the border's length, in grid units.

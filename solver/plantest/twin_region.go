@@ -166,34 +166,3 @@ func (g Gap) area2() *big.Rat {
 func (r *Region) Empty() bool {
 	return !slices.ContainsFunc(r.Gaps, func(g Gap) bool { return g.Edge >= 0 })
 }
-
-// Ring returns the border's corners, counter-clockwise, the first not repeated, straight points left out. It touches
-// itself where the region does, and holds the eye where the eye is on the border.
-func (r *Region) Ring() []Spot {
-	var ring []Spot
-	add := func(s Spot) {
-		if len(ring) == 0 || !ring[len(ring)-1].Equal(s) {
-			ring = append(ring, s)
-		}
-	}
-	for _, g := range r.Gaps {
-		add(g.P1)
-		add(g.P2)
-	}
-	for changed := true; changed && len(ring) > 2; {
-		n := len(ring)
-		ring = slices.CompactFunc(ring, Spot.Equal)
-		if len(ring) > 1 && ring[0].Equal(ring[len(ring)-1]) {
-			ring = ring[:len(ring)-1]
-		}
-		for i := 0; i < len(ring) && len(ring) > 2; i++ {
-			a, b, c := ring[(i+len(ring)-1)%len(ring)], ring[i], ring[(i+1)%len(ring)]
-			if side(a, b, c) == 0 {
-				ring = slices.Delete(ring, i, i+1)
-				i--
-			}
-		}
-		changed = len(ring) != n
-	}
-	return ring
-}
