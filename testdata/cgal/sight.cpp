@@ -121,6 +121,52 @@ static double length(const ExactPoint &a, const ExactPoint &b) {
   return std::sqrt(value(CGAL::squared_distance(a, b)));
 }
 
+// Cuts out of the piece p, which lies on a ray from the eye, what the pieces of other sectors run back along.
+static void cancel(const ExactPoint &eye, const Border &p, const std::vector<const Border *> &others,
+                   std::vector<Border> &out) {
+  auto way = p.to - p.from;
+  Number len2 = way.squared_length();
+  auto far = [&](const Border &b) { return b.from == eye ? b.to : b.from; };
+  std::vector<std::pair<Number, Number>> gone;
+  for (auto q : others) {
+    if (!sameRay(eye, far(p), far(*q)) || CGAL::sign(way * (q->to - q->from)) != CGAL::NEGATIVE) continue;
+    gone.emplace_back(((q->to - p.from) * way) / len2, ((q->from - p.from) * way) / len2);
+  }
+  std::sort(gone.begin(), gone.end());
+  Number at = 0;
+  auto keep = [&](const Number &u, const Number &v) {
+    if (u < v) out.push_back({p.from + u * way, p.from + v * way, true});
+  };
+  for (auto &g : gone) {
+    keep(at, (std::min)(g.first, Number(1)));
+    at = (std::max)(at, g.second);
+  }
+  keep(at, 1);
+}
+
+std::vector<Border> Sight::outline(const Point &at, const std::vector<Sector> &region) const {
+  ExactPoint eye(at.x, at.y);
+  std::vector<Border> out;
+  std::vector<std::vector<Border>> rays(region.size()); // pieces in line with the eye
+  for (size_t i = 0; i < region.size(); i++)
+    for (auto &b : region[i].border) {
+      if (!CGAL::collinear(eye, b.from, b.to))
+        out.push_back(b);
+      else if (b.from != eye && b.to != eye && !sameRay(eye, b.from, b.to))
+        rays[i].push_back({b.from, eye, true}), rays[i].push_back({eye, b.to, true});
+      else
+        rays[i].push_back(b);
+    }
+  for (size_t i = 0; i < region.size(); i++) {
+    std::vector<const Border *> others;
+    for (size_t k = 0; k < region.size(); k++)
+      if (k != i)
+        for (auto &b : rays[k]) others.push_back(&b);
+    for (auto &p : rays[i]) cancel(eye, p, others, out);
+  }
+  return out;
+}
+
 Measure Sight::measure(const Point &at, const std::vector<Sector> &region) const {
   ExactPoint eye(at.x, at.y);
   Measure m;
@@ -129,22 +175,24 @@ Measure Sight::measure(const Point &at, const std::vector<Sector> &region) const
     for (auto &b : s.border) {
       // All these terms are positive or zero, so their sum loses nothing.
       area += value(CGAL::determinant(b.from - eye, b.to - eye)) / 2;
-      double len = length(b.from, b.to), wall = len;
-      m.perimeter += len;
-      if (b.radial) {
-        Number onWall = 0;
-        for (auto &p : field.trace(b.from, b.to)) {
-          if (p.side < 0) continue;
-          auto f = field.tile[p.tile];
-          int other = f->neighbor(p.side)->info().id;
-          if ((field.stops(f, p.side) & SIGHT) && (other < 0 || p.tile < other)) onWall += p.v - p.u;
-        }
-        wall = len * value(onWall);
-      }
-      m.wall += wall;
-      m.occluding += len - wall;
     }
   m.area = double(area);
+  for (auto &b : outline(at, region)) {
+    double len = length(b.from, b.to), wall = len;
+    m.perimeter += len;
+    if (b.radial) {
+      Number onWall = 0;
+      for (auto &p : field.trace(b.from, b.to)) {
+        if (p.side < 0) continue;
+        auto f = field.tile[p.tile];
+        int other = f->neighbor(p.side)->info().id;
+        if ((field.stops(f, p.side) & SIGHT) && (other < 0 || p.tile < other)) onWall += p.v - p.u;
+      }
+      wall = len * value(onWall);
+    }
+    m.wall += wall;
+    m.occluding += len - wall;
+  }
   return m;
 }
 

@@ -35,6 +35,10 @@ public:
 
   Measure measure(const Point &eye, const std::vector<Sector> &region) const;
 
+  // The border of all sectors together. Where two sectors meet on a ray from the eye, what they share is no border: an eye on
+  // a thin wall sees past it on both sides.
+  std::vector<Border> outline(const Point &eye, const std::vector<Sector> &region) const;
+
   // Whether p lies in the closed region.
   bool holds(const Point &eye, const std::vector<Sector> &region, const Point &p) const;
 

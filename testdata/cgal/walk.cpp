@@ -8,6 +8,9 @@
 
 #include "geodesics.h"
 
+// to_double of a lazy number is only as near as its interval is narrow.
+static double value(const Number &n) { return CGAL::to_double(n.exact()); }
+
 static const double none = std::numeric_limits<double>::infinity();
 
 Walk::Walk(const Field &f) : field(f), geodesics(new Geodesics(f)) {}
@@ -33,17 +36,15 @@ double Walk::to(const Point &p) const {
 
 // The border of a region cut up by the triangles of the floor: whatever of it lies on walkable floor and not along an edge
 // that stops walking leads in. That is every occluding edge, and every screen that borders the region.
-std::vector<Walk::Entrance> Walk::entrances(const std::vector<Sector> &region) const {
+std::vector<Walk::Entrance> Walk::entrances(const std::vector<Border> &border) const {
   std::vector<Entrance> list;
-  for (auto &s : region)
-    for (auto &b : s.border)
-      for (auto &p : field.trace(b.from, b.to)) {
-        auto f = field.tile[p.tile];
-        if ((f->info().solid & WALK) || (p.side >= 0 && (field.stops(f, p.side) & WALK))) continue;
-        auto u = b.from + p.u * (b.to - b.from), v = b.from + p.v * (b.to - b.from);
-        list.push_back({p.tile, CGAL::to_double(u.x()), CGAL::to_double(u.y()), CGAL::to_double(v.x()),
-                        CGAL::to_double(v.y())});
-      }
+  for (auto &b : border)
+    for (auto &p : field.trace(b.from, b.to)) {
+      auto f = field.tile[p.tile];
+      if ((f->info().solid & WALK) || (p.side >= 0 && (field.stops(f, p.side) & WALK))) continue;
+      auto u = b.from + p.u * (b.to - b.from), v = b.from + p.v * (b.to - b.from);
+      list.push_back({p.tile, value(u.x()), value(u.y()), value(v.x()), value(v.y())});
+    }
   return list;
 }
 
@@ -59,7 +60,7 @@ End Walk::approach(Sight &sight, const Point &target) const {
     double d = geodesics->to(tile, x, y);
     if (d < best.length) best = {d, x, y};
   };
-  auto ways = entrances(region);
+  auto ways = entrances(sight.outline(target, region));
   for (auto &w : ways) offer(w.tile, w.ax, w.ay), offer(w.tile, w.bx, w.by);
   struct Foot {
     double bound;
@@ -88,7 +89,7 @@ End Walk::approach(Sight &sight, const Point &target) const {
 }
 
 std::pair<double, double> Walk::judge(Sight &sight, const Point &target, double x, double y) const {
-  auto ways = entrances(sight.region(target));
+  auto ways = entrances(sight.outline(target, sight.region(target)));
   double off = none, walked = none;
   for (auto &w : ways) {
     double dx = w.bx - w.ax, dy = w.by - w.ay, len2 = dx * dx + dy * dy;

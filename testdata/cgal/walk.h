@@ -45,5 +45,5 @@ private:
     int tile;
     double ax, ay, bx, by;
   };
-  std::vector<Entrance> entrances(const std::vector<Sector> &region) const;
+  std::vector<Entrance> entrances(const std::vector<Border> &border) const;
 };

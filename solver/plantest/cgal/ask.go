@@ -11,7 +11,7 @@ import (
 type Seen struct {
 	Sectors                    int // free sectors around the eye: 1 on open floor, 2 on a thin wall
 	Area                       float64
-	Perimeter, Wall, Occluding float64 // summed over the sectors
+	Perimeter, Wall, Occluding float64 // of all sectors together, nothing between them
 }
 
 // Region measures what is seen from eye.

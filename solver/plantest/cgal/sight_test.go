@@ -1,0 +1,70 @@
+package cgal_test
+
+import (
+	"errors"
+	"testing"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/plantest"
+	"enfilade/solver/plantest/cgal"
+	"enfilade/solver/sight"
+)
+
+// TestRegionAgainstCGAL compares regions of eyes on open floor, on walls, at their ends and where they meet.
+func TestRegionAgainstCGAL(t *testing.T) {
+	r := cgal.Start(t)
+	var seeded, tangled tally
+	eachSpecimen(t, func(s *specimen) {
+		eyes := s.onWalls(8)
+		if s.walls >= 1000 {
+			eyes = s.onWalls(3)
+		}
+		for _, o := range s.plan.Observers() {
+			eyes = append(eyes, o.At)
+		}
+		compareRegions(t, r, s, eyes, &seeded)
+	})
+	eachTangle(t, 1500, func(s *specimen) {
+		var eyes []exact.Pt
+		for _, o := range s.plan.Observers() {
+			eyes = append(eyes, o.At)
+		}
+		compareRegions(t, r, s, append(eyes, s.graph.Pts...), &tangled)
+	})
+	seeded.log(t, "regions in seeded plans")
+	tangled.log(t, "regions in tangles")
+}
+
+// eyeHeight is where people's eyes are in plans that say nothing else.
+const eyeHeight = 16000
+
+func compareRegions(t *testing.T, r *cgal.Reference, s *specimen, eyes []exact.Pt, c *tally) {
+	t.Helper()
+	r.Plan(s.graph, eyeHeight)
+	f := sight.New(s.mesh)
+	c.plans++
+	c.walls += s.walls
+	for _, eye := range eyes {
+		want, wantErr := r.Region(eye)
+		region, err := f.Region(eye, eyeHeight)
+		if wantErr != nil || err != nil {
+			if !errors.Is(wantErr, cgal.ErrInside) || !errors.Is(err, sight.ErrOutside) {
+				t.Errorf("%s: eye at %v: error %v, CGAL %v\n%s", s.name, eye, err, wantErr, s.text())
+			}
+			continue
+		}
+		c.questions++
+		l := region.Lengths()
+		if !agree(region.Area(), want.Area) || !agree(l[sight.Wall], want.Wall) || !agree(l[sight.Occluding], want.Occluding) {
+			t.Errorf("%s: eye at %v: area %v, border %v, CGAL %+v\n%s", s.name, eye, region.Area(), l, want, s.text())
+		}
+	}
+}
+
+// text writes a small plan out, to be read from the message of a failed test.
+func (s *specimen) text() string {
+	if s.walls > 30 {
+		return ""
+	}
+	return plantest.Text(s.plan)
+}
