@@ -217,11 +217,19 @@ func (g *tangler) mark() exact.Pt {
 
 // crossing returns the grid point nearest to the crossing of ab and cd, if each crosses the other between its ends.
 func crossing(a, b, c, d exact.Pt) (exact.Pt, bool) {
-	if exact.Orient(a, b, c)*exact.Orient(a, b, d) >= 0 || exact.Orient(c, d, a)*exact.Orient(c, d, b) >= 0 {
+	k, ok := crossShare(a, b, c, d)
+	if !ok {
 		return exact.Pt{}, false
 	}
-	k := big.NewRat(exact.Area2(c, d, a), exact.Area2(c, d, a)-exact.Area2(c, d, b))
 	return spotAt(a, b.Sub(a), k).nearest(), true
+}
+
+// crossShare returns where cd crosses ab, as a share of the way from a to b, if each crosses the other between its ends.
+func crossShare(a, b, c, d exact.Pt) (*big.Rat, bool) {
+	if exact.Orient(a, b, c)*exact.Orient(a, b, d) >= 0 || exact.Orient(c, d, a)*exact.Orient(c, d, b) >= 0 {
+		return nil, false
+	}
+	return big.NewRat(exact.Area2(c, d, a), exact.Area2(c, d, a)-exact.Area2(c, d, b)), true
 }
 
 func gcd(a, b int32) int32 {

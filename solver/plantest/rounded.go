@@ -104,33 +104,43 @@ func chainOf(s arrange.Segment, hot []exact.Pt) []exact.Pt {
 	return chain
 }
 
-// passes reports whether the closed segment ab has a point in the pixel of h. The share k of the way at such a point obeys
-// h - 1/2 <= a + k (b - a) < h + 1/2 in x and in y, and 0 <= k <= 1.
+// limit is an end of a range of shares: itself left out when open.
+type limit struct {
+	at   *big.Rat
+	open bool
+}
+
+// passes reports whether the closed segment ab has a point in the pixel of h.
 func passes(a, b, h exact.Pt) bool {
-	lo, hi := new(big.Rat), big.NewRat(1, 1)
-	loOpen, hiOpen := false, false
+	lo, hi := passing(a, b, h)
+	c := lo.at.Cmp(hi.at)
+	return c < 0 || c == 0 && !lo.open && !hi.open
+}
+
+// passing returns the range of shares k of the way from a to b that lie in the pixel of h; it is empty when lo is beyond
+// hi, or at hi with one of them open. The shares obey 0 <= k <= 1 and h - 1/2 <= a + k (b - a) < h + 1/2 in x and in y.
+func passing(a, b, h exact.Pt) (lo, hi limit) {
+	lo, hi = limit{at: new(big.Rat)}, limit{at: big.NewRat(1, 1)}
 	for _, axis := range [2][3]int32{{a.X, b.X, h.X}, {a.Y, b.Y, h.Y}} {
 		from, step := 2*(int64(axis[2])-int64(axis[0])), 2*(int64(axis[1])-int64(axis[0])) // in half units
 		if step == 0 {
-			if from-1 > 0 || from+1 <= 0 {
-				return false
+			if from != 0 { // another row or column of whole numbers
+				lo = limit{at: big.NewRat(2, 1)}
 			}
 			continue
 		}
-		near, far := big.NewRat(from-1, step), big.NewRat(from+1, step)
-		nearOpen, farOpen := false, true
+		near, far := limit{big.NewRat(from-1, step), false}, limit{big.NewRat(from+1, step), true}
 		if step < 0 {
-			near, far, nearOpen, farOpen = far, near, true, false
+			near, far = far, near
 		}
-		if c := near.Cmp(lo); c > 0 || c == 0 && nearOpen {
-			lo, loOpen = near, nearOpen
+		if c := near.at.Cmp(lo.at); c > 0 || c == 0 && near.open {
+			lo = near
 		}
-		if c := far.Cmp(hi); c < 0 || c == 0 && farOpen {
-			hi, hiOpen = far, farOpen
+		if c := far.at.Cmp(hi.at); c < 0 || c == 0 && far.open {
+			hi = far
 		}
 	}
-	c := lo.Cmp(hi)
-	return c < 0 || c == 0 && !loOpen && !hiOpen
+	return lo, hi
 }
 
 // CheckGraph returns what is wrong with a rounded graph: order, edges that meet outside their ends, outlines that are not
