@@ -105,13 +105,12 @@ func (m *Mesh) walkTo(t int32, p exact.Pt) (tri int32, zero, zeros int) {
 	}
 }
 
-// Around calls f for each corner at the point of place p, counter-clockwise, with the half-edge that leaves the point
-// there, and starts over a whole turn. The point must be a corner of the mesh strictly inside its rectangle.
+// Around calls f for each half-edge that leaves the starting corner of start, counter-clockwise, start first. The corner must
+// lie strictly inside the mesh's rectangle.
 func (m *Mesh) Around(start Edge, f func(Edge)) {
 	for e := start; ; {
 		f(e)
-		e = m.Twin(e.Prev())
-		if e == start || e == None {
+		if e = m.Twin(e.Prev()); e == start || e == None {
 			return
 		}
 	}

@@ -16,6 +16,7 @@ type Sector struct {
 type turning struct {
 	sectors []Sector
 	at      []int32 // for each half-edge the sector that its starting corner belongs to, or -1
+	places  []uint8 // for each point the number of its sectors, wide or not, capped
 }
 
 // SectorAt returns the turning sector that the starting corner of e belongs to, or -1 where no shortest walk turns.
@@ -27,9 +28,12 @@ func (m *Mesh) Sector(s int32) *Sector { return &m.turn.sectors[s] }
 // NumSectors returns the number of turning sectors.
 func (m *Mesh) NumSectors() int { return len(m.turn.sectors) }
 
+// OnePlace reports whether point v is a single place for someone who walks: no two sectors meet there.
+func (m *Mesh) OnePlace(v int32) bool { return m.turn.places[v] < 2 }
+
 // makeTurning finds the turning sectors by going around every point from each edge that stops walking. O(n).
 func makeTurning(m *Mesh) turning {
-	turn := turning{at: make([]int32, 4*len(m.Tris))}
+	turn := turning{at: make([]int32, 4*len(m.Tris)), places: make([]uint8, len(m.Pts))}
 	for i := range turn.at {
 		turn.at[i] = -1
 	}
@@ -40,6 +44,7 @@ func makeTurning(m *Mesh) turning {
 		}
 		for i := range 3 {
 			if tri.StopsWalk(i) {
+				turn.places[tri.V[i]] = min(turn.places[tri.V[i]]+1, 2)
 				turn.add(m, EdgeOf(int32(t), i))
 			}
 		}

@@ -1,0 +1,195 @@
+package walk
+
+import (
+	"context"
+	"errors"
+	"math"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/mesh"
+	"enfilade/solver/sight"
+)
+
+// ErrInside reports a start that lies off the mesh or strictly inside something that stops walking.
+var ErrInside = errors.New("walk: the start is inside a body or off the floor")
+
+// Goal is where a flood is to lead: a region, given as its cones of sight from Eye, or the point Eye itself.
+type Goal struct {
+	Eye   exact.Pt
+	Cones []sight.Cone // nil: the goal is the point
+}
+
+// Path is a shortest walk: from the start, the first of Turns, over the corners that follow to End.
+type Path struct {
+	Found  bool
+	Length float64    // grid units
+	Turns  []exact.Pt // no straight points, and not the end
+	End    [2]float64 // grid units
+	Ties   bool       // another walk is equally long, to 4 units in the last place
+}
+
+// Finder walks one mesh. It keeps its buffers from call to call; it is not for concurrent use.
+type Finder struct {
+	m     *mesh.Mesh
+	queue queue
+	nodes []node
+	best  []int32   // for each turning sector its best node, or -1
+	reach []float64 // for each point of the mesh that is one place for walkers, an upper bound of its distance
+	wiped []int32   // points whose reach must be reset
+
+	goals  []goal
+	heads  []int32 // for each triangle the first of its marks, or -1
+	marks  []mark
+	marked []int32 // triangles whose head must be reset
+	limit  float64 // no cone beyond this distance can help any goal
+
+	clip     clipper
+	one, two []exact.Pt
+	Expanded int // cones that entered a triangle during the last flood
+}
+
+// node is a root: a place where walks turn.
+type node struct {
+	at     exact.Pt
+	sector int32 // -1 for the start
+	parent int32
+	g      float64
+	toward exact.Vec // from the parent; zero for the start
+	left   bool      // the walk turns left here, around something on its left
+	ties   bool
+}
+
+// mark says that a triangle holds a part of a goal.
+type mark struct {
+	goal int32
+	next int32
+	r, l exact.Vec // zero when the goal is a point
+}
+
+type goal struct {
+	eye   exact.Pt
+	point bool
+	found bool
+	g     float64
+	node  int32
+	end   [2]float64 // offset from the node
+	ties  bool
+}
+
+// New returns a finder for m.
+func New(m *mesh.Mesh) *Finder {
+	f := &Finder{m: m}
+	f.best = make([]int32, m.NumSectors())
+	f.heads = make([]int32, len(m.Tris))
+	f.reach = make([]float64, len(m.Pts))
+	fill(f.best, -1)
+	fill(f.heads, -1)
+	fill(f.reach, math.Inf(1))
+	return f
+}
+
+func fill[T any](s []T, v T) {
+	for i := range s {
+		s[i] = v
+	}
+}
+
+// Flood returns the shortest walk from start to each goal, in the order of goals.
+//
+//   - A goal that cannot be reached has Found false.
+//   - Errors: ErrInside; the context's error when it is cancelled.
+//   - Cost: O(k log k) for k cones, which stop where a corner already reached leads everywhere beyond at least as shortly;
+//     on floor plans k stays near the number of triangles nearer than the farthest goal.
+func (f *Finder) Flood(ctx context.Context, start exact.Pt, goals []Goal) ([]Path, error) {
+	defer f.reset()
+	f.setGoals(goals)
+	if err := f.begin(start); err != nil {
+		return nil, err
+	}
+	for n := 1; !f.queue.empty(); n++ {
+		if n&1023 == 0 && ctx.Err() != nil {
+			return nil, ctx.Err()
+		}
+		c := f.queue.pop()
+		if c.key > f.limit {
+			break
+		}
+		if s := f.nodes[c.node].sector; s >= 0 && f.best[s] != c.node {
+			continue // a shorter walk to the root has been found
+		}
+		if c.in == mesh.None {
+			f.turn(c.node)
+		} else {
+			f.expand(c)
+		}
+	}
+	paths := make([]Path, len(goals))
+	for i := range f.goals {
+		paths[i] = f.path(&f.goals[i])
+	}
+	return paths, nil
+}
+
+// reset takes back what the last flood wrote, in time proportional to what it touched.
+func (f *Finder) reset() {
+	for _, n := range f.nodes {
+		if n.sector >= 0 {
+			f.best[n.sector] = -1
+		}
+	}
+	for _, t := range f.marked {
+		f.heads[t] = -1
+	}
+	for _, v := range f.wiped {
+		f.reach[v] = math.Inf(1)
+	}
+	f.nodes, f.marks, f.marked, f.wiped, f.goals = f.nodes[:0], f.marks[:0], f.marked[:0], f.wiped[:0], f.goals[:0]
+	f.queue.clear()
+}
+
+// setGoals files every goal in the triangles that hold a part of it.
+func (f *Finder) setGoals(goals []Goal) {
+	f.Expanded = 0
+	f.limit = math.Inf(1)
+	if len(goals) == 0 {
+		f.limit = -1
+	}
+	for i, g := range goals {
+		f.goals = append(f.goals, goal{eye: g.Eye, point: g.Cones == nil, g: math.Inf(1), node: -1})
+		for _, c := range g.Cones {
+			f.mark(c.Tri, mark{goal: int32(i), r: c.R, l: c.L})
+		}
+		if g.Cones == nil {
+			f.eachCorner(g.Eye, func(t int32) { f.mark(t, mark{goal: int32(i)}) })
+		}
+	}
+}
+
+func (f *Finder) mark(t int32, k mark) {
+	if f.m.Tris[t].Flags&mesh.FlagNoWalk != 0 {
+		return
+	}
+	if f.heads[t] < 0 {
+		f.marked = append(f.marked, t)
+	}
+	k.next = f.heads[t]
+	f.heads[t] = int32(len(f.marks))
+	f.marks = append(f.marks, k)
+}
+
+// eachCorner calls do for every triangle that holds p.
+func (f *Finder) eachCorner(p exact.Pt, do func(tri int32)) {
+	place, ok := f.m.Locate(p)
+	switch {
+	case !ok:
+	case place.Corner >= 0:
+		f.m.Around(mesh.EdgeOf(place.Tri, place.Corner), func(e mesh.Edge) { do(e.Tri()) })
+	case place.Edge != mesh.None:
+		do(place.Tri)
+		if twin := f.m.Twin(place.Edge); twin != mesh.None {
+			do(twin.Tri())
+		}
+	default:
+		do(place.Tri)
+	}
+}

@@ -1,0 +1,155 @@
+package walk
+
+import (
+	"cmp"
+	"math"
+	"slices"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/mesh"
+)
+
+// tied reports whether two lengths differ by no more than four units in the last place.
+func tied(a, b float64) bool {
+	m := max(a, b)
+	return math.Abs(a-b) <= 4*(math.Nextafter(m, math.Inf(1))-m)
+}
+
+// relax makes k the root of its sector if it is nearer to the start than the one before. Of two equally near ones the walk
+// with fewer turns is kept, then the one whose points come first in order; a second, different way is remembered as a tie.
+func (f *Finder) relax(k node) {
+	old := f.best[k.sector]
+	if old >= 0 {
+		o := &f.nodes[old]
+		if tied(k.g, o.g) {
+			f.settleTie(o, &k)
+			return
+		}
+		if k.g > o.g {
+			return
+		}
+	}
+	k.ties = f.nodes[k.parent].ties
+	f.best[k.sector] = int32(len(f.nodes))
+	f.nodes = append(f.nodes, k)
+	f.queue.push(cone{key: k.g, node: f.best[k.sector], in: mesh.None})
+}
+
+// settleTie chooses between two equally long walks to one root; its cones serve both.
+func (f *Finder) settleTie(o, k *node) {
+	if o.parent == k.parent {
+		return
+	}
+	f.one = f.chain(f.one[:0], o.parent, o.at)
+	f.two = f.chain(f.two[:0], k.parent, k.at)
+	switch c := compareWalks(f.one, f.two); {
+	case c == 0:
+		o.ties = o.ties || f.nodes[k.parent].ties
+	case c > 0:
+		o.parent, o.g, o.ties = k.parent, k.g, true
+	default:
+		o.ties = true
+	}
+}
+
+// chain appends the points of the walk to node n and on to end, without straight ones, from the end backwards.
+func (f *Finder) chain(dst []exact.Pt, n int32, end exact.Pt) []exact.Pt {
+	dst = append(dst, end)
+	for ; n >= 0; n = f.nodes[n].parent {
+		p := f.nodes[n].at
+		if k := len(dst); k >= 2 && exact.Orient(dst[k-2], dst[k-1], p) == 0 {
+			dst[k-1] = p
+			continue
+		}
+		dst = append(dst, p)
+	}
+	return dst
+}
+
+// compareWalks orders walks given backwards from a common end: fewer turns first, then by their points from the start on.
+func compareWalks(a, b []exact.Pt) int {
+	if len(a) != len(b) {
+		return len(a) - len(b)
+	}
+	for i := len(a) - 1; i >= 0; i-- {
+		if c := a[i].Compare(b[i]); c != 0 {
+			return c
+		}
+	}
+	return 0
+}
+
+// offer takes a walk from node n to the point at offset end as a candidate for goal i.
+func (f *Finder) offer(i int32, n int32, g float64, end [2]float64) {
+	o := &f.goals[i]
+	if o.found && tied(g, o.g) {
+		f.settleEnd(o, n, g, end)
+		return
+	}
+	if o.found && g > o.g {
+		return
+	}
+	o.found, o.g, o.node, o.end, o.ties = true, g, n, end, false
+	worst := 0.0
+	for k := range f.goals {
+		worst = max(worst, f.goals[k].g)
+	}
+	f.limit = worst / tieSlack
+}
+
+// settleEnd chooses between two equally long walks to one goal.
+func (f *Finder) settleEnd(o *goal, n int32, g float64, end [2]float64) {
+	f.one = f.turnsTo(f.one[:0], o.node, o.end)
+	f.two = f.turnsTo(f.two[:0], n, end)
+	ax, ay := f.place(o.node, o.end)
+	bx, by := f.place(n, end)
+	c := compareWalks(f.one, f.two)
+	// Ends are measured, not decided: two candidates a thousandth of a unit apart are one place seen from two triangles.
+	apart := math.Hypot(ax-bx, ay-by) > 1.0/1024
+	if c == 0 && !apart {
+		o.ties = o.ties || f.nodes[n].ties
+		return
+	}
+	if c == 0 {
+		c = cmp.Or(cmp.Compare(ax, bx), cmp.Compare(ay, by))
+	}
+	if c > 0 {
+		o.g, o.node, o.end = g, n, end
+	}
+	o.ties = true
+}
+
+// place returns the point at offset end from node n, in grid units.
+func (f *Finder) place(n int32, end [2]float64) (x, y float64) {
+	p := f.nodes[n].at
+	return float64(p.X) + end[0], float64(p.Y) + end[1]
+}
+
+// turnsTo appends the points at which the walk to offset end from node n starts and turns, backwards. The end itself is not
+// among them, nor is the last corner when the walk passes it straight on or ends there.
+func (f *Finder) turnsTo(dst []exact.Pt, n int32, end [2]float64) []exact.Pt {
+	k := &f.nodes[n]
+	if k.parent >= 0 {
+		// The offset is measured, so whether the last bend is one is, too: a bend of less than 2^-40 is none.
+		cross := float64(k.toward.X)*end[1] - float64(k.toward.Y)*end[0]
+		if math.Abs(cross) <= 0x1p-40*math.Hypot(end[0], end[1])*math.Sqrt(float64(k.toward.Len2())) {
+			return f.chain(dst, k.parent, k.at)[1:]
+		}
+	}
+	return f.chain(dst, k.parent, k.at)
+}
+
+// path reads a goal's walk back to the start.
+func (f *Finder) path(o *goal) Path {
+	if !o.found {
+		return Path{}
+	}
+	back := f.turnsTo(nil, o.node, o.end)
+	slices.Reverse(back)
+	x, y := f.place(o.node, o.end)
+	p := Path{Found: true, Length: o.g, Turns: back, End: [2]float64{x, y}, Ties: o.ties || f.nodes[o.node].ties}
+	for n := o.node; n >= 0 && !p.Ties; n = f.nodes[n].parent {
+		p.Ties = f.nodes[n].ties
+	}
+	return p
+}
