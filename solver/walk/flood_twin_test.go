@@ -1,0 +1,154 @@
+package walk_test
+
+import (
+	"context"
+	"errors"
+	"math"
+	"slices"
+	"testing"
+
+	"pgregory.net/rapid"
+
+	"enfilade/solver/arrange"
+	"enfilade/solver/exact"
+	"enfilade/solver/mesh"
+	"enfilade/solver/plan"
+	"enfilade/solver/plantest"
+	"enfilade/solver/sight"
+	"enfilade/solver/walk"
+)
+
+// tangles are the generators of small degenerate plans.
+var tangles = map[string]*rapid.Generator[*plan.Plan]{
+	"tangles": plantest.Tangles(), "specks": plantest.Specks(), "lines": plantest.Lines(),
+}
+
+func graphAndMesh(t interface{ Fatal(...any) }, p *plan.Plan) (*arrange.Graph, *mesh.Mesh) {
+	o, _ := arrange.Draw(p)
+	g := arrange.Round(o)
+	m, err := arrange.Build(context.Background(), g)
+	if err != nil {
+		t.Fatal(err)
+	}
+	return g, m
+}
+
+// places returns every place worth walking from or to: marks, points of the graph, and middles of edges on the grid.
+func places(p *plan.Plan, g *arrange.Graph) []exact.Pt {
+	var at []exact.Pt
+	for _, s := range p.Starts() {
+		at = append(at, s.At)
+	}
+	for _, t := range p.Targets() {
+		at = append(at, t.At)
+	}
+	at = append(at, g.Pts...)
+	for _, e := range g.Edges {
+		a, b := g.Pts[e.A], g.Pts[e.B]
+		if (a.X+b.X)%2 == 0 && (a.Y+b.Y)%2 == 0 {
+			at = append(at, exact.Pt{X: (a.X + b.X) / 2, Y: (a.Y + b.Y) / 2})
+		}
+	}
+	slices.SortFunc(at, exact.Pt.Compare)
+	return slices.Compact(at)
+}
+
+var heights = rapid.SampledFrom([]int32{16000, 9000, 17000, 19000})
+
+// near reports whether two lengths agree to 1e-9 of the larger or to a millionth of a grid unit: an end may lie that near
+// to its root, on a line given by points thousands of units away.
+func near(a, b float64) bool {
+	return a == b || math.Abs(a-b) <= math.Max(1e-6, 1e-9*math.Max(math.Abs(a), math.Abs(b)))
+}
+
+// TestFloodAgainstTwin holds full walks and approaches against the slow exact ones on plans full of degeneracies, from and
+// to faces, ends, corners and crossings.
+func TestFloodAgainstTwin(t *testing.T) {
+	for name, plans := range tangles {
+		t.Run(name, rapid.MakeCheck(func(t *rapid.T) {
+			p := plans.Draw(t, "plan")
+			t.Log(plantest.Text(p))
+			g, m := graphAndMesh(t, p)
+			twin := plantest.NewTwin(g)
+			at := places(p, g)
+			height := heights.Draw(t, "height")
+			pick := rapid.IntRange(0, len(at)-1)
+			for range 2 {
+				start, one, two := at[pick.Draw(t, "start")], at[pick.Draw(t, "one")], at[pick.Draw(t, "two")]
+				sameWalks(t, m, twin, start, []exact.Pt{one, two}, height)
+			}
+		}))
+	}
+}
+
+// sameWalks floods once from start for the approaches and the full walks to all targets, and compares each with the twin.
+func sameWalks(t *rapid.T, m *mesh.Mesh, twin *plantest.Twin, start exact.Pt, targets []exact.Pt, height int32) {
+	var goals []walk.Goal
+	eyes := sight.New(m)
+	for _, at := range targets {
+		cones, err := eyes.Cones(at, height, sight.Clip{})
+		if err != nil || cones == nil {
+			cones = []sight.Cone{} // nothing sees it; nil would ask for the point
+		}
+		goals = append(goals, walk.Goal{Eye: at, Cones: slices.Clone(cones)}, walk.Goal{Eye: at})
+	}
+	paths, err := walk.New(m).Flood(context.Background(), start, goals)
+	if err != nil && !errors.Is(err, walk.ErrInside) {
+		t.Fatal(err)
+	}
+	if err != nil {
+		paths = make([]walk.Path, len(goals))
+	}
+	for i, at := range targets {
+		a := twin.Approach(start, at, height)
+		samePath(t, "approach", start, at, height, paths[2*i], a.Walk, !a.Other)
+		w := twin.Walk(start, at)
+		samePath(t, "walk", start, at, height, paths[2*i+1], w, true)
+	}
+}
+
+func samePath(t *rapid.T, what string, from, to exact.Pt, height int32, got walk.Path, want plantest.Walk, sameEnd bool) {
+	length := math.Inf(1)
+	if got.Found {
+		length = got.Length
+	}
+	if !near(length, want.Length) {
+		t.Errorf("%s from %v to %v at height %v: %v over %v to %v, want %v over %v", what, from, to, height, length, got.Turns,
+			got.End, want.Length, floats(want.Points))
+		return
+	}
+	if !got.Found {
+		return
+	}
+	if got.Turns[0] != from {
+		t.Errorf("%s from %v to %v begins at %v", what, from, to, got.Turns[0])
+	}
+	sum, last := 0.0, [2]float64{float64(from.X), float64(from.Y)}
+	for _, p := range append(floatsOf(got.Turns[1:]), got.End) {
+		sum += math.Hypot(p[0]-last[0], p[1]-last[1])
+		last = p
+	}
+	if math.Abs(sum-got.Length) > 1e-9*math.Max(1, sum) {
+		t.Errorf("%s from %v to %v: says %v, its points make %v", what, from, to, got.Length, sum)
+	}
+	if end := floats(want.Points[len(want.Points)-1:])[0]; sameEnd && !got.Ties && math.Hypot(end[0]-last[0], end[1]-last[1]) > 1e-4 {
+		t.Errorf("%s from %v to %v at height %v ends at %v, want %v", what, from, to, height, last, end)
+	}
+}
+
+func floats(spots []plantest.Spot) [][2]float64 {
+	var list [][2]float64
+	for _, s := range spots {
+		x, y := s.Float()
+		list = append(list, [2]float64{x, y})
+	}
+	return list
+}
+
+func floatsOf(pts []exact.Pt) [][2]float64 {
+	var list [][2]float64
+	for _, p := range pts {
+		list = append(list, [2]float64{float64(p.X), float64(p.Y)})
+	}
+	return list
+}
