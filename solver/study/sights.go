@@ -1,0 +1,146 @@
+package study
+
+import (
+	"context"
+	"math"
+
+	"github.com/paulmach/orb"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/plan"
+	"enfilade/solver/sight"
+)
+
+// Sights returns what each observer sees, in the plane of its own eye.
+//
+// It ignores cancellation once the mesh is ready: it is the stage that must keep up with a drag.
+func (s *Solver) Sights(ctx context.Context, p *plan.Plan) ([]Sight, error) {
+	if err := s.Mesh(ctx, p); err != nil {
+		return nil, err
+	}
+	out := make([]Sight, 0, p.NumObservers())
+	for _, o := range p.Observers() {
+		out = append(out, s.scene.observed(p, o))
+	}
+	return out, nil
+}
+
+// SeenFrom returns the places that see each target, in the plane of the walker's eye.
+func (s *Solver) SeenFrom(ctx context.Context, p *plan.Plan) ([]Sight, error) {
+	if err := s.Mesh(ctx, p); err != nil {
+		return nil, err
+	}
+	eye := p.Walker().Eye
+	out := make([]Sight, 0, p.NumTargets())
+	for _, t := range p.Targets() {
+		if err := ctx.Err(); err != nil {
+			return nil, err
+		}
+		at := targetPoint(t)
+		e := Sight{Item: plan.Ref{Kind: plan.KindTarget, ID: t.ID}, Name: t.Name, At: pointMM(at), Eye: mm(eye)}
+		f := s.scene.stand(at, s.scene.blindAt(eye))
+		if !f.ok {
+			e.Problem = f.text
+		} else {
+			s.scene.measure(&e, f.at, eye, frontOf(t))
+		}
+		out = append(out, e)
+	}
+	return out, nil
+}
+
+// observed returns what one observer sees.
+func (sc *scene) observed(p *plan.Plan, o plan.Observer) Sight {
+	e := Sight{Item: plan.Ref{Kind: plan.KindObserver, ID: o.ID}, Name: o.Name, At: pointMM(o.At), Eye: mm(o.Eye)}
+	f := sc.stand(o.At, sc.blindAt(o.Eye))
+	if !f.ok {
+		e.Problem = f.text
+		return e
+	}
+	clip := sight.View(o.Heading, o.View)
+	if o.Range > 0 && !sc.reachesAll(f.at, o.Range) {
+		if !legalRange(f.at, o.Range) {
+			e.Problem = "has a range that leads beyond the legal 50 km; shorten it, or leave it out for no limit"
+			return e
+		}
+		clip.Range = sight.RangePolygon(f.at, max(o.Range, minRange))
+	}
+	sc.measure(&e, f.at, o.Eye, clip)
+	if e.Problem != "" {
+		return e
+	}
+	for _, t := range p.Targets() {
+		tf := sc.stand(targetPoint(t), sc.blindAt(o.Eye))
+		if tf.ok && inFront(t, f.at) && sc.sight.SeesWithin(f.at, tf.at, o.Eye, clip) {
+			e.TargetsSeen = append(e.TargetsSeen, t.ID)
+		}
+	}
+	return e
+}
+
+// minRange is the shortest range that has a polygon, in grid units.
+const minRange = 16
+
+// reachesAll reports whether the range ends beyond every corner of the mesh.
+func (sc *scene) reachesAll(eye exact.Pt, r int32) bool {
+	n := len(sc.mesh.Pts)
+	for _, c := range sc.mesh.Pts[n-4:] {
+		if exact.Dist2(eye, c) >= int64(r)*int64(r) {
+			return false
+		}
+	}
+	return true
+}
+
+func legalRange(eye exact.Pt, r int32) bool {
+	most := max(eye.X, -eye.X, eye.Y, -eye.Y)
+	return int64(most)+int64(r) < exact.Limit
+}
+
+// measure fills in the region seen from eye.
+func (sc *scene) measure(e *Sight, eye exact.Pt, height int32, clip sight.Clip) {
+	e.At = pointMM(eye)
+	r, err := sc.sight.Clipped(eye, height, clip)
+	if err != nil {
+		e.Problem = "sees nothing: it stands on a wall and looks into it; turn it round"
+		return
+	}
+	l := r.Lengths()
+	e.Area = r.Area() / perM2
+	e.Wall, e.Occluding, e.Clip = l[sight.Wall]/perM, l[sight.Occluding]/perM, l[sight.ClipSide]/perM
+	e.Perimeter = e.Wall + e.Occluding + e.Clip
+	e.Boundary = make(orb.Ring, r.Len())
+	e.Kinds = make([]EdgeKind, r.Len())
+	for i := range r.Len() {
+		x, y := r.Point(i)
+		e.Boundary[i] = orb.Point{mm(x), mm(y)}
+		e.Kinds[i] = kinds[r.Kind(i)]
+	}
+}
+
+var kinds = [...]EdgeKind{sight.Wall: EdgeWall, sight.Occluding: EdgeOccluding, sight.ClipSide: EdgeClip}
+
+// targetPoint returns the point at which a target is looked for: the middle of its face, to the grid, when it has one.
+func targetPoint(t plan.Target) exact.Pt {
+	if t.Face == nil {
+		return t.At
+	}
+	a, b := t.Face[0], t.Face[1]
+	return exact.Pt{X: half(a.X, b.X), Y: half(a.Y, b.Y)}
+}
+
+// half returns the middle of a and b, halves rounded away from zero.
+func half(a, b int32) int32 { return int32(math.Round((float64(a) + float64(b)) / 2)) }
+
+// frontOf returns the clip of a target that is seen from its front only.
+func frontOf(t plan.Target) sight.Clip {
+	if t.Face == nil {
+		return sight.Clip{}
+	}
+	return sight.Front(t.Face[0], t.Face[1])
+}
+
+// inFront reports whether p lies on the front side of the target's face, or level with it.
+func inFront(t plan.Target, p exact.Pt) bool {
+	return t.Face == nil || exact.Orient(t.Face[0], t.Face[1], p) >= 0
+}
