@@ -155,11 +155,11 @@ func (t *texter) problems() {
 	}
 	t.b.WriteString("\nProblems in the plan\n")
 	for _, p := range t.result.Problems {
-		var items []string
-		for _, item := range p.Items {
-			items = append(items, strings.TrimSpace(nameOf(kindNames[:], item.Kind)+" "+item.ID))
+		blame := "plan"
+		if len(p.Items) > 0 { // the text names the others
+			blame = strings.TrimSpace(nameOf(kindNames[:], p.Items[0].Kind) + " " + p.Items[0].ID)
 		}
-		t.b.WriteString("  " + strings.Join(items, ", ") + " at " + t.place(millimetres(p.At)) + ": " + p.Text + "\n")
+		t.b.WriteString("  " + blame + " at " + t.place(millimetres(p.At)) + ": " + p.Text + "\n")
 	}
 }
 
