@@ -57,26 +57,12 @@ func (d *drawer) openingProblem(kind plan.ProblemKind, o *plan.Opening, at exact
 }
 
 // cut returns the gap an opening makes, or says why it fits nowhere.
-//
-// A slanted leg's length is no whole number, so an opening that ends less than one unit before the leg's end reaches it.
 func (s *strand) cut(o *plan.Opening) (g gap, fault string) {
-	if o.Segment < 0 || o.Segment >= len(s.legs) {
-		return g, fmt.Sprintf("names straight piece %d of wall %s, which has pieces 0 to %d", o.Segment, o.Wall, len(s.legs)-1)
+	toEnd, fault := s.wall.Fit(*o)
+	if fault != "" {
+		return g, fault
 	}
-	leg := s.legs[o.Segment]
-	if leg == noLeg {
-		return g, fmt.Sprintf("names straight piece %d of wall %s, which has no length", o.Segment, o.Wall)
-	}
-	if o.At < 0 || o.Width <= 0 {
-		return g, "needs a place of 0 or more along its wall, and a width above 0"
-	}
-	to := int64(o.At) + int64(o.Width)
-	len2 := s.dir(int(leg)).Len2()
-	// Legal legs are shorter than 2^31 units, so squares of what fits stay below 2^62.
-	if to >= 1<<31 || to*to > len2 {
-		return g, fmt.Sprintf("reaches beyond the end of straight piece %d of wall %s", o.Segment, o.Wall)
-	}
-	return gap{leg: leg, from: o.At, to: int32(to), toEnd: (to+1)*(to+1) > len2}, ""
+	return gap{leg: s.legs[o.Segment], from: o.At, to: o.At + o.Width, toEnd: toEnd}, ""
 }
 
 // settleGaps puts a strand's gaps in order and leaves out what overlaps an earlier one.

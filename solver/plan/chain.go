@@ -11,7 +11,12 @@ import (
 type Chain struct{ pts []exact.Pt }
 
 // ChainOf returns the chain through pts, which it copies.
-func ChainOf(pts ...exact.Pt) Chain { return Chain{slices.Clone(pts)} }
+func ChainOf(pts ...exact.Pt) Chain {
+	if len(pts) == 0 {
+		return Chain{}
+	}
+	return Chain{slices.Clone(pts)}
+}
 
 // Len returns the number of points.
 func (c Chain) Len() int { return len(c.pts) }

@@ -105,6 +105,7 @@ type Opening struct {
 type Circle struct {
 	At     exact.Pt
 	Radius int32
+	Extra  string // unknown members of the file, as in Meta
 }
 
 // Block is a body: column, plinth, case, crate.

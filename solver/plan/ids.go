@@ -1,0 +1,91 @@
+package plan
+
+import (
+	"strconv"
+	"strings"
+)
+
+// kinds holds each kind's name and the letter its ids begin with, in the order of the constants.
+var kinds = [...]struct{ name, letter string }{
+	KindPlan: {"plan", ""}, KindFloor: {"floor", ""}, KindWall: {"wall", "W"}, KindOpening: {"opening", "D"},
+	KindBlock: {"block", "B"}, KindZone: {"zone", "Z"}, KindObserver: {"observer", "O"}, KindTarget: {"target", "T"},
+	KindStart: {"start", "S"}, KindRoute: {"route", "R"}, KindWalker: {"walker", ""}, KindUnderlay: {"underlay", ""},
+}
+
+// String returns the kind's name, as in messages.
+func (k Kind) String() string { return kinds[k].name }
+
+// Letter returns what fresh ids of the kind begin with; empty for what there is only one of.
+func (k Kind) Letter() string { return kinds[k].letter }
+
+// String names the item: "wall W3", or "floor".
+func (r Ref) String() string {
+	if r.ID == "" {
+		return r.Kind.String()
+	}
+	return r.Kind.String() + " " + r.ID
+}
+
+// Number returns the number of an id of the form its kind's fresh ids have, and 0 for any other id.
+func (r Ref) Number() int {
+	rest, ok := strings.CutPrefix(r.ID, r.Kind.Letter())
+	if !ok || rest == "" || rest[0] == '+' || rest[0] == '-' {
+		return 0
+	}
+	n, err := strconv.Atoi(rest)
+	if err != nil || n >= 1<<40 {
+		return 0
+	}
+	return n
+}
+
+// NextID returns the next free id of a kind: its letter and the number after the highest in use.
+func NextID(p *Plan, kind Kind) string {
+	highest := 0
+	see := func(id string) { highest = max(highest, Ref{kind, id}.Number()) }
+	p.eachID(kind, see)
+	return kind.Letter() + strconv.Itoa(highest+1)
+}
+
+// eachID shows every id of a kind to see.
+func (p *Plan) eachID(kind Kind, see func(string)) {
+	switch kind {
+	case KindWall:
+		ids(p.obstacles.walls, see)
+	case KindOpening:
+		ids(p.obstacles.openings, see)
+	case KindBlock:
+		ids(p.obstacles.blocks, see)
+	case KindZone:
+		ids(p.marks.zones, see)
+	case KindObserver:
+		ids(p.marks.observers, see)
+	case KindTarget:
+		ids(p.marks.targets, see)
+	case KindStart:
+		ids(p.marks.starts, see)
+	case KindRoute:
+		ids(p.marks.routes, see)
+	}
+}
+
+// identified is a pointer to an item with an id.
+type identified[T any] interface {
+	*T
+	id() *string
+}
+
+func ids[T any, P identified[T]](list []T, see func(string)) {
+	for i := range list {
+		see(*P(&list[i]).id())
+	}
+}
+
+func (w *Wall) id() *string     { return &w.ID }
+func (o *Opening) id() *string  { return &o.ID }
+func (b *Block) id() *string    { return &b.ID }
+func (z *Zone) id() *string     { return &z.ID }
+func (o *Observer) id() *string { return &o.ID }
+func (t *Target) id() *string   { return &t.ID }
+func (s *Start) id() *string    { return &s.ID }
+func (r *Route) id() *string    { return &r.ID }
