@@ -32,15 +32,28 @@ const (
 // StopsWalk reports whether edge i of t stops walking.
 func (t *Tri) StopsWalk(i int) bool { return t.Flags>>uint(i)&1 != 0 }
 
+// Step is what a cone needs that enters a triangle through one of its half-edges: the apex opposite, and for the edges to the
+// right and to the left of it, as seen on the way in, the half-edge to go on through and the height up to which it stops
+// sight.
+type Step struct {
+	Apex              exact.Pt
+	Right, Left       Edge
+	TopRight, TopLeft int32
+}
+
 // Mesh is a finished triangulation of a rectangle. It never changes, so any goroutine may read it.
 type Mesh struct {
 	Pts   []exact.Pt // the graph's points, then the four corners of the box
 	Tris  []Tri
+	Steps []Step  // three a triangle, see StepAt
 	Solid []int32 // for each triangle the height up to which it is solid for sight
 	Con   []int32 // for each half-edge the index of the edge that lies on it, or -1
 	grid  grid
 	turn  turning
 }
+
+// StepAt returns the index in Steps of the step through half-edge e.
+func StepAt(e Edge) int { return int(e - e>>2) }
 
 // Twin returns the half-edge on the other side of e.
 func (m *Mesh) Twin(e Edge) Edge { return m.Tris[e.Tri()].N[e.Corner()] }
@@ -90,9 +103,21 @@ func (tr *Triangulation) Finish(tags []Tag, solid []Tag) *Mesh {
 			}
 		}
 	}
+	m.makeSteps()
 	m.grid = makeGrid(m)
 	m.turn = makeTurning(m)
 	return m
+}
+
+func (m *Mesh) makeSteps() {
+	m.Steps = make([]Step, 3*len(m.Tris))
+	for k := range m.Tris {
+		t := &m.Tris[k]
+		for i := range 3 {
+			right, left := inc[i], inc[inc[i]]
+			m.Steps[3*k+i] = Step{t.P[left], t.N[right], t.N[left], t.Top[right], t.Top[left]}
+		}
+	}
 }
 
 func merge(a, b Tag) Tag { return Tag{max(a.Top, b.Top), a.Walk || b.Walk} }

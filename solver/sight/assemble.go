@@ -27,48 +27,89 @@ type fraction struct{ num, den int64 } // den > 0
 func (a fraction) compare(b fraction) int { return exact.CompareFractions(a.num, a.den, b.num, b.den) }
 
 // assemble turns the hits into the ring of f.region.
-func (f *Finder) assemble(eye exact.Pt, c Clip) {
+func (f *Finder) assemble(eye exact.Pt, c *Clip) {
 	f.region.reset(eye)
-	j := joiner{f: f, eye: eye, clip: &c}
 	// Walk the hits once around, from one that is a piece back to it.
 	first := 0
 	for f.hits[first].in < 0 {
 		first++
 	}
-	var begin, last piece
-	for k := range f.hits {
-		h := f.hits[(first+k)%len(f.hits)]
-		switch {
-		case h.in >= 0:
-			for i, p := range f.cut(h, &j) {
-				if k == 0 && i == 0 {
-					begin = p
-				} else {
-					j.join(&last, &p)
-				}
-				last = p
-			}
-		case h.in == breakEdge:
-			j.broken, j.split = true, len(f.spans)
-		default:
-			f.addSpan(eye, ^h.in, h.r)
-		}
+	if c.Range == nil {
+		f.assembleWhole(eye, c, first)
+	} else {
+		f.assembleCut(eye, c, first)
 	}
-	j.join(&last, &begin)
 	f.region.canonical()
 }
 
-// cut returns the pieces of border that hit h makes: one, unless the clip's range runs through it. The result is valid until the
-// next call.
-func (f *Finder) cut(h hit, j *joiner) []piece {
-	a, b := f.m.Ends(h.in)
-	f.pieces = append(f.pieces[:0], piece{kind: Wall, a: a, b: b, r: h.r, l: h.l})
-	if j.clip.Range != nil {
-		whole := f.pieces[0]
-		f.pieces = f.pieces[:0]
-		f.cutByRange(whole, j)
+// assembleWhole strings hits together that no range cuts. Between most neighbours lies a corner that both meet at, or a ray
+// from a corner to the wall behind it; everything else is left to the joiner.
+func (f *Finder) assembleWhole(eye exact.Pt, c *Clip, first int) {
+	j := joiner{f: f, eye: eye, clip: c}
+	n := len(f.hits)
+	p := f.pieceOf(f.hits[first])
+	onL := p.l.Cross(p.b.Sub(eye)) == 0
+	k := first + 1
+	for range n {
+		if k == n {
+			k = 0
+		}
+		h := f.hits[k]
+		k++
+		if h.in < 0 {
+			j.note(h)
+			continue
+		}
+		q := f.pieceOf(h)
+		onR := q.r.Cross(q.a.Sub(eye)) == 0
+		switch {
+		case j.broken || len(f.spans) > 0 || onL == onR && !(onL && p.b == q.a):
+			j.join(&p, &q)
+		case onL && onR: // both meet at a corner
+			if exact.Area2(p.a, p.b, q.b) != 0 {
+				f.region.addGrid(q.a, Wall)
+			}
+		case onL: // the corner p ends at hides part of q
+			num, den := exact.Line{At: eye, Dir: p.l}.Meet(exact.Through(q.a, q.b))
+			f.region.addGrid(p.b, Occluding)
+			f.region.addRay(p.l, num, den, Wall)
+		default: // the corner q starts at hides part of p
+			num, den := exact.Line{At: eye, Dir: p.l}.Meet(exact.Through(p.a, p.b))
+			f.region.addRay(p.l, num, den, Occluding)
+			f.region.addGrid(q.a, Wall)
+		}
+		p = q
+		onL = p.l.Cross(p.b.Sub(eye)) == 0
 	}
-	return f.pieces
+}
+
+// assembleCut strings hits together that the range may cut.
+func (f *Finder) assembleCut(eye exact.Pt, c *Clip, first int) {
+	j := joiner{f: f, eye: eye, clip: c}
+	var begin, last piece
+	for k := range f.hits {
+		h := f.hits[(first+k)%len(f.hits)]
+		if h.in < 0 {
+			j.note(h)
+			continue
+		}
+		f.pieces = f.pieces[:0]
+		f.cutByRange(f.pieceOf(h), &j)
+		for i, p := range f.pieces {
+			if k == 0 && i == 0 {
+				begin = p
+			} else {
+				j.join(&last, &p)
+			}
+			last = p
+		}
+	}
+	j.join(&last, &begin)
+}
+
+func (f *Finder) pieceOf(h hit) piece {
+	a, b := f.m.Ends(h.in)
+	return piece{kind: Wall, a: a, b: b, r: h.r, l: h.l}
 }
 
 // addSpan notes that half-edge e is seen edge-on along direction d.
@@ -89,6 +130,15 @@ type joiner struct {
 	clip   *Clip
 	broken bool // the border runs through the eye between the two pieces
 	split  int  // the spans before this one lie on the ray to the eye, the others on the ray from it
+}
+
+// note remembers what lies between two pieces.
+func (j *joiner) note(h hit) {
+	if h.in == breakEdge {
+		j.broken, j.split = true, len(j.f.spans)
+	} else {
+		j.f.addSpan(j.eye, ^h.in, h.r)
+	}
 }
 
 // join adds the border from the end of p to the start of q, and q's own border.

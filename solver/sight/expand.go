@@ -14,61 +14,66 @@ var inc = [3]int{1, 2, 0}
 
 // expand sends one cone through the mesh and appends what its parts end on, from right to left. The loop keeps the
 // rightmost open cone in hand and the others on a stack, so that triangles are visited in the order in which they are seen.
-// It costs three cross products a triangle at most, and no allocation once the buffers have grown.
+// It costs two cross products a triangle, and no allocation once the buffers have grown.
 func (f *Finder) expand(now frame, eye exact.Pt, height int32) {
-	tris := f.m.Tris
-	base := len(f.stack)
+	steps := f.m.Steps
+	hits, stack := f.hits, f.stack[:0]
+	count := 0
 	for {
-		t := &tris[now.in.Tri()]
-		f.count++
+		s := &steps[mesh.StepAt(now.in)]
+		count++
 		if f.keep {
 			f.cones = append(f.cones, Cone{now.in.Tri(), now.r, now.l})
 		}
-		// Seen from the eye, the edge of entry runs from its end (right) to its corner (left); the apex lies behind.
-		left := now.in.Corner()
-		right := inc[left]
-		apex := inc[right]
-		first := now.in - mesh.Edge(left)
-		v := t.P[apex].Sub(eye)
+		v := s.Apex.Sub(eye)
 		onRight, onLeft := now.r.Cross(v), v.Cross(now.l)
-		var next frame
-		if onRight <= 0 { // only the left edge is crossed
-			if onRight == 0 && t.Top[right] >= height && now.r.Cross(t.P[right].Sub(eye)) == 0 {
-				f.hits = append(f.hits, hit{^(first + mesh.Edge(right)), now.r, now.r})
+		if onRight > 0 {
+			if onLeft > 0 { // the apex splits the cone
+				if s.TopLeft < height {
+					stack = append(stack, frame{s.Left, v, now.l})
+				} else {
+					stack = append(stack, frame{^(now.in.Prev() | later), v, now.l})
+				}
+				now.l = v
+			} else if onLeft == 0 && s.TopLeft >= height && f.edgeOn(now.in, now.l, eye) {
+				stack = append(stack, frame{^now.in.Prev(), now.l, now.l})
 			}
-			next = frame{first + mesh.Edge(apex), now.r, now.l}
-		} else if onLeft <= 0 { // only the right edge is crossed
-			if onLeft == 0 && t.Top[apex] >= height && now.l.Cross(t.P[left].Sub(eye)) == 0 {
-				f.stack = append(f.stack, frame{^(first + mesh.Edge(apex)), now.l, now.l})
+			// Only the right edge is crossed, or it comes first.
+			if s.TopRight < height {
+				now.in = s.Right
+				continue
 			}
-			next = frame{first + mesh.Edge(right), now.r, now.l}
-		} else { // the apex splits the cone
-			if t.Top[apex] >= height {
-				f.stack = append(f.stack, frame{^(first + mesh.Edge(apex) | later), v, now.l})
-			} else {
-				f.stack = append(f.stack, frame{t.N[apex], v, now.l})
+			hits = append(hits, hit{now.in.Next(), now.r, now.l})
+		} else { // only the left edge is crossed
+			if onRight == 0 && s.TopRight >= height && f.edgeOn(now.in.Next(), now.r, eye) {
+				hits = append(hits, hit{^now.in.Next(), now.r, now.r})
 			}
-			next = frame{first + mesh.Edge(right), now.r, v}
+			if s.TopLeft < height {
+				now.in = s.Left
+				continue
+			}
+			hits = append(hits, hit{now.in.Prev(), now.r, now.l})
 		}
-		if c := next.in.Corner(); t.Top[c] < height {
-			next.in = t.N[c]
-			now = next
-			continue
-		}
-		f.hits = append(f.hits, hit(next))
 		for {
-			if len(f.stack) == base {
+			if len(stack) == 0 {
+				f.hits, f.stack = hits, stack
+				f.count += count
 				return
 			}
-			now = f.stack[len(f.stack)-1]
-			f.stack = f.stack[:len(f.stack)-1]
+			now = stack[len(stack)-1]
+			stack = stack[:len(stack)-1]
 			if now.in >= 0 {
 				break
 			}
 			if e := ^now.in; e&later != 0 {
 				now.in = e &^ later
 			}
-			f.hits = append(f.hits, hit(now))
+			hits = append(hits, hit(now))
 		}
 	}
+}
+
+// edgeOn reports whether the starting corner of e lies on direction d from the eye.
+func (f *Finder) edgeOn(e mesh.Edge, d exact.Vec, eye exact.Pt) bool {
+	return d.Cross(f.m.Tris[e.Tri()].P[e.Corner()].Sub(eye)) == 0
 }

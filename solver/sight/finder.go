@@ -79,7 +79,7 @@ func (f *Finder) Clipped(eye exact.Pt, height int32, c Clip) (*Region, error) {
 	if err := f.sweep(eye, height, c); err != nil {
 		return nil, err
 	}
-	f.assemble(eye, c)
+	f.assemble(eye, &c)
 	f.region.Expanded = f.count
 	return &f.region, nil
 }

@@ -43,28 +43,38 @@ type Region struct {
 	ring     []Vertex
 	kinds    []Kind
 	xy       [][2]float64 // offsets of the vertices from the eye
+	first    int          // index of the vertex that comes first
 }
 
 // Len returns the number of vertices.
 func (r *Region) Len() int { return len(r.ring) }
 
 // Vertex returns vertex i.
-func (r *Region) Vertex(i int) Vertex { return r.ring[i] }
+func (r *Region) Vertex(i int) Vertex { return r.ring[r.index(i)] }
 
 // Kind returns what the border from vertex i to the next one is.
-func (r *Region) Kind(i int) Kind { return r.kinds[i] }
+func (r *Region) Kind(i int) Kind { return r.kinds[r.index(i)] }
 
 // Point returns vertex i in grid units.
 func (r *Region) Point(i int) (x, y float64) {
-	return float64(r.Eye.X) + r.xy[i][0], float64(r.Eye.Y) + r.xy[i][1]
+	p := r.xy[r.index(i)]
+	return float64(r.Eye.X) + p[0], float64(r.Eye.Y) + p[1]
+}
+
+// index returns where vertex i is stored.
+func (r *Region) index(i int) int {
+	if i += r.first; i >= len(r.ring) {
+		i -= len(r.ring)
+	}
+	return i
 }
 
 // Area returns the area in grid units squared. The ring is star-shaped around the eye, so no term is negative and nothing
 // cancels.
 func (r *Region) Area() float64 {
 	sum := 0.0
-	for i, a := range r.xy {
-		b := r.xy[r.next(i)]
+	for i := range r.xy {
+		a, b := r.side(i)
 		sum += a[0]*b[1] - a[1]*b[0]
 	}
 	return sum / 2
@@ -73,22 +83,24 @@ func (r *Region) Area() float64 {
 // Lengths returns the length of the border by kind, in grid units, indexed by Kind.
 func (r *Region) Lengths() [3]float64 {
 	var sum [numKinds]float64
-	for i, a := range r.xy {
-		b := r.xy[r.next(i)]
-		sum[r.kinds[i]] += math.Hypot(b[0]-a[0], b[1]-a[1])
+	for i := range r.xy {
+		a, b := r.side(i)
+		sum[r.Kind(i)] += math.Hypot(b[0]-a[0], b[1]-a[1])
 	}
 	return sum
 }
 
-func (r *Region) next(i int) int {
-	if i+1 == len(r.xy) {
-		return 0
+// side returns the ends of the border from vertex i to the next one, as offsets from the eye.
+func (r *Region) side(i int) (a, b [2]float64) {
+	k := r.index(i)
+	if a = r.xy[k]; k+1 == len(r.xy) {
+		return a, r.xy[0]
 	}
-	return i + 1
+	return a, r.xy[k+1]
 }
 
 func (r *Region) reset(eye exact.Pt) {
-	r.Eye = eye
+	r.Eye, r.first = eye, 0
 	r.ring, r.kinds, r.xy = r.ring[:0], r.kinds[:0], r.xy[:0]
 }
 
@@ -99,18 +111,30 @@ func (r *Region) add(v Vertex, k Kind) {
 	r.xy = append(r.xy, [2]float64{x, y})
 }
 
-// canonical turns the ring so that it begins at its lowest left corner: the same region then has the same bits, however
-// the mesh under it came about.
+// addGrid adds a vertex on the grid, for which there is nothing to divide.
+func (r *Region) addGrid(p exact.Pt, k Kind) {
+	r.ring = append(r.ring, Vertex{At: p, Den: 1})
+	r.kinds = append(r.kinds, k)
+	r.xy = append(r.xy, [2]float64{float64(p.X - r.Eye.X), float64(p.Y - r.Eye.Y)})
+}
+
+// addRay adds the vertex at num/den of direction d from the eye.
+func (r *Region) addRay(d exact.Vec, num, den int64, k Kind) {
+	t := float64(num) / float64(den)
+	r.ring = append(r.ring, Vertex{r.Eye, d, num, den})
+	r.kinds = append(r.kinds, k)
+	r.xy = append(r.xy, [2]float64{t * float64(d.X), t * float64(d.Y)})
+}
+
+// canonical lets the ring begin at its lowest left corner: the same region then has the same bits, however the mesh under it
+// came about.
 func (r *Region) canonical() {
-	first := 0
+	r.first = 0
 	for i, p := range r.xy {
-		if q := r.xy[first]; p[0] < q[0] || p[0] == q[0] && p[1] < q[1] {
-			first = i
+		if q := r.xy[r.first]; p[0] < q[0] || p[0] == q[0] && p[1] < q[1] {
+			r.first = i
 		}
 	}
-	turn(r.ring, first)
-	turn(r.kinds, first)
-	turn(r.xy, first)
 }
 
 // turn rotates s so that element k comes first.
