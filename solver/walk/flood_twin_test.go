@@ -152,3 +152,13 @@ func floatsOf(pts []exact.Pt) [][2]float64 {
 	}
 	return list
 }
+
+// TestFloodTurnsBack walks along one side of a thin wall to its end and back along the other.
+func TestFloodTurnsBack(t *testing.T) {
+	m := build(t, "floor 0,0 10,0 10,10 0,10; wall 2,0 2,4 6,4; wall 3.5,0 3.5,2")
+	a, _ := both(t, m, at(1, 1), at(3, 1))
+	want := []exact.Pt{at(1, 1), at(2, 4), at(6, 4)}
+	if !near(a.Length, 10000*(math.Sqrt(10)+5.5)) || !slices.Equal(a.Turns, want) || !near(a.End[0], 45000) || !near(a.End[1], 40000) {
+		t.Errorf("%v over %v to %v", a.Length, a.Turns, a.End)
+	}
+}

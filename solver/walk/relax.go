@@ -57,13 +57,19 @@ func (f *Finder) chain(dst []exact.Pt, n int32, end exact.Pt) []exact.Pt {
 	dst = append(dst, end)
 	for ; n >= 0; n = f.nodes[n].parent {
 		p := f.nodes[n].at
-		if k := len(dst); k >= 2 && exact.Orient(dst[k-2], dst[k-1], p) == 0 {
+		if k := len(dst); k >= 2 && straight(dst[k-2], dst[k-1], p) {
 			dst[k-1] = p
 			continue
 		}
 		dst = append(dst, p)
 	}
 	return dst
+}
+
+// straight reports whether b lies on the way straight on from a to c. At the end of a thin wall a walk may turn straight
+// back, which is a turn.
+func straight(a, b, c exact.Pt) bool {
+	return exact.Orient(a, b, c) == 0 && b.Sub(a).Dot(c.Sub(b)) > 0
 }
 
 // compareWalks orders walks given backwards from a common end: fewer turns first, then by their points from the start on.
@@ -132,7 +138,8 @@ func (f *Finder) turnsTo(dst []exact.Pt, n int32, end [2]float64) []exact.Pt {
 	if k.parent >= 0 {
 		// The offset is measured, so whether the last bend is one is, too: a bend of less than 2^-40 is none.
 		cross := float64(k.toward.X)*end[1] - float64(k.toward.Y)*end[0]
-		if math.Abs(cross) <= 0x1p-40*math.Hypot(end[0], end[1])*math.Sqrt(float64(k.toward.Len2())) {
+		dot := float64(k.toward.X)*end[0] + float64(k.toward.Y)*end[1]
+		if end == [2]float64{} || dot > 0 && math.Abs(cross) <= 0x1p-40*math.Hypot(end[0], end[1])*math.Sqrt(float64(k.toward.Len2())) {
 			return f.chain(dst, k.parent, k.at)[1:]
 		}
 	}
