@@ -154,3 +154,9 @@ func (s *Session) tell() {
 		s.changed(s.rev, s.Plan())
 	}
 }
+
+// Listen makes changed the function that is told of changes, and tells it at once.
+func (s *Session) Listen(changed func(rev uint64, p *plan.Plan)) {
+	s.changed = changed
+	s.tell()
+}

@@ -139,3 +139,34 @@ func InBox(p *plan.Plan, a, b exact.Pt) []plan.Ref {
 	}
 	return out
 }
+
+// Points returns the points that make an item: its line or ring, or its place. Openings and what is not in the plan have
+// none.
+func Points(p *plan.Plan, r plan.Ref) (plan.Chain, bool) {
+	switch r.Kind {
+	case plan.KindObserver:
+		if o, ok := p.Observer(r.ID); ok {
+			return plan.ChainOf(o.At), true
+		}
+	case plan.KindTarget:
+		if t, ok := p.Target(r.ID); ok {
+			return plan.ChainOf(t.At), true
+		}
+	case plan.KindStart:
+		if t, ok := p.Start(r.ID); ok {
+			return plan.ChainOf(t.At), true
+		}
+	case plan.KindBlock:
+		for _, b := range p.Blocks() {
+			if b.ID == r.ID {
+				return b.Ring, b.Ring.Len() > 0
+			}
+		}
+	}
+	for s := range shapes(p) {
+		if s.ref == r {
+			return s.pts, s.pts.Len() > 0
+		}
+	}
+	return plan.Chain{}, false
+}
