@@ -45,7 +45,7 @@ func hotPixels(segs []Segment, c *cells) []exact.Pt {
 			}
 		}
 	}
-	slices.Sort(keys)
+	exact.SortKeys(keys, make([]uint64, len(keys)))
 	keys = slices.Compact(keys)
 	pts := make([]exact.Pt, len(keys))
 	for i, k := range keys {
@@ -142,54 +142,76 @@ func passing(segs []Segment, c *cells, hot []exact.Pt) []pass {
 		fill[f.seg]++
 	}
 	for s := range segs {
+		list := out[start[s]:start[s+1]]
 		a, d := segs[s].A, segs[s].B.Sub(segs[s].A)
-		slices.SortFunc(out[start[s]:start[s+1]], func(p, q pass) int {
+		if len(list) == 2 { // its ends
+			if hot[list[0].pt] != a {
+				list[0], list[1] = list[1], list[0]
+			}
+			continue
+		}
+		slices.SortFunc(list, func(p, q pass) int {
 			return cmp.Compare(hot[p.pt].Sub(a).Dot(d), hot[q.pt].Sub(a).Dot(d))
 		})
 	}
 	return out
 }
 
-// link is one rounded piece of a segment: from point a to point b, a before b.
+// link is one rounded piece of a segment: from its point to the point b, which comes after it.
 type link struct {
-	ends uint64 // a, b packed
+	b    int32
 	seg  int32
-	back bool // the segment runs from b to a
+	back bool // the segment runs from b to the point
 }
 
-// merge makes the edges: the pieces between consecutive hot pixels, those with the same ends made one.
+// merge makes the edges: the pieces between consecutive hot pixels, those with the same ends made one. The pieces are
+// gathered by their first point; few share one. O(n).
 func (g *Graph) merge(segs []Segment, passes []pass) {
-	links := make([]link, 0, len(passes))
-	for i := 1; i < len(passes); i++ {
-		p, q := passes[i-1], passes[i]
-		if p.seg != q.seg {
-			continue
-		}
-		if p.pt < q.pt {
-			links = append(links, link{uint64(p.pt)<<32 | uint64(q.pt), p.seg, false})
-		} else {
-			links = append(links, link{uint64(q.pt)<<32 | uint64(p.pt), p.seg, true})
-		}
+	start := make([]int32, len(g.Pts)+1)
+	eachLink(passes, func(a int32, _ link) { start[a+1]++ })
+	for i := 1; i < len(start); i++ {
+		start[i] += start[i-1]
 	}
-	slices.SortFunc(links, func(l, m link) int {
-		return cmp.Or(cmp.Compare(l.ends, m.ends), cmp.Compare(l.seg, m.seg))
+	links := make([]link, start[len(g.Pts)])
+	fill := slices.Clone(start[:len(g.Pts)])
+	eachLink(passes, func(a int32, l link) {
+		links[fill[a]] = l
+		fill[a]++
 	})
 	g.Edges = make([]Edge, 0, len(links))
 	g.Winds = make([]Wind, 0, len(links))
-	for i := 0; i < len(links); {
-		j := i + 1
-		for j < len(links) && links[j].ends == links[i].ends {
-			j++
+	for a := range g.Pts {
+		list := links[start[a]:start[a+1]]
+		slices.SortStableFunc(list, func(l, m link) int { return cmp.Compare(l.b, m.b) })
+		for i := 0; i < len(list); {
+			j := i + 1
+			for j < len(list) && list[j].b == list[i].b {
+				j++
+			}
+			g.mergeLinks(int32(a), segs, list[i:j])
+			i = j
 		}
-		g.Edges = append(g.Edges, g.mergeLinks(segs, links[i:j]))
-		i = j
 	}
 }
 
-// mergeLinks makes one edge of the pieces that share both ends: it stops what any of them stops, and the windings of one
-// body add up.
-func (g *Graph) mergeLinks(segs []Segment, links []link) Edge {
-	e := Edge{A: int32(links[0].ends >> 32), B: int32(uint32(links[0].ends)), Wind0: int32(len(g.Winds)), Item: segs[links[0].seg].Item}
+// eachLink calls f with every piece and the one of its ends that comes first.
+func eachLink(passes []pass, f func(a int32, l link)) {
+	for i := 1; i < len(passes); i++ {
+		p, q := passes[i-1], passes[i]
+		switch {
+		case p.seg != q.seg:
+		case p.pt < q.pt:
+			f(p.pt, link{q.pt, p.seg, false})
+		default:
+			f(q.pt, link{p.pt, p.seg, true})
+		}
+	}
+}
+
+// mergeLinks appends the one edge that the pieces from point a to one other make: it stops what any of them stops, and the
+// windings of one body add up.
+func (g *Graph) mergeLinks(a int32, segs []Segment, links []link) {
+	e := Edge{A: a, B: links[0].b, Wind0: int32(len(g.Winds)), Item: segs[links[0].seg].Item}
 	for _, l := range links {
 		s := &segs[l.seg]
 		e.Walk = e.Walk || s.Walk
@@ -206,7 +228,7 @@ func (g *Graph) mergeLinks(segs []Segment, links []link) Edge {
 	kept := slices.DeleteFunc(g.Winds[e.Wind0:], func(w Wind) bool { return w.Delta == 0 })
 	g.Winds = g.Winds[:int(e.Wind0)+len(kept)]
 	e.Wind1 = int32(len(g.Winds))
-	return e
+	g.Edges = append(g.Edges, e)
 }
 
 func (g *Graph) addWind(from int, w Wind) {

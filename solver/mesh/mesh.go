@@ -122,11 +122,14 @@ func (m *Mesh) makeSteps() {
 
 func merge(a, b Tag) Tag { return Tag{max(a.Top, b.Top), a.Walk || b.Walk} }
 
-// layout orders the triangles along the points' order of insertion curve, so that neighbours lie near each other in
+// layout orders the triangles along the curve through the points, so that neighbours lie near each other in
 // memory: order[k] is the old index of triangle k, place the inverse. O(n) by counting.
 func (tr *Triangulation) layout() (order, place []int32) {
 	key := make([]int32, len(tr.tris))
-	along := curveRank(tr.Pts)
+	along := make([]int32, len(tr.Pts))
+	for r, p := range tr.curve {
+		along[p] = int32(r)
+	}
 	count := make([]int32, len(tr.Pts)+1)
 	for t := range tr.tris {
 		v := tr.tris[t].v

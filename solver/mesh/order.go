@@ -1,25 +1,45 @@
 package mesh
 
 import (
-	"slices"
+	"math/bits"
 
 	"enfilade/solver/exact"
 )
 
-// insertionOrder returns the indices of pts in the order in which they are to be inserted: rounds of doubling size chosen
-// by a hash of the coordinates, so that the expected number of flips stays constant, and each round along a Hilbert curve,
-// so that the walk to the next point is short. It depends on the points alone. O(n log n).
-func insertionOrder(pts []exact.Pt) []int32 {
+// curveOrder returns the indices of pts in their order along a Hilbert curve. O(n).
+func curveOrder(pts []exact.Pt) []int32 {
 	lo, shift := curveFrame(pts)
-	keys := make([]uint64, len(pts))
+	keys := make([]uint64, 2*len(pts))
+	keys, tmp := keys[:len(pts)], keys[len(pts):]
 	for i, p := range pts {
-		round := uint64(trailingRound(hash(p)))
-		keys[i] = (^round&7)<<61 | uint64(hilbert(uint32(p.X-lo.X)>>shift, uint32(p.Y-lo.Y)>>shift))<<29 | uint64(i)
+		keys[i] = uint64(hilbert(uint32(p.X-lo.X)>>shift, uint32(p.Y-lo.Y)>>shift))<<32 | uint64(i)
 	}
-	slices.Sort(keys)
+	exact.SortKeys(keys, tmp)
 	order := make([]int32, len(pts))
 	for i, k := range keys {
-		order[i] = int32(k & (1<<29 - 1))
+		order[i] = int32(uint32(k))
+	}
+	return order
+}
+
+// insertionOrder returns the order in which pts, given along a curve, are to be inserted: rounds of doubling size chosen by a
+// hash of the coordinates, so that the expected number of flips stays constant, and each round along the curve, so that the
+// walk to the next point is short. It depends on the points alone. O(n).
+func insertionOrder(pts []exact.Pt, curve []int32) []int32 {
+	var next [rounds]int32 // where the next point of each round goes; the last round, of half the points, is round 0
+	for _, p := range pts {
+		next[round(hash(p))]++
+	}
+	for r, sum := rounds-1, int32(0); r >= 0; r-- {
+		next[r], sum = sum, sum+next[r]
+	}
+	order := make([]int32, len(pts))
+	for _, i := range curve {
+		if int(i) < len(pts) { // not a corner of the box
+			r := round(hash(pts[i]))
+			order[next[r]] = i
+			next[r]++
+		}
 	}
 	return order
 }
@@ -40,15 +60,12 @@ func curveFrame(pts []exact.Pt) (lo exact.Pt, shift uint) {
 	return lo, shift
 }
 
-// trailingRound counts the trailing zero bits of h, at most 7: half of all points are of round 0, a quarter of round 1.
-func trailingRound(h uint32) int {
-	r := 0
-	for h&1 == 0 && r < 7 {
-		h >>= 1
-		r++
-	}
-	return r
-}
+// rounds is the number of rounds of insertion.
+const rounds = 12
+
+// round counts the trailing zero bits of h, below rounds: half of all points are of round 0, which comes last, a quarter of
+// round 1, which comes before it, and so on.
+func round(h uint32) int { return min(bits.TrailingZeros32(h), rounds-1) }
 
 // hash mixes the coordinates of p (constants of the finaliser of MurmurHash3, Appleby, public domain).
 func hash(p exact.Pt) uint32 {
@@ -80,19 +97,4 @@ func hilbert(x, y uint32) uint32 {
 		}
 	}
 	return d
-}
-
-// curveRank returns the position of each point along a Hilbert curve through all of them.
-func curveRank(pts []exact.Pt) []int32 {
-	lo, shift := curveFrame(pts)
-	keys := make([]uint64, len(pts))
-	for i, p := range pts {
-		keys[i] = uint64(hilbert(uint32(p.X-lo.X)>>shift, uint32(p.Y-lo.Y)>>shift))<<32 | uint64(i)
-	}
-	slices.Sort(keys)
-	rank := make([]int32, len(pts))
-	for r, k := range keys {
-		rank[uint32(k)] = int32(r)
-	}
-	return rank
 }

@@ -45,12 +45,12 @@ var ErrCrossing = errors.New("mesh: edges cross or pass through a point")
 
 // Triangulation is a constrained Delaunay triangulation under construction.
 type Triangulation struct {
-	Pts  []exact.Pt // the given points, then the four corners of the box around them
-	tris []rawTri
-	rank []int32 // position of each point in the order of insertion
-	out  []Edge  // some half-edge leaving each point
-	todo []Edge  // stack of edges to examine
-	work []([2]int32)
+	Pts   []exact.Pt // the given points, then the four corners of the box around them
+	tris  []rawTri
+	curve []int32 // the points in their order along a curve
+	out   []Edge  // some half-edge leaving each point
+	todo  []Edge  // stack of edges to examine
+	work  []([2]int32)
 }
 
 // rawTri is a triangle: its corners, the twins of its three half-edges, and the constraint on each, or -1.
@@ -105,13 +105,12 @@ func (tr *Triangulation) insertAll(ctx context.Context, n int) error {
 	tr.tris = append(tr.tris,
 		rawTri{[3]int32{a, b, c}, [3]Edge{None, None, EdgeOf(1, 0)}, free},
 		rawTri{[3]int32{a, c, d}, [3]Edge{EdgeOf(0, 2), None, None}, free})
-	tr.rank = make([]int32, n+4)
+	tr.curve = curveOrder(tr.Pts)
 	last := int32(0)
-	for i, p := range insertionOrder(tr.Pts[:n]) {
+	for i, p := range insertionOrder(tr.Pts[:n], tr.curve) {
 		if i&1023 == 0 && ctx.Err() != nil {
 			return ctx.Err()
 		}
-		tr.rank[p] = int32(i)
 		t, on, ok := tr.walk(last, tr.Pts[p])
 		if !ok {
 			return fmt.Errorf("mesh: point %v twice or outside the box", tr.Pts[p])
@@ -123,9 +122,6 @@ func (tr *Triangulation) insertAll(ctx context.Context, n int) error {
 		}
 		tr.legalise(p)
 		last = int32(len(tr.tris) - 1)
-	}
-	for k := range 4 {
-		tr.rank[n+k] = int32(n + k)
 	}
 	return nil
 }
