@@ -136,7 +136,7 @@ func (f *Finder) sweepStarts(eye exact.Pt, height int32, sector *[2]exact.Vec) {
 				continue
 			}
 		}
-		if s.broken && (sector == nil || len(f.hits) > 0) {
+		if s.broken && (sector == nil || len(f.hits) > 0 && r == s.r) {
 			f.hits = append(f.hits, hit{in: breakEdge})
 		}
 		if s.spoke != mesh.None && r == s.r {

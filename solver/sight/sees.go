@@ -28,14 +28,18 @@ func (f *Finder) SeesWithin(a, b exact.Pt, height int32, c Clip) bool {
 		if s.r.Cross(d) < 0 || d.Cross(s.l) < 0 {
 			continue
 		}
-		r, l, ok := s.r, s.l, true
-		if c.Sides { // a sliver of the view without width sees nothing
-			if r, l, ok = clipCone(s.r, s.l, c.Right, c.Mid); !ok || r.Cross(d) < 0 || d.Cross(l) < 0 {
-				r, l, ok = clipCone(s.r, s.l, c.Mid, c.Left)
+		if !c.Sides {
+			if f.reaches(s.edge, s.r, s.l, a, b, height) {
+				return true
 			}
+			continue
 		}
-		if ok && r.Cross(d) >= 0 && d.Cross(l) >= 0 && f.reaches(s.edge, r, l, a, b, height) {
-			return true
+		// Straight ahead, b may be seen by one half of the view only. A sliver of the view without width sees nothing.
+		for _, half := range [2][2]exact.Vec{{c.Right, c.Mid}, {c.Mid, c.Left}} {
+			r, l, ok := clipCone(s.r, s.l, half[0], half[1])
+			if ok && r.Cross(d) >= 0 && d.Cross(l) >= 0 && f.reaches(s.edge, r, l, a, b, height) {
+				return true
+			}
 		}
 	}
 	return false
