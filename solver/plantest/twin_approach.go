@@ -23,14 +23,16 @@ type front struct {
 }
 
 // Approach returns the shortest walk from s to the region of places that see t in the plane of an eye at a height.
+func (w *Twin) Approach(s, t exact.Pt, eye int32) Approach { return w.ApproachTo(s, w.Region(t, eye)) }
+
+// ApproachTo returns the shortest walk from s to a region.
 //
-// Places are points with a sector. A place sees t when the region holds points next to it within its own sector, so the
+// Places are points with a sector. A place sees the target when the region holds points next to it within its own sector, so the
 // back of a wall whose front is seen does not. The region is entered over its border where that does not run along
 // something that stops walking; such a stretch, cut where edges that stop walking meet it, is a [front]. The last leg of a
 // shortest walk ends at a front's end or square to it: were its end decided by what stands in the way, the walk would
 // bend there and the corner would be the better last point. Every corner is tried with every front.
-func (w *Twin) Approach(s, t exact.Pt, eye int32) Approach {
-	r := w.Region(t, eye)
+func (w *Twin) ApproachTo(s exact.Pt, r *Region) Approach {
 	f := w.flood(s)
 	best := Approach{Walk: Walk{Length: math.Inf(1)}}
 	for i, p := range f.places {

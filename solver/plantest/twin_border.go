@@ -7,10 +7,21 @@ import (
 	"enfilade/solver/exact"
 )
 
+// Kind says what a piece of a region's border is.
+type Kind uint8
+
+// The kinds of border.
+const (
+	OnWall    Kind = iota // on something that stops sight
+	Occluding             // the floor goes on behind it
+	OnSide                // on a side of the view
+	kinds
+)
+
 // Piece is a straight piece of a region's border.
 type Piece struct {
 	A, B Spot
-	Wall bool // it runs on something that stops sight; else the floor goes on behind it
+	Kind Kind
 }
 
 // border finds the pieces of a region's border: the far side of every gap, and along each critical direction the stretch
@@ -18,7 +29,7 @@ type Piece struct {
 //
 // The pieces are in order and run counter-clockwise. A stretch along a direction is wall where an edge that stops sight runs along it (a face or a thin wall seen edge-on, with the region
 // on one side of it) and occluding elsewhere. Where the region lies on both sides there is no border, wall or not.
-func (w *Twin) border(r *Region, height int32) {
+func (w *Twin) border(r *Region, height int32, v *View) {
 	zero := new(big.Rat)
 	for i, g := range r.Gaps {
 		before := r.Gaps[(i+len(r.Gaps)-1)%len(r.Gaps)]
@@ -29,14 +40,18 @@ func (w *Twin) border(r *Region, height int32) {
 		if g.Edge < 0 {
 			to = zero
 		}
+		open := Occluding
+		if v.side(g.D1) {
+			open = OnSide
+		}
 		switch from.Cmp(to) {
 		case -1:
-			r.Border = append(r.Border, w.alongRay(r.Eye, g.D1, from, to, height)...)
+			r.Border = append(r.Border, w.alongRay(r.Eye, g.D1, from, to, height, open)...)
 		case 1:
-			r.Border = append(r.Border, reversed(w.alongRay(r.Eye, g.D1, to, from, height))...)
+			r.Border = append(r.Border, reversed(w.alongRay(r.Eye, g.D1, to, from, height, open))...)
 		}
 		if g.Edge >= 0 {
-			r.Border = append(r.Border, Piece{g.P1, g.P2, true})
+			r.Border = append(r.Border, Piece{g.P1, g.P2, OnWall})
 		}
 	}
 }
@@ -50,8 +65,9 @@ func reversed(pieces []Piece) []Piece {
 	return pieces
 }
 
-// alongRay returns the border from eye + lo d to eye + hi d, cut where walls run along it.
-func (w *Twin) alongRay(eye exact.Pt, d exact.Vec, lo, hi *big.Rat, height int32) []Piece {
+// alongRay returns the border from eye + lo d to eye + hi d, cut where walls run along it; where none does it is of the
+// kind open.
+func (w *Twin) alongRay(eye exact.Pt, d exact.Vec, lo, hi *big.Rat, height int32, open Kind) []Piece {
 	type stretch struct{ from, to *big.Rat }
 	var walls []stretch
 	for i, e := range w.g.Edges {
@@ -67,9 +83,9 @@ func (w *Twin) alongRay(eye exact.Pt, d exact.Vec, lo, hi *big.Rat, height int32
 	}
 	slices.SortFunc(walls, func(a, b stretch) int { return a.from.Cmp(b.from) })
 	var pieces []Piece
-	add := func(from, to *big.Rat, wall bool) {
+	add := func(from, to *big.Rat, k Kind) {
 		if from.Cmp(to) < 0 {
-			pieces = append(pieces, Piece{spotAt(eye, d, from), spotAt(eye, d, to), wall})
+			pieces = append(pieces, Piece{spotAt(eye, d, from), spotAt(eye, d, to), k})
 		}
 	}
 	at := lo
@@ -82,12 +98,12 @@ func (w *Twin) alongRay(eye exact.Pt, d exact.Vec, lo, hi *big.Rat, height int32
 			to = hi
 		}
 		if from.Cmp(to) < 0 {
-			add(at, from, false)
-			add(from, to, true)
+			add(at, from, open)
+			add(from, to, OnWall)
 			at = to
 		}
 	}
-	add(at, hi, false)
+	add(at, hi, open)
 	return pieces
 }
 
@@ -97,7 +113,7 @@ func (r *Region) Ring() []Piece {
 	ring := slices.Clone(r.Border)
 	goOn := func(p, q Piece) bool {
 		d, e := p.A.arrow(p.B), q.A.arrow(q.B)
-		return p.Wall == q.Wall && d.same(e)
+		return p.Kind == q.Kind && d.same(e)
 	}
 	for i := 0; i < len(ring) && len(ring) > 1; {
 		next := (i + 1) % len(ring)
@@ -114,16 +130,11 @@ func (r *Region) Ring() []Piece {
 	return ring
 }
 
-// WallLength and OccludingLength return the two parts of the border's length, in grid units.
-func (r *Region) WallLength() float64      { return r.length(true) }
-func (r *Region) OccludingLength() float64 { return r.length(false) }
-
-func (r *Region) length(wall bool) float64 {
-	sum := 0.0
+// Lengths returns the border's length by kind, in grid units.
+func (r *Region) Lengths() [3]float64 {
+	var sum [kinds]float64
 	for _, p := range r.Border {
-		if p.Wall == wall {
-			sum += dist(p.A, p.B)
-		}
+		sum[p.Kind] += dist(p.A, p.B)
 	}
 	return sum
 }

@@ -28,20 +28,51 @@ type Region struct {
 // The critical directions are those to every point of the graph. Between two of them every ray meets the same edges in
 // the same order, so one ray decides. An eye on an edge or a point of the graph is no special case: what it stands on is
 // met at distance zero and does not count, and a gap that begins in something solid sees nothing.
-func (w *Twin) Region(eye exact.Pt, height int32) *Region {
+func (w *Twin) Region(eye exact.Pt, height int32) *Region { return w.RegionWithin(eye, height, nil) }
+
+// RegionWithin is Region within a view.
+func (w *Twin) RegionWithin(eye exact.Pt, height int32, v *View) *Region {
 	r := &Region{Eye: eye}
-	dirs := w.criticalDirections(eye)
+	dirs := w.criticalDirections(eye, v)
 	for i, d := range dirs {
-		r.Gaps = append(r.Gaps, w.gap(eye, d, dirs[(i+1)%len(dirs)], height))
+		next := dirs[(i+1)%len(dirs)]
+		if v.holds(d, next) {
+			r.Gaps = append(r.Gaps, w.gap(eye, d, next, height))
+		} else {
+			r.Gaps = append(r.Gaps, blind(eye, d, next))
+		}
 	}
-	w.border(r, height)
+	w.border(r, height, v)
 	return r
 }
 
-// criticalDirections returns the directions from eye to all points of the graph and along the axes, each once, in
-// counter-clockwise order. The axes keep every gap to a quarter turn at most.
-func (w *Twin) criticalDirections(eye exact.Pt) []exact.Vec {
+// View is the sweep from Right over Mid to Left, counter-clockwise, no two neighbours more than half a turn apart. The nil
+// View is all round.
+type View struct{ Right, Mid, Left exact.Vec }
+
+// holds reports whether a gap between neighbouring critical directions lies in the view.
+func (v *View) holds(d1, d2 exact.Vec) bool {
+	if v == nil {
+		return true
+	}
+	inside := func(r, l exact.Vec) bool {
+		return r.Cross(d1)+r.Cross(d2) > 0 && d1.Cross(l)+d2.Cross(l) > 0
+	}
+	return inside(v.Right, v.Mid) || inside(v.Mid, v.Left)
+}
+
+// side reports whether a direction is a side of the view.
+func (v *View) side(d exact.Vec) bool {
+	return v != nil && (compareAngles(d, v.Right) == 0 || compareAngles(d, v.Left) == 0)
+}
+
+// criticalDirections returns the directions from eye to all points of the graph, along the sides of the view and along
+// the axes, each once, in counter-clockwise order. The axes keep every gap to a quarter turn at most.
+func (w *Twin) criticalDirections(eye exact.Pt, v *View) []exact.Vec {
 	dirs := []exact.Vec{{X: 1}, {Y: 1}, {X: -1}, {Y: -1}}
+	if v != nil {
+		dirs = append(dirs, v.Right, v.Mid, v.Left)
+	}
 	for _, p := range w.g.Pts {
 		if p != eye {
 			dirs = append(dirs, p.Sub(eye))
@@ -53,7 +84,7 @@ func (w *Twin) criticalDirections(eye exact.Pt) []exact.Vec {
 
 // gap finds what is seen between two neighbouring critical directions, along the ray d1 + d2.
 func (w *Twin) gap(eye exact.Pt, d1, d2 exact.Vec, height int32) Gap {
-	g := Gap{D1: d1, D2: d2, Edge: -1, K1: new(big.Rat), K2: new(big.Rat), P1: SpotOf(eye), P2: SpotOf(eye)}
+	g := blind(eye, d1, d2)
 	first, firstBlock := int32(-1), int32(-1)
 	var kFirst, kBlock *big.Rat
 	for i := range w.g.Edges {
@@ -75,6 +106,11 @@ func (w *Twin) gap(eye exact.Pt, d1, d2 exact.Vec, height int32) Gap {
 	g.K1, g.K2 = w.reach(eye, d1, firstBlock), w.reach(eye, d2, firstBlock)
 	g.P1, g.P2 = spotAt(eye, d1, g.K1), spotAt(eye, d2, g.K2)
 	return g
+}
+
+// blind returns a gap in which nothing is seen.
+func blind(eye exact.Pt, d1, d2 exact.Vec) Gap {
+	return Gap{D1: d1, D2: d2, Edge: -1, K1: new(big.Rat), K2: new(big.Rat), P1: SpotOf(eye), P2: SpotOf(eye)}
 }
 
 // meet returns k > 0 such that eye + k (d1 + d2) lies on edge i, or nil. As no end of the edge lies in the gap, the ray

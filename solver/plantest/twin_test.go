@@ -71,10 +71,10 @@ func TestTwinRegionByHand(t *testing.T) {
 		if got, _ := r.ExactArea().Float64(); !near(got, r.Area()) {
 			t.Errorf("%s: exact area %v beside %v", c.name, got, r.Area())
 		}
-		if got := r.WallLength() / 1e4; !near(got, c.wall) {
+		if got := r.Lengths()[plantest.OnWall] / 1e4; !near(got, c.wall) {
 			t.Errorf("%s: wall %v, want %v", c.name, got, c.wall)
 		}
-		if got := r.OccludingLength() / 1e4; !near(got, c.occluding) {
+		if got := r.Lengths()[plantest.Occluding] / 1e4; !near(got, c.occluding) {
 			t.Errorf("%s: occluding %v, want %v", c.name, got, c.occluding)
 		}
 	}

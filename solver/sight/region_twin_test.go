@@ -85,10 +85,10 @@ func TestRegionAgainstTwin(t *testing.T) {
 }
 
 func sameRegion(t *rapid.T, got *sight.Region, want *plantest.Region) {
-	l := got.Lengths()
-	if !near(got.Area(), want.Area()) || !near(l[sight.Wall], want.WallLength()) || !near(l[sight.Occluding], want.OccludingLength()) {
-		t.Errorf("area, wall, occluding: %v %v %v, want %v %v %v", got.Area(), l[sight.Wall], l[sight.Occluding],
-			want.Area(), want.WallLength(), want.OccludingLength())
+	l, k := got.Lengths(), want.Lengths()
+	if !near(got.Area(), want.Area()) || !near(l[sight.Wall], k[plantest.OnWall]) ||
+		!near(l[sight.Occluding], k[plantest.Occluding]) || !near(l[sight.ClipSide], k[plantest.OnSide]) {
+		t.Errorf("area %v, border by kind %v, want %v, %v", got.Area(), l, want.Area(), k)
 	}
 	exactly, _ := want.ExactArea().Float64()
 	if !near(exactly, want.Area()) {
@@ -97,21 +97,23 @@ func sameRegion(t *rapid.T, got *sight.Region, want *plantest.Region) {
 	var fast, slow []corner
 	for i := range got.Len() {
 		x, y := got.Point(i)
-		fast = append(fast, corner{x, y, got.Kind(i) == sight.Wall})
+		fast = append(fast, corner{x, y, kindOf[got.Kind(i)]})
 	}
 	for _, p := range want.Ring() {
 		x, y := p.A.Float()
-		slow = append(slow, corner{x, y, p.Wall})
+		slow = append(slow, corner{x, y, p.Kind})
 	}
 	if !sameRing(fast, slow) {
 		t.Errorf("ring %v, want %v", fast, slow)
 	}
 }
 
-// corner is a corner of a ring, and whether the piece that begins there is wall.
+var kindOf = map[sight.Kind]plantest.Kind{sight.Wall: plantest.OnWall, sight.Occluding: plantest.Occluding, sight.ClipSide: plantest.OnSide}
+
+// corner is a corner of a ring, and the kind of the piece that begins there.
 type corner struct {
 	x, y float64
-	wall bool
+	kind plantest.Kind
 }
 
 // sameRing reports whether two rings run through the same corners, wherever they begin.
@@ -123,13 +125,60 @@ func sameRing(a, b []corner) bool {
 		ok := true
 		for i, p := range a {
 			q := b[(i+shift)%len(b)]
-			ok = ok && math.Abs(p.x-q.x) < 1e-6 && math.Abs(p.y-q.y) < 1e-6 && p.wall == q.wall
+			ok = ok && math.Abs(p.x-q.x) < 1e-6 && math.Abs(p.y-q.y) < 1e-6 && p.kind == q.kind
 		}
 		if ok {
 			return true
 		}
 	}
 	return false
+}
+
+// views draws a view by angles, or the front of one of the graph's edges, at whose middle or ends the eye may well stand.
+func views(t *rapid.T, g *arrange.Graph) sight.Clip {
+	if rapid.Bool().Draw(t, "front") {
+		e := g.Edges[rapid.IntRange(0, len(g.Edges)-1).Draw(t, "edge")]
+		a, b := g.Pts[e.A], g.Pts[e.B]
+		if rapid.Bool().Draw(t, "back") {
+			a, b = b, a
+		}
+		return sight.Front(a, b)
+	}
+	heading := 15 * rapid.IntRange(0, 23).Draw(t, "heading")
+	return sight.View(float64(heading), float64(rapid.SampledFrom([]int{1, 30, 45, 90, 180, 270, 359}).Draw(t, "view")))
+}
+
+// TestClippedAgainstTwin holds regions within a view, and sight within it, against the twin.
+func TestClippedAgainstTwin(t *testing.T) {
+	for name, plans := range tangles {
+		t.Run(name, rapid.MakeCheck(func(t *rapid.T) {
+			p := plans.Draw(t, "plan")
+			t.Log(plantest.Text(p))
+			g, m := graphAndMesh(t, p)
+			twin, fast := plantest.NewTwin(g), sight.New(m)
+			at := places(p, g)
+			height := heights.Draw(t, "height")
+			for range 4 {
+				eye := at[rapid.IntRange(0, len(at)-1).Draw(t, "eye")]
+				c := views(t, g)
+				t.Logf("eye %v, height %v, view %+v", eye, height, c)
+				want := twin.RegionWithin(eye, height, &plantest.View{Right: c.Right, Mid: c.Mid, Left: c.Left})
+				got, err := fast.Clipped(eye, height, c)
+				if (err != nil) != want.Empty() {
+					t.Fatalf("fast says %v, the twin's region is empty: %v", err, want.Empty())
+				}
+				if err != nil {
+					continue
+				}
+				sameRegion(t, got, want)
+				for _, b := range at {
+					if got, want := fast.SeesWithin(eye, b, height, c), want.Holds(b); got != want {
+						t.Errorf("%v sees %v: %v, want %v", eye, b, got, want)
+					}
+				}
+			}
+		}))
+	}
 }
 
 // TestSeesAgainstTwin asks both solvers who sees whom, for every pair of a few places.
