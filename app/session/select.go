@@ -14,7 +14,7 @@ func (s *Session) Selection() []plan.Ref { return s.selected }
 func (s *Session) Select(refs ...plan.Ref) {
 	var sel []plan.Ref
 	for _, r := range refs {
-		if !slices.Contains(sel, r) && has(s.Plan(), r) {
+		if !slices.Contains(sel, r) && s.Plan().Has(r) {
 			sel = append(sel, r)
 		}
 	}
@@ -55,20 +55,4 @@ func each[T any](list iter.Seq2[int, T], kind plan.Kind, id func(T) string, yiel
 		}
 	}
 	return true
-}
-
-// has reports whether p has the item; the floor counts when the plan gives one.
-func has(p *plan.Plan, r plan.Ref) bool {
-	switch r.Kind {
-	case plan.KindFloor:
-		return p.Floor().Len() > 0
-	case plan.KindWalker, plan.KindPlan:
-		return true
-	}
-	for q := range All(p) {
-		if q == r {
-			return true
-		}
-	}
-	return false
 }

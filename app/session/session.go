@@ -6,14 +6,6 @@ import (
 	"enfilade/solver/plan"
 )
 
-// Edit is one change of a plan, as a value.
-type Edit interface {
-	// Label names the edit for the menu, in lower case: "move wall".
-	Label() string
-	// Apply returns the changed plan, which shares every part the edit does not touch.
-	Apply(*plan.Plan) (*plan.Plan, error)
-}
-
 // Session is one open plan. It is made by [New] and used from one goroutine only.
 type Session struct {
 	history  history
@@ -66,7 +58,7 @@ func (s *Session) Rev() uint64 { return s.rev }
 
 // Preview shows e applied to the committed plan, so a long drag does not drift. An edit that cannot be applied leaves what
 // was shown and returns its error.
-func (s *Session) Preview(e Edit) error {
+func (s *Session) Preview(e plan.Edit) error {
 	next, err := e.Apply(s.history.plan())
 	if err != nil {
 		return err
@@ -84,7 +76,7 @@ func (s *Session) Preview(e Edit) error {
 
 // Do applies e to the committed plan as one step of the history; a preview ends. An edit that changes nothing makes no
 // step. On an error the preview ends and the committed plan stays.
-func (s *Session) Do(e Edit) error {
+func (s *Session) Do(e plan.Edit) error {
 	shown := s.Plan()
 	s.preview = nil
 	next, err := e.Apply(s.history.plan())
@@ -144,7 +136,7 @@ func (s *Session) settle(shown *plan.Plan) {
 	if s.Plan() == shown {
 		return
 	}
-	s.selected = slices.DeleteFunc(s.selected, func(r plan.Ref) bool { return !has(s.Plan(), r) })
+	s.selected = slices.DeleteFunc(s.selected, func(r plan.Ref) bool { return !s.Plan().Has(r) })
 	s.tell()
 }
 

@@ -33,20 +33,20 @@ type same struct{}
 
 func (same) Label() string                          { return "nothing" }
 func (same) Apply(p *plan.Plan) (*plan.Plan, error) { return p, nil }
-func addObserver(id string, x int32) session.Edit {
+func addObserver(id string, x int32) plan.Edit {
 	return edit{"add " + id, func(p *plan.Parts) error {
 		p.Observers = append(p.Observers, plan.Observer{ID: id, At: exact.Pt{X: x}})
 		return nil
 	}}
 }
 
-func dropAll() session.Edit {
+func dropAll() plan.Edit {
 	return edit{"drop all", func(p *plan.Parts) error { p.Observers = nil; return nil }}
 }
 
 var errNo = errors.New("no")
 
-func failing() session.Edit { return edit{"fail", func(*plan.Parts) error { return errNo }} }
+func failing() plan.Edit { return edit{"fail", func(*plan.Parts) error { return errNo }} }
 
 // model is the obvious session: two stacks.
 type model struct {
@@ -104,7 +104,7 @@ func TestSessionLaws(t *testing.T) {
 		})
 		m := &model{committed: s.Plan(), shown: s.Plan(), saved: s.Plan()}
 		n := int32(0)
-		next := func() session.Edit { n++; return addObserver(fmt.Sprintf("O%d", n), n) }
+		next := func() plan.Edit { n++; return addObserver(fmt.Sprintf("O%d", n), n) }
 		t.Repeat(map[string]func(*rapid.T){
 			"do": func(t *rapid.T) {
 				e := next()

@@ -8,12 +8,6 @@ import (
 	"enfilade/solver/plan"
 )
 
-// CornerRef names one corner: a point of a wall's line, or of the ring of a block, a zone or the floor.
-type CornerRef struct {
-	Ref   plan.Ref
-	Index int
-}
-
 // shape is a wall's line or a ring, for whoever looks at corners.
 type shape struct {
 	ref    plan.Ref
@@ -48,15 +42,15 @@ func shapes(p *plan.Plan) iter.Seq[shape] {
 
 // CornersAt returns every corner that lies exactly at a point and may be moved: those that go along when one of them is
 // dragged.
-func CornersAt(p *plan.Plan, at exact.Pt) []CornerRef {
-	var out []CornerRef
+func CornersAt(p *plan.Plan, at exact.Pt) []plan.Corner {
+	var out []plan.Corner
 	for s := range shapes(p) {
 		if s.locked {
 			continue
 		}
 		for i, q := range s.pts.All() {
 			if q == at {
-				out = append(out, CornerRef{s.ref, i})
+				out = append(out, plan.Corner{Item: s.ref, Index: i})
 			}
 		}
 	}
@@ -157,10 +151,8 @@ func Points(p *plan.Plan, r plan.Ref) (plan.Chain, bool) {
 			return plan.ChainOf(t.At), true
 		}
 	case plan.KindBlock:
-		for _, b := range p.Blocks() {
-			if b.ID == r.ID {
-				return b.Ring, b.Ring.Len() > 0
-			}
+		if b, ok := p.Block(r.ID); ok {
+			return b.Ring, b.Ring.Len() > 0
 		}
 	}
 	for s := range shapes(p) {

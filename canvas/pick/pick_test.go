@@ -122,9 +122,9 @@ func TestCornersAt(t *testing.T) {
 		Blocks: []plan.Block{{ID: "B1", Ring: plan.ChainOf(m(0, 0), m(1, 0), m(1, 1))}},
 	})
 	got := fmt.Sprint(pick.CornersAt(p, m(0, 0)))
-	want := fmt.Sprint([]pick.CornerRef{
-		{Ref: plan.Ref{Kind: plan.KindFloor}}, {Ref: plan.Ref{Kind: plan.KindBlock, ID: "B1"}},
-		{Ref: plan.Ref{Kind: plan.KindWall, ID: "W1"}}, {Ref: plan.Ref{Kind: plan.KindWall, ID: "W1"}, Index: 2}})
+	want := fmt.Sprint([]plan.Corner{
+		{Item: plan.Ref{Kind: plan.KindFloor}}, {Item: plan.Ref{Kind: plan.KindBlock, ID: "B1"}},
+		{Item: plan.Ref{Kind: plan.KindWall, ID: "W1"}}, {Item: plan.Ref{Kind: plan.KindWall, ID: "W1"}, Index: 2}})
 	if got != want {
 		t.Errorf("corners %s, want %s", got, want)
 	}

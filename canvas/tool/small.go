@@ -1,0 +1,81 @@
+package tool
+
+import (
+	"math"
+	"strconv"
+	"strings"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/plan"
+)
+
+// locked reports whether the item may not be moved.
+func locked(p *plan.Plan, r plan.Ref) bool {
+	switch r.Kind {
+	case plan.KindWall:
+		w, _ := p.Wall(r.ID)
+		return w.Locked
+	case plan.KindObserver:
+		o, _ := p.Observer(r.ID)
+		return o.Locked
+	case plan.KindTarget:
+		t, _ := p.Target(r.ID)
+		return t.Locked
+	case plan.KindStart:
+		t, _ := p.Start(r.ID)
+		return t.Locked
+	case plan.KindOpening:
+		o, _ := p.Opening(r.ID)
+		return o.Locked
+	case plan.KindBlock:
+		b, _ := p.Block(r.ID)
+		return b.Locked
+	case plan.KindZone:
+		z, _ := p.Zone(r.ID)
+		return z.Locked
+	}
+	return false
+}
+
+// reason is an error as the window says it: the cause without where in the program it was found.
+func reason(err error) string {
+	s := err.Error()
+	if i := strings.LastIndex(s, ": "); i >= 0 {
+		s = s[i+2:]
+	}
+	return s
+}
+
+// parseAngle reads a typed angle in degrees; a comma is a decimal point.
+func parseAngle(text string) (float64, error) {
+	return strconv.ParseFloat(strings.Replace(strings.TrimSuffix(text, "°"), ",", ".", 1), 64)
+}
+
+// degrees writes an angle between 0 and 360 with at most one decimal.
+func degrees(deg float64) string {
+	deg = math.Mod(math.Mod(deg, 360)+360, 360)
+	s := strings.TrimSuffix(strconv.FormatFloat(deg, 'f', 1, 64), ".0")
+	if s == "360" {
+		return "0"
+	}
+	return s
+}
+
+// along returns the grid point nearest to the place that lies the share t of the way from a to b.
+func along(a, b exact.Pt, t float64) exact.Pt {
+	return exact.Pt{X: a.X + int32(math.Round(t*(float64(b.X)-float64(a.X)))), Y: a.Y + int32(math.Round(t*(float64(b.Y)-float64(a.Y))))}
+}
+
+func abs[T int32 | float64](v T) T {
+	if v < 0 {
+		return -v
+	}
+	return v
+}
+
+func withSign(v, sign int32) int32 {
+	if sign < 0 {
+		return -v
+	}
+	return v
+}
