@@ -63,14 +63,12 @@ func (s *Session) Preview(e plan.Edit) error {
 	if err != nil {
 		return err
 	}
-	if next == s.Plan() {
-		return nil
-	}
+	shown := s.Plan()
 	s.preview = next
 	if next == s.history.plan() {
 		s.preview = nil
 	}
-	s.tell()
+	s.settle(shown)
 	return nil
 }
 
