@@ -3,6 +3,7 @@ package live
 import (
 	"sync/atomic"
 
+	"enfilade/solver/exact"
 	"enfilade/solver/study"
 )
 
@@ -36,9 +37,10 @@ func (s *State) Result() *study.Result {
 		Sight:      s.Latest[StageSights].Sights,
 		Approaches: s.Latest[StageApproaches].Approaches,
 		SeenFrom:   s.Latest[StageSeenFrom].Sights,
+		Problems:   s.Latest[StageMesh].Problems,
 	}
 	if p := s.Latest[StageApproaches].Plan; p != nil {
-		r.WalkerEye = float64(p.Walker().Eye) / 10
+		r.WalkerEye = float64(p.Walker().Eye) / exact.PerMM
 	}
 	return r
 }

@@ -32,6 +32,7 @@ func (s Stage) String() string {
 // Solver does the work of the stages. It is used by one goroutine; [study.Solver] is one.
 type Solver interface {
 	Mesh(ctx context.Context, p *plan.Plan) error
+	Problems(p *plan.Plan) []plan.Problem // after Mesh
 	Sights(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
 	Approaches(ctx context.Context, p *plan.Plan) ([]study.Approach, error)
 	SeenFrom(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
@@ -44,6 +45,7 @@ type Update struct {
 	Stage      Stage
 	Sights     []study.Sight    // of StageSights and StageSeenFrom
 	Approaches []study.Approach // of StageApproaches
+	Problems   []plan.Problem   // of StageMesh: what is wrong with the drawing
 	Err        error            // why the stage has no answer; the later stages of this plan are then left out only after StageMesh
 	Took       time.Duration
 }
@@ -145,7 +147,7 @@ func (r *Runner) stage(ctx context.Context, j job, s Stage) (u Update) {
 	u = Update{Rev: j.rev, Plan: j.plan, Stage: s}
 	defer func() {
 		if v := recover(); v != nil {
-			u.Sights, u.Approaches = nil, nil
+			u.Sights, u.Approaches, u.Problems = nil, nil, nil
 			u.Err = &Crash{Stage: s, Value: v, Stack: debug.Stack()}
 			r.solver = r.fresh()
 		}
@@ -156,7 +158,9 @@ func (r *Runner) stage(ctx context.Context, j job, s Stage) (u Update) {
 	}
 	switch s {
 	case StageMesh:
-		u.Err = r.solver.Mesh(ctx, j.plan)
+		if u.Err = r.solver.Mesh(ctx, j.plan); u.Err == nil {
+			u.Problems = r.solver.Problems(j.plan)
+		}
 	case StageSights:
 		u.Sights, u.Err = r.solver.Sights(ctx, j.plan)
 	case StageApproaches:

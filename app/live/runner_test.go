@@ -40,6 +40,10 @@ func (f *fake) do(ctx context.Context, s live.Stage) error {
 }
 
 func (f *fake) Mesh(ctx context.Context, _ *plan.Plan) error { return f.do(ctx, live.StageMesh) }
+func (f *fake) Problems(p *plan.Plan) []plan.Problem {
+	return []plan.Problem{{Text: p.Sheet().Title}}
+}
+
 func (f *fake) Sights(ctx context.Context, p *plan.Plan) ([]study.Sight, error) {
 	return []study.Sight{{Name: p.Sheet().Title}}, f.do(ctx, live.StageSights)
 }
@@ -106,7 +110,7 @@ func TestRunnerDeliversEachStageInOrder(t *testing.T) {
 				t.Errorf("update %d: %+v", s, u)
 			}
 		}
-		if r.got()[1].Sights[0].Name != "a" || r.got()[2].Approaches[0].Start != "a" || r.got()[3].Sights[0].Name != "a" {
+		if r.got()[0].Problems[0].Text != "a" || r.got()[1].Sights[0].Name != "a" || r.got()[2].Approaches[0].Start != "a" || r.got()[3].Sights[0].Name != "a" {
 			t.Error("an update carries another plan's answer")
 		}
 		r.Close()
