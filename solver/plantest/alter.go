@@ -4,6 +4,7 @@ import (
 	"math"
 	"math/big"
 	"math/rand/v2"
+	"slices"
 
 	"enfilade/solver/arrange"
 	"enfilade/solver/exact"
@@ -149,4 +150,22 @@ func Halves(o *arrange.Outline) bool {
 // onHalf reports whether v/w is a whole number and a half.
 func onHalf(v, w *big.Int) bool {
 	return new(big.Int).Rem(new(big.Int).Lsh(v, 1), w).Sign() == 0 && new(big.Int).Rem(v, w).Sign() != 0
+}
+
+// Bends reports whether splitting walls changed the rounded graph beyond new points on straight edges: a new end is a hot
+// pixel, and segments that pass it bend.
+func Bends(p, split *plan.Plan) bool {
+	o, _ := arrange.Draw(p)
+	q, _ := arrange.Draw(split)
+	g, h := Rounded(o), Rounded(q)
+	for _, e := range h.Edges {
+		straight := slices.ContainsFunc(g.Edges, func(f arrange.Edge) bool {
+			a, b := g.Pts[f.A], g.Pts[f.B]
+			return exact.OnSegment(a, b, h.Pts[e.A]) && exact.OnSegment(a, b, h.Pts[e.B])
+		})
+		if !straight {
+			return true
+		}
+	}
+	return false
 }

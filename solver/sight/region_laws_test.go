@@ -48,7 +48,7 @@ func TestRegionLaws(t *testing.T) {
 			shift := plantest.Motion{Shift: exact.Vec{X: rapid.Int32Range(-1e6, 1e6).Draw(t, "dx"), Y: rapid.Int32Range(-1e6, 1e6).Draw(t, "dy")}}
 			same("shifted", figures(t, plantest.Moved(p, shift), shift.Point(eye), height))
 			same("shuffled", figures(t, plantest.Shuffled(p, rapid.Uint64().Draw(t, "seed")), eye, height))
-			if split, n := plantest.SplitWalls(p); n > 0 && !bends(p, split) {
+			if split, n := plantest.SplitWalls(p); n > 0 && !plantest.Bends(p, split) {
 				same("split", figures(t, split, eye, height))
 			}
 			m := plantest.Motion{Mirror: rapid.Bool().Draw(t, "mirror"), Turns: rapid.IntRange(0, 3).Draw(t, "turns")}
@@ -65,22 +65,4 @@ func TestRegionLaws(t *testing.T) {
 			}
 		}))
 	}
-}
-
-// bends reports whether splitting changed the rounded graph beyond new points on straight edges: a new end is a hot pixel,
-// and segments that pass it bend.
-func bends(p, split *plan.Plan) bool {
-	o, _ := arrange.Draw(p)
-	q, _ := arrange.Draw(split)
-	g, h := arrange.Round(o), arrange.Round(q)
-	for _, e := range h.Edges {
-		straight := slices.ContainsFunc(g.Edges, func(f arrange.Edge) bool {
-			a, b := g.Pts[f.A], g.Pts[f.B]
-			return exact.OnSegment(a, b, h.Pts[e.A]) && exact.OnSegment(a, b, h.Pts[e.B])
-		})
-		if !straight {
-			return true
-		}
-	}
-	return false
 }

@@ -81,6 +81,46 @@ func TestFloodAgainstTwin(t *testing.T) {
 	}
 }
 
+// TestFloodToFrontsAgainstTwin walks to where the front of an edge is first seen from, its eye at either end or the middle.
+func TestFloodToFrontsAgainstTwin(t *testing.T) {
+	for name, plans := range tangles {
+		t.Run(name, rapid.MakeCheck(func(t *rapid.T) {
+			p := plans.Draw(t, "plan")
+			t.Log(plantest.Text(p))
+			g, m := graphAndMesh(t, p)
+			twin := plantest.NewTwin(g)
+			at := places(p, g)
+			height := heights.Draw(t, "height")
+			e := g.Edges[rapid.IntRange(0, len(g.Edges)-1).Draw(t, "edge")]
+			a, b := g.Pts[e.A], g.Pts[e.B]
+			if rapid.Bool().Draw(t, "back") {
+				a, b = b, a
+			}
+			eye := rapid.SampledFrom([]exact.Pt{a, b, {X: (a.X + b.X) / 2, Y: (a.Y + b.Y) / 2}}).Draw(t, "eye")
+			c := sight.Front(a, b)
+			cones, err := sight.New(m).Cones(eye, height, c)
+			r := twin.RegionWithin(eye, height, &plantest.View{Right: c.Right, Mid: c.Mid, Left: c.Left})
+			if (err != nil) != r.Empty() {
+				t.Fatalf("front %v %v from %v: %v, the twin's region is empty: %v", a, b, eye, err, r.Empty())
+			}
+			if err != nil {
+				return
+			}
+			start := at[rapid.IntRange(0, len(at)-1).Draw(t, "start")]
+			t.Logf("front %v %v", a, b)
+			paths, err := walk.New(m).Flood(context.Background(), start, []walk.Goal{{Eye: eye, Cones: cones}})
+			if err != nil {
+				if !errors.Is(err, walk.ErrInside) {
+					t.Fatal(err)
+				}
+				paths = make([]walk.Path, 1)
+			}
+			want := twin.ApproachTo(start, r)
+			samePath(t, "approach to a front", start, eye, height, paths[0], want.Walk, !want.Other)
+		}))
+	}
+}
+
 // sameWalks floods once from start for the approaches and the full walks to all targets, and compares each with the twin.
 func sameWalks(t *rapid.T, m *mesh.Mesh, twin *plantest.Twin, start exact.Pt, targets []exact.Pt, height int32) {
 	var goals []walk.Goal
