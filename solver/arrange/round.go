@@ -26,6 +26,7 @@ func Round(o *Outline) *Graph {
 	passes := passing(o.Segments, c, hot)
 	g.Pts = hot
 	g.merge(o.Segments, passes)
+	g.compact()
 	return g
 }
 
@@ -212,8 +213,10 @@ func eachLink(passes []pass, f func(a int32, l link)) {
 // windings of one body add up.
 func (g *Graph) mergeLinks(a int32, segs []Segment, links []link) {
 	e := Edge{A: a, B: links[0].b, Wind0: int32(len(g.Winds)), Item: segs[links[0].seg].Item}
+	line := false
 	for _, l := range links {
 		s := &segs[l.seg]
+		line = line || s.Body == NoBody
 		e.Walk = e.Walk || s.Walk
 		e.Top = max(e.Top, s.Top)
 		e.Item = min(e.Item, s.Item)
@@ -228,7 +231,33 @@ func (g *Graph) mergeLinks(a int32, segs []Segment, links []link) {
 	kept := slices.DeleteFunc(g.Winds[e.Wind0:], func(w Wind) bool { return w.Delta == 0 })
 	g.Winds = g.Winds[:int(e.Wind0)+len(kept)]
 	e.Wind1 = int32(len(g.Winds))
-	g.Edges = append(g.Edges, e)
+	if line || e.Walk || e.Top > 0 || e.Wind0 < e.Wind1 { // else the outline of a body runs there and back
+		g.Edges = append(g.Edges, e)
+	}
+}
+
+// compact drops the points that no edge ends at: those of outlines that run there and back.
+func (g *Graph) compact() {
+	place := make([]int32, len(g.Pts))
+	for _, e := range g.Edges {
+		place[e.A], place[e.B] = 1, 1
+	}
+	n := int32(0)
+	for i, used := range place {
+		if used == 1 {
+			g.Pts[n] = g.Pts[i]
+			place[i] = n
+			n++
+		}
+	}
+	if int(n) == len(g.Pts) {
+		return
+	}
+	g.Pts = g.Pts[:n]
+	for i := range g.Edges {
+		e := &g.Edges[i]
+		e.A, e.B = place[e.A], place[e.B]
+	}
 }
 
 func (g *Graph) addWind(from int, w Wind) {
