@@ -23,6 +23,12 @@ var tangles = map[string]*rapid.Generator[*plan.Plan]{
 	"tangles": plantest.Tangles(), "specks": plantest.Specks(), "lines": plantest.Lines(),
 }
 
+// tester is what the checks need of *testing.T and *rapid.T.
+type tester interface {
+	Errorf(string, ...any)
+	Fatal(...any)
+}
+
 func graphAndMesh(t interface{ Fatal(...any) }, p *plan.Plan) (*arrange.Graph, *mesh.Mesh) {
 	o, _ := arrange.Draw(p)
 	g := arrange.Round(o)
@@ -121,8 +127,28 @@ func TestFloodToFrontsAgainstTwin(t *testing.T) {
 	}
 }
 
+// TestFloodOfPlansAgainstTwin does the same on whole floors of an office, of clutter and a maze.
+func TestFloodOfPlansAgainstTwin(t *testing.T) {
+	for seed := range plantest.Seeds(2) {
+		for name, p := range map[string]*plan.Plan{
+			"office": plantest.Office(seed, 20), "clutter": plantest.Clutter(seed, 25), "maze": plantest.Maze(seed, 30),
+		} {
+			g, m := graphAndMesh(t, p)
+			twin := plantest.NewTwin(g)
+			var targets []exact.Pt
+			for _, q := range p.Targets() {
+				targets = append(targets, q.At)
+			}
+			for _, s := range p.Parts().Starts[:3] {
+				t.Logf("%s, seed %d", name, seed)
+				sameWalks(t, m, twin, s.At, targets, eye)
+			}
+		}
+	}
+}
+
 // sameWalks floods once from start for the approaches and the full walks to all targets, and compares each with the twin.
-func sameWalks(t *rapid.T, m *mesh.Mesh, twin *plantest.Twin, start exact.Pt, targets []exact.Pt, height int32) {
+func sameWalks(t tester, m *mesh.Mesh, twin *plantest.Twin, start exact.Pt, targets []exact.Pt, height int32) {
 	var goals []walk.Goal
 	eyes := sight.New(m)
 	for _, at := range targets {
@@ -147,7 +173,7 @@ func sameWalks(t *rapid.T, m *mesh.Mesh, twin *plantest.Twin, start exact.Pt, ta
 	}
 }
 
-func samePath(t *rapid.T, what string, from, to exact.Pt, height int32, got walk.Path, want plantest.Walk, sameEnd bool) {
+func samePath(t tester, what string, from, to exact.Pt, height int32, got walk.Path, want plantest.Walk, sameEnd bool) {
 	length := math.Inf(1)
 	if got.Found {
 		length = got.Length
