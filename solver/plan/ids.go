@@ -41,44 +41,39 @@ func (r Ref) Number() int {
 
 // NextID returns the next free id of a kind: its letter and the number after the highest in use.
 func NextID(p *Plan, kind Kind) string {
-	highest := 0
-	see := func(id string) { highest = max(highest, Ref{kind, id}.Number()) }
-	p.eachID(kind, see)
-	return kind.Letter() + strconv.Itoa(highest+1)
-}
-
-// eachID shows every id of a kind to see.
-func (p *Plan) eachID(kind Kind, see func(string)) {
 	switch kind {
 	case KindWall:
-		ids(p.obstacles.walls, see)
+		return nextID(kind, p.obstacles.walls)
 	case KindOpening:
-		ids(p.obstacles.openings, see)
+		return nextID(kind, p.obstacles.openings)
 	case KindBlock:
-		ids(p.obstacles.blocks, see)
+		return nextID(kind, p.obstacles.blocks)
 	case KindZone:
-		ids(p.marks.zones, see)
+		return nextID(kind, p.marks.zones)
 	case KindObserver:
-		ids(p.marks.observers, see)
+		return nextID(kind, p.marks.observers)
 	case KindTarget:
-		ids(p.marks.targets, see)
+		return nextID(kind, p.marks.targets)
 	case KindStart:
-		ids(p.marks.starts, see)
+		return nextID(kind, p.marks.starts)
 	case KindRoute:
-		ids(p.marks.routes, see)
+		return nextID(kind, p.marks.routes)
 	}
+	return ""
+}
+
+func nextID[T any, P identified[T]](kind Kind, list []T) string {
+	highest := 0
+	for i := range list {
+		highest = max(highest, Ref{kind, *P(&list[i]).id()}.Number())
+	}
+	return kind.Letter() + strconv.Itoa(highest+1)
 }
 
 // identified is a pointer to an item with an id.
 type identified[T any] interface {
 	*T
 	id() *string
-}
-
-func ids[T any, P identified[T]](list []T, see func(string)) {
-	for i := range list {
-		see(*P(&list[i]).id())
-	}
 }
 
 func (w *Wall) id() *string     { return &w.ID }

@@ -13,3 +13,11 @@ const MaxThickness int32 = 100_000 * exact.PerMM
 func InRange(p exact.Pt) bool {
 	return p.X >= -MaxCoord && p.X <= MaxCoord && p.Y >= -MaxCoord && p.Y <= MaxCoord
 }
+
+// Limits of what a walker and a mark may be.
+const (
+	MaxBodyRadius int32 = 10_000 * exact.PerMM  // of the walker: 10 m
+	MaxPace             = 100                   // metres per second
+	MaxColour           = 255                   // index of a colour
+	MaxRound      int32 = 100_000 * exact.PerMM // radius of a round block: 100 m
+)
