@@ -10,12 +10,6 @@ import (
 // The longest length and the tallest height a file may give, in grid units: 50 km.
 const longest = plan.MaxCoord
 
-// maxRadius bounds the walker's body radius: 10 m.
-const maxRadius = 10_000 * exact.PerMM
-
-// maxColours bounds the index of a colour.
-const maxColours = 255
-
 // What the words of the format stand for, in the order of the constants they are read into.
 var (
 	wallKinds   = []string{"wall", "glazing", "screen", "low"}
@@ -68,7 +62,7 @@ func readBlock(o *object) plan.Block {
 	if value, ok := o.typed("circle", "{", "an object with at and radius"); ok {
 		c := o.within("circle", value)
 		b.Circle = &plan.Circle{At: c.place("at")}
-		if b.Circle.Radius, ok = c.length("radius", 1, maxRound); !ok {
+		if b.Circle.Radius, ok = c.length("radius", 1, plan.MaxRound); !ok {
 			c.fail("radius", "is missing; give the radius in mm")
 		}
 		b.Circle.Extra = c.rest()
@@ -86,9 +80,6 @@ func readBlock(o *object) plan.Block {
 	return b
 }
 
-// maxRound bounds the radius of a round block: 100 m, so that a circle within the legal range has legal corners.
-const maxRound = 100_000 * exact.PerMM
-
 func readZone(o *object) plan.Zone {
 	return plan.Zone{Name: o.text("name", ""), Ring: o.ring("ring", true), Room: choice[uint8](o, "kind", zoneKinds...) == 1}
 }
@@ -103,7 +94,7 @@ func readObserver(o *object) plan.Observer {
 		v.View = view
 	}
 	v.Range, _ = o.length("range", 1, math.MaxInt32)
-	v.Colour = o.whole("colour", 0, maxColours, -1)
+	v.Colour = o.whole("colour", 0, plan.MaxColour, -1)
 	return v
 }
 
@@ -127,7 +118,7 @@ func readTarget(o *object) plan.Target {
 	t.MaxAngle = pointer(o.real("max_angle", 0, 90, "an angle from 0 to 90 degrees"))
 	t.Near = pointer(o.length("near", 0, math.MaxInt32))
 	t.Far = pointer(o.length("far", 0, math.MaxInt32))
-	t.Colour = o.whole("colour", 0, maxColours, -1)
+	t.Colour = o.whole("colour", 0, plan.MaxColour, -1)
 	return t
 }
 
@@ -149,8 +140,8 @@ func readRoute(o *object) plan.Route {
 
 func readWalker(o *object) plan.Walker {
 	w := plan.DefaultWalker()
-	w.Radius, _ = o.length("radius", 0, maxRadius)
-	if pace, ok := o.real("pace", math.SmallestNonzeroFloat64, 100, "a pace above 0 and up to 100 metres per second"); ok {
+	w.Radius, _ = o.length("radius", 0, plan.MaxBodyRadius)
+	if pace, ok := o.real("pace", math.SmallestNonzeroFloat64, plan.MaxPace, "a pace above 0 and up to 100 metres per second"); ok {
 		w.Pace = pace
 	}
 	if eye, ok := o.length("eye", 1, longest); ok {
