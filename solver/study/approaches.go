@@ -83,7 +83,7 @@ func (sc *scene) fromStart(ctx context.Context, p *plan.Plan, start plan.Start, 
 		default:
 			goals = append(goals, walk.Goal{Eye: k.at, Cones: k.cones})
 			if k.closed == "" {
-				goals = append(goals, walk.Goal{Eye: k.at})
+				goals = append(goals, walk.Goal{Spot: walk.At(k.at)})
 			}
 		}
 	}

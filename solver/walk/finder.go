@@ -13,10 +13,11 @@ import (
 // ErrInside reports a start that lies off the mesh or strictly inside something that stops walking.
 var ErrInside = errors.New("walk: the start is inside a body or off the floor")
 
-// Goal is where a flood is to lead: a region, given as its cones of sight from Eye, or the point Eye itself.
+// Goal is where a flood is to lead: a spot, or a region, given as its cones of sight from Eye.
 type Goal struct {
+	Spot  *Spot
 	Eye   exact.Pt
-	Cones []sight.Cone // nil: the goal is the point
+	Cones []sight.Cone
 }
 
 // Path is a shortest walk: from the start, the first of Turns, over the corners that follow to End.
@@ -67,8 +68,8 @@ type mark struct {
 }
 
 type goal struct {
+	spot  *Spot
 	eye   exact.Pt
-	point bool
 	found bool
 	g     float64
 	node  int32
@@ -155,12 +156,12 @@ func (f *Finder) setGoals(goals []Goal) {
 		f.limit = -1
 	}
 	for i, g := range goals {
-		f.goals = append(f.goals, goal{eye: g.Eye, point: g.Cones == nil, g: math.Inf(1), node: -1})
+		f.goals = append(f.goals, goal{spot: g.Spot, eye: g.Eye, g: math.Inf(1), node: -1})
 		for _, c := range g.Cones {
 			f.mark(c.Tri, mark{goal: int32(i), r: c.R, l: c.L})
 		}
-		if g.Cones == nil {
-			f.eachCorner(g.Eye, func(t int32) { f.mark(t, mark{goal: int32(i)}) })
+		if g.Spot != nil {
+			f.eachHolder(g.Spot, func(t int32) { f.mark(t, mark{goal: int32(i)}) })
 		}
 	}
 }

@@ -25,7 +25,7 @@ func lengths(t interface{ Fatal(...any) }, m *mesh.Mesh, from, to exact.Pt, heig
 		cones = []sight.Cone{}
 	}
 	both := [2]float64{math.Inf(1), math.Inf(1)}
-	paths, err := walk.New(m).Flood(context.Background(), from, []walk.Goal{{Eye: to, Cones: cones}, {Eye: to}})
+	paths, err := walk.New(m).Flood(context.Background(), from, []walk.Goal{{Eye: to, Cones: cones}, {Spot: walk.At(to)}})
 	if errors.Is(err, walk.ErrInside) {
 		return both
 	}

@@ -43,7 +43,7 @@ func both(t testing.TB, m *mesh.Mesh, start, target exact.Pt) (approach, full wa
 	if err != nil {
 		t.Fatal(err)
 	}
-	paths, err := walk.New(m).Flood(context.Background(), start, []walk.Goal{{Eye: target, Cones: cones}, {Eye: target}})
+	paths, err := walk.New(m).Flood(context.Background(), start, []walk.Goal{{Eye: target, Cones: cones}, {Spot: walk.At(target)}})
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -124,10 +124,10 @@ func TestFloodThinWalls(t *testing.T) {
 func TestFloodErrors(t *testing.T) {
 	m := build(t, pillar)
 	f := walk.New(m)
-	if _, err := f.Flood(context.Background(), at(5, 5), []walk.Goal{{Eye: at(1, 1)}}); !errors.Is(err, walk.ErrInside) {
+	if _, err := f.Flood(context.Background(), at(5, 5), []walk.Goal{{Spot: walk.At(at(1, 1))}}); !errors.Is(err, walk.ErrInside) {
 		t.Errorf("from inside the pillar: %v", err)
 	}
-	paths, err := f.Flood(context.Background(), at(4, 5), []walk.Goal{{Eye: at(1, 1)}, {Eye: at(5, 5)}})
+	paths, err := f.Flood(context.Background(), at(4, 5), []walk.Goal{{Spot: walk.At(at(1, 1))}, {Spot: walk.At(at(5, 5))}})
 	if err != nil || !paths[0].Found || paths[1].Found {
 		t.Errorf("from the pillar's face: %v %v", paths, err)
 	}

@@ -156,7 +156,7 @@ func sameWalks(t tester, m *mesh.Mesh, twin *plantest.Twin, start exact.Pt, targ
 		if err != nil || cones == nil {
 			cones = []sight.Cone{} // nothing sees it; nil would ask for the point
 		}
-		goals = append(goals, walk.Goal{Eye: at, Cones: slices.Clone(cones)}, walk.Goal{Eye: at})
+		goals = append(goals, walk.Goal{Eye: at, Cones: slices.Clone(cones)}, walk.Goal{Spot: walk.At(at)})
 	}
 	paths, err := walk.New(m).Flood(context.Background(), start, goals)
 	if err != nil && !errors.Is(err, walk.ErrInside) {

@@ -16,10 +16,10 @@ func (f *Finder) meetGoals(n, t int32, r, l exact.Vec, key float64) {
 			continue
 		}
 		root := &f.nodes[n]
-		if g.point {
-			d := g.eye.Sub(root.at)
-			if r.Cross(d) >= 0 && d.Cross(l) >= 0 && (d != exact.Vec{} || root.sector < 0) {
-				f.offer(k.goal, n, root.g+math.Sqrt(float64(d.Len2())), [2]float64{float64(d.X), float64(d.Y)})
+		if g.spot != nil {
+			if g.spot.within(root.at, r, l) {
+				x, y := g.spot.Offset(root.at)
+				f.offer(k.goal, n, root.g+math.Hypot(x, y), [2]float64{x, y})
 			}
 			continue
 		}
@@ -50,13 +50,37 @@ func (c *clipper) nearest(t *mesh.Tri, root exact.Pt, r, l exact.Vec, eye exact.
 	c.line[4] = exact.Line{At: root, Dir: l.Neg()}
 	c.line[5] = exact.Line{At: eye, Dir: sr}
 	c.line[6] = exact.Line{At: eye, Dir: sl.Neg()}
+	if !c.cutTriangle(7) {
+		return [2]float64{}, false
+	}
+	spot := c.closest(root)
+	x, y := spot.Offset(root)
+	return [2]float64{x, y}, true
+}
+
+// nearestSeen returns the point nearest to eye of the part of triangle t between the directions r and l from it. It reports
+// false when that part has no inside.
+func (c *clipper) nearestSeen(t *mesh.Tri, eye exact.Pt, r, l exact.Vec) (Spot, bool) {
+	for i := range 3 {
+		c.line[i] = exact.Through(t.P[i], t.P[inc[i]])
+	}
+	c.line[3] = exact.Line{At: eye, Dir: r}
+	c.line[4] = exact.Line{At: eye, Dir: l.Neg()}
+	if !c.cutTriangle(5) {
+		return Spot{}, false
+	}
+	return c.closest(eye), true
+}
+
+// cutTriangle cuts the triangle of the first three lines by the others up to n, and reports whether an inside is left.
+func (c *clipper) cutTriangle(n uint8) bool {
 	c.ring = append(c.ring[:0], 0, 1, 2)
-	for k := uint8(3); k < 7; k++ {
+	for k := uint8(3); k < n; k++ {
 		if !c.cut(k) {
-			return [2]float64{}, false
+			return false
 		}
 	}
-	return c.closest(root), true
+	return true
 }
 
 // cut keeps the part of the polygon to the left of line k, and reports whether it has an inside.
@@ -88,32 +112,43 @@ func (c *clipper) cut(k uint8) bool {
 	return true
 }
 
-// closest returns the polygon's point nearest to p, as an offset from it.
-func (c *clipper) closest(p exact.Pt) [2]float64 {
+// closest returns the polygon's point nearest to p.
+func (c *clipper) closest(p exact.Pt) Spot {
 	best, found := math.Inf(1), false
-	var end [2]float64
+	spot := Spot{On: exact.Line{At: p}, Den: 1} // p lies in the polygon
 	n := len(c.ring)
 	for i, e := range c.ring {
 		on := c.line[e]
 		if on.Side(p) >= 0 {
 			continue // seen from p, the polygon does not begin at this edge
 		}
-		found = true
-		x, y := on.Point(p, c.nearestAlong(on, c.line[c.ring[(i+n-1)%n]], c.line[c.ring[(i+1)%n]], p))
-		if d := math.Hypot(x, y); d < best {
-			best, end = d, [2]float64{x, y}
+		s := nearestAlong(on, c.line[c.ring[(i+n-1)%n]], c.line[c.ring[(i+1)%n]], p)
+		if d := math.Hypot(s.Offset(p)); !found || d < best {
+			best, spot, found = d, s, true
 		}
 	}
-	if !found {
-		return [2]float64{} // p lies in the polygon
-	}
-	return end
+	return spot
 }
 
-// nearestAlong returns the parameter on line l, between where it meets lines a and b, of the point nearest to p.
-func (c *clipper) nearestAlong(l, a, b exact.Line, p exact.Pt) float64 {
-	foot := float64(p.Sub(l.At).Dot(l.Dir)) / float64(l.Dir.Len2())
-	n0, d0 := l.Meet(a)
-	n1, d1 := l.Meet(b)
-	return min(max(foot, float64(n0)/float64(d0)), float64(n1)/float64(d1))
+// nearestAlong returns the point nearest to p on line l between where it meets a and where it meets b, exactly: the foot of
+// the perpendicular, or one of the ends.
+func nearestAlong(l, a, b exact.Line, p exact.Pt) Spot {
+	foot := Spot{On: l, Num: p.Sub(l.At).Dot(l.Dir), Den: l.Dir.Len2()}
+	from, to := meeting(l, a), meeting(l, b)
+	switch {
+	case exact.CompareFractions(foot.Num, foot.Den, from.Num, from.Den) <= 0:
+		return from
+	case exact.CompareFractions(foot.Num, foot.Den, to.Num, to.Den) >= 0:
+		return to
+	}
+	return foot
+}
+
+// meeting returns where line l meets line k.
+func meeting(l, k exact.Line) Spot {
+	num, den := l.Meet(k)
+	if den < 0 {
+		num, den = -num, -den
+	}
+	return Spot{On: l, Num: num, Den: den}
 }
