@@ -16,6 +16,7 @@ var kindNames = [...]string{
 var problemNames = [...]string{
 	plan.ProblemInside: "inside", plan.ProblemOutside: "outside", plan.ProblemShape: "shape",
 	plan.ProblemOpening: "opening", plan.ProblemMissing: "missing", plan.ProblemLow: "low", plan.ProblemMoved: "moved",
+	plan.ProblemTight: "tight",
 }
 
 // statusNames are the ends of an approach.

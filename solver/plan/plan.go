@@ -167,4 +167,5 @@ const (
 	ProblemMissing                        // an item names another that is not there
 	ProblemLow                            // a low wall without a height
 	ProblemMoved                          // a mark less than 1 mm inside a face was moved to the free side
+	ProblemTight                          // no room for the walker's body where a walk begins
 )

@@ -3,6 +3,7 @@ package study
 import (
 	"context"
 	"math"
+	"slices"
 
 	"github.com/paulmach/orb"
 
@@ -18,7 +19,8 @@ type sought struct {
 	at     exact.Pt
 	cones  []sight.Cone
 	fault  string // why it cannot be looked for
-	closed string // why nobody can stand at it
+	closed string // what it stands in, so that nobody can stand at it whatever their width
+	stood  bool   // the walker can stand at it
 }
 
 // Approaches returns the shortest walk to first sight and the full walk for every start and target, starts outermost, in
@@ -27,7 +29,7 @@ func (s *Solver) Approaches(ctx context.Context, p *plan.Plan) ([]Approach, erro
 	if err := s.Mesh(ctx, p); err != nil {
 		return nil, err
 	}
-	targets := s.scene.seek(p)
+	targets := s.scene.findAll(p)
 	out := make([]Approach, 0, p.NumStarts()*p.NumTargets())
 	for _, start := range p.Starts() {
 		rows, err := s.scene.fromStart(ctx, p, start, targets)
@@ -39,39 +41,42 @@ func (s *Solver) Approaches(ctx context.Context, p *plan.Plan) ([]Approach, erro
 	return out, nil
 }
 
-// seek finds the cones of every target once, for all starts.
-func (sc *scene) seek(p *plan.Plan) []sought {
-	eye := p.Walker().Eye
+// findAll finds the cones of every target once, for all starts.
+func (sc *scene) findAll(p *plan.Plan) []sought {
 	all := make([]sought, 0, p.NumTargets())
 	sc.cones = sc.cones[:0]
 	for _, t := range p.Targets() {
-		k := sought{target: t}
-		f := sc.stand(targetPoint(t), sc.blindAt(eye))
-		k.at = f.at
-		if !f.ok {
-			k.fault = "target " + t.ID + " " + f.text
-			all = append(all, k)
-			continue
-		}
-		cones, err := sc.sight.Cones(f.at, eye, frontOf(t))
-		if err != nil {
-			k.fault = "target " + t.ID + " faces into the wall it hangs on; turn its face round"
-		}
-		n := len(sc.cones)
-		sc.cones = append(sc.cones, cones...)
-		k.cones = sc.cones[n:len(sc.cones):len(sc.cones)]
-		if g := sc.stand(f.at, sc.shut); !g.ok || g.at != f.at {
-			k.closed = "the target stands in " + nameOf(sc.holder(f.at, sc.shut)) + ", where nobody walks"
-		}
-		all = append(all, k)
+		all = append(all, sc.find(t, p.Walker().Eye))
 	}
 	return all
+}
+
+func (sc *scene) find(t plan.Target, eye int32) sought {
+	f := sc.stand(targetPoint(t), sc.plain.blindAt(eye))
+	k := sought{target: t, at: f.at}
+	if !f.ok {
+		k.fault = "target " + t.ID + " " + f.text
+		return k
+	}
+	cones, err := sc.seek.Cones(f.at, eye, frontOf(t))
+	if err != nil {
+		k.fault = "target " + t.ID + " faces into the wall it hangs on; turn its face round"
+		return k
+	}
+	n := len(sc.cones)
+	sc.cones = append(sc.cones, cones...)
+	k.cones = sc.cones[n:len(sc.cones):len(sc.cones)]
+	k.stood = sc.wide.free(f.at, sc.wide.shut)
+	if !sc.plain.free(f.at, sc.plain.shut) {
+		k.closed = "the target stands in " + nameOf(sc.plain.holder(f.at, sc.plain.shut)) + ", where nobody walks"
+	}
+	return k
 }
 
 // fromStart solves all approaches of one start in one flood.
 func (sc *scene) fromStart(ctx context.Context, p *plan.Plan, start plan.Start, targets []sought) ([]Approach, error) {
 	rows := make([]Approach, len(targets))
-	f := sc.stand(start.At, sc.shut)
+	f := sc.begin(start.At)
 	var goals []walk.Goal
 	for i, k := range targets {
 		rows[i] = Approach{Start: start.ID, Target: k.target.ID}
@@ -81,10 +86,7 @@ func (sc *scene) fromStart(ctx context.Context, p *plan.Plan, start plan.Start, 
 		case k.fault != "":
 			rows[i].Problem = k.fault
 		default:
-			goals = append(goals, walk.Goal{Eye: k.at, Cones: k.cones})
-			if k.closed == "" {
-				goals = append(goals, walk.Goal{Spot: walk.At(k.at)})
-			}
+			goals = append(goals, walk.Goal{Eye: k.at, Cones: k.cones}, walk.Goal{Spot: sc.destination(k, f.at)})
 		}
 	}
 	if len(goals) == 0 {
@@ -96,19 +98,42 @@ func (sc *scene) fromStart(ctx context.Context, p *plan.Plan, start plan.Start, 
 	}
 	barriers := barrierFinder{scene: sc, start: f.at}
 	for i, k := range targets {
-		if rows[i].Problem != "" {
-			continue
+		if rows[i].Problem == "" {
+			sc.fillApproach(&rows[i], k, paths[0], p.Walker().Pace, &barriers)
+			sc.fillFullWalk(&rows[i], k, paths[1], &barriers)
+			paths = paths[2:]
 		}
-		sc.fillApproach(&rows[i], k, paths[0], p.Walker().Pace, &barriers)
-		paths = paths[1:]
-		if k.closed != "" {
-			rows[i].Reason = k.closed
-			continue
-		}
-		sc.fillFullWalk(&rows[i], k, paths[0], &barriers)
-		paths = paths[1:]
 	}
 	return rows, nil
+}
+
+// destination returns where the full walk to a target ends: at the target itself, or, where the walker's body has no room at
+// it, at the standing point nearest to it in a straight line that sees it. It returns nil when there is none, and for what
+// stands in a body.
+//
+// A target on a thin wall is as near from either side: then the side connected to the start is taken. The two distances are
+// measured, so they are the same when they differ by less than a part in 2^40.
+func (sc *scene) destination(k sought, start exact.Pt) *walk.Spot {
+	switch {
+	case k.closed != "":
+		return nil
+	case k.stood:
+		return walk.At(k.at)
+	}
+	spot, nearest, ok := sc.walk.Nearest(k.at, k.cones, func(int32) bool { return true })
+	if !ok {
+		return nil
+	}
+	if sc.rooms == nil {
+		sc.rooms = sc.wide.rooms()
+	}
+	var from []int32
+	sc.wide.holding(start, func(t int32) { from = append(from, sc.rooms[t]) })
+	own, dist, ok := sc.walk.Nearest(k.at, k.cones, func(t int32) bool { return slices.Contains(from, sc.rooms[t]) })
+	if ok && dist <= nearest*(1+0x1p-40) {
+		return own
+	}
+	return spot
 }
 
 // fillApproach fills in the walk to first sight.
@@ -133,10 +158,15 @@ func (sc *scene) fillApproach(a *Approach, k sought, path walk.Path, pace float6
 
 // fillFullWalk fills in the walk to the target itself.
 func (sc *scene) fillFullWalk(a *Approach, k sought, path walk.Path, b *barrierFinder) {
-	if !path.Found {
-		if a.Reason == "" {
-			a.Reason = b.beforePoint(k.at)
-		}
+	switch {
+	case path.Found:
+	case k.closed != "":
+		a.Reason = k.closed
+		return
+	case a.Reason == "":
+		a.Reason = b.beforePoint(k.at)
+		return
+	default:
 		return
 	}
 	a.HasFullWalk = true

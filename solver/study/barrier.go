@@ -1,6 +1,8 @@
 package study
 
 import (
+	"fmt"
+
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
 	"enfilade/solver/plan"
@@ -8,7 +10,8 @@ import (
 )
 
 // barrierFinder tells what closes the way from a start: the first thing to be crossed on a way that crosses as few edges
-// that stop walking as can be. It searches the mesh once, when first asked, in O(n).
+// that stop walking as can be. What only the walker's body is too wide for costs nothing to cross; when nothing else is in
+// the way, it is too narrow a gap. It searches the mesh once, when first asked, in O(n).
 type barrierFinder struct {
 	scene *scene
 	start exact.Pt
@@ -19,32 +22,25 @@ type barrierFinder struct {
 const unreached int32 = -2
 
 func (b *barrierFinder) search() {
-	m := b.scene.mesh
+	m := b.scene.wide.mesh
 	b.first = make([]int32, len(m.Tris))
 	for i := range b.first {
 		b.first[i] = unreached
 	}
 	type step struct{ tri, first int32 }
 	var now, later []step
-	place, ok := m.Locate(b.start)
-	if !ok {
-		return
-	}
-	if place.Corner >= 0 {
-		m.Around(mesh.EdgeOf(place.Tri, place.Corner), func(e mesh.Edge) { now = append(now, step{e.Tri(), -1}) })
-	} else {
-		now = append(now, step{place.Tri, -1})
-		if place.Edge != mesh.None && m.Twin(place.Edge) != mesh.None {
-			now = append(now, step{m.Twin(place.Edge).Tri(), -1})
+	b.scene.wide.holding(b.start, func(t int32) {
+		if !b.scene.wide.shut(t) {
+			now = append(now, step{t, -1})
 		}
-	}
+	})
 	for len(now) > 0 || len(later) > 0 {
 		if len(now) == 0 {
 			now, later = later, now
 		}
 		s := now[len(now)-1]
 		now = now[:len(now)-1]
-		if b.first[s.tri] != unreached || s.first < 0 && b.scene.shut(s.tri) {
+		if b.first[s.tri] != unreached {
 			continue
 		}
 		b.first[s.tri] = s.first
@@ -54,16 +50,36 @@ func (b *barrierFinder) search() {
 				continue
 			}
 			next := step{t.N[i].Tri(), s.first}
-			if !t.StopsWalk(i) {
+			con := m.Con[mesh.EdgeOf(s.tri, i)]
+			if b.offFloor(con) {
+				continue
+			}
+			if !b.hard(con) {
 				now = append(now, next)
 				continue
 			}
-			if con := m.Con[mesh.EdgeOf(s.tri, i)]; next.first < 0 {
+			if next.first < 0 {
 				next.first = con
 			}
 			later = append(later, next)
 		}
 	}
+}
+
+// hard reports whether graph edge con, or -1 for none, stops walkers of any width.
+func (b *barrierFinder) hard(con int32) bool {
+	if con < 0 {
+		return false
+	}
+	g := b.scene.wide
+	e := &g.graph.Edges[con]
+	return e.Walk && g.outline.Items[e.Item].Kind != plan.KindWalker
+}
+
+// offFloor reports whether graph edge con, or -1 for none, is the floor's own: no way leads off it and back.
+func (b *barrierFinder) offFloor(con int32) bool {
+	g := b.scene.wide
+	return con >= 0 && g.outline.Items[g.graph.Edges[con].Item].Kind == plan.KindFloor
 }
 
 // beforeCones says what closes the way to a region.
@@ -72,7 +88,7 @@ func (b *barrierFinder) beforeCones(cones []sight.Cone) string {
 		b.search()
 	}
 	for _, c := range cones {
-		if !b.scene.shut(c.Tri) {
+		if !b.scene.wide.shut(c.Tri) {
 			return b.says(b.first[c.Tri])
 		}
 	}
@@ -84,19 +100,19 @@ func (b *barrierFinder) beforePoint(p exact.Pt) string {
 	if b.first == nil {
 		b.search()
 	}
-	if place, ok := b.scene.mesh.Locate(p); ok {
+	if place, ok := b.scene.wide.mesh.Locate(p); ok {
 		return b.says(b.first[place.Tri])
 	}
 	return ""
 }
 
 func (b *barrierFinder) says(edge int32) string {
-	if edge < 0 {
+	if edge == unreached {
 		return "no way leads there"
 	}
-	item := b.scene.outline.Items[b.scene.graph.Edges[edge].Item]
-	if item.Kind == plan.KindFloor {
-		return "the floor ends before it"
+	if edge < 0 {
+		return fmt.Sprintf("every way there is too narrow for a body of radius %.0f mm", mm(b.scene.radius))
 	}
-	return nameOf(item) + " closes the way"
+	g := b.scene.wide
+	return nameOf(g.outline.Items[g.graph.Edges[edge].Item]) + " closes the way"
 }

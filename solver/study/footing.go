@@ -3,41 +3,34 @@ package study
 import (
 	"cmp"
 	"fmt"
+	"math"
 	"slices"
 
 	"enfilade/solver/exact"
-	"enfilade/solver/mesh"
 	"enfilade/solver/plan"
 )
 
 // footing is where a mark can be taken to stand, or why it cannot.
 type footing struct {
-	at   exact.Pt
-	ok   bool
-	off  bool     // it lies off the floor
-	item plan.Ref // what it stands in
-	text string
+	at    exact.Pt
+	ok    bool
+	off   bool     // it lies off the floor
+	tight bool     // the walker's body has no room there
+	item  plan.Ref // what it stands in
+	text  string
 }
 
 // near is how deep inside a face a mark may lie and still be moved to the face's free side, in grid units: 1 mm.
 const near = 1 * exact.PerMM
 
-// blindAt says of a triangle whether it is solid at the height of an eye.
-func (sc *scene) blindAt(eye int32) func(tri int32) bool {
-	return func(tri int32) bool { return sc.mesh.Solid[tri] >= eye }
-}
-
-// shut says of a triangle whether nobody stands in it.
-func (sc *scene) shut(tri int32) bool { return sc.mesh.Tris[tri].Flags&mesh.FlagNoWalk != 0 }
-
-// stand finds a footing for a mark at p: p itself when some triangle that holds it is not shut; else the nearest grid point
-// less than 1 mm away of which that is true.
+// stand finds a footing on the plain ground for a mark at p: p itself when some triangle that holds it is not shut; else the
+// nearest grid point less than 1 mm away of which that is true.
 func (sc *scene) stand(p exact.Pt, shut func(int32) bool) footing {
-	if sc.free(p, shut) {
+	if sc.plain.free(p, shut) {
 		return footing{at: p, ok: true}
 	}
 	for _, d := range nearby {
-		if q := p.Add(d); sc.free(q, shut) {
+		if q := p.Add(d); sc.plain.free(q, shut) {
 			return footing{at: q, ok: true}
 		}
 	}
@@ -46,25 +39,25 @@ func (sc *scene) stand(p exact.Pt, shut func(int32) bool) footing {
 		f.text = "lies outside the floor; move it inside"
 		return f
 	}
-	f.item = sc.holder(p, shut)
+	f.item = sc.plain.holder(p, shut)
 	f.text = fmt.Sprintf("is inside %s; move it out, or lower what it stands in", nameOf(f.item))
 	return f
 }
 
-func (sc *scene) free(p exact.Pt, shut func(int32) bool) bool {
-	place, ok := sc.mesh.Locate(p)
-	switch {
-	case !ok:
-		return false
-	case place.Corner >= 0:
-		some := false
-		sc.mesh.Around(mesh.EdgeOf(place.Tri, place.Corner), func(e mesh.Edge) { some = some || !shut(e.Tri()) })
-		return some
-	case place.Edge != mesh.None:
-		twin := sc.mesh.Twin(place.Edge)
-		return !shut(place.Tri) || twin != mesh.None && !shut(twin.Tri())
+// begin finds a footing for a walk's start. Where only the walker's body is in the way, it is told how far standing room is.
+func (sc *scene) begin(p exact.Pt) footing {
+	f := sc.stand(p, sc.plain.shut)
+	if !f.ok || sc.wide.free(f.at, sc.wide.shut) {
+		return f
 	}
-	return !shut(place.Tri)
+	f.ok, f.tight = false, true
+	room := sc.wide.roomNear(f.at)
+	if math.IsInf(room, 1) {
+		f.text = fmt.Sprintf("has no standing room anywhere for a body of radius %.0f mm; make the walker narrower", mm(sc.radius))
+		return f
+	}
+	f.text = fmt.Sprintf("has no room for a body of radius %.0f mm; standing room begins %.0f mm away", mm(sc.radius), math.Ceil(mm(room)))
+	return f
 }
 
 // nearby lists the grid vectors shorter than 1 mm, shortest first.
@@ -99,46 +92,4 @@ func inRing(ring []exact.Pt, p exact.Pt) bool {
 		}
 	}
 	return wind != 0
-}
-
-// holder returns the item whose outline lies nearest, counted in triangles, around the solid place p.
-func (sc *scene) holder(p exact.Pt, shut func(int32) bool) plan.Ref {
-	place, ok := sc.mesh.Locate(p)
-	if !ok {
-		return plan.Ref{Kind: plan.KindFloor}
-	}
-	queue, seen := []int32{place.Tri}, map[int32]bool{place.Tri: true}
-	for len(queue) > 0 {
-		t := queue[0]
-		queue = queue[1:]
-		for i := range 3 {
-			e := mesh.EdgeOf(t, i)
-			n := sc.mesh.Twin(e)
-			if n == mesh.None {
-				continue
-			}
-			if con := sc.mesh.Con[e]; con >= 0 && !shut(n.Tri()) {
-				return sc.outline.Items[sc.graph.Edges[con].Item]
-			}
-			if !seen[n.Tri()] {
-				seen[n.Tri()] = true
-				queue = append(queue, n.Tri())
-			}
-		}
-	}
-	return plan.Ref{Kind: plan.KindFloor}
-}
-
-// kindWords are the words of the trade for kinds of item.
-var kindWords = map[plan.Kind]string{
-	plan.KindWall: "wall", plan.KindOpening: "door", plan.KindBlock: "block", plan.KindZone: "zone",
-	plan.KindObserver: "observer", plan.KindTarget: "target", plan.KindStart: "start", plan.KindRoute: "route",
-}
-
-// nameOf names an item in a sentence.
-func nameOf(r plan.Ref) string {
-	if w, ok := kindWords[r.Kind]; ok {
-		return w + " " + r.ID
-	}
-	return "the edge of the floor"
 }

@@ -66,5 +66,8 @@ type Result struct {
 	SeenFrom   []Sight    // one for each target
 	Approaches []Approach // one for each start and target, starts outermost
 	WalkerEye  float64    // mm
-	Problems   []plan.Problem
+	// WalkerRadius is the radius that walks keep clear of everything that stops walking; the polygon that stands for the
+	// walker's disc encloses it and reaches at most RadiusExcess beyond. Both in mm.
+	WalkerRadius, RadiusExcess float64
+	Problems                   []plan.Problem
 }

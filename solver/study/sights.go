@@ -38,7 +38,7 @@ func (s *Solver) SeenFrom(ctx context.Context, p *plan.Plan) ([]Sight, error) {
 		}
 		at := targetPoint(t)
 		e := Sight{Item: plan.Ref{Kind: plan.KindTarget, ID: t.ID}, Name: t.Name, At: pointMM(at), Eye: mm(eye)}
-		f := s.scene.stand(at, s.scene.blindAt(eye))
+		f := s.scene.stand(at, s.scene.plain.blindAt(eye))
 		if !f.ok {
 			e.Problem = f.text
 		} else {
@@ -52,7 +52,7 @@ func (s *Solver) SeenFrom(ctx context.Context, p *plan.Plan) ([]Sight, error) {
 // observed returns what one observer sees.
 func (sc *scene) observed(p *plan.Plan, o plan.Observer) Sight {
 	e := Sight{Item: plan.Ref{Kind: plan.KindObserver, ID: o.ID}, Name: o.Name, At: pointMM(o.At), Eye: mm(o.Eye)}
-	f := sc.stand(o.At, sc.blindAt(o.Eye))
+	f := sc.stand(o.At, sc.plain.blindAt(o.Eye))
 	if !f.ok {
 		e.Problem = f.text
 		return e
@@ -70,7 +70,7 @@ func (sc *scene) observed(p *plan.Plan, o plan.Observer) Sight {
 		return e
 	}
 	for _, t := range p.Targets() {
-		tf := sc.stand(targetPoint(t), sc.blindAt(o.Eye))
+		tf := sc.stand(targetPoint(t), sc.plain.blindAt(o.Eye))
 		if tf.ok && inFront(t, f.at) && sc.sight.SeesWithin(f.at, tf.at, o.Eye, clip) {
 			e.TargetsSeen = append(e.TargetsSeen, t.ID)
 		}
@@ -83,8 +83,8 @@ const minRange = 16
 
 // reachesAll reports whether the range ends beyond every corner of the mesh.
 func (sc *scene) reachesAll(eye exact.Pt, r int32) bool {
-	n := len(sc.mesh.Pts)
-	for _, c := range sc.mesh.Pts[n-4:] {
+	n := len(sc.plain.mesh.Pts)
+	for _, c := range sc.plain.mesh.Pts[n-4:] {
 		if exact.Dist2(eye, c) >= int64(r)*int64(r) {
 			return false
 		}

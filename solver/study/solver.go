@@ -6,7 +6,6 @@ import (
 
 	"enfilade/solver/arrange"
 	"enfilade/solver/exact"
-	"enfilade/solver/mesh"
 	"enfilade/solver/plan"
 	"enfilade/solver/sight"
 	"enfilade/solver/walk"
@@ -17,19 +16,23 @@ import (
 type Solver struct {
 	obstacles *plan.Obstacles
 	box       [4]exact.Pt // the floor of a plan that gives none, which depends on its marks
+	radius    int32
 	scene     *scene
 }
 
-// scene is the mesh of one plan's obstacles with all that works on it.
+// scene is what one plan's obstacles make: the ground for eyes, the ground for walkers, and all that works on them.
 type scene struct {
-	outline  *arrange.Outline
-	graph    *arrange.Graph
-	mesh     *mesh.Mesh
+	plain    *ground // for eyes, and for walkers who are points
+	wide     *ground // for walkers with a body; the same as plain when there is none
 	problems []plan.Problem
 	floor    []exact.Pt
+	radius   int32
+	excess   float64 // how far the polygon that stands for the walker exceeds its radius, grid units
 	sight    *sight.Finder
 	walk     *walk.Finder
+	seek     *sight.Finder // of cones on the wide ground
 	cones    []sight.Cone
+	rooms    []int32 // for each triangle of the wide ground the floor it is connected to, once asked for
 }
 
 // NewSolver returns a solver that has seen no plan yet.
@@ -44,22 +47,34 @@ func (s *Solver) Mesh(ctx context.Context, p *plan.Plan) error {
 	if p.Floor().Len() == 0 {
 		box = arrange.FloorBox(p)
 	}
-	if s.scene != nil && s.obstacles == p.Obstacles() && s.box == box {
+	radius := min(p.Walker().Radius, arrange.MaxRadius)
+	if s.scene != nil && s.obstacles == p.Obstacles() && s.box == box && s.radius == radius {
 		return nil
 	}
-	outline, problems := arrange.Draw(p)
-	graph := arrange.Round(outline)
-	if err := ctx.Err(); err != nil {
+	sc, err := makeScene(ctx, p, radius)
+	if err != nil {
 		return err
 	}
-	m, err := arrange.Build(ctx, graph)
-	if err != nil {
-		return fmt.Errorf("study: %w", err)
-	}
-	s.obstacles, s.box = p.Obstacles(), box
-	s.scene = &scene{outline: outline, graph: graph, mesh: m, problems: problems, floor: floorRing(outline),
-		sight: sight.New(m), walk: walk.New(m)}
+	s.obstacles, s.box, s.radius, s.scene = p.Obstacles(), box, radius, sc
 	return nil
+}
+
+// makeScene builds the ground of p. A walker with a body takes a second one: the obstacles are grown in the first.
+func makeScene(ctx context.Context, p *plan.Plan, radius int32) (*scene, error) {
+	outline, problems := arrange.Draw(p)
+	plain, err := makeGround(ctx, outline)
+	if err != nil {
+		return nil, err
+	}
+	sc := &scene{plain: plain, wide: plain, problems: problems, floor: floorRing(outline), radius: radius}
+	if radius > 0 {
+		_, sc.excess = arrange.Disc(radius)
+		if sc.wide, err = makeGround(ctx, arrange.Grow(outline, plain.mesh, radius)); err != nil {
+			return nil, err
+		}
+	}
+	sc.sight, sc.seek, sc.walk = sight.New(sc.plain.mesh), sight.New(sc.wide.mesh), walk.New(sc.wide.mesh)
+	return sc, nil
 }
 
 // floorRing reads the floor's ring back from the outline.
@@ -86,7 +101,7 @@ func (s *Solver) Solve(ctx context.Context, p *plan.Plan) (*Result, error) {
 	if err := s.Mesh(ctx, p); err != nil {
 		return nil, err
 	}
-	r := &Result{WalkerEye: mm(p.Walker().Eye)}
+	r := &Result{WalkerEye: mm(p.Walker().Eye), WalkerRadius: mm(s.radius), RadiusExcess: s.scene.excess / exact.PerMM}
 	var err error
 	if r.Sight, err = s.Sights(ctx, p); err != nil {
 		return nil, err
@@ -106,14 +121,14 @@ func (s *Solver) Solve(ctx context.Context, p *plan.Plan) (*Result, error) {
 func (s *Solver) Problems(p *plan.Plan) []plan.Problem {
 	all := append([]plan.Problem(nil), s.scene.problems...)
 	for _, o := range p.Observers() {
-		all = s.scene.tell(all, plan.Ref{Kind: plan.KindObserver, ID: o.ID}, o.At, s.scene.stand(o.At, s.scene.blindAt(o.Eye)))
+		all = s.scene.tell(all, plan.Ref{Kind: plan.KindObserver, ID: o.ID}, o.At, s.scene.stand(o.At, s.scene.plain.blindAt(o.Eye)))
 	}
 	for _, t := range p.Targets() {
 		at := targetPoint(t)
-		all = s.scene.tell(all, plan.Ref{Kind: plan.KindTarget, ID: t.ID}, at, s.scene.stand(at, s.scene.blindAt(p.Walker().Eye)))
+		all = s.scene.tell(all, plan.Ref{Kind: plan.KindTarget, ID: t.ID}, at, s.scene.stand(at, s.scene.plain.blindAt(p.Walker().Eye)))
 	}
 	for _, t := range p.Starts() {
-		all = s.scene.tell(all, plan.Ref{Kind: plan.KindStart, ID: t.ID}, t.At, s.scene.stand(t.At, s.scene.shut))
+		all = s.scene.tell(all, plan.Ref{Kind: plan.KindStart, ID: t.ID}, t.At, s.scene.begin(t.At))
 	}
 	return all
 }
@@ -129,6 +144,8 @@ func (sc *scene) tell(all []plan.Problem, ref plan.Ref, at exact.Pt, f footing) 
 		return all
 	case f.off:
 		p.Kind = plan.ProblemOutside
+	case f.tight:
+		p.Kind = plan.ProblemTight
 	default:
 		p.Kind = plan.ProblemInside
 	}

@@ -106,3 +106,69 @@ func TestSolverKeepsTheMesh(t *testing.T) {
 		}
 	}
 }
+
+// TestSolveWithABody walks with a body. The pillar's figures stand in TestGrowK16; here a door, a target on a wall and a
+// start too near to one.
+func TestSolveWithABody(t *testing.T) {
+	const room = "floor 0,0 10,0 10,10 0,10; wall 5,0 5,4; wall 5,4.8 5,10; target 8,10; start 2,5; start 0.1,5; "
+	r := solve(t, room+"walker radius=0.35")
+	if r.WalkerRadius != 350 || r.RadiusExcess <= 0 || r.RadiusExcess > 3 {
+		t.Errorf("radius %v, excess %v", r.WalkerRadius, r.RadiusExcess)
+	}
+	a := r.Approaches[0]
+	if end := a.FullPoints[len(a.FullPoints)-1]; !a.HasFullWalk || math.Abs(end[0]-8000) > 1e-6 || end[1] > 9650 || end[1] < 9646 {
+		t.Errorf("the full walk ends at %v, want right before the target, a radius off the wall", end)
+	}
+	// Around the two ends of the door's jambs, which lie 0.8 m apart: never nearer than the radius to (5, 4.8).
+	for i, p := range a.FullPoints[1:] {
+		if d := segmentDistance(a.FullPoints[i], p, 5000, 4800); d < 350 {
+			t.Errorf("the full walk passes the jamb at %v mm", d)
+		}
+	}
+	if b := r.Approaches[1]; !strings.Contains(b.Problem, "start S2 has no room for a body of radius 350 mm; standing room begins 25") {
+		t.Errorf("a start 0.1 m off the wall: %+v", b)
+	}
+	for radius, want := range map[string]bool{"0.3": true, "0.39": true, "0.4": false, "0.6": false} {
+		a := solve(t, room+"walker radius="+radius).Approaches[0]
+		if a.HasFullWalk != want {
+			t.Errorf("a body of radius %s passes a door of 0.8 m: %v, want %v", radius, a.HasFullWalk, want)
+		}
+		if !want && !strings.Contains(a.Reason, "too narrow") {
+			t.Errorf("radius %s: reason %q", radius, a.Reason)
+		}
+	}
+}
+
+func segmentDistance(a, b [2]float64, x, y float64) float64 {
+	dx, dy := b[0]-a[0], b[1]-a[1]
+	s := min(max(((x-a[0])*dx+(y-a[1])*dy)/(dx*dx+dy*dy), 0), 1)
+	return math.Hypot(a[0]+s*dx-x, a[1]+s*dy-y)
+}
+
+// TestGrowK16 holds the walk around a pillar with a body against the closed form for round corners,
+// 2 sqrt(10-r²) + 2r(atan(1/3) + asin(r/sqrt 10)) + 2, worked out by hand from the shortest walk among grown obstacles
+// (Lozano-Perez and Wesley, CACM 22, 1979). The polygon that stands for the disc may make it longer by its excess only.
+func TestGrowK16(t *testing.T) {
+	r := solve(t, "floor -20,-20 30,-20 30,30 -20,30; block 4,4 6,4 6,6 4,6; start 5,1; target 5,9; walker radius=0.5")
+	round := func(r float64) float64 {
+		return 2*math.Sqrt(10-r*r) + 2*r*(math.Atan(1./3)+math.Asin(r/math.Sqrt(10))) + 2
+	}
+	got := r.Approaches[0].FullWalk / 1000
+	if lo, hi := round(.5), round(.5+r.RadiusExcess/1000); got < lo || got > hi || math.Abs(lo-8.725529) > 1e-6 {
+		t.Errorf("full walk %v m, not between %v and %v", got, lo, hi)
+	}
+	if !r.Approaches[0].Ties {
+		t.Error("the walk around the other side is as long and not reported")
+	}
+}
+
+// TestGrowK39 walks between two pillars whose nearest corners lie sqrt 2 apart: a body passes up to half of that, less the
+// stated excess of its polygon.
+func TestGrowK39(t *testing.T) {
+	const plan = "floor 0,0 9,0 9,9 0,9; block 0,0 4,0 4,4 0,4; block 5,5 9,5 9,9 5,9; start 2,7; target 7,2; walker radius="
+	for radius, want := range map[string]bool{"0.5": true, "0.7": true, "0.7072": false, "0.8": false} {
+		if got := solve(t, plan+radius).Approaches[0].HasFullWalk; got != want {
+			t.Errorf("a body of radius %s passes: %v, want %v", radius, got, want)
+		}
+	}
+}

@@ -1,0 +1,163 @@
+package study
+
+import (
+	"context"
+	"fmt"
+	"math"
+
+	"enfilade/solver/arrange"
+	"enfilade/solver/exact"
+	"enfilade/solver/mesh"
+	"enfilade/solver/plan"
+)
+
+// ground is an outline with its rounded graph and its mesh.
+type ground struct {
+	outline *arrange.Outline
+	graph   *arrange.Graph
+	mesh    *mesh.Mesh
+}
+
+// makeGround rounds and triangulates an outline.
+func makeGround(ctx context.Context, o *arrange.Outline) (*ground, error) {
+	g := arrange.Round(o)
+	if err := ctx.Err(); err != nil {
+		return nil, err
+	}
+	m, err := arrange.Build(ctx, g)
+	if err != nil {
+		return nil, fmt.Errorf("study: %w", err)
+	}
+	return &ground{o, g, m}, nil
+}
+
+// blindAt says of a triangle whether it is solid at the height of an eye.
+func (g *ground) blindAt(eye int32) func(tri int32) bool {
+	return func(tri int32) bool { return g.mesh.Solid[tri] >= eye }
+}
+
+// shut says of a triangle whether nobody stands in it.
+func (g *ground) shut(tri int32) bool { return g.mesh.Tris[tri].Flags&mesh.FlagNoWalk != 0 }
+
+// free reports whether some triangle that holds p is not shut.
+func (g *ground) free(p exact.Pt, shut func(int32) bool) bool {
+	some := false
+	g.holding(p, func(t int32) { some = some || !shut(t) })
+	return some
+}
+
+// holding calls do for every triangle that holds p.
+func (g *ground) holding(p exact.Pt, do func(tri int32)) {
+	place, ok := g.mesh.Locate(p)
+	switch {
+	case !ok:
+	case place.Corner >= 0:
+		g.mesh.Around(mesh.EdgeOf(place.Tri, place.Corner), func(e mesh.Edge) { do(e.Tri()) })
+	case place.Edge != mesh.None:
+		do(place.Tri)
+		if twin := g.mesh.Twin(place.Edge); twin != mesh.None {
+			do(twin.Tri())
+		}
+	default:
+		do(place.Tri)
+	}
+}
+
+// holder returns the item whose outline lies nearest, counted in triangles, around the solid place p.
+func (g *ground) holder(p exact.Pt, shut func(int32) bool) plan.Ref {
+	place, ok := g.mesh.Locate(p)
+	if !ok {
+		return plan.Ref{Kind: plan.KindFloor}
+	}
+	queue, seen := []int32{place.Tri}, map[int32]bool{place.Tri: true}
+	for len(queue) > 0 {
+		t := queue[0]
+		queue = queue[1:]
+		for i := range 3 {
+			e := mesh.EdgeOf(t, i)
+			n := g.mesh.Twin(e)
+			if n == mesh.None {
+				continue
+			}
+			if con := g.mesh.Con[e]; con >= 0 && !shut(n.Tri()) {
+				return g.outline.Items[g.graph.Edges[con].Item]
+			}
+			if !seen[n.Tri()] {
+				seen[n.Tri()] = true
+				queue = append(queue, n.Tri())
+			}
+		}
+	}
+	return plan.Ref{Kind: plan.KindFloor}
+}
+
+// roomNear returns the distance from p to the nearest place on which the walker can stand, +Inf if there is none. It looks
+// through the triangles from p outwards, nearest edges first.
+func (g *ground) roomNear(p exact.Pt) float64 {
+	place, ok := g.mesh.Locate(p)
+	if !ok {
+		return math.Inf(1)
+	}
+	type entry struct {
+		tri  int32
+		dist float64
+	}
+	open, seen := []entry{{place.Tri, 0}}, map[int32]bool{place.Tri: true}
+	for len(open) > 0 {
+		k := 0
+		for i, e := range open {
+			if e.dist < open[k].dist {
+				k = i
+			}
+		}
+		now := open[k]
+		open[k] = open[len(open)-1]
+		open = open[:len(open)-1]
+		if !g.shut(now.tri) {
+			return now.dist
+		}
+		t := &g.mesh.Tris[now.tri]
+		for i := range 3 {
+			if n := t.N[i]; n != mesh.None && !seen[n.Tri()] {
+				seen[n.Tri()] = true
+				open = append(open, entry{n.Tri(), max(now.dist, distance(p, t.P[i], t.P[mesh.Inc(i)]))})
+			}
+		}
+	}
+	return math.Inf(1)
+}
+
+// distance returns the distance of p from the segment ab in grid units; it only measures.
+func distance(p, a, b exact.Pt) float64 {
+	d := b.Sub(a)
+	t := min(max(float64(p.Sub(a).Dot(d))/float64(d.Len2()), 0), 1)
+	return math.Hypot(float64(p.X-a.X)-t*float64(d.X), float64(p.Y-a.Y)-t*float64(d.Y))
+}
+
+// rooms numbers the connected parts of the floor: for each triangle the number of its part, -1 where nobody stands. O(n).
+func (g *ground) rooms() []int32 {
+	room := make([]int32, len(g.mesh.Tris))
+	for i := range room {
+		room[i] = -1
+	}
+	var stack []int32
+	for t, count := int32(0), int32(0); int(t) < len(room); t++ {
+		if room[t] >= 0 || g.shut(t) {
+			continue
+		}
+		room[t] = count
+		for stack = append(stack, t); len(stack) > 0; {
+			now := stack[len(stack)-1]
+			stack = stack[:len(stack)-1]
+			tri := &g.mesh.Tris[now]
+			for i := range 3 {
+				if n := tri.N[i]; !tri.StopsWalk(i) && room[n.Tri()] < 0 {
+					room[n.Tri()] = count
+					stack = append(stack, n.Tri())
+				}
+			}
+		}
+		count++
+	}
+	return room
+}
