@@ -1,0 +1,50 @@
+package verbs
+
+import (
+	"bufio"
+	"context"
+	"fmt"
+
+	"enfilade/fileio/report"
+	"enfilade/solver/study"
+)
+
+// studyVerb works out everything in a plan and prints it.
+type studyVerb struct {
+	Plan    string `arg:""`
+	JSON    bool   `name:"json"`
+	Picture string
+	Theme   string `enum:"light,dark" default:"light"`
+}
+
+// Run reads, solves, draws if asked to, and prints.
+func (v *studyVerb) Run(ctx context.Context, p *Program) error {
+	if err := picturePath(v.Picture); err != nil {
+		return err
+	}
+	drawn, err := readPlan(v.Plan)
+	if err != nil {
+		return err
+	}
+	result, err := study.Solve(ctx, drawn)
+	if err != nil {
+		return fmt.Errorf("%s: study: %w", v.Plan, err)
+	}
+	if v.Picture != "" {
+		if err := drawPicture(v.Picture, v.Theme, drawn, result); err != nil {
+			return err
+		}
+	}
+	write := report.Text
+	if v.JSON {
+		write = report.JSON
+	}
+	out := bufio.NewWriter(p.Out)
+	if err := write(out, drawn, result); err != nil {
+		return fmt.Errorf("standard output: study: %w", err)
+	}
+	if err := out.Flush(); err != nil {
+		return fmt.Errorf("standard output: study: %w", err)
+	}
+	return nil
+}
