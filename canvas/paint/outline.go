@@ -1,0 +1,149 @@
+package paint
+
+import (
+	"enfilade/solver/plan"
+)
+
+// outlines draws a line about what is under the pointer and about what is selected, a few px outside of it.
+func (p *pen) outlines() {
+	if h := p.s.Hover; h.ID != "" && !p.s.selected(h) {
+		m := p.begin()
+		p.outlineOf(h, HoverOffset)
+		p.op(m, p.stroked(at(p.theme.Ink, 0.55), StrokeStyle{Width: 1.5}))
+	}
+	m := p.begin()
+	for _, ref := range p.s.Selected {
+		p.outlineOf(ref, SelectedOffset)
+	}
+	p.op(m, p.stroked(p.theme.Ink, StrokeStyle{Width: 2}))
+}
+
+// outlineOf adds the outline of a part, so many px outside of it.
+func (p *pen) outlineOf(ref plan.Ref, off float64) {
+	switch ref.Kind {
+	case plan.KindWall, plan.KindBlock:
+		p.outlineBodies(ref, off)
+	case plan.KindOpening:
+		p.outlineDoor(ref, off)
+	case plan.KindObserver:
+		if o, ok := p.s.Plan.Observer(ref.ID); ok && !o.Hidden && ref.ID != p.s.Observer {
+			p.disc(p.point(o.At), (ObserverRadius+off)*p.k)
+		}
+	case plan.KindTarget:
+		if t, ok := p.s.Plan.Target(ref.ID); ok && !t.Hidden {
+			p.disc(p.targetPlace(t), (TargetRadius+0.9+off)*p.k)
+		}
+	case plan.KindStart:
+		if s, ok := p.s.Plan.Start(ref.ID); ok && !s.Hidden {
+			x, y := MatPlace(p.cam, s)
+			p.roundRect(p.turtleAt(place{x, y}, p.startHeading(s)), MatWidth+2*off+1.3, MatLength+2*off+1.3, 2+off)
+		}
+	case plan.KindZone:
+		p.outlineZone(ref)
+	case plan.KindFloor:
+		p.addRing(p.frame, p.floorRing(p.s.Plan))
+	}
+}
+
+func (p *pen) outlineZone(ref plan.Ref) {
+	for _, z := range p.s.Plan.Zones() {
+		if z.ID != ref.ID {
+			continue
+		}
+		ring := p.work.ring[:0]
+		for _, q := range z.Ring.All() {
+			ring = append(ring, p.point(q))
+		}
+		p.work.ring = ring
+		p.addRing(p.frame, ring)
+	}
+}
+
+// outlineBodies goes about the bodies and lines of one item, in its new place when it is dragged.
+func (p *pen) outlineBodies(ref plan.Ref, off float64) {
+	d := p.drawing
+	if p.held != nil {
+		if _, ok := p.held.refs[ref]; ok {
+			d = p.held
+		}
+	}
+	sp, ok := d.refs[ref]
+	if !ok {
+		return
+	}
+	for i := sp.body0; i < sp.body1; i++ {
+		if b := &d.bodies[i]; b.item == ref && !b.hidden {
+			for _, r := range d.rings[b.rings[0]:b.rings[1]] {
+				ring := p.work.ring[:0]
+				for _, q := range d.pts[r[0]:r[1]] {
+					ring = append(ring, p.point(q))
+				}
+				p.work.ring = ring
+				p.addOffset(ring, off*p.k)
+			}
+		}
+	}
+	for i := sp.line0; i < sp.line1; i++ {
+		if ln := &d.lines[i]; ln.item == ref && !ln.hidden {
+			p.addAround(p.chain(d, ln), (off+1)*p.k)
+		}
+	}
+}
+
+func (p *pen) outlineDoor(ref plan.Ref, off float64) {
+	d := p.drawing
+	if p.held != nil {
+		if _, ok := p.held.refs[ref]; ok {
+			d = p.held
+		}
+	}
+	for i := range d.doors {
+		if dr := &d.doors[i]; dr.item == ref && !dr.hidden {
+			ring := append(p.work.ring[:0], p.grid(dr.right[0]), p.grid(dr.right[1]), p.grid(dr.left[1]), p.grid(dr.left[0]))
+			p.work.ring = ring
+			p.addOffset(ring, off*p.k)
+		}
+	}
+}
+
+// addOffset adds a ring moved outwards by d pixels. The ring has its inside to the left in the plan, so outwards lies to the
+// left of its direction on the picture, where y points down. Corners are mitred, sharp ones cut off.
+func (p *pen) addOffset(ring []place, d float64) {
+	out := p.work.route[:0]
+	n := len(ring)
+	for i, q := range ring {
+		in, l1 := vec(ring[(i+n-1)%n]).towards(vec(q))
+		on, l2 := vec(q).towards(vec(ring[(i+1)%n]))
+		if l1 == 0 || l2 == 0 {
+			continue
+		}
+		a, b := in.left(), on.left()
+		if c := 1 + a.x*b.x + a.y*b.y; c > 0.3 {
+			s := d / c
+			out = append(out, place{q.x + (a.x+b.x)*s, q.y + (a.y+b.y)*s})
+		} else {
+			out = append(out, place{q.x + (a.x+in.x)*d, q.y + (a.y+in.y)*d}, place{q.x + (b.x-on.x)*d, q.y + (b.y-on.y)*d})
+		}
+	}
+	p.work.route = out
+	p.addRing(p.frame, out)
+}
+
+// addAround adds a ring about an open line, d pixels off it on all sides.
+func (p *pen) addAround(line []place, d float64) {
+	ring := append(p.work.ring[:0:0], line...)
+	for i := len(line) - 2; i > 0; i-- {
+		ring = append(ring, line[i])
+	}
+	if len(line) == 2 { // a ring of two points: both ends turn back
+		u, _ := vec(line[0]).towards(vec(line[1]))
+		n, e := u.left().times(d), u.times(d)
+		a, b := line[0], line[1]
+		p.addRing(p.frame, []place{
+			{a.x - e.x + n.x, a.y - e.y + n.y}, {b.x + e.x + n.x, b.y + e.y + n.y},
+			{b.x + e.x - n.x, b.y + e.y - n.y}, {a.x - e.x - n.x, a.y - e.y - n.y},
+		})
+		return
+	}
+	p.addOffset(ring, d)
+}
