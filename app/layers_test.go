@@ -41,7 +41,7 @@ var layers = map[string][]string{
 	"canvas/view":   {"solver/exact"},
 	"canvas/pick":   {"solver/exact", "solver/plan", "canvas/view"},
 	"canvas/tool":   {"solver/exact", "solver/plan", "canvas/view", "canvas/pick"},
-	"canvas/paint":  {"solver/exact", "solver/plan", "solver/study", "canvas/view"},
+	"canvas/paint":  {"solver/exact", "solver/plan", "solver/arrange", "solver/study", "canvas/view", "assets"},
 	"canvas/raster": {"canvas/paint", "assets"},
 
 	"fileio/planfile": {"solver/exact", "solver/plan"},
