@@ -58,6 +58,14 @@ type jsonApproach struct {
 	Ties           bool        `json:"ties"`
 }
 
+// jsonWalker is the person who walks, as the walks were solved for.
+type jsonWalker struct {
+	EyeMM          *float64 `json:"eye_mm"`
+	RadiusMM       *float64 `json:"radius_mm"`
+	RadiusExcessMM *float64 `json:"radius_excess_mm"` // what walks may keep clear beyond the radius
+	PaceMS         *float64 `json:"pace_m_s"`
+}
+
 // jsonItem names one item.
 type jsonItem struct {
 	Kind string `json:"kind"`
@@ -74,12 +82,13 @@ type jsonProblem struct {
 
 // JSON writes the result as one JSON object, one entry a line.
 //
-//   - Members: title, sight, seen_from, approaches, problems, caution; their entries as in README.
+//   - Members: title, walker, sight, seen_from, approaches, problems, caution; their entries as in README.
 //   - Units: as the end of each name says; coordinates in mm, rings counter-clockwise, first point not repeated.
 //   - Errors: those of w.
 func JSON(w io.Writer, p *plan.Plan, r *study.Result) error {
 	j := &jsonWriter{out: bufio.NewWriter(w)}
 	j.write("{\"title\": ", p.Sheet().Title)
+	j.write(",\n\"walker\": ", jsonWalker{number(r.WalkerEye), number(r.WalkerRadius), number(r.RadiusExcess), number(p.Walker().Pace)})
 	list(j, ",\n\"sight\": [", r.Sight, observerEntry)
 	list(j, ",\n\"seen_from\": [", r.SeenFrom, targetEntry)
 	list(j, ",\n\"approaches\": [", r.Approaches, func(a study.Approach) any { return approachEntry(a, r.WalkerEye) })

@@ -33,7 +33,7 @@ func sample(unit string) (*plan.Plan, *study.Result) {
 	})
 	square := orb.Ring{{0, math.Copysign(0, -1)}, {1e4 / 3, 0}, {1e4 / 3, 1000}, {0, 1000}}
 	r := &study.Result{
-		WalkerEye: 1600,
+		WalkerEye: 1600, WalkerRadius: 300, RadiusExcess: 5.84,
 		Sight: []study.Sight{
 			{Item: plan.Ref{Kind: plan.KindObserver, ID: "A"}, Name: "Keeper", Eye: 1600, Area: 10.0 / 3, Perimeter: 26.0 / 3,
 				Wall: 20.0 / 3, Occluding: 2, Boundary: square, TargetsSeen: []string{"T1", "T3"}},

@@ -108,8 +108,12 @@ func (t *texter) approaches() {
 		return
 	}
 	pace := strconv.FormatFloat(t.plan.Walker().Pace, 'g', -1, 64)
-	t.b.WriteString("\nWalk from each start until each target first comes into sight, " + t.eye() + ", at " + pace + " m/s\n")
 	u := t.unit
+	t.b.WriteString("\nWalk from each start until each target first comes into sight, " + t.eye() + ", at " + pace + " m/s\n")
+	if t.result.WalkerRadius > 0 {
+		fmt.Fprintf(&t.b, "  keeping %s clear of what stops walking, and at most %s mm more\n", u.named(t.result.WalkerRadius),
+			decimal(t.result.RadiusExcess, 1))
+	}
 	table := table{columns: []column{{"start", false}, {"target", false}, {"walk " + u.name, true}, {"s", true},
 		{"first sight at", true}, {"sight line " + u.name, true}, {"full walk " + u.name, true}, {"", false}}}
 	ties := false
