@@ -36,7 +36,7 @@ var layers = map[string][]string{
 
 	"solver/plantest/cgal": {"solver"}, // it compares every layer of the solver with CGAL
 
-	"assets": {},
+	"assets": {"testdata/plans"}, // which embeds the sample plans from their folder, and nothing else
 
 	"canvas/view":   {"solver/exact"},
 	"canvas/pick":   {"solver/exact", "solver/plan", "canvas/view"},
