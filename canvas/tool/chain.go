@@ -264,13 +264,21 @@ func (t *Chain) Sketch(h Host) Sketch {
 	}
 	to := t.target(h)
 	s.Band, s.Handles, s.LabelAt = []exact.Pt{t.pts[n-1], to}, t.pts, to
-	s.Dragged = []plan.Ref{} // the run is new: nothing of the committed plan moves
+	s.Dragged = t.drawn(h)
 	s.Label = fmt.Sprintf("%s · %s°", h.FormatLength(exact.Dist(t.pts[n-1], to)), degrees(bearing(t.pts[n-1], to)))
 	if t.length != "" || t.angle != "" || t.inAngle {
 		s.Typed = true
 		s.Label = t.typedLabel()
 	}
 	return s
+}
+
+// drawn names what is being drawn: the new wall, or the floor.
+func (t *Chain) drawn(h Host) []plan.Ref {
+	if t.Floor {
+		return []plan.Ref{{Kind: plan.KindFloor}}
+	}
+	return []plan.Ref{plan.AddWall{}.Added(h.Plan())}
 }
 
 // typedLabel shows both fields, the one that is being typed with a bar behind it.

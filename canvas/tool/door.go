@@ -102,6 +102,9 @@ func (t *Door) Sketch(h Host) Sketch {
 	at := along(t.place.A, t.place.B, float64(t.place.Along)/d)
 	s.Snap = &pick.Snap{At: at, Kind: pick.SnapAlong, Edge: [2]exact.Pt{t.place.A, t.place.B}}
 	s.Dragged = []plan.Ref{{Kind: plan.KindWall, ID: t.place.Wall}}
+	if ref, ok := added(h, t.edit); ok {
+		s.Dragged = append(s.Dragged, ref)
+	}
 	if t.from != nil && *t.from != t.place.Along {
 		s.Label, s.LabelAt = h.FormatLength(abs(float64(*t.from)-float64(t.place.Along))), at
 	}

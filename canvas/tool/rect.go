@@ -111,7 +111,9 @@ func (t *Rect) Sketch(h Host) Sketch {
 	if t.from == nil {
 		return s
 	}
-	s.Dragged = []plan.Ref{}
+	if ref, ok := added(h, t.edit); ok {
+		s.Dragged = []plan.Ref{ref}
+	}
 	v := t.at.Sub(*t.from)
 	s.Label = fmt.Sprintf("%s × %s", h.FormatLength(float64(abs(v.X))), h.FormatLength(float64(abs(v.Y))))
 	s.LabelAt = t.at

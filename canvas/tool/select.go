@@ -210,7 +210,8 @@ func handles(p *plan.Plan, sel []plan.Ref) []exact.Pt {
 	var out []exact.Pt
 	for _, r := range sel {
 		c, ok := pick.Points(p, r)
-		if !ok || len(out)+c.Len() > most {
+		mark := r.Kind == plan.KindObserver || r.Kind == plan.KindTarget || r.Kind == plan.KindStart
+		if !ok || mark || len(out)+c.Len() > most {
 			continue
 		}
 		for _, q := range c.All() {

@@ -1,0 +1,93 @@
+package gui
+
+import (
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/widget"
+)
+
+// entry is a field for one value: Enter and leaving it take the text over, Escape puts the old text back. A text that is
+// not taken stays, and its fault is told.
+type entry struct {
+	widget.Entry
+	shown  string                  // the text last put in by the program
+	accept func(text string) error // takes the text over
+	fault  func(err error)         // shows why it was not, or nil that all is well; may be nil
+	leave  func()                  // gives the focus back; may be nil
+	faulty bool
+	inside bool // it has the focus
+}
+
+func newEntry(accept func(string) error) *entry {
+	e := &entry{accept: accept}
+	e.ExtendBaseWidget(e)
+	return e
+}
+
+// put shows the program's text, unless someone is typing.
+func (e *entry) put(text string) {
+	if e.shown == text && !e.faulty || e.inside && e.Text != e.shown {
+		return
+	}
+	e.shown = text
+	e.SetText(text)
+	e.say(nil)
+}
+
+// take takes the text over when it was changed.
+func (e *entry) take() {
+	if e.Text == e.shown && !e.faulty {
+		return
+	}
+	text := e.Text
+	if err := e.accept(text); err != nil {
+		e.say(err)
+		return
+	}
+	e.shown = text
+	e.say(nil)
+}
+
+func (e *entry) say(err error) {
+	e.faulty = err != nil
+	if e.fault != nil {
+		e.fault(err)
+	}
+}
+
+// FocusGained is for the toolkit.
+func (e *entry) FocusGained() {
+	e.inside = true
+	e.Entry.FocusGained()
+}
+
+// FocusLost takes the text over.
+func (e *entry) FocusLost() {
+	e.inside = false
+	e.Entry.FocusLost()
+	e.take()
+}
+
+// TypedKey is for the toolkit.
+func (e *entry) TypedKey(k *fyne.KeyEvent) {
+	switch k.Name {
+	case fyne.KeyReturn, fyne.KeyEnter:
+		e.take()
+	case fyne.KeyEscape:
+		e.SetText(e.shown)
+		e.say(nil)
+		if e.leave != nil {
+			e.leave()
+		}
+	default:
+		e.Entry.TypedKey(k)
+	}
+}
+
+// undoable is a field that has its own undo, which Ctrl+Z means while it has the focus.
+type undoable interface {
+	Undo()
+	Redo()
+	TypedShortcut(fyne.Shortcut)
+}
+
+var _ undoable = (*entry)(nil)

@@ -1,0 +1,245 @@
+package gui
+
+import (
+	"bytes"
+	"errors"
+	"fmt"
+	"image/png"
+	"io"
+	"io/fs"
+	"os"
+	"path/filepath"
+	"slices"
+	"strings"
+
+	"enfilade/assets"
+	"enfilade/canvas/raster"
+	"enfilade/fileio/planfile"
+	"enfilade/fileio/store"
+	"enfilade/solver/plan"
+)
+
+// Names of what is remembered between sessions.
+const (
+	prefTheme  = "theme"
+	prefRecent = "recent"
+	maxRecent  = 8
+)
+
+// unlessUnsaved does go at once, or asks first what is to become of unsaved work.
+func (w *window) unlessUnsaved(goOn func()) {
+	if w.modal != nil {
+		return
+	}
+	w.tool.Stop(w.host)
+	if !w.session.Dirty() || emptyPlan(w.session.Plan()) && w.session.Path() == "" {
+		goOn()
+		return
+	}
+	w.ask("Save the changes first?", lines("The plan has changes that no file holds yet."), 440,
+		choice{"Save", func() { w.save(goOn) }},
+		choice{"Discard", goOn},
+		choice{"Cancel", nil})
+}
+
+// quit closes the window for good.
+func (w *window) quit() {
+	w.closing = true
+	w.close()
+	w.win.Close()
+}
+
+// newPlan opens an empty plan.
+func (w *window) newPlan() { w.show(func() { w.session.Open(plan.New(), "") }) }
+
+// show puts another plan in the window: load opens it in the session.
+func (w *window) show(load func()) {
+	w.notice.hide()
+	w.tool.Stop(w.host)
+	w.results.reset(w.session.Rev() + 1)
+	load()
+	w.choose(0)
+	w.view.fit()
+	w.report()
+}
+
+// open reads a plan file and shows it; a fault leaves the plan that is open.
+func (w *window) open(path string) {
+	p, err := readPlan(path)
+	if err != nil {
+		w.notice.show(sentence(failure(err)), "Open another…", func() { w.unlessUnsaved(w.askOpen) })
+		return
+	}
+	w.show(func() { w.session.Open(p, path) })
+	w.remember(path)
+}
+
+func readPlan(path string) (*plan.Plan, error) {
+	f, err := os.Open(path)
+	if err != nil {
+		return nil, err
+	}
+	defer f.Close() // it was only read
+	return planfile.Read(f, filepath.Base(path))
+}
+
+// openSample shows a sample plan. It has no file: it is saved as whatever one likes.
+func (w *window) openSample(name string) {
+	p, err := planfile.Read(bytes.NewReader(assets.SamplePlan(name)), name)
+	if err != nil {
+		w.notice.show(sentence(failure(err)), "New plan", w.newPlan)
+		return
+	}
+	w.show(func() { w.session.Open(p, "") })
+}
+
+// save writes the plan to its file, asking for one when it has none, and then goes on.
+func (w *window) save(goOn func()) {
+	if path := w.session.Path(); path != "" {
+		w.write(path, goOn)
+		return
+	}
+	w.askSave(goOn)
+}
+
+// write saves the committed plan at path.
+func (w *window) write(path string, goOn func()) {
+	p := w.session.Committed()
+	if err := store.Save(path, func(out io.Writer) error { return planfile.Write(out, p) }); err != nil {
+		w.notice.show(sentence("the plan was not saved: "+failure(err)), "Save elsewhere…", func() { w.askSave(goOn) })
+		return
+	}
+	w.session.Saved(p, path)
+	w.notice.hide()
+	w.remember(path)
+	w.acted()
+	if goOn != nil {
+		goOn()
+	}
+}
+
+// askOpen asks for a plan file and opens it.
+func (w *window) askOpen() {
+	w.askFile("Open a plan", "Open", "", planSuffix, w.open)
+}
+
+// askSave asks where to save the plan, saves it there, and goes on.
+func (w *window) askSave(goOn func()) {
+	name := w.session.Path()
+	if name == "" {
+		name = fileName(w.session.Plan().Sheet().Title) + planSuffix
+	}
+	w.askFile("Save the plan as", "Save", filepath.Base(name), planSuffix, func(path string) {
+		w.unlessThere(withSuffix(path, planSuffix), func(path string) { w.write(path, goOn) })
+	})
+}
+
+// askPicture asks where to write the picture as the window shows it.
+func (w *window) askPicture() {
+	name := strings.TrimSuffix(filepath.Base(w.session.Path()), planSuffix)
+	if w.session.Path() == "" {
+		name = fileName(w.session.Plan().Sheet().Title)
+	}
+	w.askFile("Export the picture as", "Export", name+".png", ".png", func(path string) {
+		w.unlessThere(withSuffix(path, ".png"), w.writePicture)
+	})
+}
+
+func (w *window) writePicture(path string) {
+	img := raster.Picture(w.picture.scene())
+	if err := store.Save(path, func(out io.Writer) error { return png.Encode(out, img) }); err != nil {
+		w.notice.show(sentence("the picture was not written: "+failure(err)), "Write elsewhere…", w.askPicture)
+	}
+}
+
+// unlessThere does go, after asking when there is another file at path already.
+func (w *window) unlessThere(path string, goOn func(string)) {
+	if _, err := os.Stat(path); err != nil || path == w.session.Path() {
+		goOn(path)
+		return
+	}
+	w.ask("Replace the file?", lines(fmt.Sprintf("There is a file %s already.", filepath.Base(path))), 440,
+		choice{"Replace", func() { goOn(path) }}, choice{"Cancel", nil})
+}
+
+// askFile asks for a file, beginning in the folder of the open plan.
+func (w *window) askFile(title, verb, name, suffix string, done func(string)) {
+	folder := filepath.Dir(w.session.Path())
+	if w.session.Path() == "" {
+		folder = w.home()
+	}
+	var m *modal
+	c := newChooser(folder, name, suffix, func(path string) { m.choose(0) })
+	c.path.leave = func() { m.choose(1) }
+	m = w.ask(title, c.content, 620, choice{verb, func() {
+		if path := c.path.Text; isFolder(path) {
+			w.askFile(title, verb, name, suffix, done)
+		} else {
+			done(path)
+		}
+	}}, choice{"Cancel", nil})
+	w.win.Canvas().Focus(c.path)
+	c.path.CursorColumn = len([]rune(c.path.Text))
+}
+
+// home is where files are looked for when no plan is open: the folder of the last one, else the working folder.
+func (w *window) home() string {
+	if r := w.recent(); len(r) > 0 && isFolder(filepath.Dir(r[0])) {
+		return filepath.Dir(r[0])
+	}
+	dir, err := os.Getwd()
+	if err != nil {
+		return string(filepath.Separator)
+	}
+	return dir
+}
+
+// recent returns the plans opened or saved last, newest first.
+func (w *window) recent() []string { return w.app.Preferences().StringList(prefRecent) }
+
+// remember puts a plan at the head of the recent ones.
+func (w *window) remember(path string) {
+	if abs, err := filepath.Abs(path); err == nil {
+		path = abs
+	}
+	list := append([]string{path}, slices.DeleteFunc(slices.Clone(w.recent()), func(p string) bool { return p == path })...)
+	w.app.Preferences().SetStringList(prefRecent, list[:min(len(list), maxRecent)])
+	w.menu.setRecent()
+}
+
+// fileName makes a title a name for a file.
+func fileName(title string) string {
+	s := strings.Map(func(r rune) rune {
+		switch {
+		case r == ' ':
+			return '-'
+		case strings.ContainsRune(`/\:*?"<>|`, r) || r < ' ':
+			return -1
+		}
+		return r
+	}, strings.ToLower(strings.TrimSpace(title)))
+	if s == "" {
+		return "plan"
+	}
+	return s
+}
+
+func withSuffix(path, suffix string) string {
+	if filepath.Ext(path) == "" {
+		return path + suffix
+	}
+	return path
+}
+
+// failure is an error as people read it: without where in the program it was found.
+func failure(err error) string {
+	var fault *planfile.Fault
+	var path *fs.PathError
+	switch {
+	case errors.As(err, &fault):
+		return fault.Error()
+	case errors.As(err, &path):
+		return fmt.Sprintf("%s: %v", filepath.Base(path.Path), path.Err)
+	}
+	return err.Error()
+}

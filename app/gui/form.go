@@ -1,0 +1,227 @@
+package gui
+
+import (
+	"strconv"
+
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/container"
+
+	"enfilade/assets"
+	"enfilade/canvas/paint"
+	"enfilade/solver/plan"
+)
+
+// form shows what is selected and lets its measures be changed.
+type form struct {
+	w      *window
+	box    *fyne.Container
+	page   *fyne.Container
+	title  *inkText
+	key    string
+	where  *inkText
+	letter *inkText
+	icon   *icon
+	rows   []*formRow
+	facts  []*factText
+	fault  *inkText
+}
+
+// formRow is one field of the form on the window.
+type formRow struct {
+	field field
+	entry *entry
+	pick  *picker
+	dots  *swatches
+	note  *inkText
+}
+
+// factText is one figure under the form.
+type factText struct{ value, label *inkText }
+
+// Measures of the form, in px at 100 %.
+const (
+	formSide   = 18
+	labelWidth = 104
+	entryWidth = 92
+	rowHeight  = 34 // from one line to the next
+)
+
+func newForm(w *window) *form {
+	f := &form{w: w, title: caption("").right(), page: pile()}
+	head := around(nil, nil, heading("Selection"), nil, f.title)
+	scroll := container.NewThemeOverride(container.NewVScroll(inset(formSide, 0, formSide, 12, f.page)), tightLook{w})
+	f.box = around(inset(formSide, 14, formSide, 8, head), nil, nil, nil, scroll)
+	return f
+}
+
+// update shows the selection: a new form for another item, new texts in the same form for the same one.
+func (f *form) update(p *plan.Plan, sel []plan.Ref) {
+	c := f.w.describe(p, sel)
+	if c.key != f.key || len(c.fields) != len(f.rows) || len(c.facts) != len(f.facts) {
+		f.build(c)
+	}
+	f.put(c)
+}
+
+// build makes the form's widgets.
+func (f *form) build(c card) {
+	f.key, f.rows, f.facts = c.key, nil, nil
+	f.page.Objects = nil
+	f.title.set(c.title)
+	f.head(c)
+	for i, h := range c.hint {
+		line := caption(h)
+		if i == 0 {
+			line = body(h)
+		}
+		f.page.Add(line)
+	}
+	if c.group != "" {
+		f.page.Add(inset(0, 12, 0, 2, newText(c.group, assets.Semibold, 12.5, roleInk)))
+	}
+	for i := range c.fields {
+		f.page.Add(f.row(c.fields[i]))
+	}
+	f.fault = newText("", assets.Regular, 12, roleRed).shrinking()
+	f.page.Add(f.fault)
+	f.figures(c.facts)
+	if c.delete {
+		f.page.Add(inset(0, 10, 0, 0, container.NewHBox(newPushButton("Delete", func() { f.w.typedKey(fyne.KeyDelete) }))))
+	}
+	f.page.Refresh()
+}
+
+// head is the item's sign, letter and place.
+func (f *form) head(c card) {
+	f.icon, f.letter, f.where = nil, nil, nil
+	if c.icon == "" {
+		return
+	}
+	f.icon = newIcon(c.icon, 20, colourRole(c.colour))
+	f.letter = newText(c.letter, assets.Bold, 14, colourRole(c.colour))
+	f.where = caption(c.where).shrinking()
+	row := around(nil, nil, container.NewHBox(f.icon, f.letter), nil, inset(4, 0, 0, 0, f.where))
+	f.page.Add(inset(0, 0, 0, 6, row))
+}
+
+// colourRole is an observer's colour, or ink for -1.
+func colourRole(i int) role {
+	if i < 0 {
+		return roleInk
+	}
+	return func(t *paint.Theme) colour { return t.ObserverColour(i) }
+}
+
+// row makes one field.
+func (f *form) row(d field) fyne.CanvasObject {
+	r := &formRow{field: d, note: newText(d.note, assets.Regular, 11, roleInk3).shrinking()}
+	f.rows = append(f.rows, r)
+	var value fyne.CanvasObject
+	width := float32(entryWidth)
+	switch {
+	case d.colour:
+		r.dots = newSwatches(func(i int) { f.tell(r, r.field.pick(i)) })
+		value, width = r.dots, 0
+	case d.choices != nil:
+		r.pick = newPicker(d.choices, func(i int) { f.tell(r, r.field.pick(i)) })
+		value, width = r.pick, 0
+	default:
+		r.entry = newEntry(func(text string) error { return r.field.set(text) })
+		r.entry.fault = func(err error) { f.tell(r, err) }
+		r.entry.leave = func() { f.w.win.Canvas().Focus(f.w.view) }
+		r.entry.SetPlaceHolder(d.empty)
+		value = r.entry
+		if d.wide {
+			width = 0
+		}
+	}
+	unit := newText(d.unit, assets.Regular, 12.5, roleInk2)
+	return container.New(fieldLayout{width}, body(d.label), value, unit, r.note)
+}
+
+// tell shows why a field's text was not taken, in its note.
+func (f *form) tell(r *formRow, err error) {
+	if err == nil {
+		r.note.role = roleInk3
+		r.note.set(r.field.note)
+		r.note.Refresh()
+		return
+	}
+	r.note.role = roleRed
+	r.note.set(err.Error())
+	r.note.Refresh()
+}
+
+// figures are the facts in a row of up to three, set large.
+func (f *form) figures(facts []fact) {
+	if len(facts) == 0 {
+		return
+	}
+	var cells []fyne.CanvasObject
+	for range facts {
+		t := &factText{newText("", assets.Semibold, 17, roleInk), newText("", assets.Regular, 12, roleInk2)}
+		f.facts = append(f.facts, t)
+		cells = append(cells, pile(t.value, t.label))
+	}
+	f.page.Add(inset(0, 6, 0, 8, hairline()))
+	f.page.Add(container.NewGridWithColumns(len(cells), cells...))
+}
+
+// put shows the card's texts in the form.
+func (f *form) put(c card) {
+	f.title.set(c.title)
+	if f.where != nil {
+		f.where.set(c.where)
+		f.letter.role = colourRole(c.colour)
+		f.letter.set(c.letter)
+		f.icon.set(c.icon, colourRole(c.colour))
+	}
+	for i, r := range f.rows {
+		r.field = c.fields[i]
+		switch {
+		case r.entry != nil:
+			r.entry.put(r.field.text)
+		case r.pick != nil:
+			r.pick.put(r.field.chosen)
+		case r.dots != nil:
+			r.dots.put(r.field.chosen)
+		}
+	}
+	for i, t := range f.facts {
+		t.value.set(c.facts[i].value)
+		t.label.set(c.facts[i].label)
+	}
+	f.fault.set(sentence(c.fault))
+	f.fault.Hidden = c.fault == ""
+}
+
+// fieldLayout is a form's line: label, value, unit and note.
+type fieldLayout struct{ width float32 }
+
+// MinSize is for the toolkit.
+func (fieldLayout) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(240, rowHeight) }
+
+// Layout is for the toolkit.
+func (l fieldLayout) Layout(o []fyne.CanvasObject, s fyne.Size) {
+	label, value, unit, note := o[0], o[1], o[2], o[3]
+	label.Move(fyne.NewPos(0, 3))
+	label.Resize(fyne.NewSize(labelWidth, 27))
+	width := l.width
+	if width == 0 {
+		width = s.Width - labelWidth
+	}
+	value.Move(fyne.NewPos(labelWidth, 3))
+	value.Resize(fyne.NewSize(width, 27))
+	x := labelWidth + width + 8
+	u := unit.MinSize()
+	unit.Move(fyne.NewPos(x, 3))
+	unit.Resize(fyne.NewSize(u.Width, 27))
+	if u.Width > 0 {
+		x += u.Width + 8
+	}
+	note.Move(fyne.NewPos(x, 3))
+	note.Resize(fyne.NewSize(max(0, s.Width-x), 27))
+}
+
+// number writes a count or a figure for a fact.
+func number(v float64, decimals int) string { return strconv.FormatFloat(v, 'f', decimals, 64) }

@@ -1,0 +1,108 @@
+package gui
+
+import (
+	"fmt"
+
+	"github.com/paulmach/orb"
+
+	"enfilade/canvas/pick"
+	"enfilade/canvas/tool"
+	"enfilade/canvas/view"
+	"enfilade/solver/exact"
+	"enfilade/solver/plan"
+)
+
+// host is the window as the tools see it.
+type host struct{ w *window }
+
+var _ tool.Host = (*host)(nil)
+
+// Plan is for the tools.
+func (h *host) Plan() *plan.Plan { return h.w.session.Committed() }
+
+// Camera is for the tools.
+func (h *host) Camera() view.Camera { return h.w.view.cam }
+
+// Selection is for the tools.
+func (h *host) Selection() []plan.Ref { return h.w.session.Selection() }
+
+// Select is for the tools.
+func (h *host) Select(refs ...plan.Ref) { h.w.session.Select(refs...) }
+
+// Preview is for the tools.
+func (h *host) Preview(e plan.Edit) error { return h.w.session.Preview(e) }
+
+// Do is for the tools.
+func (h *host) Do(e plan.Edit) error { return h.w.session.Do(e) }
+
+// Cancel is for the tools.
+func (h *host) Cancel() { h.w.session.Cancel() }
+
+// Defaults is for the tools.
+func (h *host) Defaults() tool.Defaults { return h.w.measures }
+
+// ParseLength is for the tools.
+func (h *host) ParseLength(text string) (int32, error) { return parseLength(text, h.w.unit()) }
+
+// FormatLength is for the tools.
+func (h *host) FormatLength(units float64) string {
+	unit := h.w.unit()
+	if unit == "ft" {
+		return formatFeet(int32(units + 0.5))
+	}
+	decimals := map[string]int{"m": 2, "cm": 1, "mm": 0}[unitOf(unit)]
+	return fmt.Sprintf("%.*f %s", decimals, units/unitSizes[unitOf(unit)], unitOf(unit))
+}
+
+// unit is the plan's display unit.
+func (w *window) unit() string { return w.session.Plan().Sheet().Unit }
+
+// place returns the pointer's place in device pixels of the picture.
+func (v *planView) place() (x, y float64) {
+	return float64(v.last.X * v.pix), float64(v.last.Y * v.pix)
+}
+
+// boundsOf returns the box around a plan in mm, empty when there is nothing in it.
+func boundsOf(p *plan.Plan) orb.Bound {
+	lo, hi, ok := plan.Bounds(p)
+	if !ok {
+		return orb.Bound{Min: orb.Point{1, 1}, Max: orb.Point{-1, -1}}
+	}
+	mm := func(q exact.Pt) orb.Point { return orb.Point{float64(q.X) / exact.PerMM, float64(q.Y) / exact.PerMM} }
+	return orb.Bound{Min: mm(lo), Max: mm(hi)}
+}
+
+// emptyPlan reports whether nothing is drawn and nothing put down.
+func emptyPlan(p *plan.Plan) bool {
+	_, _, some := plan.Bounds(p)
+	return !some
+}
+
+// snapText says what the pointer snaps to.
+func snapText(s *pick.Snap, cam view.Camera) string {
+	if cam.Scale == 0 {
+		return ""
+	}
+	grid := "Snap: grid " + formatLength(pick.GridStep(cam), "m") + " m"
+	if s == nil {
+		return grid
+	}
+	switch s.Kind {
+	case pick.SnapCorner:
+		if s.Ref.Kind == plan.KindWall {
+			return "Snap: wall corner"
+		}
+		return "Snap: corner"
+	case pick.SnapAlong:
+		switch s.Ref.Kind {
+		case plan.KindOpening:
+			return "Snap: threshold"
+		case plan.KindWall:
+			return "Snap: along wall"
+		}
+		return "Snap: along edge"
+	case pick.SnapNone:
+		return "Snap: off"
+	}
+	return grid
+}

@@ -1,0 +1,38 @@
+package gui
+
+import (
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/container"
+	"fyne.io/fyne/v2/layout"
+)
+
+// notice is the strip under the menu bar that says what went wrong, in one sentence, with two ways on. It never hides the
+// drawing.
+type notice struct {
+	box  *fyne.Container
+	mark *icon
+	text *inkText
+	way  *fyne.Container
+}
+
+func newNotice() *notice {
+	n := &notice{mark: newIcon("fail", 16, roleRed), text: body("").shrinking(), way: container.NewHBox()}
+	row := container.New(layout.NewBorderLayout(nil, nil, n.mark, n.way), n.mark, n.way, inset(8, 0, 8, 0, n.text))
+	n.box = container.NewStack(newPaper(roleField), around(nil, hairline(), nil, nil, inset(18, 5, 18, 5, row)))
+	n.box.Hide()
+	return n
+}
+
+// show says the sentence; act is the first way on, and Close the second one.
+func (n *notice) show(sentence, action string, act func()) {
+	n.text.set(sentence)
+	n.way.Objects = []fyne.CanvasObject{
+		newPushButton(action, func() { n.hide(); act() }).first(),
+		newPushButton("Close", n.hide),
+	}
+	n.way.Refresh()
+	n.box.Show()
+	n.box.Refresh()
+}
+
+func (n *notice) hide() { n.box.Hide() }

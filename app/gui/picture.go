@@ -1,0 +1,191 @@
+package gui
+
+import (
+	"image"
+	"slices"
+	"sync/atomic"
+	"time"
+
+	"enfilade/app/live"
+	"enfilade/canvas/paint"
+	"enfilade/canvas/raster"
+	"enfilade/canvas/view"
+	"enfilade/solver/plan"
+)
+
+// picture draws the plan view's frames: a base that changes seldom, made by a worker, and over it what may change every
+// frame. It belongs to the toolkit's goroutine; only the worker runs beside it.
+type picture struct {
+	w       *window
+	frame   raster.Frame
+	overlay paint.List
+	worker  *baseWorker
+	base    *madeBase
+	shown   *paint.Scene // of the frame that was drawn last, used again
+}
+
+// baseKey is all that a base depends on.
+type baseKey struct {
+	obstacles *plan.Obstacles
+	marks     *plan.Marks // of a plan that gives no floor, whose floor follows its marks
+	eye       int32
+	camera    view.Camera
+	dark      bool
+	held      string
+}
+
+// madeBase is a base that was made.
+type madeBase struct {
+	key     baseKey
+	base    *raster.Base
+	drawing *paint.Drawing
+	took    time.Duration
+}
+
+// soon is how long a base may take to be made in the middle of a frame: a pan then shows no seam. What takes longer is
+// left to the worker.
+const soon = 6 * time.Millisecond
+
+func newPicture(w *window) *picture {
+	return &picture{w: w, worker: newBaseWorker(func() { w.do(func() { w.view.Refresh() }) })}
+}
+
+// close ends the worker.
+func (p *picture) close() { p.worker.close() }
+
+// draw makes the frame for the toolkit's raster, in device pixels.
+func (p *picture) draw(w, h int) image.Image {
+	v := p.w.view
+	if w <= 0 || h <= 0 || p.w.session == nil {
+		return image.NewRGBA(image.Rect(0, 0, max(w, 1), max(h, 1)))
+	}
+	pix := v.pix
+	if size := v.Size(); size.Width > 0 {
+		pix = float32(w) / size.Width
+	}
+	if v.cam.W != w || v.cam.H != h || v.pix != pix {
+		v.resized(w, h, pix)
+	}
+	scene := p.scene()
+	base := p.baseFor(scene)
+	scene.Drawing = base.drawing
+	paint.Overlay(scene, &p.overlay)
+	return p.frame.Draw(base.base, &p.overlay)
+}
+
+// scene gathers all that the picture depends on.
+func (p *picture) scene() *paint.Scene {
+	w := p.w
+	r := &w.results
+	pr := r.shownPair()
+	s := &paint.Scene{
+		Plan: w.session.Plan(), Result: r.result, Camera: w.view.cam, Theme: themed(),
+		Stale:    r.stale(live.StageSights),
+		Observer: r.shownObserver(), Start: pr.start, Target: pr.target,
+		Selected: w.session.Selection(), Hover: w.sketch.Hover, AllRegions: r.all,
+	}
+	if w.session.Previewing() && !slices.Contains(w.sketch.Dragged, plan.Ref{Kind: plan.KindFloor}) {
+		s.Old, s.Dragged = w.session.Committed(), w.sketch.Dragged
+	}
+	if w.view.inside {
+		x, y := w.view.place()
+		s.Pointer = &[2]float64{x, y}
+	}
+	return s
+}
+
+// keyOf returns what the base of a scene depends on.
+func keyOf(s *paint.Scene) baseKey {
+	shown := s.Plan
+	if s.Old != nil {
+		shown = s.Old
+	}
+	k := baseKey{obstacles: shown.Obstacles(), eye: shown.Walker().Eye, camera: s.Camera, dark: s.Theme == dark}
+	if shown.Floor().Len() == 0 {
+		k.marks = shown.Marks()
+	}
+	for _, r := range s.Dragged {
+		switch r.Kind {
+		case plan.KindWall, plan.KindOpening, plan.KindBlock:
+			k.held += r.String() + ";"
+		}
+	}
+	return k
+}
+
+// baseFor returns the base for a scene: the one at hand when it fits, a new one at once when that is quick, else the one
+// at hand while the worker makes the new one.
+func (p *picture) baseFor(s *paint.Scene) *madeBase {
+	if b := p.worker.take(); b != nil {
+		p.base = b
+	}
+	k := keyOf(s)
+	switch {
+	case p.base != nil && p.base.key == k:
+	case p.base == nil || p.base.took < soon || p.base.key.camera.W != k.camera.W || p.base.key.camera.H != k.camera.H:
+		p.base = makeBase(s, k)
+	default:
+		s.Drawing = p.base.drawing
+		p.worker.ask(s, k)
+	}
+	return p.base
+}
+
+// makeBase lists and draws a base.
+func makeBase(s *paint.Scene, k baseKey) *madeBase {
+	began := time.Now()
+	list := paint.Base(s)
+	return &madeBase{key: k, base: raster.NewBase(list, k.camera.W, k.camera.H), drawing: list.Drawing, took: time.Since(began)}
+}
+
+// baseWorker makes bases on a goroutine of its own, newest first.
+type baseWorker struct {
+	slot chan baseJob
+	done chan struct{}
+	made atomic.Pointer[madeBase]
+	last baseKey // the last one asked for
+	wake func()
+}
+
+type baseJob struct {
+	scene paint.Scene
+	key   baseKey
+}
+
+func newBaseWorker(wake func()) *baseWorker {
+	b := &baseWorker{slot: make(chan baseJob, 1), done: make(chan struct{}), wake: wake}
+	go b.run()
+	return b
+}
+
+func (b *baseWorker) run() {
+	defer close(b.done)
+	for j := range b.slot {
+		b.made.Store(makeBase(&j.scene, j.key))
+		b.wake()
+	}
+}
+
+// ask asks for a base, in place of one that waits.
+func (b *baseWorker) ask(s *paint.Scene, k baseKey) {
+	if b.last == k {
+		return
+	}
+	b.last = k
+	select {
+	case <-b.slot:
+	default:
+	}
+	b.slot <- baseJob{*s, k}
+}
+
+// take returns a base made since the last call, nil when there is none.
+func (b *baseWorker) take() *madeBase { return b.made.Swap(nil) }
+
+func (b *baseWorker) close() {
+	if b.slot != nil {
+		close(b.slot)
+		<-b.done
+		b.slot = nil
+	}
+}

@@ -1,0 +1,91 @@
+package gui
+
+import (
+	"fyne.io/fyne/v2"
+
+	"enfilade/assets"
+	"enfilade/canvas/tool"
+	"enfilade/solver/plan"
+)
+
+// toolKind is one tool of the rail.
+type toolKind struct {
+	name   string // for the menus, as in "Wall"
+	icon   string
+	letter string // the key that chooses it; the select tool has none, Escape leads back to it
+	tip    string
+	group  string
+	make   func() tool.Tool
+}
+
+// tools are the tools in the rail's order; the first is the one Escape leads back to.
+var tools = []toolKind{
+	{"Select", "select", "", "Select and move (Esc)", "Inspect", func() tool.Tool { return &tool.Select{} }},
+	{"Measure", "measure", "M", "Measure a distance", "Inspect", func() tool.Tool { return &tool.Measure{} }},
+	{"Wall", "wall", "W", "Draw walls corner by corner", "Draw", func() tool.Tool { return &tool.Chain{Kind: plan.Solid} }},
+	{"Door or gap", "door", "D", "Cut a door or a gap into a wall", "Draw", func() tool.Tool { return &tool.Door{} }},
+	{"Glazing", "glazing", "G", "Draw glazing: it stops walking, not sight", "Draw", func() tool.Tool { return &tool.Chain{Kind: plan.Glazing} }},
+	{"Screen", "screen", "S", "Draw a screen: it stops sight, not walking", "Draw", func() tool.Tool { return &tool.Chain{Kind: plan.Screen} }},
+	{"Low wall", "low", "L", "Draw a low wall: it stops walking, and sight up to its height", "Draw", func() tool.Tool { return &tool.Chain{Kind: plan.Low} }},
+	{"Column or block", "block", "C", "Click for a column, drag for a block", "Draw", func() tool.Tool { return &tool.Rect{Kind: plan.KindBlock} }},
+	{"Zone", "zone", "Z", "Name an area", "Draw", func() tool.Tool { return &tool.Rect{Kind: plan.KindZone} }},
+	{"Floor", "floor", "F", "Draw the floor's outline", "Draw", func() tool.Tool { return &tool.Chain{Floor: true} }},
+	{"Observer", "observer", "O", "Put down an observer", "Place", func() tool.Tool { return &tool.Mark{Kind: plan.KindObserver} }},
+	{"Target", "target", "T", "Put down a target: a thing to be seen", "Place", func() tool.Tool { return &tool.Mark{Kind: plan.KindTarget} }},
+	{"Start", "start", "B", "Put down a start: where a walk begins", "Place", func() tool.Tool { return &tool.Mark{Kind: plan.KindStart} }},
+}
+
+// newRail lays the tools' buttons out in groups, each named and parted from the next by a hairline.
+func newRail(t *tips, choose func(i int)) (*fyne.Container, []*toolButton) {
+	var buttons []*toolButton
+	var objects []fyne.CanvasObject
+	group := ""
+	for i, k := range tools {
+		if k.group != group {
+			if group != "" {
+				objects = append(objects, hairline())
+			}
+			group = k.group
+			name := newText(group, assets.Regular, 10.5, roleInk2)
+			name.align = fyne.TextAlignCenter
+			objects = append(objects, name)
+		}
+		b := newToolButton(k.icon, k.letter, k.tip, t, func() { choose(i) })
+		buttons = append(buttons, b)
+		objects = append(objects, b)
+	}
+	return on(roleChrome, fyne.NewContainerWithLayout(railLayout{}, objects...)), buttons
+}
+
+// railLayout stacks the rail: it is 54 px wide and a button's pitch is 40.
+type railLayout struct{}
+
+const railWidth = 54
+
+// MinSize is for the toolkit. The rail may be cut off below: its tools are in the menus too.
+func (railLayout) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(railWidth, 0) }
+
+// Layout is for the toolkit.
+func (railLayout) Layout(objects []fyne.CanvasObject, s fyne.Size) {
+	pitch := float32(40)
+	if need := float32(len(tools))*40 + 3*22 + 2*14; s.Height < need {
+		pitch = max(28, 40-(need-s.Height)/float32(len(tools)))
+	}
+	y := float32(8)
+	for _, o := range objects {
+		switch w := o.(type) {
+		case *inkText:
+			w.Move(fyne.NewPos(0, y))
+			w.Resize(fyne.NewSize(s.Width, 16))
+			y += 20
+		case *paper:
+			w.Move(fyne.NewPos((s.Width-24)/2, y+4))
+			w.Resize(fyne.NewSize(24, 1))
+			y += 11
+		default:
+			w.Move(fyne.NewPos((s.Width-toolWidth)/2, y))
+			w.Resize(fyne.NewSize(toolWidth, min(toolHeight, pitch-2)))
+			y += pitch
+		}
+	}
+}

@@ -1,0 +1,249 @@
+package gui
+
+import (
+	"time"
+
+	"enfilade/app/live"
+	"enfilade/app/session"
+	"enfilade/canvas/tool"
+	"enfilade/solver/plan"
+	"enfilade/solver/study"
+)
+
+// blink is how long a solve may take before the last result is dimmed and the progress shown.
+const blink = 120 * time.Millisecond
+
+// pair names one approach.
+type pair struct{ start, target string }
+
+// results is what was studied about the open plan, and what of it is shown.
+type results struct {
+	rev     uint64    // of the plan that is shown
+	askedAt time.Time // when its study was asked for
+	opened  uint64    // the open plan's first revision: answers to older ones belong to another plan
+	state   *live.State
+	result  *study.Result // nil before the first answer
+	slow    bool          // the study has been asked for longer than a blink ago and is not done
+
+	observer, start, target string // the chosen ones
+	passing                 string // an observer that is shown in place of the chosen one while it is on the pointer
+	hover                   *pair  // the approach under the pointer in the table
+	all                     bool   // show the regions of all observers
+}
+
+// asked notes that the study of a revision was asked for.
+func (r *results) asked(rev uint64, now time.Time) {
+	r.rev, r.askedAt, r.slow = rev, now, false
+}
+
+// reset forgets everything about the plan before; rev is the new plan's first revision.
+func (r *results) reset(rev uint64) {
+	*r = results{rev: r.rev, askedAt: r.askedAt, opened: rev, all: r.all}
+}
+
+// answer takes the newest answers over.
+func (r *results) answer(s *live.State) {
+	r.state = s
+	if l := s.Latest[live.StageSights]; l.Plan != nil && l.Rev >= r.opened {
+		r.result = s.Result()
+		if a := s.Latest[live.StageApproaches]; a.Rev < r.opened {
+			r.result.Approaches = nil
+		}
+		if a := s.Latest[live.StageSeenFrom]; a.Rev < r.opened {
+			r.result.SeenFrom = nil
+		}
+	}
+	if r.done() {
+		r.slow = false
+	}
+}
+
+// done reports whether everything about the plan that is shown is known.
+func (r *results) done() bool { return r.state != nil && r.state.Done(r.rev) }
+
+// stale reports whether the answer of a stage is out of date for so long that it must not look like the truth.
+func (r *results) stale(s live.Stage) bool {
+	return r.slow && (r.state == nil || !r.state.Fresh(s, r.rev)) || r.failed(s) != nil
+}
+
+// failed returns why a stage has no answer for the plan that is shown, nil when it has or may yet have one.
+func (r *results) failed(s live.Stage) error {
+	if r.state == nil {
+		return nil
+	}
+	for _, t := range []live.Stage{live.StageMesh, s} {
+		if f := r.state.Failed[t]; f.Plan != nil && f.Rev == r.rev {
+			return f.Err
+		}
+	}
+	return nil
+}
+
+// follow lets the chosen observer, start and target follow the selection, and replaces those that are gone.
+func (r *results) follow(s *session.Session, k tool.Sketch) {
+	p := s.Plan()
+	r.passing = ""
+	if k.Show.Kind == plan.KindObserver {
+		r.passing = k.Show.ID
+	}
+	for _, ref := range s.Selection() {
+		switch ref.Kind {
+		case plan.KindObserver:
+			r.observer = ref.ID
+		case plan.KindStart:
+			r.start = ref.ID
+		case plan.KindTarget:
+			r.target = ref.ID
+		}
+	}
+	if _, ok := p.Observer(r.observer); !ok {
+		r.observer = ""
+		for _, o := range p.Observers() {
+			r.observer = o.ID
+			break
+		}
+	}
+	if _, ok := p.Start(r.start); !ok {
+		r.start = ""
+		for _, o := range p.Starts() {
+			r.start = o.ID
+			break
+		}
+	}
+	if _, ok := p.Target(r.target); !ok {
+		r.target = ""
+		for _, o := range p.Targets() {
+			r.target = o.ID
+			break
+		}
+	}
+}
+
+// shownObserver returns the id of the observer whose region is washed.
+func (r *results) shownObserver() string {
+	if r.passing != "" {
+		return r.passing
+	}
+	return r.observer
+}
+
+// shownPair returns the start and the target whose approach is drawn full.
+func (r *results) shownPair() pair {
+	if r.hover != nil {
+		return *r.hover
+	}
+	return pair{r.start, r.target}
+}
+
+// sightOf returns the region of an observer.
+func (r *results) sightOf(id string) (study.Sight, bool) {
+	if r.result != nil {
+		for _, s := range r.result.Sight {
+			if s.Item.ID == id {
+				return s, true
+			}
+		}
+	}
+	return study.Sight{}, false
+}
+
+// seenFrom returns the region of the places that see a target.
+func (r *results) seenFrom(id string) (study.Sight, bool) {
+	if r.result != nil {
+		for _, s := range r.result.SeenFrom {
+			if s.Item.ID == id {
+				return s, true
+			}
+		}
+	}
+	return study.Sight{}, false
+}
+
+// approach returns the approach of a pair.
+func (r *results) approach(p pair) (study.Approach, bool) {
+	if r.result != nil {
+		for _, a := range r.result.Approaches {
+			if a.Start == p.start && a.Target == p.target {
+				return a, true
+			}
+		}
+	}
+	return study.Approach{}, false
+}
+
+// took returns how long the study of the plan that is shown has taken.
+func (r *results) took() (sum time.Duration) {
+	if r.state == nil {
+		return 0
+	}
+	for s := range live.NumStages {
+		if r.state.Fresh(s, r.rev) {
+			sum += r.state.Latest[s].Took
+		}
+	}
+	return sum
+}
+
+// working returns the stage that is being worked out and the share of the stages that are done.
+func (r *results) working() (live.Stage, float32) {
+	for s := range live.NumStages {
+		if r.state == nil || !r.state.Fresh(s, r.rev) {
+			return s, float32(s) / float32(live.NumStages)
+		}
+	}
+	return live.StageSeenFrom, 1
+}
+
+// answered is told the newest answers, on the toolkit's goroutine.
+func (w *window) answered(s *live.State) {
+	if w.session == nil || w.closing {
+		return
+	}
+	w.results.answer(s)
+	w.report()
+	w.view.Refresh()
+	w.form.update(w.session.Plan(), w.session.Selection())
+	w.table.update()
+	w.foot.update(w)
+}
+
+// watchSlow looks again after a blink whether the study is done.
+func (w *window) watchSlow() {
+	rev := w.results.rev
+	time.AfterFunc(blink, func() {
+		w.do(func() {
+			if w.closing || w.results.rev != rev || w.results.done() {
+				return
+			}
+			w.results.slow = true
+			w.report()
+			w.view.Refresh()
+			w.table.update()
+		})
+	})
+}
+
+// report shows in the status line how the study stands.
+func (w *window) report() {
+	r := &w.results
+	for s := range live.NumStages {
+		if err := r.failed(s); err != nil {
+			w.status.solve.set(failure(err))
+			w.status.progress.Hide()
+			return
+		}
+	}
+	switch {
+	case emptyPlan(w.session.Plan()):
+		w.status.solve.set("nothing to solve")
+		w.status.progress.Hide()
+	case r.done():
+		w.status.solved(r.took())
+		w.status.progress.Hide()
+	case r.slow:
+		stage, done := r.working()
+		w.status.solve.set("working out " + stage.String())
+		w.status.progress.set(done)
+		w.status.progress.Show()
+	}
+}

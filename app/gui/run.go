@@ -1,0 +1,73 @@
+package gui
+
+import (
+	"errors"
+	"os"
+	"runtime"
+	"time"
+
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/app"
+
+	"enfilade/app/live"
+	"enfilade/assets"
+	"enfilade/solver/study"
+)
+
+// appID names the program to the desktop and to its store of preferences.
+const appID = "enfilade.plans"
+
+// Options say how the window opens.
+type Options struct {
+	Path   string  // the plan to open; empty for an empty plan
+	Theme  string  // "light", "dark" or "system"; empty for what was chosen last
+	Width  float32 // of the window, in px at 100 %; 0 for the usual size
+	Height float32
+}
+
+// ErrNoDisplay says that there is no display to open a window on.
+var ErrNoDisplay = errors.New("window: there is no display (neither DISPLAY nor WAYLAND_DISPLAY is set); " +
+	"enfilade study PLAN prints the study of a plan, and with --picture FILE.png draws it; enfilade --help tells more")
+
+// Run opens the window and returns when it is closed. It must be called on the main goroutine.
+//
+//   - Errors: ErrNoDisplay where no window can open. A plan that cannot be read is told in the window.
+func Run(o Options) error {
+	if !hasDisplay() {
+		return ErrNoDisplay
+	}
+	a := app.NewWithID(appID)
+	a.SetIcon(fyne.NewStaticResource("enfilade.png", assets.AppIcon()))
+	choice := o.Theme
+	if choice == "" {
+		choice = a.Preferences().StringWithFallback(prefTheme, themeSystem)
+	}
+	w := newWindow(parts{
+		app:    a,
+		solver: func() live.Solver { return study.NewSolver() },
+		do:     fyne.Do,
+		now:    time.Now,
+	}, &look{choice: choice})
+	width, height := o.Width, o.Height
+	if width <= 0 || height <= 0 {
+		width, height = 1440, 900
+	}
+	w.win.SetMaster()
+	w.win.Resize(fyne.NewSize(width, height))
+	if o.Path != "" {
+		w.open(o.Path)
+	}
+	w.view.grab()
+	w.win.ShowAndRun()
+	w.close()
+	return nil
+}
+
+// hasDisplay reports whether a window can open: elsewhere than on Unix there is always a display.
+func hasDisplay() bool {
+	switch runtime.GOOS {
+	case "windows", "darwin":
+		return true
+	}
+	return os.Getenv("DISPLAY") != "" || os.Getenv("WAYLAND_DISPLAY") != ""
+}

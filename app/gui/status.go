@@ -1,0 +1,159 @@
+package gui
+
+import (
+	"fmt"
+	"time"
+
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/canvas"
+	"fyne.io/fyne/v2/container"
+	"fyne.io/fyne/v2/layout"
+	"fyne.io/fyne/v2/widget"
+
+	"enfilade/assets"
+	"enfilade/solver/exact"
+	"enfilade/solver/plan"
+)
+
+// status is the line along the bottom of the window.
+type status struct {
+	box                        *fyne.Container
+	place, snap, counts, solve *inkText
+	hint                       *inkText
+	progress                   *progress
+}
+
+func newStatus() *status {
+	s := &status{
+		place: newText("", assets.Medium, 12, roleInk), snap: caption(""), counts: caption(""), solve: caption(""),
+		hint: caption("").shrinking().right(), progress: newProgress(),
+	}
+	left := container.NewHBox(fixed(146, s.place), tick(), fixed(128, s.snap), tick(), fixed(110, s.counts), tick(), fixed(250, s.solve), s.progress)
+	row := container.New(layout.NewBorderLayout(nil, nil, left, nil), left, inset(12, 0, 0, 0, s.hint))
+	s.box = on(roleChrome, around(hairline(), nil, nil, nil, inset(14, 4, 18, 5, row)))
+	return s
+}
+
+// tick is the short rule between two parts of the line.
+func tick() fyne.CanvasObject { return inset(4, 3, 10, 3, hairline()) }
+
+// fixed gives content a width of its own.
+func fixed(width float32, content fyne.CanvasObject) *fyne.Container {
+	return container.New(fixedWidth(width), content)
+}
+
+type fixedWidth float32
+
+func (w fixedWidth) MinSize(o []fyne.CanvasObject) fyne.Size {
+	return fyne.NewSize(float32(w), o[0].MinSize().Height)
+}
+
+func (w fixedWidth) Layout(o []fyne.CanvasObject, s fyne.Size) { o[0].Resize(s) }
+
+// at shows the pointer's place.
+func (s *status) at(p exact.Pt, unit string, over bool) {
+	if !over {
+		s.place.set("")
+		return
+	}
+	if unit == "ft" {
+		s.place.set(fmt.Sprintf("x %s  y %s", formatFeet(p.X), formatFeet(p.Y)))
+		return
+	}
+	size, decimals := unitSizes[unitOf(unit)], map[string]int{"m": 2, "cm": 1, "mm": 0}[unitOf(unit)]
+	s.place.set(fmt.Sprintf("x %.*f  y %.*f %s", decimals, float64(p.X)/size, decimals, float64(p.Y)/size, unitOf(unit)))
+}
+
+func unitOf(unit string) string {
+	if unit == "" {
+		return "m"
+	}
+	return unit
+}
+
+// count shows how much there is in the plan.
+func (s *status) count(p *plan.Plan) {
+	switch b := p.NumBlocks(); {
+	case b == 0:
+		s.counts.set(counted(p.NumWalls(), "wall"))
+	default:
+		s.counts.set(counted(p.NumWalls(), "wall") + ", " + counted(b, "block"))
+	}
+}
+
+func counted(n int, what string) string {
+	if n == 1 {
+		return "1 " + what
+	}
+	return fmt.Sprintf("%d %ss", n, what)
+}
+
+// solved shows how long the study took.
+func (s *status) solved(took time.Duration) {
+	s.solve.set(fmt.Sprintf("solved in %s, in the plane of the eye", brief(took)))
+}
+
+// brief writes a duration as people say it.
+func brief(d time.Duration) string {
+	switch ms := float64(d) / float64(time.Millisecond); {
+	case ms < 10:
+		return fmt.Sprintf("%.1f ms", ms)
+	case ms < 1000:
+		return fmt.Sprintf("%.0f ms", ms)
+	default:
+		return fmt.Sprintf("%.1f s", ms/1000)
+	}
+}
+
+// progress is a bar 4 px high whose fill stands for the stages of a study that are done.
+type progress struct {
+	widget.BaseWidget
+	done float32
+}
+
+func newProgress() *progress {
+	p := &progress{}
+	p.ExtendBaseWidget(p)
+	p.Hide()
+	return p
+}
+
+func (p *progress) set(done float32) {
+	if p.done != done {
+		p.done = done
+		p.Refresh()
+	}
+}
+
+// CreateRenderer is for the toolkit.
+func (p *progress) CreateRenderer() fyne.WidgetRenderer {
+	r := &progressRenderer{p, canvas.NewRectangle(nil), canvas.NewRectangle(nil)}
+	r.groove.CornerRadius, r.fill.CornerRadius = 2, 2
+	r.Refresh()
+	return r
+}
+
+type progressRenderer struct {
+	p            *progress
+	groove, fill *canvas.Rectangle
+}
+
+func (r *progressRenderer) Layout(s fyne.Size) {
+	y := (s.Height - 4) / 2
+	r.groove.Move(fyne.NewPos(0, y))
+	r.groove.Resize(fyne.NewSize(s.Width, 4))
+	r.fill.Move(fyne.NewPos(0, y))
+	r.fill.Resize(fyne.NewSize(s.Width*r.p.done, 4))
+}
+func (r *progressRenderer) MinSize() fyne.Size { return fyne.NewSize(120, 4) }
+func (r *progressRenderer) Refresh() {
+	p := themed()
+	r.groove.FillColor, r.fill.FillColor = p.Rule, p.Ink
+	r.Layout(r.p.Size())
+	canvas.Refresh(r.groove)
+	canvas.Refresh(r.fill)
+}
+func (r *progressRenderer) Objects() []fyne.CanvasObject {
+	return []fyne.CanvasObject{r.groove, r.fill}
+}
+func (r *progressRenderer) Destroy() {}

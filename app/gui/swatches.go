@@ -1,0 +1,92 @@
+package gui
+
+import (
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/canvas"
+	"fyne.io/fyne/v2/widget"
+)
+
+// swatches is a row of the eight observers' colours: four discs, then the same as rings.
+type swatches struct {
+	widget.BaseWidget
+	chosen int
+	picked func(i int)
+}
+
+const (
+	swatchCount = 8
+	swatchPitch = 22.5
+)
+
+func newSwatches(picked func(i int)) *swatches {
+	s := &swatches{picked: picked, chosen: -1}
+	s.ExtendBaseWidget(s)
+	return s
+}
+
+func (s *swatches) put(i int) {
+	if s.chosen != i {
+		s.chosen = i
+		s.Refresh()
+	}
+}
+
+// Tapped picks the colour under the pointer.
+func (s *swatches) Tapped(e *fyne.PointEvent) {
+	if i := int(e.Position.X / swatchPitch); i >= 0 && i < swatchCount {
+		s.picked(i)
+	}
+}
+
+// CreateRenderer is for the toolkit.
+func (s *swatches) CreateRenderer() fyne.WidgetRenderer {
+	r := &swatchRenderer{s: s, ring: canvas.NewCircle(nil)}
+	for range swatchCount {
+		r.dots = append(r.dots, canvas.NewCircle(nil))
+	}
+	r.Refresh()
+	return r
+}
+
+type swatchRenderer struct {
+	s    *swatches
+	ring *canvas.Circle
+	dots []*canvas.Circle
+}
+
+func (r *swatchRenderer) Layout(size fyne.Size) {
+	circle := func(c *canvas.Circle, x, radius float32) {
+		c.Move(fyne.NewPos(x-radius, size.Height/2-radius))
+		c.Resize(fyne.NewSquareSize(2 * radius))
+	}
+	for i, d := range r.dots {
+		circle(d, 9+float32(i)*swatchPitch, 6)
+	}
+	circle(r.ring, 9+float32(r.s.chosen)*swatchPitch, 9)
+}
+
+func (r *swatchRenderer) MinSize() fyne.Size { return fyne.NewSize(swatchCount*swatchPitch, 27) }
+
+func (r *swatchRenderer) Refresh() {
+	p := themed()
+	for i, d := range r.dots {
+		c := p.ObserverColour(i)
+		d.FillColor, d.StrokeColor, d.StrokeWidth = c, c, 2
+		if i >= swatchCount/2 {
+			d.FillColor = faded(c, 0)
+		}
+	}
+	r.ring.FillColor, r.ring.StrokeColor, r.ring.StrokeWidth = faded(p.Ink, 0), p.Ink, 1.5
+	r.ring.Hidden = r.s.chosen < 0
+	r.Layout(r.s.Size())
+	canvas.Refresh(r.s)
+}
+
+func (r *swatchRenderer) Objects() []fyne.CanvasObject {
+	o := []fyne.CanvasObject{r.ring}
+	for _, d := range r.dots {
+		o = append(o, d)
+	}
+	return o
+}
+func (r *swatchRenderer) Destroy() {}

@@ -1,0 +1,261 @@
+package gui
+
+import (
+	"fmt"
+
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/canvas"
+	"fyne.io/fyne/v2/container"
+	"fyne.io/fyne/v2/driver/desktop"
+	"fyne.io/fyne/v2/widget"
+
+	"enfilade/app/live"
+	"enfilade/assets"
+	"enfilade/solver/plan"
+	"enfilade/solver/study"
+)
+
+// table lists the approaches from every start to every target. The row under the pointer is shown in the plan while it
+// is there; a click chooses it.
+type table struct {
+	w     *window
+	box   *fyne.Container
+	count *inkText
+	empty *fyne.Container
+	list  *widget.List
+	rows  []row
+}
+
+// row is one line of the table.
+type row struct {
+	pair
+	from, to    string
+	first, full string
+	mark        string // icon
+	stale       bool
+	chosen      bool
+}
+
+func newTable(w *window) *table {
+	t := &table{w: w, count: caption("").right()}
+	t.list = widget.NewList(func() int { return len(t.rows) }, func() fyne.CanvasObject { return newTableRow(t) },
+		func(i widget.ListItemID, o fyne.CanvasObject) { o.(*tableRow).put(t.rows[i]) })
+	t.list.HideSeparators = true
+	t.empty = pile(body("No approaches yet."), caption("Put down a start (B) and a target (T): the walk to"),
+		caption("first sight is worked out as you draw."))
+	head := around(nil, nil, heading("Approaches"), nil, t.count)
+	columns := container.New(rowLayout{}, newText("", assets.Regular, 11, roleInk3), newText("from, to", assets.Regular, 11, roleInk3),
+		newText("first sight", assets.Regular, 11, roleInk3).right(), newText("full walk", assets.Regular, 11, roleInk3).right())
+	top := pile(inset(18, 14, 18, 4, head), columns)
+	t.box = around(pile(hairline(), top), nil, nil, nil,
+		container.NewStack(container.NewThemeOverride(inset(0, 2, 0, 6, t.list), tightLook{w}), inset(18, 8, 18, 0, t.empty)))
+	return t
+}
+
+// update brings the rows up to date.
+func (t *table) update() {
+	rows := tableRows(t.w.session.Plan(), &t.w.results)
+	t.empty.Hidden = len(rows) > 0
+	switch n := len(rows); n {
+	case 0:
+		t.count.set("")
+	default:
+		t.count.set(counted(n, "walk"))
+	}
+	if same(rows, t.rows) {
+		return
+	}
+	t.rows = rows
+	t.empty.Refresh()
+	t.list.Refresh()
+}
+
+func same(a, b []row) bool {
+	if len(a) != len(b) {
+		return false
+	}
+	for i := range a {
+		if a[i] != b[i] {
+			return false
+		}
+	}
+	return true
+}
+
+// tableRows makes the lines of the table, starts outermost, in the plan's order.
+func tableRows(p *plan.Plan, r *results) []row {
+	stale := r.stale(live.StageApproaches)
+	found := map[pair]study.Approach{}
+	if r.result != nil {
+		for _, a := range r.result.Approaches {
+			found[pair{a.Start, a.Target}] = a
+		}
+	}
+	rows := make([]row, 0, p.NumStarts()*p.NumTargets())
+	for _, s := range p.Starts() {
+		for _, g := range p.Targets() {
+			pr := pair{s.ID, g.ID}
+			w := row{pair: pr, from: startName(p, s.ID), to: targetName(p, g.ID), mark: "unknown", stale: stale,
+				chosen: pr == pair{r.start, r.target}}
+			if a, ok := found[pr]; ok {
+				w.fill(a)
+			}
+			rows = append(rows, w)
+		}
+	}
+	return rows
+}
+
+// fill puts an approach's figures into its row.
+func (w *row) fill(a study.Approach) {
+	w.full = "–"
+	if a.HasFullWalk {
+		w.full = metres(a.FullWalk, 1) + " m"
+	}
+	switch {
+	case a.Problem != "":
+		w.mark, w.first, w.full = "fail", "–", "–"
+	case a.Status == study.StatusSeen:
+		w.mark, w.first = "seen", "at once"
+	case a.Status == study.StatusApproach:
+		w.mark, w.first = "first-sight", metres(a.Length, 1)+" m"
+	default:
+		w.mark, w.first = "unseen", "never"
+	}
+	if w.stale {
+		w.mark = "unknown"
+	}
+}
+
+// tableRow shows one line of the table.
+type tableRow struct {
+	widget.BaseWidget
+	t           *table
+	row         row
+	hovered     bool
+	mark        *icon
+	walk        *inkText
+	first, full *inkText
+}
+
+func newTableRow(t *table) *tableRow {
+	r := &tableRow{t: t, mark: newIcon("unknown", 16, roleInk3), walk: body("").shrinking(),
+		first: newText("", assets.Bold, 12.5, roleInk).right(), full: newText("", assets.Regular, 12, roleInk2).right()}
+	r.ExtendBaseWidget(r)
+	return r
+}
+
+func (r *tableRow) put(w row) {
+	if r.row == w {
+		return
+	}
+	r.row = w
+	role := roleInk
+	switch {
+	case w.stale, w.mark == "unknown":
+		role = roleInk3
+	case w.mark == "fail", w.mark == "first-sight":
+		role = roleRed
+	}
+	r.mark.set(w.mark, role)
+	r.walk.set(fmt.Sprintf("%s → %s", w.from, w.to))
+	r.first.role, r.full.role = roleInk, roleInk2
+	if w.stale {
+		r.first.role, r.full.role = roleInk3, roleInk3
+	}
+	r.first.set(w.first)
+	r.full.set(w.full)
+	r.Refresh()
+}
+
+// Tapped chooses the row's start and target.
+func (r *tableRow) Tapped(*fyne.PointEvent) {
+	w := r.t.w
+	w.results.start, w.results.target = r.row.start, r.row.target
+	var keep []plan.Ref
+	for _, ref := range w.session.Selection() {
+		if ref.Kind != plan.KindStart && ref.Kind != plan.KindTarget {
+			keep = append(keep, ref)
+		}
+	}
+	w.session.Select(keep...)
+	w.acted()
+}
+
+// MouseIn shows the row's approach in the plan.
+func (r *tableRow) MouseIn(*desktop.MouseEvent) {
+	r.hovered = true
+	p := r.row.pair
+	r.t.w.results.hover = &p
+	r.t.w.acted()
+	r.Refresh()
+}
+
+// MouseMoved does nothing.
+func (r *tableRow) MouseMoved(*desktop.MouseEvent) {}
+
+// MouseOut shows the chosen approach again.
+func (r *tableRow) MouseOut() {
+	r.hovered = false
+	r.t.w.results.hover = nil
+	r.t.w.acted()
+	r.Refresh()
+}
+
+// CreateRenderer is for the toolkit.
+func (r *tableRow) CreateRenderer() fyne.WidgetRenderer {
+	cells := container.New(rowLayout{}, r.mark, r.walk, r.first, r.full)
+	x := &tableRowRenderer{r: r, ground: canvas.NewRectangle(nil), bar: canvas.NewRectangle(nil), cells: cells}
+	x.Refresh()
+	return x
+}
+
+type tableRowRenderer struct {
+	r           *tableRow
+	ground, bar *canvas.Rectangle
+	cells       *fyne.Container
+}
+
+func (x *tableRowRenderer) Layout(s fyne.Size) {
+	x.ground.Resize(s)
+	x.bar.Resize(fyne.NewSize(3, s.Height))
+	x.cells.Resize(s)
+}
+func (x *tableRowRenderer) MinSize() fyne.Size { return fyne.NewSize(200, 28) }
+func (x *tableRowRenderer) Refresh() {
+	p := themed()
+	x.ground.FillColor, x.bar.FillColor = faded(p.Ink, 0), faded(p.Ink, 0)
+	switch {
+	case x.r.row.chosen:
+		x.ground.FillColor, x.bar.FillColor = p.Field, p.Ink
+	case x.r.hovered:
+		x.ground.FillColor = faded(p.Ink, 7)
+	}
+	x.cells.Refresh()
+	canvas.Refresh(x.ground)
+	canvas.Refresh(x.bar)
+}
+func (x *tableRowRenderer) Objects() []fyne.CanvasObject {
+	return []fyne.CanvasObject{x.ground, x.bar, x.cells}
+}
+func (x *tableRowRenderer) Destroy() {}
+
+// rowLayout is the table's columns: mark, walk, first sight, full walk.
+type rowLayout struct{}
+
+// MinSize is for the toolkit.
+func (rowLayout) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(200, 18) }
+
+// Layout is for the toolkit.
+func (rowLayout) Layout(o []fyne.CanvasObject, s fyne.Size) {
+	const side, firstWide, fullWide = 18, 62, 58
+	place := func(o fyne.CanvasObject, x, w float32) {
+		o.Move(fyne.NewPos(x, 0))
+		o.Resize(fyne.NewSize(w, s.Height))
+	}
+	end := s.Width - side
+	place(o[0], side, 16)
+	place(o[1], side+25, end-fullWide-firstWide-side-25)
+	place(o[2], end-fullWide-firstWide, firstWide)
+	place(o[3], end-fullWide, fullWide)
+}

@@ -1,0 +1,117 @@
+package gui
+
+import (
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/canvas"
+	"fyne.io/fyne/v2/driver/desktop"
+	"fyne.io/fyne/v2/widget"
+
+	"enfilade/assets"
+)
+
+// toolButton is one button of the rail: an icon and the letter that chooses it.
+type toolButton struct {
+	widget.BaseWidget
+	icon    *icon
+	letter  *inkText
+	tip     string
+	chosen  bool
+	hovered bool
+	tapped  func()
+	tips    *tips
+}
+
+// The rail's button, in px at 100 %.
+const (
+	toolWidth  = 43
+	toolHeight = 37
+)
+
+func newToolButton(iconName, letter, tip string, t *tips, tapped func()) *toolButton {
+	b := &toolButton{
+		icon:   newIcon(iconName, 20, roleInk),
+		letter: newText(letter, assets.Semibold, 11.5, roleInk2),
+		tip:    tip, tapped: tapped, tips: t,
+	}
+	b.ExtendBaseWidget(b)
+	return b
+}
+
+// choose shows the button as the tool in hand.
+func (b *toolButton) choose(chosen bool) {
+	if b.chosen != chosen {
+		b.chosen = chosen
+		b.Refresh()
+	}
+}
+
+// Tapped chooses the tool.
+func (b *toolButton) Tapped(*fyne.PointEvent) { b.tips.hide(); b.tapped() }
+
+// MouseIn tints the button and shows its name after a while.
+func (b *toolButton) MouseIn(*desktop.MouseEvent) {
+	b.hovered = true
+	b.tips.after(b.tip, func() fyne.Position {
+		return fyne.CurrentApp().Driver().AbsolutePositionForObject(b).AddXY(toolWidth+8, 7)
+	})
+	b.Refresh()
+}
+
+// MouseMoved does nothing.
+func (b *toolButton) MouseMoved(*desktop.MouseEvent) {}
+
+// MouseOut takes the tint away.
+func (b *toolButton) MouseOut() {
+	b.hovered = false
+	b.tips.hide()
+	b.Refresh()
+}
+
+// CreateRenderer is for the toolkit.
+func (b *toolButton) CreateRenderer() fyne.WidgetRenderer {
+	r := &toolButtonRenderer{b: b, ground: canvas.NewRectangle(nil)}
+	r.ground.CornerRadius = 6
+	r.Refresh()
+	return r
+}
+
+type toolButtonRenderer struct {
+	b      *toolButton
+	ground *canvas.Rectangle
+}
+
+func (r *toolButtonRenderer) Layout(s fyne.Size) {
+	r.ground.Resize(s)
+	l := r.b.letter.MinSize()
+	x := float32(3.5)
+	if r.b.letter.text == "" {
+		x = (s.Width - 20) / 2
+	}
+	r.b.icon.Move(fyne.NewPos(x, (s.Height-20)/2))
+	r.b.icon.Resize(fyne.NewSquareSize(20))
+	r.b.letter.Move(fyne.NewPos(29, (s.Height-l.Height)/2))
+	r.b.letter.Resize(l)
+}
+
+func (r *toolButtonRenderer) MinSize() fyne.Size { return fyne.NewSize(toolWidth, toolHeight) }
+
+func (r *toolButtonRenderer) Refresh() {
+	p := themed()
+	r.b.icon.role, r.b.letter.role = roleInk, roleInk2
+	r.ground.FillColor = faded(p.Ink, 0)
+	switch {
+	case r.b.chosen:
+		r.ground.FillColor = p.ToolFill
+		r.b.icon.role, r.b.letter.role = roleToolIcon, roleToolIcon
+	case r.b.hovered:
+		r.ground.FillColor = faded(p.Ink, 7)
+	}
+	r.b.icon.Refresh()
+	r.b.letter.Refresh()
+	canvas.Refresh(r.ground)
+}
+
+func (r *toolButtonRenderer) Objects() []fyne.CanvasObject {
+	return []fyne.CanvasObject{r.ground, r.b.icon, r.b.letter}
+}
+func (r *toolButtonRenderer) Destroy() {}

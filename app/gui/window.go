@@ -1,0 +1,224 @@
+package gui
+
+import (
+	"path/filepath"
+	"time"
+
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/container"
+	"fyne.io/fyne/v2/driver/desktop"
+
+	"enfilade/app/live"
+	"enfilade/app/session"
+	"enfilade/canvas/tool"
+	"enfilade/solver/plan"
+)
+
+// window is the one window of the program with everything in it.
+type window struct {
+	app  fyne.App
+	win  fyne.Window
+	look *look
+	do   func(func()) // runs a function on the toolkit's goroutine, and returns at once
+	now  func() time.Time
+
+	session *session.Session
+	runner  *live.Runner
+	board   *live.Board
+	results results
+
+	view     *planView
+	picture  *picture
+	host     *host
+	tool     tool.Tool
+	toolAt   int
+	sketch   tool.Sketch
+	measures tool.Defaults
+
+	rail    []*toolButton
+	tips    *tips
+	notice  *notice
+	status  *status
+	foot    *foot
+	form    *form
+	table   *table
+	first   *firstSteps
+	side    *fyne.Container
+	modal   *modal
+	menu    *menu
+	closing bool
+}
+
+// parts is what a window is made with; tests hand in their own.
+type parts struct {
+	app    fyne.App
+	solver func() live.Solver
+	do     func(func())
+	now    func() time.Time
+}
+
+// newWindow makes the window with an empty plan in it.
+func newWindow(p parts, look *look) *window {
+	w := &window{app: p.app, look: look, do: p.do, now: p.now, measures: tool.StandardDefaults()}
+	w.app.Settings().SetTheme(look)
+	w.win = w.app.NewWindow("Enfilade")
+	w.win.SetPadded(false)
+	w.win.SetCloseIntercept(func() { w.unlessUnsaved(w.quit) })
+	w.win.SetOnDropped(func(_ fyne.Position, uris []fyne.URI) {
+		if len(uris) > 0 {
+			w.unlessUnsaved(func() { w.open(uris[0].Path()) })
+		}
+	})
+	w.host = &host{w}
+	w.picture = newPicture(w)
+	w.tool = tools[0].make()
+	w.board = live.NewBoard(w.do, w.answered)
+	w.runner = live.New(p.solver, w.board.Put)
+	w.build()
+	w.session = session.New(plan.New(), "", nil)
+	w.listen()
+	return w
+}
+
+// listen makes the session tell the window of its changes from now on.
+func (w *window) listen() { w.session.Listen(w.changed) }
+
+// build puts the window together.
+func (w *window) build() {
+	w.tips, w.notice, w.status = newTips(w.do), newNotice(), newStatus()
+	w.view, w.foot, w.form, w.table, w.first = newPlanView(w), newFoot(), newForm(w), newTable(w), newFirstSteps()
+	rail, buttons := newRail(w.tips, w.choose)
+	w.rail = buttons
+	w.side = w.sideColumn()
+	picture := container.NewStack(w.view, w.first.box)
+	foot := around(hairline(), nil, nil, nil, w.foot.box)
+	middle := container.New(frame{}, rail, hairline(), picture, foot, w.side)
+	page := around(pile(hairline(), w.notice.box), w.status.box, nil, nil, middle)
+	w.menu = newMenu(w)
+	w.win.SetMainMenu(w.menu.main)
+	w.win.SetContent(container.NewStack(newPaper(roleChrome), page, w.tips.layer))
+	c := w.win.Canvas()
+	c.SetOnTypedKey(func(e *fyne.KeyEvent) { w.typedKey(e.Name) })
+	c.SetOnTypedRune(w.typedRune)
+	if d, ok := c.(desktop.Canvas); ok {
+		d.SetOnKeyDown(w.view.KeyDown)
+		d.SetOnKeyUp(w.view.KeyUp)
+	}
+	w.rail[0].choose(true)
+}
+
+// sideColumn is the right column: the selection above, the approaches below, their share draggable.
+func (w *window) sideColumn() *fyne.Container {
+	split := container.NewVSplit(w.form.box, w.table.box)
+	split.SetOffset(0.52)
+	return container.NewStack(newPaper(rolePanel), around(nil, nil, hairline(), nil, split))
+}
+
+// frame lays out rail, rule, picture, foot and right column.
+type frame struct{}
+
+const (
+	sideWidth  = 320
+	footHeight = 32
+	narrow     = 1100 // below this width the right column folds away
+)
+
+// MinSize is for the toolkit.
+func (frame) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(480, 320) }
+
+// Layout is for the toolkit.
+func (frame) Layout(o []fyne.CanvasObject, s fyne.Size) {
+	rail, rule, picture, foot, side := o[0], o[1], o[2], o[3], o[4]
+	right := s.Width
+	if side.Visible() && s.Width >= narrow {
+		right -= sideWidth
+		side.Move(fyne.NewPos(right, 0))
+		side.Resize(fyne.NewSize(sideWidth, s.Height))
+	} else {
+		side.Move(fyne.NewPos(s.Width, 0))
+		side.Resize(fyne.NewSize(sideWidth, s.Height))
+	}
+	rail.Resize(fyne.NewSize(railWidth, s.Height))
+	rule.Move(fyne.NewPos(railWidth, 0))
+	rule.Resize(fyne.NewSize(1, s.Height))
+	left := float32(railWidth + 1)
+	picture.Move(fyne.NewPos(left, 0))
+	picture.Resize(fyne.NewSize(right-left, s.Height-footHeight))
+	foot.Move(fyne.NewPos(left, s.Height-footHeight))
+	foot.Resize(fyne.NewSize(right-left, footHeight))
+}
+
+// changed is told every change of the plan that is shown.
+func (w *window) changed(rev uint64, p *plan.Plan) {
+	w.results.asked(rev, w.now())
+	w.runner.Submit(rev, p)
+	w.watchSlow()
+	w.acted()
+}
+
+// acted brings the window up to date after anything that may have changed what it shows.
+func (w *window) acted() {
+	if w.session == nil {
+		return
+	}
+	p := w.session.Plan()
+	w.sketch = w.tool.Sketch(w.host)
+	w.results.follow(w.session, w.sketch)
+	w.first.showIf(emptyPlan(p) && len(w.sketch.Band) == 0 && w.sketch.Handles == nil && !w.session.Previewing())
+	w.view.over.show(w.sketch, w.view.cam, w.view.pix)
+	w.view.Refresh()
+	w.status.at(w.view.cam.Grid(w.view.place()), p.Sheet().Unit, w.view.inside)
+	w.status.snap.set(snapText(w.sketch.Snap, w.view.cam))
+	w.status.hint.set(w.tool.Hint(w.host))
+	w.status.count(p)
+	w.form.update(p, w.session.Selection())
+	w.table.update()
+	w.foot.update(w)
+	w.title()
+	w.menu.update()
+}
+
+// title names the plan and says whether it has unsaved changes.
+func (w *window) title() {
+	name := w.session.Plan().Sheet().Title
+	if path := w.session.Path(); path != "" {
+		name = filepath.Base(path)
+	}
+	if name == "" {
+		name = "New plan"
+	}
+	if w.session.Dirty() {
+		name = "• " + name
+	}
+	if t := name + " – Enfilade"; t != w.win.Title() {
+		w.win.SetTitle(t)
+	}
+}
+
+// choose takes a tool in hand.
+func (w *window) choose(i int) {
+	w.tool.Stop(w.host)
+	w.tool, w.toolAt = tools[i].make(), i
+	for j, b := range w.rail {
+		b.choose(i == j)
+	}
+	if w.view.inside {
+		w.tool.Move(w.host, w.view.pointer(w.view.last, 0))
+	}
+	w.view.grab()
+	w.acted()
+}
+
+// modifiers returns the modifier keys that are down; the toolkit's test driver knows none.
+func (w *window) modifiers() fyne.KeyModifier {
+	if d, ok := w.app.Driver().(desktop.Driver); ok {
+		return d.CurrentKeyModifiers()
+	}
+	return 0
+}
+
+// close ends the workers. The window is not used after it.
+func (w *window) close() {
+	w.runner.Close()
+	w.picture.close()
+}
