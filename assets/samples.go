@@ -17,6 +17,8 @@ type Sample struct {
 func Samples() []Sample {
 	return []Sample{
 		{"gallery", "Upper gallery", "gallery.enfilade"},
+		{"harbour", "Harbour level", "harbour.enfilade"},
+		{"training", "Training house", "training.enfilade"},
 	}
 }
 

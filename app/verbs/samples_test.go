@@ -49,7 +49,7 @@ func TestSamples(t *testing.T) {
 			if p.Sheet().Title != s.Title || p.Sheet().Place == "" {
 				t.Errorf("titled %q at %q, want %q", p.Sheet().Title, p.Sheet().Place, s.Title)
 			}
-			if p.NumObservers() == 0 || p.NumTargets() == 0 || p.NumStarts() == 0 || p.NumWalls()+p.NumBlocks() < 20 {
+			if p.NumObservers() == 0 || p.NumTargets() == 0 || p.NumStarts() == 0 || p.NumWalls()+p.NumBlocks() < 18 {
 				t.Error("something is missing")
 			}
 			for _, q := range r.Problems {
