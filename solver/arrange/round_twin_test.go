@@ -43,9 +43,7 @@ func sameRounding(t *rapid.T, o *arrange.Outline) *arrange.Graph {
 }
 
 func TestRoundAgainstTwin(t *testing.T) {
-	for name, plans := range map[string]*rapid.Generator[*plan.Plan]{
-		"tangles": plantest.Tangles(), "specks": plantest.Specks(), "lines": plantest.Lines(),
-	} {
+	for name, plans := range plantest.Small() {
 		t.Run(name, rapid.MakeCheck(func(t *rapid.T) {
 			p := plans.Draw(t, "plan")
 			t.Log(plantest.Text(p))

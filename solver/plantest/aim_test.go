@@ -3,18 +3,13 @@ package plantest_test
 import (
 	"testing"
 
-	"pgregory.net/rapid"
-
-	"enfilade/solver/plan"
 	"enfilade/solver/plantest"
 )
 
 // Random plans are worth nothing when they miss what they are for: each kind of degeneracy must turn up at least once in
 // ten plans, most of them many times in each.
 func TestAim(t *testing.T) {
-	for name, g := range map[string]*rapid.Generator[*plan.Plan]{
-		"tangles": plantest.Tangles(), "specks": plantest.Specks(), "lines": plantest.Lines(),
-	} {
+	for name, g := range plantest.Small() {
 		var a plantest.Aim
 		for seed := range 400 {
 			a.Add(g.Example(seed))

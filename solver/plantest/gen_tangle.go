@@ -13,18 +13,48 @@ import (
 // Tangles draws small plans on a lattice of 0.1 m, of up to nine walls and three blocks, in which ends meet, walls cross,
 // overlap and end on each other, doors reach wall ends, and marks stand on faces, ends and crossings.
 func Tangles() *rapid.Generator[*plan.Plan] {
-	return rapid.Custom(func(t *rapid.T) *plan.Plan { return tangle(t, 100*exact.PerMM, true) })
+	return rapid.Custom(func(t *rapid.T) *plan.Plan { return tangle(t, lattice{unit: 100 * exact.PerMM, bodies: true}) })
 }
 
 // Specks draws the same plans on the grid itself, a few tenths of a millimetre wide: nearly every crossing is rounded,
 // and rounding makes edges meet, merge and vanish.
 func Specks() *rapid.Generator[*plan.Plan] {
-	return rapid.Custom(func(t *rapid.T) *plan.Plan { return tangle(t, 1, true) })
+	return rapid.Custom(func(t *rapid.T) *plan.Plan { return tangle(t, lattice{unit: 1, bodies: true}) })
 }
 
 // Lines draws the plans of [Tangles] without thickness, doors and blocks: bare lines that need no outline drawn.
 func Lines() *rapid.Generator[*plan.Plan] {
-	return rapid.Custom(func(t *rapid.T) *plan.Plan { return tangle(t, 100*exact.PerMM, false) })
+	return rapid.Custom(func(t *rapid.T) *plan.Plan { return tangle(t, lattice{unit: 100 * exact.PerMM}) })
+}
+
+// Slivers draws the plans of [Tangles] with points a grid unit or two off the lattice: walls that nearly touch, lines that
+// nearly meet, gaps and corners of almost no width.
+func Slivers() *rapid.Generator[*plan.Plan] {
+	return rapid.Custom(func(t *rapid.T) *plan.Plan {
+		return tangle(t, lattice{unit: 100 * exact.PerMM, jitter: 2, bodies: true})
+	})
+}
+
+// Giants draws the plans of [Slivers] tens of kilometres wide, near the coordinate limit, where products need all the bits
+// they can have.
+func Giants() *rapid.Generator[*plan.Plan] {
+	return rapid.Custom(func(t *rapid.T) *plan.Plan {
+		return tangle(t, lattice{unit: exact.Limit / 14, jitter: 2, bodies: true})
+	})
+}
+
+// Small returns the generators of small degenerate plans by name.
+func Small() map[string]*rapid.Generator[*plan.Plan] {
+	return map[string]*rapid.Generator[*plan.Plan]{
+		"tangles": Tangles(), "specks": Specks(), "lines": Lines(), "slivers": Slivers(), "giants": Giants(),
+	}
+}
+
+// lattice says what points a plan is drawn from.
+type lattice struct {
+	unit   int32 // distance of neighbouring points
+	jitter int32 // how far off a point may lie, in x and in y
+	bodies bool  // thick walls, doors and blocks too
 }
 
 // span is the lattice's size: points have coordinates 0 to span, in lattice units.
@@ -33,18 +63,18 @@ const span = 8
 // tangler draws one plan. Points are in lattice units until they are put into the plan.
 type tangler struct {
 	*rapid.T
-	unit   int32
+	lattice
 	pieces [][2]exact.Pt // every straight piece so far
 	plan.Parts
 }
 
-func tangle(t *rapid.T, unit int32, bodies bool) *plan.Plan {
-	g := &tangler{T: t, unit: unit, Parts: plan.Parts{Walker: plan.DefaultWalker(), Sheet: plan.Sheet{Unit: "m"}}}
+func tangle(t *rapid.T, l lattice) *plan.Plan {
+	g := &tangler{T: t, lattice: l, Parts: plan.Parts{Walker: plan.DefaultWalker(), Sheet: plan.Sheet{Unit: "m"}}}
 	g.floor()
 	for range 1 + g.upTo(8, "walls") {
-		g.wall(bodies)
+		g.wall()
 	}
-	if bodies {
+	if g.bodies {
 		for range g.upTo(3, "blocks") {
 			g.block()
 		}
@@ -66,7 +96,15 @@ func (g *tangler) upTo(n int, label string) int { return rapid.IntRange(0, n).Dr
 // one draws true once in n times.
 func (g *tangler) one(n int, label string) bool { return g.upTo(n-1, label) == n-1 }
 
-func (g *tangler) scale(p exact.Pt) exact.Pt { return pt(p.X*g.unit, p.Y*g.unit) }
+// scale returns the place of lattice point p on the grid, some of the time off by the jitter.
+func (g *tangler) scale(p exact.Pt) exact.Pt {
+	q := pt(p.X*g.unit, p.Y*g.unit)
+	if g.jitter > 0 && g.one(3, "off the lattice") {
+		off := rapid.Int32Range(-g.jitter, g.jitter)
+		q = pt(q.X+off.Draw(g.T, "dx"), q.Y+off.Draw(g.T, "dy"))
+	}
+	return q
+}
 
 func (g *tangler) chain(pts ...exact.Pt) plan.Chain {
 	scaled := make([]exact.Pt, len(pts))
@@ -78,20 +116,21 @@ func (g *tangler) chain(pts ...exact.Pt) plan.Chain {
 
 // floor draws a square floor with room around the lattice, one that fits it exactly, an L, or none.
 func (g *tangler) floor() {
+	var ring []exact.Pt
 	switch g.upTo(5, "floor") {
 	case 0:
-		g.Floor = g.chain(pt(0, 0), pt(span, 0), pt(span, span), pt(0, span))
+		ring = []exact.Pt{pt(0, 0), pt(span, 0), pt(span, span), pt(0, span)}
 	case 1:
-		g.Floor = g.chain(pt(0, 0), pt(span, 0), pt(span, 4), pt(4, 4), pt(4, span), pt(0, span))
+		ring = []exact.Pt{pt(0, 0), pt(span, 0), pt(span, 4), pt(4, 4), pt(4, span), pt(0, span)}
 	case 2: // the bounding box
-	default:
+		return
+	default: // its sides are out of reach of all else
 		g.Floor = g.chain(pt(-2, -3), pt(span+3, -3), pt(span+3, span+2), pt(-2, span+2))
+		return
 	}
-	for i := range g.Floor.Len() {
-		a, b := g.Floor.At(i), g.Floor.At((i+1)%g.Floor.Len())
-		if g.Floor.At(0) == (exact.Pt{}) { // only what is on the lattice is worth aiming at
-			g.pieces = append(g.pieces, [2]exact.Pt{pt(a.X/g.unit, a.Y/g.unit), pt(b.X/g.unit, b.Y/g.unit)})
-		}
+	g.Floor = g.chain(ring...)
+	for i, p := range ring {
+		g.pieces = append(g.pieces, [2]exact.Pt{p, ring[(i+1)%len(ring)]})
 	}
 }
 
@@ -119,7 +158,7 @@ func (g *tangler) pointOff(p exact.Pt) exact.Pt {
 	return q
 }
 
-func (g *tangler) wall(bodies bool) {
+func (g *tangler) wall() {
 	line := []exact.Pt{g.point()}
 	for range 1 + g.upTo(2, "bends")%2 {
 		line = append(line, g.pointOff(line[len(line)-1]))
@@ -133,7 +172,7 @@ func (g *tangler) wall(bodies bool) {
 	case 3:
 		w.Kind, w.Height = plan.Low, g.height()
 	}
-	if bodies && w.Kind != plan.Glazing && w.Kind != plan.Screen && g.one(3, "thick") {
+	if g.bodies && w.Kind != plan.Glazing && w.Kind != plan.Screen && g.one(3, "thick") {
 		w.Thickness = 2 * g.unit
 		if len(line) == 3 && exact.Orient(line[0], line[1], line[2]) == 0 {
 			line = line[:2] // a thick wall does not fold back into itself

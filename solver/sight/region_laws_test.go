@@ -1,6 +1,7 @@
 package sight_test
 
 import (
+	"math"
 	"slices"
 	"testing"
 
@@ -28,7 +29,7 @@ func figures(t *rapid.T, p *plan.Plan, eye exact.Pt, height int32) []float64 {
 // order and when walls are split in two; and to a few bits when it is turned or mirrored, unless a crossing lies on a
 // border between pixels.
 func TestRegionLaws(t *testing.T) {
-	for name, plans := range tangles {
+	for name, plans := range plantest.Small() {
 		t.Run(name, rapid.MakeCheck(func(t *rapid.T) {
 			p := plans.Draw(t, "plan")
 			if p.Floor().Len() == 0 { // the box would follow the marks, which the laws leave where they are
@@ -58,7 +59,7 @@ func TestRegionLaws(t *testing.T) {
 			got := figures(t, plantest.Moved(p, m), m.Point(eye), height)
 			ok := len(got) == len(want)
 			for i := range got {
-				ok = ok && near(got[i], want[i])
+				ok = ok && (near(got[i], want[i]) || i == 0 && math.Abs(got[0]-want[0]) < 1e-6*(want[1]+want[2]))
 			}
 			if !ok {
 				t.Errorf("eye %v, height %v, %+v: %v, want %v", eye, height, m, got, want)

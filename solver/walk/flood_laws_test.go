@@ -43,7 +43,7 @@ func lengths(t interface{ Fatal(...any) }, m *mesh.Mesh, from, to exact.Pt, heig
 // TestFloodLaws: an approach and a walk are as long as before when the plan is shifted, when its walls come in another order
 // and when walls are split in two, and when it is turned or mirrored, unless a crossing lies on a border between pixels.
 func TestFloodLaws(t *testing.T) {
-	for name, plans := range tangles {
+	for name, plans := range plantest.Small() {
 		t.Run(name, rapid.MakeCheck(func(t *rapid.T) {
 			p := plans.Draw(t, "plan")
 			if p.Floor().Len() == 0 {

@@ -18,11 +18,6 @@ import (
 	"enfilade/solver/walk"
 )
 
-// tangles are the generators of small degenerate plans.
-var tangles = map[string]*rapid.Generator[*plan.Plan]{
-	"tangles": plantest.Tangles(), "specks": plantest.Specks(), "lines": plantest.Lines(),
-}
-
 // tester is what the checks need of *testing.T and *rapid.T.
 type tester interface {
 	Errorf(string, ...any)
@@ -70,7 +65,7 @@ func near(a, b float64) bool {
 // TestFloodAgainstTwin holds full walks and approaches against the slow exact ones on plans full of degeneracies, from and
 // to faces, ends, corners and crossings.
 func TestFloodAgainstTwin(t *testing.T) {
-	for name, plans := range tangles {
+	for name, plans := range plantest.Small() {
 		t.Run(name, rapid.MakeCheck(func(t *rapid.T) {
 			p := plans.Draw(t, "plan")
 			t.Log(plantest.Text(p))
@@ -89,7 +84,7 @@ func TestFloodAgainstTwin(t *testing.T) {
 
 // TestFloodToFrontsAgainstTwin walks to where the front of an edge is first seen from, its eye at either end or the middle.
 func TestFloodToFrontsAgainstTwin(t *testing.T) {
-	for name, plans := range tangles {
+	for name, plans := range plantest.Small() {
 		t.Run(name, rapid.MakeCheck(func(t *rapid.T) {
 			p := plans.Draw(t, "plan")
 			t.Log(plantest.Text(p))
@@ -194,7 +189,7 @@ func samePath(t tester, what string, from, to exact.Pt, height int32, got walk.P
 		sum += math.Hypot(p[0]-last[0], p[1]-last[1])
 		last = p
 	}
-	if math.Abs(sum-got.Length) > 1e-9*math.Max(1, sum) {
+	if !near(sum, got.Length) {
 		t.Errorf("%s from %v to %v: says %v, its points make %v", what, from, to, got.Length, sum)
 	}
 	if end := floats(want.Points[len(want.Points)-1:])[0]; sameEnd && !got.Ties && math.Hypot(end[0]-last[0], end[1]-last[1]) > 1e-4 {
