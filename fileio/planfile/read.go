@@ -176,11 +176,15 @@ func fitOpenings(p plan.Parts) *Fault {
 			return faultf(where+", wall", "names wall %q, which is not in the file", o.Wall)
 		}
 		if _, fault := p.Walls[w].Fit(o); fault != "" {
-			return faultf(where, "%s", fault)
+			field := ", at"
+			if line := p.Walls[w].Line; o.Segment+1 >= line.Len() || line.At(o.Segment) == line.At(o.Segment+1) {
+				field = ", segment"
+			}
+			return faultf(where+field, "%s", fault)
 		}
 		for _, j := range in[w] {
 			if o.Over(p.Openings[j]) {
-				return faultf(where, "lies over opening %s; openings in one wall must not overlap", p.Openings[j].ID)
+				return faultf(where+", at", "lies over opening %s; openings in one wall must not overlap", p.Openings[j].ID)
 			}
 		}
 		in[w] = append(in[w], i)
