@@ -36,18 +36,26 @@ func (tr *Triangulation) constrain(a, b, k int32) error {
 		if err := tr.flipThrough(a, b, e); err != nil {
 			return err
 		}
-		e = tr.find(a, b)
+		e = tr.lookup(a, b)
 	}
-	f := tr.tris[e.Tri()].n[e.Corner()]
 	if tr.tris[e.Tri()].c[e.Corner()] >= 0 {
 		return fmt.Errorf("%w: edge %v to %v twice", ErrCrossing, tr.Pts[a], tr.Pts[b])
 	}
-	tr.tris[e.Tri()].c[e.Corner()] = k
-	tr.tris[f.Tri()].c[f.Corner()] = k
+	tr.mark(e, k)
 	if crossed {
 		tr.restore()
 	}
 	return nil
+}
+
+// mark writes constraint k, -1 for none, on both sides of e.
+func (tr *Triangulation) mark(e Edge, k int32) {
+	f := tr.tris[e.Tri()].n[e.Corner()]
+	tr.tris[e.Tri()].c[e.Corner()] = k
+	tr.tris[f.Tri()].c[f.Corner()] = k
+	if tr.logs {
+		tr.log = append(tr.log, e.Tri(), f.Tri())
+	}
 }
 
 // towards looks around a for b: the half-edge from a to b, or else the half-edge opposite a that the segment crosses first.
@@ -73,23 +81,6 @@ func (tr *Triangulation) towards(a, b int32) (e Edge, crossed bool, err error) {
 		if e == start || e == None {
 			return None, false, fmt.Errorf("mesh: no triangle at %v towards %v", pa, pb)
 		}
-	}
-}
-
-// find returns the half-edge from a to b, which must be there. Corners of the box are open to one side, so they are looked
-// for from the other end; no edge between two of them is ever asked for.
-func (tr *Triangulation) find(a, b int32) Edge {
-	if int(a) >= len(tr.Pts)-4 {
-		e := tr.find(b, a)
-		return tr.tris[e.Tri()].n[e.Corner()]
-	}
-	e := tr.out[a]
-	for {
-		r := &tr.tris[e.Tri()]
-		if r.v[inc[e.Corner()]] == b {
-			return e
-		}
-		e = r.n[e.Prev().Corner()]
 	}
 }
 
@@ -123,7 +114,7 @@ func (tr *Triangulation) flipThrough(a, b int32, e Edge) error {
 	for len(queue) > 0 {
 		q := queue[0]
 		queue = queue[1:]
-		d := tr.find(q[0], q[1])
+		d := tr.lookup(q[0], q[1])
 		if !tr.convex(d) {
 			queue = append(queue, q)
 			continue
@@ -161,25 +152,47 @@ func (tr *Triangulation) flipTracked(e Edge) (t, u int32) {
 	return t, u
 }
 
-// restore makes the edges of tr.work Delaunay where no constraint holds them.
+// restore makes the edges of tr.work, and whatever flips around them, Delaunay where no constraint holds them. It empties
+// tr.work.
 func (tr *Triangulation) restore() {
-	for changed := true; changed; {
-		changed = false
-		for k, w := range tr.work {
-			e := tr.find(w[0], w[1])
-			r := &tr.tris[e.Tri()]
-			i := e.Corner()
-			if r.c[i] >= 0 || r.n[i] == None {
-				continue
-			}
-			f := r.n[i]
-			d := tr.tris[f.Tri()].v[f.Prev().Corner()]
-			if exact.InCircle(tr.Pts[r.v[0]], tr.Pts[r.v[1]], tr.Pts[r.v[2]], tr.Pts[d]) <= 0 {
-				continue
-			}
-			t, u := tr.flipTracked(e)
-			tr.work[k] = [2]int32{tr.tris[t].v[0], tr.tris[u].v[0]}
-			changed = true
+	for len(tr.work) > 0 {
+		w := tr.work[len(tr.work)-1]
+		tr.work = tr.work[:len(tr.work)-1]
+		e := tr.lookup(w[0], w[1])
+		if e == None || !tr.wrong(e) {
+			continue
+		}
+		tr.review(tr.flipTracked(e))
+	}
+}
+
+// review leaves the four edges around a flip, whose triangles are t and u, to be examined.
+func (tr *Triangulation) review(t, u int32) {
+	c, a, d, b := tr.tris[t].v[0], tr.tris[t].v[1], tr.tris[t].v[2], tr.tris[u].v[1]
+	tr.work = append(tr.work, [2]int32{c, a}, [2]int32{a, d}, [2]int32{d, b}, [2]int32{b, c})
+}
+
+// lookup returns the half-edge from a to b, or None when there is none (any more) or it is a side of the box.
+func (tr *Triangulation) lookup(a, b int32) Edge {
+	start := tr.out[a]
+	for e := start; e != None; {
+		r := &tr.tris[e.Tri()]
+		if r.v[inc[e.Corner()]] == b {
+			return e
+		}
+		if e = r.n[e.Prev().Corner()]; e == start {
+			return None
 		}
 	}
+	// The star of a corner of the box is open: look clockwise, too.
+	for e := start; e != None; {
+		r := &tr.tris[e.Tri()]
+		if r.v[inc[e.Corner()]] == b {
+			return e
+		}
+		if e = r.n[e.Corner()]; e != None {
+			e = e.Next()
+		}
+	}
+	return None
 }

@@ -14,8 +14,7 @@ type grid struct {
 // makeGrid lays a grid of about half as many square cells as there are triangles. O(n) expected: the walk from one cell's
 // middle to the next is short.
 func makeGrid(m *Mesh) grid {
-	n := len(m.Pts)
-	lo, hi := m.Pts[n-4], m.Pts[n-2]
+	lo, hi := m.Box()
 	w, h := int64(hi.X)-int64(lo.X), int64(hi.Y)-int64(lo.Y)
 	g := grid{lo: lo}
 	for (w>>g.shiftX+1)*(h>>g.shiftX+1) > int64(len(m.Tris)/2+1) {
@@ -49,13 +48,10 @@ type Place struct {
 // Locate finds p, and reports false when p lies outside the mesh's rectangle. Expected time is constant for meshes whose
 // triangles are spread evenly.
 func (m *Mesh) Locate(p exact.Pt) (Place, bool) {
-	g := &m.grid
-	n := len(m.Pts)
-	if !exact.InBox(m.Pts[n-4], m.Pts[n-2], p) {
+	if lo, hi := m.Box(); !exact.InBox(lo, hi, p) {
 		return Place{}, false
 	}
-	x, y := (p.X-g.lo.X)>>g.shiftX, (p.Y-g.lo.Y)>>g.shiftX
-	t, zero, zeros := m.walkTo(g.near[y*g.nx+x], p)
+	t, zero, zeros := m.walkTo(m.hint(p), p)
 	place := Place{Tri: t, Edge: None, Corner: -1}
 	switch {
 	case zeros == 2:
@@ -68,6 +64,16 @@ func (m *Mesh) Locate(p exact.Pt) (Place, bool) {
 		place.Edge = EdgeOf(t, zero)
 	}
 	return place, true
+}
+
+// hint returns a triangle near p. A triangle that has been taken out names one that took its place.
+func (m *Mesh) hint(p exact.Pt) int32 {
+	g := &m.grid
+	t := g.near[(p.Y-g.lo.Y)>>g.shiftX*g.nx+(p.X-g.lo.X)>>g.shiftX]
+	for m.raw.tris[t].v[0] == dead {
+		t = m.raw.tris[t].n[0].Tri()
+	}
+	return t
 }
 
 // walkTo walks from triangle t to one that holds p, which must lie in the mesh's rectangle: see Triangulation.walk. It

@@ -41,16 +41,23 @@ type Step struct {
 	TopRight, TopLeft int32
 }
 
-// Mesh is a finished triangulation of a rectangle. It never changes, so any goroutine may read it.
+// Mesh is a triangulation of a rectangle, laid out for queries. It does not change while it is asked; Edit changes it.
 type Mesh struct {
-	Pts   []exact.Pt // the graph's points, then the four corners of the box
+	Pts   []exact.Pt // the graph's points, with the four corners of the box among them
 	Tris  []Tri
 	Steps []Step  // three a triangle, see StepAt
 	Solid []int32 // for each triangle the height up to which it is solid for sight
-	Con   []int32 // for each half-edge the index of the edge that lies on it, or -1
+	raw   *Triangulation
+	tags  []Tag
 	grid  grid
 	turn  turning
 }
+
+// Box returns the lower left and the upper right corner of the rectangle.
+func (m *Mesh) Box() (lo, hi exact.Pt) { return m.Pts[m.raw.box], m.Pts[m.raw.box+2] }
+
+// Constraint returns the index of the edge that lies on e, or -1.
+func (m *Mesh) Constraint(e Edge) int32 { return m.raw.tris[e.Tri()].c[e.Corner()] }
 
 // StepAt returns the index in Steps of the step through half-edge e.
 func StepAt(e Edge) int { return int(e - e>>2) }
@@ -68,55 +75,99 @@ func (m *Mesh) Ends(e Edge) (a, b exact.Pt) {
 // Inc returns the corner that follows i counter-clockwise.
 func Inc(i int) int { return inc[i] }
 
-// Finish lays the triangulation out for queries.
+// Finish lays the triangulation out for queries; it must not be used by itself from then on.
 //
 //   - tags gives what each edge passed to Triangulate stops.
 //   - solid gives for each triangle of tr the height up to which it is solid, and whether nobody stands in it.
 //   - Cost: O(n), n the number of triangles.
 func (tr *Triangulation) Finish(tags []Tag, solid []Tag) *Mesh {
-	order, place := tr.layout()
-	m := &Mesh{Pts: tr.Pts, Tris: make([]Tri, len(order)), Solid: make([]int32, len(order)), Con: make([]int32, 4*len(order))}
+	order := tr.arrange()
+	m := &Mesh{Pts: tr.Pts, Tris: make([]Tri, len(order)), Steps: make([]Step, 3*len(order)), Solid: make([]int32, len(order)),
+		raw: tr, tags: tags}
 	for k, old := range order {
-		r := &tr.tris[old]
-		t := &m.Tris[k]
-		m.Solid[k] = solid[old].Top
-		if solid[old].Walk {
-			t.Flags |= FlagNoWalk
-		}
-		for i := range 3 {
-			t.P[i], t.V[i] = tr.Pts[r.v[i]], r.v[i]
-			tag := Tag{Top: solid[old].Top, Walk: solid[old].Walk}
-			t.N[i] = None
-			if n := r.n[i]; n != None {
-				t.N[i] = EdgeOf(place[n.Tri()], n.Corner())
-				tag = merge(tag, solid[n.Tri()])
-			} else {
-				tag = Tag{Ceiling, true}
-			}
-			if r.c[i] >= 0 {
-				tag = merge(tag, tags[r.c[i]])
-			}
-			m.Con[4*k+i] = r.c[i]
-			t.Top[i] = tag.Top
-			if tag.Walk {
-				t.Flags |= 1 << uint(i)
-			}
-		}
+		m.setSolid(int32(k), solid[old])
 	}
-	m.makeSteps()
+	for k := range m.Tris {
+		m.refresh(int32(k))
+	}
 	m.grid = makeGrid(m)
 	m.turn = makeTurning(m)
 	return m
 }
 
-func (m *Mesh) makeSteps() {
-	m.Steps = make([]Step, 3*len(m.Tris))
-	for k := range m.Tris {
-		t := &m.Tris[k]
-		for i := range 3 {
-			right, left := inc[i], inc[inc[i]]
-			m.Steps[3*k+i] = Step{t.P[left], t.N[right], t.N[left], t.Top[right], t.Top[left]}
+// arrange puts the triangles in their final order, each with its first point in front, and returns their old indices.
+func (tr *Triangulation) arrange() (order []int32) {
+	order, place := tr.layout()
+	first := make([]uint8, len(tr.tris))
+	for t := range tr.tris {
+		first[t] = tr.firstCorner(&tr.tris[t])
+	}
+	tris := make([]rawTri, len(order), len(order)+len(order)/8)
+	for k, old := range order {
+		r := &tr.tris[old]
+		for j := range 3 {
+			i := (int(first[old]) + j) % 3
+			tris[k].v[j], tris[k].c[j], tris[k].n[j] = r.v[i], r.c[i], None
+			if n := r.n[i]; n != None {
+				tris[k].n[j] = EdgeOf(place[n.Tri()], (n.Corner()+3-int(first[n.Tri()]))%3)
+			}
 		}
+	}
+	tr.tris = tris
+	for t := range tr.tris {
+		for i, v := range tr.tris[t].v {
+			tr.out[v] = EdgeOf(int32(t), i)
+		}
+	}
+	return order
+}
+
+// firstCorner returns the corner of r that comes first in the order of points.
+func (tr *Triangulation) firstCorner(r *rawTri) uint8 {
+	a, b, c := tr.Pts[r.v[0]], tr.Pts[r.v[1]], tr.Pts[r.v[2]]
+	switch {
+	case a.Less(b) && a.Less(c):
+		return 0
+	case b.Less(c):
+		return 1
+	}
+	return 2
+}
+
+func (m *Mesh) setSolid(t int32, s Tag) {
+	m.Solid[t] = s.Top
+	m.Tris[t].Flags = 0
+	if s.Walk {
+		m.Tris[t].Flags = FlagNoWalk
+	}
+}
+
+// solid returns what triangle t stops.
+func (m *Mesh) solid(t int32) Tag { return Tag{m.Solid[t], m.Tris[t].Flags&FlagNoWalk != 0} }
+
+// refresh writes what queries read of triangle t, from its raw form and from what it and its neighbours stop.
+func (m *Mesh) refresh(t int32) {
+	r, q := &m.raw.tris[t], &m.Tris[t]
+	own := m.solid(t)
+	q.Flags &= FlagNoWalk
+	for i := range 3 {
+		tag := own
+		if n := r.n[i]; n != None {
+			tag = merge(tag, m.solid(n.Tri()))
+		} else {
+			tag = Tag{Ceiling, true}
+		}
+		if r.c[i] >= 0 {
+			tag = merge(tag, m.tags[r.c[i]])
+		}
+		q.P[i], q.V[i], q.N[i], q.Top[i] = m.Pts[r.v[i]], r.v[i], r.n[i], tag.Top
+		if tag.Walk {
+			q.Flags |= 1 << uint(i)
+		}
+	}
+	for i := range 3 {
+		right, left := inc[i], inc[inc[i]]
+		m.Steps[3*int(t)+i] = Step{q.P[left], q.N[right], q.N[left], q.Top[right], q.Top[left]}
 	}
 }
 

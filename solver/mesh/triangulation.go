@@ -45,12 +45,16 @@ var ErrCrossing = errors.New("mesh: edges cross or pass through a point")
 
 // Triangulation is a constrained Delaunay triangulation under construction.
 type Triangulation struct {
-	Pts   []exact.Pt // the given points, then the four corners of the box around them
+	Pts   []exact.Pt // the given points, then the four corners of the box around them, then points added later
 	tris  []rawTri
-	curve []int32 // the points in their order along a curve
-	out   []Edge  // some half-edge leaving each point
-	todo  []Edge  // stack of edges to examine
-	work  []([2]int32)
+	box   int32      // index of the first corner of the box
+	curve []int32    // the points in their order along a curve
+	out   []Edge     // some half-edge leaving each point
+	todo  []Edge     // stack of edges to examine
+	work  [][2]int32 // edges to examine, by their ends
+	free  []int32    // triangles taken out, to be used again
+	log   []int32    // triangles changed since the last call of Edit
+	logs  bool       // keep the log
 }
 
 // rawTri is a triangle: its corners, the twins of its three half-edges, and the constraint on each, or -1.
@@ -69,7 +73,7 @@ const margin = 10000
 //   - Errors: ErrCrossing when they do not; the context's error when it is cancelled.
 //   - Cost: O(n log n) expected for the points; an edge costs time proportional to what it crosses.
 func Triangulate(ctx context.Context, pts []exact.Pt, edges [][2]int32) (*Triangulation, error) {
-	tr := &Triangulation{Pts: boxed(pts)}
+	tr := &Triangulation{Pts: boxed(pts), box: int32(len(pts))}
 	if err := tr.insertAll(ctx, len(pts)); err != nil {
 		return nil, err
 	}
@@ -120,7 +124,7 @@ func (tr *Triangulation) insertAll(ctx context.Context, n int) error {
 		} else {
 			tr.splitEdge(EdgeOf(t, on), p)
 		}
-		tr.legalise(p)
+		tr.legalise()
 		last = int32(len(tr.tris) - 1)
 	}
 	return nil
@@ -177,15 +181,32 @@ func (tr *Triangulation) link(e, f Edge) {
 	}
 }
 
+// fresh returns the index of a triangle that is free to be written.
+func (tr *Triangulation) fresh() int32 {
+	if n := len(tr.free); n > 0 {
+		t := tr.free[n-1]
+		tr.free = tr.free[:n-1]
+		return t
+	}
+	tr.tris = append(tr.tris, rawTri{})
+	return int32(len(tr.tris) - 1)
+}
+
+// set writes triangle t.
+func (tr *Triangulation) set(t int32, r rawTri) {
+	tr.tris[t] = r
+	if tr.logs {
+		tr.log = append(tr.log, t)
+	}
+}
+
 // splitTri puts p strictly inside t and leaves the three edges around it to examine.
 func (tr *Triangulation) splitTri(t, p int32) {
 	r := tr.tris[t]
-	u, w := int32(len(tr.tris)), int32(len(tr.tris)+1)
-	free := [3]int32{-1, -1, -1}
-	tr.tris[t] = rawTri{[3]int32{r.v[0], r.v[1], p}, [3]Edge{r.n[0], EdgeOf(u, 2), EdgeOf(w, 1)}, free}
-	tr.tris = append(tr.tris,
-		rawTri{[3]int32{r.v[1], r.v[2], p}, [3]Edge{r.n[1], EdgeOf(w, 2), EdgeOf(t, 1)}, free},
-		rawTri{[3]int32{r.v[2], r.v[0], p}, [3]Edge{r.n[2], EdgeOf(t, 2), EdgeOf(u, 1)}, free})
+	u, w := tr.fresh(), tr.fresh()
+	tr.set(t, rawTri{[3]int32{r.v[0], r.v[1], p}, [3]Edge{r.n[0], EdgeOf(u, 2), EdgeOf(w, 1)}, [3]int32{r.c[0], -1, -1}})
+	tr.set(u, rawTri{[3]int32{r.v[1], r.v[2], p}, [3]Edge{r.n[1], EdgeOf(w, 2), EdgeOf(t, 1)}, [3]int32{r.c[1], -1, -1}})
+	tr.set(w, rawTri{[3]int32{r.v[2], r.v[0], p}, [3]Edge{r.n[2], EdgeOf(t, 2), EdgeOf(u, 1)}, [3]int32{r.c[2], -1, -1}})
 	tr.link(r.n[1], EdgeOf(u, 0))
 	tr.link(r.n[2], EdgeOf(w, 0))
 	tr.todo = append(tr.todo, EdgeOf(t, 0), EdgeOf(u, 0), EdgeOf(w, 0))
@@ -197,17 +218,15 @@ func (tr *Triangulation) splitEdge(e Edge, p int32) {
 	t, u := e.Tri(), f.Tri()
 	i, j := e.Corner(), f.Corner()
 	rt, ru := tr.tris[t], tr.tris[u]
-	a, b, c, d := rt.v[i], rt.v[inc[i]], rt.v[inc[inc[i]]], ru.v[inc[inc[j]]]
-	bc, ca := rt.n[inc[i]], rt.n[inc[inc[i]]]
-	ad, db := ru.n[inc[j]], ru.n[inc[inc[j]]]
-	w, x := int32(len(tr.tris)), int32(len(tr.tris)+1)
-	free := [3]int32{-1, -1, -1}
+	i1, i2, j1, j2 := inc[i], inc[inc[i]], inc[j], inc[inc[j]]
+	a, b, c, d := rt.v[i], rt.v[i1], rt.v[i2], ru.v[j2]
+	bc, ca, ad, db := rt.n[i1], rt.n[i2], ru.n[j1], ru.n[j2]
+	w, x := tr.fresh(), tr.fresh()
 	// Around p: c a | a d | d b | b c.
-	tr.tris[t] = rawTri{[3]int32{c, a, p}, [3]Edge{ca, EdgeOf(u, 2), EdgeOf(x, 1)}, free}
-	tr.tris[u] = rawTri{[3]int32{a, d, p}, [3]Edge{ad, EdgeOf(w, 2), EdgeOf(t, 1)}, free}
-	tr.tris = append(tr.tris,
-		rawTri{[3]int32{d, b, p}, [3]Edge{db, EdgeOf(x, 2), EdgeOf(u, 1)}, free},
-		rawTri{[3]int32{b, c, p}, [3]Edge{bc, EdgeOf(t, 2), EdgeOf(w, 1)}, free})
+	tr.set(t, rawTri{[3]int32{c, a, p}, [3]Edge{ca, EdgeOf(u, 2), EdgeOf(x, 1)}, [3]int32{rt.c[i2], -1, -1}})
+	tr.set(u, rawTri{[3]int32{a, d, p}, [3]Edge{ad, EdgeOf(w, 2), EdgeOf(t, 1)}, [3]int32{ru.c[j1], -1, -1}})
+	tr.set(w, rawTri{[3]int32{d, b, p}, [3]Edge{db, EdgeOf(x, 2), EdgeOf(u, 1)}, [3]int32{ru.c[j2], -1, -1}})
+	tr.set(x, rawTri{[3]int32{b, c, p}, [3]Edge{bc, EdgeOf(t, 2), EdgeOf(w, 1)}, [3]int32{rt.c[i1], -1, -1}})
 	tr.link(ca, EdgeOf(t, 0))
 	tr.link(ad, EdgeOf(u, 0))
 	tr.link(db, EdgeOf(w, 0))
@@ -215,23 +234,42 @@ func (tr *Triangulation) splitEdge(e Edge, p int32) {
 	tr.todo = append(tr.todo, EdgeOf(t, 0), EdgeOf(u, 0), EdgeOf(w, 0), EdgeOf(x, 0))
 }
 
-// legalise flips the edges on the stack, each opposite the new point p, until all are Delaunay.
-func (tr *Triangulation) legalise(p int32) {
-	pt := tr.Pts[p]
+// legalise flips the edges on the stack, each opposite the new point p, until all are as they should be.
+func (tr *Triangulation) legalise() {
 	for len(tr.todo) > 0 {
 		e := tr.todo[len(tr.todo)-1]
 		tr.todo = tr.todo[:len(tr.todo)-1]
-		f := tr.tris[e.Tri()].n[e.Corner()]
-		if f == None {
-			continue
+		if tr.wrong(e) {
+			t, u := tr.flip(e)
+			tr.todo = append(tr.todo, EdgeOf(t, 1), EdgeOf(u, 0))
 		}
-		r := &tr.tris[f.Tri()]
-		if exact.InCircle(tr.Pts[r.v[0]], tr.Pts[r.v[1]], tr.Pts[r.v[2]], pt) <= 0 {
-			continue
-		}
-		t, u := tr.flip(e)
-		tr.todo = append(tr.todo, EdgeOf(t, 1), EdgeOf(u, 0))
 	}
+}
+
+// wrong reports whether e must give way to the other diagonal of its two triangles: no constraint holds it, and the circle
+// through one triangle has the apex of the other inside. When the four points lie on one circle, the diagonal that ends at
+// the first of them in the order of points is kept. That is what pulling every point a little off the plane of the lifting
+// does, the first one most, so the triangulation depends on points and edges alone and not on how it came about (symbolic
+// perturbation: Edelsbrunner and Mücke, "Simulation of simplicity", ACM TOG 9, 1990).
+func (tr *Triangulation) wrong(e Edge) bool {
+	r, i := &tr.tris[e.Tri()], e.Corner()
+	f := r.n[i]
+	if f == None || r.c[i] >= 0 {
+		return false
+	}
+	a, b, c := tr.Pts[r.v[i]], tr.Pts[r.v[inc[i]]], tr.Pts[r.v[inc[inc[i]]]]
+	d := tr.Pts[tr.tris[f.Tri()].v[inc[inc[f.Corner()]]]]
+	side := exact.InCircle(a, b, c, d)
+	if side != 0 {
+		return side > 0
+	}
+	if b.Less(a) {
+		a = b
+	}
+	if d.Less(c) {
+		c = d
+	}
+	return c.Less(a)
 }
 
 // flip replaces the diagonal e of its two triangles by the other one. With e from a to b and apexes c (left) and d
@@ -246,8 +284,8 @@ func (tr *Triangulation) flip(e Edge) (t, u int32) {
 	ru := tr.tris[u]
 	i1, i2, j1, j2 := inc[i], inc[inc[i]], inc[j], inc[inc[j]]
 	a, b, c, d := rt.v[i], rt.v[i1], rt.v[i2], ru.v[j2]
-	tr.tris[t] = rawTri{[3]int32{c, a, d}, [3]Edge{rt.n[i2], ru.n[j1], EdgeOf(u, 2)}, [3]int32{rt.c[i2], ru.c[j1], -1}}
-	tr.tris[u] = rawTri{[3]int32{d, b, c}, [3]Edge{ru.n[j2], rt.n[i1], EdgeOf(t, 2)}, [3]int32{ru.c[j2], rt.c[i1], -1}}
+	tr.set(t, rawTri{[3]int32{c, a, d}, [3]Edge{rt.n[i2], ru.n[j1], EdgeOf(u, 2)}, [3]int32{rt.c[i2], ru.c[j1], -1}})
+	tr.set(u, rawTri{[3]int32{d, b, c}, [3]Edge{ru.n[j2], rt.n[i1], EdgeOf(t, 2)}, [3]int32{ru.c[j2], rt.c[i1], -1}})
 	tr.link(rt.n[i2], EdgeOf(t, 0))
 	tr.link(ru.n[j1], EdgeOf(t, 1))
 	tr.link(ru.n[j2], EdgeOf(u, 0))

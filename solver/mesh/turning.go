@@ -52,6 +52,33 @@ func makeTurning(m *Mesh) turning {
 	return turn
 }
 
+// update finds the sectors again around every point of the triangles listed.
+func (turn *turning) update(m *Mesh, tris []int32) {
+	for len(turn.at) < 4*len(m.Tris) {
+		turn.at = append(turn.at, -1)
+	}
+	for len(turn.places) < len(m.Pts) {
+		turn.places = append(turn.places, 0)
+	}
+	done := map[int32]bool{}
+	for _, t := range tris {
+		for i, v := range m.Tris[t].V {
+			if done[v] || v >= m.raw.box && v < m.raw.box+4 {
+				continue
+			}
+			done[v] = true
+			turn.places[v] = 0
+			m.Around(EdgeOf(t, i), func(e Edge) { turn.at[e] = -1 })
+			m.Around(EdgeOf(t, i), func(e Edge) {
+				if tri := &m.Tris[e.Tri()]; tri.Flags&FlagNoWalk == 0 && tri.StopsWalk(e.Corner()) {
+					turn.places[v] = min(turn.places[v]+1, 2)
+					turn.add(m, e)
+				}
+			})
+		}
+	}
+}
+
 // add records the sector that begins at first, an edge that stops walking with walkable floor to its left, when it is
 // wider than half a turn.
 func (turn *turning) add(m *Mesh, first Edge) {

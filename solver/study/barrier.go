@@ -50,7 +50,7 @@ func (b *barrierFinder) search() {
 				continue
 			}
 			next := step{t.N[i].Tri(), s.first}
-			con := m.Con[mesh.EdgeOf(s.tri, i)]
+			con := m.Constraint(mesh.EdgeOf(s.tri, i))
 			if b.offFloor(con) {
 				continue
 			}

@@ -79,7 +79,7 @@ func (g *ground) holder(p exact.Pt, shut func(int32) bool) plan.Ref {
 			if n == mesh.None {
 				continue
 			}
-			if con := g.mesh.Con[e]; con >= 0 && !shut(n.Tri()) {
+			if con := g.mesh.Constraint(e); con >= 0 && !shut(n.Tri()) {
 				return g.outline.Items[g.graph.Edges[con].Item]
 			}
 			if !seen[n.Tri()] {

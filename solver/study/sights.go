@@ -83,8 +83,8 @@ const minRange = 16
 
 // reachesAll reports whether the range ends beyond every corner of the mesh.
 func (sc *scene) reachesAll(eye exact.Pt, r int32) bool {
-	n := len(sc.plain.mesh.Pts)
-	for _, c := range sc.plain.mesh.Pts[n-4:] {
+	lo, hi := sc.plain.mesh.Box()
+	for _, c := range [4]exact.Pt{lo, {X: hi.X, Y: lo.Y}, hi, {X: lo.X, Y: hi.Y}} {
 		if exact.Dist2(eye, c) >= int64(r)*int64(r) {
 			return false
 		}

@@ -1,0 +1,241 @@
+package mesh
+
+import (
+	"fmt"
+	"slices"
+
+	"enfilade/solver/exact"
+)
+
+// dead marks a triangle that has been taken out, in place of its first corner; its first neighbour is one that took its place.
+const dead int32 = -1
+
+// Editor changes a mesh in place: points and edges go and come, each at a cost proportional to what lies around it. The
+// triangulation that results is the one that would be built from the points and edges left (see Triangulation.wrong), but
+// for the numbering.
+//
+// Between NewEditor and Close the mesh answers no queries.
+type Editor struct {
+	m  *Mesh
+	tr *Triangulation
+}
+
+// NewEditor begins a change of m.
+func NewEditor(m *Mesh) *Editor {
+	m.raw.log, m.raw.logs = m.raw.log[:0], true
+	return &Editor{m, m.raw}
+}
+
+// Free takes the constraint off the edge from a to b.
+//
+//   - Errors: when there is no such edge or nothing holds it.
+func (d *Editor) Free(a, b int32) error {
+	e := d.tr.lookup(a, b)
+	if e == None || d.tr.tris[e.Tri()].c[e.Corner()] < 0 {
+		return fmt.Errorf("mesh: no edge from %v to %v", d.m.Pts[a], d.m.Pts[b])
+	}
+	d.tr.mark(e, -1)
+	d.tr.work = append(d.tr.work[:0], [2]int32{a, b})
+	d.tr.restore()
+	return nil
+}
+
+// Remove takes point v out, at which no constraint may end.
+//
+// Edges at v are flipped away until three or four are left, then its triangles are joined (flips as in Devillers, "On
+// deletion in Delaunay triangulations", SoCG 1999, without his priorities: what is not Delaunay is mended afterwards).
+func (d *Editor) Remove(v int32) error {
+	tr := d.tr
+	for {
+		star, err := d.star(v)
+		if err != nil {
+			return err
+		}
+		k := slices.IndexFunc(star, func(e Edge) bool { return len(star) > 3 && tr.convex(e) })
+		if k >= 0 {
+			tr.review(tr.flipTracked(star[k]))
+			continue
+		}
+		d.join(v, star)
+		tr.restore()
+		return nil
+	}
+}
+
+// star returns the half-edges that leave v, counter-clockwise.
+func (d *Editor) star(v int32) ([]Edge, error) {
+	var star []Edge
+	for e := d.tr.out[v]; ; {
+		r := &d.tr.tris[e.Tri()]
+		if r.c[e.Corner()] >= 0 {
+			return nil, fmt.Errorf("mesh: point %v still has an edge", d.tr.Pts[v])
+		}
+		star = append(star, e)
+		if e = r.n[e.Prev().Corner()]; e == None {
+			return nil, fmt.Errorf("mesh: point %v is a corner of the box", d.tr.Pts[v])
+		} else if e == star[0] {
+			return star, nil
+		}
+	}
+}
+
+// join replaces the three or four triangles around v by one or two, and leaves the edges around to be examined.
+func (d *Editor) join(v int32, star []Edge) {
+	tr := d.tr
+	n := len(star)
+	ring, out, con := make([]int32, n), make([]Edge, n), make([]int32, n)
+	for i, e := range star {
+		r := &tr.tris[e.Tri()]
+		o := e.Next()
+		ring[i], out[i], con[i] = r.v[o.Corner()], r.n[o.Corner()], r.c[o.Corner()]
+	}
+	for i := range n {
+		tr.work = append(tr.work, [2]int32{ring[i], ring[(i+1)%n]})
+	}
+	t := star[0].Tri()
+	if n == 3 {
+		tr.set(t, rawTri{[3]int32{ring[0], ring[1], ring[2]}, [3]Edge{out[0], out[1], out[2]}, [3]int32{con[0], con[1], con[2]}})
+		d.kill(star[1:], t)
+	} else {
+		// Four edges of which none can be flipped meet at right of way: v lies on both diagonals.
+		u := star[2].Tri()
+		tr.set(t, rawTri{[3]int32{ring[0], ring[1], ring[2]}, [3]Edge{out[0], out[1], EdgeOf(u, 2)}, [3]int32{con[0], con[1], -1}})
+		tr.set(u, rawTri{[3]int32{ring[2], ring[3], ring[0]}, [3]Edge{out[2], out[3], EdgeOf(t, 2)}, [3]int32{con[2], con[3], -1}})
+		tr.work = append(tr.work, [2]int32{ring[0], ring[2]})
+		d.kill([]Edge{star[1], star[3]}, t)
+		d.relink(u)
+	}
+	d.relink(t)
+	tr.out[v] = None
+}
+
+// kill takes triangles out; whoever still names one is sent to t.
+func (d *Editor) kill(gone []Edge, t int32) {
+	for _, e := range gone {
+		d.tr.set(e.Tri(), rawTri{v: [3]int32{dead, dead, dead}, n: [3]Edge{EdgeOf(t, 0), None, None}, c: [3]int32{-1, -1, -1}})
+		d.tr.free = append(d.tr.free, e.Tri())
+	}
+}
+
+// relink makes t's neighbours name t, and its corners leave through it.
+func (d *Editor) relink(t int32) {
+	r := d.tr.tris[t]
+	for i := range 3 {
+		if r.n[i] != None {
+			d.tr.tris[r.n[i].Tri()].n[r.n[i].Corner()] = EdgeOf(t, i)
+		}
+		d.tr.out[r.v[i]] = EdgeOf(t, i)
+	}
+}
+
+// Add puts a new point in and returns its index.
+//
+//   - Errors: when p is there already, lies on a constraint, or is not strictly inside the rectangle.
+func (d *Editor) Add(p exact.Pt) (int32, error) {
+	tr := d.tr
+	if lo, hi := d.m.Box(); p.X <= lo.X || p.X >= hi.X || p.Y <= lo.Y || p.Y >= hi.Y {
+		return 0, fmt.Errorf("mesh: point %v lies outside the rectangle", p)
+	}
+	t, on, ok := tr.walk(d.m.hint(p), p)
+	if !ok || on >= 0 && tr.tris[t].c[on] >= 0 {
+		return 0, fmt.Errorf("mesh: point %v is there already or lies on an edge", p)
+	}
+	v := int32(len(tr.Pts))
+	tr.Pts, tr.out = append(tr.Pts, p), append(tr.out, None)
+	mark := len(tr.log)
+	if on < 0 {
+		tr.splitTri(t, v)
+	} else {
+		tr.splitEdge(EdgeOf(t, on), v)
+	}
+	tr.legalise()
+	for _, t := range tr.log[mark:] {
+		for i, w := range tr.tris[t].v {
+			tr.out[w] = EdgeOf(t, i)
+		}
+	}
+	return v, nil
+}
+
+// Hold forces the edge from a to b in as constraint k.
+//
+//   - Errors: ErrCrossing.
+func (d *Editor) Hold(a, b, k int32) error { return d.tr.constrain(a, b, k) }
+
+// Changed returns the triangles that changed since NewEditor, in order, each once, without those taken out.
+func (d *Editor) Changed() []int32 {
+	all := slices.Clone(d.tr.log)
+	slices.Sort(all)
+	all = slices.Compact(all)
+	return slices.DeleteFunc(all, func(t int32) bool { return d.tr.tris[t].v[0] == dead })
+}
+
+// Corners returns the indices of the corners of triangle t, counter-clockwise.
+func (d *Editor) Corners(t int32) [3]int32 { return d.tr.tris[t].v }
+
+// Neighbour is as Triangulation.Neighbour.
+func (d *Editor) Neighbour(t int32, i int) (tri, constraint int32) { return d.tr.Neighbour(t, i) }
+
+// Corner returns a triangle at the first corner of the rectangle.
+func (d *Editor) Corner() int32 { return d.tr.out[d.tr.box].Tri() }
+
+// Close ends the change and makes the mesh fit to be asked again.
+//
+//   - tags are what each constraint stops now.
+//   - solid names what triangles stop, for all that Changed returns and for whatever else stops something new.
+func (d *Editor) Close(tags []Tag, solid map[int32]Tag) {
+	m, tr := d.m, d.tr
+	m.Pts, m.tags = tr.Pts, tags
+	for len(m.Tris) < len(tr.tris) {
+		m.Tris, m.Solid = append(m.Tris, Tri{}), append(m.Solid, 0)
+		m.Steps = append(m.Steps, Step{}, Step{}, Step{})
+	}
+	for _, t := range tr.log {
+		if tr.tris[t].v[0] == dead {
+			m.bury(t)
+		}
+	}
+	fresh := map[int32]bool{}
+	for t, s := range solid {
+		tr.turnFirst(t)
+		m.setSolid(t, s)
+		fresh[t] = true
+		for i := range 3 {
+			if n := tr.tris[t].n[i]; n != None {
+				fresh[n.Tri()] = true
+			}
+		}
+	}
+	list := make([]int32, 0, len(fresh))
+	for t := range fresh {
+		m.refresh(t)
+		list = append(list, t)
+	}
+	slices.Sort(list)
+	m.turn.update(m, list)
+	tr.logs = false
+}
+
+// bury makes a triangle that was taken out stop everything.
+func (m *Mesh) bury(t int32) {
+	m.Solid[t] = Ceiling
+	m.Tris[t] = Tri{N: [3]Edge{m.raw.tris[t].n[0], None, None}, Top: [3]int32{Ceiling, Ceiling, Ceiling}, Flags: FlagNoWalk | flagBoundary}
+}
+
+// turnFirst turns triangle t so that its first corner in the order of points is in front.
+func (tr *Triangulation) turnFirst(t int32) {
+	r := tr.tris[t]
+	k := int(tr.firstCorner(&r))
+	if k == 0 {
+		return
+	}
+	q := &tr.tris[t]
+	for j := range 3 {
+		i := (k + j) % 3
+		q.v[j], q.n[j], q.c[j] = r.v[i], r.n[i], r.c[i]
+		if n := r.n[i]; n != None {
+			tr.tris[n.Tri()].n[n.Corner()] = EdgeOf(t, j)
+		}
+		tr.out[q.v[j]] = EdgeOf(t, j)
+	}
+}
