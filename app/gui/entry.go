@@ -2,6 +2,7 @@ package gui
 
 import (
 	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/driver/desktop"
 	"fyne.io/fyne/v2/widget"
 )
 
@@ -9,16 +10,18 @@ import (
 // not taken stays, and its fault is told.
 type entry struct {
 	widget.Entry
-	shown  string                  // the text last put in by the program
-	accept func(text string) error // takes the text over
-	fault  func(err error)         // shows why it was not, or nil that all is well; may be nil
-	leave  func()                  // gives the focus back; may be nil
+	shown  string                   // the text last put in by the program
+	accept func(text string) error  // takes the text over
+	fault  func(err error)          // shows why it was not, or nil that all is well; may be nil
+	leave  func()                   // gives the focus back; may be nil
+	beyond func(fyne.Shortcut) bool // takes the shortcuts that are not a text field's; may be nil
 	faulty bool
 	inside bool // it has the focus
 }
 
 func newEntry(accept func(string) error) *entry {
 	e := &entry{accept: accept}
+	e.Wrapping, e.Scroll = fyne.TextWrapOff, fyne.ScrollHorizontalOnly
 	e.ExtendBaseWidget(e)
 	return e
 }
@@ -81,6 +84,16 @@ func (e *entry) TypedKey(k *fyne.KeyEvent) {
 	default:
 		e.Entry.TypedKey(k)
 	}
+}
+
+// TypedShortcut keeps what is a text field's own and hands on the rest.
+func (e *entry) TypedShortcut(s fyne.Shortcut) {
+	if _, ok := s.(*desktop.CustomShortcut); ok && e.beyond != nil {
+		e.take()
+		e.beyond(s)
+		return
+	}
+	e.Entry.TypedShortcut(s)
 }
 
 // undoable is a field that has its own undo, which Ctrl+Z means while it has the focus.

@@ -204,7 +204,6 @@ func (w *window) remember(path string) {
 	}
 	list := append([]string{path}, slices.DeleteFunc(slices.Clone(w.recent()), func(p string) bool { return p == path })...)
 	w.app.Preferences().SetStringList(prefRecent, list[:min(len(list), maxRecent)])
-	w.menu.setRecent()
 }
 
 // fileName makes a title a name for a file.

@@ -128,6 +128,7 @@ func (f *form) row(d field) fyne.CanvasObject {
 	default:
 		r.entry = newEntry(func(text string) error { return r.field.set(text) })
 		r.entry.fault = func(err error) { f.tell(r, err) }
+		r.entry.beyond = f.w.shortcut
 		r.entry.leave = func() { f.w.win.Canvas().Focus(f.w.view) }
 		r.entry.SetPlaceHolder(d.empty)
 		value = r.entry

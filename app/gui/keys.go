@@ -38,6 +38,8 @@ func (w *window) typedKey(name fyne.KeyName) {
 		if w.toolAt != 0 {
 			w.choose(0)
 		}
+	case fyne.KeyF10:
+		w.bar.drop.open(0)
 	case fyne.KeyHome:
 		w.view.fit()
 	case fyne.KeyPageUp:

@@ -9,157 +9,67 @@ import (
 	"enfilade/assets"
 )
 
-// menu is the menu bar, with the items whose words or marks change.
-type menu struct {
-	w          *window
-	main       *fyne.MainMenu
-	edit       *fyne.Menu
-	view       *fyne.Menu
-	undo, redo *fyne.MenuItem
-	remove     *fyne.MenuItem
-	recent     *fyne.MenuItem
-	all, side  *fyne.MenuItem
-	themes     []*fyne.MenuItem
+// command is one line of a menu.
+type command struct {
+	label    string
+	icon     string
+	key      string        // what to press, in words
+	shortcut fyne.Shortcut // nil for keys without Ctrl, which the picture takes
+	do       func()        // nil for a heading
+	dead     bool          // cannot be done now
+	checked  bool
+	rule     bool // a hairline above it
+	inner    bool // belongs to the heading above it
 }
 
-// key returns a menu shortcut with Ctrl, or Cmd where that is usual.
-func key(name fyne.KeyName, more fyne.KeyModifier) fyne.Shortcut {
+// menu is one title of the menu bar; its commands are made when it is opened, as things then stand.
+type menu struct {
+	title    string
+	commands func() []command
+}
+
+// ctrl returns a shortcut with Ctrl, or Cmd where that is usual.
+func ctrl(name fyne.KeyName, more fyne.KeyModifier) fyne.Shortcut {
 	return &desktop.CustomShortcut{KeyName: name, Modifier: fyne.KeyModifierShortcutDefault | more}
 }
 
-func item(label string, s fyne.Shortcut, do func()) *fyne.MenuItem {
-	i := fyne.NewMenuItem(label, do)
-	i.Shortcut = s
-	return i
-}
-
-func newMenu(w *window) *menu {
-	m := &menu{w: w}
-	file := m.fileMenu()
-	m.edit = m.editMenu()
-	m.view = m.viewMenu()
-	m.main = fyne.NewMainMenu(file, m.edit, m.toolMenu("Draw"), m.toolMenu("Place"), m.studyMenu(), m.view, m.helpMenu())
-	return m
-}
-
-func (m *menu) fileMenu() *fyne.Menu {
-	w := m.w
-	m.recent = fyne.NewMenuItem("Open recent", nil)
-	m.recent.ChildMenu = fyne.NewMenu("", m.recentItems()...)
-	quit := item("Quit", key(fyne.KeyQ, 0), func() { w.unlessUnsaved(w.quit) })
-	quit.IsQuit = true
-	return fyne.NewMenu("File",
-		item("New", key(fyne.KeyN, 0), func() { w.unlessUnsaved(w.newPlan) }),
-		item("Open…", key(fyne.KeyO, 0), func() { w.unlessUnsaved(w.askOpen) }),
-		m.recent,
-		fyne.NewMenuItemSeparator(),
-		item("Save", key(fyne.KeyS, 0), func() { w.save(nil) }),
-		item("Save as…", key(fyne.KeyS, fyne.KeyModifierShift), func() { w.askSave(nil) }),
-		item("Export picture…", key(fyne.KeyE, 0), w.askPicture),
-		fyne.NewMenuItemSeparator(),
-		quit)
-}
-
-func (m *menu) recentItems() []*fyne.MenuItem {
-	w := m.w
-	var items []*fyne.MenuItem
-	for _, path := range w.recent() {
-		items = append(items, fyne.NewMenuItem(filepath.Base(path), func() { w.unlessUnsaved(func() { w.open(path) }) }))
+// menus are the titles of the menu bar.
+func (w *window) menus() []menu {
+	return []menu{
+		{"File", w.fileMenu}, {"Edit", w.editMenu},
+		{"Draw", func() []command { return w.toolMenu("Draw") }}, {"Place", func() []command { return w.toolMenu("Place") }},
+		{"Study", w.studyMenu}, {"View", w.viewMenu}, {"Help", w.helpMenu},
 	}
-	if len(items) == 0 {
-		none := fyne.NewMenuItem("no plan yet", nil)
-		none.Disabled = true
-		items = append(items, none)
+}
+
+func (w *window) fileMenu() []command {
+	list := []command{
+		{label: "New", key: "Ctrl+N", shortcut: ctrl(fyne.KeyN, 0), do: func() { w.unlessUnsaved(w.newPlan) }},
+		{label: "Open…", key: "Ctrl+O", shortcut: ctrl(fyne.KeyO, 0), do: func() { w.unlessUnsaved(w.askOpen) }},
 	}
-	return items
-}
-
-func (m *menu) editMenu() *fyne.Menu {
-	w := m.w
-	m.undo = item("Undo", &fyne.ShortcutUndo{}, w.undo)
-	m.redo = item("Redo", key(fyne.KeyZ, fyne.KeyModifierShift), w.redo)
-	m.remove = fyne.NewMenuItem("Delete", func() { w.typedKey(fyne.KeyDelete) })
-	return fyne.NewMenu("Edit", m.undo, m.redo, fyne.NewMenuItemSeparator(), m.remove,
-		item("Select all", &fyne.ShortcutSelectAll{}, w.selectAll))
-}
-
-// toolMenu lists the tools of a group with the letters that choose them.
-func (m *menu) toolMenu(group string) *fyne.Menu {
-	menu := fyne.NewMenu(group)
-	for i, k := range tools {
-		if k.group != group {
-			continue
-		}
-		mi := fyne.NewMenuItemWithIcon(k.name+"   "+k.letter, menuIcon(k.icon), func() { m.w.choose(i) })
-		menu.Items = append(menu.Items, mi)
+	recent := w.recent()
+	if len(recent) > 0 {
+		list = append(list, command{label: "Open recent", rule: true})
 	}
-	return menu
-}
-
-// menuIcon is one of our icons that takes the menu's text colour.
-func menuIcon(name string) fyne.Resource {
-	return themedIcon{fyne.NewStaticResource(name+".svg", assets.Icon(name))}
-}
-
-func (m *menu) studyMenu() *fyne.Menu {
-	w := m.w
-	return fyne.NewMenu("Study",
-		fyne.NewMenuItem("Next observer", func() { w.next(kindObserver) }),
-		fyne.NewMenuItem("Next start", func() { w.next(kindStart) }),
-		fyne.NewMenuItem("Next target", func() { w.next(kindTarget) }))
-}
-
-func (m *menu) viewMenu() *fyne.Menu {
-	w := m.w
-	m.all = fyne.NewMenuItem("All regions", func() { w.results.all = !w.results.all; w.acted() })
-	m.side = fyne.NewMenuItem("Right column", w.toggleSide)
-	theme := fyne.NewMenuItem("Theme", nil)
-	for _, t := range []struct{ name, choice string }{{"Light", themeLight}, {"Dark", themeDark}, {"As the system", themeSystem}} {
-		m.themes = append(m.themes, fyne.NewMenuItem(t.name, func() { w.setTheme(t.choice) }))
+	for _, path := range recent {
+		list = append(list, command{label: filepath.Base(path), key: shortFolder(path), inner: true,
+			do: func() { w.unlessUnsaved(func() { w.open(path) }) }})
 	}
-	theme.ChildMenu = fyne.NewMenu("", m.themes...)
-	return fyne.NewMenu("View",
-		item("Fit", key(fyne.Key0, 0), w.view.fit),
-		item("Zoom in", key(fyne.KeyEqual, 0), func() { w.zoom(1.25) }),
-		item("Zoom out", key(fyne.KeyMinus, 0), func() { w.zoom(0.8) }),
-		fyne.NewMenuItemSeparator(),
-		m.all, m.side, theme)
+	return append(list,
+		command{label: "Save", key: "Ctrl+S", shortcut: ctrl(fyne.KeyS, 0), do: func() { w.save(nil) }, rule: true},
+		command{label: "Save as…", key: "Ctrl+Shift+S", shortcut: ctrl(fyne.KeyS, fyne.KeyModifierShift), do: func() { w.askSave(nil) }},
+		command{label: "Export picture…", key: "Ctrl+E", shortcut: ctrl(fyne.KeyE, 0), do: w.askPicture},
+		command{label: "Quit", key: "Ctrl+Q", shortcut: ctrl(fyne.KeyQ, 0), do: func() { w.unlessUnsaved(w.quit) }, rule: true})
 }
 
-func (m *menu) helpMenu() *fyne.Menu {
-	w := m.w
-	samples := fyne.NewMenuItem("Sample plans", nil)
-	samples.ChildMenu = fyne.NewMenu("")
-	for _, s := range assets.Samples() {
-		samples.ChildMenu.Items = append(samples.ChildMenu.Items,
-			fyne.NewMenuItem(s.Title, func() { w.unlessUnsaved(func() { w.openSample(s.Name) }) }))
-	}
-	return fyne.NewMenu("Help", samples,
-		fyne.NewMenuItem("Keys", w.showKeys),
-		fyne.NewMenuItem("About Enfilade", w.showAbout))
-}
-
-// update brings the changing items up to date; the bar is rebuilt only when their words or marks change.
-func (m *menu) update() {
-	changed := false
-	set := func(i *fyne.MenuItem, label string, disabled, checked bool) {
-		if i.Label != label || i.Disabled != disabled || i.Checked != checked {
-			i.Label, i.Disabled, i.Checked = label, disabled, checked
-			changed = true
-		}
-	}
-	undo, canUndo := m.w.session.UndoLabel()
-	redo, canRedo := m.w.session.RedoLabel()
-	set(m.undo, named("Undo", undo), !canUndo, false)
-	set(m.redo, named("Redo", redo), !canRedo, false)
-	set(m.remove, "Delete", len(m.w.session.Selection()) == 0, false)
-	set(m.all, "All regions", false, m.w.results.all)
-	set(m.side, "Right column", false, m.w.side.Visible())
-	for i, c := range []string{themeLight, themeDark, themeSystem} {
-		set(m.themes[i], m.themes[i].Label, false, m.w.look.choice == c)
-	}
-	if changed {
-		m.main.Refresh()
+func (w *window) editMenu() []command {
+	undo, canUndo := w.session.UndoLabel()
+	redo, canRedo := w.session.RedoLabel()
+	return []command{
+		{label: named("Undo", undo), key: "Ctrl+Z", shortcut: &fyne.ShortcutUndo{}, do: w.undo, dead: !canUndo && !w.session.Previewing()},
+		{label: named("Redo", redo), key: "Ctrl+Shift+Z", shortcut: ctrl(fyne.KeyZ, fyne.KeyModifierShift), do: w.redo, dead: !canRedo},
+		{label: "Delete", key: "Del", do: func() { w.typedKey(fyne.KeyDelete) }, dead: len(w.session.Selection()) == 0, rule: true},
+		{label: "Select all", key: "Ctrl+A", shortcut: &fyne.ShortcutSelectAll{}, do: w.selectAll},
 	}
 }
 
@@ -170,8 +80,92 @@ func named(what, label string) string {
 	return what + " " + label
 }
 
-// setRecent rebuilds the list of recent plans.
-func (m *menu) setRecent() {
-	m.recent.ChildMenu.Items = m.recentItems()
-	m.main.Refresh()
+// toolMenu lists the tools of a group with the letters that choose them.
+func (w *window) toolMenu(group string) (list []command) {
+	for i, k := range tools {
+		if k.group == group {
+			list = append(list, command{label: k.name, icon: k.icon, key: k.letter, do: func() { w.choose(i) }})
+		}
+	}
+	return list
+}
+
+func (w *window) studyMenu() []command {
+	p := w.session.Plan()
+	return []command{
+		{label: "Next observer", do: func() { w.next(kindObserver) }, dead: p.NumObservers() == 0},
+		{label: "Next start", do: func() { w.next(kindStart) }, dead: p.NumStarts() == 0},
+		{label: "Next target", do: func() { w.next(kindTarget) }, dead: p.NumTargets() == 0},
+		{label: "Measure", icon: "measure", key: "M", do: func() { w.choose(1) }, rule: true},
+	}
+}
+
+func (w *window) viewMenu() []command {
+	list := []command{
+		{label: "Fit the plan", icon: "fit", key: "0", do: w.view.fit},
+		{label: "Zoom in", icon: "zoom-in", key: "+", do: func() { w.zoom(1.25) }},
+		{label: "Zoom out", icon: "zoom-out", key: "−", do: func() { w.zoom(0.8) }},
+		{label: "All regions", do: func() { w.results.all = !w.results.all; w.acted() }, checked: w.results.all, rule: true},
+		{label: "Right column", do: w.toggleSide, checked: w.side.Visible()},
+		{label: "Theme", rule: true},
+	}
+	for _, t := range []struct{ name, choice string }{{"Light", themeLight}, {"Dark", themeDark}, {"As the system", themeSystem}} {
+		list = append(list, command{label: t.name, inner: true, do: func() { w.setTheme(t.choice) }, checked: w.look.choice == t.choice})
+	}
+	return list
+}
+
+func (w *window) helpMenu() []command {
+	list := []command{{label: "Sample plans"}}
+	for _, s := range assets.Samples() {
+		list = append(list, command{label: s.Title, inner: true, do: func() { w.unlessUnsaved(func() { w.openSample(s.Name) }) }})
+	}
+	return append(list,
+		command{label: "Keys", do: w.showKeys, rule: true},
+		command{label: "About Enfilade", do: w.showAbout})
+}
+
+// shortcuts makes the keys with Ctrl do what the menus say.
+func (w *window) shortcuts() {
+	c := w.win.Canvas()
+	add := func(s fyne.Shortcut) { c.AddShortcut(s, func(s fyne.Shortcut) { w.shortcut(s) }) }
+	for _, m := range w.menus() {
+		for _, k := range m.commands() {
+			if k.shortcut != nil {
+				add(k.shortcut)
+			}
+		}
+	}
+	add(&fyne.ShortcutRedo{})
+}
+
+// shortcut does the command of a shortcut and reports whether there is one. While a question is open there is none.
+func (w *window) shortcut(s fyne.Shortcut) bool {
+	if w.modal != nil {
+		return false
+	}
+	if s.ShortcutName() == (&fyne.ShortcutRedo{}).ShortcutName() {
+		w.redo()
+		return true
+	}
+	for _, m := range w.menus() {
+		for _, k := range m.commands() {
+			if k.shortcut != nil && k.shortcut.ShortcutName() == s.ShortcutName() {
+				if !k.dead {
+					k.do()
+				}
+				return true
+			}
+		}
+	}
+	return false
+}
+
+// shortFolder is the name of a file's folder, for telling two files of one name apart.
+func shortFolder(path string) string {
+	r := []rune(filepath.Base(filepath.Dir(path)))
+	if len(r) > 12 {
+		r = append(r[:11], '…')
+	}
+	return string(r)
 }

@@ -56,7 +56,7 @@ func (p *picture) close() { p.worker.close() }
 // draw makes the frame for the toolkit's raster, in device pixels.
 func (p *picture) draw(w, h int) image.Image {
 	v := p.w.view
-	if w <= 0 || h <= 0 || p.w.session == nil {
+	if w <= 0 || h <= 0 {
 		return image.NewRGBA(image.Rect(0, 0, max(w, 1), max(h, 1)))
 	}
 	pix := v.pix

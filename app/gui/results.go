@@ -196,7 +196,7 @@ func (r *results) working() (live.Stage, float32) {
 
 // answered is told the newest answers, on the toolkit's goroutine.
 func (w *window) answered(s *live.State) {
-	if w.session == nil || w.closing {
+	if w.closing {
 		return
 	}
 	w.results.answer(s)

@@ -91,8 +91,8 @@ func (l *look) Size(name fyne.ThemeSizeName) float32 {
 		return 18
 	case theme.SizeNamePadding:
 		return 4
-	case theme.SizeNameInnerPadding:
-		return 7
+	case theme.SizeNameInnerPadding: // an entry of a form is 27 px high
+		return 5.5
 	case theme.SizeNameScrollBar, theme.SizeNameScrollBarSmall:
 		return 6
 	case theme.SizeNameInputRadius, theme.SizeNameSelectionRadius, theme.SizeNameButtonRadius, theme.SizeNameMenuRadius,

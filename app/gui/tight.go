@@ -10,7 +10,7 @@ import (
 // colour is a colour without its alpha multiplied in.
 type colour = color.NRGBA
 
-// tightLook is the window's look for forms and tables: entries 27 px high, and no shadows.
+// tightLook is the window's look for forms and tables: no shadows.
 type tightLook struct{ w *window }
 
 // Color is for the toolkit.
@@ -29,11 +29,5 @@ func (t tightLook) Icon(n fyne.ThemeIconName) fyne.Resource { return t.w.look.Ic
 
 // Size is for the toolkit.
 func (t tightLook) Size(n fyne.ThemeSizeName) float32 {
-	switch n {
-	case theme.SizeNameInnerPadding:
-		return 5.5
-	case theme.SizeNameText:
-		return 12.5
-	}
 	return t.w.look.Size(n)
 }

@@ -22,11 +22,10 @@ type planView struct {
 	over   *overlay
 	ring   *canvas.Rectangle // keyboard focus, on the inner edge
 
-	cam     view.Camera
-	fitted  bool    // the camera follows the window's size until someone moves it
-	pix     float32 // device pixels per unit of the toolkit, from the last drawing
-	focused bool
-	quiet   bool // the focus comes by the pointer or the program: no ring
+	cam    view.Camera
+	fitted bool    // the camera follows the window's size until someone moves it
+	pix    float32 // device pixels per unit of the toolkit, from the last drawing
+	ringed bool    // the focus came by Tab, so its ring is shown
 
 	last    fyne.Position // of the pointer
 	inside  bool
@@ -79,9 +78,11 @@ func (v *planView) MouseDown(e *desktop.MouseEvent) {
 // grab takes the focus without showing its ring.
 func (v *planView) grab() {
 	if c := v.w.win.Canvas(); c.Focused() != fyne.Focusable(v) {
-		v.quiet = true
 		c.Focus(v)
-		v.quiet = false
+	}
+	if v.ringed {
+		v.ringed = false
+		v.Refresh()
 	}
 }
 
@@ -208,11 +209,17 @@ func (v *planView) Cursor() desktop.Cursor {
 	return desktop.DefaultCursor
 }
 
-// FocusGained draws the focus ring on the picture's inner edge.
-func (v *planView) FocusGained() { v.focused = !v.quiet; v.Refresh() }
+// FocusGained is for the toolkit. It also comes when the window is chosen, so only KeyUp tells that Tab led here.
+func (v *planView) FocusGained() {}
 
-// FocusLost takes it away.
-func (v *planView) FocusLost() { v.focused, v.space = false, false; v.Refresh() }
+// FocusLost takes the ring away.
+func (v *planView) FocusLost() {
+	v.space = false
+	if v.ringed {
+		v.ringed = false
+		v.Refresh()
+	}
+}
 
 // TypedKey is for the toolkit.
 func (v *planView) TypedKey(e *fyne.KeyEvent) { v.w.typedKey(e.Name) }
@@ -230,10 +237,16 @@ func (v *planView) KeyDown(e *fyne.KeyEvent) {
 	}
 }
 
-// KeyUp notes that Space is let go.
+// KeyUp notes that Space is let go, and draws the focus ring on the picture's inner edge when Tab led here.
 func (v *planView) KeyUp(e *fyne.KeyEvent) {
-	if e.Name == fyne.KeySpace {
+	switch e.Name {
+	case fyne.KeySpace:
 		v.space = false
+	case fyne.KeyTab:
+		if v.w.win.Canvas().Focused() == fyne.Focusable(v) && !v.AcceptsTab() {
+			v.ringed = true
+			v.Refresh()
+		}
 	}
 }
 
@@ -253,7 +266,7 @@ func (r *viewRenderer) MinSize() fyne.Size { return fyne.NewSize(240, 160) }
 
 func (r *viewRenderer) Refresh() {
 	r.v.ring.FillColor, r.v.ring.StrokeColor, r.v.ring.StrokeWidth = nil, themed().Ink, 2
-	r.v.ring.Hidden = !r.v.focused
+	r.v.ring.Hidden = !r.v.ringed
 	r.v.ring.Refresh()
 	r.v.raster.Refresh()
 }

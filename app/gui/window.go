@@ -45,7 +45,7 @@ type window struct {
 	first   *firstSteps
 	side    *fyne.Container
 	modal   *modal
-	menu    *menu
+	bar     *menuBar
 	closing bool
 }
 
@@ -69,19 +69,16 @@ func newWindow(p parts, look *look) *window {
 			w.unlessUnsaved(func() { w.open(uris[0].Path()) })
 		}
 	})
+	w.session = session.New(plan.New(), "", nil)
 	w.host = &host{w}
 	w.picture = newPicture(w)
 	w.tool = tools[0].make()
 	w.board = live.NewBoard(w.do, w.answered)
 	w.runner = live.New(p.solver, w.board.Put)
 	w.build()
-	w.session = session.New(plan.New(), "", nil)
-	w.listen()
+	w.session.Listen(w.changed)
 	return w
 }
-
-// listen makes the session tell the window of its changes from now on.
-func (w *window) listen() { w.session.Listen(w.changed) }
 
 // build puts the window together.
 func (w *window) build() {
@@ -93,10 +90,11 @@ func (w *window) build() {
 	picture := container.NewStack(w.view, w.first.box)
 	foot := around(hairline(), nil, nil, nil, w.foot.box)
 	middle := container.New(frame{}, rail, hairline(), picture, foot, w.side)
-	page := around(pile(hairline(), w.notice.box), w.status.box, nil, nil, middle)
-	w.menu = newMenu(w)
-	w.win.SetMainMenu(w.menu.main)
-	w.win.SetContent(container.NewStack(newPaper(roleChrome), page, w.tips.layer))
+	w.bar = newMenuBar(w.menus())
+	w.bar.drop.back = w.view.grab
+	page := around(pile(w.bar, hairline(), w.notice.box), w.status.box, nil, nil, middle)
+	w.win.SetContent(container.NewStack(newPaper(roleChrome), page, w.bar.drop, w.tips.layer))
+	w.shortcuts()
 	c := w.win.Canvas()
 	c.SetOnTypedKey(func(e *fyne.KeyEvent) { w.typedKey(e.Name) })
 	c.SetOnTypedRune(w.typedRune)
@@ -158,9 +156,6 @@ func (w *window) changed(rev uint64, p *plan.Plan) {
 
 // acted brings the window up to date after anything that may have changed what it shows.
 func (w *window) acted() {
-	if w.session == nil {
-		return
-	}
 	p := w.session.Plan()
 	w.sketch = w.tool.Sketch(w.host)
 	w.results.follow(w.session, w.sketch)
@@ -175,7 +170,6 @@ func (w *window) acted() {
 	w.table.update()
 	w.foot.update(w)
 	w.title()
-	w.menu.update()
 }
 
 // title names the plan and says whether it has unsaved changes.
