@@ -15,12 +15,13 @@ func Base(s *Scene) *List {
 	l := &List{}
 	p := newPen(s, l)
 	shown := s.resting()
-	l.Drawing = s.Drawing
+	l.Drawing, l.InkColour = s.Drawing, s.Theme.Poche
 	if !l.Drawing.fits(shown) {
 		l.Drawing = NewDrawing(shown)
 	}
 	p.paper(shown)
 	held := heldBy(s, shown)
+	p.doorways(l.Drawing, func(ref plan.Ref) bool { return !held[ref] })
 	p.obstacles(l.Drawing, func(ref plan.Ref) bool { return !held[ref] })
 	return l
 }

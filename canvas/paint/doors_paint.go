@@ -16,9 +16,8 @@ func (p *pen) doors(d *Drawing, keep func(plan.Ref) bool) {
 		p.swing(dr)
 		if dr.shut {
 			p.segment(p.grid(dr.hinge), p.grid(dr.tip))
-			p.segment(p.grid(dr.left[0]), p.grid(dr.left[1]))
-			p.segment(p.grid(dr.right[0]), p.grid(dr.right[1]))
 		}
+		p.thresholds(dr)
 	})
 	p.leaves(d, keep, plan.SolidLeaf, p.stroked(p.theme.Ink, StrokeStyle{Width: leafLine}))
 	p.leaves(d, keep, plan.GlazedLeaf, p.stroked(p.theme.Glazing, StrokeStyle{Width: leafLine}))
@@ -34,6 +33,34 @@ func (p *pen) leaves(d *Drawing, keep func(plan.Ref) bool, leaf plan.Leaf, op Op
 			p.segment(p.grid(dr.hinge), p.grid(dr.tip))
 		}
 	})
+}
+
+// doorways fills the way through each opening with the floor's colour: an entrance may cut a wall at the floor's border.
+func (p *pen) doorways(d *Drawing, keep func(plan.Ref) bool) {
+	m := p.begin()
+	for i := range d.doors {
+		if dr := &d.doors[i]; !dr.hidden && keep(dr.item) {
+			ring := append(p.work.ring[:0], p.grid(dr.left[0]), p.grid(dr.left[1]), p.grid(dr.right[1]), p.grid(dr.right[0]))
+			p.work.ring = ring
+			if p.sees(ring) {
+				p.addRing(p.frame, ring)
+			}
+		}
+	}
+	p.fill(m, p.theme.Floor)
+}
+
+// thresholds adds the faces of the wall across an opening: both of a shut door, of an open one only that which leads out.
+func (p *pen) thresholds(d *door) {
+	mid := d.middle(0).plus(d.middle(1)).times(0.5)
+	for _, face := range [...][2]vec{d.left, d.right} {
+		c := face[0].plus(face[1]).times(0.5)
+		u, deep := mid.towards(c)
+		out := c.plus(u.times(20)) // 2 mm beyond the face
+		if deep > 0 && (d.shut || !p.onFloor(p.grid(out))) {
+			p.segment(p.grid(face[0]), p.grid(face[1]))
+		}
+	}
 }
 
 // doorLines adds lines of every door that is drawn, in one step.

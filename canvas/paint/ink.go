@@ -6,6 +6,7 @@ import (
 	"github.com/paulmach/orb"
 
 	"enfilade/solver/exact"
+	"enfilade/solver/plan"
 )
 
 // inkIndex finds what ink lies in a box of the plan: a grid of square cells over all segments of bodies and lines, each
@@ -49,9 +50,13 @@ func newInkIndex(d *Drawing) inkIndex {
 		}
 	}
 	for i := range d.doors {
-		if dr := &d.doors[i]; !dr.hidden && !dr.shut && dr.leaf != 0 {
-			x.segs = append(x.segs, inkSeg{dr.hinge.x, dr.hinge.y, dr.tip.x, dr.tip.y, false})
+		dr := &d.doors[i]
+		if dr.hidden || dr.leaf == plan.NoLeaf {
+			continue
 		}
+		x.line(dr.hinge, dr.tip)
+		x.line(dr.left[0], dr.left[1])
+		x.line(dr.right[0], dr.right[1])
 	}
 	x.build()
 	return x
@@ -60,6 +65,8 @@ func newInkIndex(d *Drawing) inkIndex {
 func (x *inkIndex) add(a, b exact.Pt, area bool) {
 	x.segs = append(x.segs, inkSeg{float64(a.X), float64(a.Y), float64(b.X), float64(b.Y), area})
 }
+
+func (x *inkIndex) line(a, b vec) { x.segs = append(x.segs, inkSeg{a.x, a.y, b.x, b.y, false}) }
 
 // build sorts the segments into cells, counting first.
 func (x *inkIndex) build() {

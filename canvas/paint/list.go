@@ -124,6 +124,9 @@ type List struct {
 	Texts   []TextStyle
 	Chars   []byte
 
+	// InkColour is the colour of the base's hard ink.
+	InkColour color.NRGBA
+
 	// Drawing is what a base was drawn from; hand it on in the scenes of the frames over that base.
 	Drawing *Drawing
 

@@ -21,6 +21,7 @@ func Overlay(s *Scene, l *List) {
 	if main != nil && (main.Problem != "" || !p.walkShown(main)) {
 		main = nil
 	}
+	foot := p.setSlip()
 	p.obstruct(main)
 	p.placeLabels(main)
 
@@ -34,8 +35,7 @@ func Overlay(s *Scene, l *List) {
 	p.writeLabels(false)
 	p.outlines()
 	p.problems()
-	p.scaleBar()
-	p.titleSlip()
+	p.drawSlip(foot)
 	p.rulers()
 }
 

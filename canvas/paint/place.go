@@ -62,13 +62,13 @@ type memory struct {
 // work is room that a list reuses.
 type work struct {
 	ring, route, floor []place
-	cut         [2][]place
-	cuts        []float64
-	boxes       []box
-	legs        []leg // routes
-	edges       []leg // the border of the chosen region, which figures and names avoid if they can
-	labels      []label
-	spots       []place
+	cut                [2][]place
+	cuts               []float64
+	boxes              []box
+	legs               []leg // routes
+	edges              []leg // the border of the chosen region, which figures and names avoid if they can
+	labels             []label
+	spots              []place
 }
 
 // taken adds a glyph's box about a place, half w by half h px at 100 %.

@@ -2,6 +2,7 @@ package raster
 
 import (
 	"image"
+	"image/color"
 	"image/draw"
 
 	"github.com/fogleman/gg"
@@ -16,6 +17,8 @@ type Base struct {
 	Image *image.RGBA
 	Ink   []uint8 // walls, blocks and lines, 0 to 255
 	Low   []uint8 // these and low walls and blocks
+
+	InkColour color.NRGBA // of hard ink
 }
 
 // NewBase draws a list made by paint.Base on a picture of w by h device pixels. It may run on any goroutine.
@@ -33,6 +36,7 @@ func (b *Base) Draw(l *paint.List, w, h int) {
 		clear(b.Ink)
 		clear(b.Low)
 	}
+	b.InkColour = l.InkColour
 	for i := 3; i < len(b.Image.Pix); i += 4 {
 		b.Image.Pix[i] = 255
 	}

@@ -24,18 +24,19 @@ func (f *Frame) Draw(b *Base, overlay *paint.List) *image.RGBA {
 	f.resize(b.W, b.H, overlay.K)
 	copy(f.img.Pix, b.Image.Pix)
 	p := &f.paint
+	inked := pairsOf(b.InkColour)
 	for i := range overlay.Ops {
 		op := &overlay.Ops[i]
 		f.canvas.clipX, f.canvas.clipY = overlay.Left, overlay.Left
 		if op.Free {
 			f.canvas.clipX, f.canvas.clipY = 0, 0
 		}
-		p.under = nil
+		p.under, p.inkColour = nil, nil
 		switch op.Ink {
 		case paint.LowInk:
 			p.under = b.Low
 		case paint.HardInk:
-			p.under = b.Ink
+			p.under, p.inkColour = b.Ink, &inked
 		}
 		f.step(overlay, op)
 	}

@@ -204,7 +204,7 @@ func (p *painter) mask(m *mask, x, y int) {
 		pix := p.pix[(yy*p.w+x0)*4 : (yy*p.w+x1)*4]
 		for i, c := range cover {
 			if c != 0 {
-				blend(pix[i*4:i*4+4:i*4+4], p.r, p.g, p.b, scale(uint32(c), p.a))
+				p.pairs.one(pix[i*4:i*4+4], full(scale(uint32(c), p.a)))
 			}
 		}
 	}

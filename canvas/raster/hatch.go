@@ -46,9 +46,9 @@ func (p *painter) hatchSpan(y, x0, x1 int, cover uint32) {
 	phase -= math.Floor(phase/hatchSteps) * hatchSteps
 	at, step := uint32(phase*65536), uint32(h.step*65536)
 	pix := p.pix[(y*p.w+x0)*4 : (y*p.w+x1)*4]
-	for i := 0; i+3 < len(pix); i += 4 {
+	for ; len(pix) >= 4; pix = pix[4:] {
 		if c := uint32(h.table[at>>16%hatchSteps]); c != 0 {
-			blend(pix[i:i+4:i+4], p.r, p.g, p.b, scale(a, c))
+			p.pairs.one(pix, full(scale(a, c)))
 		}
 		at += step
 	}

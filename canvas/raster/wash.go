@@ -9,8 +9,8 @@ import (
 // wash is a radial wash: a strength for every pixel by its squared distance from the eye.
 type wash struct {
 	x, y   float64
-	scale  float64 // table entries a squared pixel
-	table  [washSteps + 1]uint16
+	scale  float64               // table entries a squared pixel
+	table  [washSteps + 1]uint16 // strengths from 0 to 256
 	cached paint.WashStyle
 	a      uint32
 }
@@ -33,51 +33,42 @@ func (w *wash) set(s paint.WashStyle) {
 		if share < paint.WashBend {
 			v = near + (mid-near)*share/paint.WashBend
 		}
-		w.table[i] = uint16(v*255*128 + 0.5) // seven bits more than a strength of 255 needs, for the dither
+		w.table[i] = uint16(v*256 + 0.5)
 	}
 }
 
-// washSpan blends the wash at full coverage fast, at the border with its coverage.
-//
-// The strength has seven bits more than the blend can take; a fixed pattern of four by four pixels spreads the rest, so
-// that the wash has no rings.
+// washSpan blends the wash. Where there is no ink and the coverage is full, eight pixels have the strength of their middle:
+// strengths change by one in 256 over tens of pixels, and one step of strength is at most one step of a channel.
 func (p *painter) washSpan(y, x0, x1 int, cover uint32) {
 	w := &p.wash
-	row := y * p.w
-	pix := p.pix[(row+x0)*4 : (row+x1)*4]
-	under := p.under
-	if under != nil {
-		under = under[row+x0 : row+x1]
+	from, to := y*p.w+x0, y*p.w+x1
+	pix := p.pix[from*4 : to*4]
+	var under []uint8
+	if p.under != nil {
+		under = p.under[from:to]
 	}
 	dy := float64(y) + 0.5 - w.y
-	dx := float64(x0) + 0.5 - w.x
-	// The squared distance along a row by second differences, in table entries with 20 bits below.
-	const one = 1 << 20
-	d2 := int64((dx*dx + dy*dy) * w.scale * one)
-	inc := int64((2*dx + 1) * w.scale * one)
-	inc2 := int64(2 * w.scale * one)
-	dither := &ditherRows[y&3]
-	for i := 0; i < len(pix)/4; i++ {
-		e := min(max(d2>>20, 0), washSteps)
-		d2 += inc
-		inc += inc2
-		a := (uint32(w.table[e]) + dither[(x0+i)&3]) >> 7
-		if cover != 255 {
-			a = scale(a, cover)
-		}
-		if under != nil {
-			if u := under[i]; u != 0 {
-				a = scale(a, 255-uint32(u))
+	x := float64(x0) + 0.5 - w.x
+	for i := 0; i < to-from; {
+		many := min(8, to-from-i)
+		mid := x + float64(i) + float64(many-1)/2
+		a := uint64(w.table[min(int((mid*mid+dy*dy)*w.scale), washSteps)])
+		if many == 8 && cover == 255 {
+			u := word(under, i, 0)
+			if u == 0 {
+				p.pairs.at(a).eight(pix[i*4:], 256-a)
+			}
+			if u == 0 || u == ^uint64(0) {
+				i += 8
+				continue
 			}
 		}
-		blend(pix[i*4:i*4+4:i*4+4], p.r, p.g, p.b, a)
+		for end := i + many; i < end; i++ {
+			s := scale(min(uint32(a), 255), cover)
+			if under != nil {
+				s = scale(s, 255-uint32(under[i]))
+			}
+			p.pairs.one(pix[i*4:i*4+4], uint64(s))
+		}
 	}
-}
-
-// ditherRows is the ordered dither of Bayer (1973), four by four, spread over the seven bits below a strength.
-var ditherRows = [4][4]uint32{
-	{4, 68, 20, 84},
-	{100, 36, 116, 52},
-	{28, 92, 12, 76},
-	{124, 60, 108, 44},
 }
