@@ -97,7 +97,7 @@ func (w *Twin) besideEdge(i int, left bool) []int32 {
 	return winding
 }
 
-// At returns the winding numbers at a grid point that lies on no edge.
+// windingAt returns the winding numbers at a grid point that lies on no edge.
 func (w *Twin) windingAt(p exact.Pt) []int32 { return w.cast(2*int64(p.X), 2*int64(p.Y), true, -1) }
 
 // cast sends a ray towards +x from (x, y)/2, lifted by nothing and yet above the points at its height if up is true,
@@ -141,7 +141,13 @@ func (w *Twin) stopsWalk(i int32) bool {
 	return w.g.Edges[i].Walk || w.left[i].walk != w.right[i].walk
 }
 
-// stopsSight reports whether edge i stops sight at a height above the floor.
+// StopsSight reports whether edge i of the graph stops sight at a height above the floor: as a line, or as the face of
+// something solid there.
+func (w *Twin) StopsSight(i int, height int32) bool { return w.stopsSight(int32(i), height) }
+
+// Free reports whether sight passes at a height through a grid point that lies on no edge.
+func (w *Twin) Free(p exact.Pt, height int32) bool { return w.fill(w.windingAt(p)).top < height }
+
 func (w *Twin) stopsSight(i int32, height int32) bool {
 	return w.g.Edges[i].Top >= height || (w.left[i].top >= height) != (w.right[i].top >= height)
 }

@@ -2,6 +2,7 @@ package plantest_test
 
 import (
 	"math"
+	"math/rand/v2"
 	"testing"
 
 	"enfilade/solver/arrange"
@@ -133,4 +134,59 @@ func TestTwinApproachByHand(t *testing.T) {
 			t.Errorf("%s: ends at %v, %v, want %v, %v", c.name, x/1e4, y/1e4, c.x, c.y)
 		}
 	}
+}
+
+// TestTwinRegionBySampling tries random points one by one: a point that is in line with no corner is seen exactly when no
+// edge that stops sight crosses the line to it and it is in nothing solid itself.
+func TestTwinRegionBySampling(t *testing.T) {
+	for name, plans := range plantest.Small() {
+		seen, hidden := 0, 0
+		for seed := range 40 {
+			p := plans.Example(seed)
+			o, _ := arrange.Draw(p)
+			g := plantest.Rounded(o)
+			w := plantest.NewTwin(g)
+			at := p.Parts().Observers[0].At
+			r := w.Region(at, eye)
+			rng := rand.New(rand.NewPCG(uint64(seed), 1))
+			lo, hi := g.Pts[0], g.Pts[len(g.Pts)-1]
+			for range 60 {
+				q := exact.Pt{X: lo.X + rng.Int32N(hi.X-lo.X+1), Y: lo.Y + rng.Int32N(hi.X-lo.X+1)}
+				sees, sure := sampled(g, w, at, q)
+				if !sure {
+					continue
+				}
+				if r.Holds(q) != sees {
+					t.Errorf("%s: %v sees %v: %v, want %v in\n%s", name, at, q, !sees, sees, plantest.Text(p))
+				}
+				if sees {
+					seen++
+				} else {
+					hidden++
+				}
+			}
+		}
+		if seen < 100 || hidden < 100 {
+			t.Errorf("%s: %d points seen, %d hidden: too few to tell", name, seen, hidden)
+		}
+	}
+}
+
+// sampled looks along one line; it is not sure when a corner lies on it.
+func sampled(g *arrange.Graph, w *plantest.Twin, at, q exact.Pt) (sees, sure bool) {
+	for _, v := range g.Pts {
+		if v == q || v != at && exact.OnSegment(at, q, v) {
+			return false, false
+		}
+	}
+	for i, e := range g.Edges {
+		a, b := g.Pts[e.A], g.Pts[e.B]
+		if exact.OnSegment(a, b, q) {
+			return false, false
+		}
+		if exact.Orient(a, b, at)*exact.Orient(a, b, q) < 0 && exact.Orient(at, q, a)*exact.Orient(at, q, b) < 0 && w.StopsSight(i, eye) {
+			return false, true
+		}
+	}
+	return w.Free(q, eye), true
 }

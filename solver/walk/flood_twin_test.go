@@ -82,6 +82,31 @@ func TestFloodAgainstTwin(t *testing.T) {
 	}
 }
 
+// TestFloodOfBodiesAgainstTwin does the same for walkers with a body, on the ground grown by their radius.
+func TestFloodOfBodiesAgainstTwin(t *testing.T) {
+	for _, name := range []string{"tangles", "specks"} {
+		t.Run(name, rapid.MakeCheck(func(t *rapid.T) {
+			p := plantest.Small()[name].Draw(t, "plan")
+			t.Log(plantest.Text(p))
+			o, _ := arrange.Draw(p)
+			_, plain := graphAndMesh(t, p)
+			radius := rapid.SampledFrom([]int32{1, 2, 300, 500, 1000, 1500}).Draw(t, "radius")
+			g := arrange.Round(arrange.Grow(o, plain, radius))
+			if len(g.Edges) > 120 {
+				t.Skip("too large for the twin")
+			}
+			m, err := arrange.Build(context.Background(), g)
+			if err != nil {
+				t.Fatal(err)
+			}
+			at := places(p, g)
+			pick := rapid.IntRange(0, len(at)-1)
+			start, one, two := at[pick.Draw(t, "start")], at[pick.Draw(t, "one")], at[pick.Draw(t, "two")]
+			sameWalks(t, m, plantest.NewTwin(g), start, []exact.Pt{one, two}, heights.Draw(t, "height"))
+		}))
+	}
+}
+
 // TestFloodToFrontsAgainstTwin walks to where the front of an edge is first seen from, its eye at either end or the middle.
 func TestFloodToFrontsAgainstTwin(t *testing.T) {
 	for name, plans := range plantest.Small() {
