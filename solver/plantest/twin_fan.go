@@ -1,6 +1,10 @@
 package plantest
 
-import "enfilade/solver/exact"
+import (
+	"slices"
+
+	"enfilade/solver/exact"
+)
 
 // fan is how the places about a point hang together for walking: the directions of the edges there that stop walking, in
 // counter-clockwise order, and the sectors between them. Sector i lies between ray i and ray i+1; with no rays there is
@@ -99,3 +103,6 @@ func (w *Twin) vertexAt(p exact.Pt) int32 {
 	}
 	return -1
 }
+
+// Stands reports whether a walker can be at p: whether some sector about it is free.
+func (w *Twin) Stands(p exact.Pt) bool { return slices.Contains(w.fanOf(SpotOf(p)).free, true) }
