@@ -25,19 +25,35 @@ func Build(ctx context.Context, g *Graph) (*mesh.Mesh, error) {
 	return tr.Finish(tags, g.solids(tr)), nil
 }
 
-// solids returns what each triangle stops: it walks over the whole mesh from the box inwards, keeping the winding number
-// of the place about every body, and takes each step back when it has seen what lies behind it.
+// solids returns what each triangle stops.
 func (g *Graph) solids(tr *mesh.Triangulation) []mesh.Tag {
 	solid := make([]mesh.Tag, tr.Len())
 	seen := make([]bool, tr.Len())
 	w := winding{count: make([]int32, len(g.Bodies)), bodies: g.Bodies}
+	g.flood(tr, &w, g.outside(tr), func(t int32) bool { return !seen[t] }, func(t int32, s mesh.Tag) {
+		seen[t] = true
+		solid[t] = s
+	})
+	return solid
+}
+
+// triangles is a triangulation as flood walks over it.
+type triangles interface {
+	Corners(t int32) [3]int32
+	Neighbour(t int32, i int) (tri, constraint int32)
+}
+
+// flood walks from triangle to triangle for as long as enter accepts the next one, keeping the winding numbers of the place in
+// w, which hold for the first triangle; it tells what each triangle stops, and takes every step back when it has seen what
+// lies behind it. O(triangles entered).
+func (g *Graph) flood(f triangles, w *winding, first int32, enter func(t int32) bool, found func(t int32, s mesh.Tag)) {
 	type step struct {
 		tri  int32
 		edge int32 // constraint crossed to get here, or -1
 		sign int32 // +1 when it was crossed from its right to its left
 		back bool
 	}
-	stack := []step{{tri: g.outside(tr), edge: -1}}
+	stack := []step{{tri: first, edge: -1}}
 	for len(stack) > 0 {
 		s := stack[len(stack)-1]
 		stack = stack[:len(stack)-1]
@@ -45,32 +61,33 @@ func (g *Graph) solids(tr *mesh.Triangulation) []mesh.Tag {
 			w.cross(g, s.edge, -s.sign)
 			continue
 		}
-		if seen[s.tri] {
+		if !enter(s.tri) {
 			continue
 		}
-		seen[s.tri] = true
 		if s.edge >= 0 {
 			w.cross(g, s.edge, s.sign)
 			stack = append(stack, step{edge: s.edge, sign: s.sign, back: true})
 		}
-		solid[s.tri] = w.stops()
-		v := tr.Corners(s.tri)
+		found(s.tri, w.stops())
+		v := f.Corners(s.tri)
 		for i := range 3 {
-			next, edge := tr.Neighbour(s.tri, i)
-			if next < 0 || seen[next] {
-				continue
+			if next, edge := f.Neighbour(s.tri, i); next >= 0 && enter(next) {
+				stack = append(stack, step{tri: next, edge: edge, sign: g.leaving(edge, v[i])})
 			}
-			sign := int32(0)
-			if edge >= 0 {
-				// The triangle lies to the left of its half-edge, so leaving through it goes from left to right.
-				if sign = 1; v[i] == g.Edges[edge].A {
-					sign = -1
-				}
-			}
-			stack = append(stack, step{tri: next, edge: edge, sign: sign})
 		}
 	}
-	return solid
+}
+
+// leaving returns the sign with which a triangle is left through graph edge e, or -1 for none, of which its half-edge starts
+// at point v: the triangle lies to the left of its half-edge, so it is left from left to right.
+func (g *Graph) leaving(e, v int32) int32 {
+	switch {
+	case e < 0:
+		return 0
+	case v == g.Edges[e].A:
+		return -1
+	}
+	return 1
 }
 
 // outside returns a triangle at a corner of the box, which lies outside every body.

@@ -23,7 +23,7 @@ func Round(o *Outline) *Graph {
 	}
 	c := makeCells(o.Segments)
 	hot := hotPixels(o.Segments, c)
-	passes := passing(o.Segments, c, hot)
+	passes, _ := passing(o.Segments, c, hot)
 	g.Pts = hot
 	g.merge(o.Segments, passes)
 	g.compact()
@@ -118,8 +118,9 @@ type pass struct {
 	seg, pt int32
 }
 
-// passing returns which segment passes which hot pixels: by segment, then along it.
-func passing(segs []Segment, c *cells, hot []exact.Pt) []pass {
+// passing returns which segment passes which hot pixels: by segment, then along it. Those of segment i are
+// out[start[i]:start[i+1]].
+func passing(segs []Segment, c *cells, hot []exact.Pt) (out []pass, start []int32) {
 	found := make([]pass, 0, 2*len(segs)+len(segs)/4)
 	for i, p := range hot {
 		cell := c.of(p)
@@ -129,14 +130,14 @@ func passing(segs []Segment, c *cells, hot []exact.Pt) []pass {
 			}
 		}
 	}
-	start := make([]int32, len(segs)+1)
+	start = make([]int32, len(segs)+1)
 	for _, f := range found {
 		start[f.seg+1]++
 	}
 	for i := 1; i < len(start); i++ {
 		start[i] += start[i-1]
 	}
-	out := make([]pass, len(found))
+	out = make([]pass, len(found))
 	fill := slices.Clone(start[:len(segs)])
 	for _, f := range found {
 		out[fill[f.seg]] = f
@@ -155,7 +156,7 @@ func passing(segs []Segment, c *cells, hot []exact.Pt) []pass {
 			return cmp.Compare(hot[p.pt].Sub(a).Dot(d), hot[q.pt].Sub(a).Dot(d))
 		})
 	}
-	return out
+	return out, start
 }
 
 // link is one rounded piece of a segment: from its point to the point b, which comes after it.
@@ -236,8 +237,8 @@ func (g *Graph) mergeLinks(a int32, segs []Segment, links []link) {
 	}
 }
 
-// compact drops the points that no edge ends at: those of outlines that run there and back.
-func (g *Graph) compact() {
+// compact drops the points that no edge ends at: those of outlines that run there and back. It reports whether all stay.
+func (g *Graph) compact() (whole bool) {
 	place := make([]int32, len(g.Pts))
 	for _, e := range g.Edges {
 		place[e.A], place[e.B] = 1, 1
@@ -251,13 +252,14 @@ func (g *Graph) compact() {
 		}
 	}
 	if int(n) == len(g.Pts) {
-		return
+		return true
 	}
 	g.Pts = g.Pts[:n]
 	for i := range g.Edges {
 		e := &g.Edges[i]
 		e.A, e.B = place[e.A], place[e.B]
 	}
+	return false
 }
 
 func (g *Graph) addWind(from int, w Wind) {

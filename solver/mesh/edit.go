@@ -16,14 +16,15 @@ const dead int32 = -1
 //
 // Between NewEditor and Close the mesh answers no queries.
 type Editor struct {
-	m  *Mesh
-	tr *Triangulation
+	m       *Mesh
+	tr      *Triangulation
+	changed []int32
 }
 
 // NewEditor begins a change of m.
 func NewEditor(m *Mesh) *Editor {
 	m.raw.log, m.raw.logs = m.raw.log[:0], true
-	return &Editor{m, m.raw}
+	return &Editor{m: m, tr: m.raw}
 }
 
 // Free takes the constraint off the edge from a to b.
@@ -38,6 +39,12 @@ func (d *Editor) Free(a, b int32) error {
 	d.tr.work = append(d.tr.work[:0], [2]int32{a, b})
 	d.tr.restore()
 	return nil
+}
+
+// Held reports whether a constraint lies between a and b.
+func (d *Editor) Held(a, b int32) bool {
+	e := d.tr.lookup(a, b)
+	return e != None && d.tr.tris[e.Tri()].c[e.Corner()] >= 0
 }
 
 // Remove takes point v out, at which no constraint may end.
@@ -167,8 +174,18 @@ func (d *Editor) Changed() []int32 {
 	all := slices.Clone(d.tr.log)
 	slices.Sort(all)
 	all = slices.Compact(all)
-	return slices.DeleteFunc(all, func(t int32) bool { return d.tr.tris[t].v[0] == dead })
+	d.changed = slices.DeleteFunc(all, func(t int32) bool { return d.tr.tris[t].v[0] == dead })
+	return d.changed
 }
+
+// Touched reports whether triangle t changed since NewEditor. It is known after Changed has been called.
+func (d *Editor) Touched(t int32) bool {
+	_, found := slices.BinarySearch(d.changed, t)
+	return found
+}
+
+// Point returns point v.
+func (d *Editor) Point(v int32) exact.Pt { return d.tr.Pts[v] }
 
 // Corners returns the indices of the corners of triangle t, counter-clockwise.
 func (d *Editor) Corners(t int32) [3]int32 { return d.tr.tris[t].v }
@@ -176,8 +193,44 @@ func (d *Editor) Corners(t int32) [3]int32 { return d.tr.tris[t].v }
 // Neighbour is as Triangulation.Neighbour.
 func (d *Editor) Neighbour(t int32, i int) (tri, constraint int32) { return d.tr.Neighbour(t, i) }
 
-// Corner returns a triangle at the first corner of the rectangle.
-func (d *Editor) Corner() int32 { return d.tr.out[d.tr.box].Tri() }
+// Path calls cross for each edge that is crossed on a way from a triangle at the rectangle's first corner to triangle t: its
+// constraint, or -1, and the point its half-edge starts at on the side that is left.
+func (d *Editor) Path(t int32, cross func(constraint, from int32)) {
+	tr := d.tr
+	goal := tr.tris[t].v[0]
+	for _, v := range tr.tris[t].v { // a corner of the rectangle cannot be gone around
+		if v < tr.box || v >= tr.box+4 {
+			goal = v
+		}
+	}
+	p := tr.Pts[goal]
+	step := func(e Edge) Edge {
+		r := &tr.tris[e.Tri()]
+		cross(r.c[e.Corner()], r.v[e.Corner()])
+		return r.n[e.Corner()]
+	}
+	now := tr.out[tr.box].Tri()
+	for turn := uint32(1); ; turn = turn*1664525 + 1013904223 {
+		r := &tr.tris[now]
+		next := None
+		for k := range 3 {
+			i := (int(turn>>16)%3 + k) % 3
+			if exact.Area2(tr.Pts[r.v[i]], tr.Pts[r.v[inc[i]]], p) < 0 {
+				next = EdgeOf(now, i)
+				break
+			}
+		}
+		if next == None {
+			break
+		}
+		now = step(next).Tri()
+	}
+	// The triangle reached has that corner of t among its own: turn around it.
+	e := EdgeOf(now, slices.Index(tr.tris[now].v[:], goal))
+	for e.Tri() != t {
+		e = step(e.Prev())
+	}
+}
 
 // Close ends the change and makes the mesh fit to be asked again.
 //

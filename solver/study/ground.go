@@ -13,6 +13,7 @@ import (
 
 // ground is an outline with its rounded graph and its mesh.
 type ground struct {
+	site    *arrange.Site
 	outline *arrange.Outline
 	graph   *arrange.Graph
 	mesh    *mesh.Mesh
@@ -20,16 +21,14 @@ type ground struct {
 
 // makeGround rounds and triangulates an outline.
 func makeGround(ctx context.Context, o *arrange.Outline) (*ground, error) {
-	g := arrange.Round(o)
-	if err := ctx.Err(); err != nil {
-		return nil, err
-	}
-	m, err := arrange.Build(ctx, g)
+	site, err := arrange.NewSite(ctx, o)
 	if err != nil {
 		return nil, fmt.Errorf("study: %w", err)
 	}
-	return &ground{o, g, m}, nil
+	return groundOf(site), nil
 }
+
+func groundOf(s *arrange.Site) *ground { return &ground{s, s.Outline, s.Graph, s.Mesh} }
 
 // blindAt says of a triangle whether it is solid at the height of an eye.
 func (g *ground) blindAt(eye int32) func(tri int32) bool {

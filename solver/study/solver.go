@@ -51,25 +51,43 @@ func (s *Solver) Mesh(ctx context.Context, p *plan.Plan) error {
 	if s.scene != nil && s.obstacles == p.Obstacles() && s.box == box && s.radius == radius {
 		return nil
 	}
-	sc, err := makeScene(ctx, p, radius)
+	outline, problems := arrange.Draw(p)
+	plain, err := s.groundFor(ctx, outline)
 	if err != nil {
 		return err
 	}
+	sc, err := makeScene(ctx, plain, radius)
+	if err != nil {
+		return err
+	}
+	sc.problems = problems
 	s.obstacles, s.box, s.radius, s.scene = p.Obstacles(), box, radius, sc
 	return nil
 }
 
-// makeScene builds the ground of p. A walker with a body takes a second one: the obstacles are grown in the first.
-func makeScene(ctx context.Context, p *plan.Plan, radius int32) (*scene, error) {
-	outline, problems := arrange.Draw(p)
-	plain, err := makeGround(ctx, outline)
-	if err != nil {
-		return nil, err
+// groundFor returns the ground of an outline: the one at hand, when it can follow the change, or else a new one. From the
+// moment that the old one has changed the old scene is gone.
+func (s *Solver) groundFor(ctx context.Context, o *arrange.Outline) (*ground, error) {
+	if s.scene != nil {
+		site := s.scene.plain.site
+		ok, err := site.Follow(o)
+		if ok || err != nil {
+			s.scene = nil
+		}
+		if ok {
+			return groundOf(site), nil
+		}
 	}
-	sc := &scene{plain: plain, wide: plain, problems: problems, floor: floorRing(outline), radius: radius}
+	return makeGround(ctx, o)
+}
+
+// makeScene sets the scene on the plain ground. A walker with a body takes a second one: the obstacles are grown in the first.
+func makeScene(ctx context.Context, plain *ground, radius int32) (*scene, error) {
+	sc := &scene{plain: plain, wide: plain, floor: floorRing(plain.outline), radius: radius}
 	if radius > 0 {
 		_, sc.excess = arrange.Disc(radius)
-		if sc.wide, err = makeGround(ctx, arrange.Grow(outline, plain.mesh, radius)); err != nil {
+		var err error
+		if sc.wide, err = makeGround(ctx, arrange.Grow(plain.outline, plain.mesh, radius)); err != nil {
 			return nil, err
 		}
 	}

@@ -1,0 +1,162 @@
+package arrange
+
+import (
+	"context"
+	"slices"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/mesh"
+)
+
+// Site is an outline with its rounded graph and its mesh, which can follow a change of the outline by doing only what the
+// change asks for. It is not for concurrent use, and its mesh answers no queries while it follows.
+type Site struct {
+	Outline *Outline
+	Graph   *Graph // its edges are named by Mesh.Constraint; edges that have gone leave a gap
+	Mesh    *mesh.Mesh
+
+	segs   []Segment // every segment ever drawn here, by number
+	gone   []bool
+	number []int32 // the number of each of Outline.Segments
+	cells  *cells
+	start  []int32 // the passes of segment i are passes[start[i]:start[i+1]], as first rounded
+	passes []pass
+	whole  bool // every hot pixel is a point of the graph
+
+	later later
+}
+
+// later is what following changes has added to a site.
+type later struct {
+	ready  bool
+	segsIn map[int32][]int32 // segments drawn later, by cell
+	first  []int32           // the points of cell i, as first rounded, are list[first[i]:first[i+1]]
+	list   []int32
+	ptsIn  map[int32][]int32 // points that became hot later, by cell
+	cold   map[int32]bool    // points that are no longer hot
+	chain  map[int32][]int32 // the points of segments that were drawn or changed their way later
+	tags   []mesh.Tag
+}
+
+// NewSite rounds and triangulates an outline.
+//
+//   - Errors: the context's when it is cancelled.
+//   - Cost: as Round and Build.
+func NewSite(ctx context.Context, o *Outline) (*Site, error) {
+	s := &Site{Outline: o, Graph: &Graph{Items: o.Items, Bodies: o.Bodies}, segs: o.Segments}
+	if len(o.Segments) > 0 {
+		s.cells = makeCells(o.Segments)
+		if err := ctx.Err(); err != nil {
+			return nil, err
+		}
+		hot := hotPixels(o.Segments, s.cells)
+		s.passes, s.start = passing(o.Segments, s.cells, hot)
+		s.Graph.Pts = hot
+		s.Graph.merge(o.Segments, s.passes)
+		s.whole = s.Graph.compact()
+		if err := ctx.Err(); err != nil {
+			return nil, err
+		}
+	}
+	var err error
+	s.Mesh, err = Build(ctx, s.Graph)
+	return s, err
+}
+
+// Follow makes the site that of outline o, and reports whether it could: it cannot when items or bodies came or went, when
+// much changed, or when the change leaves the mesh's rectangle. A site that could not is as it was before when err is nil, and
+// must be thrown away when it is not.
+//
+//   - Result: the same edges and triangles as NewSite(o) would have, but for their numbering.
+//   - Cost: O(n) to compare the outlines; everything else in proportion to what lies around the segments that changed.
+func (s *Site) Follow(o *Outline) (ok bool, err error) {
+	c, ok := s.compare(o)
+	if !ok {
+		return false, nil
+	}
+	s.prepare()
+	c.draw(o)
+	c.heat()
+	c.route()
+	if err := c.edit(); err != nil {
+		return false, err
+	}
+	s.Outline, s.number = o, c.number
+	s.Graph.Items, s.Graph.Bodies, s.Graph.Pts = o.Items, o.Bodies, s.Mesh.Pts
+	return true, nil
+}
+
+// prepare makes what following needs and building did not. O(n) the first time.
+func (s *Site) prepare() {
+	l := &s.later
+	if l.ready {
+		return
+	}
+	l.ready = true
+	l.segsIn, l.ptsIn = map[int32][]int32{}, map[int32][]int32{}
+	l.cold, l.chain = map[int32]bool{}, map[int32][]int32{}
+	s.segs = slices.Clone(s.segs)
+	s.gone = make([]bool, len(s.segs))
+	n := s.cells.nx * s.cells.ny
+	l.first = make([]int32, n+1)
+	for _, p := range s.Graph.Pts {
+		l.first[s.cells.of(p)+1]++
+	}
+	for i := range n {
+		l.first[i+1] += l.first[i]
+	}
+	l.list = make([]int32, len(s.Graph.Pts))
+	fill := slices.Clone(l.first[:n])
+	for i, p := range s.Graph.Pts {
+		c := s.cells.of(p)
+		l.list[fill[c]] = int32(i)
+		fill[c]++
+	}
+	l.tags = make([]mesh.Tag, len(s.Graph.Edges))
+	for i, e := range s.Graph.Edges {
+		l.tags[i] = mesh.Tag{Top: e.Top, Walk: e.Walk}
+	}
+}
+
+// eachSegment calls do for every segment that may pass the pixel of p.
+func (s *Site) eachSegment(p exact.Pt, do func(seg int32)) {
+	cell := s.cells.of(p)
+	for _, g := range s.cells.seg[s.cells.start[cell]:s.cells.start[cell+1]] {
+		if !s.gone[g] {
+			do(g)
+		}
+	}
+	for _, g := range s.later.segsIn[cell] {
+		if !s.gone[g] {
+			do(g)
+		}
+	}
+}
+
+// eachPoint calls do for every hot point in a cell.
+func (s *Site) eachPoint(cell int32, do func(pt int32)) {
+	l := &s.later
+	for _, v := range l.list[l.first[cell]:l.first[cell+1]] {
+		if !l.cold[v] {
+			do(v)
+		}
+	}
+	for _, v := range l.ptsIn[cell] {
+		if !l.cold[v] {
+			do(v)
+		}
+	}
+}
+
+// chainOf returns the points of segment g, along it.
+func (s *Site) chainOf(g int32) []int32 {
+	if c, ok := s.later.chain[g]; ok {
+		return c
+	}
+	list := s.passes[s.start[g]:s.start[g+1]]
+	out := make([]int32, len(list))
+	for i, p := range list {
+		out[i] = p.pt
+	}
+	return out
+}
