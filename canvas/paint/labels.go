@@ -7,7 +7,6 @@ import (
 	"github.com/paulmach/orb"
 
 	"enfilade/assets"
-	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 	"enfilade/solver/study"
 )
@@ -43,9 +42,8 @@ func (p *pen) obstruct(main *study.Approach) {
 	}
 	for _, st := range s.Plan.Starts() {
 		if !st.Hidden {
-			x, y := MatPlace(p.cam, st)
 			hw, hh := p.matHalf(st)
-			p.taken(place{x, y}, hw+1, hh+1)
+			p.taken(p.mat(st), hw+1, hh+1)
 		}
 	}
 	if main != nil {
@@ -86,17 +84,17 @@ func (p *pen) placeLabels(main *study.Approach) {
 		p.placeFirstSight(main)
 	}
 	for _, st := range p.s.Plan.Starts() {
-		if !st.Hidden {
+		if !st.Hidden && p.shows(p.mat(st)) {
 			p.placeStart(st)
 		}
 	}
 	for _, t := range p.s.Plan.Targets() {
-		if !t.Hidden {
+		if !t.Hidden && p.shows(p.targetPlace(t)) {
 			p.placeTarget(t, main)
 		}
 	}
 	for i, o := range p.s.Plan.Observers() {
-		if !o.Hidden {
+		if !o.Hidden && p.shows(p.point(o.At)) {
 			p.placeLetter(o, i)
 		}
 	}
@@ -121,29 +119,46 @@ func (p *pen) problemTexts() {
 	look := p.walkFigure(labelText, assets.Medium)
 	for i := range p.s.Result.Problems {
 		pr := &p.s.Result.Problems[i]
-		if !ringed(pr) || !p.near(pr.At) {
+		if !ringed(pr) || !p.shows(p.point(pr.At)) {
 			continue
 		}
 		from := p.say()
-		p.words(pr.Text)
-		t := p.said(from)
 		id := ""
 		if len(pr.Items) > 0 {
 			id = pr.Items[0].ID
+			p.words(p.s.nameOf(pr.Items[0]))
+			p.words(" ")
 		}
+		p.words(pr.Text)
+		t := p.said(from)
 		r := ring8{side: 21, up: 21, down: 21, dx: 15, dUp: 14, dDown: 14}
 		p.settle(labelKey{rankProblem, id}, t, look, p.around(p.point(pr.At), r, east, t, look), true)
 	}
 }
 
+// nameOf returns what a person calls a part of the plan: its name, or its id where it has none.
+func (s *Scene) nameOf(ref plan.Ref) string {
+	name := ""
+	switch ref.Kind {
+	case plan.KindObserver:
+		o, _ := s.Plan.Observer(ref.ID)
+		name = o.Name
+	case plan.KindTarget:
+		t, _ := s.Plan.Target(ref.ID)
+		name = t.Name
+	case plan.KindStart:
+		st, _ := s.Plan.Start(ref.ID)
+		name = st.Name
+	}
+	if name == "" {
+		return ref.ID
+	}
+	return name
+}
+
 // ringed reports whether a problem is marked in the drawing: all but the note that a mark was moved by less than a
 // millimetre.
 func ringed(pr *plan.Problem) bool { return pr.Kind != plan.ProblemMoved }
-
-func (p *pen) near(q exact.Pt) bool {
-	c := p.point(q)
-	return p.frame.holds(c.x, c.y)
-}
 
 // placeFirstSight labels the mark of first sight with the length of the walk to it, or says why there is none.
 func (p *pen) placeFirstSight(a *study.Approach) {
@@ -152,7 +167,7 @@ func (p *pen) placeFirstSight(a *study.Approach) {
 	from := p.say()
 	if a.Status == study.StatusNone {
 		at, target, ok := p.blockedEnds(a)
-		if !ok {
+		if !ok || !p.shows(at) {
 			return
 		}
 		if p.words(a.Reason); a.Reason == "" {
@@ -164,6 +179,9 @@ func (p *pen) placeFirstSight(a *study.Approach) {
 		return
 	}
 	at := p.mm(a.FirstSight)
+	if !p.shows(at) {
+		return
+	}
 	if a.Status == study.StatusSeen {
 		p.words("in sight at the start")
 	} else {
@@ -204,7 +222,6 @@ func towards(v vec, dir int) float64 {
 
 // placeStart puts a start's name to the right of the person who walks in.
 func (p *pen) placeStart(s plan.Start) {
-	x, y := MatPlace(p.cam, s)
 	from := p.say()
 	p.words(s.Name)
 	t := p.said(from)
@@ -212,7 +229,7 @@ func (p *pen) placeStart(s plan.Start) {
 	sin, cos := math.Sincos(p.startHeading(s) * math.Pi / 180)
 	w, h := p.matHalf(s)
 	r := ring8{side: w + 5, up: h + 6, down: h + 6, dx: -w, dUp: h + 6, dDown: h + 6}
-	p.settle(labelKey{rankStart, s.ID}, t, look, p.around(place{x, y}, r, octant(sin, cos), t, look), true)
+	p.settle(labelKey{rankStart, s.ID}, t, look, p.around(p.mat(s), r, octant(sin, cos), t, look), true)
 }
 
 // placeTarget puts a target's name off its face; that of the walk's target on the side away from the walk.

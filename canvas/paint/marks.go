@@ -132,6 +132,11 @@ func MatPlace(cam view.Camera, s plan.Start) (x, y float64) {
 	return x - d*cos, y + d*sin
 }
 
+func (p *pen) mat(s plan.Start) place {
+	x, y := MatPlace(p.cam, s)
+	return place{x, y}
+}
+
 // startHeading returns the direction a walk leaves a start in, in degrees of the plan: its facing, or that of the chosen walk.
 func (p *pen) startHeading(s plan.Start) float64 {
 	if s.Facing != nil {
@@ -146,8 +151,7 @@ func (p *pen) startHeading(s plan.Start) float64 {
 
 // start draws a mat with a chevron that points the way in.
 func (p *pen) start(s plan.Start, strength float64) {
-	x, y := MatPlace(p.cam, s)
-	t := p.turtleAt(place{x, y}, p.startHeading(s))
+	t := p.turtleAt(p.mat(s), p.startHeading(s))
 	ink, red := at(p.theme.Ink, strength), at(p.theme.Red, strength)
 	m := p.begin()
 	p.roundRect(t, MatWidth+3, MatLength+3, 3)

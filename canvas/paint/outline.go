@@ -26,17 +26,16 @@ func (p *pen) outlineOf(ref plan.Ref, off float64) {
 	case plan.KindOpening:
 		p.outlineDoor(ref, off)
 	case plan.KindObserver:
-		if o, ok := p.s.Plan.Observer(ref.ID); ok && !o.Hidden && ref.ID != p.s.Observer {
+		if o, ok := p.s.Plan.Observer(ref.ID); ok && !o.Hidden && ref.ID != p.s.Observer && p.shows(p.point(o.At)) {
 			p.disc(p.point(o.At), (ObserverRadius+off)*p.k)
 		}
 	case plan.KindTarget:
-		if t, ok := p.s.Plan.Target(ref.ID); ok && !t.Hidden {
+		if t, ok := p.s.Plan.Target(ref.ID); ok && !t.Hidden && p.shows(p.targetPlace(t)) {
 			p.disc(p.targetPlace(t), (TargetRadius+0.9+off)*p.k)
 		}
 	case plan.KindStart:
-		if s, ok := p.s.Plan.Start(ref.ID); ok && !s.Hidden {
-			x, y := MatPlace(p.cam, s)
-			p.roundRect(p.turtleAt(place{x, y}, p.startHeading(s)), MatWidth+2*off+1.3, MatLength+2*off+1.3, 2+off)
+		if s, ok := p.s.Plan.Start(ref.ID); ok && !s.Hidden && p.shows(p.mat(s)) {
+			p.roundRect(p.turtleAt(p.mat(s), p.startHeading(s)), MatWidth+2*off+1.3, MatLength+2*off+1.3, 2+off)
 		}
 	case plan.KindZone:
 		p.outlineZone(ref)

@@ -163,7 +163,7 @@ func (p *pen) marks() {
 	p.ghostMarks()
 	seen, seenIn := p.seen()
 	for _, t := range p.s.Plan.Targets() {
-		if t.Hidden {
+		if t.Hidden || !p.shows(p.targetPlace(t)) {
 			continue
 		}
 		ring := p.theme.Ink
@@ -179,12 +179,12 @@ func (p *pen) marks() {
 		p.target(t, ring, dot, 1)
 	}
 	for _, s := range p.s.Plan.Starts() {
-		if !s.Hidden {
+		if !s.Hidden && p.shows(p.mat(s)) {
 			p.start(s, 1)
 		}
 	}
 	for i, o := range p.s.Plan.Observers() {
-		if !o.Hidden {
+		if !o.Hidden && p.shows(p.point(o.At)) {
 			r := p.s.sightOf(o.ID)
 			p.observer(o, colourOf(o, i), o.ID == p.s.Observer, r != nil && r.Problem != "", 1)
 		}
@@ -206,17 +206,17 @@ func (p *pen) ghostMarks() {
 		return
 	}
 	for _, t := range p.s.Old.Targets() {
-		if !t.Hidden && p.s.dragged(plan.Ref{Kind: plan.KindTarget, ID: t.ID}) {
+		if !t.Hidden && p.s.dragged(plan.Ref{Kind: plan.KindTarget, ID: t.ID}) && p.shows(p.targetPlace(t)) {
 			p.target(t, p.theme.Ink, nil, faint)
 		}
 	}
 	for _, s := range p.s.Old.Starts() {
-		if !s.Hidden && p.s.dragged(plan.Ref{Kind: plan.KindStart, ID: s.ID}) {
+		if !s.Hidden && p.s.dragged(plan.Ref{Kind: plan.KindStart, ID: s.ID}) && p.shows(p.mat(s)) {
 			p.start(s, faint)
 		}
 	}
 	for i, o := range p.s.Old.Observers() {
-		if !o.Hidden && p.s.dragged(plan.Ref{Kind: plan.KindObserver, ID: o.ID}) {
+		if !o.Hidden && p.s.dragged(plan.Ref{Kind: plan.KindObserver, ID: o.ID}) && p.shows(p.point(o.At)) {
 			p.observer(o, colourOf(o, i), false, false, faint)
 		}
 	}
@@ -239,7 +239,7 @@ func (p *pen) problems() {
 		return
 	}
 	for i := range p.s.Result.Problems {
-		if pr := &p.s.Result.Problems[i]; ringed(pr) && p.near(pr.At) {
+		if pr := &p.s.Result.Problems[i]; ringed(pr) && p.shows(p.point(pr.At)) {
 			p.problemRing(pr.At)
 		}
 	}

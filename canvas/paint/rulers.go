@@ -100,10 +100,13 @@ func (p *pen) rulerFigures(u unit, s view.Steps) {
 		p.eachTick(u, s.Label, axis == 1, func(i, at float64) {
 			from := p.say()
 			p.number(i*s.Label, decimals)
-			if axis == 0 {
-				p.centred(p.said(from), at+5*p.k, base, look)
-			} else {
-				p.centred(p.said(from), base, at-9*p.k, look)
+			t := p.said(from)
+			half := p.width(t, look) / 2
+			switch {
+			case axis == 0 && at+5*p.k+half < float64(p.W):
+				p.centred(t, at+5*p.k, base, look)
+			case axis == 1 && at-9*p.k+half < float64(p.H):
+				p.centred(t, base, at-9*p.k, look)
 			}
 		})
 	}

@@ -97,6 +97,9 @@ func (s *Scene) resting() *plan.Plan {
 	return s.Plan
 }
 
+// shows reports whether a mark at a place may reach into the picture.
+func (p *pen) shows(c place) bool { return p.frame.holds(c.x, c.y) }
+
 // grid returns the place of a point in grid units that need not be whole.
 func (p *pen) grid(v vec) place {
 	x, y := p.cam.PixelMM(orb.Point{v.x / exact.PerMM, v.y / exact.PerMM})

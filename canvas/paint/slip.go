@@ -72,7 +72,9 @@ func (p *pen) slipWords(s *slip, room float64) {
 		p.words(" · ")
 	}
 	plane := p.say()
-	p.eyePlane()
+	if p.within.Max[0] >= p.within.Min[0] { // in an empty plan nothing is seen
+		p.eyePlane()
+	}
 	s.note = p.said(from)
 	if p.width(s.note, slipNote)+p.width(s.title, slipTitle) > room {
 		s.note[0] = plane

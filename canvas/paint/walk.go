@@ -178,6 +178,9 @@ func (p *pen) blockedEnds(a *study.Approach) (from, to place, ok bool) {
 
 // firstSight draws the mark where the target comes into sight: the half that faces the target is filled.
 func (p *pen) firstSight(at, target place, radius, halo float64, c color.NRGBA) {
+	if !p.shows(at) {
+		return
+	}
 	k := p.k
 	m := p.begin()
 	p.disc(at, halo*k)
