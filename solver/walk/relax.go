@@ -113,6 +113,9 @@ func (f *Finder) settleEnd(o *goal, n int32, g float64, end [2]float64) {
 	// Ends are measured, not decided: two candidates a thousandth of a unit apart are one place seen from two triangles.
 	apart := math.Hypot(ax-bx, ay-by) > 1.0/1024
 	if c == 0 && !apart {
+		if g < o.g || g == o.g && (ax > bx || ax == bx && ay > by) { // the same walk; which bits it gets must not depend on the order
+			o.g, o.node, o.end = g, n, end
+		}
 		o.ties = o.ties || f.nodes[n].ties
 		return
 	}
@@ -154,9 +157,20 @@ func (f *Finder) path(o *goal) Path {
 	back := f.turnsTo(nil, o.node, o.end)
 	slices.Reverse(back)
 	x, y := f.place(o.node, o.end)
-	p := Path{Found: true, Length: o.g, Turns: back, End: [2]float64{x, y}, Ties: o.ties || f.nodes[o.node].ties}
+	p := Path{Found: true, Length: lengthOf(back, x, y), Turns: back, End: [2]float64{x, y}, Ties: o.ties || f.nodes[o.node].ties}
 	for n := o.node; n >= 0 && !p.Ties; n = f.nodes[n].parent {
 		p.Ties = f.nodes[n].ties
 	}
 	return p
+}
+
+// lengthOf adds the walk's legs up, from the start on: the sum then depends on the walk alone and not on the corners at which
+// the search happened to notice its straight stretches.
+func lengthOf(turns []exact.Pt, x, y float64) float64 {
+	sum := 0.0
+	for i := 1; i < len(turns); i++ {
+		sum += exact.Dist(turns[i-1], turns[i])
+	}
+	last := turns[len(turns)-1]
+	return sum + math.Hypot(x-float64(last.X), y-float64(last.Y))
 }
