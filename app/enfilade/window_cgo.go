@@ -5,6 +5,8 @@ package main
 import (
 	"os"
 
+	"fyne.io/fyne/v2/app"
+
 	"enfilade/app/gui"
 )
 
@@ -14,5 +16,5 @@ func openWindow(path, theme string) error {
 	if t := os.Getenv("ENFILADE_THEME"); t == "light" || t == "dark" {
 		theme = t
 	}
-	return gui.Run(gui.Options{Path: path, Theme: theme})
+	return gui.Run(app.NewWithID, gui.Options{Path: path, Theme: theme})
 }

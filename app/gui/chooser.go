@@ -16,7 +16,7 @@ const planSuffix = ".enfilade"
 
 // chooser is the page that asks for a file: a path one can type, and what lies in its folder.
 type chooser struct {
-	path    *entry
+	path    *pathEntry
 	list    *widget.List
 	empty   *inkText
 	folder  string
@@ -30,15 +30,20 @@ type chooser struct {
 // or a file is chosen twice.
 func newChooser(folder, name, suffix string, done func(string)) *chooser {
 	c := &chooser{suffix: suffix, done: done, empty: caption("nothing of this kind here")}
-	c.path = newEntry(func(text string) error { c.typed(text); return nil })
+	c.path = newPathEntry(func() { c.typed(c.path.Text) })
 	c.path.OnChanged = func(text string) {
-		if dir := filepath.Dir(text); dir != c.folder && isFolder(dir) {
+		dir := filepath.Dir(text)
+		if isFolder(text) {
+			dir = filepath.Clean(text)
+		}
+		if dir != c.folder && isFolder(dir) {
 			c.read(dir)
 		}
 	}
 	c.list = widget.NewList(func() int { return len(c.names) }, func() fyne.CanvasObject { return newChoiceRow(c) },
 		func(i widget.ListItemID, o fyne.CanvasObject) { o.(*choiceRow).put(c.names[i]) })
 	c.list.HideSeparators = true
+	c.list.MinSize() // from here on it can be scrolled
 	frame := container.NewStack(newPaper(roleField), c.list, container.NewCenter(c.empty))
 	c.content = around(inset(0, 0, 0, 8, c.path), nil, nil, nil,
 		container.New(minHeight(280), frame))
@@ -120,6 +125,31 @@ func (c *chooser) typed(path string) {
 		return
 	}
 	c.done(path)
+}
+
+// pathEntry is the field for a file's path.
+type pathEntry struct {
+	widget.Entry
+	enter, escape func()
+}
+
+func newPathEntry(enter func()) *pathEntry {
+	e := &pathEntry{enter: enter, escape: func() {}}
+	e.Wrapping, e.Scroll = fyne.TextWrapOff, fyne.ScrollHorizontalOnly
+	e.ExtendBaseWidget(e)
+	return e
+}
+
+// TypedKey is for the toolkit.
+func (e *pathEntry) TypedKey(k *fyne.KeyEvent) {
+	switch k.Name {
+	case fyne.KeyReturn, fyne.KeyEnter:
+		e.enter()
+	case fyne.KeyEscape:
+		e.escape()
+	default:
+		e.Entry.TypedKey(k)
+	}
 }
 
 // choiceRow is one line of the chooser's list.

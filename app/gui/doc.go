@@ -5,5 +5,5 @@
 // runs on the toolkit's goroutine but two workers: the solver's runner and the painter of the picture's base. Both hand
 // their results over through an atomic pointer and one queued call, and never wait for the window.
 //
-// Only run.go touches the toolkit's application and its display driver, so that the tests run without a display.
+// The toolkit's application is handed in, so nothing here knows its display driver, and the tests run without a display.
 package gui

@@ -6,7 +6,8 @@ import (
 	"fyne.io/fyne/v2/widget"
 )
 
-// entry is a field for one value: Enter and leaving it take the text over, Escape puts the old text back. A text that is
+// entry is a field for one value: Enter and leaving it take the text over, Escape puts the old text back, and both give
+// the focus back, so that undo means the plan's again. A text that is
 // not taken stays, and its fault is told.
 type entry struct {
 	widget.Entry
@@ -74,7 +75,9 @@ func (e *entry) FocusLost() {
 func (e *entry) TypedKey(k *fyne.KeyEvent) {
 	switch k.Name {
 	case fyne.KeyReturn, fyne.KeyEnter:
-		e.take()
+		if e.take(); !e.faulty && e.leave != nil {
+			e.leave()
+		}
 	case fyne.KeyEscape:
 		e.SetText(e.shown)
 		e.say(nil)

@@ -170,7 +170,7 @@ func (w *window) askFile(title, verb, name, suffix string, done func(string)) {
 	}
 	var m *modal
 	c := newChooser(folder, name, suffix, func(path string) { m.choose(0) })
-	c.path.leave = func() { m.choose(1) }
+	c.path.escape = func() { m.choose(1) }
 	m = w.ask(title, c.content, 620, choice{verb, func() {
 		if path := c.path.Text; isFolder(path) {
 			w.askFile(title, verb, name, suffix, done)

@@ -189,12 +189,15 @@ func (w *window) showAbout() {
 		"Fonts: Lato, SIL Open Font License 1.1."), 560, choice{"Close", nil})
 }
 
-// sentence makes an error a sentence for people: a capital first, a full stop last.
+// sentence makes an error a sentence for people: a capital first, unless it begins with the name of a file, and a full
+// stop last.
 func sentence(s string) string {
 	r := []rune(strings.TrimSuffix(s, "."))
 	if len(r) == 0 {
 		return ""
 	}
-	r[0] = unicode.ToUpper(r[0])
+	if first, _, _ := strings.Cut(string(r), " "); !strings.ContainsAny(first, "./:") {
+		r[0] = unicode.ToUpper(r[0])
+	}
 	return string(r) + "."
 }

@@ -134,7 +134,7 @@ func formatFeet(v int32) string {
 	}
 	const inch = 25.4 * exact.PerMM
 	n := int64(math.Round(float64(v) * 16 / inch))
-	if math.Abs(float64(n)*inch/16-float64(v)) > 0.5 {
+	if int32(math.Round(float64(n)*inch/16)) != v {
 		feet := v / (12 * inch)
 		return fmt.Sprintf(`%s%d' %s"`, sign, feet, trimDecimals(float64(v-feet*12*inch)/inch, 0, 3))
 	}

@@ -21,7 +21,8 @@ type picture struct {
 	overlay paint.List
 	worker  *baseWorker
 	base    *madeBase
-	shown   *paint.Scene // of the frame that was drawn last, used again
+	warp    warper
+	opened  uint64 // the open plan that the base belongs to, by its first revision
 }
 
 // baseKey is all that a base depends on.
@@ -40,6 +41,7 @@ type madeBase struct {
 	base    *raster.Base
 	drawing *paint.Drawing
 	took    time.Duration
+	opened  uint64
 }
 
 // soon is how long a base may take to be made in the middle of a frame: a pan then shows no seam. What takes longer is
@@ -67,10 +69,10 @@ func (p *picture) draw(w, h int) image.Image {
 		v.resized(w, h, pix)
 	}
 	scene := p.scene()
-	base := p.baseFor(scene)
-	scene.Drawing = base.drawing
+	under := p.baseFor(scene)
+	scene.Drawing = p.base.drawing
 	paint.Overlay(scene, &p.overlay)
-	return p.frame.Draw(base.base, &p.overlay)
+	return p.frame.Draw(under, &p.overlay)
 }
 
 // scene gathers all that the picture depends on.
@@ -113,29 +115,40 @@ func keyOf(s *paint.Scene) baseKey {
 	return k
 }
 
-// baseFor returns the base for a scene: the one at hand when it fits, a new one at once when that is quick, else the one
-// at hand while the worker makes the new one.
-func (p *picture) baseFor(s *paint.Scene) *madeBase {
-	if b := p.worker.take(); b != nil {
+// baseFor returns the base for a scene: the one at hand when it fits, a new one at once when that is quick or nothing at
+// hand is like it, else the one at hand, as the camera sees it, while the worker makes the new one.
+func (p *picture) baseFor(s *paint.Scene) *raster.Base {
+	opened := p.w.results.opened
+	if b := p.worker.take(); b != nil && b.opened == opened {
 		p.base = b
 	}
 	k := keyOf(s)
-	switch {
-	case p.base != nil && p.base.key == k:
-	case p.base == nil || p.base.took < soon || p.base.key.camera.W != k.camera.W || p.base.key.camera.H != k.camera.H:
-		p.base = makeBase(s, k)
-	default:
-		s.Drawing = p.base.drawing
-		p.worker.ask(s, k)
+	if p.base != nil && p.base.key == k {
+		return p.base.base
 	}
-	return p.base
+	if p.base == nil || p.base.took < soon || p.base.opened != opened || !p.base.key.like(k) {
+		p.base = makeBase(s, k, opened)
+		return p.base.base
+	}
+	s.Drawing = p.base.drawing
+	p.worker.ask(s, k, opened)
+	if p.base.key.camera == k.camera {
+		return p.base.base
+	}
+	return p.warp.show(p.base.base, p.base.key.camera, k.camera, s.Theme.Ground)
+}
+
+// like reports whether a base of one key can stand in for one of the other for a moment.
+func (k baseKey) like(q baseKey) bool {
+	return k.dark == q.dark && k.camera.W == q.camera.W && k.camera.H == q.camera.H && k.camera.K == q.camera.K
 }
 
 // makeBase lists and draws a base.
-func makeBase(s *paint.Scene, k baseKey) *madeBase {
+func makeBase(s *paint.Scene, k baseKey, opened uint64) *madeBase {
 	began := time.Now()
 	list := paint.Base(s)
-	return &madeBase{key: k, base: raster.NewBase(list, k.camera.W, k.camera.H), drawing: list.Drawing, took: time.Since(began)}
+	base := raster.NewBase(list, k.camera.W, k.camera.H)
+	return &madeBase{key: k, base: base, drawing: list.Drawing, took: time.Since(began), opened: opened}
 }
 
 // baseWorker makes bases on a goroutine of its own, newest first.
@@ -148,8 +161,9 @@ type baseWorker struct {
 }
 
 type baseJob struct {
-	scene paint.Scene
-	key   baseKey
+	scene  paint.Scene
+	key    baseKey
+	opened uint64
 }
 
 func newBaseWorker(wake func()) *baseWorker {
@@ -161,13 +175,13 @@ func newBaseWorker(wake func()) *baseWorker {
 func (b *baseWorker) run() {
 	defer close(b.done)
 	for j := range b.slot {
-		b.made.Store(makeBase(&j.scene, j.key))
+		b.made.Store(makeBase(&j.scene, j.key, j.opened))
 		b.wake()
 	}
 }
 
 // ask asks for a base, in place of one that waits.
-func (b *baseWorker) ask(s *paint.Scene, k baseKey) {
+func (b *baseWorker) ask(s *paint.Scene, k baseKey, opened uint64) {
 	if b.last == k {
 		return
 	}
@@ -176,7 +190,7 @@ func (b *baseWorker) ask(s *paint.Scene, k baseKey) {
 	case <-b.slot:
 	default:
 	}
-	b.slot <- baseJob{*s, k}
+	b.slot <- baseJob{*s, k, opened}
 }
 
 // take returns a base made since the last call, nil when there is none.

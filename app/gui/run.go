@@ -7,7 +7,6 @@ import (
 	"time"
 
 	"fyne.io/fyne/v2"
-	"fyne.io/fyne/v2/app"
 
 	"enfilade/app/live"
 	"enfilade/assets"
@@ -29,14 +28,15 @@ type Options struct {
 var ErrNoDisplay = errors.New("window: there is no display (neither DISPLAY nor WAYLAND_DISPLAY is set); " +
 	"enfilade study PLAN prints the study of a plan, and with --picture FILE.png draws it; enfilade --help tells more")
 
-// Run opens the window and returns when it is closed. It must be called on the main goroutine.
+// Run opens the window of the application that newApp makes for an id, and returns when it is closed. It must be called on
+// the main goroutine.
 //
 //   - Errors: ErrNoDisplay where no window can open. A plan that cannot be read is told in the window.
-func Run(o Options) error {
+func Run(newApp func(id string) fyne.App, o Options) error {
 	if !hasDisplay() {
 		return ErrNoDisplay
 	}
-	a := app.NewWithID(appID)
+	a := newApp(appID)
 	a.SetIcon(fyne.NewStaticResource("enfilade.png", assets.AppIcon()))
 	choice := o.Theme
 	if choice == "" {
