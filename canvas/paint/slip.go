@@ -13,6 +13,7 @@ type slip struct {
 	unit       unit
 	bar        box
 	units      float64 // length of the bar
+	barless    bool
 	title      text
 	note       text // place, and in whose plane of the eye all is seen
 	titleAt, x float64
@@ -47,6 +48,9 @@ func (p *pen) setSlip() slip {
 	free := s.bar.x1 + 30*p.k // the title keeps to the right of this
 	p.slipWords(&s, right-free)
 	note, title := p.width(s.note, slipNote), p.width(s.title, slipTitle)
+	if free+note > right { // no room for both: what must be said stays
+		s.barless, free = true, left
+	}
 	gap := 12 * p.k
 	if s.title[0] == s.title[1] {
 		gap = 0
@@ -101,7 +105,9 @@ func (p *pen) eyePlane() {
 }
 
 func (p *pen) drawSlip(s slip) {
-	p.drawBar(s)
+	if !s.barless {
+		p.drawBar(s)
+	}
 	for _, run := range [...]struct {
 		text text
 		x    float64

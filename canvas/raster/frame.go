@@ -15,6 +15,7 @@ type Frame struct {
 	glyphs *glyphs
 	paint  painter
 	canvas canvas
+	inked  pairs   // the colour of the base's ink
 	clip   []uint8 // coverage of the region that is being washed
 }
 
@@ -24,7 +25,7 @@ func (f *Frame) Draw(b *Base, overlay *paint.List) *image.RGBA {
 	f.resize(b.W, b.H, overlay.K)
 	copy(f.img.Pix, b.Image.Pix)
 	p := &f.paint
-	inked := pairsOf(b.InkColour)
+	f.inked = pairsOf(b.InkColour)
 	for i := range overlay.Ops {
 		op := &overlay.Ops[i]
 		f.canvas.clipX, f.canvas.clipY = overlay.Left, overlay.Left
@@ -36,7 +37,7 @@ func (f *Frame) Draw(b *Base, overlay *paint.List) *image.RGBA {
 		case paint.LowInk:
 			p.under = b.Low
 		case paint.HardInk:
-			p.under, p.inkColour = b.Ink, &inked
+			p.under, p.inkColour = b.Ink, &f.inked
 		}
 		f.step(overlay, op)
 	}
