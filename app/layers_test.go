@@ -27,11 +27,12 @@ const (
 var layers = map[string][]string{
 	"solver/exact":    {},
 	"solver/plan":     {"solver/exact"},
-	"solver/mesh":     {"solver/exact"},
-	"solver/arrange":  {"solver/exact", "solver/plan", "solver/mesh"},
+	"solver/pulse":    {},
+	"solver/mesh":     {"solver/exact", "solver/pulse"},
+	"solver/arrange":  {"solver/exact", "solver/plan", "solver/mesh", "solver/pulse"},
 	"solver/sight":    {"solver/exact", "solver/mesh"},
-	"solver/walk":     {"solver/exact", "solver/mesh", "solver/sight"},
-	"solver/study":    {"solver/exact", "solver/plan", "solver/mesh", "solver/arrange", "solver/sight", "solver/walk"},
+	"solver/walk":     {"solver/exact", "solver/mesh", "solver/sight", "solver/pulse"},
+	"solver/study":    {"solver/exact", "solver/plan", "solver/mesh", "solver/arrange", "solver/sight", "solver/walk", "solver/pulse"},
 	"solver/plantest": {"solver/exact", "solver/plan", "solver/mesh", "solver/arrange"},
 
 	"solver/plantest/cgal": {"solver"}, // it compares every layer of the solver with CGAL

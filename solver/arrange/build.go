@@ -5,6 +5,7 @@ import (
 
 	"enfilade/solver/mesh"
 	"enfilade/solver/plan"
+	"enfilade/solver/pulse"
 )
 
 // Build triangulates the graph and finds out which triangles are solid.
@@ -18,23 +19,33 @@ func Build(ctx context.Context, g *Graph) (*mesh.Mesh, error) {
 		ends[i] = [2]int32{e.A, e.B}
 		tags[i] = mesh.Tag{Top: e.Top, Walk: e.Walk}
 	}
-	tr, err := mesh.Triangulate(ctx, g.Pts, ends)
+	tr, err := mesh.Triangulate(pulse.Part(ctx, 0, 0.6), g.Pts, ends)
 	if err != nil {
 		return nil, err
 	}
-	return tr.Finish(tags, g.solids(tr)), nil
+	solid, err := g.solids(pulse.Part(ctx, 0.6, 0.7), tr)
+	if err != nil {
+		return nil, err
+	}
+	return tr.Finish(pulse.Part(ctx, 0.7, 1), tags, solid)
 }
 
 // solids returns what each triangle stops.
-func (g *Graph) solids(tr *mesh.Triangulation) []mesh.Tag {
+func (g *Graph) solids(ctx context.Context, tr *mesh.Triangulation) ([]mesh.Tag, error) {
 	solid := make([]mesh.Tag, tr.Len())
 	seen := make([]bool, tr.Len())
 	w := winding{count: make([]int32, len(g.Bodies)), bodies: g.Bodies}
-	g.flood(tr, &w, g.outside(tr), func(t int32) bool { return !seen[t] }, func(t int32, s mesh.Tag) {
+	count := 0
+	var err error
+	g.flood(tr, &w, g.outside(tr), func(t int32) bool { return !seen[t] && err == nil }, func(t int32, s mesh.Tag) {
 		seen[t] = true
 		solid[t] = s
+		if e := pulse.Step(ctx, count, tr.Len()); e != nil {
+			err = e
+		}
+		count++
 	})
-	return solid
+	return solid, err
 }
 
 // triangles is a triangulation as flood walks over it.

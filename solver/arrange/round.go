@@ -2,9 +2,11 @@ package arrange
 
 import (
 	"cmp"
+	"context"
 	"slices"
 
 	"enfilade/solver/exact"
+	"enfilade/solver/pulse"
 )
 
 // Round returns the outline's snap rounding: the planar graph of its segments on the grid.
@@ -17,26 +19,54 @@ import (
 //     O(n²) only when most segments share one cell.
 //   - Source: Hobby 1999, section 2; the half-open pixel is his.
 func Round(o *Outline) *Graph {
-	g := &Graph{Items: o.Items, Bodies: o.Bodies}
-	if len(o.Segments) == 0 {
-		return g
+	r, err := round(context.Background(), o)
+	if err != nil {
+		panic("arrange: " + err.Error()) // nobody cancels the background
 	}
-	c := makeCells(o.Segments)
-	hot := hotPixels(o.Segments, c)
-	passes, _ := passing(o.Segments, c, hot)
-	g.Pts = hot
-	g.merge(o.Segments, passes)
-	g.compact()
-	return g
+	return r.graph
+}
+
+// rounding is a rounded graph with what led to it.
+type rounding struct {
+	graph  *Graph
+	cells  *cells
+	passes []pass // those of segment i are passes[start[i]:start[i+1]]
+	start  []int32
+	whole  bool // every hot pixel is a point of the graph
+}
+
+// round does the work of Round.
+func round(ctx context.Context, o *Outline) (*rounding, error) {
+	r := &rounding{graph: &Graph{Items: o.Items, Bodies: o.Bodies}}
+	if len(o.Segments) == 0 {
+		return r, nil
+	}
+	r.cells = makeCells(o.Segments)
+	hot, err := hotPixels(pulse.Part(ctx, 0.2, 0.5), o.Segments, r.cells)
+	if err != nil {
+		return nil, err
+	}
+	if r.passes, r.start, err = passing(pulse.Part(ctx, 0.5, 0.8), o.Segments, r.cells, hot); err != nil {
+		return nil, err
+	}
+	r.graph.Pts = hot
+	if err := r.graph.merge(pulse.Part(ctx, 0.8, 1), o.Segments, r.passes); err != nil {
+		return nil, err
+	}
+	r.whole = r.graph.compact()
+	return r, nil
 }
 
 // hotPixels returns the centres of the hot pixels, in order, each once.
-func hotPixels(segs []Segment, c *cells) []exact.Pt {
+func hotPixels(ctx context.Context, segs []Segment, c *cells) ([]exact.Pt, error) {
 	keys := make([]uint64, 0, 2*len(segs)+len(segs)/4)
 	for _, s := range segs {
 		keys = append(keys, key(s.A), key(s.B))
 	}
 	for cell := range len(c.start) - 1 {
+		if err := pulse.Step(ctx, cell, len(c.start)); err != nil {
+			return nil, err
+		}
 		list := c.seg[c.start[cell]:c.start[cell+1]]
 		for i, u := range list {
 			for _, v := range list[:i] {
@@ -52,7 +82,7 @@ func hotPixels(segs []Segment, c *cells) []exact.Pt {
 	for i, k := range keys {
 		pts[i] = unkey(k)
 	}
-	return pts
+	return pts, nil
 }
 
 // key packs p so that unsigned order is the order of points.
@@ -120,9 +150,12 @@ type pass struct {
 
 // passing returns which segment passes which hot pixels: by segment, then along it. Those of segment i are
 // out[start[i]:start[i+1]].
-func passing(segs []Segment, c *cells, hot []exact.Pt) (out []pass, start []int32) {
+func passing(ctx context.Context, segs []Segment, c *cells, hot []exact.Pt) (out []pass, start []int32, err error) {
 	found := make([]pass, 0, 2*len(segs)+len(segs)/4)
 	for i, p := range hot {
+		if err := pulse.Step(ctx, i, len(hot)); err != nil {
+			return nil, nil, err
+		}
 		cell := c.of(p)
 		for _, s := range c.seg[c.start[cell]:c.start[cell+1]] {
 			if passes(segs[s].A, segs[s].B, p) {
@@ -156,7 +189,7 @@ func passing(segs []Segment, c *cells, hot []exact.Pt) (out []pass, start []int3
 			return cmp.Compare(hot[p.pt].Sub(a).Dot(d), hot[q.pt].Sub(a).Dot(d))
 		})
 	}
-	return out, start
+	return out, start, nil
 }
 
 // link is one rounded piece of a segment: from its point to the point b, which comes after it.
@@ -168,7 +201,7 @@ type link struct {
 
 // merge makes the edges: the pieces between consecutive hot pixels, those with the same ends made one. The pieces are
 // gathered by their first point; few share one. O(n).
-func (g *Graph) merge(segs []Segment, passes []pass) {
+func (g *Graph) merge(ctx context.Context, segs []Segment, passes []pass) error {
 	start := make([]int32, len(g.Pts)+1)
 	eachLink(passes, func(a int32, _ link) { start[a+1]++ })
 	for i := 1; i < len(start); i++ {
@@ -183,6 +216,9 @@ func (g *Graph) merge(segs []Segment, passes []pass) {
 	g.Edges = make([]Edge, 0, len(links))
 	g.Winds = make([]Wind, 0, len(links))
 	for a := range g.Pts {
+		if err := pulse.Step(ctx, a, len(g.Pts)); err != nil {
+			return err
+		}
 		list := links[start[a]:start[a+1]]
 		slices.SortStableFunc(list, func(l, m link) int { return cmp.Compare(l.b, m.b) })
 		for i := 0; i < len(list); {
@@ -194,6 +230,7 @@ func (g *Graph) merge(segs []Segment, passes []pass) {
 			i = j
 		}
 	}
+	return nil
 }
 
 // eachLink calls f with every piece and the one of its ends that comes first.

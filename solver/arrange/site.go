@@ -2,10 +2,12 @@ package arrange
 
 import (
 	"context"
+	"fmt"
 	"slices"
 
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
+	"enfilade/solver/pulse"
 )
 
 // Site is an outline with its rounded graph and its mesh, which can follow a change of the outline by doing only what the
@@ -17,11 +19,9 @@ type Site struct {
 
 	segs   []Segment // every segment ever drawn here, by number
 	gone   []bool
-	number []int32 // the number of each of Outline.Segments
-	cells  *cells
-	start  []int32 // the passes of segment i are passes[start[i]:start[i+1]], as first rounded
-	passes []pass
-	whole  bool // every hot pixel is a point of the graph
+	number []int32 // the number of each of Outline.Segments; nil while they are the ones first drawn
+
+	*rounding // as first rounded
 
 	later later
 }
@@ -38,28 +38,33 @@ type later struct {
 	tags   []mesh.Tag
 }
 
+// MaxEdges is the greatest number of edges that a plan's graph may have.
+const MaxEdges = 2_000_000
+
+// TooLarge reports a plan whose graph would have more than MaxEdges edges.
+type TooLarge struct{ Edges int }
+
+func (e *TooLarge) Error() string {
+	return fmt.Sprintf("the plan makes %d edges and the limit is %d; leave some of it out, or make a walker's radius 0", e.Edges, MaxEdges)
+}
+
 // NewSite rounds and triangulates an outline.
 //
-//   - Errors: the context's when it is cancelled.
+//   - Errors: *TooLarge; the context's when it is cancelled.
 //   - Cost: as Round and Build.
 func NewSite(ctx context.Context, o *Outline) (*Site, error) {
-	s := &Site{Outline: o, Graph: &Graph{Items: o.Items, Bodies: o.Bodies}, segs: o.Segments}
-	if len(o.Segments) > 0 {
-		s.cells = makeCells(o.Segments)
-		if err := ctx.Err(); err != nil {
-			return nil, err
-		}
-		hot := hotPixels(o.Segments, s.cells)
-		s.passes, s.start = passing(o.Segments, s.cells, hot)
-		s.Graph.Pts = hot
-		s.Graph.merge(o.Segments, s.passes)
-		s.whole = s.Graph.compact()
-		if err := ctx.Err(); err != nil {
-			return nil, err
-		}
+	if n := len(o.Segments); n > MaxEdges {
+		return nil, &TooLarge{n}
 	}
-	var err error
-	s.Mesh, err = Build(ctx, s.Graph)
+	r, err := round(pulse.Part(ctx, 0, 0.3), o)
+	if err != nil {
+		return nil, err
+	}
+	if n := len(r.graph.Edges); n > MaxEdges {
+		return nil, &TooLarge{n}
+	}
+	s := &Site{Outline: o, Graph: r.graph, segs: o.Segments, rounding: r}
+	s.Mesh, err = Build(pulse.Part(ctx, 0.3, 1), s.Graph)
 	return s, err
 }
 

@@ -5,6 +5,7 @@ import (
 	"fmt"
 
 	"enfilade/solver/exact"
+	"enfilade/solver/pulse"
 )
 
 // constrainAll forces every edge into the triangulation and restores the Delaunay property around it.
@@ -16,8 +17,8 @@ func (tr *Triangulation) constrainAll(ctx context.Context, edges [][2]int32) err
 		}
 	}
 	for k, e := range edges {
-		if k&1023 == 0 && ctx.Err() != nil {
-			return ctx.Err()
+		if err := pulse.Step(ctx, k, len(edges)); err != nil {
+			return err
 		}
 		if err := tr.constrain(e[0], e[1], int32(k)); err != nil {
 			return err

@@ -42,7 +42,7 @@ func TestEditorLaws(t *testing.T) {
 		if err != nil {
 			t.Fatal(err)
 		}
-		m := tr.Finish(make([]mesh.Tag, len(edges)), make([]mesh.Tag, tr.Len()))
+		m := finish(t, tr, len(edges))
 		held := map[[2]exact.Pt]bool{}
 		for _, e := range edges {
 			held[[2]exact.Pt{pts[e[0]], pts[e[1]]}] = true
@@ -160,7 +160,7 @@ func compare(t *testing.T, seed uint64, m *mesh.Mesh, index map[exact.Pt]int32, 
 	if err != nil {
 		t.Fatalf("seed %d: %v", seed, err)
 	}
-	want := shape(tr.Finish(make([]mesh.Tag, len(edges)), make([]mesh.Tag, tr.Len())))
+	want := shape(finish(t, tr, len(edges)))
 	if err := m.Check(); err != nil {
 		t.Fatalf("seed %d: %v", seed, err)
 	}

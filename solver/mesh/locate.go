@@ -1,6 +1,11 @@
 package mesh
 
-import "enfilade/solver/exact"
+import (
+	"context"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/pulse"
+)
 
 // grid is a uniform grid over the mesh; each cell names a triangle near its middle, so that a walk from there is short
 // whatever the size of the plan.
@@ -13,7 +18,7 @@ type grid struct {
 
 // makeGrid lays a grid of about half as many square cells as there are triangles. O(n) expected: the walk from one cell's
 // middle to the next is short.
-func makeGrid(m *Mesh) grid {
+func makeGrid(ctx context.Context, m *Mesh) (grid, error) {
 	lo, hi := m.Box()
 	w, h := int64(hi.X)-int64(lo.X), int64(hi.Y)-int64(lo.Y)
 	g := grid{lo: lo}
@@ -25,6 +30,9 @@ func makeGrid(m *Mesh) grid {
 	half := int32(1) << g.shiftX >> 1
 	t := int32(0)
 	for y := range g.ny {
+		if err := pulse.Step(ctx, int(y*g.nx), int(g.nx*g.ny)); err != nil {
+			return g, err
+		}
 		for k := range g.nx {
 			x := k
 			if y&1 == 1 {
@@ -35,7 +43,7 @@ func makeGrid(m *Mesh) grid {
 			g.near[y*g.nx+x] = t
 		}
 	}
-	return g
+	return g, nil
 }
 
 // Place is where a point lies in the mesh.

@@ -1,6 +1,11 @@
 package mesh
 
-import "enfilade/solver/exact"
+import (
+	"context"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/pulse"
+)
 
 // Ceiling is the height of what no eye sees over.
 const Ceiling int32 = 1<<31 - 1
@@ -79,20 +84,31 @@ func Inc(i int) int { return inc[i] }
 //
 //   - tags gives what each edge passed to Triangulate stops.
 //   - solid gives for each triangle of tr the height up to which it is solid, and whether nobody stands in it.
+//   - Errors: the context's when it is cancelled.
 //   - Cost: O(n), n the number of triangles.
-func (tr *Triangulation) Finish(tags []Tag, solid []Tag) *Mesh {
+func (tr *Triangulation) Finish(ctx context.Context, tags []Tag, solid []Tag) (*Mesh, error) {
 	order := tr.arrange()
+	if err := pulse.Tell(ctx, 0.3); err != nil {
+		return nil, err
+	}
 	m := &Mesh{Pts: tr.Pts, Tris: make([]Tri, len(order)), Steps: make([]Step, 3*len(order)), Solid: make([]int32, len(order)),
 		raw: tr, tags: tags}
 	for k, old := range order {
 		m.setSolid(int32(k), solid[old])
 	}
+	middle := pulse.Part(ctx, 0.3, 0.6)
 	for k := range m.Tris {
+		if err := pulse.Step(middle, k, len(m.Tris)); err != nil {
+			return nil, err
+		}
 		m.refresh(int32(k))
 	}
-	m.grid = makeGrid(m)
+	var err error
+	if m.grid, err = makeGrid(pulse.Part(ctx, 0.6, 0.9), m); err != nil {
+		return nil, err
+	}
 	m.turn = makeTurning(m)
-	return m
+	return m, pulse.Tell(ctx, 1)
 }
 
 // arrange puts the triangles in their final order, each with its first point in front, and returns their old indices.

@@ -88,6 +88,16 @@ func TestTriangulateStopsWhenCancelled(t *testing.T) {
 	}
 }
 
+// finish makes a mesh in which nothing stops anything.
+func finish(t *testing.T, tr *mesh.Triangulation, edges int) *mesh.Mesh {
+	t.Helper()
+	m, err := tr.Finish(context.Background(), make([]mesh.Tag, edges), make([]mesh.Tag, tr.Len()))
+	if err != nil {
+		t.Fatal(err)
+	}
+	return m
+}
+
 func TestLocate(t *testing.T) {
 	for seed := range uint64(40) {
 		r := rand.New(rand.NewPCG(seed, 2))
@@ -97,7 +107,7 @@ func TestLocate(t *testing.T) {
 		if err != nil {
 			t.Fatal(err)
 		}
-		m := tr.Finish(make([]mesh.Tag, len(edges)), make([]mesh.Tag, tr.Len()))
+		m := finish(t, tr, len(edges))
 		for range 300 {
 			p := exact.Pt{X: r.Int32N(side+10) - 5, Y: r.Int32N(side+10) - 5}
 			place, ok := m.Locate(p)

@@ -6,6 +6,7 @@ import (
 	"fmt"
 
 	"enfilade/solver/exact"
+	"enfilade/solver/pulse"
 )
 
 // Edge is a half-edge: triangle index times four plus the corner it starts at. It runs from that corner to the next one,
@@ -74,10 +75,10 @@ const margin = 10000
 //   - Cost: O(n log n) expected for the points; an edge costs time proportional to what it crosses.
 func Triangulate(ctx context.Context, pts []exact.Pt, edges [][2]int32) (*Triangulation, error) {
 	tr := &Triangulation{Pts: boxed(pts), box: int32(len(pts))}
-	if err := tr.insertAll(ctx, len(pts)); err != nil {
+	if err := tr.insertAll(pulse.Part(ctx, 0, 0.7), len(pts)); err != nil {
 		return nil, err
 	}
-	if err := tr.constrainAll(ctx, edges); err != nil {
+	if err := tr.constrainAll(pulse.Part(ctx, 0.7, 1), edges); err != nil {
 		return nil, err
 	}
 	return tr, nil
@@ -112,8 +113,8 @@ func (tr *Triangulation) insertAll(ctx context.Context, n int) error {
 	tr.curve = curveOrder(tr.Pts)
 	last := int32(0)
 	for i, p := range insertionOrder(tr.Pts[:n], tr.curve) {
-		if i&1023 == 0 && ctx.Err() != nil {
-			return ctx.Err()
+		if err := pulse.Step(ctx, i, n); err != nil {
+			return err
 		}
 		t, on, ok := tr.walk(last, tr.Pts[p])
 		if !ok {

@@ -9,6 +9,7 @@ import (
 
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
+	"enfilade/solver/pulse"
 	"enfilade/solver/sight"
 	"enfilade/solver/walk"
 )
@@ -31,7 +32,10 @@ func (s *Solver) Approaches(ctx context.Context, p *plan.Plan) ([]Approach, erro
 	}
 	targets := s.scene.findAll(p)
 	out := make([]Approach, 0, p.NumStarts()*p.NumTargets())
-	for _, start := range p.Starts() {
+	for i, start := range p.Starts() {
+		if err := pulse.Tell(ctx, float64(i)/float64(p.NumStarts())); err != nil {
+			return nil, err
+		}
 		rows, err := s.scene.fromStart(ctx, p, start, targets)
 		if err != nil {
 			return nil, err

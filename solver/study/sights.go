@@ -8,6 +8,7 @@ import (
 
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
+	"enfilade/solver/pulse"
 	"enfilade/solver/sight"
 )
 
@@ -32,8 +33,8 @@ func (s *Solver) SeenFrom(ctx context.Context, p *plan.Plan) ([]Sight, error) {
 	}
 	eye := p.Walker().Eye
 	out := make([]Sight, 0, p.NumTargets())
-	for _, t := range p.Targets() {
-		if err := ctx.Err(); err != nil {
+	for i, t := range p.Targets() {
+		if err := pulse.Tell(ctx, float64(i)/float64(p.NumTargets())); err != nil {
 			return nil, err
 		}
 		at := targetPoint(t)

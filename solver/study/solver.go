@@ -7,6 +7,7 @@ import (
 	"enfilade/solver/arrange"
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
+	"enfilade/solver/pulse"
 	"enfilade/solver/sight"
 	"enfilade/solver/walk"
 )
@@ -52,11 +53,15 @@ func (s *Solver) Mesh(ctx context.Context, p *plan.Plan) error {
 		return nil
 	}
 	outline, problems := arrange.Draw(p)
-	plain, err := s.groundFor(ctx, outline)
+	half := 1.0
+	if radius > 0 {
+		half = 0.3
+	}
+	plain, err := s.groundFor(pulse.Part(ctx, 0, half), outline)
 	if err != nil {
 		return err
 	}
-	sc, err := makeScene(ctx, plain, radius)
+	sc, err := makeScene(pulse.Part(ctx, half, 1), plain, radius)
 	if err != nil {
 		return err
 	}
@@ -116,18 +121,18 @@ func Solve(ctx context.Context, p *plan.Plan) (*Result, error) {
 
 // Solve studies everything in p, as the function Solve does.
 func (s *Solver) Solve(ctx context.Context, p *plan.Plan) (*Result, error) {
-	if err := s.Mesh(ctx, p); err != nil {
+	if err := s.Mesh(pulse.Part(ctx, 0, 0.5), p); err != nil {
 		return nil, err
 	}
 	r := &Result{WalkerEye: mm(p.Walker().Eye), WalkerRadius: mm(s.radius), RadiusExcess: s.scene.excess / exact.PerMM}
 	var err error
-	if r.Sight, err = s.Sights(ctx, p); err != nil {
+	if r.Sight, err = s.Sights(pulse.Part(ctx, 0.5, 0.55), p); err != nil {
 		return nil, err
 	}
-	if r.SeenFrom, err = s.SeenFrom(ctx, p); err != nil {
+	if r.SeenFrom, err = s.SeenFrom(pulse.Part(ctx, 0.55, 0.6), p); err != nil {
 		return nil, err
 	}
-	if r.Approaches, err = s.Approaches(ctx, p); err != nil {
+	if r.Approaches, err = s.Approaches(pulse.Part(ctx, 0.6, 1), p); err != nil {
 		return nil, err
 	}
 	r.Problems = s.Problems(p)
