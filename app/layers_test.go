@@ -43,7 +43,7 @@ var layers = map[string][]string{
 	"canvas/pick":   {"solver/exact", "solver/plan", "canvas/view"},
 	"canvas/tool":   {"solver/exact", "solver/plan", "canvas/view", "canvas/pick"},
 	"canvas/paint":  {"solver/exact", "solver/plan", "solver/arrange", "solver/study", "canvas/view", "assets"},
-	"canvas/raster": {"canvas/paint", "assets"},
+	"canvas/raster": {"solver/plan", "solver/study", "canvas/view", "canvas/paint", "assets"},
 
 	"fileio/planfile": {"solver/exact", "solver/plan"},
 	"fileio/report":   {"solver/exact", "solver/plan", "solver/study"},
