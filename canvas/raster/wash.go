@@ -12,7 +12,6 @@ type wash struct {
 	scale  float64               // table entries a squared pixel
 	table  [washSteps + 1]uint16 // strengths from 0 to 256
 	cached paint.WashStyle
-	a      uint32
 }
 
 const washSteps = 2048
