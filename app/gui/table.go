@@ -248,7 +248,7 @@ func (rowLayout) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(20
 
 // Layout is for the toolkit.
 func (rowLayout) Layout(o []fyne.CanvasObject, s fyne.Size) {
-	const side, firstWide, fullWide = 18, 62, 58
+	const side, firstWide, fullWide = 18, 58, 54
 	place := func(o fyne.CanvasObject, x, w float32) {
 		o.Move(fyne.NewPos(x, 0))
 		o.Resize(fyne.NewSize(w, s.Height))
