@@ -65,12 +65,28 @@ func (f *filler) fixed(x, y float32) fixed.Point26_6 {
 func (f *filler) fill(l *paint.List, op *paint.Op) {
 	for _, s := range l.Path(op) {
 		pts := l.Points[s.First:s.Last]
-		f.r.Start(f.fixed(pts[0].X, pts[0].Y))
-		for _, q := range pts[1:] {
-			f.r.Add1(f.fixed(q.X, q.Y))
+		for i, q := range pts {
+			f.side(pts[(i+len(pts)-1)%len(pts)], q)
 		}
-		f.r.Add1(f.fixed(pts[0].X, pts[0].Y))
 	}
+}
+
+// side adds one side of a closed path. The rasteriser walks each row's cells from the left to add one, so a long side to the
+// right that is almost level goes in pieces, the rightmost first; sides may come in any order.
+func (f *filler) side(a, b paint.Pt) {
+	const piece = 48
+	dx, dy := b.X-a.X, b.Y-a.Y
+	if dx > 2*piece && (dy < 0 && dx > -8*dy || dy > 0 && dx > 8*dy) {
+		for x := float32(int(dx/piece)) * piece; x >= 0; x -= piece {
+			q := paint.Pt{X: a.X + x, Y: a.Y + dy*x/dx}
+			f.r.Start(f.fixed(q.X, q.Y))
+			f.r.Add1(f.fixed(b.X, b.Y))
+			b = q
+		}
+		return
+	}
+	f.r.Start(f.fixed(a.X, a.Y))
+	f.r.Add1(f.fixed(b.X, b.Y))
 }
 
 // polygon adds a convex polygon, always in the same sense, so that the pieces of a stroke add up and never cancel.
@@ -80,15 +96,11 @@ func (f *filler) polygon(pts ...paint.Pt) {
 		a := pts[(i+len(pts)-1)%len(pts)]
 		area += (a.X-pts[0].X)*(b.Y-pts[0].Y) - (b.X-pts[0].X)*(a.Y-pts[0].Y)
 	}
-	n := len(pts)
-	first := f.fixed(pts[0].X, pts[0].Y)
-	f.r.Start(first)
-	for i := 1; i < n; i++ {
-		q := pts[i]
+	for i, b := range pts {
+		a := pts[(i+len(pts)-1)%len(pts)]
 		if area < 0 {
-			q = pts[n-i]
+			a, b = b, a
 		}
-		f.r.Add1(f.fixed(q.X, q.Y))
+		f.side(a, b)
 	}
-	f.r.Add1(first)
 }

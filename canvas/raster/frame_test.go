@@ -2,6 +2,7 @@ package raster_test
 
 import (
 	"context"
+	"image/color"
 	"os"
 	"testing"
 
@@ -177,6 +178,33 @@ func BenchmarkBase(b *testing.B) {
 			b.ReportAllocs()
 			for b.Loop() {
 				base.Draw(paint.Base(s), 1600, 1000)
+			}
+		})
+	}
+}
+
+// BenchmarkLevel is the worst the rasteriser meets: long lines that are almost level. It keeps a list of cells for each row
+// of pixels and walks it from the left for every cell it adds.
+func BenchmarkLevel(b *testing.B) {
+	const w, h = 1600, 1000
+	ring := []paint.Pt{{X: 30, Y: 100}, {X: 1580, Y: 101.3}, {X: 1585, Y: 900.2}, {X: 25, Y: 903.8}}
+	base := raster.NewBase(&paint.List{K: 1}, w, h)
+	for _, bench := range []struct {
+		name string
+		op   paint.Op
+	}{
+		{"solid", paint.Op{Kind: paint.Stroke, Style: 0}},
+		{"dashed", paint.Op{Kind: paint.Stroke, Style: 1}},
+		{"wash", paint.Op{Kind: paint.Wash}},
+	} {
+		bench.op.Subs, bench.op.Colour = [2]int32{0, 1}, color.NRGBA{A: 255}
+		l := &paint.List{K: 1, Points: ring, Subs: []paint.Sub{{Last: 4, Closed: true}}, Ops: []paint.Op{bench.op},
+			Strokes: []paint.StrokeStyle{{Width: 3.2}, {Width: 1.15, On: 6, Off: 4}},
+			Washes:  []paint.WashStyle{{Radius: 1000, Near: 0.2, Mid: 0.2, Far: 0.1, Rims: [2]float32{9, 4}, RimStrength: 0.1}}}
+		var f raster.Frame
+		b.Run(bench.name, func(b *testing.B) {
+			for b.Loop() {
+				f.Draw(base, l)
 			}
 		})
 	}
