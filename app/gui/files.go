@@ -59,7 +59,7 @@ func (w *window) show(load func()) {
 	w.results.reset(w.session.Rev() + 1)
 	load()
 	w.choose(0)
-	w.view.fit()
+	w.view.fitNow()
 	w.report()
 }
 

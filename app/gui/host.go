@@ -3,12 +3,9 @@ package gui
 import (
 	"fmt"
 
-	"github.com/paulmach/orb"
-
 	"enfilade/canvas/pick"
 	"enfilade/canvas/tool"
 	"enfilade/canvas/view"
-	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 )
 
@@ -60,16 +57,6 @@ func (w *window) unit() string { return w.session.Plan().Sheet().Unit }
 // place returns the pointer's place in device pixels of the picture.
 func (v *planView) place() (x, y float64) {
 	return float64(v.last.X * v.pix), float64(v.last.Y * v.pix)
-}
-
-// boundsOf returns the box around a plan in mm, empty when there is nothing in it.
-func boundsOf(p *plan.Plan) orb.Bound {
-	lo, hi, ok := plan.Bounds(p)
-	if !ok {
-		return orb.Bound{Min: orb.Point{1, 1}, Max: orb.Point{-1, -1}}
-	}
-	mm := func(q exact.Pt) orb.Point { return orb.Point{float64(q.X) / exact.PerMM, float64(q.Y) / exact.PerMM} }
-	return orb.Bound{Min: mm(lo), Max: mm(hi)}
 }
 
 // emptyPlan reports whether nothing is drawn and nothing put down.

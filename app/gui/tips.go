@@ -10,8 +10,11 @@ import (
 	"enfilade/assets"
 )
 
-// tipDelay is how long the pointer rests on a thing before its name is shown.
-const tipDelay = 600 * time.Millisecond
+// How long the pointer rests on a button, or on an item of the plan, before its name is shown.
+const (
+	tipDelay  = 600 * time.Millisecond
+	nameDelay = 300 * time.Millisecond
+)
 
 // tips shows one small line of text near the pointer, on a layer over the window that takes no events.
 type tips struct {
@@ -30,10 +33,10 @@ func newTips(do func(func())) *tips {
 	return t
 }
 
-// after shows text below the object when the pointer has rested on it.
-func (t *tips) after(text string, at func() fyne.Position) {
+// after shows text at a place when the pointer has rested for a while.
+func (t *tips) after(delay time.Duration, text string, at func() fyne.Position) {
 	t.hide()
-	t.timer = time.AfterFunc(tipDelay, func() { t.do(func() { t.show(text, at()) }) })
+	t.timer = time.AfterFunc(delay, func() { t.do(func() { t.show(text, at()) }) })
 }
 
 func (t *tips) show(text string, at fyne.Position) {

@@ -51,7 +51,7 @@ func (b *toolButton) Tapped(*fyne.PointEvent) { b.tips.hide(); b.tapped() }
 // MouseIn tints the button and shows its name after a while.
 func (b *toolButton) MouseIn(*desktop.MouseEvent) {
 	b.hovered = true
-	b.tips.after(b.tip, func() fyne.Position {
+	b.tips.after(tipDelay, b.tip, func() fyne.Position {
 		return fyne.CurrentApp().Driver().AbsolutePositionForObject(b).AddXY(toolWidth+8, 7)
 	})
 	b.Refresh()

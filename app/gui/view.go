@@ -9,6 +9,7 @@ import (
 	"fyne.io/fyne/v2/driver/desktop"
 	"fyne.io/fyne/v2/widget"
 
+	"enfilade/canvas/paint"
 	"enfilade/canvas/tool"
 	"enfilade/canvas/view"
 )
@@ -23,6 +24,7 @@ type planView struct {
 	ring   *canvas.Rectangle // keyboard focus, on the inner edge
 
 	cam    view.Camera
+	glide  glide
 	fitted bool    // the camera follows the window's size until someone moves it
 	pix    float32 // device pixels per unit of the toolkit, from the last drawing
 	ringed bool    // the focus came by Tab, so its ring is shown
@@ -169,18 +171,32 @@ func (v *planView) Scrolled(e *fyne.ScrollEvent) {
 
 // zoom magnifies about a place of the toolkit.
 func (v *planView) zoom(p fyne.Position, factor float64) {
-	v.look(v.cam.ZoomAt(float64(p.X*v.pix), float64(p.Y*v.pix), factor))
+	v.fitted = false
+	v.glide.to(v.cam, v.glide.from(v.cam).ZoomAt(float64(p.X*v.pix), float64(p.Y*v.pix), factor), v.see)
 }
 
-// look moves the camera for good: from now on it does not follow the window's size.
-func (v *planView) look(c view.Camera) {
-	v.fitted = false
+// see shows what a camera sees.
+func (v *planView) see(c view.Camera) {
 	v.cam = c
 	v.w.acted()
 }
 
+// look moves the camera for good: from now on it does not follow the window's size.
+func (v *planView) look(c view.Camera) {
+	v.glide.stop()
+	v.fitted = false
+	v.see(c)
+}
+
 // fit shows the whole plan, and does so again when the window's size changes.
 func (v *planView) fit() {
+	v.fitted = true
+	v.glide.to(v.cam, view.Fit(paint.Bounds(v.w.session.Plan()), v.cam.W, v.cam.H, v.cam.K), v.see)
+}
+
+// fitNow is fit at once, for another plan.
+func (v *planView) fitNow() {
+	v.glide.stop()
 	v.fitted = true
 	v.resized(v.cam.W, v.cam.H, v.pix)
 	v.w.acted()
@@ -189,8 +205,9 @@ func (v *planView) fit() {
 // resized takes over the size of the picture in device pixels.
 func (v *planView) resized(w, h int, pix float32) {
 	v.pix = pix
+	v.glide.stop()
 	if v.fitted {
-		v.cam = view.Fit(boundsOf(v.w.session.Plan()), w, h, float64(pix))
+		v.cam = view.Fit(paint.Bounds(v.w.session.Plan()), w, h, float64(pix))
 		return
 	}
 	v.cam = v.cam.Resize(w, h, float64(pix))

@@ -108,7 +108,7 @@ func (w *window) build() {
 // sideColumn is the right column: the selection above, the approaches below, their share draggable.
 func (w *window) sideColumn() *fyne.Container {
 	split := container.NewVSplit(w.form.box, w.table.box)
-	split.SetOffset(0.52)
+	split.SetOffset(0.47)
 	return container.NewStack(newPaper(rolePanel), around(nil, nil, hairline(), nil, split))
 }
 
@@ -157,7 +157,11 @@ func (w *window) changed(rev uint64, p *plan.Plan) {
 // acted brings the window up to date after anything that may have changed what it shows.
 func (w *window) acted() {
 	p := w.session.Plan()
+	hovered := w.sketch.Hover
 	w.sketch = w.tool.Sketch(w.host)
+	if w.sketch.Hover != hovered {
+		w.nameHovered()
+	}
 	w.results.follow(w.session, w.sketch)
 	w.first.showIf(emptyPlan(p) && len(w.sketch.Band) == 0 && w.sketch.Handles == nil && !w.session.Previewing())
 	w.view.over.show(w.sketch, w.view.cam, w.view.pix)
@@ -170,6 +174,37 @@ func (w *window) acted() {
 	w.table.update()
 	w.foot.update(w)
 	w.title()
+}
+
+// nameHovered shows the name of the item under the pointer after a while.
+func (w *window) nameHovered() {
+	name := itemName(w.session.Plan(), w.sketch.Hover)
+	if name == "" {
+		w.tips.hide()
+		return
+	}
+	w.tips.after(nameDelay, name, func() fyne.Position {
+		return w.app.Driver().AbsolutePositionForObject(w.view).Add(w.view.last).AddXY(14, 18)
+	})
+}
+
+// itemName is what people call an item, empty for what they gave no name.
+func itemName(p *plan.Plan, r plan.Ref) string {
+	switch r.Kind {
+	case plan.KindObserver:
+		o, _ := p.Observer(r.ID)
+		return o.Name
+	case plan.KindTarget:
+		t, _ := p.Target(r.ID)
+		return t.Name
+	case plan.KindStart:
+		s, _ := p.Start(r.ID)
+		return s.Name
+	case plan.KindZone:
+		z, _ := p.Zone(r.ID)
+		return z.Name
+	}
+	return ""
 }
 
 // title names the plan and says whether it has unsaved changes.

@@ -100,7 +100,7 @@ func (t *Door) Sketch(h Host) Sketch {
 	}
 	d := exact.Dist(t.place.A, t.place.B)
 	at := along(t.place.A, t.place.B, float64(t.place.Along)/d)
-	s.Snap = &pick.Snap{At: at, Kind: pick.SnapAlong, Edge: [2]exact.Pt{t.place.A, t.place.B}}
+	s.Snap = &pick.Snap{At: at, Kind: pick.SnapAlong, Ref: plan.Ref{Kind: plan.KindWall, ID: t.place.Wall}, Edge: [2]exact.Pt{t.place.A, t.place.B}}
 	s.Dragged = []plan.Ref{{Kind: plan.KindWall, ID: t.place.Wall}}
 	if ref, ok := added(h, t.edit); ok {
 		s.Dragged = append(s.Dragged, ref)
