@@ -56,7 +56,7 @@ func (sc *scene) findAll(p *plan.Plan) []sought {
 }
 
 func (sc *scene) find(t plan.Target, eye int32) sought {
-	f := sc.stand(targetPoint(t), sc.plain.blindAt(eye))
+	f := sc.stand(targetPoint(t), sc.plain.sighted(eye))
 	k := sought{target: t, at: f.at}
 	if !f.ok {
 		k.fault = "target " + t.ID + " " + f.text
@@ -72,7 +72,7 @@ func (sc *scene) find(t plan.Target, eye int32) sought {
 	k.cones = sc.cones[n:len(sc.cones):len(sc.cones)]
 	k.stood = sc.wide.free(f.at, sc.wide.shut)
 	if !sc.plain.free(f.at, sc.plain.shut) {
-		k.closed = "the target stands in " + nameOf(sc.plain.holder(f.at, sc.plain.shut)) + ", where nobody walks"
+		k.closed = "the target stands in " + nameOf(sc.plain.holder(f.at, sc.plain.standing().by)) + ", where nobody walks"
 	}
 	return k
 }

@@ -1,7 +1,9 @@
 package study
 
 import (
+	"cmp"
 	"fmt"
+	"slices"
 
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
@@ -15,7 +17,7 @@ import (
 type barrierFinder struct {
 	scene *scene
 	start exact.Pt
-	first []int32 // for each triangle the graph edge crossed first on the way there, -1 for none, -2 for not reached
+	first []int32 // for each triangle the item crossed first on the way there, -1 for none, -2 for not reached
 }
 
 // unreached marks a triangle that no way leads to.
@@ -36,6 +38,8 @@ func (b *barrierFinder) search() {
 	})
 	for len(now) > 0 || len(later) > 0 {
 		if len(now) == 0 {
+			// Of several ways that cross equally little, the one over the item that comes first in the plan is told.
+			slices.SortFunc(later, func(a, b step) int { return cmp.Compare(b.first, a.first) })
 			now, later = later, now
 		}
 		s := now[len(now)-1]
@@ -59,7 +63,7 @@ func (b *barrierFinder) search() {
 				continue
 			}
 			if next.first < 0 {
-				next.first = con
+				next.first = b.scene.wide.graph.Edges[con].Item
 			}
 			later = append(later, next)
 		}
@@ -106,13 +110,12 @@ func (b *barrierFinder) beforePoint(p exact.Pt) string {
 	return ""
 }
 
-func (b *barrierFinder) says(edge int32) string {
-	if edge == unreached {
+func (b *barrierFinder) says(item int32) string {
+	if item == unreached {
 		return "no way leads there"
 	}
-	if edge < 0 {
+	if item < 0 {
 		return fmt.Sprintf("every way there is too narrow for a body of radius %.0f mm", mm(b.scene.radius))
 	}
-	g := b.scene.wide
-	return nameOf(g.outline.Items[g.graph.Edges[edge].Item]) + " closes the way"
+	return nameOf(b.scene.wide.outline.Items[item]) + " closes the way"
 }

@@ -23,14 +23,14 @@ type footing struct {
 // near is how deep inside a face a mark may lie and still be moved to the face's free side, in grid units: 1 mm.
 const near = 1 * exact.PerMM
 
-// stand finds a footing on the plain ground for a mark at p: p itself when some triangle that holds it is not shut; else the
+// stand finds a footing on the plain ground for a mark at p: p itself when some triangle that holds it gives what d asks for; else the
 // nearest grid point less than 1 mm away of which that is true.
-func (sc *scene) stand(p exact.Pt, shut func(int32) bool) footing {
-	if sc.plain.free(p, shut) {
+func (sc *scene) stand(p exact.Pt, d demand) footing {
+	if sc.plain.free(p, d.shut) {
 		return footing{at: p, ok: true}
 	}
-	for _, d := range nearby {
-		if q := p.Add(d); sc.plain.free(q, shut) {
+	for _, v := range nearby {
+		if q := p.Add(v); sc.plain.free(q, d.shut) {
 			return footing{at: q, ok: true}
 		}
 	}
@@ -39,14 +39,14 @@ func (sc *scene) stand(p exact.Pt, shut func(int32) bool) footing {
 		f.text = "lies outside the floor; move it inside"
 		return f
 	}
-	f.item = sc.plain.holder(p, shut)
+	f.item = sc.plain.holder(p, d.by)
 	f.text = fmt.Sprintf("is inside %s; move it out, or lower what it stands in", nameOf(f.item))
 	return f
 }
 
 // begin finds a footing for a walk's start. Where only the walker's body is in the way, it is told how far standing room is.
 func (sc *scene) begin(p exact.Pt) footing {
-	f := sc.stand(p, sc.plain.shut)
+	f := sc.stand(p, sc.plain.standing())
 	if !f.ok || sc.wide.free(f.at, sc.wide.shut) {
 		return f
 	}

@@ -30,9 +30,20 @@ func makeGround(ctx context.Context, o *arrange.Outline) (*ground, error) {
 
 func groundOf(s *arrange.Site) *ground { return &ground{s, s.Outline, s.Graph, s.Mesh} }
 
-// blindAt says of a triangle whether it is solid at the height of an eye.
-func (g *ground) blindAt(eye int32) func(tri int32) bool {
-	return func(tri int32) bool { return g.mesh.Solid[tri] >= eye }
+// demand is what a mark asks of the place it stands at.
+type demand struct {
+	shut func(tri int32) bool     // whether a triangle does not give it
+	by   func(arrange.Stops) bool // whether a body takes it away
+}
+
+// sighted asks for a place that is not solid at the height of an eye.
+func (g *ground) sighted(eye int32) demand {
+	return demand{func(tri int32) bool { return g.mesh.Solid[tri] >= eye }, func(s arrange.Stops) bool { return s.Top >= eye }}
+}
+
+// standing asks for a place on which someone can stand.
+func (g *ground) standing() demand {
+	return demand{g.shut, func(s arrange.Stops) bool { return s.Walk }}
 }
 
 // shut says of a triangle whether nobody stands in it.
@@ -62,32 +73,41 @@ func (g *ground) holding(p exact.Pt, do func(tri int32)) {
 	}
 }
 
-// holder returns the item whose outline lies nearest, counted in triangles, around the solid place p.
-func (g *ground) holder(p exact.Pt, shut func(int32) bool) plan.Ref {
-	place, ok := g.mesh.Locate(p)
-	if !ok {
-		return plan.Ref{Kind: plan.KindFloor}
-	}
-	queue, seen := []int32{place.Tri}, map[int32]bool{place.Tri: true}
-	for len(queue) > 0 {
-		t := queue[0]
-		queue = queue[1:]
-		for i := range 3 {
-			e := mesh.EdgeOf(t, i)
-			n := g.mesh.Twin(e)
-			if n == mesh.None {
+// holder returns the item, the first in the plan, of the bodies that wind about the solid place p and stop what stops says,
+// by the crossings of a ray to the right with the rounded graph. O(n).
+func (g *ground) holder(p exact.Pt, stops func(arrange.Stops) bool) plan.Ref {
+	wind := make([]int32, len(g.graph.Bodies))
+	for i := range g.mesh.Tris {
+		for k := range 3 {
+			e := mesh.EdgeOf(int32(i), k)
+			con := g.mesh.Constraint(e)
+			if con < 0 {
 				continue
 			}
-			if con := g.mesh.Constraint(e); con >= 0 && !shut(n.Tri()) {
-				return g.outline.Items[g.graph.Edges[con].Item]
+			a, b := g.mesh.Ends(e)
+			if !(a.Y <= p.Y && b.Y > p.Y && exact.Orient(a, b, p) > 0) {
+				continue // the half-edges that lead up; their twins lead down
 			}
-			if !seen[n.Tri()] {
-				seen[n.Tri()] = true
-				queue = append(queue, n.Tri())
+			edge := &g.graph.Edges[con]
+			sign := int32(1)
+			if g.mesh.Pts[edge.A] != a {
+				sign = -1
+			}
+			for _, w := range g.graph.Winds[edge.Wind0:edge.Wind1] {
+				wind[w.Body] += sign * w.Delta
 			}
 		}
 	}
-	return plan.Ref{Kind: plan.KindFloor}
+	best := int32(-1)
+	for i, b := range g.graph.Bodies {
+		if i > 0 && wind[i] != 0 && stops(b.Stops) && (best < 0 || b.Item < best) {
+			best = b.Item
+		}
+	}
+	if best < 0 {
+		return plan.Ref{Kind: plan.KindFloor}
+	}
+	return g.outline.Items[best]
 }
 
 // roomNear returns the distance from p to the nearest place on which the walker can stand, +Inf if there is none. It looks

@@ -39,7 +39,7 @@ func (s *Solver) SeenFrom(ctx context.Context, p *plan.Plan) ([]Sight, error) {
 		}
 		at := targetPoint(t)
 		e := Sight{Item: plan.Ref{Kind: plan.KindTarget, ID: t.ID}, Name: t.Name, At: pointMM(at), Eye: mm(eye)}
-		f := s.scene.stand(at, s.scene.plain.blindAt(eye))
+		f := s.scene.stand(at, s.scene.plain.sighted(eye))
 		if !f.ok {
 			e.Problem = f.text
 		} else {
@@ -53,7 +53,7 @@ func (s *Solver) SeenFrom(ctx context.Context, p *plan.Plan) ([]Sight, error) {
 // observed returns what one observer sees.
 func (sc *scene) observed(p *plan.Plan, o plan.Observer) Sight {
 	e := Sight{Item: plan.Ref{Kind: plan.KindObserver, ID: o.ID}, Name: o.Name, At: pointMM(o.At), Eye: mm(o.Eye)}
-	f := sc.stand(o.At, sc.plain.blindAt(o.Eye))
+	f := sc.stand(o.At, sc.plain.sighted(o.Eye))
 	if !f.ok {
 		e.Problem = f.text
 		return e
@@ -71,7 +71,7 @@ func (sc *scene) observed(p *plan.Plan, o plan.Observer) Sight {
 		return e
 	}
 	for _, t := range p.Targets() {
-		tf := sc.stand(targetPoint(t), sc.plain.blindAt(o.Eye))
+		tf := sc.stand(targetPoint(t), sc.plain.sighted(o.Eye))
 		if tf.ok && inFront(t, f.at) && sc.sight.SeesWithin(f.at, tf.at, o.Eye, clip) {
 			e.TargetsSeen = append(e.TargetsSeen, t.ID)
 		}

@@ -144,11 +144,11 @@ func (s *Solver) Solve(ctx context.Context, p *plan.Plan) (*Result, error) {
 func (s *Solver) Problems(p *plan.Plan) []plan.Problem {
 	all := append([]plan.Problem(nil), s.scene.problems...)
 	for _, o := range p.Observers() {
-		all = s.scene.tell(all, plan.Ref{Kind: plan.KindObserver, ID: o.ID}, o.At, s.scene.stand(o.At, s.scene.plain.blindAt(o.Eye)))
+		all = s.scene.tell(all, plan.Ref{Kind: plan.KindObserver, ID: o.ID}, o.At, s.scene.stand(o.At, s.scene.plain.sighted(o.Eye)))
 	}
 	for _, t := range p.Targets() {
 		at := targetPoint(t)
-		all = s.scene.tell(all, plan.Ref{Kind: plan.KindTarget, ID: t.ID}, at, s.scene.stand(at, s.scene.plain.blindAt(p.Walker().Eye)))
+		all = s.scene.tell(all, plan.Ref{Kind: plan.KindTarget, ID: t.ID}, at, s.scene.stand(at, s.scene.plain.sighted(p.Walker().Eye)))
 	}
 	for _, t := range p.Starts() {
 		all = s.scene.tell(all, plan.Ref{Kind: plan.KindStart, ID: t.ID}, t.At, s.scene.begin(t.At))
