@@ -179,15 +179,18 @@ func (f *Finder) mark(t int32, k mark) {
 }
 
 // eachCorner calls do for every triangle that holds p.
-func (f *Finder) eachCorner(p exact.Pt, do func(tri int32)) {
-	place, ok := f.m.Locate(p)
+func (f *Finder) eachCorner(p exact.Pt, do func(tri int32)) { holders(f.m, p, do) }
+
+// holders calls do for every triangle of m that holds p.
+func holders(m *mesh.Mesh, p exact.Pt, do func(tri int32)) {
+	place, ok := m.Locate(p)
 	switch {
 	case !ok:
 	case place.Corner >= 0:
-		f.m.Around(mesh.EdgeOf(place.Tri, place.Corner), func(e mesh.Edge) { do(e.Tri()) })
+		m.Around(mesh.EdgeOf(place.Tri, place.Corner), func(e mesh.Edge) { do(e.Tri()) })
 	case place.Edge != mesh.None:
 		do(place.Tri)
-		if twin := f.m.Twin(place.Edge); twin != mesh.None {
+		if twin := m.Twin(place.Edge); twin != mesh.None {
 			do(twin.Tri())
 		}
 	default:

@@ -31,10 +31,10 @@ func (f *Finder) meetGoals(n, t int32, r, l exact.Vec, key float64) {
 
 // clipper cuts convex polygons given by the lines of their edges. Its buffers make it free of allocation.
 type clipper struct {
-	line [7]exact.Line
-	ring []uint8 // indices into line, counter-clockwise
+	line []exact.Line
+	ring []int32 // indices into line, counter-clockwise
 	side []int
-	next []uint8
+	next []int32
 }
 
 // nearest returns the point nearest to root, as an offset from it, of the part of triangle t between the directions r and l
@@ -43,14 +43,10 @@ type clipper struct {
 // Every corner of the part is where two of at most seven lines meet, and on which side of a third line it lies is decided
 // exactly; only the distance is measured.
 func (c *clipper) nearest(t *mesh.Tri, root exact.Pt, r, l exact.Vec, eye exact.Pt, sr, sl exact.Vec) ([2]float64, bool) {
-	for i := range 3 {
-		c.line[i] = exact.Through(t.P[i], t.P[inc[i]])
-	}
-	c.line[3] = exact.Line{At: root, Dir: r}
-	c.line[4] = exact.Line{At: root, Dir: l.Neg()}
-	c.line[5] = exact.Line{At: eye, Dir: sr}
-	c.line[6] = exact.Line{At: eye, Dir: sl.Neg()}
-	if !c.cutTriangle(7) {
+	c.begin(t)
+	c.addCone(root, r, l)
+	c.addCone(eye, sr, sl)
+	if !c.cutTriangle() {
 		return [2]float64{}, false
 	}
 	spot := c.closest(root)
@@ -61,22 +57,32 @@ func (c *clipper) nearest(t *mesh.Tri, root exact.Pt, r, l exact.Vec, eye exact.
 // nearestSeen returns the point nearest to eye of the part of triangle t between the directions r and l from it. It reports
 // false when that part has no inside.
 func (c *clipper) nearestSeen(t *mesh.Tri, eye exact.Pt, r, l exact.Vec) (Spot, bool) {
-	for i := range 3 {
-		c.line[i] = exact.Through(t.P[i], t.P[inc[i]])
-	}
-	c.line[3] = exact.Line{At: eye, Dir: r}
-	c.line[4] = exact.Line{At: eye, Dir: l.Neg()}
-	if !c.cutTriangle(5) {
+	c.begin(t)
+	c.addCone(eye, r, l)
+	if !c.cutTriangle() {
 		return Spot{}, false
 	}
 	return c.closest(eye), true
 }
 
-// cutTriangle cuts the triangle of the first three lines by the others up to n, and reports whether an inside is left.
-func (c *clipper) cutTriangle(n uint8) bool {
+// begin takes the lines of a triangle's edges as the first three.
+func (c *clipper) begin(t *mesh.Tri) {
+	c.line = c.line[:0]
+	for i := range 3 {
+		c.line = append(c.line, exact.Through(t.P[i], t.P[inc[i]]))
+	}
+}
+
+// addCone adds the lines of a cone from r to l, less than half a turn.
+func (c *clipper) addCone(at exact.Pt, r, l exact.Vec) {
+	c.line = append(c.line, exact.Line{At: at, Dir: r}, exact.Line{At: at, Dir: l.Neg()})
+}
+
+// cutTriangle cuts the triangle of the first three lines by the others, and reports whether an inside is left.
+func (c *clipper) cutTriangle() bool {
 	c.ring = append(c.ring[:0], 0, 1, 2)
-	for k := uint8(3); k < n; k++ {
-		if !c.cut(k) {
+	for k := 3; k < len(c.line); k++ {
+		if !c.cut(int32(k)) {
 			return false
 		}
 	}
@@ -84,7 +90,7 @@ func (c *clipper) cutTriangle(n uint8) bool {
 }
 
 // cut keeps the part of the polygon to the left of line k, and reports whether it has an inside.
-func (c *clipper) cut(k uint8) bool {
+func (c *clipper) cut(k int32) bool {
 	n := len(c.ring)
 	c.side = c.side[:0]
 	some, none := false, true
@@ -136,9 +142,9 @@ func nearestAlong(l, a, b exact.Line, p exact.Pt) Spot {
 	foot := Spot{On: l, Num: p.Sub(l.At).Dot(l.Dir), Den: l.Dir.Len2()}
 	from, to := meeting(l, a), meeting(l, b)
 	switch {
-	case exact.CompareFractions(foot.Num, foot.Den, from.Num, from.Den) <= 0:
+	case exact.CompareFractions(foot.Num, foot.Den, from.Num, from.Den) < 0:
 		return from
-	case exact.CompareFractions(foot.Num, foot.Den, to.Num, to.Den) >= 0:
+	case exact.CompareFractions(foot.Num, foot.Den, to.Num, to.Den) > 0:
 		return to
 	}
 	return foot

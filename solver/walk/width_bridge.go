@@ -1,0 +1,142 @@
+package walk
+
+import (
+	"enfilade/solver/exact"
+	"enfilade/solver/mesh"
+	"enfilade/solver/sight"
+)
+
+// bridge leads from triangles of the plain mesh to cells, and remembers those that lie in one cell.
+type bridge struct {
+	cell  []int32 // for each plain triangle its only cell, or one of the constants below
+	seen  []int32 // for each lean triangle the last search that saw it
+	round int32
+	stack []int32
+	found []int32 // the lean triangles that share floor with a plain one
+}
+
+const (
+	notAsked int32 = -1
+	several  int32 = -2
+)
+
+func newBridge(plain, lean *mesh.Mesh) bridge {
+	b := bridge{cell: make([]int32, len(plain.Tris)), seen: make([]int32, len(lean.Tris))}
+	fill(b.cell, notAsked)
+	return b
+}
+
+// cellsAt appends the cells that hold p, on whatever side of a wall.
+func (w *Widths) cellsAt(dst []int32, p exact.Pt) []int32 {
+	holders(w.m, p, func(t int32) {
+		if w.m.Tris[t].Flags&mesh.FlagNoWalk != 0 {
+			return
+		}
+		w.visited = w.holding(w.visited[:0], t, p)
+		for _, piece := range w.visited {
+			dst = append(dst, w.cell[piece])
+		}
+	})
+	return dst
+}
+
+// cellsWithin appends the cells that share floor with a cone.
+func (w *Widths) cellsWithin(dst []int32, eye exact.Pt, c sight.Cone) []int32 {
+	if cell := w.bridge.cell[c.Tri]; cell >= 0 {
+		return append(dst, cell)
+	}
+	w.overlaps(c.Tri)
+	if w.bridge.cell[c.Tri] == notAsked {
+		if w.bridge.cell[c.Tri] = w.onlyCell(); w.bridge.cell[c.Tri] >= 0 {
+			return append(dst, w.bridge.cell[c.Tri])
+		}
+	}
+	for _, u := range w.bridge.found {
+		dst = w.sharing(dst, u, w.root[u], c.Tri, func() { w.clip.addCone(eye, c.R, c.L) })
+	}
+	return dst
+}
+
+// overlaps finds the lean triangles that share floor with plain triangle t: those around one of its corners, and from there
+// on through edges, since a triangle hangs together.
+func (w *Widths) overlaps(t int32) {
+	b := &w.bridge
+	b.round++
+	b.found, b.stack = b.found[:0], b.stack[:0]
+	look := func(u int32) {
+		if b.seen[u] == b.round {
+			return
+		}
+		b.seen[u] = b.round
+		if w.m.Tris[u].Flags&mesh.FlagNoWalk == 0 && w.shares(u, t) {
+			b.found = append(b.found, u)
+			b.stack = append(b.stack, u)
+		}
+	}
+	holders(w.m, w.plain.Tris[t].P[0], look)
+	for len(b.stack) > 0 {
+		u := b.stack[len(b.stack)-1]
+		b.stack = b.stack[:len(b.stack)-1]
+		for i := range 3 {
+			if tri := &w.m.Tris[u]; !tri.StopsWalk(i) {
+				look(tri.N[i].Tri())
+			}
+		}
+	}
+}
+
+// shares reports whether lean triangle u and plain triangle t have more than a border in common.
+func (w *Widths) shares(u, t int32) bool {
+	w.clip.begin(&w.m.Tris[u])
+	w.clip.addTriangle(&w.plain.Tris[t])
+	return w.clip.cutTriangle()
+}
+
+// onlyCell returns the one cell that all found triangles lie in, or several.
+func (w *Widths) onlyCell() int32 {
+	only := notAsked
+	for _, u := range w.bridge.found {
+		node := w.root[u]
+		if node >= 0 || only >= 0 && w.cell[^node] != only {
+			return several
+		}
+		only = w.cell[^node]
+	}
+	return only
+}
+
+// sharing appends the cells of those pieces of lean triangle u under a node that share floor with plain triangle t and with
+// what more is asked for.
+func (w *Widths) sharing(dst []int32, u, node, t int32, more func()) []int32 {
+	var sides []exact.Line
+	var descend func(node int32)
+	descend = func(node int32) {
+		if node < 0 {
+			w.clip.begin(&w.m.Tris[u])
+			w.clip.addTriangle(&w.plain.Tris[t])
+			more()
+			w.clip.line = append(w.clip.line, sides...)
+			if w.clip.cutTriangle() {
+				dst = append(dst, w.cell[^node])
+			}
+			return
+		}
+		c := &w.cuts[node]
+		l := w.gaps[c.gap].line()
+		n := len(sides)
+		sides = append(sides, exact.Line{At: l.At, Dir: l.Dir.Neg()})
+		descend(c.right)
+		sides = append(sides[:n], l)
+		descend(c.left)
+		sides = sides[:n]
+	}
+	descend(node)
+	return dst
+}
+
+// addTriangle adds the lines of another triangle's edges.
+func (c *clipper) addTriangle(t *mesh.Tri) {
+	for i := range 3 {
+		c.line = append(c.line, exact.Through(t.P[i], t.P[inc[i]]))
+	}
+}
