@@ -26,6 +26,7 @@ type Finder struct {
 	cones  []Cone
 	keep   bool // keep the cones
 	count  int
+	faces  faceBuffers
 }
 
 // New returns a finder for m.

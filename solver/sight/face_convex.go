@@ -1,0 +1,95 @@
+package sight
+
+import (
+	"enfilade/solver/exact"
+	"enfilade/solver/mesh"
+)
+
+// MaxLines is how many lines may bound a piece besides the edges of its triangle: a whole face seen through a window of it
+// takes four, a viewing angle and two distances four more.
+const MaxLines = 8
+
+// Piece is a convex part of a triangle: what of it lies to the left of N lines.
+type Piece struct {
+	Tri   int32
+	N     uint8
+	Clip  uint8 // bit i says that Lines[i] is a side of the view or a limit of distance
+	Lines [MaxLines]exact.Line
+}
+
+// add narrows the piece to the left of l; clip says that l is a side of the view or a limit of distance.
+func (p *Piece) add(l exact.Line, clip bool) {
+	p.Lines[p.N] = l
+	if clip {
+		p.Clip |= 1 << p.N
+	}
+	p.N++
+}
+
+// Convex is a convex polygon given by the lines of its edges, cut exactly by one line after another. Its corners are where
+// neighbouring lines meet; they are never computed, only the side of a further line on which they lie is decided. It keeps its
+// buffers, so a warm one does not allocate.
+type Convex struct {
+	lines []exact.Line
+	ring  []uint8 // indices into lines, counter-clockwise, each line once
+	side  []int
+	next  []uint8
+}
+
+// Start makes the polygon triangle t.
+func (c *Convex) Start(t *mesh.Tri) {
+	c.lines = append(c.lines[:0], exact.Through(t.P[0], t.P[1]), exact.Through(t.P[1], t.P[2]), exact.Through(t.P[2], t.P[0]))
+	c.ring = append(c.ring[:0], 0, 1, 2)
+}
+
+// Cut keeps the part to the left of l, and reports whether it has an inside. After it has not, the polygon must be started
+// again.
+func (c *Convex) Cut(l exact.Line) bool {
+	k := uint8(len(c.lines))
+	c.lines = append(c.lines, l)
+	n := len(c.ring)
+	c.side = c.side[:0]
+	some, none := false, true
+	for i, e := range c.ring { // side[i] belongs to the corner between edge i and the next
+		s := exact.SideOfMeet(c.lines[e], c.lines[c.ring[(i+1)%n]], l)
+		c.side = append(c.side, s)
+		some = some || s > 0
+		none = none && s >= 0
+	}
+	if !some || none {
+		return some
+	}
+	c.next = c.next[:0]
+	for i, e := range c.ring {
+		from, to := c.side[(i+n-1)%n], c.side[i]
+		if from <= 0 && to <= 0 {
+			continue
+		}
+		c.next = append(c.next, e)
+		if to <= 0 { // the polygon leaves the half-plane along this edge and goes on along the line
+			c.next = append(c.next, k)
+		}
+	}
+	c.ring, c.next = c.next, c.ring
+	return true
+}
+
+// Take makes the polygon piece p of triangle t, and reports whether it has an inside.
+func (c *Convex) Take(t *mesh.Tri, p *Piece) bool {
+	c.Start(t)
+	for _, l := range p.Lines[:p.N] {
+		if !c.Cut(l) {
+			return false
+		}
+	}
+	return true
+}
+
+// Len returns the number of edges.
+func (c *Convex) Len() int { return len(c.ring) }
+
+// Line returns the line of edge i, the polygon to its left; i may be one too small or too large.
+func (c *Convex) Line(i int) exact.Line { return c.lines[c.ring[(i+len(c.ring))%len(c.ring)]] }
+
+// Source says which line edge i lies on: 0 to 2 for the edges of the triangle, then the cuts in order.
+func (c *Convex) Source(i int) int { return int(c.ring[i]) }
