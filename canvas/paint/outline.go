@@ -6,6 +6,7 @@ import (
 
 // outlines draws a line about what is under the pointer and about what is selected, a few px outside of it.
 func (p *pen) outlines() {
+	p.zoneOutlines()
 	if h := p.s.Hover; h.ID != "" && !p.s.selected(h) {
 		m := p.begin()
 		p.outlineOf(h, HoverOffset)
@@ -37,11 +38,26 @@ func (p *pen) outlineOf(ref plan.Ref, off float64) {
 		if s, ok := p.s.Plan.Start(ref.ID); ok && !s.Hidden && p.shows(p.mat(s)) {
 			p.roundRect(p.turtleAt(p.mat(s), p.startHeading(s)), MatWidth+2*off+1.3, MatLength+2*off+1.3, 2+off)
 		}
-	case plan.KindZone:
-		p.outlineZone(ref)
 	case plan.KindFloor:
 		p.addRing(p.frame, p.floorRing(p.s.Plan))
 	}
+}
+
+// zoneOutlines draws the border of zones that are hovered or selected, dashed: nothing is built there.
+func (p *pen) zoneOutlines() {
+	const on, off = 3, 3
+	if h := p.s.Hover; h.Kind == plan.KindZone && !p.s.selected(h) {
+		m := p.begin()
+		p.outlineZone(h)
+		p.op(m, p.stroked(at(p.theme.Ink, 0.35), StrokeStyle{Width: 1, On: on, Off: off}))
+	}
+	m := p.begin()
+	for _, ref := range p.s.Selected {
+		if ref.Kind == plan.KindZone {
+			p.outlineZone(ref)
+		}
+	}
+	p.op(m, p.stroked(p.theme.Ink, StrokeStyle{Width: 1.5, On: on, Off: off}))
 }
 
 func (p *pen) outlineZone(ref plan.Ref) {

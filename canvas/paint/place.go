@@ -112,7 +112,7 @@ func (p *pen) bordered(r *study.Sight) {
 // boxOf returns the box that a line of text takes, with a little air around it.
 func (p *pen) boxOf(at place, width float64, look textLook) box {
 	s := look.size * p.k
-	air := max(1.5*p.k, look.halo*p.k/4)
+	air := max(1.5, look.halo-3) * p.k // a wide halo would cover what is nearer
 	return box{at.x - air, at.y - 0.74*s - air, at.x + width + air, at.y + 0.2*s + air}
 }
 

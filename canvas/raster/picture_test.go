@@ -118,8 +118,8 @@ func TestPictureScale(t *testing.T) {
 			sum += d * d
 		}
 	}
-	// Measured 25.3; 31 when the rings of targets stay small, 152 when text does.
-	if mean := sum / (340 * 460); mean > 28 {
+	// Measured 32.1; 57 when the rings of targets stay small, 151 when text does.
+	if mean := sum / (340 * 460); mean > 36 {
 		t.Errorf("mean squared difference %.1f", mean)
 	}
 }

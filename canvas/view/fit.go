@@ -11,7 +11,7 @@ const (
 	Ruler        = 22 // width of the rulers along the top and the left
 	MarginTop    = 22 // between the upper ruler and a fitted plan
 	MarginBottom = 32 // below a fitted plan: scale bar and title slip stand there
-	MarginSide   = 44 // beside a fitted plan: start mats stand outside the doors
+	MarginSide   = 64 // beside a fitted plan: start mats stand outside the doors
 )
 
 // A plan with nothing in it opens on 20 by 16 m at this scale.
