@@ -6,6 +6,7 @@ import (
 	"math"
 	"strings"
 
+	"enfilade/canvas/tool"
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 	"enfilade/solver/study"
@@ -13,6 +14,7 @@ import (
 
 // field is one line of the selection's form.
 type field struct {
+	group   string // a heading above it; empty for none
 	label   string
 	unit    string // behind the entry
 	wide    bool   // the entry takes the whole width
@@ -41,7 +43,6 @@ type card struct {
 	facts  []fact
 	fault  string // the item's problem
 	hint   []string
-	group  string // heading above the fields
 	delete bool
 }
 
@@ -49,7 +50,7 @@ type card struct {
 func (w *window) describe(p *plan.Plan, sel []plan.Ref) card {
 	switch len(sel) {
 	case 0:
-		return w.describeNothing()
+		return w.describeNothing(p)
 	case 1:
 		return w.describeOne(p, sel[0])
 	}
@@ -57,20 +58,19 @@ func (w *window) describe(p *plan.Plan, sel []plan.Ref) card {
 }
 
 // describeNothing offers the measures of new items.
-func (w *window) describeNothing() card {
+func (w *window) describeNothing(p *plan.Plan) card {
 	d := &w.measures
 	height := ""
 	if d.Height != plan.Ceiling {
 		height = formatLength(d.Height, w.unit())
 	}
-	return card{
-		key:   "nothing " + w.unit(),
-		hint:  []string{"Nothing is selected.", "Click a wall, an observer or a target to see", "and change its measures here."},
-		group: "New walls",
+	c := card{
+		key:  "nothing " + w.unit(),
+		hint: []string{"Nothing is selected.", "Click a wall, an observer or a target to see", "and change its measures here."},
 		fields: []field{
-			w.lengthField("Thickness", d.Thickness, func(v int32) error {
+			headed("New walls", w.lengthField("Thickness", d.Thickness, func(v int32) error {
 				return within(v, 0, plan.MaxThickness, func() error { d.Thickness = v; return nil })
-			}),
+			})),
 			{label: "Height", unit: unitMark(w.unit()), text: height, empty: "ceiling", set: func(text string) error {
 				v, err := w.height(text)
 				if err == nil {
@@ -78,11 +78,62 @@ func (w *window) describeNothing() card {
 				}
 				return err
 			}},
-			w.lengthField("Low walls", d.LowHeight, func(v int32) error { return within(v, 1, plan.Ceiling-1, func() error { d.LowHeight = v; return nil }) }),
+			w.lengthField("Low walls", d.LowHeight, func(v int32) error {
+				return within(v, 1, plan.Ceiling-1, func() error { d.LowHeight = v; return nil })
+			}),
 			w.lengthField("Door width", d.DoorWidth, func(v int32) error {
 				return within(v, 1, plan.MaxThickness, func() error { d.DoorWidth = v; return nil })
 			}),
 		},
+	}
+	c.fields = append(c.fields, w.describePlan(p)...)
+	return c
+}
+
+// headed puts a heading above a field.
+func headed(group string, f field) field {
+	f.group = group
+	return f
+}
+
+// units are the display units and what the form calls them.
+var units = []struct{ unit, name string }{{"m", "metres"}, {"cm", "centimetres"}, {"mm", "millimetres"}, {"ft", "feet and inches"}}
+
+// describePlan is what the form offers of the plan itself: its title, its unit, and the person who walks.
+func (w *window) describePlan(p *plan.Plan) []field {
+	sheet, walker := p.Sheet(), p.Walker()
+	putSheet := func(label string, change func(*plan.Sheet)) error {
+		change(&sheet)
+		return w.doEdit(tool.Named(label, plan.SetSheet{Sheet: sheet}))
+	}
+	unit := field{label: "Unit", pick: func(i int) error {
+		return putSheet("change unit", func(s *plan.Sheet) { s.Unit = units[i].unit })
+	}}
+	for i, u := range units {
+		unit.choices = append(unit.choices, u.name)
+		if u.unit == unitOf(sheet.Unit) {
+			unit.chosen = i
+		}
+	}
+	pace := field{label: "Pace", unit: "m/s", text: trimDecimals(walker.Pace, 1, 3), set: func(text string) error {
+		v, err := parseNumber(text)
+		if err != nil {
+			return err
+		}
+		walker.Pace = v
+		return w.doEdit(tool.Named("change pace", plan.SetWalker{Walker: walker}))
+	}}
+	return []field{
+		headed("Plan", textField("Title", sheet.Title, func(t string) error {
+			return putSheet("change title", func(s *plan.Sheet) { s.Title = t })
+		})),
+		textField("Place", sheet.Place, func(t string) error { return putSheet("change place", func(s *plan.Sheet) { s.Place = t }) }),
+		unit,
+		headed("Walker", w.lengthField("Eye height", walker.Eye, func(v int32) error {
+			walker.Eye = v
+			return w.doEdit(tool.Named("change walker's eye", plan.SetWalker{Walker: walker}))
+		})),
+		pace,
 	}
 }
 

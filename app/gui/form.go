@@ -76,11 +76,11 @@ func (f *form) build(c card) {
 		}
 		f.page.Add(line)
 	}
-	if c.group != "" {
-		f.page.Add(inset(0, 12, 0, 2, newText(c.group, assets.Semibold, 12.5, roleInk)))
-	}
-	for i := range c.fields {
-		f.page.Add(f.row(c.fields[i]))
+	for _, d := range c.fields {
+		if d.group != "" {
+			f.page.Add(inset(0, 12, 0, 2, newText(d.group, assets.Semibold, 12.5, roleInk)))
+		}
+		f.page.Add(f.row(d))
 	}
 	f.fault = newText("", assets.Regular, 12, roleRed).shrinking()
 	f.page.Add(f.fault)

@@ -214,3 +214,45 @@ func TestMixedThickness(t *testing.T) {
 		t.Errorf("two thicknesses are shown as %q, %q", x.entry.Text, x.field.note)
 	}
 }
+
+func TestPlanForm(t *testing.T) {
+	r := newGallery(t)
+	r.keys(fyne.KeyEscape)
+	r.enter("Title", "Lower gallery")
+	r.enter("Pace", "0,8")
+	if p := r.session.Plan(); p.Sheet().Title != "Lower gallery" || p.Walker().Pace != 0.8 {
+		t.Errorf("title %q, pace %g", p.Sheet().Title, p.Walker().Pace)
+	}
+	if x := r.enter("Pace", "0"); x.note.text == "" {
+		t.Error("a pace of nothing was taken")
+	}
+	if err := r.line("Unit").field.pick(3); err != nil {
+		t.Fatal(err)
+	}
+	if got := r.line("Door width").entry.Text; got != `2' 11.433"` {
+		t.Errorf("a door of 0.90 m is shown as %s", got)
+	}
+	r.enter("Door width", `3' 6 1/2"`)
+	if r.measures.DoorWidth != 3*3048+6*254+127 || r.line("Door width").entry.Text != `3' 6 1/2"` {
+		t.Errorf("typed feet gave %d, shown as %s", r.measures.DoorWidth, r.line("Door width").entry.Text)
+	}
+	r.move(3.048, 6.096)
+	if got := r.status.place.text; !strings.HasPrefix(got, "x 10' ") || !strings.Contains(got, "y 20' ") {
+		t.Errorf("place in feet %q", got)
+	}
+}
+
+// TestTableKeepsUp: what the table shows follows every change, though it is made anew only for some.
+func TestTableKeepsUp(t *testing.T) {
+	r := newGallery(t)
+	r.click(4.9, 0.41) // the astrolabe
+	r.enter("Name", "Sextant")
+	if got := r.table.rows[0].to; got != "Sextant" {
+		t.Errorf("a renamed target is still %q", got)
+	}
+	r.keys(fyne.KeyDelete)
+	r.settle()
+	if len(r.table.rows) != 12 {
+		t.Errorf("%d rows after a target is deleted, want 12", len(r.table.rows))
+	}
+}

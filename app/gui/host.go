@@ -61,8 +61,11 @@ func (v *planView) place() (x, y float64) {
 
 // emptyPlan reports whether nothing is drawn and nothing put down.
 func emptyPlan(p *plan.Plan) bool {
-	_, _, some := plan.Bounds(p)
-	return !some
+	for range p.Zones() {
+		return false
+	}
+	return p.Floor().Len() == 0 && p.NumWalls() == 0 && p.NumBlocks() == 0 && p.NumObservers() == 0 && p.NumTargets() == 0 &&
+		p.NumStarts() == 0
 }
 
 // snapText says what the pointer snaps to.

@@ -24,6 +24,15 @@ type table struct {
 	empty *fyne.Container
 	list  *widget.List
 	rows  []row
+	seen  tableKey
+}
+
+// tableKey is all that the table depends on.
+type tableKey struct {
+	marks         *plan.Marks
+	result        *study.Result
+	start, target string
+	stale         bool
 }
 
 // row is one line of the table.
@@ -54,7 +63,13 @@ func newTable(w *window) *table {
 
 // update brings the rows up to date.
 func (t *table) update() {
-	rows := tableRows(t.w.session.Plan(), &t.w.results)
+	p, r := t.w.session.Plan(), &t.w.results
+	key := tableKey{p.Marks(), r.result, r.start, r.target, r.stale(live.StageApproaches)}
+	if key == t.seen {
+		return
+	}
+	t.seen = key
+	rows := tableRows(p, r)
 	t.empty.Hidden = len(rows) > 0
 	switch n := len(rows); n {
 	case 0:
