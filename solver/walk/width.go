@@ -6,6 +6,7 @@ import (
 
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
+	"enfilade/solver/pulse"
 	"enfilade/solver/sight"
 )
 
@@ -63,14 +64,14 @@ const (
 //   - Errors: the context's when it is cancelled.
 //   - Cost: O(n log n) expected for n such edges, and the triangles that each gap's disc meets: few, since it is empty.
 func NewWidths(ctx context.Context, m *mesh.Mesh) (*Widths, error) {
-	lean, err := leanMesh(ctx, m)
+	lean, err := leanMesh(pulse.Part(ctx, 0, 0.6), m)
 	if err != nil {
 		return nil, err
 	}
 	w := &Widths{plain: m}
 	w.pieces.begin(lean)
 	b := gapFinder{pieces: &w.pieces}
-	if err := b.find(ctx); err != nil {
+	if err := b.find(pulse.Part(ctx, 0.6, 1)); err != nil {
 		return nil, err
 	}
 	w.connect(b.join())
@@ -124,7 +125,18 @@ func (w *Widths) ToCones(eye exact.Pt, cones []sight.Cone) Width {
 	w.goal = w.goal[:0]
 	for _, c := range cones {
 		if w.plain.Tris[c.Tri].Flags&mesh.FlagNoWalk == 0 {
-			w.goal = w.cellsWithin(w.goal, eye, c)
+			w.goal = w.cellsWithin(w.goal, c.Tri, exact.Line{At: eye, Dir: c.R}, exact.Line{At: eye, Dir: c.L.Neg()})
+		}
+	}
+	return w.best()
+}
+
+// ToPieces is ToCones for a region that is given as convex pieces.
+func (w *Widths) ToPieces(pieces []sight.Piece) Width {
+	w.goal = w.goal[:0]
+	for i := range pieces {
+		if p := &pieces[i]; w.plain.Tris[p.Tri].Flags&mesh.FlagNoWalk == 0 {
+			w.goal = w.cellsWithin(w.goal, p.Tri, p.Lines[:p.N]...)
 		}
 	}
 	return w.best()

@@ -3,7 +3,6 @@ package walk
 import (
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
-	"enfilade/solver/sight"
 )
 
 // bridge leads from triangles of the plain mesh to cells, and remembers those that lie in one cell.
@@ -12,7 +11,8 @@ type bridge struct {
 	seen  []int32 // for each lean triangle the last search that saw it
 	round int32
 	stack []int32
-	found []int32 // the lean triangles that share floor with a plain one
+	found []int32      // the lean triangles that share floor with a plain one
+	lines []exact.Line // to the left of which floor is shared
 }
 
 const (
@@ -40,19 +40,21 @@ func (w *Widths) cellsAt(dst []int32, p exact.Pt) []int32 {
 	return dst
 }
 
-// cellsWithin appends the cells that share floor with a cone.
-func (w *Widths) cellsWithin(dst []int32, eye exact.Pt, c sight.Cone) []int32 {
-	if cell := w.bridge.cell[c.Tri]; cell >= 0 {
-		return append(dst, cell)
+// cellsWithin appends the cells that share floor with the part of plain triangle t to the left of all lines.
+func (w *Widths) cellsWithin(dst []int32, t int32, lines ...exact.Line) []int32 {
+	b := &w.bridge
+	if b.cell[t] >= 0 {
+		return append(dst, b.cell[t])
 	}
-	w.overlaps(c.Tri)
-	if w.bridge.cell[c.Tri] == notAsked {
-		if w.bridge.cell[c.Tri] = w.onlyCell(); w.bridge.cell[c.Tri] >= 0 {
-			return append(dst, w.bridge.cell[c.Tri])
+	w.overlaps(t)
+	if b.cell[t] == notAsked {
+		if b.cell[t] = w.onlyCell(); b.cell[t] >= 0 {
+			return append(dst, b.cell[t])
 		}
 	}
-	for _, u := range w.bridge.found {
-		dst = w.sharing(dst, u, w.root[u], c.Tri, func() { w.clip.addCone(eye, c.R, c.L) })
+	for _, u := range b.found {
+		b.lines = append(b.lines[:0], lines...)
+		dst = w.sharing(dst, u, w.root[u], t)
 	}
 	return dst
 }
@@ -105,32 +107,27 @@ func (w *Widths) onlyCell() int32 {
 	return only
 }
 
-// sharing appends the cells of those pieces of lean triangle u under a node that share floor with plain triangle t and with
-// what more is asked for.
-func (w *Widths) sharing(dst []int32, u, node, t int32, more func()) []int32 {
-	var sides []exact.Line
-	var descend func(node int32)
-	descend = func(node int32) {
-		if node < 0 {
-			w.clip.begin(&w.m.Tris[u])
-			w.clip.addTriangle(&w.plain.Tris[t])
-			more()
-			w.clip.line = append(w.clip.line, sides...)
-			if w.clip.cutTriangle() {
-				dst = append(dst, w.cell[^node])
-			}
-			return
+// sharing appends the cells of those pieces of lean triangle u under a node that share floor with plain triangle t to the left of
+// the bridge's lines.
+func (w *Widths) sharing(dst []int32, u, node, t int32) []int32 {
+	b := &w.bridge
+	if node < 0 {
+		w.clip.begin(&w.m.Tris[u])
+		w.clip.addTriangle(&w.plain.Tris[t])
+		w.clip.line = append(w.clip.line, b.lines...)
+		if w.clip.cutTriangle() {
+			dst = append(dst, w.cell[^node])
 		}
-		c := &w.cuts[node]
-		l := w.gaps[c.gap].line()
-		n := len(sides)
-		sides = append(sides, exact.Line{At: l.At, Dir: l.Dir.Neg()})
-		descend(c.right)
-		sides = append(sides[:n], l)
-		descend(c.left)
-		sides = sides[:n]
+		return dst
 	}
-	descend(node)
+	c := &w.cuts[node]
+	l := w.gaps[c.gap].line()
+	n := len(b.lines)
+	b.lines = append(b.lines, exact.Line{At: l.At, Dir: l.Dir.Neg()})
+	dst = w.sharing(dst, u, c.right, t)
+	b.lines = append(b.lines[:n], l)
+	dst = w.sharing(dst, u, c.left, t)
+	b.lines = b.lines[:n]
 	return dst
 }
 

@@ -8,6 +8,7 @@ import (
 
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
+	"enfilade/solver/pulse"
 )
 
 // gap is a passage between two obstacle points: a corner, and another corner or the foot of the perpendicular on an edge.
@@ -40,8 +41,8 @@ type gapFinder struct {
 // find looks for the gaps between two corners, which are edges, and for those between a corner and an edge.
 func (b *gapFinder) find(ctx context.Context) error {
 	for t := range b.m.Tris {
-		if t&1023 == 0 && ctx.Err() != nil {
-			return ctx.Err()
+		if err := pulse.Step(ctx, t, len(b.m.Tris)); err != nil {
+			return err
 		}
 		tri := &b.m.Tris[t]
 		if tri.Flags&mesh.FlagNoWalk != 0 {

@@ -5,6 +5,7 @@ import (
 
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
+	"enfilade/solver/pulse"
 )
 
 // side says on which sides of an edge there is floor.
@@ -13,7 +14,7 @@ type side struct{ left, right bool }
 // leanMesh triangulates the edges of m that stop someone on the floor, and nothing else. O(n log n) expected.
 func leanMesh(ctx context.Context, m *mesh.Mesh) (*mesh.Mesh, error) {
 	pts, edges, sides := bordersOf(m)
-	tr, err := mesh.Triangulate(ctx, pts, edges)
+	tr, err := mesh.Triangulate(pulse.Part(ctx, 0, 0.7), pts, edges)
 	if err != nil {
 		return nil, err
 	}
@@ -21,7 +22,7 @@ func leanMesh(ctx context.Context, m *mesh.Mesh) (*mesh.Mesh, error) {
 	for i := range tags {
 		tags[i].Walk = true
 	}
-	return tr.Finish(ctx, tags, solidsOf(tr, edges, sides))
+	return tr.Finish(pulse.Part(ctx, 0.7, 1), tags, solidsOf(tr, edges, sides))
 }
 
 // bordersOf lists the edges of m that stop walking and have floor on either side, with their points in the order of m.

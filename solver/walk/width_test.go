@@ -4,7 +4,6 @@ import (
 	"context"
 	"errors"
 	"math"
-	"slices"
 	"testing"
 
 	"enfilade/solver/exact"
@@ -102,8 +101,14 @@ func TestWidthsToCones(t *testing.T) {
 		if got.Found != (c.clear > 0) || got.Clear != c.clear*metre && math.Abs(got.Clear/metre-c.clear) > 1e-12 {
 			t.Errorf("%s: %v m, found %v, want %v", c.name, got.Clear/metre, got.Found, c.clear)
 		}
-		if again := w.ToCones(c.target, slices.Clone(cones)); again != got {
-			t.Errorf("%s: %v, then %v", c.name, got, again)
+		var pieces []sight.Piece
+		for _, k := range cones {
+			p := sight.Piece{Tri: k.Tri, N: 2}
+			p.Lines[0], p.Lines[1] = exact.Line{At: c.target, Dir: k.R}, exact.Line{At: c.target, Dir: k.L.Neg()}
+			pieces = append(pieces, p)
+		}
+		if again := w.ToPieces(pieces); again != got {
+			t.Errorf("%s: %v to its cones, %v to the same as pieces", c.name, got, again)
 		}
 	}
 }
