@@ -15,10 +15,15 @@ import (
 func RangePolygon(eye exact.Pt, radius int32) []exact.Pt {
 	r := float64(radius)
 	n := 8 * int(math.Ceil(math.Pi/math.Acos(1-8/r)/8))
-	corner := func(i int) exact.Vec {
+	return octants(eye, n, func(i int) exact.Vec {
 		s, c := math.Sincos(2 * math.Pi * float64(i) / float64(n))
 		return exact.Vec{X: int32(r * c), Y: int32(r * s)}
-	}
+	})
+}
+
+// octants returns the ring of n corners about eye, n a multiple of 8, of which corner gives those of the first octant, from +x
+// to the diagonal; the others follow by turning and mirroring.
+func octants(eye exact.Pt, n int, corner func(i int) exact.Vec) []exact.Pt {
 	quarter := n / 4
 	ring := make([]exact.Pt, n)
 	for i := range quarter {
