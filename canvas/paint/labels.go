@@ -189,7 +189,7 @@ func (p *pen) placeFirstSight(a *study.Approach) {
 		p.distance(a.Length, u)
 	}
 	t := p.said(from)
-	r := ring8{side: 13, up: 14, down: 14, dx: 11, dUp: 8, dDown: 8}
+	r := ring8{side: 13, up: 14, down: 14, dx: 12, dUp: 8, dDown: 8}
 	p.settle(labelKey{rankFirstSight, ""}, t, look, p.around(at, r, p.awayFromWalk(a, at), t, look), true)
 }
 
