@@ -24,6 +24,7 @@ func (w *warper) show(old *raster.Base, from, to view.Camera, paper color.NRGBA)
 			Low: make([]uint8, len(old.Low))}
 		w.xs = make([]int, old.W)
 	}
+	w.base.InkColour = old.InkColour
 	// A pixel's middle is looked up in the plan, then in the old picture.
 	lookup := func(v float64, n int, toC, fromC, sign float64) int {
 		mm := toC + sign*(v+0.5-float64(n)/2)/to.Scale
