@@ -26,9 +26,11 @@ func (v *studyVerb) Run(ctx context.Context, p *Program) error {
 	if err != nil {
 		return err
 	}
-	result, err := study.Solve(ctx, drawn)
+	work, done := showProgress(ctx, p.Err)
+	result, err := study.Solve(work, drawn)
+	done()
 	if err != nil {
-		return fmt.Errorf("%s: study: %w", v.Plan, err)
+		return fmt.Errorf("%s: %w", v.Plan, err)
 	}
 	if v.Picture != "" {
 		if err := drawPicture(v.Picture, v.Theme, drawn, result); err != nil {
