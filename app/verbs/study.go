@@ -4,6 +4,7 @@ import (
 	"bufio"
 	"context"
 	"fmt"
+	"runtime/debug"
 
 	"enfilade/fileio/report"
 	"enfilade/solver/study"
@@ -26,6 +27,9 @@ func (v *studyVerb) Run(ctx context.Context, p *Program) error {
 	if err != nil {
 		return err
 	}
+	// A study is one burst of work, most of what it allocates lasts, and large plans are studied on small machines: collecting
+	// early costs nothing here (100,000 walls: 517 MB at the usual 100 %, 370 MB at 30 %, the same time).
+	defer debug.SetGCPercent(debug.SetGCPercent(30))
 	work, done := showProgress(ctx, p.Err)
 	result, err := study.Solve(work, drawn)
 	done()
