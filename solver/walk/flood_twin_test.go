@@ -74,10 +74,8 @@ func TestFloodAgainstTwin(t *testing.T) {
 			at := places(p, g)
 			height := heights.Draw(t, "height")
 			pick := rapid.IntRange(0, len(at)-1)
-			for range 2 {
-				start, one, two := at[pick.Draw(t, "start")], at[pick.Draw(t, "one")], at[pick.Draw(t, "two")]
-				sameWalks(t, m, twin, start, []exact.Pt{one, two}, height)
-			}
+			start, one, two := at[pick.Draw(t, "start")], at[pick.Draw(t, "one")], at[pick.Draw(t, "two")]
+			sameWalks(t, m, twin, start, []exact.Pt{one, two}, height)
 		}))
 	}
 }
@@ -149,7 +147,7 @@ func TestFloodToFrontsAgainstTwin(t *testing.T) {
 
 // TestFloodOfPlansAgainstTwin does the same on whole floors of an office, of clutter and a maze.
 func TestFloodOfPlansAgainstTwin(t *testing.T) {
-	for seed := range plantest.Seeds(2) {
+	for seed := range plantest.Seeds(1) {
 		for name, p := range map[string]*plan.Plan{
 			"office": plantest.Office(seed, 20), "clutter": plantest.Clutter(seed, 25), "maze": plantest.Maze(seed, 30),
 		} {
@@ -217,7 +215,8 @@ func samePath(t tester, what string, from, to exact.Pt, height int32, got walk.P
 	if !near(sum, got.Length) {
 		t.Errorf("%s from %v to %v: says %v, its points make %v", what, from, to, got.Length, sum)
 	}
-	if end := floats(want.Points[len(want.Points)-1:])[0]; sameEnd && !got.Ties && math.Hypot(end[0]-last[0], end[1]-last[1]) > 1e-4 {
+	// Square to a border 27 km away, ends a thousandth of a unit apart are equally far to the last bit.
+	if end := floats(want.Points[len(want.Points)-1:])[0]; sameEnd && !got.Ties && math.Hypot(end[0]-last[0], end[1]-last[1]) > 1.0/512 {
 		t.Errorf("%s from %v to %v at height %v ends at %v, want %v", what, from, to, height, last, end)
 	}
 }
