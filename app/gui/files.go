@@ -12,6 +12,8 @@ import (
 	"slices"
 	"strings"
 
+	"fyne.io/fyne/v2"
+
 	"enfilade/assets"
 	"enfilade/canvas/raster"
 	"enfilade/fileio/planfile"
@@ -65,6 +67,7 @@ func (w *window) show(load func()) {
 
 // open reads a plan file and shows it; a fault leaves the plan that is open.
 func (w *window) open(path string) {
+	path = absolute(path)
 	p, err := readPlan(path)
 	if err != nil {
 		w.notice.show(sentence(failure(err)), "Open another…", func() { w.unlessUnsaved(w.askOpen) })
@@ -72,6 +75,14 @@ func (w *window) open(path string) {
 	}
 	w.show(func() { w.session.Open(p, path) })
 	w.remember(path)
+}
+
+// absolute returns a path that stays right when the working folder changes.
+func absolute(path string) string {
+	if abs, err := filepath.Abs(path); err == nil {
+		return abs
+	}
+	return path
 }
 
 func readPlan(path string) (*plan.Plan, error) {
@@ -104,6 +115,7 @@ func (w *window) save(goOn func()) {
 
 // write saves the committed plan at path.
 func (w *window) write(path string, goOn func()) {
+	path = absolute(path)
 	p := w.session.Committed()
 	if err := store.Save(path, func(out io.Writer) error { return planfile.Write(out, p) }); err != nil {
 		w.notice.show(sentence("the plan was not saved: "+failure(err)), "Save elsewhere…", func() { w.askSave(goOn) })
@@ -179,7 +191,7 @@ func (w *window) askFile(title, verb, name, suffix string, done func(string)) {
 		}
 	}}, choice{"Cancel", nil})
 	w.win.Canvas().Focus(c.path)
-	c.path.CursorColumn = len([]rune(c.path.Text))
+	c.path.TypedKey(&fyne.KeyEvent{Name: fyne.KeyEnd})
 }
 
 // home is where files are looked for when no plan is open: the folder of the last one, else the working folder.
@@ -199,9 +211,6 @@ func (w *window) recent() []string { return w.app.Preferences().StringList(prefR
 
 // remember puts a plan at the head of the recent ones.
 func (w *window) remember(path string) {
-	if abs, err := filepath.Abs(path); err == nil {
-		path = abs
-	}
 	list := append([]string{path}, slices.DeleteFunc(slices.Clone(w.recent()), func(p string) bool { return p == path })...)
 	w.app.Preferences().SetStringList(prefRecent, list[:min(len(list), maxRecent)])
 }

@@ -93,8 +93,10 @@ func (l *look) Size(name fyne.ThemeSizeName) float32 {
 		return 4
 	case theme.SizeNameInnerPadding: // an entry of a form is 27 px high
 		return 5.5
-	case theme.SizeNameScrollBar, theme.SizeNameScrollBarSmall:
+	case theme.SizeNameScrollBar:
 		return 6
+	case theme.SizeNameScrollBarSmall: // at rest; a field whose text is too long for it has one too
+		return 2
 	case theme.SizeNameInputRadius, theme.SizeNameSelectionRadius, theme.SizeNameButtonRadius, theme.SizeNameMenuRadius,
 		theme.SizeNamePopupRadius, theme.SizeNameDialogRadius, theme.SizeNameCardRadius:
 		return 4
