@@ -4,6 +4,7 @@ import (
 	"context"
 	"image/color"
 	"os"
+	"sync"
 	"testing"
 
 	"enfilade/canvas/paint"
@@ -208,4 +209,29 @@ func BenchmarkLevel(b *testing.B) {
 			}
 		})
 	}
+}
+
+// TestWorker: bases are made on other goroutines while frames are drawn over an older one; run under -race.
+func TestWorker(t *testing.T) {
+	s := galleryScene(t, 400, 300, 1)
+	list := paint.Base(s)
+	base := raster.NewBase(list, s.Camera.W, s.Camera.H)
+	s.Drawing = list.Drawing
+	var group sync.WaitGroup
+	for range 2 {
+		scene := *s
+		group.Go(func() {
+			for i := range 3 {
+				scene.Camera = scene.Camera.Pan(float64(i), 1)
+				raster.NewBase(paint.Base(&scene), scene.Camera.W, scene.Camera.H)
+			}
+		})
+	}
+	var l paint.List
+	var f raster.Frame
+	for range 5 {
+		paint.Overlay(s, &l)
+		f.Draw(base, &l)
+	}
+	group.Wait()
 }
