@@ -20,14 +20,14 @@ type Motion struct {
 
 // Point returns where p comes to lie.
 func (m Motion) Point(p exact.Pt) exact.Pt {
-	v := exact.Vec{X: p.X, Y: p.Y}
+	v := exact.Vec(p)
 	if m.Mirror {
 		v.X = -v.X
 	}
 	for range m.Turns {
 		v = v.Left()
 	}
-	return exact.Pt{X: v.X + m.Shift.X, Y: v.Y + m.Shift.Y}
+	return exact.Pt(v).Add(m.Shift)
 }
 
 func (m Motion) chain(c plan.Chain) plan.Chain {

@@ -20,8 +20,6 @@ type bearing struct {
 	ray    int // -1 when inside the sector
 }
 
-func (f *fan) sectors() int { return len(f.free) }
-
 // bear finds a direction in the fan.
 func (f *fan) bear(d arrow) bearing {
 	for i, r := range f.rays {
