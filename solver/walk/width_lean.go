@@ -8,65 +8,61 @@ import (
 	"enfilade/solver/pulse"
 )
 
-// side says on which sides of an edge there is floor.
-type side struct{ left, right bool }
-
 // leanMesh triangulates the edges of m that stop someone on the floor, and nothing else. O(n log n) expected.
 func leanMesh(ctx context.Context, m *mesh.Mesh) (*mesh.Mesh, error) {
-	pts, edges, sides := bordersOf(m)
+	pts, borders := bordersOf(m)
+	edges, tags := make([][2]int32, len(borders)), make([]mesh.Tag, len(borders))
+	for i, b := range borders {
+		edges[i], tags[i].Walk = b.ends, true
+	}
 	tr, err := mesh.Triangulate(pulse.Part(ctx, 0, 0.7), pts, edges)
 	if err != nil {
 		return nil, err
 	}
-	tags := make([]mesh.Tag, len(edges))
-	for i := range tags {
-		tags[i].Walk = true
-	}
-	return tr.Finish(pulse.Part(ctx, 0.7, 1), tags, solidsOf(tr, edges, sides))
+	return tr.Finish(pulse.Part(ctx, 0.7, 1), tags, solidsOf(tr, borders))
 }
 
-// bordersOf lists the edges of m that stop walking and have floor on either side, with their points in the order of m.
-func bordersOf(m *mesh.Mesh) (pts []exact.Pt, edges [][2]int32, sides []side) {
+// border is an edge that stops walking, with floor on its left.
+type border struct {
+	ends   [2]int32
+	double bool // there is floor on its right too
+}
+
+// bordersOf lists the edges of m that stop someone on the floor, with their points in the order of m.
+func bordersOf(m *mesh.Mesh) (pts []exact.Pt, borders []border) {
 	index := make([]int32, len(m.Pts))
 	fill(index, -1)
-	each := func(do func(e, twin mesh.Edge, s side)) {
+	each := func(do func(a, b int32, double bool)) {
 		for t := range m.Tris {
 			tri := &m.Tris[t]
+			if tri.Flags&mesh.FlagNoWalk != 0 {
+				continue
+			}
 			for i := range 3 {
-				e := mesh.EdgeOf(int32(t), i)
 				twin := tri.N[i]
-				if !tri.StopsWalk(i) || twin != mesh.None && twin < e {
-					continue
-				}
-				s := side{left: tri.Flags&mesh.FlagNoWalk == 0}
-				s.right = twin != mesh.None && m.Tris[twin.Tri()].Flags&mesh.FlagNoWalk == 0
-				if s.left || s.right {
-					do(e, twin, s)
+				double := twin != mesh.None && m.Tris[twin.Tri()].Flags&mesh.FlagNoWalk == 0
+				if tri.StopsWalk(i) && !(double && twin < mesh.EdgeOf(int32(t), i)) {
+					do(tri.V[i], tri.V[inc[i]], double)
 				}
 			}
 		}
 	}
-	each(func(e, _ mesh.Edge, _ side) {
-		t, i := &m.Tris[e.Tri()], e.Corner()
-		index[t.V[i]], index[t.V[inc[i]]] = 0, 0
-	})
+	each(func(a, b int32, _ bool) { index[a], index[b] = 0, 0 })
 	for v, used := range index {
 		if used == 0 {
 			index[v] = int32(len(pts))
 			pts = append(pts, m.Pts[v])
 		}
 	}
-	each(func(e, _ mesh.Edge, s side) {
-		t, i := &m.Tris[e.Tri()], e.Corner()
-		edges = append(edges, [2]int32{index[t.V[i]], index[t.V[inc[i]]]})
-		sides = append(sides, s)
+	each(func(a, b int32, double bool) {
+		borders = append(borders, border{[2]int32{index[a], index[b]}, double})
 	})
-	return pts, edges, sides
+	return pts, borders
 }
 
-// solidsOf finds the triangles without floor: the sides of the edges say it of those beside one, and where no edge lies
-// between two triangles they are alike.
-func solidsOf(tr *mesh.Triangulation, edges [][2]int32, sides []side) []mesh.Tag {
+// solidsOf finds the triangles without floor: a border tells it of those beside it, and where no border lies between two
+// triangles they are alike.
+func solidsOf(tr *mesh.Triangulation, borders []border) []mesh.Tag {
 	solid, known := make([]mesh.Tag, tr.Len()), make([]bool, tr.Len())
 	var stack []int32
 	mark := func(t int32, walk bool) {
@@ -82,10 +78,8 @@ func solidsOf(tr *mesh.Triangulation, edges [][2]int32, sides []side) []mesh.Tag
 			switch n, k := tr.Neighbour(t, i); {
 			case n < 0:
 				mark(t, false) // at the box, which lies off the floor
-			case k >= 0 && edges[k][0] == v[i]:
-				mark(t, sides[k].left)
 			case k >= 0:
-				mark(t, sides[k].right)
+				mark(t, borders[k].double || borders[k].ends[0] == v[i])
 			}
 		}
 		for len(stack) > 0 {
