@@ -58,6 +58,14 @@ type Approach struct {
 	Reason        string      // why there is no approach or no full walk: what closes the way
 	Seconds       float64     // of the approach at the walker's pace
 	Ties          bool        // another way is equally short
+
+	// The widest body that can make some walk to first sight, and to the target itself, in mm: how wide the tightest gap on the
+	// widest way is. They are of the drawing, not of the walker. Without a number where there is no way, or where no two things
+	// stand so near each other that the way has to pass between them.
+	ClearWidth, FullClearWidth       float64
+	HasClearWidth, HasFullClearWidth bool
+	// Tightest are the two points of the gap that FullClearWidth is of, mm; where nobody stands at the target, of ClearWidth.
+	Tightest [2]orb.Point
 }
 
 // Result is everything studied about one plan.

@@ -33,7 +33,8 @@ type scene struct {
 	walk     *walk.Finder
 	seek     *sight.Finder // of cones on the wide ground
 	cones    []sight.Cone
-	rooms    []int32 // for each triangle of the wide ground the floor it is connected to, once asked for
+	rooms    []int32      // for each triangle of the wide ground the floor it is connected to, once asked for
+	gaps     *walk.Widths // of the plain ground, once asked for
 }
 
 // NewSolver returns a solver that has seen no plan yet.
@@ -132,7 +133,10 @@ func (s *Solver) Solve(ctx context.Context, p *plan.Plan) (*Result, error) {
 	if r.SeenFrom, err = s.SeenFrom(pulse.Part(ctx, 0.55, 0.6), p); err != nil {
 		return nil, err
 	}
-	if r.Approaches, err = s.Approaches(pulse.Part(ctx, 0.6, 1), p); err != nil {
+	if r.Approaches, err = s.Approaches(pulse.Part(ctx, 0.6, 0.8), p); err != nil {
+		return nil, err
+	}
+	if err = s.ClearWidths(pulse.Part(ctx, 0.8, 1), p, r.Approaches); err != nil {
 		return nil, err
 	}
 	r.Problems = s.Problems(p)
