@@ -13,11 +13,13 @@ import (
 // ErrInside reports a start that lies off the mesh or strictly inside something that stops walking.
 var ErrInside = errors.New("walk: the start is inside a body or off the floor")
 
-// Goal is where a flood is to lead: a spot, or a region, given as its cones of sight from Eye.
+// Goal is where a flood is to lead: a spot, or a region, given as its cones of sight from Eye or as convex pieces, which may
+// overlap.
 type Goal struct {
-	Spot  *Spot
-	Eye   exact.Pt
-	Cones []sight.Cone
+	Spot   *Spot
+	Eye    exact.Pt
+	Cones  []sight.Cone
+	Pieces []sight.Piece
 }
 
 // Path is a shortest walk: from the start, the first of Turns, over the corners that follow to End.
@@ -26,6 +28,7 @@ type Path struct {
 	Length float64    // grid units
 	Turns  []exact.Pt // no straight points, and not the end
 	End    [2]float64 // grid units
+	Piece  int        // index of the goal's piece that the walk ends at, -1 when the goal has none
 	Ties   bool       // another walk is equally long, to 4 units in the last place
 }
 
@@ -62,19 +65,22 @@ type node struct {
 
 // mark says that a triangle holds a part of a goal.
 type mark struct {
-	goal int32
-	next int32
-	r, l exact.Vec // zero when the goal is a point
+	goal  int32
+	next  int32
+	piece int32     // index into the goal's pieces, or -1
+	r, l  exact.Vec // the cone; zero when the goal is none of cones
 }
 
 type goal struct {
-	spot  *Spot
-	eye   exact.Pt
-	found bool
-	g     float64
-	node  int32
-	end   [2]float64 // offset from the node
-	ties  bool
+	spot   *Spot
+	eye    exact.Pt
+	pieces []sight.Piece
+	found  bool
+	g      float64
+	node   int32
+	end    [2]float64 // offset from the node
+	piece  int32
+	ties   bool
 }
 
 // New returns a finder for m.
@@ -156,12 +162,15 @@ func (f *Finder) setGoals(goals []Goal) {
 		f.limit = -1
 	}
 	for i, g := range goals {
-		f.goals = append(f.goals, goal{spot: g.Spot, eye: g.Eye, g: math.Inf(1), node: -1})
+		f.goals = append(f.goals, goal{spot: g.Spot, eye: g.Eye, pieces: g.Pieces, g: math.Inf(1), node: -1})
 		for _, c := range g.Cones {
-			f.mark(c.Tri, mark{goal: int32(i), r: c.R, l: c.L})
+			f.mark(c.Tri, mark{goal: int32(i), piece: -1, r: c.R, l: c.L})
+		}
+		for k := range g.Pieces {
+			f.mark(g.Pieces[k].Tri, mark{goal: int32(i), piece: int32(k)})
 		}
 		if g.Spot != nil {
-			f.eachHolder(g.Spot, func(t int32) { f.mark(t, mark{goal: int32(i)}) })
+			f.eachHolder(g.Spot, func(t int32) { f.mark(t, mark{goal: int32(i), piece: -1}) })
 		}
 	}
 }

@@ -19,12 +19,18 @@ func (f *Finder) meetGoals(n, t int32, r, l exact.Vec, key float64) {
 		if g.spot != nil {
 			if g.spot.within(root.at, r, l) {
 				x, y := g.spot.Offset(root.at)
-				f.offer(k.goal, n, root.g+math.Hypot(x, y), [2]float64{x, y})
+				f.offer(k.goal, n, root.g+math.Hypot(x, y), [2]float64{x, y}, -1)
 			}
 			continue
 		}
-		if end, ok := f.clip.nearest(&f.m.Tris[t], root.at, r, l, g.eye, k.r, k.l); ok {
-			f.offer(k.goal, n, root.g+math.Hypot(end[0], end[1]), end)
+		end, ok := [2]float64{}, false
+		if k.piece < 0 {
+			end, ok = f.clip.nearest(&f.m.Tris[t], root.at, r, l, g.eye, k.r, k.l)
+		} else {
+			end, ok = f.clip.nearestOf(&f.m.Tris[t], root.at, r, l, &g.pieces[k.piece])
+		}
+		if ok {
+			f.offer(k.goal, n, root.g+math.Hypot(end[0], end[1]), end, k.piece)
 		}
 	}
 }

@@ -85,17 +85,17 @@ func compareWalks(a, b []exact.Pt) int {
 	return 0
 }
 
-// offer takes a walk from node n to the point at offset end as a candidate for goal i.
-func (f *Finder) offer(i int32, n int32, g float64, end [2]float64) {
+// offer takes a walk from node n to the point at offset end as a candidate for goal i; piece is the goal's piece it belongs to.
+func (f *Finder) offer(i int32, n int32, g float64, end [2]float64, piece int32) {
 	o := &f.goals[i]
 	if o.found && tied(g, o.g) {
-		f.settleEnd(o, n, g, end)
+		f.settleEnd(o, n, g, end, piece)
 		return
 	}
 	if o.found && g > o.g {
 		return
 	}
-	o.found, o.g, o.node, o.end, o.ties = true, g, n, end, false
+	o.found, o.g, o.node, o.end, o.piece, o.ties = true, g, n, end, piece, false
 	worst := 0.0
 	for k := range f.goals {
 		worst = max(worst, f.goals[k].g)
@@ -104,7 +104,7 @@ func (f *Finder) offer(i int32, n int32, g float64, end [2]float64) {
 }
 
 // settleEnd chooses between two equally long walks to one goal.
-func (f *Finder) settleEnd(o *goal, n int32, g float64, end [2]float64) {
+func (f *Finder) settleEnd(o *goal, n int32, g float64, end [2]float64, piece int32) {
 	f.one = f.turnsTo(f.one[:0], o.node, o.end)
 	f.two = f.turnsTo(f.two[:0], n, end)
 	ax, ay := f.place(o.node, o.end)
@@ -114,7 +114,7 @@ func (f *Finder) settleEnd(o *goal, n int32, g float64, end [2]float64) {
 	apart := math.Hypot(ax-bx, ay-by) > 1.0/1024
 	if c == 0 && !apart {
 		if g < o.g || g == o.g && (ax > bx || ax == bx && ay > by) { // the same walk; which bits it gets must not depend on the order
-			o.g, o.node, o.end = g, n, end
+			o.g, o.node, o.end, o.piece = g, n, end, piece
 		}
 		o.ties = o.ties || f.nodes[n].ties
 		return
@@ -123,7 +123,7 @@ func (f *Finder) settleEnd(o *goal, n int32, g float64, end [2]float64) {
 		c = cmp.Or(cmp.Compare(ax, bx), cmp.Compare(ay, by))
 	}
 	if c > 0 {
-		o.g, o.node, o.end = g, n, end
+		o.g, o.node, o.end, o.piece = g, n, end, piece
 	}
 	o.ties = true
 }
@@ -152,12 +152,12 @@ func (f *Finder) turnsTo(dst []exact.Pt, n int32, end [2]float64) []exact.Pt {
 // path reads a goal's walk back to the start.
 func (f *Finder) path(o *goal) Path {
 	if !o.found {
-		return Path{}
+		return Path{Piece: -1}
 	}
 	back := f.turnsTo(nil, o.node, o.end)
 	slices.Reverse(back)
 	x, y := f.place(o.node, o.end)
-	p := Path{Found: true, Length: lengthOf(back, x, y), Turns: back, End: [2]float64{x, y}, Ties: o.ties || f.nodes[o.node].ties}
+	p := Path{Found: true, Length: lengthOf(back, x, y), Turns: back, End: [2]float64{x, y}, Piece: int(o.piece), Ties: o.ties || f.nodes[o.node].ties}
 	for n := o.node; n >= 0 && !p.Ties; n = f.nodes[n].parent {
 		p.Ties = f.nodes[n].ties
 	}
