@@ -42,20 +42,23 @@ type jsonTarget struct {
 
 // jsonApproach is one entry of "approaches".
 type jsonApproach struct {
-	Start          string      `json:"start"`
-	Target         string      `json:"target"`
-	EyeMM          *float64    `json:"eye_mm"`
-	Problem        *string     `json:"problem"`
-	Status         *string     `json:"status"`
-	LengthMM       *float64    `json:"length_mm"`
-	FirstSight     *orb.Point  `json:"first_sight"`
-	Points         []orb.Point `json:"points"`
-	SightLineMM    *float64    `json:"sight_line_mm"`
-	Seconds        *float64    `json:"seconds"`
-	FullWalkMM     *float64    `json:"full_walk_mm"`
-	FullWalkPoints []orb.Point `json:"full_walk_points"`
-	Reason         *string     `json:"reason"`
-	Ties           bool        `json:"ties"`
+	Start            string        `json:"start"`
+	Target           string        `json:"target"`
+	EyeMM            *float64      `json:"eye_mm"`
+	Problem          *string       `json:"problem"`
+	Status           *string       `json:"status"`
+	LengthMM         *float64      `json:"length_mm"`
+	FirstSight       *orb.Point    `json:"first_sight"`
+	Points           []orb.Point   `json:"points"`
+	SightLineMM      *float64      `json:"sight_line_mm"`
+	Seconds          *float64      `json:"seconds"`
+	ClearWidthMM     *float64      `json:"clear_width_mm"`
+	FullWalkMM       *float64      `json:"full_walk_mm"`
+	FullWalkPoints   []orb.Point   `json:"full_walk_points"`
+	FullClearWidthMM *float64      `json:"full_clear_width_mm"`
+	Tightest         *[2]orb.Point `json:"tightest"`
+	Reason           *string       `json:"reason"`
+	Ties             bool          `json:"ties"`
 }
 
 // jsonWalker is the person who walks, as the walks were solved for.
@@ -173,7 +176,21 @@ func approachEntry(a study.Approach, eye float64) any {
 	if a.HasFullWalk {
 		e.FullWalkMM, e.FullWalkPoints = number(a.FullWalk), points(a.FullPoints)
 	}
+	e.clear(a)
 	return e
+}
+
+// clear fills in the clear widths, which do not depend on whether the walker finds a way.
+func (e *jsonApproach) clear(a study.Approach) {
+	if a.HasClearWidth {
+		e.ClearWidthMM = number(a.ClearWidth)
+	}
+	if a.HasFullClearWidth {
+		e.FullClearWidthMM = number(a.FullClearWidth)
+	}
+	if a.HasClearWidth || a.HasFullClearWidth {
+		e.Tightest = &[2]orb.Point{unsigned(a.Tightest[0]), unsigned(a.Tightest[1])}
+	}
 }
 
 func problemEntry(p plan.Problem) any {

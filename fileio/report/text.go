@@ -114,8 +114,10 @@ func (t *texter) approaches() {
 		fmt.Fprintf(&t.b, "  keeping %s clear of what stops walking, and at most %s mm more\n", u.named(t.result.WalkerRadius),
 			decimal(t.result.RadiusExcess, 1))
 	}
+	t.b.WriteString("  clear for: the widest body that can make some such walk, and where it is tightest on the full walk\n")
 	table := table{columns: []column{{"start", false}, {"target", false}, {"walk " + u.name, true}, {"s", true},
-		{"first sight at", true}, {"sight line " + u.name, true}, {"full walk " + u.name, true}, {"", false}}}
+		{"first sight at", true}, {"sight line " + u.name, true}, {"clear for " + u.name, true}, {"full walk " + u.name, true},
+		{"clear for " + u.name, true}, {"tightest between", false}, {"", false}}}
 	ties := false
 	for _, a := range t.result.Approaches {
 		table.add(t.approach(a)...)
@@ -135,12 +137,13 @@ func (t *texter) approach(a study.Approach) []string {
 		return append(row, a.Problem)
 	}
 	u, note := t.unit, a.Reason
-	full := "none"
+	full := []string{"none", t.clear(a.FullClearWidth, a.HasFullClearWidth, a.HasFullWalk), t.tightest(a)}
 	if a.HasFullWalk {
-		full = u.length(a.FullWalk)
+		full[0] = u.length(a.FullWalk)
 	}
+	clear := t.clear(a.ClearWidth, a.HasClearWidth, a.Status == study.StatusApproach)
 	if a.Status == study.StatusNone {
-		return append(row, "none", "", "", "", full, note)
+		return append(append(row, "none", "", "", "", clear), append(full, note)...)
 	}
 	if a.Status == study.StatusSeen {
 		note = strings.TrimPrefix(note+"; in sight at the start", "; ")
@@ -149,7 +152,27 @@ func (t *texter) approach(a study.Approach) []string {
 	if a.Ties {
 		walk = "*" + walk
 	}
-	return append(row, walk, decimal(a.Seconds, 1), t.place(a.FirstSight), u.length(a.SightLine), full, note)
+	row = append(row, walk, decimal(a.Seconds, 1), t.place(a.FirstSight), u.length(a.SightLine), clear)
+	return append(row, append(full, note)...)
+}
+
+// clear writes a clear width; "any" where there is a way and nothing narrows it.
+func (t *texter) clear(mm float64, has, way bool) string {
+	switch {
+	case has:
+		return t.unit.length(mm)
+	case way:
+		return "any"
+	}
+	return ""
+}
+
+// tightest writes the two points of the tightest gap.
+func (t *texter) tightest(a study.Approach) string {
+	if !a.HasClearWidth && !a.HasFullClearWidth {
+		return ""
+	}
+	return t.place(a.Tightest[0]) + " and " + t.place(a.Tightest[1])
 }
 
 func (t *texter) problems() {
