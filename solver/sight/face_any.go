@@ -42,9 +42,7 @@ func (f *Finder) Partly(ctx context.Context, dst []Piece, c Face, height int32) 
 	}
 	b := &f.faces
 	b.beams, b.chains = b.beams[:0], b.chains[:0]
-	if b.turn++; len(b.full) < len(f.m.Tris) {
-		b.full = make([]int32, len(f.m.Tris))
-	}
+	f.newTurn()
 	for _, s := range steps {
 		p := Piece{Tri: s.tri}
 		p.add(c.front(), true)
@@ -179,21 +177,8 @@ func (f *Finder) record(dst []Piece, p *Piece) []Piece {
 	if !b.convex.Take(t, p) {
 		return dst
 	}
-	if p.holds(t.P) {
+	if !b.convex.trim(p) {
 		b.full[p.Tri] = b.turn
-		p.N, p.Clip = 0, 0
 	}
 	return append(dst, *p)
-}
-
-// holds reports whether all of a triangle lies to the left of the piece's lines.
-func (p *Piece) holds(corners [3]exact.Pt) bool {
-	for _, l := range p.Lines[:p.N] {
-		for _, q := range corners {
-			if l.Side(q) < 0 {
-				return false
-			}
-		}
-	}
-	return true
 }

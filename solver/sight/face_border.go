@@ -38,7 +38,7 @@ type shape struct {
 	lines []exact.Line
 	from  []int        // Convex.Source of each line
 	clip  []exact.Line // all of the piece's limits, whether they bound it or not
-	bits  uint8
+	bits  uint16
 }
 
 // stretch is a piece of border with the union to its left: from t0 to t1 of its line.

@@ -5,15 +5,15 @@ import (
 	"enfilade/solver/mesh"
 )
 
-// MaxLines is how many lines may bound a piece besides the edges of its triangle: a whole face seen through a window of it
-// takes four, a viewing angle and two distances four more.
-const MaxLines = 8
+// MaxLines is how many lines may bound a piece besides the edges of its triangle: two sides of a beam, three edges of the
+// triangle that it was found in on another mesh, four for a viewing angle and two distances.
+const MaxLines = 10
 
 // Piece is a convex part of a triangle: what of it lies to the left of N lines.
 type Piece struct {
 	Tri   int32
 	N     uint8
-	Clip  uint8 // bit i says that Lines[i] is a side of the view or a limit of distance
+	Clip  uint16 // bit i says that Lines[i] is a side of the view or a limit of distance
 	Lines [MaxLines]exact.Line
 }
 
@@ -83,6 +83,23 @@ func (c *Convex) Take(t *mesh.Tri, p *Piece) bool {
 		}
 	}
 	return true
+}
+
+// trim takes the lines that do not bound it off a piece that the polygon was made from, but for sides and limits, which tell
+// what a border is; it reports whether any line is left that bounds it.
+func (c *Convex) trim(p *Piece) bool {
+	bounds := uint32(0)
+	for _, k := range c.ring {
+		bounds |= 1 << k
+	}
+	q := Piece{Tri: p.Tri}
+	for i, l := range p.Lines[:p.N] {
+		if clip := p.Clip>>i&1 != 0; clip || bounds>>(3+i)&1 != 0 {
+			q.add(l, clip)
+		}
+	}
+	*p = q
+	return bounds>>3 != 0
 }
 
 // Len returns the number of edges.

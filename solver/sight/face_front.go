@@ -17,6 +17,8 @@ type faceBuffers struct {
 	rights [][]exact.Pt
 	full   []int32 // triangles known to be seen all over: those marked with the present turn
 	turn   int32
+	seen   []int32 // triangles that a search has come to: those marked with the present look
+	look   int32
 	convex Convex
 }
 
