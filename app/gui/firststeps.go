@@ -6,6 +6,7 @@ import (
 
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
+	"fyne.io/fyne/v2/container"
 	"fyne.io/fyne/v2/widget"
 
 	"enfilade/assets"
@@ -60,7 +61,7 @@ func newFirstSteps() *firstSteps {
 		put(newText(s.two, assets.Regular, 12.5, roleInk2), 0, 298, false)
 	}
 	f.ExtendBaseWidget(f)
-	f.box = fyne.NewContainerWithLayout(stepsLayout{}, f)
+	f.box = container.New(stepsLayout{}, f)
 	f.box.Hide()
 	return f
 }

@@ -18,7 +18,6 @@ type inkText struct {
 	role   role
 	align  fyne.TextAlign
 	soft   bool // its minimum width is nothing
-	italic bool
 }
 
 func newText(text string, weight assets.Weight, size float32, r role) *inkText {
@@ -43,12 +42,6 @@ func (t *inkText) set(text string) {
 		t.text = text
 		t.Refresh()
 	}
-}
-
-// setRole changes the colour.
-func (t *inkText) setRole(r role) {
-	t.role = r
-	t.Refresh()
 }
 
 func textSize(text string, w assets.Weight, size float32) fyne.Size {

@@ -6,6 +6,7 @@ import (
 
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
+	"fyne.io/fyne/v2/container"
 
 	"enfilade/assets"
 	"enfilade/canvas/pick"
@@ -40,7 +41,7 @@ func newOverlay() *overlay {
 
 // newFree is a container whose objects stay where they are put.
 func newFree(objects ...fyne.CanvasObject) *fyne.Container {
-	return fyne.NewContainerWithoutLayout(objects...)
+	return container.NewWithoutLayout(objects...)
 }
 
 // show draws a sketch.

@@ -22,7 +22,6 @@ type picture struct {
 	worker  *baseWorker
 	base    *madeBase
 	warp    warper
-	opened  uint64 // the open plan that the base belongs to, by its first revision
 }
 
 // baseKey is all that a base depends on.

@@ -2,6 +2,7 @@ package gui
 
 import (
 	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/container"
 
 	"enfilade/assets"
 	"enfilade/canvas/tool"
@@ -54,7 +55,7 @@ func newRail(t *tips, choose func(i int)) (*fyne.Container, []*toolButton) {
 		buttons = append(buttons, b)
 		objects = append(objects, b)
 	}
-	return on(roleChrome, fyne.NewContainerWithLayout(railLayout{}, objects...)), buttons
+	return on(roleChrome, container.New(railLayout{}, objects...)), buttons
 }
 
 // railLayout stacks the rail: it is 54 px wide and a button's pitch is 40.

@@ -146,7 +146,7 @@ func (r *rig) pixel(x, y float64) colour {
 	img := r.picture.draw(r.view.cam.W, r.view.cam.H).(*image.RGBA)
 	px, py := r.view.cam.Pixel(exact.Pt{X: int32(x * 10000), Y: int32(y * 10000)})
 	c := img.RGBAAt(int(px), int(py))
-	return colour{R: c.R, G: c.G, B: c.B, A: c.A}
+	return colour(c)
 }
 
 // text returns the plan as its file would hold it.
