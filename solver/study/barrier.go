@@ -88,26 +88,29 @@ func (b *barrierFinder) offFloor(con int32) bool {
 
 // beforeCones says what closes the way to a region.
 func (b *barrierFinder) beforeCones(cones []sight.Cone) string {
-	if b.first == nil {
-		b.search()
-	}
+	label := unreached
 	for _, c := range cones {
-		if !b.scene.wide.shut(c.Tri) {
-			return b.says(b.first[c.Tri])
-		}
+		label = b.better(label, c.Tri)
 	}
-	return "it is seen only from places where nobody walks"
+	return b.says(label)
 }
 
 // beforePoint says what closes the way to a point.
 func (b *barrierFinder) beforePoint(p exact.Pt) string {
+	label := unreached
+	b.scene.wide.holding(p, func(t int32) { label = b.better(label, t) })
+	return b.says(label)
+}
+
+// better returns the label of triangle t when someone can stand in it and its label comes before the given one.
+func (b *barrierFinder) better(label, t int32) int32 {
 	if b.first == nil {
 		b.search()
 	}
-	if place, ok := b.scene.wide.mesh.Locate(p); ok {
-		return b.says(b.first[place.Tri])
+	if own := b.first[t]; !b.scene.wide.shut(t) && own != unreached && (label == unreached || own < label) {
+		return own
 	}
-	return ""
+	return label
 }
 
 func (b *barrierFinder) says(item int32) string {
