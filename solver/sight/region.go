@@ -126,15 +126,23 @@ func (r *Region) addRay(d exact.Vec, num, den int64, k Kind) {
 	r.xy = append(r.xy, [2]float64{t * float64(d.X), t * float64(d.Y)})
 }
 
-// canonical lets the ring begin at its lowest left corner: the same region then has the same bits, however the mesh under it
-// came about.
+// canonical lets the ring begin at its lowest left corner, or, where it passes that more than once, at the time that goes on
+// to the lowest left one: the same region then has the same bits, however the mesh under it came about.
 func (r *Region) canonical() {
 	r.first = 0
 	for i, p := range r.xy {
-		if q := r.xy[r.first]; p[0] < q[0] || p[0] == q[0] && p[1] < q[1] {
+		q := r.xy[r.first]
+		if p[0] < q[0] || p[0] == q[0] && (p[1] < q[1] || p[1] == q[1] && i > 0 && r.goesLower(i, r.first)) {
 			r.first = i
 		}
 	}
+}
+
+// goesLower reports whether the corner that follows stored corner i comes before the one that follows corner k.
+func (r *Region) goesLower(i, k int) bool {
+	n := len(r.xy)
+	p, q := r.xy[(i+1)%n], r.xy[(k+1)%n]
+	return p[0] < q[0] || p[0] == q[0] && p[1] < q[1]
 }
 
 // turn rotates s so that element k comes first.
