@@ -76,27 +76,46 @@ func (f *Finder) findHems(c Face) {
 	}
 }
 
-// hemmed appends what of cone k lies within the hems.
+// hemmed appends what of cone k lies within the hems: in one piece what no hem cuts, and a piece for each hem that does.
 func (f *Finder) hemmed(dst []Piece, c Face, k Cone) []Piece {
-	// The hems that begin at the cone's right side or before it, and those before its left side.
-	first := sort.Search(len(f.faces.hems), func(i int) bool { return f.faces.hems[i].from.Cross(k.R) < 0 }) - 1
-	last := sort.Search(len(f.faces.hems), func(i int) bool { return f.faces.hems[i].from.Cross(k.L) <= 0 }) - 1
+	hems := f.faces.hems
+	// The hems that begin at the cone's right side or before it, and those before its left side. They grow tighter.
+	first := max(sort.Search(len(hems), func(i int) bool { return hems[i].from.Cross(k.R) < 0 })-1, 0)
+	last := sort.Search(len(hems), func(i int) bool { return hems[i].from.Cross(k.L) <= 0 }) - 1
 	t := &f.m.Tris[k.Tri]
-	if first < 0 || last < first || f.faces.hems[last].leaves(c.B, t.P) {
-		return append(dst, c.seenBy(k, nil))
+	uncut := first + sort.Search(last+1-first, func(i int) bool { return !hems[first+i].leaves(c.B, t.P) })
+	whole := k // what is not cut so far
+	if uncut > first && uncut <= last {
+		whole.L = hems[uncut].from
 	}
-	for i := first; i <= last; i++ {
+	open := uncut > first
+	for i := uncut; i <= last; i++ {
 		part := k
 		if i > first {
-			part.R = f.faces.hems[i].from
+			part.R = hems[i].from
 		}
 		if i < last {
-			part.L = f.faces.hems[i+1].from
+			part.L = hems[i+1].from
 		}
-		p := c.seenBy(part, &f.faces.hems[i])
-		if f.faces.convex.Take(t, &p) {
+		p := c.seenBy(part, &hems[i])
+		inside := f.faces.convex.Take(t, &p)
+		if inside && !f.faces.convex.bounded(2) { // the hem passes by
+			if !open {
+				whole, open = part, true
+			}
+			whole.L = part.L
+			continue
+		}
+		if open {
+			dst = append(dst, c.seenBy(whole, nil))
+			open = false
+		}
+		if inside {
 			dst = append(dst, p)
 		}
+	}
+	if open {
+		dst = append(dst, c.seenBy(whole, nil))
 	}
 	return dst
 }

@@ -81,8 +81,10 @@ func TestOutlineOfPieces(t *testing.T) {
 				t.Fatal(err)
 			}
 			rings := f.Outline(pieces, c.A, height)
-			area, _ := sight.Measure(rings)
-			if want := unionArea(m, pieces, c.A); math.Abs(area-want) > 1e-9*want {
+			area, lengths := sight.Measure(rings)
+			border := lengths[0] + lengths[1] + lengths[2]
+			// Slivers of 40 km by a tenth of a millimetre cancel but for the last bits of the products they are measured by.
+			if want := unionArea(m, pieces, c.A); math.Abs(area-want) > 1e-9*want+border*border*0x1p-52 {
 				t.Errorf("face %v height %v: area %v, want %v", c, height, area, want)
 			}
 			if len(rings) > 1 {

@@ -1,6 +1,8 @@
 package sight
 
 import (
+	"slices"
+
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
 )
@@ -101,6 +103,9 @@ func (c *Convex) trim(p *Piece) bool {
 	*p = q
 	return bounds>>3 != 0
 }
+
+// bounded reports whether line i of the piece that the polygon was made from bounds it.
+func (c *Convex) bounded(i int) bool { return slices.Contains(c.ring, uint8(3+i)) }
 
 // Len returns the number of edges.
 func (c *Convex) Len() int { return len(c.ring) }
