@@ -17,57 +17,74 @@ import (
 type barrierFinder struct {
 	scene *scene
 	start exact.Pt
-	first []int32 // for each triangle the item crossed first on the way there, -1 for none, -2 for not reached
+	ways  []way // for each triangle the best way there
 }
 
-// unreached marks a triangle that no way leads to.
-const unreached int32 = -2
+// way is how a place is reached: over how many edges that stop anyone, and which item is crossed first, -1 for none.
+type way struct{ crossed, first int32 }
 
+// noWay is worse than every way.
+var noWay = way{1<<31 - 1, 1<<31 - 1}
+
+// before reports whether a crosses less than b, or as much and its item comes first in the plan.
+func (a way) before(b way) bool {
+	return a.crossed < b.crossed || a.crossed == b.crossed && a.first < b.first
+}
+
+// step is a way that leads into a triangle.
+type step struct {
+	tri int32
+	way
+}
+
+// search finds the best way to every triangle: all that cross nothing first, then all that cross one thing, those of the item
+// that comes first in the plan before the others, and so on.
 func (b *barrierFinder) search() {
-	m := b.scene.wide.mesh
-	b.first = make([]int32, len(m.Tris))
-	for i := range b.first {
-		b.first[i] = unreached
+	b.ways = make([]way, len(b.scene.wide.mesh.Tris))
+	for i := range b.ways {
+		b.ways[i] = noWay
 	}
-	type step struct{ tri, first int32 }
 	var now, later []step
 	b.scene.wide.holding(b.start, func(t int32) {
 		if !b.scene.wide.shut(t) {
-			now = append(now, step{t, -1})
+			now = append(now, step{t, way{0, -1}})
 		}
 	})
 	for len(now) > 0 || len(later) > 0 {
 		if len(now) == 0 {
-			// Of several ways that cross equally little, the one over the item that comes first in the plan is told.
 			slices.SortFunc(later, func(a, b step) int { return cmp.Compare(b.first, a.first) })
 			now, later = later, now
 		}
 		s := now[len(now)-1]
 		now = now[:len(now)-1]
-		if b.first[s.tri] != unreached {
-			continue
-		}
-		b.first[s.tri] = s.first
-		t := &m.Tris[s.tri]
-		for i := range 3 {
-			if t.N[i] == mesh.None {
-				continue
-			}
-			next := step{t.N[i].Tri(), s.first}
-			con := m.Constraint(mesh.EdgeOf(s.tri, i))
-			if b.offFloor(con) {
-				continue
-			}
-			if !b.hard(con) {
-				now = append(now, next)
-				continue
-			}
-			if next.first < 0 {
-				next.first = b.scene.wide.graph.Edges[con].Item
-			}
-			later = append(later, next)
+		if b.ways[s.tri] == noWay {
+			b.ways[s.tri] = s.way
+			now, later = b.spread(s, now, later)
 		}
 	}
+}
+
+// spread appends the ways from s into the neighbours of its triangle: to now where nothing is crossed, else to later.
+func (b *barrierFinder) spread(s step, now, later []step) ([]step, []step) {
+	m := b.scene.wide.mesh
+	t := &m.Tris[s.tri]
+	for i := range 3 {
+		con := m.Constraint(mesh.EdgeOf(s.tri, i))
+		if t.N[i] == mesh.None || b.offFloor(con) {
+			continue
+		}
+		next := step{t.N[i].Tri(), s.way}
+		if !b.hard(con) {
+			now = append(now, next)
+			continue
+		}
+		next.crossed++
+		if next.first < 0 {
+			next.first = b.scene.wide.graph.Edges[con].Item
+		}
+		later = append(later, next)
+	}
+	return now, later
 }
 
 // hard reports whether graph edge con, or -1 for none, stops walkers of any width.
@@ -88,37 +105,37 @@ func (b *barrierFinder) offFloor(con int32) bool {
 
 // beforeCones says what closes the way to a region.
 func (b *barrierFinder) beforeCones(cones []sight.Cone) string {
-	label := unreached
+	best := noWay
 	for _, c := range cones {
-		label = b.better(label, c.Tri)
+		best = b.better(best, c.Tri)
 	}
-	return b.says(label)
+	return b.says(best)
 }
 
 // beforePoint says what closes the way to a point.
 func (b *barrierFinder) beforePoint(p exact.Pt) string {
-	label := unreached
-	b.scene.wide.holding(p, func(t int32) { label = b.better(label, t) })
-	return b.says(label)
+	best := noWay
+	b.scene.wide.holding(p, func(t int32) { best = b.better(best, t) })
+	return b.says(best)
 }
 
-// better returns the label of triangle t when someone can stand in it and its label comes before the given one.
-func (b *barrierFinder) better(label, t int32) int32 {
-	if b.first == nil {
+// better returns the better of a way and the one to triangle t.
+func (b *barrierFinder) better(w way, t int32) way {
+	if b.ways == nil {
 		b.search()
 	}
-	if own := b.first[t]; !b.scene.wide.shut(t) && own != unreached && (label == unreached || own < label) {
+	if own := b.ways[t]; own.before(w) {
 		return own
 	}
-	return label
+	return w
 }
 
-func (b *barrierFinder) says(item int32) string {
-	if item == unreached {
+func (b *barrierFinder) says(w way) string {
+	switch {
+	case w == noWay:
 		return "no way leads there"
-	}
-	if item < 0 {
+	case w.first < 0:
 		return fmt.Sprintf("every way there is too narrow for a body of radius %.0f mm", mm(b.scene.radius))
 	}
-	return nameOf(b.scene.wide.outline.Items[item]) + " closes the way"
+	return nameOf(b.scene.wide.outline.Items[w.first]) + " closes the way"
 }
