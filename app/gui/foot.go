@@ -63,6 +63,9 @@ func walkParts(a study.Approach, pace float64) []string {
 	case a.Status != study.StatusNone:
 		parts = append(parts, "no full walk: "+because(a.Reason))
 	}
+	if w := widthWords(a); w != "" {
+		parts = append(parts, w)
+	}
 	if a.Ties {
 		parts = append(parts, "another way is equally short")
 	}

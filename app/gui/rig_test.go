@@ -79,6 +79,9 @@ func (r *rig) until(what string, ok func() bool) {
 	}
 }
 
+// m returns the grid point at x, y metres.
+func m(x, y float64) exact.Pt { return exact.Pt{X: int32(x * 10000), Y: int32(y * 10000)} }
+
 // at returns the toolkit's place of a point of the plan, in metres.
 func (r *rig) at(x, y float64) fyne.Position {
 	px, py := r.view.cam.Pixel(exact.Pt{X: int32(x * 10000), Y: int32(y * 10000)})

@@ -43,6 +43,7 @@ type row struct {
 	mark        string // icon
 	stale       bool
 	chosen      bool
+	tip         string // what is said when the pointer rests on it
 }
 
 func newTable(w *window) *table {
@@ -123,7 +124,7 @@ func tableRows(p *plan.Plan, r *results) []row {
 
 // fill puts an approach's figures into its row.
 func (w *row) fill(a study.Approach) {
-	w.full = "–"
+	w.full, w.tip = "–", widthWords(a)
 	if a.HasFullWalk {
 		w.full = metres(a.FullWalk, 1) + " m"
 	}
@@ -203,6 +204,7 @@ func (r *tableRow) MouseIn(*desktop.MouseEvent) {
 	p := r.row.pair
 	r.t.w.results.hover = &p
 	r.t.w.acted()
+	r.showTip()
 	r.Refresh()
 }
 
@@ -214,6 +216,7 @@ func (r *tableRow) MouseOut() {
 	r.hovered = false
 	r.t.w.results.hover = nil
 	r.t.w.acted()
+	r.t.w.tips.hide()
 	r.Refresh()
 }
 

@@ -149,7 +149,7 @@ func (frame) Layout(o []fyne.CanvasObject, s fyne.Size) {
 // changed is told every change of the plan that is shown.
 func (w *window) changed(rev uint64, p *plan.Plan) {
 	w.results.asked(rev, w.now())
-	w.runner.Submit(rev, p)
+	w.runner.Submit(live.Ask{Rev: rev, Plan: p, Draft: w.session.Previewing()})
 	w.watchSlow()
 	w.acted()
 }

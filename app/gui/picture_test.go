@@ -1,0 +1,74 @@
+package gui
+
+import (
+	"image"
+	"image/color"
+	"testing"
+	"time"
+
+	"enfilade/canvas/paint"
+	"enfilade/canvas/raster"
+	"enfilade/canvas/view"
+)
+
+// TestWarpShiftsAndStretches: the old base goes where the camera goes, and paper comes in from the sides.
+func TestWarpShiftsAndStretches(t *testing.T) {
+	const w, h = 40, 30
+	old := &raster.Base{W: w, H: h, Image: image.NewRGBA(image.Rect(0, 0, w, h)), Ink: make([]uint8, w*h), Low: make([]uint8, w*h)}
+	for y := range h {
+		for x := range w {
+			old.Image.SetRGBA(x, y, color.RGBA{R: uint8(x), G: uint8(y), B: 7, A: 255})
+			old.Ink[y*w+x], old.Low[y*w+x] = uint8(x), uint8(y)
+		}
+	}
+	paper := color.NRGBA{R: 200, G: 100, B: 50, A: 255}
+	from := view.Camera{CX: 100, CY: 100, Scale: 0.5, W: w, H: h, K: 1}
+	check := func(name string, to view.Camera, want func(x, y int) (int, int, bool)) {
+		var wp warper
+		got := wp.show(old, from, to, paper)
+		for y := range h {
+			for x := range w {
+				c := got.Image.RGBAAt(x, y)
+				sx, sy, in := want(x, y)
+				i := y*w + x
+				if in && (int(c.R) != sx || int(c.G) != sy || int(got.Ink[i]) != sx || int(got.Low[i]) != sy) {
+					t.Fatalf("%s: pixel %d, %d is %v, want that of %d, %d", name, x, y, c, sx, sy)
+				}
+				if !in && (c != color.RGBA(paper) || got.Ink[i] != 0 || got.Low[i] != 0) {
+					t.Fatalf("%s: pixel %d, %d is %v, want paper", name, x, y, c)
+				}
+			}
+		}
+	}
+	check("pan", from.Pan(5, -3), func(x, y int) (int, int, bool) { return x - 5, y + 3, x >= 5 && y+3 < h })
+	check("zoom", from.ZoomAt(0, 0, 2), func(x, y int) (int, int, bool) { return x / 2, y / 2, true })
+	check("out", from.ZoomAt(0, 0, 0.5), func(x, y int) (int, int, bool) { return 2*x + 1, 2*y + 1, 2*x+1 < w && 2*y+1 < h })
+}
+
+// TestSlowBaseIsShownShifted: while the worker makes the base of a panned picture, the old one is shown where it belongs.
+func TestSlowBaseIsShownShifted(t *testing.T) {
+	r := newGallery(t)
+	r.picture.base.took = time.Hour // as if it were a plan of many thousand walls
+	r.view.look(r.view.cam.Pan(100, 60))
+	img := r.picture.draw(r.view.cam.W, r.view.cam.H).(*image.RGBA)
+	if r.picture.base.key.camera == r.view.cam {
+		t.Fatal("the base was made in the middle of the frame")
+	}
+	x, y := r.view.cam.Pixel(m(2.3, 14.3))
+	if got := img.RGBAAt(int(x), int(y)); colour(got) != paint.Light().Floor {
+		t.Errorf("floor is shown as %v while the base is made", got)
+	}
+	if got := img.RGBAAt(60, r.view.cam.H-80); colour(got) == paint.Light().Poche {
+		t.Errorf("%v came in from the side", got)
+	}
+	r.settle()
+	if r.picture.base.key.camera != r.view.cam {
+		t.Error("the worker's base was not taken")
+	}
+	r.picture.base.took = time.Hour
+	r.openSample("training")
+	r.frame()
+	if r.picture.base.key != keyOf(r.picture.scene()) {
+		t.Error("another plan is shown over the base of the one before")
+	}
+}

@@ -1,0 +1,35 @@
+package gui
+
+import (
+	"fyne.io/fyne/v2"
+
+	"enfilade/solver/study"
+)
+
+// widthWords tells how wide a body can be and still make some walk, empty when nothing narrows it or nothing is known.
+func widthWords(a study.Approach) string {
+	first, full := metres(a.ClearWidth, 2), metres(a.FullClearWidth, 2)
+	switch {
+	case a.Problem != "":
+		return ""
+	case a.HasClearWidth && a.HasFullClearWidth && first != full:
+		return "clear width " + full + " m, to first sight " + first + " m"
+	case a.HasFullClearWidth:
+		return "clear width " + full + " m"
+	case a.HasClearWidth:
+		return "clear width to first sight " + first + " m"
+	}
+	return ""
+}
+
+// showTip tells what the row has no column for, below it, when the pointer rests there.
+func (r *tableRow) showTip() {
+	w := r.t.w
+	if r.row.tip == "" {
+		w.tips.hide()
+		return
+	}
+	w.tips.after(tipDelay, r.row.tip, func() fyne.Position {
+		return w.app.Driver().AbsolutePositionForObject(r).AddXY(30, r.Size().Height+2)
+	})
+}
