@@ -28,7 +28,7 @@ func newStatus() *status {
 		place: newText("", assets.Medium, 12, roleInk), snap: caption(""), counts: caption(""), solve: caption(""),
 		hint: caption("").shrinking().right(), progress: newProgress(),
 	}
-	left := container.NewHBox(fixed(146, s.place), tick(), fixed(128, s.snap), tick(), fixed(110, s.counts), tick(), fixed(250, s.solve), s.progress)
+	left := container.NewHBox(fixed(146, s.place), tick(), fixed(128, s.snap), tick(), fixed(150, s.counts), tick(), fixed(240, s.solve), s.progress)
 	row := container.New(layout.NewBorderLayout(nil, nil, left, nil), left, inset(12, 0, 0, 0, s.hint))
 	s.box = on(roleChrome, around(hairline(), nil, nil, nil, inset(14, 4, 18, 5, row)))
 	return s
