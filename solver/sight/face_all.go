@@ -89,7 +89,7 @@ func (f *Finder) hemmed(dst []Piece, c Face, k Cone) []Piece {
 		whole.L = hems[uncut].from
 	}
 	open := uncut > first
-	for i := uncut; i <= last; i++ {
+	for i := uncut; i <= last && !hems[i].leavesNothing(c.B, t.P); i++ {
 		part := k
 		if i > first {
 			part.R = hems[i].from
@@ -124,6 +124,16 @@ func (f *Finder) hemmed(dst []Piece, c Face, k Cone) []Piece {
 func (h *hem) leaves(b exact.Pt, corners [3]exact.Pt) bool {
 	for _, p := range corners {
 		if h.to.Cross(p.Sub(b)) < 0 {
+			return false
+		}
+	}
+	return true
+}
+
+// leavesNothing reports whether the hem leaves nothing of a triangle in; those that follow do not either.
+func (h *hem) leavesNothing(b exact.Pt, corners [3]exact.Pt) bool {
+	for _, p := range corners {
+		if h.to.Cross(p.Sub(b)) > 0 {
 			return false
 		}
 	}
