@@ -18,12 +18,17 @@ func (s *State) Fresh(stage Stage, rev uint64) bool {
 	return s.Latest[stage].Plan != nil && s.Latest[stage].Rev == rev
 }
 
-// Done reports whether every stage has answered or failed for revision rev.
+// Done reports whether every stage has answered or failed for revision rev; of a draft, every stage that does not wait for
+// rest.
 func (s *State) Done(rev uint64) bool {
 	if f := s.Failed[StageMesh]; f.Plan != nil && f.Rev == rev {
 		return true
 	}
+	draft := s.Fresh(StageMesh, rev) && s.Latest[StageMesh].Draft
 	for stage := range NumStages {
+		if draft && stage.rests() {
+			break
+		}
 		if f := s.Failed[stage]; !s.Fresh(stage, rev) && (f.Plan == nil || f.Rev != rev) {
 			return false
 		}
@@ -38,6 +43,9 @@ func (s *State) Result() *study.Result {
 		Approaches: s.Latest[StageApproaches].Approaches,
 		SeenFrom:   s.Latest[StageSeenFrom].Sights,
 		Problems:   s.Latest[StageMesh].Problems,
+	}
+	if w := s.Latest[StageWidths]; w.Plan != nil && w.Rev == s.Latest[StageApproaches].Rev {
+		r.Approaches = w.Approaches
 	}
 	if p := s.Latest[StageApproaches].Plan; p != nil {
 		r.WalkerEye = float64(p.Walker().Eye) / exact.PerMM

@@ -9,7 +9,7 @@ import (
 // kept holds the last answers of the stages that do not look at observers, so that dragging an observer does not solve
 // the approaches again.
 type kept struct {
-	approaches, seenFrom Update
+	approaches, seenFrom, widths Update
 }
 
 // fill answers u from what is kept and reports whether it could.
@@ -19,6 +19,8 @@ func (k *kept) fill(u *Update) bool {
 		u.Approaches = k.approaches.Approaches
 	case u.Stage == StageSeenFrom && k.seenFrom.Plan != nil && sameWalks(k.seenFrom.Plan, u.Plan):
 		u.Sights = k.seenFrom.Sights
+	case u.Stage == StageWidths && k.widths.Plan != nil && sameWalks(k.widths.Plan, u.Plan):
+		u.Approaches = k.widths.Approaches
 	default:
 		return false
 	}
@@ -31,6 +33,8 @@ func (k *kept) keep(u Update) {
 		k.approaches = u
 	case StageSeenFrom:
 		k.seenFrom = u
+	case StageWidths:
+		k.widths = u
 	}
 }
 

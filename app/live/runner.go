@@ -5,6 +5,7 @@ import (
 	"errors"
 	"fmt"
 	"runtime/debug"
+	"slices"
 	"sync"
 	"time"
 
@@ -21,13 +22,18 @@ const (
 	StageSights
 	StageApproaches
 	StageSeenFrom
+	StageWidths
 	NumStages
 )
 
 // String names the stage as the window says it: what is being worked out.
 func (s Stage) String() string {
-	return [...]string{"the mesh of the plan", "what observers see", "approaches", "where targets are seen from"}[s]
+	return [...]string{"the mesh of the plan", "what observers see", "approaches", "where targets are seen from",
+		"clear widths"}[s]
 }
+
+// rests reports whether the stage waits until the plan is at rest: a draft, which a drag shows on its way, goes without.
+func (s Stage) rests() bool { return s >= StageWidths }
 
 // Solver does the work of the stages. It is used by one goroutine; [study.Solver] is one.
 type Solver interface {
@@ -36,15 +42,24 @@ type Solver interface {
 	Sights(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
 	Approaches(ctx context.Context, p *plan.Plan) ([]study.Approach, error)
 	SeenFrom(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
+	ClearWidths(ctx context.Context, p *plan.Plan, rows []study.Approach) error // rows as Approaches gave them
+}
+
+// Ask is what is asked of a runner: the study of a plan.
+type Ask struct {
+	Rev   uint64
+	Plan  *plan.Plan
+	Draft bool // it is in the middle of a drag, so the stages that wait for rest are left out
 }
 
 // Update is what one stage found out about one plan.
 type Update struct {
 	Rev        uint64
 	Plan       *plan.Plan
+	Draft      bool // as in the Ask
 	Stage      Stage
 	Sights     []study.Sight    // of StageSights and StageSeenFrom
-	Approaches []study.Approach // of StageApproaches
+	Approaches []study.Approach // of StageApproaches, and of StageWidths: the same with their clear widths
 	Problems   []plan.Problem   // of StageMesh: what is wrong with the drawing
 	Err        error            // why the stage has no answer; the later stages of this plan are then left out only after StageMesh
 	Took       time.Duration
@@ -55,9 +70,10 @@ type Update struct {
 const patience = 250 * time.Millisecond
 
 type job struct {
+	Ask
 	ctx  context.Context
-	rev  uint64
-	plan *plan.Plan
+	rows []study.Approach // what StageApproaches found
+	fail error            // or why it found nothing
 }
 
 // Runner recomputes the newest plan on a goroutine of its own.
@@ -82,9 +98,9 @@ func New(fresh func() Solver, deliver func(Update)) *Runner {
 	return r
 }
 
-// Submit asks for the study of p, whose revision is rev, and lets go of every plan submitted before. It never waits. It is
-// called from one goroutine only, and not after Close.
-func (r *Runner) Submit(rev uint64, p *plan.Plan) {
+// Submit asks for the study of a plan and lets go of everything submitted before. It never waits. It is called from one
+// goroutine only, and not after Close.
+func (r *Runner) Submit(a Ask) {
 	r.cancel()
 	var ctx context.Context
 	ctx, r.cancel = context.WithCancel(context.Background())
@@ -92,7 +108,7 @@ func (r *Runner) Submit(rev uint64, p *plan.Plan) {
 	case <-r.slot: // a waiting job nobody will look at
 	default:
 	}
-	r.slot <- job{ctx, rev, p}
+	r.slot <- job{Ask: a, ctx: ctx}
 }
 
 // Close cancels the work, waits for the goroutine to end, and returns. Nothing is delivered after it.
@@ -107,12 +123,12 @@ func (r *Runner) Close() {
 func (r *Runner) loop() {
 	defer close(r.done)
 	for j := range r.slot {
-		r.run(j)
+		r.run(&j)
 	}
 }
 
 // run does the stages of one job until one is cancelled or there is no mesh.
-func (r *Runner) run(j job) {
+func (r *Runner) run(j *job) {
 	for s := StageMesh; s < NumStages; s++ {
 		ctx := j.ctx
 		// The regions of the observers on a ready mesh take less than a frame, and a drag must show them: they are
@@ -133,6 +149,9 @@ func (r *Runner) run(j job) {
 		if s == StageMesh {
 			r.starved = time.Time{}
 		}
+		if u.Err == errRests {
+			continue
+		}
 		r.deliver(u)
 		if s == StageMesh && u.Err != nil {
 			return
@@ -142,36 +161,59 @@ func (r *Runner) run(j job) {
 
 // stage does one stage. A panic of the solver becomes the stage's error; what the solver held may be half done, so the
 // next stage gets a new one.
-func (r *Runner) stage(ctx context.Context, j job, s Stage) (u Update) {
+func (r *Runner) stage(ctx context.Context, j *job, s Stage) (u Update) {
 	began := time.Now()
-	u = Update{Rev: j.rev, Plan: j.plan, Stage: s}
+	u = Update{Rev: j.Rev, Plan: j.Plan, Draft: j.Draft, Stage: s}
 	defer func() {
 		if v := recover(); v != nil {
 			u.Sights, u.Approaches, u.Problems = nil, nil, nil
 			u.Err = &Crash{Stage: s, Value: v, Stack: debug.Stack()}
 			r.solver = r.fresh()
+			j.note(u)
 		}
 		u.Took = time.Since(began)
 	}()
 	if r.kept.fill(&u) {
+		j.note(u)
+		return u
+	}
+	if j.Draft && s.rests() {
+		u.Err = errRests
 		return u
 	}
 	switch s {
 	case StageMesh:
-		if u.Err = r.solver.Mesh(ctx, j.plan); u.Err == nil {
-			u.Problems = r.solver.Problems(j.plan)
+		if u.Err = r.solver.Mesh(ctx, j.Plan); u.Err == nil {
+			u.Problems = r.solver.Problems(j.Plan)
 		}
 	case StageSights:
-		u.Sights, u.Err = r.solver.Sights(ctx, j.plan)
+		u.Sights, u.Err = r.solver.Sights(ctx, j.Plan)
 	case StageApproaches:
-		u.Approaches, u.Err = r.solver.Approaches(ctx, j.plan)
+		u.Approaches, u.Err = r.solver.Approaches(ctx, j.Plan)
 	case StageSeenFrom:
-		u.Sights, u.Err = r.solver.SeenFrom(ctx, j.plan)
+		u.Sights, u.Err = r.solver.SeenFrom(ctx, j.Plan)
+	case StageWidths:
+		if u.Err = j.fail; u.Err != nil {
+			return u
+		}
+		u.Approaches = slices.Clone(j.rows) // those of the other stage are already shown
+		u.Err = r.solver.ClearWidths(ctx, j.Plan, u.Approaches)
 	}
 	if u.Err == nil {
 		r.kept.keep(u)
 	}
+	j.note(u)
 	return u
+}
+
+// errRests is the error of a stage that a draft goes without. It is not delivered.
+var errRests = errors.New("live: not for a draft")
+
+// note keeps what later stages go on from.
+func (j *job) note(u Update) {
+	if u.Stage == StageApproaches {
+		j.rows, j.fail = u.Approaches, u.Err
+	}
 }
 
 // Crash is the error of a stage that panicked.

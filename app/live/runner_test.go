@@ -50,6 +50,12 @@ func (f *fake) Sights(ctx context.Context, p *plan.Plan) ([]study.Sight, error) 
 func (f *fake) Approaches(ctx context.Context, p *plan.Plan) ([]study.Approach, error) {
 	return []study.Approach{{Start: p.Sheet().Title}}, f.do(ctx, live.StageApproaches)
 }
+func (f *fake) ClearWidths(ctx context.Context, _ *plan.Plan, rows []study.Approach) error {
+	for i := range rows {
+		rows[i].ClearWidth = 900
+	}
+	return f.do(ctx, live.StageWidths)
+}
 func (f *fake) SeenFrom(ctx context.Context, p *plan.Plan) ([]study.Sight, error) {
 	return []study.Sight{{Name: p.Sheet().Title}}, f.do(ctx, live.StageSeenFrom)
 }
@@ -97,9 +103,9 @@ func revs(got []live.Update, s live.Stage) (r []uint64) {
 
 func TestRunnerDeliversEachStageInOrder(t *testing.T) {
 	synctest.Test(t, func(t *testing.T) {
-		r := newRig(&fake{take: [live.NumStages]time.Duration{ms(3), ms(1), ms(5), ms(7)}})
+		r := newRig(&fake{take: [live.NumStages]time.Duration{ms(3), ms(1), ms(5), ms(7), ms(4)}})
 		p := titled("a")
-		r.Submit(7, p)
+		r.Submit(live.Ask{Rev: 7, Plan: p})
 		time.Sleep(ms(100))
 		synctest.Wait()
 		if len(r.got()) != int(live.NumStages) {
@@ -121,11 +127,11 @@ func TestRunnerNewestWins(t *testing.T) {
 	synctest.Test(t, func(t *testing.T) {
 		r := newRig(&fake{take: [live.NumStages]time.Duration{ms(10), 0, ms(10), ms(10)}})
 		for rev := uint64(1); rev <= 50; rev++ {
-			r.Submit(rev, titled("a"))
+			r.Submit(live.Ask{Rev: rev, Plan: titled("a")})
 		}
 		time.Sleep(ms(100))
 		synctest.Wait()
-		if last := r.got()[len(r.got())-1]; last.Rev != 50 || last.Stage != live.StageSeenFrom {
+		if last := r.got()[len(r.got())-1]; last.Rev != 50 || last.Stage != live.StageWidths {
 			t.Errorf("last update is %v of revision %d, want the last stage of 50", last.Stage, last.Rev)
 		}
 		if a := revs(r.got(), live.StageApproaches); !slices.Equal(a, []uint64{50}) {
@@ -140,7 +146,7 @@ func TestRunnerShowsRegionsWhileDragging(t *testing.T) {
 	synctest.Test(t, func(t *testing.T) {
 		r := newRig(&fake{take: [live.NumStages]time.Duration{0, ms(4), ms(200), ms(200)}})
 		for rev := uint64(1); rev <= 200; rev++ {
-			r.Submit(rev, titled("a"))
+			r.Submit(live.Ask{Rev: rev, Plan: titled("a")})
 			time.Sleep(ms(10))
 		}
 		synctest.Wait()
@@ -167,7 +173,7 @@ func TestRunnerShowsMeshesWhileDragging(t *testing.T) {
 	synctest.Test(t, func(t *testing.T) {
 		r := newRig(&fake{take: [live.NumStages]time.Duration{ms(100), ms(1), ms(50), ms(50)}})
 		for rev := uint64(1); rev <= 150; rev++ {
-			r.Submit(rev, titled("a"))
+			r.Submit(live.Ask{Rev: rev, Plan: titled("a")})
 			time.Sleep(ms(20))
 		}
 		synctest.Wait()
@@ -183,22 +189,22 @@ func TestRunnerKeepsApproachesWhenAnObserverMoves(t *testing.T) {
 		f := &fake{}
 		r := newRig(f)
 		one := plan.From(plan.Parts{Sheet: plan.Sheet{Title: "one"}})
-		r.Submit(1, one)
+		r.Submit(live.Ask{Rev: 1, Plan: one})
 		time.Sleep(ms(1))
-		r.Submit(2, one) // the same parts
+		r.Submit(live.Ask{Rev: 2, Plan: one}) // the same parts
 		time.Sleep(ms(1))
 		synctest.Wait()
-		want := []live.Stage{0, 1, 2, 3, 0, 1}
+		want := []live.Stage{0, 1, 2, 3, 4, 0, 1}
 		if !slices.Equal(f.calls, want) {
 			t.Errorf("stages solved %v, want %v", f.calls, want)
 		}
 		if a := revs(r.got(), live.StageApproaches); !slices.Equal(a, []uint64{1, 2}) {
 			t.Errorf("approaches delivered for %v, want 1 and 2", a)
 		}
-		r.Submit(3, titled("two"))
+		r.Submit(live.Ask{Rev: 3, Plan: titled("two")})
 		time.Sleep(ms(1))
 		synctest.Wait()
-		if last := r.got()[len(r.got())-2]; last.Approaches[0].Start != "two" {
+		if last := r.got()[len(r.got())-3]; last.Approaches[0].Start != "two" {
 			t.Errorf("approaches of another plan were kept: %+v", last)
 		}
 		r.Close()
@@ -212,7 +218,7 @@ func TestRunnerSurvivesPanics(t *testing.T) {
 				f := &fake{}
 				f.panic[s] = true
 				r := newRig(f)
-				r.Submit(1, titled("a"))
+				r.Submit(live.Ask{Rev: 1, Plan: titled("a")})
 				time.Sleep(ms(1))
 				synctest.Wait()
 				var crash *live.Crash
@@ -227,7 +233,7 @@ func TestRunnerSurvivesPanics(t *testing.T) {
 				}
 				f.panic[s] = false
 				r.all = nil
-				r.Submit(2, titled("b"))
+				r.Submit(live.Ask{Rev: 2, Plan: titled("b")})
 				time.Sleep(ms(1))
 				synctest.Wait()
 				if len(r.got()) != int(live.NumStages) || r.got()[s].Err != nil {
@@ -244,11 +250,12 @@ func TestRunnerDeliversErrors(t *testing.T) {
 		f := &fake{}
 		f.fail[live.StageApproaches] = errors.New("too long a wall")
 		r := newRig(f)
-		r.Submit(1, titled("a"))
+		r.Submit(live.Ask{Rev: 1, Plan: titled("a")})
 		time.Sleep(ms(1))
 		synctest.Wait()
-		if len(r.got()) != 4 || r.got()[2].Err == nil || r.got()[3].Err != nil {
-			t.Errorf("updates %+v, want an error of the approaches alone", r.got())
+		if len(r.got()) != 5 || r.got()[2].Err == nil || r.got()[3].Err != nil ||
+			r.got()[4].Err == nil || slices.Contains(f.calls, live.StageWidths) {
+			t.Errorf("updates %+v, want an error of the approaches and of what goes on from them", r.got())
 		}
 		r.Close()
 	})
@@ -259,8 +266,8 @@ func TestRunnerCloseJoins(t *testing.T) {
 	for after := range 12 {
 		synctest.Test(t, func(t *testing.T) {
 			r := newRig(&fake{take: [live.NumStages]time.Duration{ms(2), ms(2), ms(2), ms(2)}})
-			r.Submit(1, titled("a"))
-			r.Submit(2, titled("b"))
+			r.Submit(live.Ask{Rev: 1, Plan: titled("a")})
+			r.Submit(live.Ask{Rev: 2, Plan: titled("b")})
 			time.Sleep(ms(after))
 			r.Close()
 			n := len(r.got())
@@ -272,4 +279,43 @@ func TestRunnerCloseJoins(t *testing.T) {
 			}
 		})
 	}
+}
+
+// TestRunnerLeavesWidthsToRest: a draft goes without clear widths and is done without them; what is at rest has them, in
+// rows of their own.
+func TestRunnerLeavesWidthsToRest(t *testing.T) {
+	synctest.Test(t, func(t *testing.T) {
+		f := &fake{}
+		b := live.NewBoard(func(show func()) { show() }, func(*live.State) {})
+		r := &rig{fake: f}
+		r.Runner = live.New(func() live.Solver { return f }, func(u live.Update) { r.deliver(u); b.Put(u) })
+		p := titled("a")
+		r.Submit(live.Ask{Rev: 1, Plan: p, Draft: true})
+		time.Sleep(ms(1))
+		synctest.Wait()
+		if slices.Contains(f.calls, live.StageWidths) || !b.State().Done(1) || b.State().Failed[live.StageWidths].Err != nil {
+			t.Errorf("a draft solved %v, done %v, failed %v", f.calls, b.State().Done(1), b.State().Failed[live.StageWidths].Err)
+		}
+		r.Submit(live.Ask{Rev: 2, Plan: p})
+		time.Sleep(ms(1))
+		synctest.Wait()
+		s := b.State()
+		if !s.Done(2) || s.Result().Approaches[0].ClearWidth != 900 {
+			t.Errorf("at rest: done %v, %+v, want the clear width", s.Done(2), s.Result().Approaches)
+		}
+		if s.Latest[live.StageApproaches].Approaches[0].ClearWidth != 0 {
+			t.Error("the rows that were shown before have changed")
+		}
+		r.Submit(live.Ask{Rev: 3, Plan: p, Draft: true}) // nothing that walks depend on has changed
+		time.Sleep(ms(1))
+		synctest.Wait()
+		if b.State().Result().Approaches[0].ClearWidth != 900 {
+			t.Error("the clear width is lost while something else is dragged")
+		}
+		b.Put(live.Update{Rev: 4, Plan: p, Stage: live.StageApproaches, Approaches: make([]study.Approach, 1)})
+		if b.State().Result().Approaches[0].ClearWidth != 0 {
+			t.Error("new walks are shown with the clear width of old ones")
+		}
+		r.Close()
+	})
 }
