@@ -57,6 +57,7 @@ func (p *pen) obstruct(main *study.Approach) {
 func (p *pen) obstructWalk(a *study.Approach) {
 	p.routed(a.Points)
 	p.routed(a.FullPoints)
+	p.obstructGap(a)
 	if a.Status == study.StatusNone {
 		if from, to, ok := p.blockedEnds(a); ok {
 			p.routeLeg(from, to)
@@ -316,6 +317,7 @@ func (p *pen) placeFigures(a *study.Approach) {
 		p.settle(labelKey{rankFigure, "walk"}, run, look, p.along(line, run, look), false)
 		p.work.route = line
 	}
+	p.placeGap(a)
 }
 
 // along returns spots beside a line: at its middle and then further from it, on the lower side first.

@@ -153,6 +153,7 @@ func (p *pen) walks(main *study.Approach) {
 	p.fullWalk(main)
 	p.sight(main)
 	p.approach(main)
+	p.tightMark(main)
 	if main.Status != study.StatusNone {
 		p.firstSight(p.mm(main.FirstSight), to, FirstSight, FirstSightHalo, p.theme.Red)
 	}

@@ -54,6 +54,8 @@ const (
 	sightLine    = 1.1
 	fullWalkLine = 1.3
 	otherLine    = 1.3
+	gapLine      = 1.8 // ticks at the tightest spot of a walk
+	gapTick      = 10  // their length
 )
 
 // Sizes of text and its halo, in px.
