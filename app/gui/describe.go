@@ -26,6 +26,7 @@ type field struct {
 	pick    func(i int) error       // takes a choice over
 	empty   string                  // what an empty entry means
 	note    string                  // beside the entry, in hints' ink
+	under   string                  // on a line of its own below the entry, in hints' ink
 }
 
 // fact is a figure under the form.
@@ -99,9 +100,9 @@ func headed(group string, f field) field {
 // units are the display units and what the form calls them.
 var units = []struct{ unit, name string }{{"m", "metres"}, {"cm", "centimetres"}, {"mm", "millimetres"}, {"ft", "feet and inches"}}
 
-// describePlan is what the form offers of the plan itself: its title, its unit, and the person who walks.
+// describePlan is what the form offers of the plan itself: its title, place and unit, and the person who walks.
 func (w *window) describePlan(p *plan.Plan) []field {
-	sheet, walker := p.Sheet(), p.Walker()
+	sheet := p.Sheet()
 	putSheet := func(label string, change func(*plan.Sheet)) error {
 		change(&sheet)
 		return w.doEdit(tool.Named(label, plan.SetSheet{Sheet: sheet}))
@@ -115,26 +116,13 @@ func (w *window) describePlan(p *plan.Plan) []field {
 			unit.chosen = i
 		}
 	}
-	pace := field{label: "Pace", unit: "m/s", text: trimDecimals(walker.Pace, 1, 3), set: func(text string) error {
-		v, err := parseNumber(text)
-		if err != nil {
-			return err
-		}
-		walker.Pace = v
-		return w.doEdit(tool.Named("change pace", plan.SetWalker{Walker: walker}))
-	}}
-	return []field{
+	return append([]field{
 		headed("Plan", textField("Title", sheet.Title, func(t string) error {
 			return putSheet("change title", func(s *plan.Sheet) { s.Title = t })
 		})),
 		textField("Place", sheet.Place, func(t string) error { return putSheet("change place", func(s *plan.Sheet) { s.Place = t }) }),
 		unit,
-		headed("Walker", w.lengthField("Eye height", walker.Eye, func(v int32) error {
-			walker.Eye = v
-			return w.doEdit(tool.Named("change walker's eye", plan.SetWalker{Walker: walker}))
-		})),
-		pace,
-	}
+	}, w.describeWalker(p.Walker())...)
 }
 
 // errPositive is what a form says of a measure that must be above nothing.

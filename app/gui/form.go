@@ -33,6 +33,7 @@ type formRow struct {
 	pick  *picker
 	dots  *swatches
 	note  *inkText
+	under *inkText // nil where the field has none
 }
 
 // factText is one figure under the form.
@@ -57,10 +58,23 @@ func newForm(w *window) *form {
 // update shows the selection: a new form for another item, new texts in the same form for the same one.
 func (f *form) update(p *plan.Plan, sel []plan.Ref) {
 	c := f.w.describe(p, sel)
-	if c.key != f.key || len(c.fields) != len(f.rows) || len(c.facts) != len(f.facts) {
+	if c.key != f.key || len(c.facts) != len(f.facts) || !f.fits(c.fields) {
 		f.build(c)
 	}
 	f.put(c)
+}
+
+// fits reports whether the form has the rows for some fields.
+func (f *form) fits(fields []field) bool {
+	if len(fields) != len(f.rows) {
+		return false
+	}
+	for i, d := range fields {
+		if (d.under != "") != (f.rows[i].under != nil) || d.label != f.rows[i].field.label {
+			return false
+		}
+	}
+	return true
 }
 
 // build makes the form's widgets.
@@ -81,6 +95,11 @@ func (f *form) build(c card) {
 			f.page.Add(inset(0, 12, 0, 2, newText(d.group, assets.Semibold, 12.5, roleInk)))
 		}
 		f.page.Add(f.row(d))
+		if d.under != "" {
+			r := f.rows[len(f.rows)-1]
+			r.under = newText(d.under, assets.Regular, 11, roleInk3).shrinking()
+			f.page.Add(inset(labelWidth, 0, 0, 4, r.under))
+		}
 	}
 	f.fault = newText("", assets.Regular, 12, roleRed).shrinking()
 	f.page.Add(f.fault)
@@ -179,6 +198,9 @@ func (f *form) put(c card) {
 	}
 	for i, r := range f.rows {
 		r.field = c.fields[i]
+		if r.under != nil {
+			r.under.set(r.field.under)
+		}
 		switch {
 		case r.entry != nil:
 			r.entry.put(r.field.text)

@@ -183,7 +183,7 @@ func (w *window) showAbout() {
 	w.ask("Enfilade", lines(
 		"An editor for floor plans on which seeing and being seen matter.",
 		"",
-		"A planar study: walkers are points, and everything is seen in the plane of the eye.",
+		"A planar study: walkers are upright bodies of one width, and everything is seen in the plane of the eye.",
 		"It is no safety certification, and no substitute for fire, escape or security assessment.",
 		"",
 		"Fonts: Lato, SIL Open Font License 1.1."), 560, choice{"Close", nil})
