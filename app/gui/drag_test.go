@@ -98,21 +98,25 @@ func cpuTime() time.Duration {
 	return time.Duration(u.Utime.Nano() + u.Stime.Nano())
 }
 
-// TestDragFrame holds the best of many frames against the limit: the best one says what the code costs, the others what
-// else the machine did.
+// TestDragFrame holds a frame against its limit, in the processor's time: the clock's would tell of other work on the
+// machine. Of some batches the best counts, for what disturbs the caches costs the processor's time too.
 func TestDragFrame(t *testing.T) {
 	if testing.Short() {
 		t.Skip("measures time")
 	}
+	const batches, frames = 12, 5
 	r := newDragRig(t, "gallery", 1600, 1000)
+	r.step(t, 0)
 	best := time.Hour
-	for i := range 60 {
-		began := time.Now()
-		r.step(t, i)
-		best = min(best, time.Since(began))
+	for k := range batches {
+		began := cpuTime()
+		for i := range frames {
+			r.step(t, k*frames+i)
+		}
+		best = min(best, (cpuTime()-began)/frames)
 	}
 	if best > 12*time.Millisecond && !raceEnabled {
-		t.Errorf("the quickest of 60 frames of a drag took %v, want under 12 ms", best)
+		t.Errorf("a frame of a drag takes %v of the processor's time, want under 12 ms", best)
 	}
 	i := 0
 	if n := testing.AllocsPerRun(50, func() { r.step(t, i); i++ }); n > 200 {
