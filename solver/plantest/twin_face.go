@@ -2,6 +2,7 @@ package plantest
 
 import (
 	"math/big"
+	"slices"
 
 	"enfilade/solver/exact"
 )
@@ -15,14 +16,30 @@ type Stretch struct{ Lo, Hi *big.Rat }
 // The directions to both ends are critical ones too, so that every gap between neighbouring directions lies before the face or
 // beside it; within a gap, what of the edge that stops sight lies behind the face's line lets it be seen.
 func (w *Twin) FaceSeen(p, a, b exact.Pt, height int32) []Stretch {
+	return w.FaceSeenWithin(p, a, b, height, nil)
+}
+
+// FaceSeenWithin is FaceSeen within a view.
+func (w *Twin) FaceSeenWithin(p, a, b exact.Pt, height int32, v *View) []Stretch {
 	if exact.Orient(a, b, p) <= 0 {
 		return nil
 	}
 	r, l := a.Sub(p), b.Sub(p)
-	v := &View{Right: r, Mid: l, Left: l}
+	face := &View{Right: r, Mid: l, Left: l}
+	dirs := w.criticalDirections(p, face)
+	if v != nil {
+		dirs = append(dirs, v.Right, v.Mid, v.Left)
+	}
+	slices.SortFunc(dirs, compareAngles)
+	dirs = slices.CompactFunc(dirs, func(a, b exact.Vec) bool { return compareAngles(a, b) == 0 })
 	var seen []Stretch
-	for _, g := range w.RegionWithin(p, height, v).Gaps {
-		if g.Edge < 0 || !v.holds(g.D1, g.D2) {
+	for i, d := range dirs {
+		next := dirs[(i+1)%len(dirs)]
+		if !face.holds(d, next) || !v.holds(d, next) {
+			continue
+		}
+		g := w.gap(p, d, next, height)
+		if g.Edge < 0 {
 			continue
 		}
 		s, ok := g.behind(p, a, b)

@@ -29,7 +29,7 @@ func (b *beam) rightmost() exact.Line { return exact.Through(b.left[0], b.tipR) 
 // visibility and shortest path problems inside triangulated simple polygons", Algorithmica 2, 1987, section 4, taken round
 // every obstacle on both sides). All bounds are lines through two grid points.
 //
-//   - Units: grid points, exact.
+//   - Units: grid points, exact. The Origin of each piece is its own index, see Glimpse.
 //   - Errors: the context's when it is cancelled.
 //   - Cost: proportional to the number of beams in each triangle: on floor plans a small multiple of a region's triangles; it
 //     grows with the pairs of corners that line up with some point of the face, at most as the square of the number of corners
@@ -44,7 +44,7 @@ func (f *Finder) Partly(ctx context.Context, dst []Piece, c Face, height int32) 
 	b.beams, b.chains = b.beams[:0], b.chains[:0]
 	f.newTurn()
 	for _, s := range steps {
-		p := Piece{Tri: s.tri}
+		p := Piece{Tri: s.tri, Origin: int32(len(dst))}
 		p.add(c.front(), true)
 		dst = f.record(dst, &p)
 	}
@@ -55,7 +55,7 @@ func (f *Finder) Partly(ctx context.Context, dst []Piece, c Face, height int32) 
 		}
 		now := b.beams[len(b.beams)-1]
 		b.beams = b.beams[:len(b.beams)-1]
-		p := Piece{Tri: now.in.Tri()}
+		p := Piece{Tri: now.in.Tri(), Origin: int32(len(dst))}
 		l := now.leftmost()
 		p.add(exact.Line{At: l.At, Dir: l.Dir.Neg()}, now.tipL == c.A && now.right[0] == c.B)
 		p.add(now.rightmost(), now.tipR == c.B && now.left[0] == c.A)
@@ -170,14 +170,10 @@ func (f *Finder) chainOf(points ...exact.Pt) []exact.Pt {
 // record appends a piece that has an inside, unless its triangle is known to be seen all over.
 func (f *Finder) record(dst []Piece, p *Piece) []Piece {
 	b := &f.faces
-	if b.full[p.Tri] == b.turn {
+	if b.full[p.Tri] == b.turn || !b.convex.Take(&f.m.Tris[p.Tri], p) {
 		return dst
 	}
-	t := &f.m.Tris[p.Tri]
-	if !b.convex.Take(t, p) {
-		return dst
-	}
-	if !b.convex.trim(p) {
+	if !b.convex.cut() {
 		b.full[p.Tri] = b.turn
 	}
 	return append(dst, *p)

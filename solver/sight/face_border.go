@@ -34,6 +34,7 @@ type union struct {
 
 // shape is a piece as the lines of its edges, counter-clockwise.
 type shape struct {
+	piece int // its index
 	tri   int32
 	lines []exact.Line
 	from  []int        // Convex.Source of each line
@@ -56,7 +57,7 @@ func (u *union) fill(pieces []Piece) {
 		if !c.Take(&u.m.Tris[p.Tri], p) {
 			continue
 		}
-		s := shape{tri: p.Tri, bits: p.Clip}
+		s := shape{piece: i, tri: p.Tri, bits: p.Clip}
 		for k := range c.Len() {
 			s.lines = append(s.lines, c.Line(k))
 			s.from = append(s.from, c.Source(k))
@@ -79,6 +80,17 @@ func (u *union) fill(pieces []Piece) {
 		i = n
 	}
 	u.shapes = kept
+}
+
+// Reduced returns the pieces, in the order of their triangles, without those that have no inside or lie in another one.
+func (f *Finder) Reduced(pieces []Piece) []Piece {
+	u := union{m: f.m}
+	u.fill(pieces)
+	list := make([]Piece, len(u.shapes))
+	for i := range u.shapes {
+		list[i] = pieces[u.shapes[i].piece]
+	}
+	return list
 }
 
 // outermost returns the shapes that do not lie in another one, in place.

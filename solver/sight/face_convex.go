@@ -13,10 +13,23 @@ const MaxLines = 10
 
 // Piece is a convex part of a triangle: what of it lies to the left of N lines.
 type Piece struct {
-	Tri   int32
-	N     uint8
-	Clip  uint16 // bit i says that Lines[i] is a side of the view or a limit of distance
-	Lines [MaxLines]exact.Line
+	Tri    int32
+	Origin int32 // where the piece comes from, as whoever found it counts; pieces cut out of it keep it
+	N      uint8
+	Clip   uint16 // bit i says that Lines[i] is a side of the view or a limit of distance
+	Lines  [MaxLines]exact.Line
+}
+
+// Pieces returns cones of sight as pieces; c is the clip they were found with.
+func Pieces(eye exact.Pt, cones []Cone, c Clip) []Piece {
+	list := make([]Piece, 0, len(cones))
+	for _, k := range cones {
+		p := Piece{Tri: k.Tri}
+		p.add(exact.Line{At: eye, Dir: k.R}, c.Sides && sameWay(k.R, c.Right))
+		p.add(exact.Line{At: eye, Dir: k.L.Neg()}, c.Sides && sameWay(k.L, c.Left))
+		list = append(list, p)
+	}
+	return list
 }
 
 // add narrows the piece to the left of l; clip says that l is a side of the view or a limit of distance.
@@ -88,20 +101,24 @@ func (c *Convex) Take(t *mesh.Tri, p *Piece) bool {
 }
 
 // trim takes the lines that do not bound it off a piece that the polygon was made from, but for sides and limits, which tell
-// what a border is; it reports whether any line is left that bounds it.
-func (c *Convex) trim(p *Piece) bool {
+// what a border is.
+func (c *Convex) trim(p *Piece) {
 	bounds := uint32(0)
 	for _, k := range c.ring {
 		bounds |= 1 << k
 	}
-	q := Piece{Tri: p.Tri}
+	q := Piece{Tri: p.Tri, Origin: p.Origin}
 	for i, l := range p.Lines[:p.N] {
 		if clip := p.Clip>>i&1 != 0; clip || bounds>>(3+i)&1 != 0 {
 			q.add(l, clip)
 		}
 	}
 	*p = q
-	return bounds>>3 != 0
+}
+
+// cut reports whether any line but the triangle's edges bounds the polygon.
+func (c *Convex) cut() bool {
+	return slices.ContainsFunc(c.ring, func(k uint8) bool { return k > 2 })
 }
 
 // bounded reports whether line i of the piece that the polygon was made from bounds it.

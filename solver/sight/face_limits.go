@@ -90,10 +90,27 @@ func edgeOf(ring []exact.Pt, eye exact.Pt, d exact.Vec) (exact.Line, bool) {
 	return exact.Through(ring[i], ring[(i+1)%len(ring)]), true
 }
 
+// None reports whether nothing is limited.
+func (m *Limits) None() bool { return !m.Sides && m.Far == nil && m.Near == nil }
+
+// Holds reports whether a place keeps to the limits.
+func (m *Limits) Holds(p exact.Pt) bool {
+	c := Clip{Sides: m.Sides, Right: m.Right, Mid: m.Mid, Left: m.Left, Range: m.Far}
+	d := p.Sub(m.At)
+	if d == (exact.Vec{}) {
+		return m.Near == nil
+	}
+	if !c.holds(p, d) {
+		return false
+	}
+	near, some := edgeOf(m.Near, m.At, d)
+	return !some || near.Side(p) <= 0
+}
+
 // Limited appends to dst what of the pieces lies within limits, in convex pieces again. O(pieces · corners of the limits), of
 // which pieces that no limit cuts cost little.
 func (f *Finder) Limited(dst, pieces []Piece, m *Limits) []Piece {
-	if !m.Sides && m.Far == nil && m.Near == nil {
+	if m.None() {
 		return append(dst, pieces...)
 	}
 	wedges := m.wedges()

@@ -34,7 +34,10 @@ func (f *Finder) Onto(dst, pieces []Piece, from *Finder) []Piece {
 			for _, l := range edgesOf(&from.m.Tris[p.Tri]) {
 				q.add(l, false)
 			}
-			dst = f.record(dst, &q)
+			if n := len(dst); len(f.record(dst, &q)) > n {
+				f.faces.convex.trim(&q)
+				dst = append(dst, q)
+			}
 		}
 	}
 	return dst
