@@ -7,9 +7,11 @@ import (
 	"runtime/debug"
 	"slices"
 	"sync"
+	"sync/atomic"
 	"time"
 
 	"enfilade/solver/plan"
+	"enfilade/solver/pulse"
 	"enfilade/solver/study"
 )
 
@@ -72,8 +74,19 @@ const patience = 250 * time.Millisecond
 type job struct {
 	Ask
 	ctx  context.Context
+	base context.Context  // of ctx; ends only when the runner is told to stop, not when a newer plan comes
 	rows []study.Approach // what StageApproaches found
 	fail error            // or why it found nothing
+}
+
+// share is the part of a whole study's time that each stage takes, as a study that is solved at once tells it.
+var share = [NumStages]float64{0.5, 0.05, 0.2, 0.05, 0.2}
+
+// Progress is how far the study of a plan is.
+type Progress struct {
+	Rev   uint64
+	Stage Stage   // what is being worked out
+	Done  float64 // of the whole study, 0 to 1
 }
 
 // Runner recomputes the newest plan on a goroutine of its own.
@@ -83,9 +96,12 @@ type Runner struct {
 	deliver func(Update)
 	slot    chan job
 	done    chan struct{}
-	cancel  context.CancelFunc
+	cancel  context.CancelFunc // lets go of the present job for a newer one
+	base    context.Context    // of all jobs until Cancel or Close
+	stop    context.CancelFunc // ends base
 	closed  sync.Once
 	kept    kept
+	told    atomic.Pointer[Progress]
 	starved time.Time // when a mesh was first cancelled since the last one that was finished; zero when none was
 }
 
@@ -94,6 +110,7 @@ type Runner struct {
 func New(fresh func() Solver, deliver func(Update)) *Runner {
 	r := &Runner{fresh: fresh, solver: fresh(), deliver: deliver, slot: make(chan job, 1), done: make(chan struct{}),
 		cancel: func() {}}
+	r.base, r.stop = context.WithCancel(context.Background())
 	go r.loop()
 	return r
 }
@@ -103,18 +120,47 @@ func New(fresh func() Solver, deliver func(Update)) *Runner {
 func (r *Runner) Submit(a Ask) {
 	r.cancel()
 	var ctx context.Context
-	ctx, r.cancel = context.WithCancel(context.Background())
+	ctx, r.cancel = context.WithCancel(r.base)
 	select {
 	case <-r.slot: // a waiting job nobody will look at
 	default:
 	}
-	r.slot <- job{Ask: a, ctx: ctx}
+	r.slot <- job{Ask: a, ctx: ctx, base: r.base}
+}
+
+// Cancel lets go of everything submitted before; stages that were not done give no answer. Whoever calls Submit calls it.
+func (r *Runner) Cancel() {
+	r.stop()
+	select {
+	case <-r.slot:
+	default:
+	}
+	r.base, r.stop = context.WithCancel(context.Background())
+}
+
+// Progress returns how far the work of the moment is, or that of the last stage that was begun. Any goroutine may call it.
+func (r *Runner) Progress() Progress {
+	if p := r.told.Load(); p != nil {
+		return *p
+	}
+	return Progress{}
+}
+
+// listen returns the context for a stage's work, whose progress it notes.
+func (r *Runner) listen(ctx context.Context, rev uint64, s Stage) context.Context {
+	from := 0.0
+	for t := range s {
+		from += share[t]
+	}
+	hear := func(done float64) { r.told.Store(&Progress{rev, s, from + done*share[s]}) }
+	hear(0)
+	return pulse.With(ctx, hear)
 }
 
 // Close cancels the work, waits for the goroutine to end, and returns. Nothing is delivered after it.
 func (r *Runner) Close() {
 	r.closed.Do(func() {
-		r.cancel()
+		r.stop()
 		close(r.slot)
 	})
 	<-r.done
@@ -134,14 +180,14 @@ func (r *Runner) run(j *job) {
 		// The regions of the observers on a ready mesh take less than a frame, and a drag must show them: they are
 		// finished for a plan that is already superseded, and delivered.
 		if s == StageSights || s == StageMesh && !r.starved.IsZero() && time.Since(r.starved) > patience {
-			ctx = context.WithoutCancel(ctx)
+			ctx = j.base
 		}
 		if ctx.Err() != nil {
 			return
 		}
 		u := r.stage(ctx, j, s)
 		if errors.Is(u.Err, context.Canceled) && ctx.Err() != nil {
-			if s == StageMesh && r.starved.IsZero() {
+			if s == StageMesh && r.starved.IsZero() && j.base.Err() == nil {
 				r.starved = time.Now()
 			}
 			return
@@ -181,6 +227,7 @@ func (r *Runner) stage(ctx context.Context, j *job, s Stage) (u Update) {
 		u.Err = errRests
 		return u
 	}
+	ctx = r.listen(ctx, j.Rev, s)
 	switch s {
 	case StageMesh:
 		if u.Err = r.solver.Mesh(ctx, j.Plan); u.Err == nil {

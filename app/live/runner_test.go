@@ -3,6 +3,7 @@ package live_test
 import (
 	"context"
 	"errors"
+	"math"
 	"slices"
 	"strings"
 	"sync"
@@ -315,6 +316,48 @@ func TestRunnerLeavesWidthsToRest(t *testing.T) {
 		b.Put(live.Update{Rev: 4, Plan: p, Stage: live.StageApproaches, Approaches: make([]study.Approach, 1)})
 		if b.State().Result().Approaches[0].ClearWidth != 0 {
 			t.Error("new walks are shown with the clear width of old ones")
+		}
+		r.Close()
+	})
+}
+
+// TestRunnerTellsProgress: what is told rises through the stages, and a runner that is told to stop gives no more answers
+// until the next plan, not even of a mesh that a drag would have finished.
+func TestRunnerTellsProgress(t *testing.T) {
+	synctest.Test(t, func(t *testing.T) {
+		f := &fake{take: [live.NumStages]time.Duration{ms(400), ms(10), ms(100), ms(10), ms(50)}}
+		r := newRig(f)
+		r.Submit(live.Ask{Rev: 1, Plan: titled("a")})
+		last := live.Progress{}
+		for range 55 {
+			time.Sleep(ms(10))
+			synctest.Wait()
+			now := r.Progress()
+			if now.Rev != 1 || now.Stage < last.Stage || now.Done < last.Done {
+				t.Fatalf("after %+v comes %+v", last, now)
+			}
+			last = now
+		}
+		if want := (live.Progress{Rev: 1, Stage: live.StageWidths, Done: 0.8}); math.Abs(last.Done-want.Done) > 1e-9 || last.Stage != want.Stage {
+			t.Errorf("in the last stage %+v is told, want %+v", last, want)
+		}
+		for rev := uint64(2); rev < 50; rev++ { // a drag that leaves no time for a mesh
+			r.Submit(live.Ask{Rev: rev, Plan: titled("a")})
+			time.Sleep(ms(10))
+		}
+		n := len(r.got())
+		r.Cancel()
+		r.Cancel()
+		time.Sleep(time.Second)
+		synctest.Wait()
+		if len(r.got()) != n {
+			t.Errorf("%d answers after Cancel", len(r.got())-n)
+		}
+		r.Submit(live.Ask{Rev: 60, Plan: titled("a")})
+		time.Sleep(time.Second)
+		synctest.Wait()
+		if a := revs(r.got(), live.StageWidths); len(a) == 0 || a[len(a)-1] != 60 {
+			t.Errorf("after Cancel the next plan has widths of %v", a)
 		}
 		r.Close()
 	})
