@@ -27,6 +27,10 @@ func (w *window) typedKey(name fyne.KeyName) {
 		w.modal.key(name)
 		return
 	}
+	resting := !w.session.Previewing() && len(w.sketch.Band) == 0
+	if name == fyne.KeyEscape && resting && w.stopStudy() {
+		return
+	}
 	mods := w.modifiers()
 	k, known := toolKeys[name]
 	if known && w.tool.Key(w.host, tool.Key{Name: k, Shift: mods&fyne.KeyModifierShift != 0, Ctrl: mods&fyne.KeyModifierControl != 0}) {
@@ -164,7 +168,7 @@ func (w *window) setTheme(choice string) {
 // showKeys shows the page of keys.
 func (w *window) showKeys() {
 	rows := [][2]string{
-		{"Esc", "the select tool; in the middle of something, leave it"}, {"letters on the rail", "choose a tool"},
+		{"Esc", "the select tool; in the middle of something, leave it; a long study stops"}, {"letters on the rail", "choose a tool"},
 		{"Enter, double click", "end a run of walls"}, {"digits", "type a length while drawing; Tab for the angle"},
 		{"Shift", "eight directions, squares, turns of 15°; a plain gap"}, {"Ctrl while dragging", "no snapping"},
 		{"arrows", "nudge by 0.1 m, with Shift 1 m, with Ctrl 1 cm"}, {"Delete", "take the selection away"},

@@ -24,6 +24,7 @@ type results struct {
 	state   *live.State
 	result  *study.Result // nil before the first answer
 	slow    bool          // the study has been asked for longer than a blink ago and is not done
+	stopped bool          // it was cancelled before it was done
 
 	observer, start, target string // the chosen ones
 	passing                 string // an observer that is shown in place of the chosen one while it is on the pointer
@@ -33,7 +34,7 @@ type results struct {
 
 // asked notes that the study of a revision was asked for.
 func (r *results) asked(rev uint64, now time.Time) {
-	r.rev, r.askedAt, r.slow = rev, now, false
+	r.rev, r.askedAt, r.slow, r.stopped = rev, now, false, false
 }
 
 // reset forgets everything about the plan before; rev is the new plan's first revision.
@@ -184,16 +185,6 @@ func (r *results) took() (sum time.Duration) {
 	return sum
 }
 
-// working returns the stage that is being worked out and the share of the stages that are done.
-func (r *results) working() (live.Stage, float32) {
-	for s := range live.NumStages {
-		if r.state == nil || !r.state.Fresh(s, r.rev) {
-			return s, float32(s) / float32(live.NumStages)
-		}
-	}
-	return live.StageSeenFrom, 1
-}
-
 // answered is told the newest answers, on the toolkit's goroutine.
 func (w *window) answered(s *live.State) {
 	if w.closing {
@@ -207,20 +198,53 @@ func (w *window) answered(s *live.State) {
 	w.foot.update(w)
 }
 
-// watchSlow looks again after a blink whether the study is done.
+// watchSlow looks again after a blink whether the study is done, and from then on how far it is.
 func (w *window) watchSlow() {
 	rev := w.results.rev
 	time.AfterFunc(blink, func() {
 		w.do(func() {
-			if w.closing || w.results.rev != rev || w.results.done() {
+			if !w.waiting(rev) {
 				return
 			}
 			w.results.slow = true
 			w.report()
 			w.view.Refresh()
 			w.table.update()
+			w.watchProgress(rev)
 		})
 	})
+}
+
+// glance is the time between two looks at how far a study is.
+const glance = 80 * time.Millisecond
+
+// watchProgress keeps the progress bar up to date until the study of a revision is done.
+func (w *window) watchProgress(rev uint64) {
+	time.AfterFunc(glance, func() {
+		w.do(func() {
+			if w.waiting(rev) {
+				w.report()
+				w.watchProgress(rev)
+			}
+		})
+	})
+}
+
+// waiting reports whether the study of a revision is what the window waits for.
+func (w *window) waiting(rev uint64) bool {
+	return !w.closing && w.results.rev == rev && !w.results.stopped && !w.results.done()
+}
+
+// stopStudy cancels a study that takes long, and reports whether there was one. What it has not found out stays open until
+// the next change of the plan.
+func (w *window) stopStudy() bool {
+	if !w.results.slow || !w.waiting(w.results.rev) {
+		return false
+	}
+	w.runner.Cancel()
+	w.results.stopped = true
+	w.report()
+	return true
 }
 
 // report shows in the status line how the study stands.
@@ -240,10 +264,16 @@ func (w *window) report() {
 	case r.done():
 		w.status.solved(r.took())
 		w.status.progress.Hide()
+	case r.stopped:
+		w.status.solve.set("stopped; the next change solves anew")
+		w.status.progress.Hide()
 	case r.slow:
-		stage, done := r.working()
-		w.status.solve.set("working out " + stage.String())
-		w.status.progress.set(done)
+		if p := w.runner.Progress(); p.Rev == r.rev {
+			w.status.solve.set("working out " + p.Stage.String() + " (Esc stops)")
+			w.status.progress.set(float32(p.Done))
+		} else { // the worker is still letting go of the plan before
+			w.status.progress.set(0)
+		}
 		w.status.progress.Show()
 	}
 }

@@ -320,10 +320,19 @@ func TestSlowStudyShowsProgress(t *testing.T) {
 	if !r.status.progress.Visible() || !strings.Contains(r.status.solve.text, "approaches") {
 		t.Errorf("progress shown %v, status %q", r.status.progress.Visible(), r.status.solve.text)
 	}
+	if d := r.status.progress.done; d < 0.5 || d > 0.8 {
+		t.Errorf("with the mesh ready and approaches not, the bar is at %g", d)
+	}
 	if r.picture.scene().Stale {
 		t.Error("the region is known and must not be dimmed for the walks' sake")
 	}
+	r.keys(fyne.KeyEscape)
+	if r.status.progress.Visible() || !strings.Contains(r.status.solve.text, "stopped") {
+		t.Errorf("after Esc progress %v, status %q", r.status.progress.Visible(), r.status.solve.text)
+	}
 	close(hold)
+	r.click(11.35, 8.75) // the observer of the rotunda
+	r.drag(11.35, 8.75, 11.5, 8.75)
 	r.settle()
 	if r.status.progress.Visible() || r.table.rows[0].first != "9.9 m" {
 		t.Errorf("after the study progress %v, %+v", r.status.progress.Visible(), r.table.rows[0])
