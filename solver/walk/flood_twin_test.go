@@ -247,3 +247,13 @@ func TestFloodTurnsBack(t *testing.T) {
 		t.Errorf("%v over %v to %v", a.Length, a.Turns, a.End)
 	}
 }
+
+// TestFloodTiedTurns reaches a corner by two equally long ways, of which one goes straight on there and the other turns: the
+// walk that is told must be one of the two.
+func TestFloodTiedTurns(t *testing.T) {
+	m := build(t, "wall 7,6 0,2; glass 7,1 7,5; block 7,1 8,1 8,5 7,5; floor -5,-5 15,-5 15,15 -5,15")
+	_, full := both(t, m, at(8, 0), at(5, 8))
+	if want := 10000 * (5 + 3*math.Sqrt2); !near(full.Length, want) || len(full.Turns) < 2 || !full.Ties {
+		t.Errorf("%v over %v, ties %v, want %v", full.Length, full.Turns, full.Ties, want)
+	}
+}

@@ -139,10 +139,12 @@ func (f *Finder) place(n int32, end [2]float64) (x, y float64) {
 func (f *Finder) turnsTo(dst []exact.Pt, n int32, end [2]float64) []exact.Pt {
 	k := &f.nodes[n]
 	if k.parent >= 0 {
+		// Not k.toward: of two equally long ways that may be the direction of the other one.
+		in := k.at.Sub(f.nodes[k.parent].at)
 		// The offset is measured, so whether the last bend is one is, too: a bend of less than 2^-40 is none.
-		cross := float64(k.toward.X)*end[1] - float64(k.toward.Y)*end[0]
-		dot := float64(k.toward.X)*end[0] + float64(k.toward.Y)*end[1]
-		if end == [2]float64{} || dot > 0 && math.Abs(cross) <= 0x1p-40*math.Hypot(end[0], end[1])*math.Sqrt(float64(k.toward.Len2())) {
+		cross := float64(in.X)*end[1] - float64(in.Y)*end[0]
+		dot := float64(in.X)*end[0] + float64(in.Y)*end[1]
+		if end == [2]float64{} || dot > 0 && math.Abs(cross) <= 0x1p-40*math.Hypot(end[0], end[1])*math.Sqrt(float64(in.Len2())) {
 			return f.chain(dst, k.parent, k.at)[1:]
 		}
 	}
