@@ -3,6 +3,7 @@ package paint
 import (
 	"math"
 	"strconv"
+	"strings"
 
 	"github.com/paulmach/orb"
 
@@ -112,7 +113,8 @@ func (p *pen) placeLabels(main *study.Approach) {
 	}
 }
 
-// problemTexts says beside every ring what is wrong.
+// problemTexts says beside every ring what is wrong; what would help comes after a semicolon and is left to the form, for a
+// long line finds no place that hides nothing.
 func (p *pen) problemTexts() {
 	if p.s.Result == nil {
 		return
@@ -130,7 +132,8 @@ func (p *pen) problemTexts() {
 			p.words(p.s.nameOf(pr.Items[0]))
 			p.words(" ")
 		}
-		p.words(pr.Text)
+		what, _, _ := strings.Cut(pr.Text, "; ")
+		p.words(what)
 		t := p.said(from)
 		r := ring8{side: 21, up: 21, down: 21, dx: 15, dUp: 14, dDown: 14}
 		p.settle(labelKey{rankProblem, id}, t, look, p.around(p.point(pr.At), r, east, t, look), true)
