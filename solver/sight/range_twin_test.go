@@ -14,7 +14,7 @@ import (
 // TestRangeAgainstTwin cuts the twin's triangles by the range's polygon, each on its own and in floating point, and holds the
 // fast region's area and the length of its walls against the sums.
 func TestRangeAgainstTwin(t *testing.T) {
-	for _, name := range []string{"tangles", "slivers", "giants"} {
+	for _, name := range []string{"tangles", "slivers", "specks"} {
 		t.Run(name, rapid.MakeCheck(func(t *rapid.T) {
 			p := plantest.Small()[name].Draw(t, "plan")
 			t.Log(plantest.Text(p))
@@ -22,7 +22,7 @@ func TestRangeAgainstTwin(t *testing.T) {
 			twin, fast := plantest.NewTwin(g), sight.New(m)
 			at := places(p, g)
 			eye := at[rapid.IntRange(0, len(at)-1).Draw(t, "eye")]
-			radius := rapid.SampledFrom([]int32{16, 100, 1000, 3000, 4000, 5000, 20000, 1 << 20, exact.Limit / 14}).Draw(t, "radius")
+			radius := rapid.SampledFrom([]int32{16, 100, 1000, 3000, 4000, 5000, 20000, 1 << 20}).Draw(t, "radius")
 			if !eye.Add(exact.Vec{X: radius, Y: radius}).Legal() || !eye.Add(exact.Vec{X: -radius, Y: -radius}).Legal() {
 				t.Skip("beyond the legal range")
 			}
