@@ -124,7 +124,7 @@ func (p *pen) cost(b box) float64 {
 		c += 4 * (area - in)
 	}
 	for _, q := range p.work.boxes {
-		c += b.overlap(q)
+		c += 4 * b.overlap(q) // a hidden glyph is worse than a line across the drawing's ink
 	}
 	f := frame(b)
 	for i := range p.work.legs {
