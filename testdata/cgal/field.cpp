@@ -3,13 +3,13 @@
 
 #include <algorithm>
 #include <cstdint>
-#include <map>
 #include <random>
 #include <stdexcept>
 #include <string>
 
-Field::Field(const Graph &g) : graph(g) {
-  insert();
+Field::Field(const Graph &g, const std::vector<Point> &extra) : graph(g) {
+  insert(extra);
+  for (size_t i = 0; i < g.edges.size(); i++) name(int(i));
   wind();
   check();
   for (auto v : vertex) corner.emplace_back(v->point().x(), v->point().y());
@@ -27,52 +27,62 @@ static std::vector<int> alone(const Graph &g) {
   return list;
 }
 
-void Field::insert() {
+void Field::insert(const std::vector<Point> &extra) {
   std::vector<std::pair<Fast::Point_2, int>> points;
   for (auto &p : graph.points) points.emplace_back(Fast::Point_2(p.x, p.y), int(points.size()));
-  std::map<int, int> middle;
-  for (int e : alone(graph)) {
-    auto &a = graph.points[graph.edges[e].a], &b = graph.points[graph.edges[e].b];
-    middle[e] = int(points.size());
-    points.emplace_back(Fast::Point_2((a.x + b.x) / 2, (a.y + b.y) / 2), int(points.size()));
-  }
   triangles.insert(points.begin(), points.end());
+  if (triangles.number_of_vertices() != points.size()) throw std::runtime_error("two points at one place");
   vertex.resize(points.size());
   for (auto v : triangles.finite_vertex_handles()) vertex[v->info()] = v;
-  if (triangles.number_of_vertices() != points.size()) throw std::runtime_error("two points at one place");
-  auto join = [&](int a, int b) {
+  for (auto &e : graph.edges) {
     try {
-      triangles.insert_constraint(vertex[a], vertex[b]);
+      triangles.insert_constraint(vertex[e.a], vertex[e.b]);
     } catch (...) {
       throw std::runtime_error("edges cross");
     }
-  };
-  for (size_t i = 0; i < graph.edges.size(); i++) {
-    auto &e = graph.edges[i];
-    auto m = middle.find(int(i));
-    if (m == middle.end())
-      join(e.a, e.b);
-    else
-      join(e.a, m->second), join(m->second, e.b);
+  }
+  auto more = extra;
+  for (int e : alone(graph)) {
+    auto &a = graph.points[graph.edges[e].a], &b = graph.points[graph.edges[e].b];
+    more.push_back({(a.x + b.x) / 2, (a.y + b.y) / 2});
+  }
+  for (auto &p : more) {
+    size_t before = triangles.number_of_vertices();
+    auto v = triangles.insert(Fast::Point_2(p.x, p.y));
+    if (triangles.number_of_vertices() == before) continue; // there is a point already
+    v->info() = int(vertex.size());
+    vertex.push_back(v);
   }
   for (auto f : triangles.finite_face_handles()) {
     f->info().id = int(tile.size());
     tile.push_back(f);
   }
-  auto name = [&](int a, int b, int e) {
+}
+
+// Finds the side that leads from a vertex straight towards another, and returns the vertex at its end.
+Field::Vertex Field::step(Vertex from, Vertex to, Face &f, int &i) const {
+  auto c = triangles.incident_faces(from), end = c;
+  do {
+    f = c;
+    i = f->cw(f->index(from));
+    auto next = f->vertex(f->cw(i));
+    if (!triangles.is_infinite(next) && CGAL::collinear(from->point(), next->point(), to->point()) &&
+        CGAL::angle(next->point(), from->point(), to->point()) == CGAL::ACUTE)
+      return next;
+  } while (++c != end);
+  throw std::runtime_error("no side lies along an edge");
+}
+
+// Names the sides along which an edge lies: one, or several when a point was added to it.
+void Field::name(int e) {
+  Vertex at = vertex[graph.edges[e].a], to = vertex[graph.edges[e].b];
+  while (at != to) {
     Face f;
     int i;
-    if (!triangles.is_edge(vertex[a], vertex[b], f, i)) throw std::runtime_error("an edge runs through a point");
+    at = step(at, to, f, i);
+    if (at != to && size_t(at->info()) < graph.points.size()) throw std::runtime_error("an edge runs through a point");
     auto m = triangles.mirror_edge({f, i});
     f->info().edge[i] = m.first->info().edge[m.second] = e;
-  };
-  for (size_t i = 0; i < graph.edges.size(); i++) {
-    auto &e = graph.edges[i];
-    auto m = middle.find(int(i));
-    if (m == middle.end())
-      name(e.a, e.b, int(i));
-    else
-      name(e.a, m->second, int(i)), name(m->second, e.b, int(i));
   }
 }
 
@@ -194,19 +204,8 @@ std::vector<Field::Face> Field::around(const Point &p) const {
 Field::Face Field::left(int a, int b) const {
   Face f;
   int i;
-  if (!triangles.is_edge(vertex[a], vertex[b], f, i)) {
-    // The wall was split in its middle: look from a along the same direction.
-    auto c = triangles.incident_faces(vertex[a]), end = c;
-    do {
-      Face g = c;
-      int k = g->index(vertex[a]);
-      int e = g->info().edge[g->cw(k)]; // the side from a to the corner ccw(k)
-      if (e >= 0 && (graph.edges[e].a == b || graph.edges[e].b == b)) return g;
-    } while (++c != end);
-    throw std::runtime_error("no such edge");
-  }
-  // f has a and b as corners; it lies to the left of the way from ccw(i) to cw(i).
-  return f->vertex(f->ccw(i)) == vertex[a] ? f : f->neighbor(i);
+  step(vertex[a], vertex[b], f, i);
+  return f; // its corners run counter-clockwise from a along the side
 }
 
 std::vector<Piece> Field::trace(const ExactPoint &a, const ExactPoint &b) const {

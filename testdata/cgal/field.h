@@ -45,12 +45,13 @@ public:
   typedef Triangles::Face_handle Face;
   typedef Triangles::Vertex_handle Vertex;
 
-  // Throws std::runtime_error when the graph is not planar, when winds do not close, or when a body has no border.
-  explicit Field(const Graph &graph);
+  // Makes the extra points corners of triangles too. Throws std::runtime_error when the graph is not planar, when winds do
+  // not close, or when a body has no border.
+  explicit Field(const Graph &graph, const std::vector<Point> &extra = {});
 
   const Graph &graph;
   Triangles triangles;
-  std::vector<Vertex> vertex; // of each graph point; points added to split walls follow
+  std::vector<Vertex> vertex; // of each graph point; points added to split walls and the extra ones follow
   std::vector<Face> tile;     // the triangles within the hull
   std::vector<ExactPoint> corner; // exact twin of each vertex
 
@@ -66,7 +67,9 @@ public:
   std::vector<Piece> trace(const ExactPoint &a, const ExactPoint &b) const;
 
 private:
-  void insert();
+  void insert(const std::vector<Point> &extra);
+  void name(int edge);
+  Vertex step(Vertex from, Vertex to, Face &f, int &i) const;
   void wind();
   void check() const;
 };

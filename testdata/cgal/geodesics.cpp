@@ -3,6 +3,8 @@
 
 #include <CGAL/Polygon_mesh_processing/polygon_soup_to_polygon_mesh.h>
 
+#include <algorithm>
+#include <cmath>
 #include <limits>
 #include <numeric>
 #include <stdexcept>
@@ -22,7 +24,17 @@ struct Sets {
 
 } // namespace
 
-FlatMesh::FlatMesh(const Field &field) : face(field.tile.size(), -1), turn(field.tile.size()) {
+// CGAL holds two rays for one when squares of distances differ by less than 2e-14, whatever the size of the mesh ("relaxed
+// pruning", 5.5.1). Floor plans are full of rays that are one, along straight rows of corners, and in whole grid units the
+// rounding of such squares is far above that: windows get lost and walks come out too long. So the mesh is made to fit
+// into a sixty-fourth of a unit, by a power of two, which rounds nothing.
+static double fit(const Field &field) {
+  double size = 1;
+  for (auto &p : field.graph.points) size = std::max({size, std::abs(p.x), std::abs(p.y)});
+  return std::exp2(-6 - std::ceil(std::log2(size)));
+}
+
+FlatMesh::FlatMesh(const Field &field) : scale(fit(field)), face(field.tile.size(), -1), turn(field.tile.size()) {
   auto open = [](Field::Face f) { return f->info().id >= 0 && !(f->info().solid & WALK); };
   Sets corners(3 * field.tile.size());
   for (auto f : field.tile)
@@ -44,7 +56,7 @@ FlatMesh::FlatMesh(const Field &field) : face(field.tile.size(), -1), turn(field
       if (n < 0) {
         n = int(points.size());
         auto p = f->vertex(k)->point();
-        points.emplace_back(p.x(), p.y(), 0);
+        points.emplace_back(p.x() * scale, p.y() * scale, 0);
       }
       polygon.push_back(n);
     }
@@ -64,9 +76,7 @@ FlatMesh::FlatMesh(const Field &field) : face(field.tile.size(), -1), turn(field
   }
 }
 
-Geodesics::Geodesics(const Field &f) : field(f), mesh(f) {}
-
-void Geodesics::clear() { paths = std::make_unique<Paths>(mesh.sheet); }
+Geodesics::Geodesics(const Field &f) : field(f), mesh(f), paths(std::make_unique<Paths>(mesh.sheet)) {}
 
 Geodesics::Paths::Face_location Geodesics::place(int tile, double x, double y) const {
   auto f = field.tile[tile];
@@ -85,16 +95,44 @@ Geodesics::Paths::Face_location Geodesics::place(int tile, double x, double y) c
 void Geodesics::add(int tile, double x, double y) { paths->add_source_point(place(tile, x, y)); }
 
 double Geodesics::to(int tile, double x, double y) {
+  double best = within(tile, x, y);
+  auto f = field.tile[tile];
+  for (int i = 0; i < 3; i++) {
+    auto p = f->vertex(f->ccw(i))->point(), q = f->vertex(f->cw(i))->point();
+    bool on = (q.x() - p.x()) * (y - p.y()) - (q.y() - p.y()) * (x - p.x()) <= 0;
+    int other = f->neighbor(i)->info().id;
+    if (on && other >= 0 && mesh.face[other] >= 0 && !(field.stops(f, i) & WALK)) best = std::min(best, within(other, x, y));
+  }
+  return best;
+}
+
+// What CGAL tells, in grid units.
+static double told(double d, double scale) { return d < 0 ? std::numeric_limits<double>::infinity() : d / scale; }
+
+// The distance of corner k of a tile.
+double Geodesics::corner(int tile, int k) {
+  auto h = mesh.sheet.halfedge(Sheet::Face_index(mesh.face[tile]));
+  for (int i = 0; mesh.turn[tile][i] != k; i++) h = mesh.sheet.next(h);
+  return told(paths->shortest_distance_to_source_points(mesh.sheet.source(h)).first, mesh.scale);
+}
+
+// A place on the very border of CGAL's windows, such as one on the side along which the walk runs, can fall out of all of
+// them by a rounding. So the straight ways within the triangle from its corners are looked at too.
+double Geodesics::within(int tile, double x, double y) {
   auto at = place(tile, x, y);
-  double d = paths->shortest_distance_to_source_points(at.first, at.second).first;
-  return d < 0 ? std::numeric_limits<double>::infinity() : d;
+  double best = told(paths->shortest_distance_to_source_points(at.first, at.second).first, mesh.scale);
+  for (int k = 0; k < 3; k++) {
+    auto p = field.tile[tile]->vertex(k)->point();
+    best = std::min(best, corner(tile, k) + std::hypot(p.x() - x, p.y() - y));
+  }
+  return best;
 }
 
 std::vector<Geodesics::Root> Geodesics::roots() {
   std::vector<Root> list;
   for (auto v : mesh.sheet.vertices()) {
     double d = paths->shortest_distance_to_source_points(v).first;
-    if (d >= 0) list.push_back({mesh.sheet.point(v).x(), mesh.sheet.point(v).y(), d});
+    if (d >= 0) list.push_back({mesh.sheet.point(v).x() / mesh.scale, mesh.sheet.point(v).y() / mesh.scale, d / mesh.scale});
   }
   return list;
 }

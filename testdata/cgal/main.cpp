@@ -20,7 +20,6 @@ struct Session {
   std::unique_ptr<Sight> sight;
   std::unique_ptr<Walk> walk;
   Point start{0, 0};
-  bool started = false;
 
   Field &floor() {
     if (!field) field = std::make_unique<Field>(graph);
@@ -31,13 +30,12 @@ struct Session {
     return *sight;
   }
   Walk &from(const Point &p) {
-    if (!walk) walk = std::make_unique<Walk>(floor());
-    if (!started || !(p == start)) walk->start(p);
-    start = p, started = true;
+    if (!walk || !(p == start)) walk.reset(), walk = std::make_unique<Walk>(graph, p);
+    start = p;
     return *walk;
   }
   void read(std::istream &in) {
-    walk.reset(), sight.reset(), field.reset(), started = false;
+    walk.reset(), sight.reset(), field.reset();
     if (!graph.read(in)) throw std::runtime_error("the plan is cut short");
   }
 };

@@ -207,3 +207,46 @@ bool Sight::holds(const Point &at, const std::vector<Sector> &region, const Poin
     }
   return false;
 }
+
+typedef Exact::Vector_2 Vector;
+
+// Adds, for a triangle that has p in its closure, the inward normals of the sides on which p lies; false when p is outside.
+static bool normals(const ExactPoint corners[3], const ExactPoint &p, std::vector<Vector> &out) {
+  for (int i = 0; i < 3; i++) {
+    auto &a = corners[i], &b = corners[(i + 1) % 3];
+    auto side = CGAL::orientation(a, b, p);
+    if (side == CGAL::RIGHT_TURN) return false;
+    if (side == CGAL::COLLINEAR) out.push_back((b - a).perpendicular(CGAL::COUNTERCLOCKWISE));
+  }
+  return true;
+}
+
+// Whether some direction makes an acute angle with every one of these: whether, from one of them, all others lie less than
+// half a turn to the left.
+static bool common(const std::vector<Vector> &list) {
+  if (list.empty()) return true;
+  for (auto &first : list) {
+    bool all = true;
+    for (auto &v : list) {
+      auto turn = CGAL::sign(CGAL::determinant(first, v));
+      all &= turn == CGAL::POSITIVE || (turn == CGAL::ZERO && CGAL::sign(first * v) == CGAL::POSITIVE);
+    }
+    if (all) return true;
+  }
+  return false;
+}
+
+bool Sight::beside(const Point &at, const std::vector<Sector> &region, const Point &point, Field::Face tile) const {
+  ExactPoint eye(at.x, at.y), p(point.x, point.y);
+  ExactPoint floor[3];
+  for (int k = 0; k < 3; k++) floor[k] = ExactPoint(tile->vertex(k)->point().x(), tile->vertex(k)->point().y());
+  std::vector<Vector> own;
+  if (!normals(floor, p, own)) return false;
+  for (auto &s : region)
+    for (auto &b : s.border) {
+      ExactPoint seen[3] = {eye, b.from, b.to};
+      std::vector<Vector> both = own;
+      if (CGAL::orientation(eye, b.from, b.to) == CGAL::LEFT_TURN && normals(seen, p, both) && common(both)) return true;
+    }
+  return false;
+}

@@ -42,6 +42,10 @@ public:
   // Whether p lies in the closed region.
   bool holds(const Point &eye, const std::vector<Sector> &region, const Point &p) const;
 
+  // Whether the region holds points next to p within a tile that has p in its closure: what a walker sees who stands at p in
+  // that tile. Touching the back of a wall, or a body's border from without, is not seeing what is on its other side.
+  bool beside(const Point &eye, const std::vector<Sector> &region, const Point &p, Field::Face tile) const;
+
 private:
   typedef Expansion<Exact>::Halfedge Halfedge;
 

@@ -13,17 +13,15 @@ static double value(const Number &n) { return CGAL::to_double(n.exact()); }
 
 static const double none = std::numeric_limits<double>::infinity();
 
-Walk::Walk(const Field &f) : field(f), geodesics(new Geodesics(f)) {}
-Walk::~Walk() {}
-
-void Walk::start(const Point &p) {
-  from = p;
-  geodesics->clear();
+Walk::Walk(const Graph &graph, const Point &start)
+    : from(start), field(graph, {start}), geodesics(new Geodesics(field)) {
   bool stands = false;
-  for (auto f : field.around(p))
-    if (!(f->info().solid & WALK)) geodesics->add(f->info().id, p.x, p.y), stands = true;
+  for (auto f : field.around(from))
+    if (!(f->info().solid & WALK)) geodesics->add(f->info().id, from.x, from.y), stands = true;
   if (!stands) throw std::runtime_error("inside");
 }
+
+Walk::~Walk() {}
 
 double Walk::to(const Point &p) const {
   double best = none;
@@ -54,7 +52,8 @@ std::vector<Walk::Entrance> Walk::entrances(const std::vector<Border> &border) c
 // gives too short a length; and "distance to the corner plus perpendicular" bounds it from below, which orders the search.
 End Walk::approach(Sight &sight, const Point &target) const {
   auto region = sight.region(target);
-  if (sight.holds(target, region, from)) return {0, from.x, from.y};
+  for (auto f : field.around(from))
+    if (!(f->info().solid & WALK) && sight.beside(target, region, from, f)) return {0, from.x, from.y};
   End best{none, 0, 0};
   auto offer = [&](int tile, double x, double y) {
     double d = geodesics->to(tile, x, y);

@@ -18,12 +18,10 @@ struct End {
 
 class Walk {
 public:
-  explicit Walk(const Field &field);
+  // Walks that begin at a point, made a vertex of the mesh. A start on a thin wall or at a node stands on every side of it.
+  // Throws std::runtime_error when no floor is there.
+  Walk(const Graph &graph, const Point &start);
   ~Walk();
-
-  // Sets where walks begin. A start on a thin wall or at a node stands on every side of it. Throws std::runtime_error when
-  // no floor is there.
-  void start(const Point &p);
 
   // The length of the shortest walk to p, infinite when there is none.
   double to(const Point &p) const;
@@ -36,8 +34,8 @@ public:
   std::pair<double, double> judge(Sight &sight, const Point &target, double x, double y) const;
 
 private:
-  const Field &field;
   Point from;
+  Field field;
   std::unique_ptr<Geodesics> geodesics;
 
   // A straight way into a region, within one triangle.

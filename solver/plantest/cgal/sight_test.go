@@ -35,18 +35,15 @@ func TestRegionAgainstCGAL(t *testing.T) {
 	tangled.log(t, "regions in tangles")
 }
 
-// eyeHeight is where people's eyes are in plans that say nothing else.
-const eyeHeight = 16000
-
 func compareRegions(t *testing.T, r *cgal.Reference, s *specimen, eyes []exact.Pt, c *tally) {
 	t.Helper()
-	r.Plan(s.graph, eyeHeight)
+	r.Plan(s.graph, plantest.Eye)
 	f := sight.New(s.mesh)
 	c.plans++
 	c.walls += s.walls
 	for _, eye := range eyes {
 		want, wantErr := r.Region(eye)
-		region, err := f.Region(eye, eyeHeight)
+		region, err := f.Region(eye, plantest.Eye)
 		if wantErr != nil || err != nil {
 			if !errors.Is(wantErr, cgal.ErrInside) || !errors.Is(err, sight.ErrOutside) {
 				t.Errorf("%s: eye at %v: error %v, CGAL %v\n%s", s.name, eye, err, wantErr, s.text())

@@ -25,11 +25,6 @@ type specimen struct {
 	*rand.Rand
 }
 
-var makers = []struct {
-	name string
-	make func(seed uint64, walls int) *plan.Plan
-}{{"office", plantest.Office}, {"clutter", plantest.Clutter}, {"comb", plantest.Comb}, {"maze", plantest.Maze}}
-
 // ladder is how many seeded plans there are of each size. Most are small: they are quick, and a wrong turn shows in them as
 // well; a few are large enough for what only happens in the middle of thousands of walls.
 var ladder = []struct{ from, to, plans int }{
@@ -57,11 +52,11 @@ func eachSpecimen(t *testing.T, f func(s *specimen)) {
 	for _, step := range ladder {
 		for range step.plans {
 			seed++
-			kind := makers[seed%uint64(len(makers))]
+			kind := plantest.Kinds[seed%uint64(len(plantest.Kinds))]
 			random := rand.New(rand.NewPCG(seed, 77))
 			walls := step.from + random.IntN(step.to-step.from+1)
-			name := fmt.Sprintf("%s seed %d, %d walls", kind.name, seed, walls)
-			f(newSpecimen(t, name, walls, kind.make(seed, walls), random))
+			name := fmt.Sprintf("%s seed %d, %d walls", kind.Name, seed, walls)
+			f(newSpecimen(t, name, walls, kind.Make(seed, walls), random))
 		}
 	}
 }
