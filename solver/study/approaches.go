@@ -10,16 +10,13 @@ import (
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 	"enfilade/solver/pulse"
-	"enfilade/solver/sight"
 	"enfilade/solver/walk"
 )
 
 // sought is a target made ready to be walked to.
 type sought struct {
+	look
 	target plan.Target
-	at     exact.Pt
-	cones  []sight.Cone
-	fault  string // why it cannot be looked for
 	closed string // what it stands in, so that nobody can stand at it whatever their width
 	stood  bool   // the walker can stand at it
 }
@@ -30,7 +27,10 @@ func (s *Solver) Approaches(ctx context.Context, p *plan.Plan) ([]Approach, erro
 	if err := s.Mesh(ctx, p); err != nil {
 		return nil, err
 	}
-	targets := s.scene.findAll(p)
+	targets, err := s.scene.findAll(ctx, p)
+	if err != nil {
+		return nil, err
+	}
 	out := make([]Approach, 0, p.NumStarts()*p.NumTargets())
 	for i, start := range p.Starts() {
 		if err := pulse.Tell(ctx, float64(i)/float64(p.NumStarts())); err != nil {
@@ -45,36 +45,38 @@ func (s *Solver) Approaches(ctx context.Context, p *plan.Plan) ([]Approach, erro
 	return out, nil
 }
 
-// findAll finds the cones of every target once, for all starts.
-func (sc *scene) findAll(p *plan.Plan) []sought {
+// findAll finds the places that see each target once, for all starts.
+func (sc *scene) findAll(ctx context.Context, p *plan.Plan) ([]sought, error) {
 	all := make([]sought, 0, p.NumTargets())
-	sc.cones = sc.cones[:0]
 	for _, t := range p.Targets() {
-		all = append(all, sc.find(t, p.Walker().Eye))
+		k, err := sc.find(ctx, t, p.Walker())
+		if err != nil {
+			return nil, err
+		}
+		all = append(all, k)
 	}
-	return all
+	return all, nil
 }
 
-func (sc *scene) find(t plan.Target, eye int32) sought {
-	f := sc.stand(targetPoint(t), sc.plain.sighted(eye))
-	k := sought{target: t, at: f.at}
-	if !f.ok {
-		k.fault = "target " + t.ID + " " + f.text
-		return k
+func (sc *scene) find(ctx context.Context, t plan.Target, w plan.Walker) (sought, error) {
+	l, err := sc.lookFor(ctx, sc.wide, sc.seek, t, w, false)
+	k := sought{look: l, target: t}
+	if err != nil || k.fault != "" {
+		return k, err
 	}
-	cones, err := sc.seek.Cones(f.at, eye, frontOf(t))
-	if err != nil {
-		k.fault = "target " + t.ID + " faces into the wall it hangs on; turn its face round"
-		return k
+	k.stood = sc.wide.free(k.at, sc.wide.shut)
+	if !sc.plain.free(k.at, sc.plain.shut) {
+		k.closed = "the target stands in " + nameOf(sc.plain.holder(k.at, sc.plain.standing().by)) + ", where nobody walks"
 	}
-	n := len(sc.cones)
-	sc.cones = append(sc.cones, cones...)
-	k.cones = sc.cones[n:len(sc.cones):len(sc.cones)]
-	k.stood = sc.wide.free(f.at, sc.wide.shut)
-	if !sc.plain.free(f.at, sc.plain.shut) {
-		k.closed = "the target stands in " + nameOf(sc.plain.holder(f.at, sc.plain.standing().by)) + ", where nobody walks"
+	return k, nil
+}
+
+// goal returns where a walk to first sight ends.
+func (k *look) goal() walk.Goal {
+	if k.view != nil {
+		return walk.Goal{Pieces: k.view.pieces}
 	}
-	return k
+	return walk.Goal{Eye: k.at, Cones: k.cones}
 }
 
 // fromStart solves all approaches of one start in one flood.
@@ -83,14 +85,14 @@ func (sc *scene) fromStart(ctx context.Context, p *plan.Plan, start plan.Start, 
 	f := sc.begin(start.At)
 	var goals []walk.Goal
 	for i, k := range targets {
-		rows[i] = Approach{Start: start.ID, Target: k.target.ID}
+		rows[i] = Approach{Start: start.ID, Target: k.target.ID, Asked: k.asked}
 		switch {
 		case !f.ok:
 			rows[i].Problem = "start " + start.ID + " " + f.text
 		case k.fault != "":
-			rows[i].Problem = k.fault
+			rows[i].Problem = "target " + k.target.ID + " " + k.fault
 		default:
-			goals = append(goals, walk.Goal{Eye: k.at, Cones: k.cones}, walk.Goal{Spot: sc.destination(k, f.at)})
+			goals = append(goals, k.goal(), walk.Goal{Spot: sc.destination(k, f.at)})
 		}
 	}
 	if len(goals) == 0 {
@@ -143,7 +145,9 @@ func (sc *scene) destination(k sought, start exact.Pt) *walk.Spot {
 // fillApproach fills in the walk to first sight.
 func (sc *scene) fillApproach(a *Approach, k sought, path walk.Path, pace float64, b *barrierFinder) {
 	if !path.Found {
-		a.Reason = b.beforeCones(k.cones)
+		if a.Reason = nowhere(k.asked); len(k.triangles()) > 0 {
+			a.Reason = b.beforeTriangles(k.triangles())
+		}
 		return
 	}
 	a.Status = StatusApproach
@@ -154,10 +158,26 @@ func (sc *scene) fillApproach(a *Approach, k sought, path walk.Path, pace float6
 	a.Ties = path.Ties
 	a.FirstSight = orb.Point{mm(path.End[0]), mm(path.End[1])}
 	a.Points = pointsOf(path)
-	a.SightLine = mm(math.Hypot(path.End[0]-float64(k.at.X), path.End[1]-float64(k.at.Y)))
+	x, y := float64(k.at.X), float64(k.at.Y)
+	if k.asked.Face {
+		x, y = k.view.inView(path.Piece, path.End[0], path.End[1])
+	}
+	a.SightTo = orb.Point{mm(x), mm(y)}
+	a.SightLine = mm(math.Hypot(path.End[0]-x, path.End[1]-y))
 	if pace > 0 {
 		a.Seconds = a.Length / 1000 / pace
 	}
+}
+
+// nowhere says that no place sees enough of a target.
+func nowhere(a Asked) string {
+	switch {
+	case a.Seen == plan.SeenAll:
+		return "no place sees all of its face"
+	case a.Seen == plan.SeenShare:
+		return "no place sees that much of its face"
+	}
+	return "no place from which it may be seen sees it"
 }
 
 // fillFullWalk fills in the walk to the target itself.

@@ -8,7 +8,6 @@ import (
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
 	"enfilade/solver/plan"
-	"enfilade/solver/sight"
 )
 
 // barrierFinder tells what closes the way from a start: the first thing to be crossed on a way that crosses as few edges
@@ -103,11 +102,11 @@ func (b *barrierFinder) offFloor(con int32) bool {
 	return con >= 0 && g.outline.Items[g.graph.Edges[con].Item].Kind == plan.KindFloor
 }
 
-// beforeCones says what closes the way to a region.
-func (b *barrierFinder) beforeCones(cones []sight.Cone) string {
+// beforeTriangles says what closes the way to a region that has parts in these triangles.
+func (b *barrierFinder) beforeTriangles(tris []int32) string {
 	best := noWay
-	for _, c := range cones {
-		best = b.better(best, c.Tri)
+	for _, t := range tris {
+		best = b.better(best, t)
 	}
 	return b.says(best)
 }

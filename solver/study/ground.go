@@ -17,6 +17,7 @@ type ground struct {
 	outline *arrange.Outline
 	graph   *arrange.Graph
 	mesh    *mesh.Mesh
+	eyes    []*eyes // for each height that faces are looked for at, once asked for
 }
 
 // makeGround rounds and triangulates an outline.
@@ -28,7 +29,9 @@ func makeGround(ctx context.Context, o *arrange.Outline) (*ground, error) {
 	return groundOf(site), nil
 }
 
-func groundOf(s *arrange.Site) *ground { return &ground{s, s.Outline, s.Graph, s.Mesh} }
+func groundOf(s *arrange.Site) *ground {
+	return &ground{site: s, outline: s.Outline, graph: s.Graph, mesh: s.Mesh}
+}
 
 // demand is what a mark asks of the place it stands at.
 type demand struct {

@@ -30,7 +30,15 @@ type Sight struct {
 	Clip        float64    // m, border on the sides of the view angle and the arc of the range
 	Boundary    orb.Ring   // mm, counter-clockwise, first point not repeated
 	Kinds       []EdgeKind // Kinds[i] is the border from Boundary[i] to the next point
-	TargetsSeen []string   // observers only: ids of the targets in the region, in the plan's order
+	More        []Border   // the region's other rings: further parts counter-clockwise, holes clockwise
+	TargetsSeen []string   // observers only: ids of the targets of which any part is in the region, in the plan's order
+	Asked       Asked      // targets only: how much of it must be in view
+}
+
+// Border is a closed ring: points in mm, the first not repeated, and Kinds[i] the border from point i to the next.
+type Border struct {
+	Ring  orb.Ring
+	Kinds []EdgeKind
 }
 
 // Status says how an approach ends.
@@ -51,7 +59,9 @@ type Approach struct {
 	Length        float64     // mm, to first sight
 	FirstSight    orb.Point   // mm
 	Points        []orb.Point // mm, the walk from start to first sight; one point when the start sees the target
-	SightLine     float64     // mm, from first sight to the target
+	Asked         Asked       // how much of the target must be in view
+	SightLine     float64     // mm, from first sight to SightTo
+	SightTo       orb.Point   // mm, the target, or the part of its face that is in view from first sight
 	HasFullWalk   bool
 	FullWalk      float64     // mm
 	FullPoints    []orb.Point // mm

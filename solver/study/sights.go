@@ -31,23 +31,39 @@ func (s *Solver) SeenFrom(ctx context.Context, p *plan.Plan) ([]Sight, error) {
 	if err := s.Mesh(ctx, p); err != nil {
 		return nil, err
 	}
-	eye := p.Walker().Eye
 	out := make([]Sight, 0, p.NumTargets())
 	for i, t := range p.Targets() {
 		if err := pulse.Tell(ctx, float64(i)/float64(p.NumTargets())); err != nil {
 			return nil, err
 		}
-		at := targetPoint(t)
-		e := Sight{Item: plan.Ref{Kind: plan.KindTarget, ID: t.ID}, Name: t.Name, At: pointMM(at), Eye: mm(eye)}
-		f := s.scene.stand(at, s.scene.plain.sighted(eye))
-		if !f.ok {
-			e.Problem = f.text
-		} else {
-			s.scene.measure(&e, f.at, eye, frontOf(t))
+		e, err := s.scene.seenFrom(ctx, t, p.Walker())
+		if err != nil {
+			return nil, err
 		}
 		out = append(out, e)
 	}
 	return out, nil
+}
+
+// seenFrom returns the places that see one target.
+func (sc *scene) seenFrom(ctx context.Context, t plan.Target, w plan.Walker) (Sight, error) {
+	e := Sight{Item: plan.Ref{Kind: plan.KindTarget, ID: t.ID}, Name: t.Name, At: pointMM(targetPoint(t)), Eye: mm(w.Eye)}
+	k, err := sc.lookFor(ctx, sc.plain, sc.sight, t, w, true)
+	e.Asked = k.asked
+	switch {
+	case err != nil:
+		return e, err
+	case k.fault != "":
+		e.Problem = k.fault
+	case k.view != nil && (k.asked.Face || k.lim.Near != nil):
+		e.At = pointMM(k.at)
+		e.fill(k.view.on.Outline(k.view.pieces, k.at, w.Eye))
+	default:
+		clip := k.clip
+		clip.Range = k.lim.Far
+		sc.measure(&e, k.at, w.Eye, clip)
+	}
+	return e, nil
 }
 
 // observed returns what one observer sees.
@@ -71,8 +87,7 @@ func (sc *scene) observed(p *plan.Plan, o plan.Observer) Sight {
 		return e
 	}
 	for _, t := range p.Targets() {
-		tf := sc.stand(targetPoint(t), sc.plain.sighted(o.Eye))
-		if tf.ok && inFront(t, f.at) && sc.sight.SeesWithin(f.at, tf.at, o.Eye, clip) {
+		if sc.seenBy(t, f.at, o.Eye, clip) {
 			e.TargetsSeen = append(e.TargetsSeen, t.ID)
 		}
 	}
@@ -107,16 +122,39 @@ func (sc *scene) measure(e *Sight, eye exact.Pt, height int32, clip sight.Clip) 
 		return
 	}
 	l := r.Lengths()
-	e.Area = r.Area() / perM2
+	e.border(r.Area(), l)
+	e.Boundary, e.Kinds = ringOf(r)
+}
+
+// fill fills in a region of several rings, the largest part first.
+func (e *Sight) fill(rings []sight.Region) {
+	e.border(sight.Measure(rings))
+	for i := range rings {
+		ring, kinds := ringOf(&rings[i])
+		if i == 0 {
+			e.Boundary, e.Kinds = ring, kinds
+		} else {
+			e.More = append(e.More, Border{ring, kinds})
+		}
+	}
+}
+
+// border fills in the area and the length of the border, given in grid units.
+func (e *Sight) border(area float64, l [3]float64) {
+	e.Area = area / perM2
 	e.Wall, e.Occluding, e.Clip = l[sight.Wall]/perM, l[sight.Occluding]/perM, l[sight.ClipSide]/perM
 	e.Perimeter = e.Wall + e.Occluding + e.Clip
-	e.Boundary = make(orb.Ring, r.Len())
-	e.Kinds = make([]EdgeKind, r.Len())
+}
+
+// ringOf returns a ring in mm, and what its border is.
+func ringOf(r *sight.Region) (orb.Ring, []EdgeKind) {
+	ring, of := make(orb.Ring, r.Len()), make([]EdgeKind, r.Len())
 	for i := range r.Len() {
 		x, y := r.Point(i)
-		e.Boundary[i] = orb.Point{mm(x), mm(y)}
-		e.Kinds[i] = kinds[r.Kind(i)]
+		ring[i] = orb.Point{mm(x), mm(y)}
+		of[i] = kinds[r.Kind(i)]
 	}
+	return ring, of
 }
 
 var kinds = [...]EdgeKind{sight.Wall: EdgeWall, sight.Occluding: EdgeOccluding, sight.ClipSide: EdgeClip}
@@ -132,16 +170,3 @@ func targetPoint(t plan.Target) exact.Pt {
 
 // half returns the middle of a and b, halves rounded away from zero.
 func half(a, b int32) int32 { return int32(math.Round((float64(a) + float64(b)) / 2)) }
-
-// frontOf returns the clip of a target that is seen from its front only.
-func frontOf(t plan.Target) sight.Clip {
-	if t.Face == nil {
-		return sight.Clip{}
-	}
-	return sight.Front(t.Face[0], t.Face[1])
-}
-
-// inFront reports whether p lies on the front side of the target's face, or level with it.
-func inFront(t plan.Target, p exact.Pt) bool {
-	return t.Face == nil || exact.Orient(t.Face[0], t.Face[1], p) >= 0
-}

@@ -32,9 +32,8 @@ type scene struct {
 	sight    *sight.Finder
 	walk     *walk.Finder
 	seek     *sight.Finder // of cones on the wide ground
-	cones    []sight.Cone
-	rooms    []int32      // for each triangle of the wide ground the floor it is connected to, once asked for
-	gaps     *walk.Widths // of the plain ground, once asked for
+	rooms    []int32       // for each triangle of the wide ground the floor it is connected to, once asked for
+	gaps     *walk.Widths  // of the plain ground, once asked for
 }
 
 // NewSolver returns a solver that has seen no plan yet.
@@ -152,7 +151,9 @@ func (s *Solver) Problems(p *plan.Plan) []plan.Problem {
 	}
 	for _, t := range p.Targets() {
 		at := targetPoint(t)
-		all = s.scene.tell(all, plan.Ref{Kind: plan.KindTarget, ID: t.ID}, at, s.scene.stand(at, s.scene.plain.sighted(p.Walker().Eye)))
+		foot := s.scene.stand(at, s.scene.plain.sighted(p.Walker().Eye))
+		all = s.scene.tell(all, plan.Ref{Kind: plan.KindTarget, ID: t.ID}, at, foot)
+		all = s.scene.tellFace(all, t, foot, p.Walker().Eye)
 	}
 	for _, t := range p.Starts() {
 		all = s.scene.tell(all, plan.Ref{Kind: plan.KindStart, ID: t.ID}, t.At, s.scene.begin(t.At))

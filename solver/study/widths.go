@@ -4,14 +4,11 @@ import (
 	"context"
 	"fmt"
 	"math"
-	"slices"
 
 	"github.com/paulmach/orb"
 
-	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 	"enfilade/solver/pulse"
-	"enfilade/solver/sight"
 	"enfilade/solver/walk"
 )
 
@@ -34,7 +31,10 @@ func (s *Solver) ClearWidths(ctx context.Context, p *plan.Plan, rows []Approach)
 	if err := sc.findGaps(pulse.Part(ctx, 0, 0.8)); err != nil {
 		return err
 	}
-	ends := sc.findEnds(p)
+	ends, err := sc.findEnds(ctx, p)
+	if err != nil {
+		return err
+	}
 	search := pulse.Part(ctx, 0.8, 1)
 	for i, start := range p.Starts() {
 		if err := pulse.Tell(search, float64(i)/float64(p.NumStarts())); err != nil {
@@ -71,32 +71,31 @@ func (sc *scene) findGaps(ctx context.Context) error {
 
 // end is a target as someone of any width is to reach it.
 type end struct {
-	at    exact.Pt
-	cones []sight.Cone // of the plain ground
-	stood bool         // a point can stand at the target
+	look       // on the plain ground
+	stood bool // a point can stand at the target
 }
 
-// findEnds finds every target on the plain ground. One that cannot stand where it is gets nothing: its rows have a Problem.
-func (sc *scene) findEnds(p *plan.Plan) []end {
+// findEnds finds every target on the plain ground. The rows of one that cannot be looked for have a Problem.
+func (sc *scene) findEnds(ctx context.Context, p *plan.Plan) ([]end, error) {
 	ends := make([]end, 0, p.NumTargets())
-	eye := p.Walker().Eye
 	for _, t := range p.Targets() {
-		f := sc.stand(targetPoint(t), sc.plain.sighted(eye))
-		e := end{at: f.at}
-		if f.ok {
-			if cones, err := sc.sight.Cones(f.at, eye, frontOf(t)); err == nil {
-				e.cones = slices.Clone(cones)
-			}
-			e.stood = sc.plain.free(f.at, sc.plain.shut)
+		k, err := sc.lookFor(ctx, sc.plain, sc.sight, t, p.Walker(), false)
+		if err != nil {
+			return nil, err
 		}
-		ends = append(ends, e)
+		ends = append(ends, end{k, k.fault == "" && sc.plain.free(k.at, sc.plain.shut)})
 	}
-	return ends
+	return ends, nil
 }
 
 // fillWidths fills in the clear widths of one row. The gaps' start is the row's.
 func (sc *scene) fillWidths(a *Approach, e *end) {
-	sightWidth := sc.gaps.ToCones(e.at, e.cones)
+	var sightWidth walk.Width
+	if e.view != nil {
+		sightWidth = sc.gaps.ToPieces(e.view.pieces)
+	} else {
+		sightWidth = sc.gaps.ToCones(e.at, e.cones)
+	}
 	a.ClearWidth, a.HasClearWidth = widthOf(sightWidth)
 	if a.HasClearWidth {
 		a.Tightest = gapOf(sightWidth)
