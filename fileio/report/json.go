@@ -25,6 +25,8 @@ type jsonRegion struct {
 	OccludingM *float64 `json:"occluding_m"`
 	ClipM      *float64 `json:"clip_m"`
 	Boundary   orb.Ring `json:"boundary"`
+
+	OtherRings []orb.Ring `json:"other_rings"` // further parts counter-clockwise, holes clockwise
 }
 
 // jsonObserver is one entry of "sight".
@@ -37,13 +39,15 @@ type jsonObserver struct {
 // jsonTarget is one entry of "seen_from".
 type jsonTarget struct {
 	Target string `json:"target"`
+	jsonAsked
 	jsonRegion
 }
 
 // jsonApproach is one entry of "approaches".
 type jsonApproach struct {
-	Start            string        `json:"start"`
-	Target           string        `json:"target"`
+	Start  string `json:"start"`
+	Target string `json:"target"`
+	jsonAsked
 	EyeMM            *float64      `json:"eye_mm"`
 	Problem          *string       `json:"problem"`
 	Status           *string       `json:"status"`
@@ -51,6 +55,7 @@ type jsonApproach struct {
 	FirstSight       *orb.Point    `json:"first_sight"`
 	Points           []orb.Point   `json:"points"`
 	SightLineMM      *float64      `json:"sight_line_mm"`
+	SightTo          *orb.Point    `json:"sight_to"`
 	Seconds          *float64      `json:"seconds"`
 	ClearWidthMM     *float64      `json:"clear_width_mm"`
 	FullWalkMM       *float64      `json:"full_walk_mm"`
@@ -148,7 +153,7 @@ func observerEntry(s study.Sight) any {
 	return e
 }
 
-func targetEntry(s study.Sight) any { return jsonTarget{s.Item.ID, region(s)} }
+func targetEntry(s study.Sight) any { return jsonTarget{s.Item.ID, askedEntry(s.Asked), region(s)} }
 
 // region leaves the numbers out where there is a problem.
 func region(s study.Sight) jsonRegion {
@@ -156,13 +161,13 @@ func region(s study.Sight) jsonRegion {
 	if s.Problem == "" {
 		e.AreaM2, e.PerimeterM = number(s.Area), number(s.Perimeter)
 		e.WallM, e.OccludingM, e.ClipM = number(s.Wall), number(s.Occluding), number(s.Clip)
-		e.Boundary = points(s.Boundary)
+		e.Boundary, e.OtherRings = points(s.Boundary), otherRings(s.More)
 	}
 	return e
 }
 
 func approachEntry(a study.Approach, eye float64) any {
-	e := &jsonApproach{Start: a.Start, Target: a.Target, EyeMM: number(eye), Problem: words(a.Problem),
+	e := &jsonApproach{Start: a.Start, Target: a.Target, jsonAsked: askedEntry(a.Asked), EyeMM: number(eye), Problem: words(a.Problem),
 		Reason: words(a.Reason), Ties: a.Ties}
 	if a.Problem != "" {
 		return e
@@ -170,8 +175,8 @@ func approachEntry(a study.Approach, eye float64) any {
 	e.Status = words(nameOf(statusNames[:], a.Status))
 	if a.Status != study.StatusNone {
 		e.LengthMM, e.SightLineMM, e.Seconds = number(a.Length), number(a.SightLine), number(a.Seconds)
-		first := unsigned(a.FirstSight)
-		e.FirstSight, e.Points = &first, points(a.Points)
+		first, to := unsigned(a.FirstSight), unsigned(a.SightTo)
+		e.FirstSight, e.SightTo, e.Points = &first, &to, points(a.Points)
 	}
 	if a.HasFullWalk {
 		e.FullWalkMM, e.FullWalkPoints = number(a.FullWalk), points(a.FullPoints)

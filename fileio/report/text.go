@@ -89,6 +89,11 @@ func (t *texter) seenFrom() {
 		return
 	}
 	t.b.WriteString("\nWhere each target is seen from, " + t.eye() + "\n")
+	asked := make([]study.Asked, len(t.result.SeenFrom))
+	for i, s := range t.result.SeenFrom {
+		asked[i] = s.Asked
+	}
+	t.asked(asked)
 	u := t.unit
 	table := table{columns: []column{{"", false}, {"target", false}, {"seen from " + u.areaName(), true},
 		{"border " + u.name, true}, {"on walls", true}, {"open", true}, {"limits", true}}}
@@ -114,6 +119,11 @@ func (t *texter) approaches() {
 		fmt.Fprintf(&t.b, "  keeping %s clear of what stops walking, and at most %s mm more\n", u.named(t.result.WalkerRadius),
 			decimal(t.result.RadiusExcess, 1))
 	}
+	asked := make([]study.Asked, len(t.result.Approaches))
+	for i, a := range t.result.Approaches {
+		asked[i] = a.Asked
+	}
+	t.asked(asked)
 	t.b.WriteString("  clear for: the widest body that can make some such walk, and where it is tightest on the full walk\n")
 	table := table{columns: []column{{"start", false}, {"target", false}, {"walk " + u.name, true}, {"s", true},
 		{"first sight at", true}, {"sight line " + u.name, true}, {"clear for " + u.name, true}, {"full walk " + u.name, true},
