@@ -68,7 +68,7 @@ func (p *pen) obstructWalk(a *study.Approach) {
 	}
 	p.taken(p.mm(a.FirstSight), FirstSightHalo, FirstSightHalo)
 	if t, ok := p.s.Plan.Target(a.Target); ok {
-		p.routeLeg(p.mm(a.FirstSight), p.targetPlace(t))
+		p.routeLeg(p.mm(a.FirstSight), p.inView(a, t))
 	}
 }
 
@@ -206,7 +206,7 @@ func (p *pen) awayFromWalk(a *study.Approach, at place) int {
 		in = in.plus(u)
 	}
 	if t, ok := p.s.Plan.Target(a.Target); ok {
-		u, _ := vec(at).towards(vec(p.targetPlace(t)))
+		u, _ := vec(at).towards(vec(p.inView(a, t)))
 		in = in.plus(u)
 	}
 	best, least := northWest, math.Inf(1)
@@ -304,7 +304,7 @@ func (p *pen) placeFigures(a *study.Approach) {
 		p.words("sight ")
 		p.distance(a.SightLine, u)
 		run := p.said(from)
-		line := append(p.work.route[:0], p.mm(a.FirstSight), p.targetPlace(t))
+		line := append(p.work.route[:0], p.mm(a.FirstSight), p.inView(a, t))
 		p.settle(labelKey{rankFigure, "sight"}, run, look, p.along(line, run, look), false)
 		p.work.route = line
 	}

@@ -9,6 +9,7 @@ import (
 	"enfilade/canvas/view"
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
+	"enfilade/solver/study"
 )
 
 // faint is the strength of the old place of what is being dragged.
@@ -80,6 +81,15 @@ func targetPoint(t plan.Target) vec {
 }
 
 func (p *pen) targetPlace(t plan.Target) place { return p.grid(targetPoint(t)) }
+
+// inView returns what of a target is in view where an approach ends: a target's point, or the part of its face that comes into
+// sight, past what hides the rest.
+func (p *pen) inView(a *study.Approach, t plan.Target) place {
+	if a.Asked.Face && a.Status != study.StatusNone {
+		return p.mm(a.SightTo)
+	}
+	return p.targetPlace(t)
+}
 
 // targetNormal returns the direction a target is looked at against, in degrees of the plan; ok is false when it hangs on
 // nothing and names none.

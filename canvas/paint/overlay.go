@@ -136,7 +136,6 @@ func (p *pen) walks(main *study.Approach) {
 	if !ok || p.s.Result == nil {
 		return
 	}
-	to := p.targetPlace(target)
 	for i := range p.s.Result.Approaches {
 		a := &p.s.Result.Approaches[i]
 		if a.Target != p.s.Target || a.Start == p.s.Start || a.Problem != "" || !p.walkShown(a) {
@@ -144,7 +143,7 @@ func (p *pen) walks(main *study.Approach) {
 		}
 		p.otherApproach(a)
 		if a.Status == study.StatusApproach {
-			p.firstSight(p.mm(a.FirstSight), to, FirstSightSmall, FirstSightSmall+1.6, p.theme.Red)
+			p.firstSight(p.mm(a.FirstSight), p.inView(a, target), FirstSightSmall, FirstSightSmall+1.6, p.theme.Red)
 		}
 	}
 	if main == nil {
@@ -155,7 +154,7 @@ func (p *pen) walks(main *study.Approach) {
 	p.approach(main)
 	p.tightMark(main)
 	if main.Status != study.StatusNone {
-		p.firstSight(p.mm(main.FirstSight), to, FirstSight, FirstSightHalo, p.theme.Red)
+		p.firstSight(p.mm(main.FirstSight), p.inView(main, target), FirstSight, FirstSightHalo, p.theme.Red)
 	}
 }
 

@@ -49,7 +49,7 @@ func (p *pen) sight(a *study.Approach) {
 		return
 	}
 	const on, off = 2, 3
-	from, to := p.mm(a.FirstSight), p.targetPlace(target)
+	from, to := p.mm(a.FirstSight), p.inView(a, target)
 	m := p.begin()
 	line := append(p.work.ring[:0], from, to)
 	p.work.ring = line
