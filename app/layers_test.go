@@ -71,7 +71,7 @@ var outside = map[string][]string{
 	"fileio":          {"github.com/paulmach/orb"},
 	"app":             {"github.com/paulmach/orb"},
 	"app/verbs":       {"github.com/alecthomas/kong", "github.com/schollz/progressbar/v3", "golang.org/x/term"},
-	"app/gui":         {"fyne.io/fyne/v2", "github.com/adrg/xdg", "golang.org/x/image"},
+	"app/gui":         {"fyne.io/fyne/v2", "golang.org/x/image"},
 	"app/enfilade":    {"fyne.io/fyne/v2"},
 }
 
