@@ -185,3 +185,27 @@ func cornersOf(m *mesh.Mesh, p *sight.Piece, origin exact.Pt) [][2]float64 {
 	}
 	return list
 }
+
+// TestOutlineSharedBorder joins two pieces that overlap and have a stretch of border in common, on the same side of one line.
+func TestOutlineSharedBorder(t *testing.T) {
+	m := build(t, "floor 0,0 10,0 0,10")
+	place, ok := m.Locate(exact.Pt{X: 20000, Y: 20000})
+	if !ok {
+		t.Fatal("off the mesh")
+	}
+	above := exact.Line{At: exact.Pt{Y: 10000}, Dir: exact.Vec{X: 1000}}
+	left := exact.Line{At: exact.Pt{X: 50000}, Dir: exact.Vec{Y: 1000}}
+	right := exact.Line{At: exact.Pt{X: 30000}, Dir: exact.Vec{Y: -1000}}
+	pieces := []sight.Piece{{Tri: place.Tri, N: 2}, {Tri: place.Tri, N: 2}}
+	pieces[0].Lines[0], pieces[0].Lines[1] = above, left
+	pieces[1].Lines[0], pieces[1].Lines[1] = above, right
+	for range 2 {
+		rings := sight.New(m).Outline(pieces, exact.Pt{}, 16000)
+		area, lengths := sight.Measure(rings)
+		// The floor above y = 1 m: a right triangle with legs of 9 m.
+		if len(rings) != 1 || rings[0].Len() != 3 || area != 90000*90000/2 || lengths[sight.Occluding] != 90000 {
+			t.Errorf("%d rings, area %v, border %v", len(rings), area, lengths)
+		}
+		slices.Reverse(pieces)
+	}
+}
