@@ -173,8 +173,15 @@ func (tr *Triangulation) review(t, u int32) {
 	tr.work = append(tr.work, [2]int32{c, a}, [2]int32{a, d}, [2]int32{d, b}, [2]int32{b, c})
 }
 
-// lookup returns the half-edge from a to b, or None when there is none (any more) or it is a side of the box.
+// lookup returns the half-edge from a to b, or None when there is none (any more) or it is a side of the box. Corners of the
+// box may have edges to nearly every point, so an edge at one is looked for from its other end.
 func (tr *Triangulation) lookup(a, b int32) Edge {
+	if tr.corner(a) && !tr.corner(b) {
+		if e := tr.lookup(b, a); e != None {
+			return tr.tris[e.Tri()].n[e.Corner()]
+		}
+		return None
+	}
 	start := tr.out[a]
 	for e := start; e != None; {
 		r := &tr.tris[e.Tri()]
@@ -197,3 +204,6 @@ func (tr *Triangulation) lookup(a, b int32) Edge {
 	}
 	return None
 }
+
+// corner reports whether v is a corner of the box.
+func (tr *Triangulation) corner(v int32) bool { return v >= tr.box && v < tr.box+4 }
