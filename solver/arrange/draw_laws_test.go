@@ -173,7 +173,7 @@ func TestDrawAgainstRectangles(t *testing.T) {
 			}
 		}
 	})
-	if inside < 50 || outside < 500 {
+	if inside < 20 || outside < 500 {
 		t.Errorf("%d places inside and %d outside: the generator lost its aim", inside, outside)
 	}
 }
