@@ -27,8 +27,8 @@ func Comb(seed uint64, walls int) *plan.Plan {
 	return plan.From(m.Parts)
 }
 
-// combPitch keeps a comb of 100,000 teeth within the coordinate limit of 53 km.
-const combPitch = metre / 2
+// combPitch keeps a comb of 100,000 teeth within the 50 km that a drawing may reach.
+const combPitch = metre * 49 / 100
 
 // Maze returns a maze of exactly the given number of walls (at least 20): walls along the lines of a square grid of
 // 1.5 m, each meeting its neighbours end to end, one in three thick. Its passages form a tree but for a few loops, so

@@ -41,6 +41,17 @@ func TestSeededPlans(t *testing.T) {
 	}
 }
 
+// The largest plans that are measured must be plans: beyond the legal range items are left out.
+func TestSeededPlansStayInRange(t *testing.T) {
+	for _, g := range generators {
+		for i, p := range g.make(1, 100_000).Floor().All() {
+			if !plan.InRange(p) {
+				t.Errorf("%s of 100,000 walls: corner %d of the floor, %v, is out of range", g.name, i, p)
+			}
+		}
+	}
+}
+
 // legal reports the first thing of a seeded plan that is off the floor or out of the coordinate limit.
 func legal(p *plan.Plan) error {
 	lo, hi := p.Floor().At(0), p.Floor().At(2)
