@@ -42,7 +42,8 @@ func BenchmarkCGALBuild(b *testing.B) {
 	})
 }
 
-// BenchmarkCGALRegion measures regions as bare polygons with the fast kernel, point location included.
+// BenchmarkCGALRegion measures regions as bare polygons with the fast kernel, point location included. That kernel rounds
+// its crossings, and on a comb of 100,000 teeth CGAL finds a ray and a wall not to meet and gives up: there is no figure then.
 func BenchmarkCGALRegion(b *testing.B) {
 	eachGround(b, func(b *testing.B, r *cgal.Reference, g *plantest.Ground) {
 		eyes := g.Places(1, 2000)
@@ -50,7 +51,7 @@ func BenchmarkCGALRegion(b *testing.B) {
 		for b.Loop() {
 			var err error
 			if mean, median, corners, err = r.RegionTimes(eyes); err != nil {
-				b.Fatal(err)
+				b.Skipf("CGAL gives up: %v", err)
 			}
 		}
 		b.ReportMetric(mean, "ns/op")
