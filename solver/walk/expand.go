@@ -42,6 +42,9 @@ func (f *Finder) begin(start exact.Pt) error {
 func (f *Finder) leave(n int32, e mesh.Edge, r, l exact.Vec, key float64) {
 	t := &f.m.Tris[e.Tri()]
 	f.meetGoals(n, e.Tri(), r, l, key)
+	if f.field != nil {
+		f.field.add(e.Tri(), n, r, l)
+	}
 	root := f.nodes[n].at
 	if a := t.P[e.Corner()].Sub(root); r.Cross(a) == 0 {
 		f.arrive(n, e, a)
@@ -59,6 +62,9 @@ func (f *Finder) expand(c cone) {
 	f.Expanded++
 	t := &f.m.Tris[c.in.Tri()]
 	f.meetGoals(c.node, c.in.Tri(), c.r, c.l, c.key)
+	if f.field != nil {
+		f.field.add(c.in.Tri(), c.node, c.r, c.l)
+	}
 	// Seen from the root, the edge of entry runs from its end (right) to its corner (left); the apex lies behind.
 	left := c.in.Corner()
 	right := inc[left]

@@ -46,6 +46,7 @@ type Finder struct {
 	marks  []mark
 	marked []int32 // triangles whose head must be reset
 	limit  float64 // no cone beyond this distance can help any goal
+	field  *Field  // which keeps the cones of the flood; nil when nobody asked
 
 	clip     clipper
 	one, two []exact.Pt
@@ -110,12 +111,20 @@ func fill[T any](s []T, v T) {
 func (f *Finder) Flood(ctx context.Context, start exact.Pt, goals []Goal) ([]Path, error) {
 	defer f.reset()
 	f.setGoals(goals)
-	if err := f.begin(start); err != nil {
+	if err := f.run(ctx, start); err != nil {
 		return nil, err
+	}
+	return f.paths(), nil
+}
+
+// run sends cones from start until none can help any goal.
+func (f *Finder) run(ctx context.Context, start exact.Pt) error {
+	if err := f.begin(start); err != nil {
+		return err
 	}
 	for n := 1; !f.queue.empty(); n++ {
 		if n&1023 == 0 && ctx.Err() != nil {
-			return nil, ctx.Err()
+			return ctx.Err()
 		}
 		c := f.queue.pop()
 		if c.key > f.limit {
@@ -130,11 +139,16 @@ func (f *Finder) Flood(ctx context.Context, start exact.Pt, goals []Goal) ([]Pat
 			f.expand(c)
 		}
 	}
-	paths := make([]Path, len(goals))
+	return nil
+}
+
+// paths returns the walks to the goals.
+func (f *Finder) paths() []Path {
+	paths := make([]Path, len(f.goals))
 	for i := range f.goals {
 		paths[i] = f.path(&f.goals[i])
 	}
-	return paths, nil
+	return paths
 }
 
 // reset takes back what the last flood wrote, in time proportional to what it touched.
@@ -152,6 +166,7 @@ func (f *Finder) reset() {
 	}
 	f.nodes, f.marks, f.marked, f.wiped, f.goals = f.nodes[:0], f.marks[:0], f.marked[:0], f.wiped[:0], f.goals[:0]
 	f.queue.clear()
+	f.field = nil
 }
 
 // setGoals files every goal in the triangles that hold a part of it.

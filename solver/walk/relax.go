@@ -96,6 +96,9 @@ func (f *Finder) offer(i int32, n int32, g float64, end [2]float64, piece int32)
 		return
 	}
 	o.found, o.g, o.node, o.end, o.piece, o.ties = true, g, n, end, piece, false
+	if f.field != nil {
+		return // which wants all of the floor
+	}
 	worst := 0.0
 	for k := range f.goals {
 		worst = max(worst, f.goals[k].g)
