@@ -24,25 +24,60 @@ type sought struct {
 // Approaches returns the shortest walk to first sight and the full walk for every start and target, starts outermost, in
 // the plane of the walker's eye.
 func (s *Solver) Approaches(ctx context.Context, p *plan.Plan) ([]Approach, error) {
+	rows, _, err := s.fromStarts(ctx, p, false)
+	return rows, err
+}
+
+// fromStarts solves all approaches, and on the way, if asked, how far every zone is from every start: one flood a start serves
+// both.
+func (s *Solver) fromStarts(ctx context.Context, p *plan.Plan, reach bool) ([]Approach, []Reach, error) {
 	if err := s.Mesh(ctx, p); err != nil {
-		return nil, err
+		return nil, nil, err
 	}
 	targets, err := s.scene.findAll(ctx, p)
 	if err != nil {
-		return nil, err
+		return nil, nil, err
+	}
+	var zones []zone
+	if reach {
+		if zones, err = s.scene.zones(ctx, p); err != nil {
+			return nil, nil, err
+		}
 	}
 	out := make([]Approach, 0, p.NumStarts()*p.NumTargets())
+	var spans []Reach
 	for i, start := range p.Starts() {
 		if err := pulse.Tell(ctx, float64(i)/float64(p.NumStarts())); err != nil {
-			return nil, err
+			return nil, nil, err
 		}
-		rows, err := s.scene.fromStart(ctx, p, start, targets)
+		f := sentry{start: start, footing: s.scene.begin(start.At), keep: len(zones) > 0}
+		rows, err := s.scene.fromStart(ctx, p, &f, targets)
 		if err != nil {
-			return nil, err
+			return nil, nil, err
 		}
 		out = append(out, rows...)
+		if spans, err = s.scene.reach(ctx, spans, &f, zones); err != nil {
+			return nil, nil, err
+		}
 	}
-	return out, nil
+	return out, spans, nil
+}
+
+// sentry is a start made ready to walk from.
+type sentry struct {
+	footing
+	start plan.Start
+	keep  bool        // the flood is to keep the distances
+	field *walk.Field // which it has kept
+}
+
+// flood finds the walks from a start.
+func (sc *scene) flood(ctx context.Context, f *sentry, goals []walk.Goal) (paths []walk.Path, err error) {
+	if !f.keep {
+		return sc.walk.Flood(ctx, f.at, goals)
+	}
+	paths, f.field, err = sc.walk.FloodField(ctx, f.at, goals)
+	return paths, err
 }
 
 // findAll finds the places that see each target once, for all starts.
@@ -80,15 +115,14 @@ func (k *look) goal() walk.Goal {
 }
 
 // fromStart solves all approaches of one start in one flood.
-func (sc *scene) fromStart(ctx context.Context, p *plan.Plan, start plan.Start, targets []sought) ([]Approach, error) {
+func (sc *scene) fromStart(ctx context.Context, p *plan.Plan, f *sentry, targets []sought) ([]Approach, error) {
 	rows := make([]Approach, len(targets))
-	f := sc.begin(start.At)
 	var goals []walk.Goal
 	for i, k := range targets {
-		rows[i] = Approach{Start: start.ID, Target: k.target.ID, Asked: k.asked}
+		rows[i] = Approach{Start: f.start.ID, Target: k.target.ID, Asked: k.asked}
 		switch {
 		case !f.ok:
-			rows[i].Problem = "start " + start.ID + " " + f.text
+			rows[i].Problem = "start " + f.start.ID + " " + f.text
 		case k.fault != "":
 			rows[i].Problem = "target " + k.target.ID + " " + k.fault
 		default:
@@ -98,7 +132,7 @@ func (sc *scene) fromStart(ctx context.Context, p *plan.Plan, start plan.Start, 
 	if len(goals) == 0 {
 		return rows, nil
 	}
-	paths, err := sc.walk.Flood(ctx, f.at, goals)
+	paths, err := sc.flood(ctx, f, goals)
 	if err != nil {
 		return nil, err
 	}

@@ -78,11 +78,23 @@ type Approach struct {
 	Tightest [2]orb.Point
 }
 
+// Reach is how far it is from a start to a zone, by the shortest walk: to its nearest point and to its farthest. Both are of the
+// floor in the zone on which the walker can stand and to which a walk leads.
+type Reach struct {
+	Start, Zone           string
+	Problem               string    // why this pair was not solved; empty when it was
+	Found                 bool      // a walk leads to the zone; the rest is zero otherwise
+	Nearest, Farthest     float64   // mm
+	NearestAt, FarthestAt orb.Point // mm
+	Cut                   bool      // to some of the zone's floor no walk leads
+}
+
 // Result is everything studied about one plan.
 type Result struct {
 	Sight      []Sight    // one for each observer, in the plan's order
 	SeenFrom   []Sight    // one for each target
 	Approaches []Approach // one for each start and target, starts outermost
+	Reach      []Reach    // one for each start and zone, starts outermost
 	WalkerEye  float64    // mm
 	// WalkerRadius is the radius that walks keep clear of everything that stops walking; the polygon that stands for the
 	// walker's disc encloses it and reaches at most RadiusExcess beyond. Both in mm.

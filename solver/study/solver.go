@@ -132,7 +132,7 @@ func (s *Solver) Solve(ctx context.Context, p *plan.Plan) (*Result, error) {
 	if r.SeenFrom, err = s.SeenFrom(pulse.Part(ctx, 0.55, 0.6), p); err != nil {
 		return nil, err
 	}
-	if r.Approaches, err = s.Approaches(pulse.Part(ctx, 0.6, 0.8), p); err != nil {
+	if r.Approaches, r.Reach, err = s.fromStarts(pulse.Part(ctx, 0.6, 0.8), p, true); err != nil {
 		return nil, err
 	}
 	if err = s.ClearWidths(pulse.Part(ctx, 0.8, 1), p, r.Approaches); err != nil {
