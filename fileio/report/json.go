@@ -66,6 +66,19 @@ type jsonApproach struct {
 	Ties             bool          `json:"ties"`
 }
 
+// jsonReach is one entry of "reach".
+type jsonReach struct {
+	Start      string     `json:"start"`
+	Zone       string     `json:"zone"`
+	Name       string     `json:"name"` // of the zone
+	Problem    *string    `json:"problem"`
+	NearestMM  *float64   `json:"nearest_mm"`
+	NearestAt  *orb.Point `json:"nearest_at"`
+	FarthestMM *float64   `json:"farthest_mm"`
+	FarthestAt *orb.Point `json:"farthest_at"`
+	Cut        bool       `json:"cut"` // to some of the zone's floor no walk leads
+}
+
 // jsonWalker is the person who walks, as the walks were solved for.
 type jsonWalker struct {
 	EyeMM          *float64 `json:"eye_mm"`
@@ -90,7 +103,7 @@ type jsonProblem struct {
 
 // JSON writes the result as one JSON object, one entry a line.
 //
-//   - Members: title, walker, sight, seen_from, approaches, problems, caution; their entries as in README.
+//   - Members: title, walker, sight, seen_from, approaches, reach, problems, caution; their entries as in README.
 //   - Units: as the end of each name says; coordinates in mm, rings counter-clockwise, first point not repeated.
 //   - Errors: those of w.
 func JSON(w io.Writer, p *plan.Plan, r *study.Result) error {
@@ -100,6 +113,7 @@ func JSON(w io.Writer, p *plan.Plan, r *study.Result) error {
 	list(j, ",\n\"sight\": [", r.Sight, observerEntry)
 	list(j, ",\n\"seen_from\": [", r.SeenFrom, targetEntry)
 	list(j, ",\n\"approaches\": [", r.Approaches, func(a study.Approach) any { return approachEntry(a, r.WalkerEye) })
+	list(j, ",\n\"reach\": [", r.Reach, func(a study.Reach) any { return reachEntry(p, a) })
 	list(j, ",\n\"problems\": [", r.Problems, problemEntry)
 	j.write(",\n\"caution\": ", Caution)
 	j.text("}\n")
@@ -196,6 +210,26 @@ func (e *jsonApproach) clear(a study.Approach) {
 	if a.HasClearWidth || a.HasFullClearWidth {
 		e.Tightest = &[2]orb.Point{unsigned(a.Tightest[0]), unsigned(a.Tightest[1])}
 	}
+}
+
+func reachEntry(p *plan.Plan, r study.Reach) any {
+	e := jsonReach{Start: r.Start, Zone: r.Zone, Name: zoneName(p, r.Zone), Problem: words(r.Problem), Cut: r.Cut}
+	if r.Found {
+		near, far := unsigned(r.NearestAt), unsigned(r.FarthestAt)
+		e.NearestMM, e.NearestAt = number(r.Nearest), &near
+		e.FarthestMM, e.FarthestAt = number(r.Farthest), &far
+	}
+	return e
+}
+
+// zoneName returns the name of the zone with an id.
+func zoneName(p *plan.Plan, id string) string {
+	for _, z := range p.Zones() {
+		if z.ID == id {
+			return z.Name
+		}
+	}
+	return ""
 }
 
 func problemEntry(p plan.Problem) any {

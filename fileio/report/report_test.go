@@ -30,6 +30,7 @@ func sample(unit string) (*plan.Plan, *study.Result) {
 		Observers: []plan.Observer{{ID: "A", Name: "Keeper"}, {ID: "B", Name: "Über seat"}},
 		Targets:   []plan.Target{{ID: "T1", Name: "Lamp"}, {ID: "T2", Name: "Drill"}, {ID: "T3"}, {ID: "T4", Name: "Cage"}},
 		Starts:    []plan.Start{{ID: "S1", Name: "Shaft"}},
+		Zones:     []plan.Zone{{ID: "Z1", Name: "Hall"}, {ID: "Z2"}, {ID: "Z3", Name: "Vault"}},
 	})
 	square := orb.Ring{{0, math.Copysign(0, -1)}, {1e4 / 3, 0}, {1e4 / 3, 1000}, {0, 1000}}
 	r := &study.Result{
@@ -55,6 +56,12 @@ func sample(unit string) (*plan.Plan, *study.Result) {
 			{Start: "S1", Target: "T3", Asked: study.Asked{Face: true, Seen: plan.SeenAll}, Status: study.StatusNone, Reason: "glazing G1 closes the way", ClearWidth: 640.5,
 				HasClearWidth: true, Tightest: [2]orb.Point{{math.Copysign(0, -1), 4000}, {640.5, 4000}}},
 			{Start: "S1", Target: "T4", Problem: "the target lies outside the floor"},
+		},
+		Reach: []study.Reach{
+			{Start: "S1", Zone: "Z1", Found: true, Nearest: 1234.5, NearestAt: orb.Point{math.Copysign(0, -1), 100}, Farthest: 20000.0 / 3,
+				FarthestAt: orb.Point{4500, 9000}, Cut: true},
+			{Start: "S1", Zone: "Z2"},
+			{Start: "S1", Zone: "Z3", Problem: "start S1 lies outside the floor; move it inside"},
 		},
 		Problems: []plan.Problem{{Kind: plan.ProblemInside, Items: []plan.Ref{{Kind: plan.KindObserver, ID: "B"},
 			{Kind: plan.KindWall, ID: "W3"}}, At: exact.Pt{X: 12345, Y: -20}, Text: "stands inside a body; move it onto the floor"}},

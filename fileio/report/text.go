@@ -12,8 +12,8 @@ import (
 	"enfilade/solver/study"
 )
 
-// Text writes the result as tables: what each observer sees, where each target is seen from, the approaches, the problems,
-// and the caution. Whose eye each table is for stands in its heading.
+// Text writes the result as tables: what each observer sees, where each target is seen from, the approaches, how
+// far the zones are, the problems, and the caution. Whose eye each table is for stands in its heading.
 //
 //   - Units: the plan's display unit, named in the headings; areas in m², or square feet.
 //   - Errors: those of w.
@@ -23,6 +23,7 @@ func Text(w io.Writer, p *plan.Plan, r *study.Result) error {
 	t.sight()
 	t.seenFrom()
 	t.approaches()
+	t.reach()
 	t.problems()
 	t.b.WriteString("\n" + Caution + "\n")
 	_, err := io.WriteString(w, t.b.String())
@@ -183,6 +184,35 @@ func (t *texter) tightest(a study.Approach) string {
 		return ""
 	}
 	return t.place(a.Tightest[0]) + " and " + t.place(a.Tightest[1])
+}
+
+// reach is left out where there is nothing to tell: not every plan has zones.
+func (t *texter) reach() {
+	if len(t.result.Reach) == 0 {
+		return
+	}
+	u := t.unit
+	t.b.WriteString("\nHow far each zone is from each start on foot\n")
+	table := table{columns: []column{{"start", false}, {"zone", false}, {"nearest " + u.name, true}, {"at", true},
+		{"farthest " + u.name, true}, {"at", true}, {"", false}}}
+	for _, r := range t.result.Reach {
+		start, _ := t.plan.Start(r.Start)
+		row := []string{label(r.Start, start.Name), label(r.Zone, zoneName(t.plan, r.Zone))}
+		switch {
+		case r.Problem != "":
+			row = append(row, r.Problem)
+		case !r.Found:
+			row = append(row, "none", "", "none", "", "no walk leads there")
+		default:
+			note := ""
+			if r.Cut {
+				note = "no walk leads to the rest of it"
+			}
+			row = append(row, u.length(r.Nearest), t.place(r.NearestAt), u.length(r.Farthest), t.place(r.FarthestAt), note)
+		}
+		table.add(row...)
+	}
+	table.write(&t.b)
 }
 
 func (t *texter) problems() {
