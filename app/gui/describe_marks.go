@@ -88,23 +88,6 @@ func observerLetter(i int) string {
 	return fmt.Sprint(i + 1)
 }
 
-// describeTarget is the form of a thing to be seen, with who sees it.
-func (w *window) describeTarget(c *card, p *plan.Plan, t plan.Target) {
-	c.title, c.icon, c.where = "Target", "target", w.at(p, t.At)
-	c.fields = []field{textField("Name", t.Name, func(s string) error {
-		t.Name = s
-		return w.doEdit(tool.Named("rename target", set(t)))
-	})}
-	c.fault = problemOf(w.results.result, plan.Ref{Kind: plan.KindTarget, ID: t.ID})
-	if s, ok := w.results.seenFrom(t.ID); ok {
-		if s.Problem != "" {
-			c.fault = s.Problem
-			return
-		}
-		c.facts = []fact{{number(s.Area, 1), "m² see it"}, {w.seenBy(p, t.ID), "see it now"}}
-	}
-}
-
 // seenBy lists the letters of the observers that see a target.
 func (w *window) seenBy(p *plan.Plan, target string) string {
 	var letters []string

@@ -3,6 +3,8 @@ package gui
 import (
 	"errors"
 	"fmt"
+	"slices"
+	"strings"
 
 	"enfilade/canvas/tool"
 	"enfilade/solver/arrange"
@@ -26,7 +28,7 @@ func (w *window) describeWalker(walker plan.Walker) []field {
 		return put("change walker's radius", func(k *plan.Walker) { k.Radius = v })
 	})
 	radius.under = radiusWords(walker.Radius)
-	return []field{
+	return append([]field{
 		headed("Walker", w.lengthField("Eye height", walker.Eye, func(v int32) error {
 			return put("change walker's eye", func(k *plan.Walker) { k.Eye = v })
 		})),
@@ -38,7 +40,40 @@ func (w *window) describeWalker(walker plan.Walker) []field {
 			}
 			return put("change pace", func(k *plan.Walker) { k.Pace = v })
 		}},
+	}, describeSeen(walker, put)...)
+}
+
+// errShare is what a form says of a share that is none.
+var errShare = errors.New("above 0 and up to 100 %, please")
+
+// firstShare is the share of a face that is asked for before anyone has typed one.
+const firstShare = 0.5
+
+// describeSeen is what the form offers of how much of a target's face counts as seen.
+func describeSeen(walker plan.Walker, put func(string, func(*plan.Walker)) error) []field {
+	kinds := []plan.SeenKind{plan.SeenAny, plan.SeenShare, plan.SeenAll}
+	seen := field{label: "Seen is", choices: []string{"any part of a face", "a share of it", "all of it"},
+		chosen: slices.Index(kinds, walker.Seen), pick: func(i int) error {
+			return put("change what counts as seen", func(k *plan.Walker) {
+				if k.Seen = kinds[i]; k.Seen == plan.SeenShare && k.Share == 0 {
+					k.Share = firstShare
+				}
+			})
+		}}
+	if walker.Seen != plan.SeenShare {
+		return []field{seen}
 	}
+	return []field{seen, {label: "Share", unit: "%", text: trimDecimals(100*walker.Share, 0, 4), note: "in one stretch",
+		set: func(text string) error {
+			v, err := parseNumber(strings.TrimSuffix(strings.TrimSpace(text), "%"))
+			switch {
+			case err != nil:
+				return err
+			case v <= 0 || v > 100:
+				return errShare
+			}
+			return put("change share", func(k *plan.Walker) { k.Share = v / 100 })
+		}}}
 }
 
 // radiusWords says what a walker's radius means to the walks: by how much the polygon that stands for the body may keep them

@@ -46,11 +46,15 @@ func walkParts(a study.Approach, pace float64) []string {
 		return []string{a.Problem}
 	}
 	var parts []string
+	what := askedWords(a.Asked)
 	switch a.Status {
 	case study.StatusSeen:
-		parts = append(parts, "in sight from the start, "+metres(a.SightLine, 1)+" m away")
+		parts = append(parts, strings.TrimSpace(what+" in sight from the start, ")+" "+metres(a.SightLine, 1)+" m away")
 	case study.StatusApproach:
-		parts = append(parts, fmt.Sprintf("first sight after %s m (%.1f s)", metres(a.Length, 1), a.Seconds),
+		if what != "" {
+			what = "of " + what + " "
+		}
+		parts = append(parts, fmt.Sprintf("first sight %safter %s m (%.1f s)", what, metres(a.Length, 1), a.Seconds),
 			"sight line "+metres(a.SightLine, 1)+" m")
 	default:
 		parts = append(parts, "never in sight: "+because(a.Reason))

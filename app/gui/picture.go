@@ -85,6 +85,9 @@ func (p *picture) scene() *paint.Scene {
 		Observer: r.shownObserver(), Start: pr.start, Target: pr.target,
 		Selected: w.session.Selection(), Hover: w.sketch.Hover, AllRegions: r.all,
 	}
+	if sel := w.session.Selection(); len(sel) == 1 && sel[0].Kind == plan.KindTarget && r.passing == "" {
+		s.SeenFrom, s.Stale = sel[0].ID, r.stale(live.StageSeenFrom)
+	}
 	if w.session.Previewing() && !slices.Contains(w.sketch.Dragged, plan.Ref{Kind: plan.KindFloor}) {
 		s.Old, s.Dragged = w.session.Committed(), w.sketch.Dragged
 	}

@@ -124,7 +124,7 @@ func tableRows(p *plan.Plan, r *results) []row {
 
 // fill puts an approach's figures into its row.
 func (w *row) fill(a study.Approach) {
-	w.full, w.tip = "–", widthWords(a)
+	w.full, w.tip = "–", tipWords(a)
 	if a.HasFullWalk {
 		w.full = metres(a.FullWalk, 1) + " m"
 	}

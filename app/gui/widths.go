@@ -22,6 +22,20 @@ func widthWords(a study.Approach) string {
 	return ""
 }
 
+// tipWords tells what a row has no column for: how much of a face must be in view, and the clear width.
+func tipWords(a study.Approach) string {
+	what, wide := askedWords(a.Asked), widthWords(a)
+	switch {
+	case a.Problem != "":
+		return a.Problem
+	case what == "":
+		return wide
+	case wide == "":
+		return "sight of " + what
+	}
+	return "sight of " + what + "; " + wide
+}
+
 // showTip tells what the row has no column for, below it, when the pointer rests there.
 func (r *tableRow) showTip() {
 	w := r.t.w

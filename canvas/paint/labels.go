@@ -50,7 +50,7 @@ func (p *pen) obstruct(main *study.Approach) {
 	if main != nil {
 		p.obstructWalk(main)
 	}
-	if r := s.sightOf(s.Observer); r != nil {
+	if r := s.shownRegion(); r != nil {
 		p.bordered(r)
 	}
 }
@@ -187,14 +187,35 @@ func (p *pen) placeFirstSight(a *study.Approach) {
 		return
 	}
 	if a.Status == study.StatusSeen {
-		p.words("in sight at the start")
+		p.askedOf(a.Asked, "in sight", " in sight")
+		p.words(" at the start")
 	} else {
-		p.words("first sight · ")
+		p.askedOf(a.Asked, "first sight", " seen")
+		p.words(" · ")
 		p.distance(a.Length, u)
 	}
 	t := p.said(from)
 	r := ring8{side: 13, up: 14, down: 14, dx: 12, dUp: 8, dDown: 8}
 	p.settle(labelKey{rankFirstSight, ""}, t, look, p.around(at, r, p.awayFromWalk(a, at), t, look), true)
+}
+
+// askedOf says how much of a face has come into view, or the plain words where any part of it counts.
+func (p *pen) askedOf(a study.Asked, plain, seen string) {
+	switch {
+	case a.Face && a.Seen == plan.SeenAll:
+		p.words("whole face")
+	case a.Face && a.Seen == plan.SeenShare:
+		decimals := 0
+		if s := 100 * a.Share; s != math.Trunc(s) {
+			decimals = 1
+		}
+		p.number(100*a.Share, decimals)
+		p.words(" % of face")
+	default:
+		p.words(plain)
+		return
+	}
+	p.words(seen)
 }
 
 // awayFromWalk returns the corner place about first sight that lies most away from the walk and from the sight line; of two

@@ -95,11 +95,11 @@ func (p *pen) inView(a *study.Approach, t plan.Target) place {
 // nothing and names none.
 func (p *pen) targetNormal(t plan.Target) (degrees float64, ok bool) {
 	switch {
-	case t.Normal != nil:
-		return *t.Normal, true
 	case t.Face != nil:
 		v := t.Face[1].Sub(t.Face[0]).Left()
 		return math.Atan2(float64(v.Y), float64(v.X)) * 180 / math.Pi, true
+	case t.Normal != nil:
+		return *t.Normal, true
 	}
 	return p.drawing.ink.normal(vecOf(t.At))
 }
@@ -113,6 +113,9 @@ func (p *pen) target(t plan.Target, ring color.NRGBA, dot *color.NRGBA, strength
 	if t.Face != nil {
 		m := p.begin()
 		p.segment(p.point(t.Face[0]), p.point(t.Face[1]))
+		for _, end := range t.Face {
+			p.strip(p.turtleAt(p.point(end), normal), [2]float64{0, 0}, [2]float64{FaceEnd, 0})
+		}
 		p.op(m, p.stroked(ring, StrokeStyle{Width: 2}))
 	}
 	m := p.begin()

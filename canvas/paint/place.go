@@ -101,8 +101,15 @@ func (p *pen) routeLeg(a, b place) {
 
 // bordered adds the border of the chosen region.
 func (p *pen) bordered(r *study.Sight) {
-	for i, q := range r.Boundary {
-		a, b := p.mm(r.Boundary[(i+len(r.Boundary)-1)%len(r.Boundary)]), p.mm(q)
+	p.borderedRing(r.Boundary)
+	for i := range r.More {
+		p.borderedRing(r.More[i].Ring)
+	}
+}
+
+func (p *pen) borderedRing(ring orb.Ring) {
+	for i, q := range ring {
+		a, b := p.mm(ring[(i+len(ring)-1)%len(ring)]), p.mm(q)
 		if _, _, ok := p.frame.segment(a.x, a.y, b.x, b.y); ok {
 			p.work.edges = append(p.work.edges, leg{a, b})
 		}

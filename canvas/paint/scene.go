@@ -20,6 +20,7 @@ type Scene struct {
 	Theme  *Theme
 
 	Observer, Start, Target string // ids of what is chosen: its wash and approach are drawn; empty for none
+	SeenFrom                string // id of a target: the places that see it are washed, in place of what the observer sees; empty for none
 	Selected                []plan.Ref
 	Hover                   plan.Ref // the part under the pointer; its ID is empty for none
 	AllRegions              bool     // also the borders of the other observers' regions

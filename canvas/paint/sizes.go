@@ -12,6 +12,7 @@ const (
 	TargetRadius    = 5.2
 	TargetTick      = 15 // length of the tick along the target's normal, from its centre
 	TargetDot       = 2.3
+	FaceEnd         = 5  // the ticks at the ends of a target's face, on its front
 	MatWidth        = 16 // a start's mat along the way in
 	MatLength       = 26 // and across it
 	FirstSight      = 7.5
