@@ -14,3 +14,8 @@ func (p *Plan) Block(id string) (Block, bool) {
 func (p *Plan) Zone(id string) (Zone, bool) {
 	return find(p.marks.zones, func(z Zone) bool { return z.ID == id })
 }
+
+// Route returns the route with the given id.
+func (p *Plan) Route(id string) (Route, bool) {
+	return find(p.marks.routes, func(r Route) bool { return r.ID == id })
+}
