@@ -12,14 +12,14 @@ import (
 type WallPlace struct {
 	Wall    string
 	Segment int
-	Along   int32    // distance from the start of the piece, grid units, on the snap grid
+	Along   int32    // distance from the start of the piece, grid units, in whole steps
 	Length  int32    // of the piece, rounded down
 	Left    bool     // the pointer is to the left of the line
 	A, B    exact.Pt // the piece
 }
 
-// WallAt returns the place on the solid wall under the pixel place (x, y), where an opening may be cut.
-func WallAt(p *plan.Plan, cam view.Camera, x, y float64) (WallPlace, bool) {
+// WallAt returns the place on the solid wall under the pixel place (x, y), where an opening may be cut, in steps along it.
+func WallAt(p *plan.Plan, cam view.Camera, x, y float64, step int32) (WallPlace, bool) {
 	s := pointer(cam, x, y)
 	best, out, ok := math.Inf(1), WallPlace{}, false
 	for _, w := range p.Walls() {
@@ -36,7 +36,7 @@ func WallAt(p *plan.Plan, cam view.Camera, x, y float64) (WallPlace, bool) {
 			if d := s.dist(f); d <= reach && d < best && a != b {
 				l := int32(exact.Dist(a, b))
 				best, ok = d, true
-				out = WallPlace{w.ID, i, min(rounded(along, GridStep(cam)), l), l, s.aside(a, b) > 0, a, b}
+				out = WallPlace{w.ID, i, min(rounded(along, step), l), l, s.aside(a, b) > 0, a, b}
 			}
 			return true
 		})

@@ -98,9 +98,9 @@ func (f *faceFinder) free(on spot, a, b exact.Pt, nx, ny, off float64) exact.Pt 
 	whole := off == math.Trunc(off)
 	switch {
 	case whole && a.Y == b.Y:
-		return onEdge(f.cam, on, lifted(a, nx, ny, off), lifted(b, nx, ny, off), nil)
+		return onGridEdge(f.cam, on, lifted(a, nx, ny, off), lifted(b, nx, ny, off))
 	case whole && a.X == b.X:
-		return onEdge(f.cam, on, lifted(a, nx, ny, off), lifted(b, nx, ny, off), nil)
+		return onGridEdge(f.cam, on, lifted(a, nx, ny, off), lifted(b, nx, ny, off))
 	}
 	return spot{on.x + nx*standOff, on.y + ny*standOff}.grid()
 }

@@ -22,7 +22,13 @@ func pointer(cam view.Camera, x, y float64) spot {
 // units returns how many grid units so many px at 100 % are.
 func units(cam view.Camera, px float64) float64 { return px * cam.K / cam.Scale * exact.PerMM }
 
-func (s spot) dist(t spot) float64 { return math.Hypot(s.x-t.x, s.y-t.y) }
+// dist is below 2^31 and needs no care against overflow.
+func (s spot) dist(t spot) float64 { return math.Sqrt(s.dist2(t)) }
+
+func (s spot) dist2(t spot) float64 {
+	dx, dy := s.x-t.x, s.y-t.y
+	return dx*dx + dy*dy
+}
 
 // grid returns the nearest grid point, held inside the legal range.
 func (s spot) grid() exact.Pt {
@@ -47,8 +53,12 @@ func (s spot) foot(a, b exact.Pt) (f spot, along float64) {
 
 // aside returns how far s lies to the left of the line from a to b, in units; negative to the right.
 func (s spot) aside(a, b exact.Pt) float64 {
-	dx, dy := float64(b.X)-float64(a.X), float64(b.Y)-float64(a.Y)
-	l := math.Hypot(dx, dy)
+	return s.beside(a, float64(b.X)-float64(a.X), float64(b.Y)-float64(a.Y))
+}
+
+// beside returns how far s lies to the left of the line through a in the direction (dx, dy).
+func (s spot) beside(a exact.Pt, dx, dy float64) float64 {
+	l := math.Sqrt(dx*dx + dy*dy)
 	if l == 0 {
 		return 0
 	}
@@ -66,6 +76,11 @@ func edges(c plan.Chain, ring bool, f func(i int, a, b exact.Pt) bool) {
 	if ring && n > 1 {
 		f(n-1, c.At(n-1), c.At(0))
 	}
+}
+
+// off reports whether s lies farther than r from the box around ab.
+func (s spot) off(a, b exact.Pt, r float64) bool {
+	return s.x < float64(min(a.X, b.X))-r || s.x > float64(max(a.X, b.X))+r || s.y < float64(min(a.Y, b.Y))-r || s.y > float64(max(a.Y, b.Y))+r
 }
 
 // outlineDist returns the distance from s to a chain or ring, infinite for an empty one.
@@ -94,9 +109,15 @@ func (s spot) inside(ring plan.Chain) bool {
 
 // apart reports whether s lies farther than r from the box around a chain: a quick no.
 func (s spot) apart(c plan.Chain, r float64) bool {
-	lx, ly, hx, hy := math.Inf(1), math.Inf(1), math.Inf(-1), math.Inf(-1)
-	for _, p := range c.All() {
-		lx, ly, hx, hy = min(lx, float64(p.X)), min(ly, float64(p.Y)), max(hx, float64(p.X)), max(hy, float64(p.Y))
+	n := c.Len()
+	if n == 0 {
+		return true
 	}
-	return s.x < lx-r || s.x > hx+r || s.y < ly-r || s.y > hy+r
+	lo := c.At(0)
+	hi := lo
+	for i := 1; i < n; i++ {
+		q := c.At(i)
+		lo.X, lo.Y, hi.X, hi.Y = min(lo.X, q.X), min(lo.Y, q.Y), max(hi.X, q.X), max(hi.Y, q.Y)
+	}
+	return s.x < float64(lo.X)-r || s.x > float64(hi.X)+r || s.y < float64(lo.Y)-r || s.y > float64(hi.Y)+r
 }

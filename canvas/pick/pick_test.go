@@ -139,7 +139,7 @@ func TestInBox(t *testing.T) {
 
 func TestSnapAt(t *testing.T) {
 	p := room()
-	from := m(2.5, -5)
+	from, aside, onWall, footed := m(2.5, -5), m(-5, -6), m(-6, -4), m(-5.9, -2.2)
 	for _, c := range []struct {
 		name   string
 		x, y   float64
@@ -148,14 +148,22 @@ func TestSnapAt(t *testing.T) {
 		at     exact.Pt
 		kind   pick.SnapKind
 	}{
-		{"grid", 1.23, 0.97, 0, 0, pick.SnapTo{}, m(1.2, 1), pick.SnapGrid},
+		{"grid", 1.23, -5.37, 0, 0, pick.SnapTo{}, m(1.2, -5.4), pick.SnapGrid},
+		{"in line with a corner beside it", 1.23, 0.97, 0, 0, pick.SnapTo{}, m(1.2, 1), pick.SnapInLine},
+		{"in line with two corners", 4.07, -3.04, 0, 0, pick.SnapTo{}, m(4, -3), pick.SnapInLine},
+		{"beyond the end of a slanted wall", -3.2, -1.3, 0, 0, pick.SnapTo{}, m(-3.25, -1.25), pick.SnapInLine},
+		{"middle of a slanted wall", -5.51, -3.5, 0, 0, pick.SnapTo{}, m(-5.5, -3.5), pick.SnapMiddle},
+		{"middle of a block's edge", 0.05, -3.45, 0, 0, pick.SnapTo{}, m(0, -3.5), pick.SnapMiddle},
+		{"parallel to a slanted wall", -3.55, -4.45, 0, 0, pick.SnapTo{From: &aside}, m(-3.5, -4.5), pick.SnapParallel},
+		{"square to the wall it begins on", -6.97, -2.96, 0, 0, pick.SnapTo{From: &onWall}, m(-7, -3), pick.SnapSquare},
+		{"foot on a slanted wall", -4.97, -3.12, 0, 0, pick.SnapTo{From: &footed}, m(-5.0500, -3.0500), pick.SnapSquare},
 		{"free", 1.23, 0.97, 0, 0, pick.SnapTo{Free: true}, m(1.23, 0.97), pick.SnapNone},
 		{"corner", 4, 3, 6, 6, pick.SnapTo{}, m(4, 3), pick.SnapCorner},
 		{"along a wall", 1.23, 0, 0, 6, pick.SnapTo{}, m(1.2, 0), pick.SnapAlong},
-		{"along a slanted wall", -5.51, -3.5, 0, 0, pick.SnapTo{}, m(-5.505, -3.505), pick.SnapAlong},
+		{"along a slanted wall", -6.41, -4.4, 0, 0, pick.SnapTo{}, m(-6.405, -4.405), pick.SnapAlong},
 		{"skipped wall", 1.23, 0, 0, 3, pick.SnapTo{Skip: func(r plan.Ref) bool { return r.ID == "W1" }}, m(1.2, -0.1), pick.SnapGrid},
-		{"straight above the beginning", 2.4, -2, 0, 0, pick.SnapTo{From: &from}, m(2.5, -2), pick.SnapGrid},
-		{"wall straight above the beginning", 2.4, 0, 0, 2, pick.SnapTo{From: &from}, m(2.5, 0), pick.SnapAlong},
+		{"straight above the beginning", 2.4, -2, 0, 0, pick.SnapTo{From: &from}, m(2.5, -2), pick.SnapInLine},
+		{"wall straight above the beginning", 2.4, 0, 0, 2, pick.SnapTo{From: &from}, m(2.5, 0), pick.SnapSquare},
 		{"corner of the line being drawn", 3.01, -2.02, 0, 0, pick.SnapTo{More: []exact.Pt{m(3.1234, -2)}}, m(3.1234, -2), pick.SnapCorner},
 	} {
 		px, py := cam(1).Pixel(m(c.x, c.y))
@@ -252,11 +260,11 @@ func TestDoors(t *testing.T) {
 		t.Errorf("a door where there is none: %+v", d)
 	}
 	px, py = at(1.03, 0.1)
-	if w, ok := pick.WallAt(p, cam(1), px, py); !ok || w.Wall != "W1" || w.Segment != 0 || w.Along != 50000 || w.Length != 80000 || !w.Left {
+	if w, ok := pick.WallAt(p, cam(1), px, py, pick.GridStep(cam(1))); !ok || w.Wall != "W1" || w.Segment != 0 || w.Along != 50000 || w.Length != 80000 || !w.Left {
 		t.Errorf("on the wall: %+v %v", w, ok)
 	}
 	px, py = at(-2.5, 4)
-	if w, ok := pick.WallAt(p, cam(1), px, py); ok {
+	if w, ok := pick.WallAt(p, cam(1), px, py, pick.GridStep(cam(1))); ok {
 		t.Errorf("a screen takes no door: %+v", w)
 	}
 }
@@ -272,7 +280,6 @@ func BenchmarkAt(b *testing.B) {
 		b.Run(fmt.Sprintf("walls=%d", n), func(b *testing.B) {
 			for b.Loop() {
 				pick.At(p, cam(1), 503, 404, nil)
-				pick.SnapAt(p, cam(1), 503, 404, pick.SnapTo{})
 			}
 		})
 	}

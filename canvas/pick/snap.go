@@ -13,32 +13,70 @@ type SnapKind uint8
 
 // What a place can snap to.
 const (
-	SnapNone   SnapKind = iota // nothing: the grid point under the pointer
-	SnapGrid                   // the snap grid
-	SnapCorner                 // a corner or a wall's end
-	SnapAlong                  // the line of a wall, or the outline of a block, a zone or the floor
+	SnapNone     SnapKind = iota // nothing: the grid point under the pointer
+	SnapGrid                     // the snap grid
+	SnapCorner                   // a corner or a wall's end
+	SnapMiddle                   // the middle of a straight piece, or the centre of a round block
+	SnapCrossing                 // where two straight pieces cross
+	SnapAlong                    // the line of a wall, or the outline of a block, a zone or the floor
+	SnapSquare                   // where the way from the line's beginning meets, or leaves, a straight piece at a right angle
+	SnapParallel                 // a way from the line's beginning parallel to a straight piece
+	SnapInLine                   // in line with a point, level or upright, or with a straight piece
 )
+
+// Set is a set of kinds of snapping.
+type Set uint16
+
+// AllSnaps is every kind of snapping.
+const AllSnaps = Set(1<<(SnapInLine+1) - 1)
+
+// Has reports whether a kind is in the set.
+func (s Set) Has(k SnapKind) bool { return s&(1<<k) != 0 }
+
+// With returns the set with a kind put in or taken out.
+func (s Set) With(k SnapKind, in bool) Set {
+	if in {
+		return s | 1<<k
+	}
+	return s &^ (1 << k)
+}
 
 // Snap is where the pointer's place goes.
 type Snap struct {
-	At   exact.Pt
-	Kind SnapKind
-	Ref  plan.Ref    // what was snapped to, for a corner or along a line
-	Edge [2]exact.Pt // the straight piece, along a line
+	At     exact.Pt
+	Kind   SnapKind
+	Ref    plan.Ref    // what was snapped to, for a corner or along a line
+	Edge   [2]exact.Pt // the straight piece: the one lain on, left at a right angle, or followed in parallel
+	Guides [2]Guide    // what the place is in line with
 }
+
+// Guide is a quiet line that shows what a place is in line with: from a point of the drawing to the place. Its ends are
+// equal when there is none.
+type Guide struct{ From, To exact.Pt }
+
+// Shown reports whether there is anything to draw.
+func (g Guide) Shown() bool { return g.From != g.To }
 
 // SnapTo says what may be snapped to. The zero value snaps to everything.
 type SnapTo struct {
 	Free bool                // to nothing
 	Skip func(plan.Ref) bool // items that do not count: those that are being dragged
-	From *exact.Pt           // where a line was begun: its x and y are taken over when near
+	From *exact.Pt           // where a line was begun
 	More []exact.Pt          // further corners: those of a line that is being drawn
 }
 
-// Reach of snapping, in px at 100 %.
+// SnapReach is the farthest that snapping moves a place, in px at 100 %, but for the half unit of rounding to grid points.
+const SnapReach = 10
+
+// Reach of snapping by kind, in px at 100 %.
 const (
-	snapCorner = 10
-	snapAlong  = 8
+	snapPoint = SnapReach
+	snapAlong = 8
+	snapGuide = 6
+	// guideFar is how far points and pieces are looked at for guide lines.
+	guideFar = 240
+	// guideLeast is how long a slanted guide line from the line's beginning must be: nearer, every direction is.
+	guideLeast = 30
 )
 
 // GridStep returns the snap grid's step at this zoom, in grid units: the smallest of 1, 2, 5 times a power of ten, from
@@ -56,96 +94,9 @@ func GridStep(cam view.Camera) int32 {
 	return plan.MaxCoord
 }
 
-// SnapAt returns where the place under the pixel (x, y) snaps to: a near corner, else a near line, else the grid.
+// SnapAt returns where the place under the pixel (x, y) snaps to when everything may be snapped to.
 func SnapAt(p *plan.Plan, cam view.Camera, x, y float64, to SnapTo) Snap {
-	s := pointer(cam, x, y)
-	if to.Free {
-		return Snap{At: s.grid()}
-	}
-	if c, ok := snapToCorner(p, cam, s, to); ok {
-		return c
-	}
-	if a, ok := snapToLine(p, cam, s, to); ok {
-		return a
-	}
-	return snapToGrid(cam, s, to)
-}
-
-func snapToCorner(p *plan.Plan, cam view.Camera, s spot, to SnapTo) (Snap, bool) {
-	best, out := units(cam, snapCorner), Snap{}
-	offer := func(q exact.Pt, ref plan.Ref) {
-		if d := s.dist(spotOf(q)); d <= best {
-			best, out = d, Snap{At: q, Kind: SnapCorner, Ref: ref}
-		}
-	}
-	for sh := range shapes(p) {
-		if to.Skip != nil && to.Skip(sh.ref) || s.apart(sh.pts, best) {
-			continue
-		}
-		for _, q := range sh.pts.All() {
-			offer(q, sh.ref)
-		}
-	}
-	for _, q := range to.More {
-		offer(q, plan.Ref{})
-	}
-	return out, out.Kind == SnapCorner
-}
-
-func snapToLine(p *plan.Plan, cam view.Camera, s spot, to SnapTo) (Snap, bool) {
-	best, out := units(cam, snapAlong), Snap{}
-	for sh := range shapes(p) {
-		if to.Skip != nil && to.Skip(sh.ref) || s.apart(sh.pts, best) {
-			continue
-		}
-		edges(sh.pts, sh.ring, func(_ int, a, b exact.Pt) bool {
-			f, _ := s.foot(a, b)
-			if d := s.dist(f); d <= best {
-				best, out = d, Snap{At: onEdge(cam, f, a, b, to.From), Kind: SnapAlong, Ref: sh.ref, Edge: [2]exact.Pt{a, b}}
-			}
-			return true
-		})
-	}
-	return out, out.Kind == SnapAlong
-}
-
-// onEdge returns the grid point for a foot on an edge: on a level or upright edge it takes the snap grid along it, and
-// the place straight across from where a line was begun.
-func onEdge(cam view.Camera, f spot, a, b exact.Pt, from *exact.Pt) exact.Pt {
-	at := f.grid()
-	if a.X != b.X && a.Y != b.Y {
-		return at
-	}
-	step := GridStep(cam)
-	along := func(v float64, lo, hi int32, begun *int32) int32 {
-		n := rounded(v, step)
-		if begun != nil && math.Abs(v-float64(*begun)) <= units(cam, snapAlong) {
-			n = *begun
-		}
-		return min(max(n, min(lo, hi)), max(lo, hi))
-	}
-	var fx, fy *int32
-	if from != nil {
-		fx, fy = &from.X, &from.Y
-	}
-	if a.Y == b.Y {
-		return exact.Pt{X: along(f.x, a.X, b.X, fx), Y: a.Y}
-	}
-	return exact.Pt{X: a.X, Y: along(f.y, a.Y, b.Y, fy)}
-}
-
-func snapToGrid(cam view.Camera, s spot, to SnapTo) Snap {
-	step := GridStep(cam)
-	at := exact.Pt{X: rounded(s.x, step), Y: rounded(s.y, step)}
-	if to.From != nil {
-		if math.Abs(s.x-float64(to.From.X)) <= units(cam, snapAlong) {
-			at.X = to.From.X
-		}
-		if math.Abs(s.y-float64(to.From.Y)) <= units(cam, snapAlong) {
-			at.Y = to.From.Y
-		}
-	}
-	return Snap{At: at, Kind: SnapGrid}
+	return (&Snapper{On: AllSnaps}).At(p, cam, x, y, to)
 }
 
 // rounded returns the multiple of step nearest to v, inside the legal range.
