@@ -38,6 +38,12 @@ func (h *host) Cancel() { h.w.session.Cancel() }
 // Defaults is for the tools.
 func (h *host) Defaults() tool.Defaults { return h.w.measures }
 
+// SetDefaults is for the tools.
+func (h *host) SetDefaults(d tool.Defaults) { h.w.measures = d }
+
+// Snapper is for the tools.
+func (h *host) Snapper() *pick.Snapper { return &h.w.snapper }
+
 // ParseLength is for the tools.
 func (h *host) ParseLength(text string) (int32, error) { return parseLength(text, h.w.unit()) }
 
@@ -66,33 +72,4 @@ func emptyPlan(p *plan.Plan) bool {
 	}
 	return p.Floor().Len() == 0 && p.NumWalls() == 0 && p.NumBlocks() == 0 && p.NumObservers() == 0 && p.NumTargets() == 0 &&
 		p.NumStarts() == 0
-}
-
-// snapText says what the pointer snaps to.
-func snapText(s *pick.Snap, cam view.Camera) string {
-	if cam.Scale == 0 {
-		return ""
-	}
-	grid := "Snap: grid " + formatLength(pick.GridStep(cam), "m") + " m"
-	if s == nil {
-		return grid
-	}
-	switch s.Kind {
-	case pick.SnapCorner:
-		if s.Ref.Kind == plan.KindWall {
-			return "Snap: wall corner"
-		}
-		return "Snap: corner"
-	case pick.SnapAlong:
-		switch s.Ref.Kind {
-		case plan.KindOpening:
-			return "Snap: threshold"
-		case plan.KindWall:
-			return "Snap: along wall"
-		}
-		return "Snap: along edge"
-	case pick.SnapNone:
-		return "Snap: off"
-	}
-	return grid
 }

@@ -38,7 +38,7 @@ func (w *window) menus() []menu {
 	return []menu{
 		{"File", w.fileMenu}, {"Edit", w.editMenu},
 		{"Draw", func() []command { return w.toolMenu("Draw") }}, {"Place", func() []command { return w.toolMenu("Place") }},
-		{"Study", w.studyMenu}, {"View", w.viewMenu}, {"Help", w.helpMenu},
+		{"Snap", w.snapMenu}, {"Study", w.studyMenu}, {"View", w.viewMenu}, {"Help", w.helpMenu},
 	}
 }
 

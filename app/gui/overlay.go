@@ -9,7 +9,6 @@ import (
 	"fyne.io/fyne/v2/container"
 
 	"enfilade/assets"
-	"enfilade/canvas/pick"
 	"enfilade/canvas/tool"
 	"enfilade/canvas/view"
 	"enfilade/solver/exact"
@@ -60,6 +59,7 @@ func (o *overlay) show(s tool.Sketch, cam view.Camera, pix float32) {
 		o.square(o.place(h), 8)
 	}
 	if s.Snap != nil {
+		o.guides(s.Snap.Guides[:])
 		o.snap(*s.Snap)
 	}
 	o.measure(s)
@@ -98,11 +98,17 @@ func (o *overlay) rect(at fyne.Position, size fyne.Size, stroke float32, fill, l
 	}
 	r := o.rects[o.used.rects]
 	o.used.rects++
-	r.FillColor, r.StrokeColor, r.StrokeWidth = fill, line, stroke
+	r.FillColor, r.StrokeColor, r.StrokeWidth, r.CornerRadius = fill, line, stroke, 0
 	r.Move(at)
 	r.Resize(size)
 	r.Show()
 	r.Refresh()
+}
+
+// dot is a round spot.
+func (o *overlay) dot(c fyne.Position, radius float32, fill color.Color) {
+	o.rect(c.SubtractXY(radius, radius), fyne.NewSquareSize(2*radius), 0, fill, color.Transparent)
+	o.rects[o.used.rects-1].CornerRadius = radius
 }
 
 // square is an open handle of a selected item's corner.
@@ -116,31 +122,6 @@ func (o *overlay) box(a, b exact.Pt) {
 	at := fyne.NewPos(min(p.X, q.X), min(p.Y, q.Y))
 	size := fyne.NewSize(float32(math.Abs(float64(p.X-q.X))), float32(math.Abs(float64(p.Y-q.Y))))
 	o.rect(at, size, 1, faded(o.ink, 7), faded(o.ink, 55))
-}
-
-// snap marks where the pointer snapped: a diamond on a corner, a bar along a wall, a cross on the grid.
-func (o *overlay) snap(s pick.Snap) {
-	const weight = 1.4
-	c := o.place(s.At)
-	at := func(dx, dy float32) fyne.Position { return c.AddXY(dx, dy) }
-	switch s.Kind {
-	case pick.SnapCorner:
-		const r = 6
-		o.line(at(-r, 0), at(0, -r), weight, o.ink)
-		o.line(at(0, -r), at(r, 0), weight, o.ink)
-		o.line(at(r, 0), at(0, r), weight, o.ink)
-		o.line(at(0, r), at(-r, 0), weight, o.ink)
-	case pick.SnapAlong:
-		a, b := o.place(s.Edge[0]), o.place(s.Edge[1])
-		l := float32(math.Hypot(float64(b.X-a.X), float64(b.Y-a.Y)))
-		if l > 0 {
-			ux, uy := (b.X-a.X)/l*8, (b.Y-a.Y)/l*8
-			o.line(at(-ux, -uy), at(ux, uy), weight+1, o.ink)
-		}
-	case pick.SnapGrid:
-		o.line(at(-5, 0), at(5, 0), weight, o.ink)
-		o.line(at(0, -5), at(0, 5), weight, o.ink)
-	}
 }
 
 // measure writes the measure or the fault beside the pointer, away from the picture's edges.

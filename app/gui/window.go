@@ -10,6 +10,7 @@ import (
 
 	"enfilade/app/live"
 	"enfilade/app/session"
+	"enfilade/canvas/pick"
 	"enfilade/canvas/tool"
 	"enfilade/solver/plan"
 )
@@ -34,6 +35,7 @@ type window struct {
 	toolAt   int
 	sketch   tool.Sketch
 	measures tool.Defaults
+	snapper  pick.Snapper
 
 	rail    []*toolButton
 	tips    *tips
@@ -71,6 +73,7 @@ func newWindow(p parts, look *look) *window {
 	})
 	w.session = session.New(plan.New(), "", nil)
 	w.host = &host{w}
+	w.snapper.On = w.snapSet()
 	w.picture = newPicture(w)
 	w.tool = tools[0].make()
 	w.board = live.NewBoard(w.do, w.answered)
@@ -167,7 +170,7 @@ func (w *window) acted() {
 	w.view.over.show(w.sketch, w.view.cam, w.view.pix)
 	w.view.Refresh()
 	w.status.at(w.view.cam.Grid(w.view.place()), p.Sheet().Unit, w.view.inside)
-	w.status.snap.set(snapText(w.sketch.Snap, w.view.cam))
+	w.status.snap.set(snapText(w.sketch.Snap, w.view.cam, w.snapper.On))
 	w.status.hint.set(w.tool.Hint(w.host))
 	w.status.count(p)
 	w.form.update(p, w.session.Selection())

@@ -63,7 +63,7 @@ func (t *Chain) aim(h Host, e Pointer) {
 	if n := len(t.pts); n > 0 {
 		to.From = &t.pts[n-1]
 	}
-	t.snap, t.here = pick.SnapAt(h.Plan(), h.Camera(), e.X, e.Y, to), true
+	t.snap, t.here = h.Snapper().At(h.Plan(), h.Camera(), e.X, e.Y, to), true
 	t.at = t.snap.At
 	if n := len(t.pts); n > 0 && e.Shift {
 		t.at = eighth(t.pts[n-1], t.at)

@@ -27,7 +27,7 @@ func (t *Door) Down(h Host, e Pointer) {
 
 // Move carries the opening along the wall under the pointer.
 func (t *Door) Move(h Host, e Pointer) {
-	place, ok := pick.WallAt(h.Plan(), h.Camera(), e.X, e.Y)
+	place, ok := pick.WallAt(h.Plan(), h.Camera(), e.X, e.Y, gridStep(h, e))
 	if t.from != nil && (!ok || place.Wall != t.place.Wall || place.Segment != t.place.Segment) {
 		return // the drag goes on where it last was on its piece of wall
 	}

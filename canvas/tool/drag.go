@@ -53,7 +53,7 @@ func cornerEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 		return slices.ContainsFunc(corners, func(c plan.Corner) bool { return c.Item == r })
 	}
 	from := g.hit.At
-	snap := pick.SnapAt(h.Plan(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl, Skip: skip, From: &from})
+	snap := h.Snapper().At(h.Plan(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl, Skip: skip, From: &from})
 	g.to = snap.At
 	if snap.At == g.hit.At || len(corners) == 0 {
 		return nil, &snap
@@ -73,9 +73,9 @@ func moveEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 	var snap pick.Snap
 	if g.hit.Ref.Kind == plan.KindObserver {
 		// Eyes stand on floor: a wall's line lies inside its body, so they snap to the grid alone.
-		snap = pick.SnapAt(plan.New(), h.Camera(), ax+e.X-g.x, ay+e.Y-g.y, pick.SnapTo{Free: e.Ctrl})
+		snap = h.Snapper().At(plan.New(), h.Camera(), ax+e.X-g.x, ay+e.Y-g.y, pick.SnapTo{Free: e.Ctrl})
 	} else {
-		snap = pick.SnapAt(h.Plan(), h.Camera(), ax+e.X-g.x, ay+e.Y-g.y, to)
+		snap = h.Snapper().At(h.Plan(), h.Camera(), ax+e.X-g.x, ay+e.Y-g.y, to)
 	}
 	g.to = snap.At
 	if snap.At == anchor {
@@ -107,10 +107,7 @@ func slideEdit(h Host, g *grip, e Pointer) plan.Edit {
 		return nil
 	}
 	a, b := w.Line.At(o.Segment), w.Line.At(o.Segment+1)
-	step := pick.GridStep(h.Camera())
-	if e.Ctrl {
-		step = 1
-	}
+	step := gridStep(h, e)
 	by := alongOf(h, a, b, e.X, e.Y) - alongOf(h, a, b, g.x, g.y)
 	at := int32(math.Round((float64(o.At)+by)/float64(step))) * step
 	at = max(0, min(at, int32(exact.Dist(a, b))-o.Width))

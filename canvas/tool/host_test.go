@@ -7,6 +7,7 @@ import (
 	"strings"
 	"testing"
 
+	"enfilade/canvas/pick"
 	"enfilade/canvas/tool"
 	"enfilade/canvas/view"
 	"enfilade/solver/exact"
@@ -20,18 +21,22 @@ type host struct {
 	shown    *plan.Plan
 	selected []plan.Ref
 	done     []string
+	snapper  pick.Snapper
+	defaults tool.Defaults
 }
 
 func newHost(t *testing.T, parts plan.Parts) *host {
 	p := plan.From(parts)
-	return &host{t: t, plan: p, shown: p}
+	return &host{t: t, plan: p, shown: p, snapper: pick.Snapper{On: pick.AllSnaps}, defaults: tool.StandardDefaults()}
 }
 
-func (h *host) Plan() *plan.Plan        { return h.plan }
-func (h *host) Selection() []plan.Ref   { return h.selected }
-func (h *host) Select(r ...plan.Ref)    { h.selected = slices.Clone(r) }
-func (h *host) Cancel()                 { h.shown = h.plan }
-func (h *host) Defaults() tool.Defaults { return tool.StandardDefaults() }
+func (h *host) Plan() *plan.Plan            { return h.plan }
+func (h *host) Selection() []plan.Ref       { return h.selected }
+func (h *host) Select(r ...plan.Ref)        { h.selected = slices.Clone(r) }
+func (h *host) Cancel()                     { h.shown = h.plan }
+func (h *host) Defaults() tool.Defaults     { return h.defaults }
+func (h *host) SetDefaults(d tool.Defaults) { h.defaults = d }
+func (h *host) Snapper() *pick.Snapper      { return &h.snapper }
 
 // Camera is 40 px to the metre, with 0, 0 at the picture's centre.
 func (h *host) Camera() view.Camera { return view.Camera{Scale: 0.04, W: 1000, H: 800, K: 1} }

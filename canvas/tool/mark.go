@@ -42,7 +42,7 @@ func (t *Mark) place(h Host, e Pointer) (plan.Edit, *pick.Snap) {
 		at, facing, snap := startPlace(h, e)
 		return plan.AddStart{Start: plan.Start{At: at, Facing: facing}}, snap
 	}
-	snap := pick.SnapAt(plan.New(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl})
+	snap := h.Snapper().At(plan.New(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl})
 	return plan.AddObserver{Observer: plan.Observer{At: snap.At, Eye: h.Defaults().Eye, View: 360, Colour: -1}}, &snap
 }
 
@@ -51,7 +51,7 @@ func targetPlace(h Host, e Pointer) (exact.Pt, *float64, *pick.Snap) {
 	if f, ok := pick.FaceAt(h.Plan(), h.Camera(), e.X, e.Y); ok && !e.Ctrl {
 		return f.At, &f.Normal, &pick.Snap{At: f.At, Kind: pick.SnapAlong, Ref: f.Ref, Edge: alongNormal(f.At, f.Normal)}
 	}
-	snap := pick.SnapAt(plan.New(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl})
+	snap := h.Snapper().At(plan.New(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl})
 	return snap.At, nil, &snap
 }
 

@@ -34,7 +34,7 @@ func (t *Measure) aim(h Host, e Pointer) {
 	if !t.held {
 		to.From = t.from
 	}
-	snap := pick.SnapAt(h.Plan(), h.Camera(), e.X, e.Y, to)
+	snap := h.Snapper().At(h.Plan(), h.Camera(), e.X, e.Y, to)
 	t.snap = &snap
 	if !t.held {
 		t.to = snap.At

@@ -44,7 +44,7 @@ func (t *Rect) Move(h Host, e Pointer) {
 }
 
 func (t *Rect) aim(h Host, e Pointer) {
-	snap := pick.SnapAt(h.Plan(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl})
+	snap := h.Snapper().At(h.Plan(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl})
 	t.snap, t.at = &snap, snap.At
 	if t.from != nil && e.Shift { // a square
 		v := t.at.Sub(*t.from)

@@ -5,6 +5,7 @@ import (
 	"strconv"
 	"strings"
 
+	"enfilade/canvas/pick"
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 )
@@ -44,6 +45,14 @@ func reason(err error) string {
 		s = s[i+2:]
 	}
 	return s
+}
+
+// gridStep returns the snap grid's step, one grid unit where nothing is to snap to it.
+func gridStep(h Host, e Pointer) int32 {
+	if e.Ctrl || !h.Snapper().On.Has(pick.SnapGrid) {
+		return 1
+	}
+	return pick.GridStep(h.Camera())
 }
 
 // parseAngle reads a typed angle in degrees; a comma is a decimal point.

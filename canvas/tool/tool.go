@@ -25,6 +25,10 @@ type Host interface {
 	Cancel()
 	// Defaults returns the measures of new items.
 	Defaults() Defaults
+	// SetDefaults changes the measures of new items.
+	SetDefaults(Defaults)
+	// Snapper returns what finds where places snap, with the kinds of snapping that are switched on.
+	Snapper() *pick.Snapper
 	// ParseLength reads a typed length in the plan's display unit, as grid units.
 	ParseLength(text string) (int32, error)
 	// FormatLength writes a length of grid units in the plan's display unit, with the unit's name.
