@@ -1,10 +1,6 @@
 package session
 
-import (
-	"unsafe"
-
-	"enfilade/solver/plan"
-)
+import "enfilade/solver/plan"
 
 // What the history keeps at most: whichever of the two is reached first drops the oldest steps.
 const (
@@ -37,7 +33,7 @@ func (h *history) push(label string, p *plan.Plan) {
 		h.bytes -= gone.bytes
 	}
 	clear(h.steps[h.at+1:]) // let go of the plans
-	s := step{label, p, unshared(h.plan(), p)}
+	s := step{label, p, plan.Unshared(h.plan(), p)}
 	h.steps = append(h.steps[:h.at+1], s)
 	h.at++
 	h.bytes += s.bytes
@@ -88,22 +84,4 @@ func (h *history) redoLabel() (string, bool) {
 		return "", false
 	}
 	return h.steps[h.at+1].label, true
-}
-
-// unshared returns about how many bytes q holds that p does not: the lists of each part that differs. The points of a
-// chain are left out, for all but the chains an edit touches are shared with the plan before it.
-func unshared(p, q *plan.Plan) int {
-	n := int(unsafe.Sizeof(plan.Sheet{}))
-	if p.Obstacles() != q.Obstacles() {
-		n += q.NumWalls()*int(unsafe.Sizeof(plan.Wall{})) + q.NumOpenings()*int(unsafe.Sizeof(plan.Opening{})) +
-			q.NumBlocks()*int(unsafe.Sizeof(plan.Block{}))
-	}
-	if p.Marks() != q.Marks() {
-		n += q.NumObservers()*int(unsafe.Sizeof(plan.Observer{})) + q.NumTargets()*int(unsafe.Sizeof(plan.Target{})) +
-			q.NumStarts()*int(unsafe.Sizeof(plan.Start{}))
-		for range q.Zones() {
-			n += int(unsafe.Sizeof(plan.Zone{}))
-		}
-	}
-	return n
 }

@@ -12,13 +12,30 @@ func (s *Session) Selection() []plan.Ref { return s.selected }
 
 // Select makes refs the selection, without doubles and without items the shown plan does not have.
 func (s *Session) Select(refs ...plan.Ref) {
+	has := holder(s.Plan(), len(refs))
+	seen := make(map[plan.Ref]bool, len(refs))
 	var sel []plan.Ref
 	for _, r := range refs {
-		if !slices.Contains(sel, r) && s.Plan().Has(r) {
+		if !seen[r] && has(r) {
+			seen[r] = true
 			sel = append(sel, r)
 		}
 	}
 	s.selected = sel
+}
+
+// holder returns a function that tells whether p has an item, quick when it is called that often: each call of Plan.Has walks a
+// list, which for everything in a plan of 20,000 walls takes seconds.
+func holder(p *plan.Plan, calls int) func(plan.Ref) bool {
+	const few = 16
+	if calls <= few {
+		return p.Has
+	}
+	in := map[plan.Ref]bool{}
+	for r := range All(p) {
+		in[r] = true
+	}
+	return func(r plan.Ref) bool { return in[r] || r.Kind.Letter() == "" && p.Has(r) }
 }
 
 // Toggle adds r to the selection, or takes it out when it is there.
@@ -51,6 +68,41 @@ func All(p *plan.Plan) iter.Seq[plan.Ref] {
 func each[T any](list iter.Seq2[int, T], kind plan.Kind, id func(T) string, yield func(plan.Ref) bool) bool {
 	for _, item := range list {
 		if !yield(plan.Ref{Kind: kind, ID: id(item)}) {
+			return false
+		}
+	}
+	return true
+}
+
+// OfKind yields the items of p of one kind that can be picked: those that are not hidden.
+func OfKind(p *plan.Plan, kind plan.Kind) iter.Seq[plan.Ref] {
+	return func(yield func(plan.Ref) bool) {
+		for r := range Shown(p) {
+			if r.Kind == kind && !yield(r) {
+				return
+			}
+		}
+	}
+}
+
+// Shown yields every item of p that can be selected and is not hidden.
+func Shown(p *plan.Plan) iter.Seq[plan.Ref] {
+	return func(yield func(plan.Ref) bool) {
+		_ = shown(p.Walls(), plan.KindWall, func(w plan.Wall) (string, bool) { return w.ID, w.Hidden }, yield) &&
+			shown(p.Openings(), plan.KindOpening, func(o plan.Opening) (string, bool) { return o.ID, o.Hidden }, yield) &&
+			shown(p.Blocks(), plan.KindBlock, func(b plan.Block) (string, bool) { return b.ID, b.Hidden }, yield) &&
+			shown(p.Zones(), plan.KindZone, func(z plan.Zone) (string, bool) { return z.ID, z.Hidden }, yield) &&
+			shown(p.Observers(), plan.KindObserver, func(o plan.Observer) (string, bool) { return o.ID, o.Hidden }, yield) &&
+			shown(p.Targets(), plan.KindTarget, func(t plan.Target) (string, bool) { return t.ID, t.Hidden }, yield) &&
+			shown(p.Starts(), plan.KindStart, func(t plan.Start) (string, bool) { return t.ID, t.Hidden }, yield) &&
+			shown(p.Routes(), plan.KindRoute, func(r plan.Route) (string, bool) { return r.ID, r.Hidden }, yield)
+	}
+}
+
+// shown yields the refs of one list without what is hidden, and reports whether the caller wants more.
+func shown[T any](list iter.Seq2[int, T], kind plan.Kind, id func(T) (string, bool), yield func(plan.Ref) bool) bool {
+	for _, item := range list {
+		if name, hidden := id(item); !hidden && !yield(plan.Ref{Kind: kind, ID: name}) {
 			return false
 		}
 	}

@@ -134,7 +134,8 @@ func (s *Session) settle(shown *plan.Plan) {
 	if s.Plan() == shown {
 		return
 	}
-	s.selected = slices.DeleteFunc(s.selected, func(r plan.Ref) bool { return !s.Plan().Has(r) })
+	has := holder(s.Plan(), len(s.selected))
+	s.selected = slices.DeleteFunc(s.selected, func(r plan.Ref) bool { return !has(r) })
 	s.tell()
 }
 

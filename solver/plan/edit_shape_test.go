@@ -140,7 +140,8 @@ func checkEdit(t *testing.T, of func() *plan.Plan, e plan.Edit, label string, to
 	}
 }
 
-// ends is a plan of walls that cross and miss each other: A runs east with a door, B north through it, C lies beyond A's end.
+// ends is a plan of walls that cross and miss each other: A runs east with doors, B north through it, C lies beyond A's end, F
+// crosses B twice, and G lies before D with two pieces.
 func endsPlan() *plan.Plan {
 	return plan.From(plan.Parts{
 		Walls: []plan.Wall{
@@ -149,6 +150,8 @@ func endsPlan() *plan.Plan {
 			{ID: "C", Line: chain(12_000, -1000, 13_000, 1000), Height: plan.Ceiling},
 			{ID: "D", Line: chain(2000, -500, 2000, 500), Height: plan.Ceiling},
 			{ID: "E", Line: chain(15_000, 0, 10_000, 0), Height: plan.Ceiling, Thickness: 100, Justify: plan.Right},
+			{ID: "F", Line: chain(7000, -2000, 9000, -2000, 9000, 2000, 7000, 2000), Height: plan.Ceiling},
+			{ID: "G", Line: chain(1000, 6000, 3000, 6000, 3000, 4000, 1000, 4000), Height: plan.Ceiling},
 		},
 		Openings: []plan.Opening{{ID: "D1", Wall: "A", At: 500, Width: 900}, {ID: "D2", Wall: "A", Segment: 1, At: 4500, Width: 900},
 			{ID: "D3", Wall: "A", Segment: 1, At: 1000, Width: 900}, {ID: "D4", Wall: "E", At: 100, Width: 900}},
@@ -169,10 +172,15 @@ func TestMeetEdits(t *testing.T) {
 			p.Walls[0].Line = chain(2000, 0, 4000, 0, 10_000, 0)
 			p.Openings = p.Openings[1:]
 		}},
+		{"cut back where it is crossed last", plan.CutBack{Wall: "B", To: "F"}, func(p *plan.Parts) { p.Walls[1].Line = chain(8000, -3000, 8000, 2000) }},
+		{"cut back where its beginning is crossed first", plan.CutBack{Wall: "B", To: "F", Start: true}, func(p *plan.Parts) {
+			p.Walls[1].Line = chain(8000, -2000, 8000, 3000)
+		}},
+		{"lengthen to the nearest piece", plan.Lengthen{Wall: "D", To: "G"}, func(p *plan.Parts) { p.Walls[3].Line = chain(2000, -500, 2000, 4000) }},
 		{"lengthen", plan.Lengthen{Wall: "A", To: "C"}, func(p *plan.Parts) { p.Walls[0].Line = chain(0, 0, 4000, 0, 12_500, 0) }},
 		{"lengthen the beginning", plan.Lengthen{Wall: "E", To: "C"}, nil},
 		{"join drops the corner between straight pieces", plan.JoinWalls{Walls: []string{"A", "E"}}, func(p *plan.Parts) {
-			p.Walls = p.Walls[:4]
+			p.Walls = append(p.Walls[:4:4], p.Walls[5:]...)
 			p.Walls[0].Line = chain(0, 0, 4000, 0, 15_000, 0)
 			p.Openings[3] = plan.Opening{ID: "D4", Wall: "A", Segment: 1, At: 10_000, Width: 900, HingeEnd: true, SideRight: true}
 		}},
