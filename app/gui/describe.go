@@ -42,6 +42,7 @@ type card struct {
 	where  string
 	fields []field
 	facts  []fact
+	reach  []reachRow
 	fault  string // the item's problem
 	hint   []string
 	delete bool

@@ -158,6 +158,7 @@ func (w *window) describeZone(c *card, x plan.Zone) {
 		}},
 	}
 	c.fault = problemOf(w.results.result, plan.Ref{Kind: plan.KindZone, ID: x.ID})
+	c.reach = w.reachRows(x.ID)
 }
 
 // thickness returns the edit that gives several walls a thickness, as one step.

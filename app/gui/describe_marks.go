@@ -127,6 +127,9 @@ func (w *window) describeStart(c *card, p *plan.Plan, s plan.Start) {
 		s.Name = t
 		return w.doEdit(tool.Named("rename start", set(s)))
 	}), facing}
+	if w.walking.shown {
+		c.fields = append(c.fields, w.stepField())
+	}
 	c.fault = problemOf(w.results.result, plan.Ref{Kind: plan.KindStart, ID: s.ID})
 	seen, walks := 0, 0
 	if w.results.result != nil {

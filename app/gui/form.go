@@ -23,6 +23,7 @@ type form struct {
 	icon   *icon
 	rows   []*formRow
 	facts  []*factText
+	reach  *reachTable
 	fault  *inkText
 }
 
@@ -58,7 +59,7 @@ func newForm(w *window) *form {
 // update shows the selection: a new form for another item, new texts in the same form for the same one.
 func (f *form) update(p *plan.Plan, sel []plan.Ref) {
 	c := f.w.describe(p, sel)
-	if c.key != f.key || len(c.facts) != len(f.facts) || !f.fits(c.fields) {
+	if c.key != f.key || len(c.facts) != len(f.facts) || !f.reach.fits(c.reach) || !f.fits(c.fields) {
 		f.build(c)
 	}
 	f.put(c)
@@ -104,6 +105,9 @@ func (f *form) build(c card) {
 	f.fault = newText("", assets.Regular, 12, roleRed).shrinking()
 	f.page.Add(f.fault)
 	f.figures(c.facts)
+	if f.reach = newReachTable(c.reach); f.reach != nil {
+		f.page.Add(f.reach.box)
+	}
 	if c.delete {
 		f.page.Add(inset(0, 10, 0, 0, container.NewHBox(newPushButton("Delete", func() { f.w.typedKey(fyne.KeyDelete) }))))
 	}
@@ -214,6 +218,7 @@ func (f *form) put(c card) {
 		t.value.set(c.facts[i].value)
 		t.label.set(c.facts[i].label)
 	}
+	f.reach.put(c.reach)
 	f.fault.set(sentence(c.fault))
 	f.fault.Hidden = c.fault == ""
 }

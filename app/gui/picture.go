@@ -11,6 +11,7 @@ import (
 	"enfilade/canvas/raster"
 	"enfilade/canvas/view"
 	"enfilade/solver/plan"
+	"enfilade/solver/study"
 )
 
 // picture draws the plan view's frames: a base that changes seldom, made by a worker, and over it what may change every
@@ -32,6 +33,8 @@ type baseKey struct {
 	camera    view.Camera
 	dark      bool
 	held      string
+	contours  *study.Contour // the first of the lines of walking distance
+	old       bool           // those lines are out of date
 }
 
 // madeBase is a base that was made.
@@ -88,6 +91,9 @@ func (p *picture) scene() *paint.Scene {
 	if sel := w.session.Selection(); len(sel) == 1 && sel[0].Kind == plan.KindTarget && r.passing == "" {
 		s.SeenFrom, s.Stale = sel[0].ID, r.stale(live.StageSeenFrom)
 	}
+	if d := w.distances(); d != nil {
+		s.Contours, s.ContourStep, s.ContoursOld = d.Lines, d.Step, r.stale(live.StageDistances)
+	}
 	if w.session.Previewing() && !slices.Contains(w.sketch.Dragged, plan.Ref{Kind: plan.KindFloor}) {
 		s.Old, s.Dragged = w.session.Committed(), w.sketch.Dragged
 	}
@@ -107,6 +113,9 @@ func keyOf(s *paint.Scene) baseKey {
 	k := baseKey{obstacles: shown.Obstacles(), eye: shown.Walker().Eye, camera: s.Camera, dark: s.Theme == dark}
 	if shown.Floor().Len() == 0 {
 		k.marks = shown.Marks()
+	}
+	if len(s.Contours) > 0 {
+		k.contours, k.old = &s.Contours[0], s.ContoursOld
 	}
 	for _, r := range s.Dragged {
 		switch r.Kind {

@@ -19,6 +19,7 @@ type pair struct{ start, target string }
 // results is what was studied about the open plan, and what of it is shown.
 type results struct {
 	rev     uint64    // of the plan that is shown
+	want    live.Ask  // what was asked last
 	askedAt time.Time // when its study was asked for
 	opened  uint64    // the open plan's first revision: answers to older ones belong to another plan
 	state   *live.State
@@ -32,14 +33,14 @@ type results struct {
 	all                     bool   // show the regions of all observers
 }
 
-// asked notes that the study of a revision was asked for.
-func (r *results) asked(rev uint64, now time.Time) {
-	r.rev, r.askedAt, r.slow, r.stopped = rev, now, false, false
+// asked notes what was asked for.
+func (r *results) asked(a live.Ask, now time.Time) {
+	r.rev, r.want, r.askedAt, r.slow, r.stopped = a.Rev, a, now, false, false
 }
 
 // reset forgets everything about the plan before; rev is the new plan's first revision.
 func (r *results) reset(rev uint64) {
-	*r = results{rev: r.rev, askedAt: r.askedAt, opened: rev, all: r.all}
+	*r = results{rev: r.rev, want: r.want, askedAt: r.askedAt, opened: rev, all: r.all}
 }
 
 // answer takes the newest answers over.
@@ -53,6 +54,9 @@ func (r *results) answer(s *live.State) {
 		if a := s.Latest[live.StageSeenFrom]; a.Rev < r.opened {
 			r.result.SeenFrom = nil
 		}
+		if a := s.Latest[live.StageReach]; a.Rev < r.opened {
+			r.result.Reach = nil
+		}
 	}
 	if r.done() {
 		r.slow = false
@@ -60,7 +64,7 @@ func (r *results) answer(s *live.State) {
 }
 
 // done reports whether everything about the plan that is shown is known.
-func (r *results) done() bool { return r.state != nil && r.state.Done(r.rev) }
+func (r *results) done() bool { return r.state != nil && r.state.Done(r.want) }
 
 // stale reports whether the answer of a stage is out of date for so long that it must not look like the truth.
 func (r *results) stale(s live.Stage) bool {
@@ -73,7 +77,7 @@ func (r *results) failed(s live.Stage) error {
 		return nil
 	}
 	for _, t := range []live.Stage{live.StageMesh, s} {
-		if f := r.state.Failed[t]; f.Plan != nil && f.Rev == r.rev {
+		if f := r.state.Failed[t]; f.Plan != nil && f.Rev == r.rev && (t != live.StageDistances || f.Field == r.want.Field) {
 			return f.Err
 		}
 	}

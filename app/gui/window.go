@@ -36,6 +36,7 @@ type window struct {
 	sketch   tool.Sketch
 	measures tool.Defaults
 	snapper  pick.Snapper
+	walking  walking
 
 	rail    []*toolButton
 	tips    *tips
@@ -151,9 +152,7 @@ func (frame) Layout(o []fyne.CanvasObject, s fyne.Size) {
 
 // changed is told every change of the plan that is shown.
 func (w *window) changed(rev uint64, p *plan.Plan) {
-	w.results.asked(rev, w.now())
-	w.runner.Submit(live.Ask{Rev: rev, Plan: p, Draft: w.session.Previewing()})
-	w.watchSlow()
+	w.submit(w.asking(rev, p))
 	w.acted()
 }
 
@@ -166,12 +165,13 @@ func (w *window) acted() {
 		w.nameHovered()
 	}
 	w.results.follow(w.session, w.sketch)
+	w.askMore()
 	w.first.showIf(emptyPlan(p) && len(w.sketch.Band) == 0 && w.sketch.Handles == nil && !w.session.Previewing())
 	w.view.over.show(w.sketch, w.view.cam, w.view.pix)
 	w.view.Refresh()
 	w.status.at(w.view.cam.Grid(w.view.place()), p.Sheet().Unit, w.view.inside)
 	w.status.snap.set(snapText(w.sketch.Snap, w.view.cam, w.snapper.On))
-	w.status.hint.set(w.tool.Hint(w.host))
+	w.status.hint.set(w.onFoot(w.tool.Hint(w.host)))
 	w.status.count(p)
 	w.form.update(p, w.session.Selection())
 	w.table.update()

@@ -18,22 +18,27 @@ func (s *State) Fresh(stage Stage, rev uint64) bool {
 	return s.Latest[stage].Plan != nil && s.Latest[stage].Rev == rev
 }
 
-// Done reports whether every stage has answered or failed for revision rev; of a draft, every stage that does not wait for
-// rest.
-func (s *State) Done(rev uint64) bool {
-	if f := s.Failed[StageMesh]; f.Plan != nil && f.Rev == rev {
+// Done reports whether every stage that an Ask wants has answered or failed for it.
+func (s *State) Done(a Ask) bool {
+	if f := s.Failed[StageMesh]; f.Plan != nil && f.Rev == a.Rev {
 		return true
 	}
-	draft := s.Fresh(StageMesh, rev) && s.Latest[StageMesh].Draft
 	for stage := range NumStages {
-		if draft && stage.rests() {
-			break
-		}
-		if f := s.Failed[stage]; !s.Fresh(stage, rev) && (f.Plan == nil || f.Rev != rev) {
+		if a.wants(stage) && !s.has(stage, a) {
 			return false
 		}
 	}
 	return true
+}
+
+// has reports whether a stage has answered or failed for an Ask.
+func (s *State) has(stage Stage, a Ask) bool {
+	for _, u := range []*Update{&s.Latest[stage], &s.Failed[stage]} {
+		if u.Plan != nil && u.Rev == a.Rev && (stage != StageDistances || u.Field == a.Field) {
+			return true
+		}
+	}
+	return false
 }
 
 // Result puts the stages' answers together. They may belong to different revisions.
@@ -43,6 +48,7 @@ func (s *State) Result() *study.Result {
 		Approaches: s.Latest[StageApproaches].Approaches,
 		SeenFrom:   s.Latest[StageSeenFrom].Sights,
 		Problems:   s.Latest[StageMesh].Problems,
+		Reach:      s.Latest[StageReach].Reach,
 	}
 	if w := s.Latest[StageWidths]; w.Plan != nil && w.Rev == s.Latest[StageApproaches].Rev {
 		r.Approaches = w.Approaches

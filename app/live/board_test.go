@@ -36,7 +36,7 @@ func TestBoardKeepsTheLastAnswerBesideAnError(t *testing.T) {
 	for s := range live.NumStages {
 		b.Put(live.Update{Rev: 1, Plan: p, Stage: s, Approaches: make([]study.Approach, 3)})
 	}
-	if !b.State().Done(1) || b.State().Done(2) {
+	if !b.State().Done(live.Ask{Rev: 1}) || b.State().Done(live.Ask{Rev: 2}) {
 		t.Error("Done must hold for revision 1 only")
 	}
 	b.Put(live.Update{Rev: 2, Plan: p, Stage: live.StageApproaches, Err: errors.New("no")})
@@ -45,7 +45,7 @@ func TestBoardKeepsTheLastAnswerBesideAnError(t *testing.T) {
 		t.Error("an error must leave the last answer and be told beside it")
 	}
 	b.Put(live.Update{Rev: 2, Plan: p, Stage: live.StageMesh, Err: errors.New("no")})
-	if !b.State().Done(2) {
+	if !b.State().Done(live.Ask{Rev: 2}) {
 		t.Error("a plan without a mesh is done")
 	}
 	b.Put(live.Update{Rev: 3, Plan: p, Stage: live.StageApproaches})

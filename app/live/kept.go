@@ -9,7 +9,7 @@ import (
 // kept holds the last answers of the stages that do not look at observers, so that dragging an observer does not solve
 // the approaches again.
 type kept struct {
-	approaches, seenFrom, widths Update
+	approaches, seenFrom, distances, widths, reach Update
 }
 
 // fill answers u from what is kept and reports whether it could.
@@ -19,6 +19,11 @@ func (k *kept) fill(u *Update) bool {
 		u.Approaches = k.approaches.Approaches
 	case u.Stage == StageSeenFrom && k.seenFrom.Plan != nil && sameWalks(k.seenFrom.Plan, u.Plan):
 		u.Sights = k.seenFrom.Sights
+	case u.Stage == StageDistances && k.distances.Plan != nil && u.Field.Start != "" && u.Field == k.distances.Field &&
+		k.distances.Distances.holds(u.Plan):
+		u.Distances = k.distances.Distances
+	case u.Stage == StageReach && k.reach.Plan != nil && sameWalks(k.reach.Plan, u.Plan) && sameZones(k.reach.Plan, u.Plan):
+		u.Reach = k.reach.Reach
 	case u.Stage == StageWidths && k.widths.Plan != nil && sameWalks(k.widths.Plan, u.Plan):
 		u.Approaches = k.widths.Approaches
 	default:
@@ -33,8 +38,12 @@ func (k *kept) keep(u Update) {
 		k.approaches = u
 	case StageSeenFrom:
 		k.seenFrom = u
+	case StageDistances:
+		k.distances = u
 	case StageWidths:
 		k.widths = u
+	case StageReach:
+		k.reach = u
 	}
 }
 
@@ -50,6 +59,22 @@ func sameWalks(p, q *plan.Plan) bool {
 	}
 	return p.Walker() == q.Walker() && p.NumTargets() == q.NumTargets() && p.NumStarts() == q.NumStarts() &&
 		equal(p.Targets(), q.Targets()) && equal(p.Starts(), q.Starts())
+}
+
+// sameZones reports whether p and q have the same zones, for all that can be told quickly.
+func sameZones(p, q *plan.Plan) bool {
+	if p.Marks() == q.Marks() {
+		return true
+	}
+	next, stop := iter.Pull2(q.Zones())
+	defer stop()
+	for _, x := range p.Zones() {
+		if _, y, ok := next(); !ok || x.ID != y.ID || !x.Ring.Equal(y.Ring) {
+			return false
+		}
+	}
+	_, _, more := next()
+	return !more
 }
 
 // equal compares two lists of the same length.

@@ -24,18 +24,33 @@ const (
 	StageSights
 	StageApproaches
 	StageSeenFrom
+	StageDistances // only when it is asked for
 	StageWidths
+	StageReach // only when it is asked for
 	NumStages
 )
 
 // String names the stage as the window says it: what is being worked out.
 func (s Stage) String() string {
 	return [...]string{"the mesh of the plan", "what observers see", "approaches", "where targets are seen from",
-		"clear widths"}[s]
+		"walking distances", "clear widths", "how far zones are"}[s]
 }
 
 // rests reports whether the stage waits until the plan is at rest: a draft, which a drag shows on its way, goes without.
 func (s Stage) rests() bool { return s >= StageWidths }
+
+// wants reports whether a stage is to answer.
+func (a *Ask) wants(s Stage) bool {
+	switch {
+	case a.Draft && s.rests():
+		return false
+	case s == StageDistances:
+		return a.Field.Start != ""
+	case s == StageReach:
+		return a.Reach
+	}
+	return true
+}
 
 // Solver does the work of the stages. It is used by one goroutine; [study.Solver] is one.
 type Solver interface {
@@ -45,6 +60,8 @@ type Solver interface {
 	Approaches(ctx context.Context, p *plan.Plan) ([]study.Approach, error)
 	SeenFrom(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
 	ClearWidths(ctx context.Context, p *plan.Plan, rows []study.Approach) error // rows as Approaches gave them
+	Field(ctx context.Context, p *plan.Plan, start string) (*study.Field, error)
+	Reaches(ctx context.Context, p *plan.Plan) ([]study.Reach, error)
 }
 
 // Ask is what is asked of a runner: the study of a plan.
@@ -52,6 +69,8 @@ type Ask struct {
 	Rev   uint64
 	Plan  *plan.Plan
 	Draft bool // it is in the middle of a drag, so the stages that wait for rest are left out
+	Field FieldAsk
+	Reach bool // how far zones are from starts
 }
 
 // Update is what one stage found out about one plan.
@@ -63,6 +82,9 @@ type Update struct {
 	Sights     []study.Sight    // of StageSights and StageSeenFrom
 	Approaches []study.Approach // of StageApproaches, and of StageWidths: the same with their clear widths
 	Problems   []plan.Problem   // of StageMesh: what is wrong with the drawing
+	Distances  *Distances       // of StageDistances
+	Reach      []study.Reach    // of StageReach
+	Field      FieldAsk         // as in the Ask
 	Err        error            // why the stage has no answer; the later stages of this plan are then left out only after StageMesh
 	Took       time.Duration
 }
@@ -80,7 +102,9 @@ type job struct {
 }
 
 // share is the part of a whole study's time that each stage takes, as a study that is solved at once tells it.
-var share = [NumStages]float64{0.5, 0.05, 0.2, 0.05, 0.2}
+// What is not asked for takes none.
+var share = [NumStages]float64{StageMesh: 0.5, StageSights: 0.05, StageApproaches: 0.2, StageSeenFrom: 0.05, StageDistances: 0.2,
+	StageWidths: 0.2, StageReach: 0.2}
 
 // Progress is how far the study of a plan is.
 type Progress struct {
@@ -102,7 +126,8 @@ type Runner struct {
 	closed  sync.Once
 	kept    kept
 	told    atomic.Pointer[Progress]
-	starved time.Time // when a mesh was first cancelled since the last one that was finished; zero when none was
+	lent    *Distances // the last ones, whose field works on the solver's mesh
+	starved time.Time  // when a mesh was first cancelled since the last one that was finished; zero when none was
 }
 
 // New starts a runner whose solver fresh makes, now and again after a crash. deliver is called on the runner's goroutine and must not wait for the goroutine that calls Submit
@@ -147,12 +172,17 @@ func (r *Runner) Progress() Progress {
 }
 
 // listen returns the context for a stage's work, whose progress it notes.
-func (r *Runner) listen(ctx context.Context, rev uint64, s Stage) context.Context {
-	from := 0.0
-	for t := range s {
-		from += share[t]
+func (r *Runner) listen(ctx context.Context, j *job, s Stage) context.Context {
+	from, all := 0.0, 0.0
+	for t := range NumStages {
+		if t == s {
+			from = all
+		}
+		if j.wants(t) {
+			all += share[t]
+		}
 	}
-	hear := func(done float64) { r.told.Store(&Progress{rev, s, from + done*share[s]}) }
+	hear := func(done float64) { r.told.Store(&Progress{j.Rev, s, (from + done*share[s]) / all}) }
 	hear(0)
 	return pulse.With(ctx, hear)
 }
@@ -209,27 +239,28 @@ func (r *Runner) run(j *job) {
 // next stage gets a new one.
 func (r *Runner) stage(ctx context.Context, j *job, s Stage) (u Update) {
 	began := time.Now()
-	u = Update{Rev: j.Rev, Plan: j.Plan, Draft: j.Draft, Stage: s}
+	u = Update{Rev: j.Rev, Plan: j.Plan, Draft: j.Draft, Field: j.Field, Stage: s}
 	defer func() {
 		if v := recover(); v != nil {
-			u.Sights, u.Approaches, u.Problems = nil, nil, nil
+			u.Sights, u.Approaches, u.Problems, u.Distances, u.Reach = nil, nil, nil, nil, nil
 			u.Err = &Crash{Stage: s, Value: v, Stack: debug.Stack()}
 			r.solver = r.fresh()
 			j.note(u)
 		}
 		u.Took = time.Since(began)
 	}()
-	if r.kept.fill(&u) {
+	if (s != StageReach || j.Reach) && r.kept.fill(&u) {
 		j.note(u)
 		return u
 	}
-	if j.Draft && s.rests() {
+	if !j.wants(s) {
 		u.Err = errRests
 		return u
 	}
-	ctx = r.listen(ctx, j.Rev, s)
+	ctx = r.listen(ctx, j, s)
 	switch s {
 	case StageMesh:
+		r.recall(j.Plan)
 		if u.Err = r.solver.Mesh(ctx, j.Plan); u.Err == nil {
 			u.Problems = r.solver.Problems(j.Plan)
 		}
@@ -239,6 +270,10 @@ func (r *Runner) stage(ctx context.Context, j *job, s Stage) (u Update) {
 		u.Approaches, u.Err = r.solver.Approaches(ctx, j.Plan)
 	case StageSeenFrom:
 		u.Sights, u.Err = r.solver.SeenFrom(ctx, j.Plan)
+	case StageDistances:
+		u.Distances, u.Err = r.distances(ctx, j)
+	case StageReach:
+		u.Reach, u.Err = r.solver.Reaches(ctx, j.Plan)
 	case StageWidths:
 		if u.Err = j.fail; u.Err != nil {
 			return u
@@ -253,8 +288,8 @@ func (r *Runner) stage(ctx context.Context, j *job, s Stage) (u Update) {
 	return u
 }
 
-// errRests is the error of a stage that a draft goes without. It is not delivered.
-var errRests = errors.New("live: not for a draft")
+// errRests is the error of a stage that is not asked for. It is not delivered.
+var errRests = errors.New("live: not asked for")
 
 // note keeps what later stages go on from.
 func (j *job) note(u Update) {

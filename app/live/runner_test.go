@@ -12,6 +12,7 @@ import (
 	"time"
 
 	"enfilade/app/live"
+	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 	"enfilade/solver/study"
 )
@@ -56,6 +57,24 @@ func (f *fake) ClearWidths(ctx context.Context, _ *plan.Plan, rows []study.Appro
 		rows[i].ClearWidth = 900
 	}
 	return f.do(ctx, live.StageWidths)
+}
+func (f *fake) Field(ctx context.Context, _ *plan.Plan, start string) (*study.Field, error) {
+	if err := f.do(ctx, live.StageDistances); err != nil {
+		return nil, err
+	}
+	return study.NewSolver().Field(ctx, house, start)
+}
+func (f *fake) Reaches(ctx context.Context, p *plan.Plan) ([]study.Reach, error) {
+	return []study.Reach{{Zone: p.Sheet().Title}}, f.do(ctx, live.StageReach)
+}
+
+// house is a floor of 10 m by 8 m with a start in its corner.
+var house = plan.From(plan.Parts{Floor: plan.ChainOf(exact.Pt{}, exact.Pt{X: 100000}, exact.Pt{X: 100000, Y: 80000}, exact.Pt{Y: 80000}),
+	Walker: plan.DefaultWalker(), Starts: []plan.Start{{ID: "S1", At: exact.Pt{X: 10000, Y: 10000}}}})
+
+// everything asks for all stages.
+func everything(rev uint64, p *plan.Plan) live.Ask {
+	return live.Ask{Rev: rev, Plan: p, Field: live.FieldAsk{Start: "S1", Step: 1000}, Reach: true}
 }
 func (f *fake) SeenFrom(ctx context.Context, p *plan.Plan) ([]study.Sight, error) {
 	return []study.Sight{{Name: p.Sheet().Title}}, f.do(ctx, live.StageSeenFrom)
@@ -104,9 +123,9 @@ func revs(got []live.Update, s live.Stage) (r []uint64) {
 
 func TestRunnerDeliversEachStageInOrder(t *testing.T) {
 	synctest.Test(t, func(t *testing.T) {
-		r := newRig(&fake{take: [live.NumStages]time.Duration{ms(3), ms(1), ms(5), ms(7), ms(4)}})
+		r := newRig(&fake{take: [live.NumStages]time.Duration{ms(3), ms(1), ms(5), ms(7), ms(4), ms(2), ms(6)}})
 		p := titled("a")
-		r.Submit(live.Ask{Rev: 7, Plan: p})
+		r.Submit(everything(7, p))
 		time.Sleep(ms(100))
 		synctest.Wait()
 		if len(r.got()) != int(live.NumStages) {
@@ -117,7 +136,8 @@ func TestRunnerDeliversEachStageInOrder(t *testing.T) {
 				t.Errorf("update %d: %+v", s, u)
 			}
 		}
-		if r.got()[0].Problems[0].Text != "a" || r.got()[1].Sights[0].Name != "a" || r.got()[2].Approaches[0].Start != "a" || r.got()[3].Sights[0].Name != "a" {
+		if r.got()[0].Problems[0].Text != "a" || r.got()[1].Sights[0].Name != "a" || r.got()[2].Approaches[0].Start != "a" || r.got()[3].Sights[0].Name != "a" ||
+			len(r.got()[4].Distances.Lines) == 0 || r.got()[6].Reach[0].Zone != "a" {
 			t.Error("an update carries another plan's answer")
 		}
 		r.Close()
@@ -195,7 +215,7 @@ func TestRunnerKeepsApproachesWhenAnObserverMoves(t *testing.T) {
 		r.Submit(live.Ask{Rev: 2, Plan: one}) // the same parts
 		time.Sleep(ms(1))
 		synctest.Wait()
-		want := []live.Stage{0, 1, 2, 3, 4, 0, 1}
+		want := []live.Stage{0, 1, 2, 3, live.StageWidths, 0, 1}
 		if !slices.Equal(f.calls, want) {
 			t.Errorf("stages solved %v, want %v", f.calls, want)
 		}
@@ -219,7 +239,7 @@ func TestRunnerSurvivesPanics(t *testing.T) {
 				f := &fake{}
 				f.panic[s] = true
 				r := newRig(f)
-				r.Submit(live.Ask{Rev: 1, Plan: titled("a")})
+				r.Submit(everything(1, titled("a")))
 				time.Sleep(ms(1))
 				synctest.Wait()
 				var crash *live.Crash
@@ -234,7 +254,7 @@ func TestRunnerSurvivesPanics(t *testing.T) {
 				}
 				f.panic[s] = false
 				r.all = nil
-				r.Submit(live.Ask{Rev: 2, Plan: titled("b")})
+				r.Submit(everything(2, titled("b")))
 				time.Sleep(ms(1))
 				synctest.Wait()
 				if len(r.got()) != int(live.NumStages) || r.got()[s].Err != nil {
@@ -294,15 +314,15 @@ func TestRunnerLeavesWidthsToRest(t *testing.T) {
 		r.Submit(live.Ask{Rev: 1, Plan: p, Draft: true})
 		time.Sleep(ms(1))
 		synctest.Wait()
-		if slices.Contains(f.calls, live.StageWidths) || !b.State().Done(1) || b.State().Failed[live.StageWidths].Err != nil {
-			t.Errorf("a draft solved %v, done %v, failed %v", f.calls, b.State().Done(1), b.State().Failed[live.StageWidths].Err)
+		if slices.Contains(f.calls, live.StageWidths) || !b.State().Done(live.Ask{Rev: 1, Plan: p, Draft: true}) || b.State().Failed[live.StageWidths].Err != nil {
+			t.Errorf("a draft solved %v, done %v, failed %v", f.calls, b.State().Done(live.Ask{Rev: 1, Plan: p, Draft: true}), b.State().Failed[live.StageWidths].Err)
 		}
 		r.Submit(live.Ask{Rev: 2, Plan: p})
 		time.Sleep(ms(1))
 		synctest.Wait()
 		s := b.State()
-		if !s.Done(2) || s.Result().Approaches[0].ClearWidth != 900 {
-			t.Errorf("at rest: done %v, %+v, want the clear width", s.Done(2), s.Result().Approaches)
+		if !s.Done(live.Ask{Rev: 2, Plan: p}) || s.Result().Approaches[0].ClearWidth != 900 {
+			t.Errorf("at rest: done %v, %+v, want the clear width", s.Done(live.Ask{Rev: 2, Plan: p}), s.Result().Approaches)
 		}
 		if s.Latest[live.StageApproaches].Approaches[0].ClearWidth != 0 {
 			t.Error("the rows that were shown before have changed")
@@ -325,7 +345,7 @@ func TestRunnerLeavesWidthsToRest(t *testing.T) {
 // until the next plan, not even of a mesh that a drag would have finished.
 func TestRunnerTellsProgress(t *testing.T) {
 	synctest.Test(t, func(t *testing.T) {
-		f := &fake{take: [live.NumStages]time.Duration{ms(400), ms(10), ms(100), ms(10), ms(50)}}
+		f := &fake{take: [live.NumStages]time.Duration{ms(400), ms(10), ms(100), ms(10), 0, ms(50)}}
 		r := newRig(f)
 		r.Submit(live.Ask{Rev: 1, Plan: titled("a")})
 		last := live.Progress{}

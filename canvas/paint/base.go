@@ -9,7 +9,7 @@ import (
 	"enfilade/solver/plan"
 )
 
-// Base lists what lies under the study: ground, grid, floor, low walls and blocks, walls and blocks, glazing, screens and
+// Base lists what lies under the study: ground, grid, floor, lines of walking distance, low walls and blocks, walls and blocks, glazing, screens and
 // doors. It covers the whole picture and leaves out what is being dragged. It may run on any goroutine.
 func Base(s *Scene) *List {
 	l := &List{}
@@ -20,6 +20,7 @@ func Base(s *Scene) *List {
 		l.Drawing = NewDrawing(shown)
 	}
 	p.paper(shown)
+	p.contours()
 	held := heldBy(s, shown)
 	p.doorways(l.Drawing, func(ref plan.Ref) bool { return !held[ref] })
 	p.obstacles(l.Drawing, func(ref plan.Ref) bool { return !held[ref] })

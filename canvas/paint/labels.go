@@ -111,6 +111,7 @@ func (p *pen) placeLabels(main *study.Approach) {
 	if main != nil && main.Status == study.StatusApproach {
 		p.placeTicks(main)
 	}
+	p.placeContours()
 }
 
 // problemTexts says beside every ring what is wrong; what would help comes after a semicolon and is left to the form, for a

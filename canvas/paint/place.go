@@ -43,6 +43,7 @@ const (
 	rankFigure
 	rankRoom
 	rankTick
+	rankContour
 )
 
 type labelKey struct {
@@ -53,6 +54,8 @@ type labelKey struct {
 // memory is what a list keeps from frame to frame.
 type memory struct {
 	places map[labelKey]int8 // the place a label had, so that it keeps it
+
+	contours contourMarks
 
 	drawing *Drawing // of the plan, when the scene brought none
 	held    *Drawing // of what is being dragged

@@ -25,6 +25,10 @@ type Scene struct {
 	Hover                   plan.Ref // the part under the pointer; its ID is empty for none
 	AllRegions              bool     // also the borders of the other observers' regions
 
+	Contours    []study.Contour // lines of equal walking distance from the chosen start; none when empty
+	ContourStep float64         // mm from one to the next
+	ContoursOld bool            // they have been out of date for a while
+
 	Old     *plan.Plan  // the plan before a drag, nil when there is none: the dragged parts show faintly in their old place
 	Dragged []plan.Ref  // parts that move: left out of the base, drawn in the overlay
 	Pointer *[2]float64 // device pixels, for the marks on the rulers; nil when the pointer is elsewhere
