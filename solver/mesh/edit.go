@@ -143,7 +143,7 @@ func (d *Editor) Add(p exact.Pt) (int32, error) {
 	if lo, hi := d.m.Box(); p.X <= lo.X || p.X >= hi.X || p.Y <= lo.Y || p.Y >= hi.Y {
 		return 0, fmt.Errorf("mesh: point %v lies outside the rectangle", p)
 	}
-	t, on, ok := tr.walk(d.m.hint(p), p)
+	t, on, ok := tr.walk(d.alive(d.m.hint(p)), p)
 	if !ok || on >= 0 && tr.tris[t].c[on] >= 0 {
 		return 0, fmt.Errorf("mesh: point %v is there already or lies on an edge", p)
 	}
@@ -162,6 +162,14 @@ func (d *Editor) Add(p exact.Pt) (int32, error) {
 		}
 	}
 	return v, nil
+}
+
+// alive returns t, or a triangle that took its place.
+func (d *Editor) alive(t int32) int32 {
+	for d.tr.tris[t].v[0] == dead {
+		t = d.tr.tris[t].n[0].Tri()
+	}
+	return t
 }
 
 // Hold forces the edge from a to b in as constraint k.
@@ -241,7 +249,6 @@ func (d *Editor) Close(tags []Tag, solid map[int32]Tag) {
 	m.Pts, m.tags = tr.Pts, tags
 	for len(m.Tris) < len(tr.tris) {
 		m.Tris, m.Solid = append(m.Tris, Tri{}), append(m.Solid, 0)
-		m.Steps = append(m.Steps, Step{}, Step{}, Step{})
 	}
 	for _, t := range tr.log {
 		if tr.tris[t].v[0] == dead {
@@ -272,7 +279,7 @@ func (d *Editor) Close(tags []Tag, solid map[int32]Tag) {
 // bury makes a triangle that was taken out stop everything.
 func (m *Mesh) bury(t int32) {
 	m.Solid[t] = Ceiling
-	m.Tris[t] = Tri{N: [3]Edge{m.raw.tris[t].n[0], None, None}, Top: [3]int32{Ceiling, Ceiling, Ceiling}, Flags: FlagNoWalk | flagBoundary}
+	m.Tris[t] = Tri{N: [3]Edge{m.raw.tris[t].n[0], None, None}, Top: [3]int32{Ceiling, Ceiling, Ceiling}, Flags: FlagNoWalk | flagDead | flagBoundary}
 }
 
 // turnFirst turns triangle t so that its first corner in the order of points is in front.

@@ -78,8 +78,8 @@ func (m *Mesh) Locate(p exact.Pt) (Place, bool) {
 func (m *Mesh) hint(p exact.Pt) int32 {
 	g := &m.grid
 	t := g.near[(p.Y-g.lo.Y)>>g.shiftX*g.nx+(p.X-g.lo.X)>>g.shiftX]
-	for m.raw.tris[t].v[0] == dead {
-		t = m.raw.tris[t].n[0].Tri()
+	for m.Tris[t].Flags&flagDead != 0 {
+		t = m.Tris[t].N[0].Tri()
 	}
 	return t
 }

@@ -31,26 +31,17 @@ type Tri struct {
 // Bits of Tri.Flags: bits 0 to 2 say that edge 0 to 2 stops walking.
 const (
 	FlagNoWalk   uint32 = 1 << 3 // nobody stands in the triangle
+	flagDead     uint32 = 1 << 4 // the triangle has been taken out; its first neighbour is one that took its place
 	flagBoundary uint32 = 7
 )
 
 // StopsWalk reports whether edge i of t stops walking.
 func (t *Tri) StopsWalk(i int) bool { return t.Flags>>uint(i)&1 != 0 }
 
-// Step is what a cone needs that enters a triangle through one of its half-edges: the apex opposite, and for the edges to the
-// right and to the left of it, as seen on the way in, the half-edge to go on through and the height up to which it stops
-// sight.
-type Step struct {
-	Apex              exact.Pt
-	Right, Left       Edge
-	TopRight, TopLeft int32
-}
-
 // Mesh is a triangulation of a rectangle, laid out for queries. It does not change while it is asked; Edit changes it.
 type Mesh struct {
 	Pts   []exact.Pt // the graph's points, with the four corners of the box among them
 	Tris  []Tri
-	Steps []Step  // three a triangle, see StepAt
 	Solid []int32 // for each triangle the height up to which it is solid for sight
 	raw   *Triangulation
 	tags  []Tag
@@ -63,9 +54,6 @@ func (m *Mesh) Box() (lo, hi exact.Pt) { return m.Pts[m.raw.box], m.Pts[m.raw.bo
 
 // Constraint returns the index of the edge that lies on e, or -1.
 func (m *Mesh) Constraint(e Edge) int32 { return m.raw.tris[e.Tri()].c[e.Corner()] }
-
-// StepAt returns the index in Steps of the step through half-edge e.
-func StepAt(e Edge) int { return int(e - e>>2) }
 
 // Twin returns the half-edge on the other side of e.
 func (m *Mesh) Twin(e Edge) Edge { return m.Tris[e.Tri()].N[e.Corner()] }
@@ -87,12 +75,11 @@ func Inc(i int) int { return inc[i] }
 //   - Errors: the context's when it is cancelled.
 //   - Cost: O(n), n the number of triangles.
 func (tr *Triangulation) Finish(ctx context.Context, tags []Tag, solid []Tag) (*Mesh, error) {
-	order := tr.arrange()
+	order := tr.arrange(solid)
 	if err := pulse.Tell(ctx, 0.3); err != nil {
 		return nil, err
 	}
-	m := &Mesh{Pts: tr.Pts, Tris: make([]Tri, len(order)), Steps: make([]Step, 3*len(order)), Solid: make([]int32, len(order)),
-		raw: tr, tags: tags}
+	m := &Mesh{Pts: tr.Pts, Tris: make([]Tri, len(order)), Solid: make([]int32, len(order)), raw: tr, tags: tags}
 	for k, old := range order {
 		m.setSolid(int32(k), solid[old])
 	}
@@ -112,8 +99,8 @@ func (tr *Triangulation) Finish(ctx context.Context, tags []Tag, solid []Tag) (*
 }
 
 // arrange puts the triangles in their final order, each with its first point in front, and returns their old indices.
-func (tr *Triangulation) arrange() (order []int32) {
-	order, place := tr.layout()
+func (tr *Triangulation) arrange(solid []Tag) (order []int32) {
+	order, place := tr.layout(solid)
 	first := make([]uint8, len(tr.tris))
 	for t := range tr.tris {
 		first[t] = tr.firstCorner(&tr.tris[t])
@@ -181,39 +168,9 @@ func (m *Mesh) refresh(t int32) {
 			q.Flags |= 1 << uint(i)
 		}
 	}
-	for i := range 3 {
-		right, left := inc[i], inc[inc[i]]
-		m.Steps[3*int(t)+i] = Step{q.P[left], q.N[right], q.N[left], q.Top[right], q.Top[left]}
-	}
 }
 
 func merge(a, b Tag) Tag { return Tag{max(a.Top, b.Top), a.Walk || b.Walk} }
-
-// layout orders the triangles along the curve through the points, so that neighbours lie near each other in
-// memory: order[k] is the old index of triangle k, place the inverse. O(n) by counting.
-func (tr *Triangulation) layout() (order, place []int32) {
-	key := make([]int32, len(tr.tris))
-	along := make([]int32, len(tr.Pts))
-	for r, p := range tr.curve {
-		along[p] = int32(r)
-	}
-	count := make([]int32, len(tr.Pts)+1)
-	for t := range tr.tris {
-		v := tr.tris[t].v
-		key[t] = min(along[v[0]], along[v[1]], along[v[2]])
-		count[key[t]+1]++
-	}
-	for i := 1; i < len(count); i++ {
-		count[i] += count[i-1]
-	}
-	order, place = make([]int32, len(tr.tris)), make([]int32, len(tr.tris))
-	for t, k := range key {
-		order[count[k]] = int32(t)
-		place[t] = count[k]
-		count[k]++
-	}
-	return order, place
-}
 
 // Len returns the number of triangles.
 func (tr *Triangulation) Len() int { return len(tr.tris) }
