@@ -48,6 +48,9 @@ func (v Vec) Dot(w Vec) int64 { return int64(v.X)*int64(w.X) + int64(v.Y)*int64(
 // Len2 returns the squared length of v.
 func (v Vec) Len2() int64 { return v.Dot(v) }
 
+// Minus returns v - w. For offsets of legal points from one point it is the offset between two legal points.
+func (v Vec) Minus(w Vec) Vec { return Vec{v.X - w.X, v.Y - w.Y} }
+
 // Neg returns the opposite vector.
 func (v Vec) Neg() Vec { return Vec{-v.X, -v.Y} }
 

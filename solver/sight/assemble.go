@@ -42,45 +42,96 @@ func (f *Finder) assemble(eye exact.Pt, c *Clip) {
 	f.region.canonical()
 }
 
+// side is a stretch of border as most are: on the line from a (right) to b (left), seen from direction r to l, all as offsets
+// from the eye; onR and onL are 1 when it begins and ends at its corners.
+type side struct {
+	a, b, r, l exact.Vec
+	onR, onL   int
+}
+
+// read makes s the side of hit h.
+func (s *side) read(tris []mesh.Tri, h *hit, eye exact.Pt) {
+	t, i := &tris[uint32(h.in)>>2], uint32(h.in&3)
+	a, b := t.P[i].Sub(eye), t.P[after(i)].Sub(eye)
+	s.onR, s.onL = one(h.r.Cross(a) == 0), one(h.l.Cross(b) == 0)
+	s.a.X, s.a.Y, s.b.X, s.b.Y = a.X, a.Y, b.X, b.Y
+	s.r.X, s.r.Y, s.l.X, s.l.Y = h.r.X, h.r.Y, h.l.X, h.l.Y
+}
+
+// one returns 1 for true.
+func one(b bool) int {
+	if b {
+		return 1
+	}
+	return 0
+}
+
+// piece returns s in the form that the joiner works on.
+func (s *side) piece(eye exact.Pt) piece {
+	return piece{kind: Wall, a: eye.Add(s.a), b: eye.Add(s.b), r: s.r, l: s.l}
+}
+
 // assembleWhole strings hits together that no range cuts. Between most neighbours lies a corner that both meet at, or a ray
 // from a corner to the wall behind it; everything else is left to the joiner.
 func (f *Finder) assembleWhole(eye exact.Pt, c *Clip, first int) {
 	j := joiner{f: f, eye: eye, clip: c}
-	n := len(f.hits)
-	p := f.pieceOf(f.hits[first])
-	onL := p.l.Cross(p.b.Sub(eye)) == 0
-	k := first + 1
-	for range n {
-		if k == n {
-			k = 0
+	tris, hits := f.m.Tris, f.hits
+	var sides [2]side // the side before and the one in hand, in turn
+	sides[0].read(tris, &hits[first], eye)
+	now := 0
+	s := f.region.open(2 * len(hits))
+	for k := range hits {
+		if k += first + 1; k >= len(hits) {
+			k -= len(hits)
 		}
-		h := f.hits[k]
-		k++
+		h := &hits[k]
 		if h.in < 0 {
-			j.note(h)
+			j.note(*h)
 			continue
 		}
-		q := f.pieceOf(h)
-		onR := q.r.Cross(q.a.Sub(eye)) == 0
-		switch {
-		case j.broken || len(f.spans) > 0 || onL == onR && !(onL && p.b == q.a):
-			j.join(&p, &q)
-		case onL && onR: // both meet at a corner
-			if exact.Area2(p.a, p.b, q.b) != 0 {
-				f.region.addGrid(q.a, Wall)
-			}
-		case onL: // the corner p ends at hides part of q
-			num, den := exact.Line{At: eye, Dir: p.l}.Meet(exact.Through(q.a, q.b))
-			f.region.addGrid(p.b, Occluding)
-			f.region.addRay(p.l, num, den, Wall)
-		default: // the corner q starts at hides part of p
-			num, den := exact.Line{At: eye, Dir: p.l}.Meet(exact.Through(p.a, p.b))
-			f.region.addRay(p.l, num, den, Occluding)
-			f.region.addGrid(q.a, Wall)
+		p := &sides[now&1]
+		now ^= 1
+		q := &sides[now&1]
+		q.read(tris, h, eye)
+		// One test: whether both sides have a corner here cannot be foretold, that they meet there can.
+		apart := one((p.b.X^q.a.X)|(p.b.Y^q.a.Y) != 0)
+		if p.onL|q.onR == 0 || p.onL&q.onR&apart != 0 || j.broken || len(f.spans) > 0 {
+			f.region.close(s)
+			pp, qq := p.piece(eye), q.piece(eye)
+			j.join(&pp, &qq)
+			s = f.region.open(2 * len(hits))
+			continue
 		}
-		p = q
-		onL = p.l.Cross(p.b.Sub(eye)) == 0
+		s.corner(p, q, &sides[(now^p.onL^1)&1])
 	}
+	f.region.close(s)
+}
+
+// corner adds the border from the end of p to the start of q, of which one is a corner, or both are the same: that corner,
+// and where it hides a part of far, which is the other of the two, the point behind it. There are no branches in it, which
+// nobody could foretell.
+func (s *strip) corner(p, q, far *side) {
+	w, dx, dy := far.b.Minus(far.a), p.l.X, p.l.Y
+	num, den := far.a.Cross(w), int64(dx)*int64(w.Y)-int64(dy)*int64(w.X)
+	t := float64(num) / float64(den)
+	at, behind := s.n+1-p.onL, s.n+p.onL
+	bx, by, gx, gy := p.b.X, p.b.Y, q.a.X, q.a.Y
+	bent := one(int64(bx-p.a.X)*int64(q.b.Y-p.a.Y)-int64(by-p.a.Y)*int64(q.b.X-p.a.X) != 0)
+	if p.onL != 0 {
+		gx, gy = bx, by
+	}
+	// Field by field: a pair that was written in halves can be read whole only after both have reached the cache.
+	v := &s.ring[behind]
+	v.At.X, v.At.Y, v.Dir.X, v.Dir.Y, v.Num, v.Den = s.eye.X, s.eye.Y, dx, dy, num, den
+	v = &s.ring[at]
+	v.At.X, v.At.Y, v.Dir.X, v.Dir.Y, v.Num, v.Den = s.eye.X+gx, s.eye.Y+gy, 0, 0, 0, 1
+	xy := &s.xy[behind]
+	xy[0], xy[1] = t*float64(dx), t*float64(dy)
+	xy = &s.xy[at]
+	xy[0], xy[1] = float64(gx), float64(gy)
+	two := p.onL ^ q.onR
+	s.kinds[s.n], s.kinds[s.n+1] = Kind(two)*Occluding, Wall
+	s.n += two + (two | bent)
 }
 
 // assembleCut strings hits together that the range may cut.

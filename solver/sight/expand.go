@@ -1,6 +1,8 @@
 package sight
 
 import (
+	"slices"
+
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
 )
@@ -9,6 +11,11 @@ import (
 // lies above every half-edge of a mesh within the legal size.
 const later mesh.Edge = 1 << 29
 
+// after and before return the corners that follow and precede corner i counter-clockwise: octal digits of a number, since a
+// table would have to be read.
+func after(i uint32) uint32  { return 0o021 >> (3 * i) & 7 }
+func before(i uint32) uint32 { return 0o102 >> (3 * i) & 7 }
+
 // inc is the next corner counter-clockwise.
 var inc = [3]int{1, 2, 0}
 
@@ -16,64 +23,89 @@ var inc = [3]int{1, 2, 0}
 // rightmost open cone in hand and the others on a stack, so that triangles are visited in the order in which they are seen.
 // It costs two cross products a triangle, and no allocation once the buffers have grown.
 func (f *Finder) expand(now frame, eye exact.Pt, height int32) {
-	steps := f.m.Steps
-	hits, stack := f.hits, f.stack[:0]
-	count := 0
-	for {
-		s := &steps[mesh.StepAt(now.in)]
-		count++
+	f.stack = f.stack[:0]
+	for !f.run(&now, eye, height) {
+		f.grow()
+	}
+}
+
+// grow gives run's buffers more room.
+func (f *Finder) grow() {
+	f.stack = slices.Grow(f.stack, cap(f.stack)+64)
+	f.hits = slices.Grow(f.hits, cap(f.hits)+64)
+	if f.keep {
+		f.cones = slices.Grow(f.cones, cap(f.cones)+64)
+	}
+}
+
+// run is the loop of expand. It returns false when a buffer may not do for the next triangle, to be called again with larger
+// ones: it calls nothing itself, which lets the compiler keep the cone in registers.
+func (f *Finder) run(cone *frame, eye exact.Pt, height int32) bool {
+	tris, stack, hits := f.m.Tris, f.stack[:cap(f.stack)], f.hits[:cap(f.hits)]
+	now, depth, nhits, count := *cone, len(f.stack), len(f.hits), f.count
+	for depth+nhits+3 <= len(hits) && depth+2 <= len(stack) {
+		// Seen from the eye, the edge of entry runs from its end (right) to its corner (left); the apex lies behind.
+		t := &tris[uint32(now.in)>>2]
+		corner := uint32(now.in & 3)
+		out, left := after(corner), before(corner)
 		if f.keep {
-			f.cones = append(f.cones, Cone{now.in.Tri(), now.r, now.l})
+			n := len(f.cones)
+			if n == cap(f.cones) {
+				break
+			}
+			f.cones = f.cones[:n+1]
+			f.cones[n] = Cone{now.in.Tri(), now.r, now.l}
 		}
-		v := s.Apex.Sub(eye)
+		count++
+		v := t.P[left].Sub(eye)
 		onRight, onLeft := now.r.Cross(v), v.Cross(now.l)
-		if onRight > 0 {
-			if onLeft > 0 { // the apex splits the cone
-				if s.TopLeft < height {
-					stack = append(stack, frame{s.Left, v, now.l})
-				} else {
-					stack = append(stack, frame{^(now.in.Prev() | later), v, now.l})
+		if (onRight-1)|(onLeft-1) >= 0 { // the apex splits the cone: the right edge comes first, the left one waits
+			wait := ^(now.in + mesh.Edge(left) - mesh.Edge(corner) | later)
+			next, top := t.N[left], t.Top[left]
+			if top < height {
+				wait = next
+			}
+			stack[depth] = frame{wait, v, now.l}
+			depth++
+			now.l = v
+		} else {
+			if onRight == 0 {
+				if t.Top[out] >= height && now.r.Cross(t.P[out].Sub(eye)) == 0 { // the right edge is seen edge-on
+					hits[nhits] = hit{^(now.in + mesh.Edge(out) - mesh.Edge(corner)), now.r, now.r}
+					nhits++
 				}
-				now.l = v
-			} else if onLeft == 0 && s.TopLeft >= height && f.edgeOn(now.in, now.l, eye) {
-				stack = append(stack, frame{^now.in.Prev(), now.l, now.l})
+			} else if onLeft == 0 && t.Top[left] >= height && now.l.Cross(t.P[corner].Sub(eye)) == 0 {
+				stack[depth] = frame{^(now.in + mesh.Edge(left) - mesh.Edge(corner)), now.l, now.l}
+				depth++
 			}
-			// Only the right edge is crossed, or it comes first.
-			if s.TopRight < height {
-				now.in = s.Right
-				continue
+			if onRight <= 0 { // only the left edge is crossed
+				out = left
 			}
-			hits = append(hits, hit{now.in.Next(), now.r, now.l})
-		} else { // only the left edge is crossed
-			if onRight == 0 && s.TopRight >= height && f.edgeOn(now.in.Next(), now.r, eye) {
-				hits = append(hits, hit{^now.in.Next(), now.r, now.r})
-			}
-			if s.TopLeft < height {
-				now.in = s.Left
-				continue
-			}
-			hits = append(hits, hit{now.in.Prev(), now.r, now.l})
 		}
+		if t.Top[out] < height {
+			now.in = t.N[out]
+			continue
+		}
+		now.in += mesh.Edge(out) - mesh.Edge(corner)
+		hits[nhits] = hit(now)
+		nhits++
 		for {
-			if len(stack) == 0 {
-				f.hits, f.stack = hits, stack
-				f.count += count
-				return
+			if depth == 0 {
+				f.hits, f.count = hits[:nhits], count
+				return true
 			}
-			now = stack[len(stack)-1]
-			stack = stack[:len(stack)-1]
+			depth--
+			now = stack[depth]
 			if now.in >= 0 {
 				break
 			}
 			if e := ^now.in; e&later != 0 {
 				now.in = e &^ later
 			}
-			hits = append(hits, hit(now))
+			hits[nhits] = hit(now)
+			nhits++
 		}
 	}
-}
-
-// edgeOn reports whether the starting corner of e lies on direction d from the eye.
-func (f *Finder) edgeOn(e mesh.Edge, d exact.Vec, eye exact.Pt) bool {
-	return d.Cross(f.m.Tris[e.Tri()].P[e.Corner()].Sub(eye)) == 0
+	*cone, f.stack, f.hits, f.count = now, stack[:depth], hits[:nhits], count
+	return false
 }

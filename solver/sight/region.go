@@ -2,6 +2,7 @@ package sight
 
 import (
 	"math"
+	"slices"
 
 	"enfilade/solver/exact"
 )
@@ -111,19 +112,26 @@ func (r *Region) add(v Vertex, k Kind) {
 	r.xy = append(r.xy, [2]float64{x, y})
 }
 
-// addGrid adds a vertex on the grid, for which there is nothing to divide.
-func (r *Region) addGrid(p exact.Pt, k Kind) {
-	r.ring = append(r.ring, Vertex{At: p, Den: 1})
-	r.kinds = append(r.kinds, k)
-	r.xy = append(r.xy, [2]float64{float64(p.X - r.Eye.X), float64(p.Y - r.Eye.Y)})
+// strip is the end of a region's ring, open for vertices to be written.
+type strip struct {
+	eye   exact.Pt
+	n     int // written so far
+	ring  []Vertex
+	kinds []Kind
+	xy    [][2]float64
 }
 
-// addRay adds the vertex at num/den of direction d from the eye.
-func (r *Region) addRay(d exact.Vec, num, den int64, k Kind) {
-	t := float64(num) / float64(den)
-	r.ring = append(r.ring, Vertex{r.Eye, d, num, den})
-	r.kinds = append(r.kinds, k)
-	r.xy = append(r.xy, [2]float64{t * float64(d.X), t * float64(d.Y)})
+// open makes room for n more vertices.
+func (r *Region) open(n int) strip {
+	k := len(r.ring)
+	r.ring, r.kinds, r.xy = slices.Grow(r.ring, n), slices.Grow(r.kinds, n), slices.Grow(r.xy, n)
+	return strip{r.Eye, 0, r.ring[k : k+n], r.kinds[k : k+n], r.xy[k : k+n]}
+}
+
+// close takes over what was written to s.
+func (r *Region) close(s strip) {
+	n := len(r.ring) + s.n
+	r.ring, r.kinds, r.xy = r.ring[:n], r.kinds[:n], r.xy[:n]
 }
 
 // canonical lets the ring begin at its lowest left corner, or, where it passes that more than once, at the time that goes on
