@@ -80,6 +80,7 @@ func (w *window) describeNothing(p *plan.Plan) card {
 				}
 				return err
 			}},
+			w.newBody(),
 			w.lengthField("Low walls", d.LowHeight, func(v int32) error {
 				return within(v, 1, plan.Ceiling-1, func() error { d.LowHeight = v; return nil })
 			}),

@@ -57,6 +57,16 @@ func (h *host) FormatLength(units float64) string {
 	return fmt.Sprintf("%.*f %s", decimals, units/unitSizes[unitOf(unit)], unitOf(unit))
 }
 
+// FormatArea is for the tools.
+func (h *host) FormatArea(units2 float64) string {
+	const foot2 = 3048 * 3048
+	if h.w.unit() == "ft" {
+		return fmt.Sprintf("%.1f ft²", units2/foot2)
+	}
+	const metre2 = 1e8
+	return fmt.Sprintf("%.2f m²", units2/metre2)
+}
+
 // unit is the plan's display unit.
 func (w *window) unit() string { return w.session.Plan().Sheet().Unit }
 

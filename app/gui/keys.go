@@ -65,7 +65,7 @@ func (w *window) typedRune(r rune) {
 	letter := string(unicode.ToUpper(r))
 	for i, k := range tools {
 		if k.letter == letter {
-			w.choose(i)
+			w.choose(w.asked(i))
 			return
 		}
 	}
@@ -93,6 +93,10 @@ func (w *window) zoom(factor float64) {
 func (w *window) undo() {
 	if f, ok := w.win.Canvas().Focused().(undoable); ok {
 		f.Undo()
+		return
+	}
+	if w.tool.Key(w.host, tool.Key{Name: tool.KeyUndo}) {
+		w.acted()
 		return
 	}
 	w.tool.Stop(w.host)

@@ -84,7 +84,11 @@ func named(what, label string) string {
 func (w *window) toolMenu(group string) (list []command) {
 	for i, k := range tools {
 		if k.group == group {
-			list = append(list, command{label: k.name, icon: k.icon, key: k.letter, do: func() { w.choose(i) }})
+			key := k.letter
+			for j := shapeOf(i); j < i; j++ {
+				key += " " + k.letter
+			}
+			list = append(list, command{label: k.name, icon: k.icon, key: key, do: func() { w.choose(i) }})
 		}
 	}
 	return list

@@ -17,16 +17,17 @@ import (
 // overlay holds the native objects over the picture: handles, rubber band, snap mark, box and the measure beside the
 // pointer. Objects are kept and used again, for the toolkit keeps textures by object.
 type overlay struct {
-	root  *fyne.Container
-	lines []*canvas.Line
-	rects []*canvas.Rectangle
-	label *inkText
-	plate *canvas.Rectangle
-	used  struct{ lines, rects int }
-	cam   view.Camera
-	pix   float32
-	ink   color.NRGBA
-	floor color.NRGBA
+	root   *fyne.Container
+	lines  []*canvas.Line
+	rects  []*canvas.Rectangle
+	label  *inkText
+	plate  *canvas.Rectangle
+	fields [2]*typeField
+	used   struct{ lines, rects int }
+	cam    view.Camera
+	pix    float32
+	ink    color.NRGBA
+	floor  color.NRGBA
 }
 
 func newOverlay() *overlay {
@@ -35,6 +36,12 @@ func newOverlay() *overlay {
 	o.label.Hide()
 	o.plate.Hide()
 	o.root = newFree(o.plate, o.label)
+	for i := range o.fields {
+		o.fields[i] = newTypeField()
+		for _, x := range o.fields[i].objects() {
+			o.root.Add(x)
+		}
+	}
 	return o
 }
 
@@ -57,6 +64,9 @@ func (o *overlay) show(s tool.Sketch, cam view.Camera, pix float32) {
 	}
 	for _, h := range s.Handles {
 		o.square(o.place(h), 8)
+	}
+	for _, k := range s.Knobs {
+		o.knob(fyne.NewPos(float32(k[0])/pix, float32(k[1])/pix))
 	}
 	if s.Snap != nil {
 		o.guides(s.Snap.Guides[:])
@@ -111,6 +121,13 @@ func (o *overlay) dot(c fyne.Position, radius float32, fill color.Color) {
 	o.rects[o.used.rects-1].CornerRadius = radius
 }
 
+// knob is a round handle of a selected mark.
+func (o *overlay) knob(c fyne.Position) {
+	const radius = 4
+	o.rect(c.SubtractXY(radius, radius), fyne.NewSquareSize(2*radius), 1.3, o.floor, o.ink)
+	o.rects[o.used.rects-1].CornerRadius = radius
+}
+
 // square is an open handle of a selected item's corner.
 func (o *overlay) square(at fyne.Position, side float32) {
 	o.rect(at.SubtractXY(side/2, side/2), fyne.NewSquareSize(side), 1.5, o.floor, o.ink)
@@ -124,9 +141,27 @@ func (o *overlay) box(a, b exact.Pt) {
 	o.rect(at, size, 1, faded(o.ink, 7), faded(o.ink, 55))
 }
 
-// measure writes the measure or the fault beside the pointer, away from the picture's edges.
+// measure writes the measure or the fault beside the pointer, away from the picture's edges; while a measure is typed the
+// fields for it stand there, and a fault below them.
 func (o *overlay) measure(s tool.Sketch) {
+	place := s.LabelAt
+	if s.Fault != "" && s.Snap != nil {
+		place = s.Snap.At
+	}
+	at := o.place(place).AddXY(14, 10)
+	limit := o.root.Size()
+	if n := len(s.Fields); n > 0 {
+		size := typingSize(n)
+		at.X, at.Y = max(26, min(at.X, limit.Width-size.Width-12)), max(26, min(at.Y, limit.Height-size.Height-34))
+		o.typing(s.Fields, at)
+		at = at.AddXY(1, size.Height+6)
+	} else {
+		o.typing(nil, at)
+	}
 	text, r := s.Label, roleInk
+	if len(s.Fields) > 0 {
+		text = ""
+	}
 	if s.Fault != "" {
 		text, r = s.Fault, roleRed
 	}
@@ -135,19 +170,15 @@ func (o *overlay) measure(s tool.Sketch) {
 		o.plate.Hide()
 		return
 	}
-	place := s.LabelAt
-	if s.Fault != "" && s.Snap != nil {
-		place = s.Snap.At
-	}
+	o.write(text, r, at, limit)
+}
+
+// write puts a line of text on a plate.
+func (o *overlay) write(text string, r role, at fyne.Position, limit fyne.Size) {
 	size := textSize(text, assets.Semibold, 12)
-	at := o.place(place).AddXY(14, 10)
-	limit := o.root.Size()
 	at.X, at.Y = min(at.X, limit.Width-size.Width-12), min(at.Y, limit.Height-size.Height-8)
 	o.label.text, o.label.role = text, r
 	o.plate.FillColor = faded(o.floor, 85)
-	if s.Typed {
-		o.plate.FillColor = o.floor
-	}
 	o.plate.Move(at.SubtractXY(5, 2))
 	o.plate.Resize(size.AddWidthHeight(10, 4))
 	o.label.Move(at)

@@ -19,29 +19,64 @@ type toolKind struct {
 	make   func() tool.Tool
 }
 
-// tools are the tools in the rail's order; the first is the one Escape leads back to.
+// tools are the tools in the rail's order; the first is the one Escape leads back to. Tools that follow each other with the
+// same letter are shapes of one thing: they share a button, and the letter goes from one to the next.
 var tools = []toolKind{
 	{"Select", "select", "", "Select and move (Esc)", "Inspect", func() tool.Tool { return &tool.Select{} }},
-	{"Measure", "measure", "M", "Measure a distance", "Inspect", func() tool.Tool { return &tool.Measure{} }},
+	{"Measure", "measure", "M", "Measure distances, angles and areas", "Inspect", func() tool.Tool { return &tool.Measure{} }},
 	{"Wall", "wall", "W", "Draw walls corner by corner", "Draw", func() tool.Tool { return &tool.Chain{Kind: plan.Solid} }},
+	{"Room", "room", "R", "Draw a room: a rectangle of walls", "Draw", func() tool.Tool { return &tool.Rect{Kind: plan.KindWall} }},
 	{"Door or gap", "door", "D", "Cut a door or a gap into a wall", "Draw", func() tool.Tool { return &tool.Door{} }},
 	{"Glazing", "glazing", "G", "Draw glazing: it stops walking, not sight", "Draw", func() tool.Tool { return &tool.Chain{Kind: plan.Glazing} }},
 	{"Screen", "screen", "S", "Draw a screen: it stops sight, not walking", "Draw", func() tool.Tool { return &tool.Chain{Kind: plan.Screen} }},
 	{"Low wall", "low", "L", "Draw a low wall: it stops walking, and sight up to its height", "Draw", func() tool.Tool { return &tool.Chain{Kind: plan.Low} }},
-	{"Column or block", "block", "C", "Click for a column, drag for a block", "Draw", func() tool.Tool { return &tool.Rect{Kind: plan.KindBlock} }},
-	{"Zone", "zone", "Z", "Name an area", "Draw", func() tool.Tool { return &tool.Rect{Kind: plan.KindZone} }},
-	{"Floor", "floor", "F", "Draw the floor's outline", "Draw", func() tool.Tool { return &tool.Chain{Floor: true} }},
+	{"Column", "block", "C", "Put down a column; C again draws a block, and again one of any outline", "Draw", func() tool.Tool { return &tool.Round{} }},
+	{"Block", "box", "C", "Draw a block, a level rectangle", "Draw", func() tool.Tool { return &tool.Rect{Kind: plan.KindBlock} }},
+	{"Block of any outline", "outline", "C", "Draw a block corner by corner", "Draw", func() tool.Tool { return &tool.Chain{Ring: plan.KindBlock} }},
+	{"Zone", "zone", "Z", "Name an area; Z again draws one of any outline", "Draw", func() tool.Tool { return &tool.Rect{Kind: plan.KindZone} }},
+	{"Zone of any outline", "zone", "Z", "Name an area, corner by corner", "Draw", func() tool.Tool { return &tool.Chain{Ring: plan.KindZone} }},
+	{"Floor", "floor", "F", "Draw the floor's outline; F again draws a rectangle", "Draw", func() tool.Tool { return &tool.Chain{Ring: plan.KindFloor} }},
+	{"Floor, a rectangle", "floor", "F", "Draw the floor as a rectangle", "Draw", func() tool.Tool { return &tool.Rect{Kind: plan.KindFloor} }},
 	{"Observer", "observer", "O", "Put down an observer", "Place", func() tool.Tool { return &tool.Mark{Kind: plan.KindObserver} }},
 	{"Target", "target", "T", "Put down a target: a thing to be seen", "Place", func() tool.Tool { return &tool.Mark{Kind: plan.KindTarget} }},
 	{"Start", "start", "B", "Put down a start: where a walk begins", "Place", func() tool.Tool { return &tool.Mark{Kind: plan.KindStart} }},
 }
 
-// newRail lays the tools' buttons out in groups, each named and parted from the next by a hairline.
+// shapeOf returns the first of the tools that tool i is a shape of.
+func shapeOf(i int) int {
+	for i > 0 && tools[i].letter != "" && tools[i-1].letter == tools[i].letter {
+		i--
+	}
+	return i
+}
+
+// nextShape returns the tool after i among the shapes of one thing, round and round; i itself where there is but one.
+func nextShape(i int) int {
+	if i+1 < len(tools) && shapeOf(i+1) == shapeOf(i) {
+		return i + 1
+	}
+	return shapeOf(i)
+}
+
+// asked returns the tool that the letter or the button of tool i means: the next shape when one of its shapes is in hand.
+func (w *window) asked(i int) int {
+	if shapeOf(w.toolAt) == shapeOf(i) {
+		return nextShape(w.toolAt)
+	}
+	return i
+}
+
+// newRail lays the tools' buttons out in groups, each named and parted from the next by a hairline. It returns a button for
+// each tool; shapes of one thing have the same.
 func newRail(t *tips, choose func(i int)) (*fyne.Container, []*toolButton) {
 	var buttons []*toolButton
 	var objects []fyne.CanvasObject
 	group := ""
 	for i, k := range tools {
+		if first := shapeOf(i); first != i {
+			buttons = append(buttons, buttons[first])
+			continue
+		}
 		if k.group != group {
 			if group != "" {
 				objects = append(objects, hairline())
@@ -69,8 +104,14 @@ func (railLayout) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(r
 // Layout is for the toolkit.
 func (railLayout) Layout(objects []fyne.CanvasObject, s fyne.Size) {
 	pitch := float32(40)
-	if need := float32(len(tools))*40 + 3*22 + 2*14; s.Height < need {
-		pitch = max(28, 40-(need-s.Height)/float32(len(tools)))
+	n := float32(0)
+	for i := range tools {
+		if shapeOf(i) == i {
+			n++
+		}
+	}
+	if need := n*40 + 3*22 + 2*14; s.Height < need {
+		pitch = max(28, 40-(need-s.Height)/n)
 	}
 	y := float32(8)
 	for _, o := range objects {

@@ -45,6 +45,15 @@ func (b *toolButton) choose(chosen bool) {
 	}
 }
 
+// put shows another icon and tip: those of the shape in hand.
+func (b *toolButton) put(icon, tip string) {
+	b.tip = tip
+	if b.icon.name != icon {
+		b.icon.name = icon
+		b.Refresh()
+	}
+}
+
 // Tapped chooses the tool.
 func (b *toolButton) Tapped(*fyne.PointEvent) { b.tips.hide(); b.tapped() }
 

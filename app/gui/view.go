@@ -244,8 +244,8 @@ func (v *planView) TypedKey(e *fyne.KeyEvent) { v.w.typedKey(e.Name) }
 // TypedRune is for the toolkit.
 func (v *planView) TypedRune(r rune) { v.w.typedRune(r) }
 
-// AcceptsTab reports whether Tab is for the tool: it goes between a typed length and its angle.
-func (v *planView) AcceptsTab() bool { return v.w.sketch.Typed || len(v.w.sketch.Band) > 0 }
+// AcceptsTab reports whether Tab is for the tool: it goes between the fields at the pointer.
+func (v *planView) AcceptsTab() bool { return v.w.sketch.Types }
 
 // KeyDown notes that Space is held, for panning.
 func (v *planView) KeyDown(e *fyne.KeyEvent) {

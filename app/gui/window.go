@@ -2,6 +2,7 @@ package gui
 
 import (
 	"path/filepath"
+	"strings"
 	"time"
 
 	"fyne.io/fyne/v2"
@@ -88,7 +89,7 @@ func newWindow(p parts, look *look) *window {
 func (w *window) build() {
 	w.tips, w.notice, w.status = newTips(w.do), newNotice(), newStatus()
 	w.view, w.foot, w.form, w.table, w.first = newPlanView(w), newFoot(), newForm(w), newTable(w), newFirstSteps()
-	rail, buttons := newRail(w.tips, w.choose)
+	rail, buttons := newRail(w.tips, func(i int) { w.choose(w.asked(i)) })
 	w.rail = buttons
 	w.side = w.sideColumn()
 	picture := container.NewStack(w.view, w.first.box)
@@ -171,12 +172,26 @@ func (w *window) acted() {
 	w.view.Refresh()
 	w.status.at(w.view.cam.Grid(w.view.place()), p.Sheet().Unit, w.view.inside)
 	w.status.snap.set(snapText(w.sketch.Snap, w.view.cam, w.snapper.On))
-	w.status.hint.set(w.onFoot(w.tool.Hint(w.host)))
+	w.status.hint.set(w.onFoot(w.hint()))
 	w.status.count(p)
 	w.form.update(p, w.session.Selection())
 	w.table.update()
 	w.foot.update(w)
 	w.title()
+}
+
+// hint is what the next click does; of a thing with several shapes also how to come to the next.
+func (w *window) hint() string {
+	s := w.tool.Hint(w.host)
+	if nextShape(w.toolAt) != w.toolAt && !w.begun() {
+		s += " · " + tools[w.toolAt].letter + " again: " + strings.ToLower(tools[nextShape(w.toolAt)].name)
+	}
+	return s
+}
+
+// begun reports whether the tool in hand is in the midst of something.
+func (w *window) begun() bool {
+	return len(w.sketch.Band) > 0 || len(w.sketch.Handles) > 0 || w.sketch.Fields != nil
 }
 
 // nameHovered shows the name of the item under the pointer after a while.
@@ -227,13 +242,17 @@ func (w *window) title() {
 	}
 }
 
-// choose takes a tool in hand.
+// choose takes a tool in hand. What the one before was in the midst of is finished as far as it has come.
 func (w *window) choose(i int) {
+	if f, ok := w.tool.(tool.Finisher); ok {
+		f.Finish(w.host)
+	}
 	w.tool.Stop(w.host)
 	w.tool, w.toolAt = tools[i].make(), i
-	for j, b := range w.rail {
-		b.choose(i == j)
+	for _, b := range w.rail {
+		b.choose(b == w.rail[i])
 	}
+	w.rail[i].put(tools[i].icon, tools[i].tip)
 	if w.view.inside {
 		w.tool.Move(w.host, w.view.pointer(w.view.last, 0))
 	}

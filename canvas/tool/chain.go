@@ -3,33 +3,31 @@ package tool
 import (
 	"fmt"
 	"math"
-	"strings"
 
 	"enfilade/canvas/pick"
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 )
 
-// Chain draws a run of straight pieces corner by corner: walls of every kind, and the floor.
+// Chain draws a run of straight pieces corner by corner: walls of every kind, or the outline of the floor, a block or a
+// zone. A length and an angle may be typed for each piece.
 type Chain struct {
-	Kind  plan.WallKind
-	Floor bool // the run becomes the floor, always closed
+	Kind plan.WallKind
+	Ring plan.Kind // KindFloor, KindBlock or KindZone when the run becomes an outline, always closed; else a wall is drawn
 
-	pts     []exact.Pt
-	at      exact.Pt // where the next corner would go
-	snap    pick.Snap
-	here    bool   // the pointer is over the picture
-	length  string // typed length and angle
-	angle   string
-	inAngle bool
-	fault   string
+	pts    []exact.Pt
+	at     exact.Pt // where the next corner would go
+	snap   pick.Snap
+	here   bool // the pointer is over the picture
+	typing typing
+	fault  string
 }
 
 // Down puts a corner; a double click ends the run, a click on the first corner closes it.
 func (t *Chain) Down(h Host, e Pointer) {
 	t.aim(h, e)
 	if e.Clicks > 1 {
-		t.finish(h)
+		t.Finish(h)
 		return
 	}
 	t.put(h, t.at)
@@ -37,14 +35,14 @@ func (t *Chain) Down(h Host, e Pointer) {
 
 // put adds a corner to the run, or closes it.
 func (t *Chain) put(h Host, at exact.Pt) {
-	t.length, t.angle, t.inAngle = "", "", false
+	t.typing.clear()
 	n := len(t.pts)
 	switch {
 	case n > 0 && at == t.pts[n-1]:
 		return
 	case n > 2 && at == t.pts[0]:
 		t.pts = append(t.pts, at)
-		t.finish(h)
+		t.Finish(h)
 		return
 	}
 	t.pts = append(t.pts, at)
@@ -86,23 +84,21 @@ func eighth(a, b exact.Pt) exact.Pt {
 }
 
 // target returns where the next corner goes: what was typed counts before the pointer.
-func (t *Chain) target(h Host) exact.Pt {
+func (t *Chain) target(h Host) (at exact.Pt, fault string) {
 	n := len(t.pts)
-	if n == 0 || t.length == "" && t.angle == "" {
-		return t.at
+	if n == 0 || !t.typing.some() {
+		return t.at, ""
 	}
 	a := t.pts[n-1]
-	l, deg := exact.Dist(a, t.at), bearing(a, t.at)
-	if v, err := h.ParseLength(t.length); t.length != "" && err == nil {
-		l = float64(v)
-	}
-	if v, err := parseAngle(t.angle); t.angle != "" && err == nil {
-		deg = v
+	l, fault := t.typing.length(h, 0, exact.Dist(a, t.at))
+	deg, fault2 := t.typing.angle(1, bearing(a, t.at))
+	if fault == "" {
+		fault = fault2
 	}
 	sin, cos := math.Sincos(deg * math.Pi / 180)
 	x, y := float64(a.X)+math.Round(l*cos), float64(a.Y)+math.Round(l*sin)
 	lim := float64(plan.MaxCoord)
-	return exact.Pt{X: int32(min(max(x, -lim), lim)), Y: int32(min(max(y, -lim), lim))}
+	return exact.Pt{X: int32(min(max(x, -lim), lim)), Y: int32(min(max(y, -lim), lim))}, fault
 }
 
 func bearing(a, b exact.Pt) float64 {
@@ -116,49 +112,74 @@ func (t *Chain) show(h Host) {
 		return
 	}
 	pts := t.pts
-	if to := t.target(h); to != pts[len(pts)-1] {
+	to, fault := t.target(h)
+	if to != pts[len(pts)-1] {
 		pts = append(pts[:len(pts):len(pts)], to)
 	}
 	e := t.edit(h, pts)
 	if e == nil {
 		h.Cancel()
-		return
-	}
-	if err := h.Preview(e); err != nil {
+	} else if err := h.Preview(e); err != nil {
 		t.fault = reason(err)
+	}
+	if fault != "" {
+		t.fault = fault
 	}
 }
 
 // edit returns the edit that a run through pts means, nil when it is too short for anything.
 func (t *Chain) edit(h Host, pts []exact.Pt) plan.Edit {
-	if t.Floor {
+	if t.ring() {
 		if n := len(pts); n > 1 && pts[n-1] == pts[0] {
 			pts = pts[:n-1]
 		}
 		if len(pts) < 3 {
 			return nil
 		}
-		return plan.SetFloor{Ring: plan.ChainOf(pts...)}
+		return ringEdit(t.Ring, plan.ChainOf(pts...), h.Defaults())
 	}
 	if len(pts) < 2 {
 		return nil
 	}
-	d := h.Defaults()
-	w := plan.Wall{Kind: t.Kind, Line: plan.ChainOf(pts...), Height: plan.Ceiling}
-	switch t.Kind {
-	case plan.Solid:
-		w.Thickness, w.Height = d.Thickness, d.Height
-	case plan.Low:
-		w.Thickness, w.Height = d.LowThickness, d.LowHeight
+	return plan.AddWall{Wall: newWall(t.Kind, plan.ChainOf(pts...), h.Defaults())}
+}
+
+func (t *Chain) ring() bool { return t.Ring != plan.KindPlan && t.Ring != plan.KindWall }
+
+// ringEdit returns the edit that adds an outline.
+func ringEdit(kind plan.Kind, ring plan.Chain, d Defaults) plan.Edit {
+	switch kind {
+	case plan.KindFloor:
+		return plan.SetFloor{Ring: ring}
+	case plan.KindZone:
+		return plan.AddZone{Zone: plan.Zone{Ring: ring, Room: true}}
 	}
-	return plan.AddWall{Wall: w}
+	return plan.AddBlock{Block: plan.Block{Ring: ring, Height: d.Height}}
+}
+
+// newWall returns a wall of a kind with the measures of new walls.
+func newWall(kind plan.WallKind, line plan.Chain, d Defaults) plan.Wall {
+	w := plan.Wall{Kind: kind, Line: line, Height: plan.Ceiling}
+	switch kind {
+	case plan.Solid:
+		w.Thickness, w.Height, w.Justify = d.Thickness, d.Height, d.Justify
+	case plan.Low:
+		w.Thickness, w.Height, w.Justify = d.LowThickness, d.LowHeight, d.Justify
+	}
+	if d.Thin {
+		w.Thickness = 0
+	}
+	return w
 }
 
 // Up does nothing: corners are put when the button goes down.
 func (t *Chain) Up(Host, Pointer) {}
 
-// finish does the run as one step.
-func (t *Chain) finish(h Host) {
+// Finish does the run as one step.
+func (t *Chain) Finish(h Host) {
+	if len(t.pts) == 0 {
+		return
+	}
 	e := t.edit(h, t.pts)
 	t.clear()
 	if e == nil {
@@ -169,52 +190,68 @@ func (t *Chain) finish(h Host) {
 }
 
 func (t *Chain) clear() {
-	t.pts, t.length, t.angle, t.inAngle, t.fault = nil, "", "", false, ""
+	t.pts, t.fault = nil, ""
+	t.typing.clear()
 }
 
-// Key ends the run, takes back its last corner, and takes a typed length and angle.
+// Key ends the run, takes back its last corner, takes a typed length and angle, and changes the body of the wall.
 func (t *Chain) Key(h Host, k Key) bool {
+	if k.Name == KeyRune && t.bodyKey(h, k.Rune) {
+		return true
+	}
 	if len(t.pts) == 0 {
 		return false
 	}
-	typing := t.length != "" || t.angle != ""
+	if t.typing.key(k) {
+		t.show(h)
+		return true
+	}
 	switch k.Name {
 	case KeyEscape:
-		if typing {
-			t.length, t.angle, t.inAngle = "", "", false
-			t.show(h)
-			return true
-		}
-		t.finish(h)
+		t.Finish(h)
 	case KeyEnter:
-		if typing {
-			t.put(h, t.target(h))
+		if to, fault := t.target(h); t.typing.some() {
+			if fault == "" {
+				t.put(h, to)
+			}
 			return true
 		}
-		t.finish(h)
-	case KeyBackspace, KeyDelete:
+		t.Finish(h)
+	case KeyBackspace, KeyDelete, KeyUndo:
 		t.back(h)
-	case KeyTab:
-		t.inAngle = !t.inAngle
-	case KeyRune:
-		return t.typed(h, k.Rune)
 	default:
 		return false
 	}
 	return true
 }
 
-// back takes back the last typed character, or the last corner.
+// bodyKey changes where the body of new walls lies, and whether they have one.
+func (t *Chain) bodyKey(h Host, r rune) bool {
+	if t.ring() || t.Kind != plan.Solid && t.Kind != plan.Low || !changeBody(h, r) {
+		return false
+	}
+	t.show(h)
+	return true
+}
+
+// changeBody does the keys of every tool that draws walls: J puts the body on the line's other side, H makes it thin or
+// thick.
+func changeBody(h Host, r rune) bool {
+	d := h.Defaults()
+	switch r {
+	case 'j', 'J':
+		d.Justify, d.Thin = (d.Justify+1)%3, false
+	case 'h', 'H':
+		d.Thin = !d.Thin
+	default:
+		return false
+	}
+	h.SetDefaults(d)
+	return true
+}
+
+// back takes back the last corner.
 func (t *Chain) back(h Host) {
-	field := &t.length
-	if t.inAngle {
-		field = &t.angle
-	}
-	if r := []rune(*field); len(r) > 0 {
-		*field = string(r[:len(r)-1])
-		t.show(h)
-		return
-	}
 	t.pts = t.pts[:len(t.pts)-1]
 	if len(t.pts) == 0 {
 		t.clear()
@@ -222,21 +259,6 @@ func (t *Chain) back(h Host) {
 		return
 	}
 	t.show(h)
-}
-
-// typed takes a character of a length or an angle.
-func (t *Chain) typed(h Host, r rune) bool {
-	begun := t.length != "" || t.angle != ""
-	if !strings.ContainsRune("0123456789.,-'\"/ ", r) && !(begun && strings.ContainsRune("mcftin°", r)) || r == ' ' && !begun {
-		return false
-	}
-	if t.inAngle {
-		t.angle += string(r)
-	} else {
-		t.length += string(r)
-	}
-	t.show(h)
-	return true
 }
 
 // Stop leaves the run undone.
@@ -262,52 +284,65 @@ func (t *Chain) Sketch(h Host) Sketch {
 	if n == 0 {
 		return s
 	}
-	to := t.target(h)
+	to, _ := t.target(h)
 	s.Band, s.Handles, s.LabelAt = []exact.Pt{t.pts[n-1], to}, t.pts, to
-	s.Dragged = t.drawn(h)
-	s.Label = fmt.Sprintf("%s · %s°", h.FormatLength(exact.Dist(t.pts[n-1], to)), degrees(bearing(t.pts[n-1], to)))
-	if t.length != "" || t.angle != "" || t.inAngle {
-		s.Typed = true
-		s.Label = t.typedLabel()
+	s.Dragged, s.Types = t.drawn(h), true
+	l, deg := h.FormatLength(exact.Dist(t.pts[n-1], to)), degrees(bearing(t.pts[n-1], to))+"°"
+	s.Label = l + " · " + deg
+	s.Fields = t.typing.fields([2]string{"length", "angle"}, [2]string{l, deg})
+	if t.typing.on {
+		s.Snap = nil // the fields say where the corner goes
 	}
 	return s
 }
 
-// drawn names what is being drawn: the new wall, or the floor.
+// drawn names what is being drawn: the new item, or the floor.
 func (t *Chain) drawn(h Host) []plan.Ref {
-	if t.Floor {
+	switch t.Ring {
+	case plan.KindFloor:
 		return []plan.Ref{{Kind: plan.KindFloor}}
+	case plan.KindBlock:
+		return []plan.Ref{plan.AddBlock{}.Added(h.Plan())}
+	case plan.KindZone:
+		return []plan.Ref{plan.AddZone{}.Added(h.Plan())}
 	}
 	return []plan.Ref{plan.AddWall{}.Added(h.Plan())}
 }
 
-// typedLabel shows both fields, the one that is being typed with a bar behind it.
-func (t *Chain) typedLabel() string {
-	l, a := orDash(t.length), orDash(t.angle)
-	if t.inAngle {
-		return fmt.Sprintf("%s · ∠ %s|", l, strings.TrimSuffix(a, "–"))
-	}
-	return fmt.Sprintf("%s| · ∠ %s", strings.TrimSuffix(l, "–"), a)
-}
-
-func orDash(s string) string {
-	if s == "" {
-		return "–"
-	}
-	return s
-}
-
 // Hint says what the next click does.
-func (t *Chain) Hint(Host) string {
-	what := [...]string{plan.Solid: "wall", plan.Glazing: "glazing", plan.Screen: "screen", plan.Low: "low wall"}[t.Kind]
-	if t.Floor {
-		what = "floor"
+func (t *Chain) Hint(h Host) string {
+	what := t.what()
+	body := ""
+	if !t.ring() && (t.Kind == plan.Solid || t.Kind == plan.Low) {
+		body = bodyHint(h.Defaults(), "left of the line", "right of the line")
 	}
 	switch n := len(t.pts); {
+	case t.typing.on:
+		return "Tab goes between length and angle, Enter puts the corner, Esc gives it back to the pointer"
 	case n == 0:
-		return "click where the " + what + " begins"
+		return "click where the " + what + " begins" + body
 	case n < 3:
-		return "click the next corner, or type its length; Enter or Esc ends the " + what
+		return "click the next corner, or type its length; Enter or Esc ends the " + what + body
 	}
-	return "click the next corner, or the first one to close the " + what + "; Enter ends it"
+	return "click the next corner, or the first one to close; Enter or Esc ends the " + what + body
+}
+
+func (t *Chain) what() string {
+	switch t.Ring {
+	case plan.KindFloor:
+		return "floor"
+	case plan.KindBlock:
+		return "block"
+	case plan.KindZone:
+		return "zone"
+	}
+	return [...]string{plan.Solid: "wall", plan.Glazing: "glazing", plan.Screen: "screen", plan.Low: "low wall"}[t.Kind]
+}
+
+// bodyHint says where the body of new walls lies, and the keys that change it.
+func bodyHint(d Defaults, left, right string) string {
+	if d.Thin {
+		return " · thin (H)"
+	}
+	return fmt.Sprintf(" · body %s (J), thick (H)", [...]string{plan.Centre: "centred", plan.Left: left, plan.Right: right}[d.Justify])
 }

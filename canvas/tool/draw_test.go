@@ -1,6 +1,8 @@
 package tool_test
 
 import (
+	"slices"
+	"strings"
 	"testing"
 
 	"enfilade/canvas/tool"
@@ -96,7 +98,7 @@ func TestWallTypedLengthAndAngle(t *testing.T) {
 	h.click(w, 0, 0)
 	h.move(w, 1, 0)
 	h.typed(w, "2,5")
-	if k := w.Sketch(h); !k.Typed || k.Band[1] != m(2.5, 0) || k.Label != "2,5| · ∠ –" {
+	if k := w.Sketch(h); !slices.Equal(k.Fields, []tool.Field{{"length", "2,5", "2.50 m", true}, {"angle", "", "0°", false}}) || k.Band[1] != m(2.5, 0) {
 		t.Errorf("typed length: %+v", k)
 	}
 	h.key(w, tool.KeyEnter)
@@ -126,7 +128,7 @@ func TestWallTypingIsTakenBack(t *testing.T) {
 		t.Errorf("after backspace the band ends at %v", k.Band[1])
 	}
 	h.key(w, tool.KeyEscape)
-	if k := w.Sketch(h); k.Typed || k.Band[1] != m(1, 0) {
+	if k := w.Sketch(h); k.Fields != nil || k.Band[1] != m(1, 0) {
 		t.Errorf("after Escape %+v, want the pointer's place again", k)
 	}
 }
@@ -165,7 +167,7 @@ func TestChainKinds(t *testing.T) {
 
 func TestFloor(t *testing.T) {
 	h := newHost(t, plan.Parts{})
-	f := &tool.Chain{Floor: true}
+	f := &tool.Chain{Ring: plan.KindFloor}
 	h.click(f, 0, 0)
 	h.click(f, 4, 0)
 	h.move(f, 4, 3)
@@ -218,6 +220,51 @@ func TestDoor(t *testing.T) {
 	}
 }
 
+// TestDoorTyped: a typed width holds for the next doors, and the distance counts from the nearer corner.
+func TestDoorTyped(t *testing.T) {
+	h := newHost(t, plan.Parts{Walls: []plan.Wall{{ID: "W1", Line: plan.ChainOf(m(0, 0), m(8, 0)), Thickness: 2000}}})
+	d := &tool.Door{}
+	h.move(d, 6.5, 0.1)
+	h.typed(d, "1,2")
+	h.key(d, tool.KeyTab)
+	h.typed(d, "0.5")
+	if k := d.Sketch(h); k.Label != "6.30 m  |  1.20 m  |  0.50 m" {
+		t.Errorf("label %q", k.Label)
+	}
+	h.key(d, tool.KeyEnter)
+	h.click(d, 1.6, 0.1)
+	var got []int32
+	for _, o := range h.plan.Openings() {
+		got = append(got, o.At, o.Width)
+	}
+	if want := []int32{63000, 12000, 10000, 12000}; !slices.Equal(got, want) {
+		t.Errorf("doors at %v, want %v", got, want)
+	}
+	h.move(d, 4.1, 0) // near the middle
+	if k := d.Sketch(h); k.Label != "3.40 m  |  1.20 m  |  3.40 m" {
+		t.Errorf("near the middle: %q", k.Label)
+	}
+}
+
+// TestDoorKeys: the keys change the next doors, and a gap has no hinges.
+func TestDoorKeys(t *testing.T) {
+	h := newHost(t, plan.Parts{Walls: []plan.Wall{{ID: "W1", Line: plan.ChainOf(m(0, 0), m(8, 0)), Thickness: 2000}}})
+	d := &tool.Door{}
+	h.move(d, 2, 0.1)
+	h.typed(d, "jhku")
+	h.click(d, 2, 0.1)
+	if o, _ := firstOpening(h.plan); !o.SideRight || !o.HingeEnd || o.Leaf != plan.GlazedLeaf || !o.Shut {
+		t.Errorf("door %+v, want a shut glazed one, hinged at the far jamb, to the right", o)
+	}
+	h.typed(d, "k")
+	h.click(d, 5, 0.1)
+	for _, o := range h.plan.Openings() {
+		if o.At > 40000 && (o.Leaf != plan.NoLeaf || o.Shut || o.HingeEnd) {
+			t.Errorf("gap %+v", o)
+		}
+	}
+}
+
 func TestDoorNearTheWallsEnd(t *testing.T) {
 	h := newHost(t, plan.Parts{Walls: []plan.Wall{{ID: "W1", Line: plan.ChainOf(m(0, 0), m(0.6, 0)), Thickness: 2000}}})
 	d := &tool.Door{}
@@ -231,23 +278,139 @@ func TestBlocks(t *testing.T) {
 	h := newHost(t, plan.Parts{})
 	b := &tool.Rect{Kind: plan.KindBlock}
 	h.drag(b, 3, 2, 1, 1)
-	h.click(b, -2, -2)
+	h.click(b, -2, -2) // by two clicks
+	h.move(b, -1, 0)
+	if k := b.Sketch(h); k.Label != "1.00 m × 2.00 m" || h.shown.NumBlocks() != 2 {
+		t.Errorf("between the clicks: %q, %d blocks", k.Label, h.shown.NumBlocks())
+	}
+	h.click(b, -1, 0)
+	c := &tool.Chain{Ring: plan.KindBlock}
+	for _, p := range [][2]float64{{5, 5}, {6, 5}, {5, 6}, {5, 5}} {
+		h.click(c, p[0], p[1])
+	}
 	var got []plan.Block
 	for _, k := range h.plan.Blocks() {
 		got = append(got, k)
 	}
-	if len(got) != 2 {
+	if len(got) != 3 {
 		t.Fatalf("%d blocks", len(got))
 	}
-	h.points("block", got[0].Ring.Points(), m(1, 1), m(3, 1), m(3, 2), m(1, 2))
-	if c := got[1].Circle; c == nil || c.At != m(-2, -2) || c.Radius != 2000 || got[1].Ring.Len() < 8 {
-		t.Errorf("column %+v", got[1])
+	h.points("dragged", got[0].Ring.Points(), m(1, 1), m(3, 1), m(3, 2), m(1, 2))
+	h.points("clicked", got[1].Ring.Points(), m(-2, -2), m(-1, -2), m(-1, 0), m(-2, 0))
+	h.points("by corners", got[2].Ring.Points(), m(5, 5), m(6, 5), m(5, 6))
+	h.steps("draw block", "draw block", "draw block")
+}
+
+func TestColumns(t *testing.T) {
+	h := newHost(t, plan.Parts{})
+	c := &tool.Round{}
+	h.move(c, -2, -2)
+	if h.shown.NumBlocks() != 1 {
+		t.Error("a column on the pointer is to be previewed")
 	}
-	for _, q := range got[1].Ring.Points() {
-		if d := exact.Dist(q, m(-2, -2)); d < 1999 || d > 2001 {
-			t.Errorf("the column's corner %v lies %g from its centre", q, d)
+	h.click(c, -2, -2)
+	h.drag(c, 1, 1, 1.5, 1)
+	h.move(c, 3, 3)
+	h.typed(c, "0,3")
+	if k := c.Sketch(h); len(k.Fields) != 1 || k.Fields[0] != (tool.Field{"radius", "0,3", "0.30 m", true}) {
+		t.Errorf("fields %+v", k.Fields)
+	}
+	h.key(c, tool.KeyEnter)
+	h.click(c, 5, 5) // with the radius of the last one
+	var got []plan.Circle
+	for _, b := range h.plan.Blocks() {
+		got = append(got, *b.Circle)
+	}
+	if want := []plan.Circle{{At: m(-2, -2), Radius: 2000}, {At: m(1, 1), Radius: 5000}, {At: m(3, 3), Radius: 3000}, {At: m(5, 5), Radius: 3000}}; !slices.Equal(got, want) {
+		t.Errorf("columns %+v, want %+v", got, want)
+	}
+	h.steps("draw column", "draw column", "draw column", "draw column")
+}
+
+func TestRoom(t *testing.T) {
+	h := newHost(t, plan.Parts{})
+	r := &tool.Rect{Kind: plan.KindWall}
+	h.click(r, 0, 0)
+	h.move(r, -1, 1)
+	h.typed(r, "4.2")
+	h.key(r, tool.KeyTab)
+	h.typed(r, "3")
+	h.typed(r, "j") // the body to the left of the walls: inside
+	h.key(r, tool.KeyEnter)
+	h.points("W1", h.wall("W1"), m(-4.2, 0), m(0, 0), m(0, 3), m(-4.2, 3), m(-4.2, 0))
+	if w, _ := h.plan.Wall("W1"); w.Justify != plan.Left || w.Thickness != 2000 {
+		t.Errorf("room of %+v", w)
+	}
+	h.steps("draw room")
+}
+
+// TestWallBody: J and H change where the body of new walls lies, before the first corner and between two.
+func TestWallBody(t *testing.T) {
+	h := newHost(t, plan.Parts{})
+	w := &tool.Chain{}
+	h.typed(w, "j")
+	h.click(w, 0, 0)
+	h.typed(w, "j")
+	if hint := w.Hint(h); !strings.Contains(hint, "right of the line (J)") {
+		t.Errorf("hint %q does not say where the body is", hint)
+	}
+	h.click(w, 3, 0)
+	h.key(w, tool.KeyEnter)
+	h.typed(w, "h")
+	h.click(w, 0, 3)
+	h.click(w, 3, 3)
+	h.key(w, tool.KeyEnter)
+	h.typed(w, "h")
+	h.click(w, 0, 5)
+	h.click(w, 3, 5)
+	h.key(w, tool.KeyEnter)
+	for id, want := range map[string]plan.Wall{"W1": {Justify: plan.Right, Thickness: 2000}, "W2": {Justify: plan.Right}, "W3": {Justify: plan.Right, Thickness: 2000}} {
+		if got, _ := h.plan.Wall(id); got.Justify != want.Justify || got.Thickness != want.Thickness {
+			t.Errorf("%s: %+v", id, got)
 		}
 	}
+	if (&tool.Chain{Kind: plan.Screen}).Key(h, tool.Key{Name: tool.KeyRune, Rune: 'j'}) {
+		t.Error("a screen has no body to lie anywhere")
+	}
+}
+
+// TestWallUndoAndFinish: undo in the middle of a run takes back its last corner; another tool finishes it.
+func TestWallUndoAndFinish(t *testing.T) {
+	h := newHost(t, plan.Parts{})
+	w := &tool.Chain{}
+	if w.Key(h, tool.Key{Name: tool.KeyUndo}) {
+		t.Error("with nothing begun undo is not the tool's")
+	}
+	h.click(w, 0, 0)
+	h.click(w, 3, 0)
+	h.click(w, 3, 3)
+	h.key(w, tool.KeyUndo)
+	w.Finish(h)
+	h.points("W1", h.wall("W1"), m(0, 0), m(3, 0))
+	h.steps("draw wall")
+	w.Finish(h)
+	h.steps("draw wall")
+}
+
+func TestWallTypedInFeet(t *testing.T) {
+	h := newHost(t, plan.Parts{})
+	w := &tool.Chain{}
+	h.click(w, 0, 0)
+	h.move(w, 1, 0)
+	h.typed(w, `10'6"`)
+	h.key(w, tool.KeyTab)
+	h.typed(w, "90")
+	h.key(w, tool.KeyEnter)
+	h.typed(w, "2-")
+	if k := w.Sketch(h); k.Fault == "" {
+		t.Error("a text that is no length is not told")
+	}
+	h.key(w, tool.KeyEnter)
+	if k := w.Sketch(h); len(k.Handles) != 2 {
+		t.Error("a text that is no length put a corner")
+	}
+	h.key(w, tool.KeyEscape, tool.KeyEscape)
+	h.points("W1", h.wall("W1"), m(0, 0), exact.Pt{Y: 10*3048 + 6*254})
 }
 
 func TestRectEscapeAndFlat(t *testing.T) {
@@ -311,7 +474,7 @@ func TestMeasureChangesNothing(t *testing.T) {
 // TestHints: every tool says what the next click does, in every state it starts in.
 func TestHints(t *testing.T) {
 	h := newHost(t, corner())
-	for _, u := range []tool.Tool{&tool.Select{}, &tool.Chain{}, &tool.Chain{Floor: true}, &tool.Door{}, &tool.Rect{Kind: plan.KindZone},
+	for _, u := range []tool.Tool{&tool.Select{}, &tool.Chain{}, &tool.Chain{Ring: plan.KindFloor}, &tool.Door{}, &tool.Rect{Kind: plan.KindZone},
 		&tool.Mark{Kind: plan.KindStart}, &tool.Measure{}} {
 		if u.Hint(h) == "" {
 			t.Errorf("%T has no hint", u)

@@ -16,8 +16,22 @@ type relabelled struct {
 // Label returns the other name.
 func (r relabelled) Label() string { return r.label }
 
+// adding is an edit that adds an item, under another name.
+type adding struct {
+	plan.Adder
+	label string
+}
+
+// Label returns the other name.
+func (a adding) Label() string { return a.label }
+
 // Named returns an edit under another label, for where its own says too little.
-func Named(label string, e plan.Edit) plan.Edit { return relabelled{e, label} }
+func Named(label string, e plan.Edit) plan.Edit {
+	if a, ok := e.(plan.Adder); ok {
+		return adding{a, label}
+	}
+	return relabelled{e, label}
+}
 
 // added returns the item that an edit of the committed plan adds.
 func added(h Host, e plan.Edit) (plan.Ref, bool) {

@@ -60,12 +60,21 @@ func (h *host) Do(e plan.Edit) error {
 }
 
 func (h *host) ParseLength(text string) (int32, error) {
+	if feet, inches, ok := strings.Cut(strings.TrimSuffix(text, `"`), "'"); ok {
+		f, err := strconv.ParseFloat(feet, 64)
+		i, _ := strconv.ParseFloat("0"+strings.TrimSpace(inches), 64)
+		return int32(math.Round(f*3048 + i*254)), err
+	}
 	v, err := strconv.ParseFloat(strings.Replace(text, ",", ".", 1), 64)
 	return int32(math.Round(v * 10000)), err
 }
 
 func (h *host) FormatLength(units float64) string {
 	return strconv.FormatFloat(units/10000, 'f', 2, 64) + " m"
+}
+
+func (h *host) FormatArea(units2 float64) string {
+	return strconv.FormatFloat(units2/1e8, 'f', 2, 64) + " m²"
 }
 
 // m returns the grid point at x, y metres.

@@ -1,50 +1,68 @@
 package tool
 
 import (
-	"fmt"
+	"math"
 
 	"enfilade/canvas/pick"
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 )
 
-// Rect draws a rectangle from corner to corner: a block, or a zone. For a block a click alone puts a round column.
+// Rect draws a level rectangle: a block, a zone, the floor, or a room of walls. It goes from corner to corner, by two clicks
+// or by a drag; its width and height may be typed.
 type Rect struct {
-	Kind plan.Kind // KindBlock or KindZone
+	Kind plan.Kind // KindBlock, KindZone, KindFloor, or KindWall for a room
 
-	from  *exact.Pt
-	at    exact.Pt
-	snap  *pick.Snap
-	edit  plan.Edit
-	fault string
+	from   *exact.Pt
+	at     exact.Pt
+	snap   *pick.Snap
+	press  press
+	edit   plan.Edit
+	typing typing
+	fault  string
 }
 
-// Down puts the first corner.
+// press is a pressed button: it tells a drag from a click.
+type press struct {
+	down  bool
+	x, y  float64 // device pixels
+	moved bool
+}
+
+func pressAt(e Pointer) press { return press{down: true, x: e.X, y: e.Y} }
+
+// move notes how far the pointer went, and reports whether it is a drag.
+func (p *press) move(h Host, e Pointer) bool {
+	if p.down && math.Hypot(e.X-p.x, e.Y-p.y) >= dragStart*h.Camera().K {
+		p.moved = true
+	}
+	return p.moved
+}
+
+// Down puts the first corner, or the second.
 func (t *Rect) Down(h Host, e Pointer) {
 	t.aim(h, e)
+	if t.from != nil {
+		t.finish(h)
+		return
+	}
 	at := t.at
-	t.from = &at
+	t.from, t.press = &at, pressAt(e)
 }
 
 // Move draws the rectangle out.
 func (t *Rect) Move(h Host, e Pointer) {
+	t.press.move(h, e)
 	t.aim(h, e)
-	if t.from == nil {
-		return
-	}
-	t.fault = ""
-	t.edit = t.draw(h)
-	if t.edit == nil {
-		h.Cancel()
-		return
-	}
-	if err := h.Preview(t.edit); err != nil {
-		t.fault = reason(err)
-	}
+	t.show(h)
 }
 
 func (t *Rect) aim(h Host, e Pointer) {
-	snap := h.Snapper().At(h.Plan(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl})
+	to := pick.SnapTo{Free: e.Ctrl}
+	if t.from != nil {
+		to.More = []exact.Pt{*t.from}
+	}
+	snap := h.Snapper().At(h.Plan(), h.Camera(), e.X, e.Y, to)
 	t.snap, t.at = &snap, snap.At
 	if t.from != nil && e.Shift { // a square
 		v := t.at.Sub(*t.from)
@@ -53,31 +71,80 @@ func (t *Rect) aim(h Host, e Pointer) {
 	}
 }
 
-// draw returns the edit that adds the rectangle, nil when it encloses nothing.
-func (t *Rect) draw(h Host) plan.Edit {
-	a, b := *t.from, t.at
-	if a.X == b.X || a.Y == b.Y {
-		return nil
+// target returns the second corner: what was typed counts before the pointer, on the pointer's side of the first.
+func (t *Rect) target(h Host) (exact.Pt, string) {
+	if !t.typing.some() {
+		return t.at, ""
 	}
-	lo, hi := exact.Pt{X: min(a.X, b.X), Y: min(a.Y, b.Y)}, exact.Pt{X: max(a.X, b.X), Y: max(a.Y, b.Y)}
-	ring := plan.ChainOf(lo, exact.Pt{X: hi.X, Y: lo.Y}, hi, exact.Pt{X: lo.X, Y: hi.Y})
-	if t.Kind == plan.KindZone {
-		return plan.AddZone{Zone: plan.Zone{Ring: ring, Room: true}}
+	v := t.at.Sub(*t.from)
+	w, fault := t.typing.length(h, 0, float64(abs(v.X)))
+	l, fault2 := t.typing.length(h, 1, float64(abs(v.Y)))
+	if fault == "" {
+		fault = fault2
 	}
-	return plan.AddBlock{Block: plan.Block{Ring: ring, Height: h.Defaults().Height}}
+	lim := float64(plan.MaxCoord)
+	place := func(a int32, d float64, side int32) int32 {
+		if side < 0 {
+			d = -d
+		}
+		return int32(min(max(float64(a)+d, -lim), lim))
+	}
+	return exact.Pt{X: place(t.from.X, w, v.X), Y: place(t.from.Y, l, v.Y)}, fault
 }
 
-// Up does the rectangle; where the pointer did not move, a column.
-func (t *Rect) Up(h Host, e Pointer) {
+// show previews the rectangle.
+func (t *Rect) show(h Host) {
+	t.fault, t.edit = "", nil
 	if t.from == nil {
 		return
 	}
-	t.aim(h, e)
-	edit := t.draw(h)
-	if edit == nil && t.Kind == plan.KindBlock && *t.from == t.at {
-		edit = column(t.at, h.Defaults())
+	to, fault := t.target(h)
+	if t.edit = t.draw(h, to); t.edit == nil {
+		h.Cancel()
+	} else if err := h.Preview(t.edit); err != nil {
+		t.fault = reason(err)
 	}
-	t.from, t.edit = nil, nil
+	if fault != "" {
+		t.fault = fault
+	}
+}
+
+// draw returns the edit that adds the rectangle, nil when it encloses nothing.
+func (t *Rect) draw(h Host, to exact.Pt) plan.Edit {
+	a := *t.from
+	if a.X == to.X || a.Y == to.Y {
+		return nil
+	}
+	lo, hi := exact.Pt{X: min(a.X, to.X), Y: min(a.Y, to.Y)}, exact.Pt{X: max(a.X, to.X), Y: max(a.Y, to.Y)}
+	ring := []exact.Pt{lo, {X: hi.X, Y: lo.Y}, hi, {X: lo.X, Y: hi.Y}}
+	if t.Kind == plan.KindWall {
+		return Named("draw room", plan.AddWall{Wall: newWall(plan.Solid, plan.ChainOf(append(ring, lo)...), h.Defaults())})
+	}
+	return ringEdit(t.Kind, plan.ChainOf(ring...), h.Defaults())
+}
+
+// Up does the rectangle when it was dragged out; after a click it waits for the second one.
+func (t *Rect) Up(h Host, e Pointer) {
+	if t.from == nil || !t.press.down {
+		return
+	}
+	dragged := t.press.move(h, e)
+	t.press = press{}
+	if dragged && !t.typing.on {
+		t.aim(h, e)
+		t.finish(h)
+	}
+}
+
+// finish does the rectangle as one step.
+func (t *Rect) finish(h Host) {
+	to, fault := t.target(h)
+	if fault != "" {
+		t.fault = fault
+		return
+	}
+	edit := t.draw(h, to)
+	t.clear()
 	if edit == nil {
 		h.Cancel()
 		return
@@ -85,12 +152,33 @@ func (t *Rect) Up(h Host, e Pointer) {
 	t.fault = doAdd(h, edit)
 }
 
-// Key lets go of the first corner.
+func (t *Rect) clear() {
+	t.from, t.edit, t.press, t.fault = nil, nil, press{}, ""
+	t.typing.clear()
+}
+
+// Key takes a typed width and height, changes the body of a room's walls, and lets go of the first corner.
 func (t *Rect) Key(h Host, k Key) bool {
-	if k.Name != KeyEscape || t.from == nil {
+	if k.Name == KeyRune && t.Kind == plan.KindWall && changeBody(h, k.Rune) {
+		t.show(h)
+		return true
+	}
+	if t.from == nil {
 		return false
 	}
-	t.Stop(h)
+	if t.typing.key(k) {
+		t.show(h)
+		return true
+	}
+	switch k.Name {
+	case KeyEscape, KeyBackspace, KeyUndo:
+		h.Cancel()
+		t.clear()
+	case KeyEnter:
+		t.finish(h)
+	default:
+		return false
+	}
 	return true
 }
 
@@ -99,7 +187,8 @@ func (t *Rect) Stop(h Host) {
 	if t.edit != nil {
 		h.Cancel()
 	}
-	*t = Rect{Kind: t.Kind}
+	t.clear()
+	t.snap = nil
 }
 
 // Leave hides the snap mark.
@@ -113,29 +202,37 @@ func (t *Rect) Sketch(h Host) Sketch {
 	}
 	if ref, ok := added(h, t.edit); ok {
 		s.Dragged = []plan.Ref{ref}
+	} else if t.Kind == plan.KindFloor {
+		s.Dragged = []plan.Ref{{Kind: plan.KindFloor}}
 	}
-	v := t.at.Sub(*t.from)
-	s.Label = fmt.Sprintf("%s × %s", h.FormatLength(float64(abs(v.X))), h.FormatLength(float64(abs(v.Y))))
-	s.LabelAt = t.at
+	to, _ := t.target(h)
+	v := to.Sub(*t.from)
+	w, l := h.FormatLength(float64(abs(v.X))), h.FormatLength(float64(abs(v.Y)))
+	s.Label, s.LabelAt = w+" × "+l, to
+	if t.Kind != plan.KindBlock {
+		s.Label += " · " + h.FormatArea(math.Abs(float64(v.X)*float64(v.Y)))
+	}
+	s.Handles, s.Types = []exact.Pt{*t.from}, true
+	if s.Fields = t.typing.fields([2]string{"width", "height"}, [2]string{w, l}); s.Fields != nil {
+		s.Snap = nil
+	}
 	return s
 }
 
 // Hint says what the next click does.
-func (t *Rect) Hint(Host) string {
-	switch {
-	case t.from != nil:
-		return "release at the opposite corner; Shift makes a square"
-	case t.Kind == plan.KindZone:
-		return "drag from corner to corner of the zone"
+func (t *Rect) Hint(h Host) string {
+	body := ""
+	if t.Kind == plan.KindWall {
+		body = bodyHint(h.Defaults(), "inside", "outside")
 	}
-	return "click for a round column, drag for a block"
-}
-
-// columnCorners is how many corners stand for a column's circle.
-const columnCorners = 24
-
-// column returns the edit that adds a round column.
-func column(at exact.Pt, d Defaults) plan.Edit {
-	return plan.AddBlock{Block: plan.Block{Ring: plan.CircleRing(at, d.ColumnRadius, columnCorners), Height: d.Height,
-		Circle: &plan.Circle{At: at, Radius: d.ColumnRadius}}}
+	what := map[plan.Kind]string{plan.KindBlock: "block", plan.KindZone: "zone", plan.KindFloor: "floor", plan.KindWall: "room"}[t.Kind]
+	switch {
+	case t.typing.on:
+		return "Tab goes between width and height, Enter draws the " + what + ", Esc gives it back to the pointer"
+	case t.from == nil:
+		return "click or drag from one corner of the " + what + body
+	case t.press.moved:
+		return "release at the opposite corner; Shift makes a square" + body
+	}
+	return "click the opposite corner, or type its width, Tab, its height; Shift makes a square" + body
 }

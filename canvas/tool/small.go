@@ -55,6 +55,12 @@ func gridStep(h Host, e Pointer) int32 {
 	return pick.GridStep(h.Camera())
 }
 
+// unitsOf returns how many grid units so many px at 100 % are.
+func unitsOf(h Host, px float64) float64 {
+	c := h.Camera()
+	return px * c.K / c.Scale * exact.PerMM
+}
+
 // parseAngle reads a typed angle in degrees; a comma is a decimal point.
 func parseAngle(text string) (float64, error) {
 	return strconv.ParseFloat(strings.Replace(strings.TrimSuffix(text, "°"), ",", ".", 1), 64)

@@ -33,23 +33,30 @@ type Host interface {
 	ParseLength(text string) (int32, error)
 	// FormatLength writes a length of grid units in the plan's display unit, with the unit's name.
 	FormatLength(units float64) string
+	// FormatArea writes an area of square grid units, with its unit.
+	FormatArea(units2 float64) string
 }
 
 // Defaults are the measures of new items, in grid units.
 type Defaults struct {
 	Thickness    int32 // of walls
+	Thin         bool  // walls are lines without a body; their thickness is kept for when they are not
+	Justify      plan.Justify
 	Height       int32 // of walls and blocks
 	LowThickness int32 // of low walls
 	LowHeight    int32
 	DoorWidth    int32
 	ColumnRadius int32
 	Eye          int32 // of observers
+	Leaf         plan.Leaf
+	Shut         bool // doors are drawn shut
+	HingeEnd     bool // at the far jamb, seen along the wall
 }
 
 // StandardDefaults are the measures a new window begins with.
 func StandardDefaults() Defaults {
 	return Defaults{Thickness: 2000, Height: plan.Ceiling, LowThickness: 3000, LowHeight: 9500, DoorWidth: 9000,
-		ColumnRadius: 2000, Eye: 16000}
+		ColumnRadius: 2000, Eye: 16000, Leaf: plan.SolidLeaf}
 }
 
 // Pointer is the pointer's state at an event.
@@ -76,6 +83,7 @@ const (
 	KeyUp        KeyName = "up"
 	KeyDown      KeyName = "down"
 	KeyRune      KeyName = "rune"
+	KeyUndo      KeyName = "undo" // takes back the last point of what is being drawn
 )
 
 // Key is one key press.
@@ -104,6 +112,9 @@ type Tool interface {
 	Hint(h Host) string
 }
 
+// Finisher is a tool that ends what it is in the midst of, as far as it has come, when another tool is taken in hand.
+type Finisher interface{ Finish(h Host) }
+
 // Sketch is what a tool draws over the picture: it says what, the window says how.
 type Sketch struct {
 	Band    []exact.Pt   // rubber band: a line through these points
@@ -111,12 +122,14 @@ type Sketch struct {
 	Snap    *pick.Snap   // where the pointer snapped
 	Label   string       // the measure beside the pointer
 	LabelAt exact.Pt
-	Typed   bool       // Label is being typed
-	Hover   plan.Ref   // the item under the pointer; its Kind is KindPlan when there is none
-	Handles []exact.Pt // square handles: the corners of selected items
-	Dragged []plan.Ref // items whose place follows the pointer
-	Show    plan.Ref   // the previewed observer whose region is to be shown; Kind is KindPlan when there is none
-	Fault   string     // why the preview cannot be done, in words
+	Types   bool         // digits typed now, and Tab, are for the fields
+	Fields  []Field      // at the pointer in place of Label, while a measure is typed
+	Knobs   [][2]float64 // round handles: the device pixels of what turns, opens or stretches a selected mark
+	Hover   plan.Ref     // the item under the pointer; its Kind is KindPlan when there is none
+	Handles []exact.Pt   // square handles: the corners of selected items
+	Dragged []plan.Ref   // items whose place follows the pointer
+	Show    plan.Ref     // the previewed observer whose region is to be shown; Kind is KindPlan when there is none
+	Fault   string       // why the preview cannot be done, in words
 	Grip    Grip
 }
 

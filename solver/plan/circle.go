@@ -23,3 +23,14 @@ func CircleRing(at exact.Pt, radius int32, n int) Chain {
 	}
 	return Chain{pts}
 }
+
+// RoundRing returns a ring of as few corners as keep it within 1 mm of a circle. Between two corners the ring lies inside the
+// circle by radius times 1 - cos(half the angle between them); the corners themselves are off by the rounding to the grid.
+func RoundRing(at exact.Pt, radius int32) Chain {
+	const least, within = 12, 1*exact.PerMM - 0.75
+	n := least
+	for float64(radius)*(1-math.Cos(math.Pi/float64(n))) > within {
+		n += 4
+	}
+	return CircleRing(at, radius, n)
+}
