@@ -33,6 +33,9 @@ func (tr *Triangulation) constrain(a, b, k int32) error {
 	if err != nil {
 		return err
 	}
+	if crossed && tr.tris[e.Tri()].v[e.Prev().Corner()] == b {
+		a, b = b, a // the way leads from the other end
+	}
 	if crossed {
 		if err := tr.flipThrough(a, b, e); err != nil {
 			return err
@@ -59,34 +62,12 @@ func (tr *Triangulation) mark(e Edge, k int32) {
 	}
 }
 
-// towards looks around a for b: the half-edge from a to b, or else the half-edge opposite a that the segment crosses first.
-func (tr *Triangulation) towards(a, b int32) (e Edge, crossed bool, err error) {
-	pa, pb := tr.Pts[a], tr.Pts[b]
-	start := tr.out[a]
-	e = start
-	for {
-		r := &tr.tris[e.Tri()]
-		i := e.Corner()
-		v, w := r.v[inc[i]], r.v[inc[inc[i]]]
-		if v == b {
-			return e, false, nil
-		}
-		sv := exact.Area2(pa, pb, tr.Pts[v])
-		if sv == 0 && tr.Pts[v].Sub(pa).Dot(pb.Sub(pa)) > 0 {
-			return None, false, fmt.Errorf("%w: %v lies on the edge from %v to %v", ErrCrossing, tr.Pts[v], pa, pb)
-		}
-		if sv < 0 && exact.Area2(pa, pb, tr.Pts[w]) > 0 {
-			return e.Next(), true, nil
-		}
-		e = r.n[inc[inc[i]]] // the twin of the edge that ends at a leaves a: counter-clockwise onwards
-		if e == start || e == None {
-			return None, false, fmt.Errorf("mesh: no triangle at %v towards %v", pa, pb)
-		}
-	}
-}
-
 // flipThrough flips every edge that crosses the segment from a to b, the first of which is e, until the segment is an edge.
 // Edges are remembered by their ends, since flips move half-edges about. The new edges are left in tr.work.
+//
+// The crossing edges are gone through forth and back: of many that meet in one point, often only the first or the last can be
+// flipped, and then the next one. As long as edges cross, some can be flipped so that fewer meet in one point; a throw of a coin
+// keeps the rest from being flipped to and fro for ever.
 func (tr *Triangulation) flipThrough(a, b int32, e Edge) error {
 	pa, pb := tr.Pts[a], tr.Pts[b]
 	var queue [][2]int32
@@ -112,24 +93,35 @@ func (tr *Triangulation) flipThrough(a, b int32, e Edge) error {
 		}
 	}
 	tr.work = tr.work[:0]
-	for len(queue) > 0 {
-		q := queue[0]
-		queue = queue[1:]
-		d := tr.lookup(q[0], q[1])
-		if !tr.convex(d) {
-			queue = append(queue, q)
-			continue
+	var later [][2]int32
+	for pass, coin := 0, uint32(1); len(queue) > 0; pass++ {
+		for len(queue) > 0 {
+			q := queue[len(queue)-1]
+			queue = queue[:len(queue)-1]
+			coin = coin*1664525 + 1013904223
+			if d := tr.lookup(q[0], q[1]); !tr.convex(d) || pass > 4 && coin>>16&1 == 0 {
+				later = append(later, q)
+			} else if c, x := tr.flipAcross(d); tr.apart(a, b, c, x) {
+				later = append(later, [2]int32{c, x})
+			} else {
+				tr.work = append(tr.work, [2]int32{c, x})
+			}
 		}
-		t, u := tr.flipTracked(d)
-		c, x := tr.tris[t].v[0], tr.tris[u].v[0] // the new diagonal
-		if (c != a && c != b && x != a && x != b) &&
-			exact.Orient(pa, pb, tr.Pts[c])*exact.Orient(pa, pb, tr.Pts[x]) < 0 {
-			queue = append(queue, [2]int32{c, x})
-		} else {
-			tr.work = append(tr.work, [2]int32{c, x})
-		}
+		queue, later = later, queue
 	}
 	return nil
+}
+
+// flipAcross flips d and returns the ends of the new diagonal.
+func (tr *Triangulation) flipAcross(d Edge) (c, x int32) {
+	t, u := tr.flipTracked(d)
+	return tr.tris[t].v[0], tr.tris[u].v[0]
+}
+
+// apart reports whether c and x, which are joined by an edge, lie on different sides of the segment from a to b.
+func (tr *Triangulation) apart(a, b, c, x int32) bool {
+	pa, pb := tr.Pts[a], tr.Pts[b]
+	return c != a && c != b && x != a && x != b && exact.Orient(pa, pb, tr.Pts[c])*exact.Orient(pa, pb, tr.Pts[x]) < 0
 }
 
 // convex reports whether the two triangles at e form a strictly convex quadrilateral.
@@ -172,38 +164,3 @@ func (tr *Triangulation) review(t, u int32) {
 	c, a, d, b := tr.tris[t].v[0], tr.tris[t].v[1], tr.tris[t].v[2], tr.tris[u].v[1]
 	tr.work = append(tr.work, [2]int32{c, a}, [2]int32{a, d}, [2]int32{d, b}, [2]int32{b, c})
 }
-
-// lookup returns the half-edge from a to b, or None when there is none (any more) or it is a side of the box. Corners of the
-// box may have edges to nearly every point, so an edge at one is looked for from its other end.
-func (tr *Triangulation) lookup(a, b int32) Edge {
-	if tr.corner(a) && !tr.corner(b) {
-		if e := tr.lookup(b, a); e != None {
-			return tr.tris[e.Tri()].n[e.Corner()]
-		}
-		return None
-	}
-	start := tr.out[a]
-	for e := start; e != None; {
-		r := &tr.tris[e.Tri()]
-		if r.v[inc[e.Corner()]] == b {
-			return e
-		}
-		if e = r.n[e.Prev().Corner()]; e == start {
-			return None
-		}
-	}
-	// The star of a corner of the box is open: look clockwise, too.
-	for e := start; e != None; {
-		r := &tr.tris[e.Tri()]
-		if r.v[inc[e.Corner()]] == b {
-			return e
-		}
-		if e = r.n[e.Corner()]; e != None {
-			e = e.Next()
-		}
-	}
-	return None
-}
-
-// corner reports whether v is a corner of the box.
-func (tr *Triangulation) corner(v int32) bool { return v >= tr.box && v < tr.box+4 }

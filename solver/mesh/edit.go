@@ -53,20 +53,31 @@ func (d *Editor) Held(a, b int32) bool {
 // deletion in Delaunay triangulations", SoCG 1999, without his priorities: what is not Delaunay is mended afterwards).
 func (d *Editor) Remove(v int32) error {
 	tr := d.tr
-	for {
-		star, err := d.star(v)
-		if err != nil {
-			return err
-		}
-		k := slices.IndexFunc(star, func(e Edge) bool { return len(star) > 3 && tr.convex(e) })
-		if k >= 0 {
-			tr.review(tr.flipTracked(star[k]))
+	star, err := d.star(v)
+	if err != nil {
+		return err
+	}
+	// Whether an edge can be flipped depends on its two neighbours, so after a flip only these are tried again: O(degree).
+	e, left, kept := star[0], len(star), 0 // kept edges in a row, up to e, cannot be flipped
+	for left > 3 && kept < left {
+		tr.steps++
+		if !tr.convex(e) {
+			kept++
+			e = tr.tris[e.Tri()].n[e.Prev().Corner()]
 			continue
 		}
-		d.join(v, star)
-		tr.restore()
-		return nil
+		t, u := tr.flipTracked(e)
+		tr.review(t, u)
+		left--
+		kept = max(0, min(kept-1, left-2))
+		e = EdgeOf(t, 1) // the neighbour clockwise
 	}
+	if star, err = d.star(v); err != nil {
+		return err
+	}
+	d.join(v, star)
+	tr.restore()
+	return nil
 }
 
 // star returns the half-edges that leave v, counter-clockwise.
@@ -78,6 +89,7 @@ func (d *Editor) star(v int32) ([]Edge, error) {
 			return nil, fmt.Errorf("mesh: point %v still has an edge", d.tr.Pts[v])
 		}
 		star = append(star, e)
+		d.tr.steps++
 		if e = r.n[e.Prev().Corner()]; e == None {
 			return nil, fmt.Errorf("mesh: point %v is a corner of the box", d.tr.Pts[v])
 		} else if e == star[0] {

@@ -56,6 +56,7 @@ type Triangulation struct {
 	free  []int32    // triangles taken out, to be used again
 	log   []int32    // triangles changed since the last call of Edit
 	logs  bool       // keep the log
+	steps int        // half-edges looked at to find edges by their ends
 }
 
 // rawTri is a triangle: its corners, the twins of its three half-edges, and the constraint on each, or -1.
