@@ -28,25 +28,32 @@ const (
 	maxRecent  = 8
 )
 
+// unsaved reports whether the window holds work that no file holds.
+func (w *window) unsaved() bool {
+	return w.session.Dirty() && (w.session.Path() != "" || !emptyPlan(w.session.Committed()))
+}
+
 // unlessUnsaved does go at once, or asks first what is to become of unsaved work.
 func (w *window) unlessUnsaved(goOn func()) {
 	if w.modal != nil {
 		return
 	}
 	w.tool.Stop(w.host)
-	if !w.session.Dirty() || emptyPlan(w.session.Plan()) && w.session.Path() == "" {
+	if !w.unsaved() {
 		goOn()
 		return
 	}
-	w.ask("Save the changes first?", lines("The plan has changes that no file holds yet."), 440,
+	w.ask("Save the changes first?", lines(fmt.Sprintf("%s has changes that no file holds yet.", w.name())), 440,
 		choice{"Save", func() { w.save(goOn) }},
 		choice{"Discard", goOn},
 		choice{"Cancel", nil})
 }
 
-// quit closes the window for good.
-func (w *window) quit() {
+// shut closes the window for good; other windows stay.
+func (w *window) shut() {
 	w.closing = true
+	w.desk.keeper.forget(w.number)
+	w.desk.windows = slices.DeleteFunc(w.desk.windows, func(x *window) bool { return x == w })
 	w.close()
 	w.win.Close()
 }
@@ -58,6 +65,7 @@ func (w *window) newPlan() { w.show(func() { w.session.Open(plan.New(), "") }) }
 func (w *window) show(load func()) {
 	w.notice.hide()
 	w.tool.Stop(w.host)
+	w.print = store.Print{}
 	w.results.reset(w.session.Rev() + 1)
 	load()
 	w.choose(0)
@@ -65,16 +73,54 @@ func (w *window) show(load func()) {
 	w.report()
 }
 
-// open reads a plan file and shows it; a fault leaves the plan that is open.
+// open reads a plan file beside the window and shows it; a fault leaves the plan that is open.
 func (w *window) open(path string) {
 	path = absolute(path)
-	p, err := readPlan(path)
-	if err != nil {
-		w.notice.show(sentence(failure(err)), "Open another…", func() { w.unlessUnsaved(w.askOpen) })
+	before := w.session.Committed()
+	w.errands.run(func() func() {
+		p, print, err := readPlan(path)
+		return func() {
+			switch {
+			case w.closing:
+			case err != nil:
+				w.openFailed(path, err)
+			case w.session.Committed() != before: // it was drawn on while the file was read
+				w.unlessUnsaved(func() { w.opened(p, path, print) })
+			default:
+				w.opened(p, path, print)
+			}
+		}
+	})
+}
+
+// opened shows a plan that was read from a file.
+func (w *window) opened(p *plan.Plan, path string, print store.Print) {
+	w.show(func() { w.session.Open(p, path) })
+	w.print = print
+	w.remember(path)
+}
+
+func (w *window) openFailed(path string, err error) {
+	if errors.Is(err, fs.ErrNotExist) {
+		w.setRecent(slices.DeleteFunc(w.recent(), func(p string) bool { return p == path }))
+	}
+	w.notice.show(sentence(failure(err)), "Open another…", func() { w.unlessUnsaved(w.askOpen) })
+}
+
+// openIn opens a plan file in a window of its own, unless nothing is lost by opening it here.
+func (w *window) openIn(path string) { w.desk.blank(w, path).open(path) }
+
+// dropped takes files that were dropped on the window: plans, the first in this window.
+func (w *window) dropped(paths []string) {
+	if len(paths) == 0 {
 		return
 	}
-	w.show(func() { w.session.Open(p, path) })
-	w.remember(path)
+	w.unlessUnsaved(func() {
+		w.open(paths[0])
+		for _, path := range paths[1:] {
+			w.desk.open().open(path)
+		}
+	})
 }
 
 // absolute returns a path that stays right when the working folder changes.
@@ -85,14 +131,8 @@ func absolute(path string) string {
 	return path
 }
 
-func readPlan(path string) (*plan.Plan, error) {
-	f, err := os.Open(path)
-	if err != nil {
-		return nil, err
-	}
-	defer f.Close() // it was only read
-	return planfile.Read(f, filepath.Base(path))
-}
+// errGone is the error of a file that is not there.
+func errGone(path string) error { return &fs.PathError{Op: "open", Path: path, Err: fs.ErrNotExist} }
 
 // openSample shows a sample plan. It has no file: it is saved as whatever one likes.
 func (w *window) openSample(name string) {
@@ -113,15 +153,36 @@ func (w *window) save(goOn func()) {
 	w.askSave(goOn)
 }
 
-// write saves the committed plan at path.
+// write saves the committed plan at path, beside the window, and then goes on. It asks first when another program changed the
+// plan's file.
 func (w *window) write(path string, goOn func()) {
 	path = absolute(path)
-	p := w.session.Committed()
-	if err := store.Save(path, func(out io.Writer) error { return planfile.Write(out, p) }); err != nil {
+	p, known := w.session.Committed(), w.print
+	own := path == w.session.Path() && known.There()
+	w.errands.run(func() func() {
+		if own {
+			if changed, now, err := known.Changed(path, true); err == nil && changed {
+				return func() { w.askChanged(path, now, goOn) }
+			}
+		}
+		var text bytes.Buffer
+		err := planfile.Write(&text, p)
+		if err == nil {
+			err = store.Save(path, func(out io.Writer) error { _, err := out.Write(text.Bytes()); return err })
+		}
+		print := store.Written(path, text.Bytes())
+		return func() { w.wrote(p, path, print, err, goOn) }
+	})
+}
+
+// wrote takes note of what became of a plan that was to be saved.
+func (w *window) wrote(p *plan.Plan, path string, print store.Print, err error, goOn func()) {
+	if err != nil {
 		w.notice.show(sentence("the plan was not saved: "+failure(err)), "Save elsewhere…", func() { w.askSave(goOn) })
 		return
 	}
 	w.session.Saved(p, path)
+	w.print = print
 	w.notice.hide()
 	w.remember(path)
 	w.acted()
@@ -133,6 +194,11 @@ func (w *window) write(path string, goOn func()) {
 // askOpen asks for a plan file and opens it.
 func (w *window) askOpen() {
 	w.askFile("Open a plan", "Open", "", planSuffix, w.open)
+}
+
+// askOpenIn asks for a plan file and opens it in another window.
+func (w *window) askOpenIn() {
+	w.askFile("Open a plan in a new window", "Open", "", planSuffix, w.openIn)
 }
 
 // askSave asks where to save the plan, saves it there, and goes on.
@@ -158,10 +224,17 @@ func (w *window) askPicture() {
 }
 
 func (w *window) writePicture(path string) {
-	img := raster.Picture(w.picture.scene())
-	if err := store.Save(path, func(out io.Writer) error { return png.Encode(out, img) }); err != nil {
-		w.notice.show(sentence("the picture was not written: "+failure(err)), "Write elsewhere…", w.askPicture)
-	}
+	scene := w.picture.scene()
+	w.errands.run(func() func() {
+		img := raster.Picture(scene)
+		err := store.Save(path, func(out io.Writer) error { return png.Encode(out, img) })
+		if err == nil {
+			return nil
+		}
+		return func() {
+			w.notice.show(sentence("the picture was not written: "+failure(err)), "Write elsewhere…", w.askPicture)
+		}
+	})
 }
 
 // unlessThere does go, after asking when there is another file at path already.
@@ -212,6 +285,10 @@ func (w *window) recent() []string { return w.app.Preferences().StringList(prefR
 // remember puts a plan at the head of the recent ones.
 func (w *window) remember(path string) {
 	list := append([]string{path}, slices.DeleteFunc(slices.Clone(w.recent()), func(p string) bool { return p == path })...)
+	w.setRecent(list)
+}
+
+func (w *window) setRecent(list []string) {
 	w.app.Preferences().SetStringList(prefRecent, list[:min(len(list), maxRecent)])
 }
 

@@ -163,10 +163,8 @@ func (w *window) toggleSide() {
 
 // setTheme changes the look and remembers it.
 func (w *window) setTheme(choice string) {
-	w.look = &look{choice: choice}
-	w.app.Settings().SetTheme(w.look)
 	w.app.Preferences().SetString(prefTheme, choice)
-	w.acted()
+	w.desk.setLook(&look{choice: choice})
 }
 
 // showKeys shows the page of keys.

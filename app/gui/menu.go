@@ -45,7 +45,9 @@ func (w *window) menus() []menu {
 func (w *window) fileMenu() []command {
 	list := []command{
 		{label: "New", key: "Ctrl+N", shortcut: ctrl(fyne.KeyN, 0), do: func() { w.unlessUnsaved(w.newPlan) }},
-		{label: "Open…", key: "Ctrl+O", shortcut: ctrl(fyne.KeyO, 0), do: func() { w.unlessUnsaved(w.askOpen) }},
+		{label: "New window", key: "Ctrl+Shift+N", shortcut: ctrl(fyne.KeyN, fyne.KeyModifierShift), do: func() { w.desk.open() }},
+		{label: "Open…", key: "Ctrl+O", shortcut: ctrl(fyne.KeyO, 0), do: func() { w.unlessUnsaved(w.askOpen) }, rule: true},
+		{label: "Open in a new window…", key: "Ctrl+Shift+O", shortcut: ctrl(fyne.KeyO, fyne.KeyModifierShift), do: w.askOpenIn},
 	}
 	recent := w.recent()
 	if len(recent) > 0 {
@@ -59,7 +61,8 @@ func (w *window) fileMenu() []command {
 		command{label: "Save", key: "Ctrl+S", shortcut: ctrl(fyne.KeyS, 0), do: func() { w.save(nil) }, rule: true},
 		command{label: "Save as…", key: "Ctrl+Shift+S", shortcut: ctrl(fyne.KeyS, fyne.KeyModifierShift), do: func() { w.askSave(nil) }},
 		command{label: "Export picture…", key: "Ctrl+E", shortcut: ctrl(fyne.KeyE, 0), do: w.askPicture},
-		command{label: "Quit", key: "Ctrl+Q", shortcut: ctrl(fyne.KeyQ, 0), do: func() { w.unlessUnsaved(w.quit) }, rule: true})
+		command{label: "Close the window", key: "Ctrl+W", shortcut: ctrl(fyne.KeyW, 0), do: func() { w.unlessUnsaved(w.shut) }, rule: true},
+		command{label: "Quit", key: "Ctrl+Q", shortcut: ctrl(fyne.KeyQ, 0), do: w.desk.quit})
 }
 
 func (w *window) editMenu() []command {

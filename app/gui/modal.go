@@ -48,16 +48,24 @@ func (w *window) ask(title string, content fyne.CanvasObject, width float32, cho
 
 // choose closes the modal and does the choice.
 func (m *modal) choose(i int) {
-	if m.closed == nil {
+	if !m.leave() {
 		return
+	}
+	if do := m.buttons[i].do; do != nil {
+		do()
+	}
+}
+
+// leave closes the modal without a choice. It reports false when it was closed already.
+func (m *modal) leave() bool {
+	if m.closed == nil {
+		return false
 	}
 	closed := m.closed
 	m.closed = nil
 	m.pop.Hide()
 	closed()
-	if do := m.buttons[i].do; do != nil {
-		do()
-	}
+	return true
 }
 
 // key takes Enter and Escape.

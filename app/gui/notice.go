@@ -6,7 +6,7 @@ import (
 	"fyne.io/fyne/v2/layout"
 )
 
-// notice is the strip under the menu bar that says what went wrong, in one sentence, with two ways on. It never hides the
+// notice is the strip under the menu bar that says what went wrong, in one sentence, with ways on. It never hides the
 // drawing.
 type notice struct {
 	box  *fyne.Container
@@ -25,10 +25,24 @@ func newNotice() *notice {
 
 // show says the sentence; act is the first way on, and Close the second one.
 func (n *notice) show(sentence, action string, act func()) {
+	n.offer(sentence, choice{action, act}, choice{"Close", nil})
+}
+
+// offer says the sentence and gives ways on, the first of them in ink. Each puts the strip away.
+func (n *notice) offer(sentence string, ways ...choice) {
 	n.text.set(sentence)
-	n.way.Objects = []fyne.CanvasObject{
-		newPushButton(action, func() { n.hide(); act() }).first(),
-		newPushButton("Close", n.hide),
+	n.way.Objects = nil
+	for i, c := range ways {
+		b := newPushButton(c.text, func() {
+			n.hide()
+			if c.do != nil {
+				c.do()
+			}
+		})
+		if i == 0 {
+			b.first()
+		}
+		n.way.Objects = append(n.way.Objects, b)
 	}
 	n.way.Refresh()
 	n.box.Show()

@@ -51,7 +51,7 @@ type madeBase struct {
 const soon = 6 * time.Millisecond
 
 func newPicture(w *window) *picture {
-	return &picture{w: w, worker: newBaseWorker(func() { w.do(func() { w.view.Refresh() }) })}
+	return &picture{w: w, worker: newBaseWorker(w.desk.guarded, func() { w.do(func() { w.view.Refresh() }) })}
 }
 
 // close ends the worker.
@@ -177,9 +177,10 @@ type baseJob struct {
 	opened uint64
 }
 
-func newBaseWorker(wake func()) *baseWorker {
+// newBaseWorker starts a worker that works within guard, and calls wake when a base is made.
+func newBaseWorker(guard func(func()), wake func()) *baseWorker {
 	b := &baseWorker{slot: make(chan baseJob, 1), done: make(chan struct{}), wake: wake}
-	go b.run()
+	go guard(b.run)
 	return b
 }
 

@@ -30,11 +30,11 @@ type rig struct {
 func newRig(t *testing.T, solver func() live.Solver) *rig {
 	t.Helper()
 	r := &rig{t: t, queue: make(chan func(), 1000)}
-	r.window = newWindow(parts{app: test.NewTempApp(t), solver: solver, do: func(f func()) { r.queue <- f }, now: time.Now},
+	d := newDesk(parts{app: test.NewTempApp(t), solver: solver, do: func(f func()) { r.queue <- f }, now: time.Now, inline: true},
 		&look{choice: themeLight})
-	r.win.Resize(fyne.NewSize(1440, 900))
+	r.window = d.open()
 	r.frame()
-	t.Cleanup(func() { r.closing = true; r.close() })
+	t.Cleanup(d.close)
 	return r
 }
 

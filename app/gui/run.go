@@ -42,24 +42,30 @@ func Run(newApp func(id string) fyne.App, o Options) error {
 	if choice == "" {
 		choice = a.Preferences().StringWithFallback(prefTheme, themeSystem)
 	}
-	w := newWindow(parts{
+	d := newDesk(parts{
 		app:    a,
 		solver: func() live.Solver { return study.NewSolver() },
 		do:     fyne.Do,
 		now:    time.Now,
 	}, &look{choice: choice})
-	width, height := o.Width, o.Height
-	if width <= 0 || height <= 0 {
-		width, height = 1440, 900
+	if o.Width > 0 && o.Height > 0 {
+		d.size = fyne.NewSize(o.Width, o.Height)
 	}
-	w.win.SetMaster()
-	w.win.Resize(fyne.NewSize(width, height))
+	w := d.open()
 	if o.Path != "" {
 		w.open(o.Path)
 	}
-	w.view.grab()
-	w.win.ShowAndRun()
-	w.close()
+	shelter := d.keepSafe(w)
+	defer d.keeper.flush() // also when the window's goroutine panics
+	d.offerLeft(w, shelter)
+	d.onSignal()
+	a.Lifecycle().SetOnEnteredForeground(d.cameBack)
+	a.Run()
+	d.close()
+	d.keeper.close()
+	if shelter != nil {
+		shelter.Close()
+	}
 	return nil
 }
 

@@ -13,16 +13,23 @@ import (
 	"enfilade/app/session"
 	"enfilade/canvas/pick"
 	"enfilade/canvas/tool"
+	"enfilade/fileio/store"
 	"enfilade/solver/plan"
 )
 
-// window is the one window of the program with everything in it.
+// window is a window of the program with everything in it.
 type window struct {
-	app  fyne.App
-	win  fyne.Window
-	look *look
-	do   func(func()) // runs a function on the toolkit's goroutine, and returns at once
-	now  func() time.Time
+	desk   *desk
+	number int // of the window, for as long as the program runs
+	app    fyne.App
+	win    fyne.Window
+	look   *look
+	do     func(func()) // runs a function on the toolkit's goroutine, and returns at once
+	now    func() time.Time
+
+	errands errands
+	print   store.Print // of the plan's file when it was last read or written
+	noted   noted       // what the keeper was told last
 
 	session *session.Session
 	runner  *live.Runner
@@ -59,19 +66,25 @@ type parts struct {
 	solver func() live.Solver
 	do     func(func())
 	now    func() time.Time
+	inline bool // files are read and written at once on the window's goroutine
 }
 
-// newWindow makes the window with an empty plan in it.
-func newWindow(p parts, look *look) *window {
-	w := &window{app: p.app, look: look, do: p.do, now: p.now, measures: tool.StandardDefaults()}
-	w.app.Settings().SetTheme(look)
+// newWindow makes another window of the desk, with an empty plan in it.
+func newWindow(d *desk) *window {
+	p := d.parts
+	w := &window{desk: d, number: d.opened, app: p.app, look: d.look, do: p.do, now: p.now, measures: tool.StandardDefaults(),
+		errands: errands{do: p.do, guard: d.guarded, inline: p.inline}}
+	d.opened++
+	d.windows = append(d.windows, w)
 	w.win = w.app.NewWindow("Enfilade")
 	w.win.SetPadded(false)
-	w.win.SetCloseIntercept(func() { w.unlessUnsaved(w.quit) })
+	w.win.SetCloseIntercept(func() { w.unlessUnsaved(w.shut) })
 	w.win.SetOnDropped(func(_ fyne.Position, uris []fyne.URI) {
-		if len(uris) > 0 {
-			w.unlessUnsaved(func() { w.open(uris[0].Path()) })
+		paths := make([]string, len(uris))
+		for i, u := range uris {
+			paths[i] = u.Path()
 		}
+		w.dropped(paths)
 	})
 	w.session = session.New(plan.New(), "", nil)
 	w.host = &host{w}
@@ -178,6 +191,7 @@ func (w *window) acted() {
 	w.table.update()
 	w.foot.update(w)
 	w.title()
+	w.keep()
 }
 
 // hint is what the next click does; of a thing with several shapes also how to come to the next.
@@ -225,15 +239,20 @@ func itemName(p *plan.Plan, r plan.Ref) string {
 	return ""
 }
 
+// name is what people call the plan: its file, else its title.
+func (w *window) name() string {
+	if path := w.session.Path(); path != "" {
+		return filepath.Base(path)
+	}
+	if title := w.session.Plan().Sheet().Title; title != "" {
+		return title
+	}
+	return "New plan"
+}
+
 // title names the plan and says whether it has unsaved changes.
 func (w *window) title() {
-	name := w.session.Plan().Sheet().Title
-	if path := w.session.Path(); path != "" {
-		name = filepath.Base(path)
-	}
-	if name == "" {
-		name = "New plan"
-	}
+	name := w.name()
 	if w.session.Dirty() {
 		name = "• " + name
 	}

@@ -44,8 +44,21 @@ func PrintOf(path string) (Print, []byte, error) {
 	if err != nil {
 		return Print{}, nil, err
 	}
+	return printOf(data, info.ModTime()), data, nil
+}
+
+// Written returns the print of the file at path that data was just written to, without reading it.
+func Written(path string, data []byte) Print {
+	var at time.Time
+	if info, err := os.Stat(path); err == nil {
+		at = info.ModTime()
+	}
+	return printOf(data, at)
+}
+
+func printOf(data []byte, at time.Time) Print {
 	sum := sha256.Sum256(data)
-	return Print{Size: int64(len(data)), Time: info.ModTime(), Sum: hex.EncodeToString(sum[:])}, data, nil
+	return Print{Size: int64(len(data)), Time: at, Sum: hex.EncodeToString(sum[:])}
 }
 
 // Changed reports whether the file at path holds something else than it did at the print, and its print of now. A file
