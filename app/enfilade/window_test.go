@@ -91,6 +91,7 @@ type screen struct {
 	t       *testing.T
 	program string // the built binary
 	env     []string
+	config  string // folder of the program's settings
 	cmd     *exec.Cmd
 	log     bytes.Buffer
 	cam     view.Camera // of the picture in the window
@@ -117,7 +118,7 @@ func newScreen(t *testing.T) *screen {
 		t.Skip("drives a real window")
 	}
 	dir := t.TempDir()
-	s := &screen{t: t, program: filepath.Join(dir, "enfilade")}
+	s := &screen{t: t, program: filepath.Join(dir, "enfilade"), config: filepath.Join(dir, "config")}
 	if out, err := exec.Command("go", "build", "-o", s.program, ".").CombinedOutput(); err != nil {
 		t.Fatalf("the program does not build: %v\n%s", err, out)
 	}
@@ -142,7 +143,7 @@ func newScreen(t *testing.T) *screen {
 		t.Fatalf("the display did not start: %v", err)
 	}
 	s.env = append(os.Environ(), "DISPLAY=:"+strings.TrimSpace(string(number[:n])), "WAYLAND_DISPLAY=", "ENFILADE_THEME=light",
-		"XDG_CONFIG_HOME="+dir, "LANG=C.UTF-8", "FYNE_SCALE=1")
+		"XDG_CONFIG_HOME="+s.config, "LANG=C.UTF-8", "FYNE_SCALE=1")
 	return s
 }
 
