@@ -84,7 +84,7 @@ func command(t *rapid.T, p *plan.Plan) plan.Edit {
 		plan.Rotate{Items: some, About: at, Degrees: float64(by.X) / 10, Copy: yes}, plan.Rotate{Items: some, About: at, Degrees: 90},
 		plan.Mirror{Items: some, Line: [2]exact.Pt{at, at.Add(by)}, Copy: yes}, plan.Duplicate{Items: some, Columns: 2, Rows: 2, Step: by},
 		plan.Paste{Clip: plan.Extract(p, some), By: by}, plan.ParallelWall{Wall: wall(), Distance: 1 + max(0, by.X), Right: yes},
-		plan.SplitWall{Wall: own.ID, Segment: piece, At: at}, plan.CloseWall{Wall: wall()}, plan.JoinWalls{Walls: []string{"W1", "W2"}},
+		plan.SplitWall{Wall: own.ID, Segment: piece, At: at}, plan.DuplicateOpening{Opening: "D1"}, plan.CloseWall{Wall: wall()}, plan.JoinWalls{Walls: []string{"W1", "W2"}},
 		plan.JoinWalls{Walls: []string{wall(), wall()}}, plan.CutBack{Wall: wall(), To: wall(), Start: yes}, plan.CutBack{Wall: "W1", To: "W3", Start: yes},
 		plan.Lengthen{Wall: wall(), To: wall(), Start: yes}, plan.Lengthen{Wall: "W6", To: "W7"},
 		plan.Mark{Items: some, Locked: &yes}, plan.SetItems{Text: "change", Walls: []plan.Wall{own}, Starts: []plan.Start{{ID: "S1", At: at}}},

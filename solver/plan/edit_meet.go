@@ -208,11 +208,6 @@ func crossings(a, b exact.Pt, other Chain) func(yield func(crossing) bool) {
 	}
 }
 
-// NearEnd reports which end of a wall's line lies nearer to q, along straight lines: the beginning when start is true.
-func NearEnd(line Chain, q exact.Pt) (start bool) {
-	return line.Len() > 0 && exact.Dist2(line.At(0), q) < exact.Dist2(line.At(line.Len()-1), q)
-}
-
 // Overhang returns how far a wall's line reaches beyond where it crosses another at one of its ends, in grid units; infinite
 // when they do not cross.
 func Overhang(line, other Chain, start bool) float64 {
@@ -229,4 +224,18 @@ func Overhang(line, other Chain, start bool) float64 {
 		sum += exact.Dist(pts[i], pts[i+1])
 	}
 	return sum
+}
+
+// Reach returns how much a wall's line would grow at one of its ends to meet another, in grid units; infinite when it would
+// not.
+func Reach(line, other Chain, start bool) float64 {
+	pts := line.Points()
+	if start {
+		slices.Reverse(pts)
+	}
+	at, ok := firstMeeting(Chain{pts}, other)
+	if end := pts[len(pts)-1]; ok && at != end {
+		return exact.Dist(end, at)
+	}
+	return math.Inf(1)
 }

@@ -97,6 +97,9 @@ func TestShapeEdits(t *testing.T) {
 				w.ID, w.Line = "W8", chain(500, 200, 500, 500, 0, 0)
 				p.Walls = append(p.Walls, w)
 			}},
+		{"another door beside a door", plan.DuplicateOpening{Opening: "D1"}, "duplicate opening", obstacles, func(p *plan.Parts) {
+			p.Openings = append(p.Openings, plan.Opening{ID: "D4", Wall: "W1", At: 1900, Width: 900})
+		}},
 		{"close a wall", plan.CloseWall{Wall: "W1"}, "close wall", obstacles, func(p *plan.Parts) { p.Walls[0].Line = chain(0, 0, 5000, 0, 5000, 3000, 0, 0) }},
 		{"lock", plan.Mark{Items: []plan.Ref{w1, ref(plan.KindObserver, "O2"), ref(plan.KindUnderlay, "")}, Locked: &yes}, "lock items", obstacles | marks | sheet,
 			func(p *plan.Parts) {
