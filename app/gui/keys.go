@@ -31,6 +31,10 @@ func (w *window) typedKey(name fyne.KeyName) {
 	if name == fyne.KeyEscape && resting && w.stopStudy() {
 		return
 	}
+	if (name == fyne.KeyDelete || name == fyne.KeyBackspace) && w.toolAt == 0 && resting {
+		w.deleteSelection()
+		return
+	}
 	mods := w.modifiers()
 	k, known := toolKeys[name]
 	if known && w.tool.Key(w.host, tool.Key{Name: k, Shift: mods&fyne.KeyModifierShift != 0, Ctrl: mods&fyne.KeyModifierControl != 0}) {
@@ -115,17 +119,6 @@ func (w *window) redo() {
 	w.acted()
 }
 
-// selectAll selects everything, or the text of the field that has the focus.
-func (w *window) selectAll() {
-	if f, ok := w.win.Canvas().Focused().(undoable); ok {
-		f.TypedShortcut(&fyne.ShortcutSelectAll{})
-		return
-	}
-	w.choose(0)
-	w.session.Select(slices.Collect(session.All(w.session.Plan()))...)
-	w.acted()
-}
-
 // The kinds of which one is chosen.
 const (
 	kindObserver = plan.KindObserver
@@ -173,6 +166,9 @@ func (w *window) showKeys() {
 		{"Esc", "the select tool; in the middle of something, leave it; a long study stops"}, {"letters on the rail", "choose a tool"},
 		{"Enter, double click", "end a run of walls"}, {"digits", "type a length while drawing; Tab for the angle"},
 		{"Shift", "eight directions, squares, turns of 15°; a plain gap"}, {"Ctrl while dragging", "no snapping"},
+		{"Ctrl+X, Ctrl+C, Ctrl+V", "cut, copy, paste; also into another window"}, {"Ctrl+D", "duplicate; with Shift in rows"},
+		{"Ctrl+R, Ctrl+M", "rotate, mirror: type the measures or click in the plan"}, {"Ctrl+A, Ctrl+Shift+A", "select all, or all of the same kind"},
+		{"Ctrl+L, Ctrl+H", "lock, hide; with Shift unlock and show everything"},
 		{"arrows", "nudge by 0.1 m, with Shift 1 m, with Ctrl 1 cm"}, {"Delete", "take the selection away"},
 		{"wheel, + and −", "zoom at the pointer"}, {"middle button, Space and drag", "pan"}, {"0, Home", "fit the plan"},
 		{"Ctrl+Z, Ctrl+Shift+Z", "undo, redo"}, {"Ctrl+S, Ctrl+O, Ctrl+N", "save, open, new"},

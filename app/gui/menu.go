@@ -65,17 +65,6 @@ func (w *window) fileMenu() []command {
 		command{label: "Quit", key: "Ctrl+Q", shortcut: ctrl(fyne.KeyQ, 0), do: w.desk.quit})
 }
 
-func (w *window) editMenu() []command {
-	undo, canUndo := w.session.UndoLabel()
-	redo, canRedo := w.session.RedoLabel()
-	return []command{
-		{label: named("Undo", undo), key: "Ctrl+Z", shortcut: &fyne.ShortcutUndo{}, do: w.undo, dead: !canUndo && !w.session.Previewing()},
-		{label: named("Redo", redo), key: "Ctrl+Shift+Z", shortcut: ctrl(fyne.KeyZ, fyne.KeyModifierShift), do: w.redo, dead: !canRedo},
-		{label: "Delete", key: "Del", do: func() { w.typedKey(fyne.KeyDelete) }, dead: len(w.session.Selection()) == 0, rule: true},
-		{label: "Select all", key: "Ctrl+A", shortcut: &fyne.ShortcutSelectAll{}, do: w.selectAll},
-	}
-}
-
 func named(what, label string) string {
 	if label == "" {
 		return what

@@ -45,6 +45,7 @@ type window struct {
 	measures tool.Defaults
 	snapper  pick.Snapper
 	walking  walking
+	editing
 
 	rail    []*toolButton
 	tips    *tips
@@ -105,7 +106,9 @@ func (w *window) build() {
 	rail, buttons := newRail(w.tips, func(i int) { w.choose(w.asked(i)) })
 	w.rail = buttons
 	w.side = w.sideColumn()
-	picture := container.NewStack(w.view, w.first.box)
+	w.panelLayer = container.NewStack()
+	w.panelLayer.Hide()
+	picture := container.NewStack(w.view, w.first.box, w.panelLayer)
 	foot := around(hairline(), nil, nil, nil, w.foot.box)
 	middle := container.New(frame{}, rail, hairline(), picture, foot, w.side)
 	w.bar = newMenuBar(w.menus())
@@ -172,6 +175,10 @@ func (w *window) changed(rev uint64, p *plan.Plan) {
 
 // acted brings the window up to date after anything that may have changed what it shows.
 func (w *window) acted() {
+	if d, ok := w.tool.(interface{ Done() bool }); ok && d.Done() {
+		w.choose(0)
+		return
+	}
 	p := w.session.Plan()
 	hovered := w.sketch.Hover
 	w.sketch = w.tool.Sketch(w.host)
@@ -196,6 +203,9 @@ func (w *window) acted() {
 
 // hint is what the next click does; of a thing with several shapes also how to come to the next.
 func (w *window) hint() string {
+	if s := w.justSaid(); s != "" {
+		return s
+	}
 	s := w.tool.Hint(w.host)
 	if nextShape(w.toolAt) != w.toolAt && !w.begun() {
 		s += " · " + tools[w.toolAt].letter + " again: " + strings.ToLower(tools[nextShape(w.toolAt)].name)

@@ -11,13 +11,13 @@ import (
 // Beside draws a wall parallel to the selected one, or to the one that is clicked first, at the pointer's distance or at one
 // that is typed.
 type Beside struct {
-	wall  string
-	edit  plan.ParallelWall
-	on    bool // there is an edit
-	at    exact.Pt
-	typed string
-	hover plan.Ref
-	fault string
+	wall   string
+	edit   plan.ParallelWall
+	on     bool // there is an edit
+	at     exact.Pt
+	typing typing
+	hover  plan.Ref
+	fault  string
 }
 
 // Down chooses the wall, then draws the parallel one.
@@ -40,7 +40,7 @@ func (t *Beside) put(h Host) {
 	}
 	next := t.edit.Added(h.Plan()).ID
 	if t.fault = doAdd(h, t.edit); t.fault == "" {
-		*t = Beside{wall: next}
+		*t = Beside{wall: next, typing: typing{one: true}}
 	}
 }
 
@@ -73,14 +73,12 @@ func (t *Beside) Move(h Host, e Pointer) {
 // show previews the wall, at the typed distance when there is one.
 func (t *Beside) show(h Host) {
 	t.fault = ""
-	if t.typed != "" {
-		v, err := h.ParseLength(t.typed)
-		if err != nil {
-			t.fault = reason(err)
-			return
-		}
-		t.edit.Distance = v
+	v, fault := t.typing.length(h, 0, float64(t.edit.Distance))
+	if fault != "" {
+		t.fault = fault
+		return
 	}
+	t.edit.Distance = int32(v)
 	if t.on = t.edit.Distance > 0; !t.on {
 		h.Cancel()
 		return
@@ -116,33 +114,18 @@ func (t *Beside) Up(Host, Pointer) {}
 
 // Key types the distance.
 func (t *Beside) Key(h Host, k Key) bool {
-	switch {
-	case t.wall == "":
-		return false
-	case k.Name == KeyRune && (k.Rune >= '0' && k.Rune <= '9' || t.typed != "" && typedMeasure(k.Rune) || k.Rune == '.' || k.Rune == ','):
-		t.typed += string(k.Rune)
-	case k.Name == KeyBackspace && t.typed != "":
-		r := []rune(t.typed)
-		t.typed = string(r[:len(r)-1])
-	case k.Name == KeyEscape && t.typed != "":
-		t.typed = ""
-	case k.Name == KeyEnter:
-		t.put(h)
-		return true
-	default:
+	if t.typing.one = true; t.wall == "" {
 		return false
 	}
-	t.show(h)
+	if t.typing.key(k) {
+		t.show(h)
+		return true
+	}
+	if k.Name != KeyEnter {
+		return false
+	}
+	t.put(h)
 	return true
-}
-
-// typedMeasure reports whether a character goes on a typed length.
-func typedMeasure(r rune) bool {
-	switch r {
-	case ' ', '.', ',', '/', '\'', '"', 'm', 'c', 'f', 't', 'i', 'n':
-		return true
-	}
-	return false
 }
 
 // Stop ends the preview.
@@ -153,7 +136,7 @@ func (t *Beside) Stop(h Host) {
 
 // Leave ends the preview, but for one whose distance is typed.
 func (t *Beside) Leave(h Host) {
-	if t.typed == "" {
+	if !t.typing.some() {
 		h.Cancel()
 		t.on = false
 	}
@@ -168,10 +151,8 @@ func (t *Beside) Sketch(h Host) Sketch {
 	}
 	if t.on {
 		s.Dragged = []plan.Ref{t.edit.Added(h.Plan())}
-		s.Label = h.FormatLength(float64(t.edit.Distance))
-	}
-	if t.typed != "" {
-		s.Label, s.Typed = t.typed, true
+		s.Label, s.Types = h.FormatLength(float64(t.edit.Distance)), true
+		s.Fields = t.typing.fields([2]string{"distance"}, [2]string{s.Label})
 	}
 	return s
 }

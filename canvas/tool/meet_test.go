@@ -118,7 +118,7 @@ func TestBesideTool(t *testing.T) {
 		b.Key(h, tool.Key{Name: tool.KeyRune, Rune: r})
 	}
 	h.wantLine("W4", -4, -0.8, 4, -0.8)
-	if s := b.Sketch(h); s.Label != "0.8" || !s.Typed {
+	if s := b.Sketch(h); len(s.Fields) != 1 || s.Fields[0] != (tool.Field{Label: "distance", Text: "0.8", Live: "0.80 m", Here: true}) {
 		t.Errorf("sketch %+v", s)
 	}
 	b.Key(h, tool.Key{Name: tool.KeyEnter})
