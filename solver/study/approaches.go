@@ -101,7 +101,7 @@ func (sc *scene) find(ctx context.Context, t plan.Target, w plan.Walker) (sought
 	}
 	k.stood = sc.wide.free(k.at, sc.wide.shut)
 	if !sc.plain.free(k.at, sc.plain.shut) {
-		k.closed = "the target stands in " + nameOf(sc.plain.holder(k.at, sc.plain.standing().by)) + ", where nobody walks"
+		k.closed = "the target stands in " + sc.nameOf(sc.plain.holder(k.at, sc.plain.standing().by)) + ", where nobody walks"
 	}
 	return k, nil
 }

@@ -136,5 +136,5 @@ func (b *barrierFinder) says(w way) string {
 	case w.first < 0:
 		return fmt.Sprintf("every way there is too narrow for a body of radius %.0f mm", mm(b.scene.radius))
 	}
-	return nameOf(b.scene.wide.outline.Items[w.first]) + " closes the way"
+	return b.scene.nameOf(b.scene.wide.outline.Items[w.first]) + " closes the way"
 }

@@ -165,7 +165,7 @@ func (sc *scene) tellFace(all []plan.Problem, t plan.Target, foot footing, heigh
 		return all
 	case p.cut:
 		problem.Items = append(problem.Items, p.item)
-		problem.Text = fmt.Sprintf("its face runs into %s; what is looked for is the part from %s to %s", nameOf(p.item),
+		problem.Text = fmt.Sprintf("its face runs into %s; what is looked for is the part from %s to %s", sc.nameOf(p.item),
 			millimetres(p.face.A), millimetres(p.face.B))
 	case foot.at == at: // else the move of its middle is told
 		problem.Text = fmt.Sprintf("its face is less than 1 mm inside another; taken to be from %s to %s, on its free side",

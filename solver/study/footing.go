@@ -40,7 +40,7 @@ func (sc *scene) stand(p exact.Pt, d demand) footing {
 		return f
 	}
 	f.item = sc.plain.holder(p, d.by)
-	f.text = fmt.Sprintf("is inside %s; move it out, or lower what it stands in", nameOf(f.item))
+	f.text = fmt.Sprintf("is inside %s; move it out, or lower what it stands in", sc.nameOf(f.item))
 	return f
 }
 

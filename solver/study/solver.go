@@ -23,8 +23,9 @@ type Solver struct {
 
 // scene is what one plan's obstacles make: the ground for eyes, the ground for walkers, and all that works on them.
 type scene struct {
-	plain    *ground // for eyes, and for walkers who are points
-	wide     *ground // for walkers with a body; the same as plain when there is none
+	plain    *ground    // for eyes, and for walkers who are points
+	wide     *ground    // for walkers with a body; the same as plain when there is none
+	plan     *plan.Plan // whose obstacles these are
 	problems []plan.Problem
 	floor    []exact.Pt
 	radius   int32
@@ -65,7 +66,7 @@ func (s *Solver) Mesh(ctx context.Context, p *plan.Plan) error {
 	if err != nil {
 		return err
 	}
-	sc.problems = problems
+	sc.plan, sc.problems = p, problems
 	s.obstacles, s.box, s.radius, s.scene = p.Obstacles(), box, radius, sc
 	return nil
 }
