@@ -22,7 +22,7 @@ func (w *window) describeWalker(walker plan.Walker) []field {
 		switch {
 		case v < 0:
 			return errors.New("not below 0, please")
-		case v > arrange.MaxRadius:
+		case v > plan.MaxBodyRadius:
 			return errors.New("2 m at most, please")
 		}
 		return put("change walker's radius", func(k *plan.Walker) { k.Radius = v })
@@ -82,6 +82,6 @@ func radiusWords(radius int32) string {
 	if radius <= 0 {
 		return "a point: walks touch corners"
 	}
-	_, excess := arrange.Disc(min(radius, arrange.MaxRadius))
+	_, excess := arrange.Disc(min(radius, plan.MaxBodyRadius))
 	return fmt.Sprintf("walks keep at most %.1f mm more", excess/exact.PerMM)
 }

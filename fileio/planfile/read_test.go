@@ -113,6 +113,7 @@ func TestReadFaults(t *testing.T) {
 		{"facing", item("starts", `{"id":"S1","at":[0,0],"facing":[1]}`), `start S1, facing: is a list, must be a number`},
 		{"route", item("routes", `{"id":"R1","from":"S1","via":[[0]],"to":"T1"}`), `route R1, via: holds a point of 1 numbers; a point is [x, y]`},
 		{"walker", `{"enfilade":1,"walker":{"pace":0}}`, `walker, pace: is 0, must be a pace above 0 and up to 100 metres per second`},
+		{"radius", `{"enfilade":1,"walker":{"radius":2000.1}}`, `walker, radius: is 2000.1, must be from 0 to 2000 mm`},
 		{"seen", `{"enfilade":1,"walker":{"seen":"some"}}`, `walker, seen: is "some", must be any or all`},
 		{"seen share", `{"enfilade":1,"walker":{"seen":1.5}}`, `walker, seen: is 1.5, must be any, all, or a share above 0 and up to 1`},
 		{"seen flag", `{"enfilade":1,"walker":{"seen":true}}`, `walker, seen: is true or false, must be a number`},

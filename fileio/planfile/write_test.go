@@ -180,7 +180,7 @@ func TestWriteLaws(t *testing.T) {
 func genParts(t *rapid.T) plan.Parts {
 	g := gen{t}
 	p := plan.Parts{Walker: plan.Walker{
-		Radius: rapid.Int32Range(0, 100_000).Draw(t, "radius"), Pace: rapid.Float64Range(0.1, 100).Draw(t, "pace"),
+		Radius: rapid.Int32Range(0, plan.MaxBodyRadius).Draw(t, "radius"), Pace: rapid.Float64Range(0.1, 100).Draw(t, "pace"),
 		Eye: rapid.Int32Range(1, 30_000).Draw(t, "eye"), Seen: rapid.SampledFrom([]plan.SeenKind{0, 1, 2}).Draw(t, "seen"), Meta: g.meta()}}
 	if p.Walker.Seen == plan.SeenShare {
 		p.Walker.Share = rapid.Float64Range(0.001, 1).Draw(t, "share")

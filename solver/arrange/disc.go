@@ -4,10 +4,11 @@ import (
 	"math"
 
 	"enfilade/solver/exact"
+	"enfilade/solver/plan"
 )
 
 // MaxRadius is the widest body that can walk, in grid units: 2 m.
-const MaxRadius = 2000 * exact.PerMM
+const MaxRadius = plan.MaxBodyRadius
 
 // discSides is the number of sides of the polygon that stands for a walker's disc.
 const discSides = 32

@@ -94,7 +94,7 @@ func (r *Route) fault() string { return chainFault(r.Via, 0) }
 
 func (w *Walker) fault() string {
 	share := w.Seen != SeenShare || w.Share > 0 && w.Share <= 1
-	return firstOf(unless(w.Radius >= 0 && w.Radius <= MaxBodyRadius, "needs a body radius from 0 to 10 m"),
+	return firstOf(unless(w.Radius >= 0 && w.Radius <= MaxBodyRadius, "needs a body radius from 0 to 2 m"),
 		unless(w.Pace > 0 && w.Pace <= MaxPace, "needs a pace above 0 and up to 100 metres per second"),
 		unless(w.Eye > 0 && w.Eye <= MaxCoord, "needs an eye height above 0 and up to 50 km"),
 		unless(share, "needs a share of the face above 0 and up to 1"))

@@ -16,7 +16,7 @@ func InRange(p exact.Pt) bool {
 
 // Limits of what a walker and a mark may be.
 const (
-	MaxBodyRadius int32 = 10_000 * exact.PerMM  // of the walker: 10 m
+	MaxBodyRadius       = 2000 * exact.PerMM    // of the walker: 2 m
 	MaxPace             = 100                   // metres per second
 	MaxColour           = 255                   // index of a colour
 	MaxRound      int32 = 100_000 * exact.PerMM // radius of a round block: 100 m
