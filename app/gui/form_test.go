@@ -41,7 +41,7 @@ func TestObserverForm(t *testing.T) {
 		t.Errorf("where %q", r.form.where.text)
 	}
 	r.settle()
-	if r.form.facts[0].value.text != "104.2" || r.form.facts[1].value.text != "4 of 7" {
+	if r.form.facts[0].value.text != "104.8" || r.form.facts[1].value.text != "4 of 7" {
 		t.Errorf("facts %q, %q", r.form.facts[0].value.text, r.form.facts[1].value.text)
 	}
 	r.enter("Eye height", "1,2")

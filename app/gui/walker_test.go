@@ -3,19 +3,12 @@ package gui
 import (
 	"strings"
 	"testing"
-
-	"enfilade/solver/plan"
 )
 
 // TestWalkerRadius: the form changes the walker's radius, says by how much its walks may keep farther off, and the walks
 // become longer.
 func TestWalkerRadius(t *testing.T) {
 	r := newGallery(t)
-	s, _ := r.session.Plan().Start("S1")
-	s.At.X -= 10000 // off the floor's edge, where there is room for a body
-	if err := r.session.Do(plan.SetStart{Start: s}); err != nil {
-		t.Fatal(err)
-	}
 	r.session.Select()
 	r.acted()
 	r.settle()
@@ -36,6 +29,11 @@ func TestWalkerRadius(t *testing.T) {
 	r.settle()
 	if r.foot.line.text == point || !strings.Contains(r.foot.line.text, "clear width 1.27 m") {
 		t.Errorf("walks for 0.30 m: %q, for a point: %q; the clear width is of the drawing", r.foot.line.text, point)
+	}
+	s, _ := r.session.Plan().Start("S1")
+	s.At.X -= 10000 // farther from the outer edge of the doorway
+	if err := r.session.Do(set(s)); err != nil {
+		t.Fatal(err)
 	}
 	r.enter("Radius", "0.7") // too wide for the rotunda's openings of 1.27 m
 	r.settle()

@@ -30,8 +30,8 @@ func TestGalleryIsShown(t *testing.T) {
 	if len(r.table.rows) != 14 || r.table.rows[0].first != "9.9 m" || r.table.rows[0].full != "21.4 m" {
 		t.Errorf("table of %d rows, the first %+v", len(r.table.rows), r.table.rows[:min(1, len(r.table.rows))])
 	}
-	if s, ok := r.results.sightOf("O1"); !ok || math.Abs(s.Area-104.2) > 0.1 {
-		t.Errorf("observer O1 sees %.2f m², want 104.2", s.Area)
+	if s, ok := r.results.sightOf("O1"); !ok || math.Abs(s.Area-104.8) > 0.1 {
+		t.Errorf("observer O1 sees %.2f m², want 104.8", s.Area)
 	}
 	if !strings.Contains(r.foot.line.text, "first sight after 9.9 m") {
 		t.Errorf("walk line %q", r.foot.line.text)
