@@ -165,7 +165,7 @@ func (sc *scene) destination(k sought, start exact.Pt) *walk.Spot {
 		return nil
 	}
 	if sc.rooms == nil {
-		sc.rooms = sc.wide.rooms()
+		sc.rooms = walk.Rooms(sc.wide.mesh)
 	}
 	var from []int32
 	sc.wide.holding(start, func(t int32) { from = append(from, sc.rooms[t]) })

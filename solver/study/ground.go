@@ -155,31 +155,3 @@ func distance(p, a, b exact.Pt) float64 {
 	t := min(max(float64(p.Sub(a).Dot(d))/float64(d.Len2()), 0), 1)
 	return math.Hypot(float64(p.X-a.X)-t*float64(d.X), float64(p.Y-a.Y)-t*float64(d.Y))
 }
-
-// rooms numbers the connected parts of the floor: for each triangle the number of its part, -1 where nobody stands. O(n).
-func (g *ground) rooms() []int32 {
-	room := make([]int32, len(g.mesh.Tris))
-	for i := range room {
-		room[i] = -1
-	}
-	var stack []int32
-	for t, count := int32(0), int32(0); int(t) < len(room); t++ {
-		if room[t] >= 0 || g.shut(t) {
-			continue
-		}
-		room[t] = count
-		for stack = append(stack, t); len(stack) > 0; {
-			now := stack[len(stack)-1]
-			stack = stack[:len(stack)-1]
-			tri := &g.mesh.Tris[now]
-			for i := range 3 {
-				if n := tri.N[i]; !tri.StopsWalk(i) && room[n.Tri()] < 0 {
-					room[n.Tri()] = count
-					stack = append(stack, n.Tri())
-				}
-			}
-		}
-		count++
-	}
-	return room
-}

@@ -5,6 +5,7 @@ import (
 	"fmt"
 	"slices"
 	"testing"
+	"time"
 
 	"enfilade/solver/exact"
 	"enfilade/solver/plantest"
@@ -46,6 +47,15 @@ func eachTrip(b *testing.B, run func(b *testing.B, eyes *sight.Finder, walker *w
 				places := g.Places(2, 64)
 				eyes, walker := sight.New(g.Mesh), walk.New(g.Mesh)
 				expanded := make([]int, 0, 32)
+				times := make([]time.Duration, 0, 5*32)
+				for i := range 5 * 32 {
+					began := time.Now()
+					if err := run(b, eyes, walker, trip{places[i%32], places[63-i%32]}); err != nil {
+						b.Fatal(err)
+					}
+					times = append(times, time.Since(began))
+				}
+				slices.Sort(times)
 				b.ReportAllocs()
 				for i := 0; b.Loop(); i++ {
 					k := i % 32
@@ -58,6 +68,7 @@ func eachTrip(b *testing.B, run func(b *testing.B, eyes *sight.Finder, walker *w
 				}
 				slices.Sort(expanded)
 				b.ReportMetric(float64(expanded[len(expanded)/2]), "median-cones")
+				b.ReportMetric(float64(times[len(times)/2]), "median-ns")
 			})
 		}
 	}

@@ -12,7 +12,7 @@ var inc = [3]int{1, 2, 0}
 
 // begin puts the start down and sends cones out of every walkable triangle that holds it, on any side of a wall.
 func (f *Finder) begin(start exact.Pt) error {
-	f.nodes = append(f.nodes, node{at: start, sector: -1, parent: -1})
+	f.nodes = append(f.nodes, node{at: start, sector: -1, parent: -1, others: -1})
 	free := false
 	f.eachCorner(start, func(t int32) {
 		if f.m.Tris[t].Flags&mesh.FlagNoWalk == 0 {
@@ -108,7 +108,7 @@ func (f *Finder) send(n int32, in mesh.Edge, r, l exact.Vec, key float64) {
 	if f.dominated(t.V[inc[i]], a, root, l, edge, dl) || f.dominated(t.V[i], b, root, r, edge, dr) {
 		return
 	}
-	if key = max(key, root.g+low); key <= f.limit {
+	if key = max(key, root.g+low+f.left(a, b)); key <= f.limit {
 		f.queue.push(cone{key, n, in, r, l})
 	}
 }
@@ -141,11 +141,11 @@ func (f *Finder) dominated(v int32, at exact.Pt, root *node, d exact.Vec, e exac
 // there.
 func (f *Finder) arrive(n int32, e mesh.Edge, v exact.Vec) {
 	g := f.nodes[n].g + math.Sqrt(float64(v.Len2()))
-	if g > f.limit {
-		return
-	}
 	t := &f.m.Tris[e.Tri()]
 	i := e.Corner()
+	if g+f.left(t.P[i], t.P[i]) > f.limit {
+		return
+	}
 	if id := t.V[i]; f.m.OnePlace(id) && g < f.reach[id] {
 		if math.IsInf(f.reach[id], 1) {
 			f.wiped = append(f.wiped, id)
@@ -160,7 +160,7 @@ func (f *Finder) arrive(n int32, e mesh.Edge, v exact.Vec) {
 	if !ok {
 		return
 	}
-	f.relax(node{at: t.P[i], sector: s, parent: n, g: g, toward: v, left: left})
+	f.relax(node{at: t.P[i], sector: s, parent: n, g: g, toward: v, left: left, others: -1})
 }
 
 // turns reports whether a walk that arrives in direction d may turn in sector s, and to which side. The walk comes in
@@ -184,7 +184,7 @@ func turns(s *mesh.Sector, d exact.Vec, next, prev int32) (left, ok bool) {
 }
 
 // turn sends node n's cones into the floor that its corner hid: from the way straight on around the corner to the wall.
-func (f *Finder) turn(n int32) {
+func (f *Finder) turn(n int32, key float64) {
 	root := f.nodes[n]
 	s := f.m.Sector(root.sector)
 	r, l := s.Lo, root.toward
@@ -196,7 +196,7 @@ func (f *Finder) turn(n int32) {
 		i := e.Corner()
 		a, b := t.P[inc[i]].Sub(root.at), t.P[inc[inc[i]]].Sub(root.at)
 		if p, q, ok := within(a, b, r, l); ok {
-			f.leave(n, e.Next(), p, q, root.g)
+			f.leave(n, e.Next(), p, q, key)
 		}
 		if t.StopsWalk(e.Prev().Corner()) {
 			return

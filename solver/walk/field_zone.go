@@ -49,28 +49,6 @@ func NewZone(m, zone *mesh.Mesh) *Zone {
 	return z
 }
 
-// box is a bounding box; the zero box, which is empty, has no width.
-type box struct{ lo, hi exact.Pt }
-
-func boxOf(t *mesh.Tri) box {
-	a, b, c := t.P[0], t.P[1], t.P[2]
-	return box{exact.Pt{X: min(a.X, b.X, c.X), Y: min(a.Y, b.Y, c.Y)}, exact.Pt{X: max(a.X, b.X, c.X), Y: max(a.Y, b.Y, c.Y)}}
-}
-
-func (b box) empty() bool { return b.lo == b.hi }
-
-func (b box) with(o box) box {
-	if b.empty() {
-		return o
-	}
-	return box{exact.Pt{X: min(b.lo.X, o.lo.X), Y: min(b.lo.Y, o.lo.Y)}, exact.Pt{X: max(b.hi.X, o.hi.X), Y: max(b.hi.Y, o.hi.Y)}}
-}
-
-// meets reports whether two boxes share more than a border.
-func (b box) meets(o box) bool {
-	return b.lo.X < o.hi.X && o.lo.X < b.hi.X && b.lo.Y < o.hi.Y && o.lo.Y < b.hi.Y && !b.empty() && !o.empty()
-}
-
 // Span tells how near and how far a zone is from a field's start.
 type Span struct {
 	Found         bool       // some floor of the zone can be reached; the rest is zero otherwise

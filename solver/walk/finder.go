@@ -41,12 +41,18 @@ type Finder struct {
 	reach []float64 // for each point of the mesh that is one place for walkers, an upper bound of its distance
 	wiped []int32   // points whose reach must be reset
 
-	goals  []goal
-	heads  []int32 // for each triangle the first of its marks, or -1
-	marks  []mark
-	marked []int32 // triangles whose head must be reset
-	limit  float64 // no cone beyond this distance can help any goal
-	field  *Field  // which keeps the cones of the flood; nil when nobody asked
+	goals   []goal
+	ends    []ending
+	tied    []int32 // nodes to which there are equally long walks over other corners
+	others  []other // those walks
+	heads   []int32 // for each triangle the first of its marks, or -1
+	marks   []mark
+	marked  []int32 // triangles whose head must be reset
+	limit   float64 // no cone beyond this distance can help any goal
+	settled float64 // a cone beyond this distance tells that some goal's walk is found
+	ahead   []box   // of the goals that are still open
+	rooms   []int32 // see Rooms; nil until asked for
+	field   *Field  // which keeps the cones of the flood; nil when nobody asked
 
 	clip     clipper
 	one, two []exact.Pt
@@ -62,6 +68,7 @@ type node struct {
 	toward exact.Vec // from the parent; zero for the start
 	left   bool      // the walk turns left here, around something on its left
 	ties   bool
+	others int32 // the last of the equally long walks here, -1 for none
 }
 
 // mark says that a triangle holds a part of a goal.
@@ -76,12 +83,21 @@ type goal struct {
 	spot   *Spot
 	eye    exact.Pt
 	pieces []sight.Piece
-	found  bool
-	g      float64
-	node   int32
-	end    [2]float64 // offset from the node
-	piece  int32
+	box    box     // around all of it
+	closed bool    // nothing more is to be found
+	g      float64 // of the shortest walk so far
+	last   int32   // the last of the ends at this distance, -1 for none
+	end    ending  // the one of them that counts
 	ties   bool
+}
+
+// ending is where a walk to a goal ends: at an offset from the node it last turned at, on a piece of the goal.
+type ending struct {
+	g     float64
+	node  int32
+	off   [2]float64
+	piece int32
+	next  int32 // another one equally far, -1 for none
 }
 
 // New returns a finder for m.
@@ -107,7 +123,8 @@ func fill[T any](s []T, v T) {
 //   - A goal that cannot be reached has Found false.
 //   - Errors: ErrInside; the context's error when it is cancelled.
 //   - Cost: O(k log k) for k cones, which stop where a corner already reached leads everywhere beyond at least as shortly;
-//     on floor plans k stays near the number of triangles nearer than the farthest goal.
+//     on floor plans k stays near the number of triangles through which a walk to an open goal can lead that is no longer
+//     than the one looked for, measured straight to the goal's box.
 func (f *Finder) Flood(ctx context.Context, start exact.Pt, goals []Goal) ([]Path, error) {
 	defer f.reset()
 	f.setGoals(goals)
@@ -119,14 +136,23 @@ func (f *Finder) Flood(ctx context.Context, start exact.Pt, goals []Goal) ([]Pat
 
 // run sends cones from start until none can help any goal.
 func (f *Finder) run(ctx context.Context, start exact.Pt) error {
+	f.aim()
 	if err := f.begin(start); err != nil {
 		return err
 	}
+	far := len(f.m.Tris) / 8 // entered so many triangles, a flood is worth a look at whether its goals can be reached
 	for n := 1; !f.queue.empty(); n++ {
 		if n&1023 == 0 && ctx.Err() != nil {
 			return ctx.Err()
 		}
 		c := f.queue.pop()
+		if f.Expanded > far {
+			f.giveUp(start)
+			far = math.MaxInt
+		}
+		if c.key > f.settled {
+			f.close(c.key)
+		}
 		if c.key > f.limit {
 			break
 		}
@@ -134,7 +160,7 @@ func (f *Finder) run(ctx context.Context, start exact.Pt) error {
 			continue // a shorter walk to the root has been found
 		}
 		if c.in == mesh.None {
-			f.turn(c.node)
+			f.turn(c.node, c.key)
 		} else {
 			f.expand(c)
 		}
@@ -144,6 +170,7 @@ func (f *Finder) run(ctx context.Context, start exact.Pt) error {
 
 // paths returns the walks to the goals.
 func (f *Finder) paths() []Path {
+	f.settleTies()
 	paths := make([]Path, len(f.goals))
 	for i := range f.goals {
 		paths[i] = f.path(&f.goals[i])
@@ -165,6 +192,7 @@ func (f *Finder) reset() {
 		f.reach[v] = math.Inf(1)
 	}
 	f.nodes, f.marks, f.marked, f.wiped, f.goals = f.nodes[:0], f.marks[:0], f.marked[:0], f.wiped[:0], f.goals[:0]
+	f.ends, f.tied, f.others = f.ends[:0], f.tied[:0], f.others[:0]
 	f.queue.clear()
 	f.field = nil
 }
@@ -172,12 +200,8 @@ func (f *Finder) reset() {
 // setGoals files every goal in the triangles that hold a part of it.
 func (f *Finder) setGoals(goals []Goal) {
 	f.Expanded = 0
-	f.limit = math.Inf(1)
-	if len(goals) == 0 {
-		f.limit = -1
-	}
 	for i, g := range goals {
-		f.goals = append(f.goals, goal{spot: g.Spot, eye: g.Eye, pieces: g.Pieces, g: math.Inf(1), node: -1})
+		f.goals = append(f.goals, goal{spot: g.Spot, eye: g.Eye, pieces: g.Pieces, g: math.Inf(1), last: -1})
 		for _, c := range g.Cones {
 			f.mark(c.Tri, mark{goal: int32(i), piece: -1, r: c.R, l: c.L})
 		}
@@ -187,6 +211,7 @@ func (f *Finder) setGoals(goals []Goal) {
 		if g.Spot != nil {
 			f.eachHolder(g.Spot, func(t int32) { f.mark(t, mark{goal: int32(i), piece: -1}) })
 		}
+		f.goals[i].closed = f.goals[i].box.empty()
 	}
 }
 
@@ -197,6 +222,7 @@ func (f *Finder) mark(t int32, k mark) {
 	if f.heads[t] < 0 {
 		f.marked = append(f.marked, t)
 	}
+	f.goals[k.goal].box = f.goals[k.goal].box.with(boxOf(&f.m.Tris[t]))
 	k.next = f.heads[t]
 	f.heads[t] = int32(len(f.marks))
 	f.marks = append(f.marks, k)

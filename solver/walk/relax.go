@@ -15,41 +15,83 @@ func tied(a, b float64) bool {
 	return math.Abs(a-b) <= 4*(math.Nextafter(m, math.Inf(1))-m)
 }
 
-// relax makes k the root of its sector if it is nearer to the start than the one before. Of two equally near ones the walk
-// with fewer turns is kept, then the one whose points come first in order; a second, different way is remembered as a tie.
+// other is a walk to a node that is as long as its own and comes over another corner.
+type other struct {
+	parent int32
+	g      float64
+	next   int32 // -1 for none
+}
+
+// relax makes k the root of its sector if it is nearer to the start than the one before. An equally near one is remembered;
+// its cones would be the same.
 func (f *Finder) relax(k node) {
 	old := f.best[k.sector]
 	if old >= 0 {
 		o := &f.nodes[old]
 		if tied(k.g, o.g) {
-			f.settleTie(o, &k)
+			if o.parent != k.parent {
+				if o.others < 0 {
+					f.tied = append(f.tied, old)
+				}
+				f.others = append(f.others, other{k.parent, k.g, o.others})
+				o.others = int32(len(f.others) - 1)
+			}
 			return
 		}
 		if k.g > o.g {
 			return
 		}
 	}
-	k.ties = f.nodes[k.parent].ties
 	f.best[k.sector] = int32(len(f.nodes))
 	f.nodes = append(f.nodes, k)
-	f.queue.push(cone{key: k.g, node: f.best[k.sector], in: mesh.None})
+	f.queue.push(cone{key: k.g + f.left(k.at, k.at), node: f.best[k.sector], in: mesh.None})
 }
 
-// settleTie chooses between two equally long walks to one root; its cones serve both.
-func (f *Finder) settleTie(o, k *node) {
-	if o.parent == k.parent {
-		return
+// settleTies chooses among equally long walks, to the nodes first, the nearest one before the others, then to the goals: the
+// order in which a flood finds them must not show.
+func (f *Finder) settleTies() {
+	slices.SortFunc(f.tied, func(a, b int32) int { return cmp.Compare(f.nodes[a].g, f.nodes[b].g) })
+	for _, n := range f.tied {
+		o := &f.nodes[n]
+		for i := o.others; i >= 0; i = f.others[i].next {
+			f.settleTie(o, &f.others[i])
+		}
 	}
+	for i := range f.goals {
+		o := &f.goals[i]
+		if o.last < 0 {
+			continue
+		}
+		o.end = f.ends[o.last]
+		for k := o.end.next; k >= 0; k = f.ends[k].next {
+			f.settleEnd(o, &f.ends[k])
+		}
+	}
+}
+
+// settleTie chooses between two equally long walks to one root: the one with fewer turns, then the one whose points come first
+// in order. A second, different way is told as a tie.
+func (f *Finder) settleTie(o *node, k *other) {
 	f.one = f.chain(f.one[:0], o.parent, o.at)
-	f.two = f.chain(f.two[:0], k.parent, k.at)
+	f.two = f.chain(f.two[:0], k.parent, o.at)
 	switch c := compareWalks(f.one, f.two); {
 	case c == 0:
-		o.ties = o.ties || f.nodes[k.parent].ties
+		o.ties = o.ties || f.tiesOn(k.parent)
 	case c > 0:
 		o.parent, o.g, o.ties = k.parent, k.g, true
 	default:
 		o.ties = true
 	}
+}
+
+// tiesOn reports whether there is another walk as long to a node on the walk to n.
+func (f *Finder) tiesOn(n int32) bool {
+	for ; n >= 0; n = f.nodes[n].parent {
+		if f.nodes[n].ties {
+			return true
+		}
+	}
+	return false
 }
 
 // chain appends the points of the walk to node n and on to end, without straight ones, from the end backwards.
@@ -88,45 +130,41 @@ func compareWalks(a, b []exact.Pt) int {
 // offer takes a walk from node n to the point at offset end as a candidate for goal i; piece is the goal's piece it belongs to.
 func (f *Finder) offer(i int32, n int32, g float64, end [2]float64, piece int32) {
 	o := &f.goals[i]
-	if o.found && tied(g, o.g) {
-		f.settleEnd(o, n, g, end, piece)
+	e := ending{g, n, end, piece, -1}
+	if tied(g, o.g) {
+		e.next = o.last
+	} else if g > o.g {
 		return
 	}
-	if o.found && g > o.g {
-		return
+	o.last = int32(len(f.ends))
+	f.ends = append(f.ends, e)
+	if g < o.g {
+		o.g = g
+		f.aim()
 	}
-	o.found, o.g, o.node, o.end, o.piece, o.ties = true, g, n, end, piece, false
-	if f.field != nil {
-		return // which wants all of the floor
-	}
-	worst := 0.0
-	for k := range f.goals {
-		worst = max(worst, f.goals[k].g)
-	}
-	f.limit = worst / tieSlack
 }
 
 // settleEnd chooses between two equally long walks to one goal.
-func (f *Finder) settleEnd(o *goal, n int32, g float64, end [2]float64, piece int32) {
-	f.one = f.turnsTo(f.one[:0], o.node, o.end)
-	f.two = f.turnsTo(f.two[:0], n, end)
-	ax, ay := f.place(o.node, o.end)
-	bx, by := f.place(n, end)
+func (f *Finder) settleEnd(o *goal, e *ending) {
+	f.one = f.turnsTo(f.one[:0], o.end.node, o.end.off)
+	f.two = f.turnsTo(f.two[:0], e.node, e.off)
+	ax, ay := f.place(o.end.node, o.end.off)
+	bx, by := f.place(e.node, e.off)
 	c := compareWalks(f.one, f.two)
 	// Ends are measured, not decided: two candidates a thousandth of a unit apart are one place seen from two triangles.
 	apart := math.Hypot(ax-bx, ay-by) > 1.0/1024
 	if c == 0 && !apart {
-		if g < o.g || g == o.g && (ax > bx || ax == bx && ay > by) { // the same walk; which bits it gets must not depend on the order
-			o.g, o.node, o.end, o.piece = g, n, end, piece
+		if e.g < o.end.g || e.g == o.end.g && (ax > bx || ax == bx && ay > by) { // the same walk; which bits it gets must not depend on the order
+			o.end = *e
 		}
-		o.ties = o.ties || f.nodes[n].ties
+		o.ties = o.ties || f.tiesOn(e.node)
 		return
 	}
 	if c == 0 {
 		c = cmp.Or(cmp.Compare(ax, bx), cmp.Compare(ay, by))
 	}
 	if c > 0 {
-		o.g, o.node, o.end, o.piece = g, n, end, piece
+		o.end = *e
 	}
 	o.ties = true
 }
@@ -156,17 +194,14 @@ func (f *Finder) turnsTo(dst []exact.Pt, n int32, end [2]float64) []exact.Pt {
 
 // path reads a goal's walk back to the start.
 func (f *Finder) path(o *goal) Path {
-	if !o.found {
+	if o.last < 0 {
 		return Path{Piece: -1}
 	}
-	back := f.turnsTo(nil, o.node, o.end)
+	back := f.turnsTo(nil, o.end.node, o.end.off)
 	slices.Reverse(back)
-	x, y := f.place(o.node, o.end)
-	p := Path{Found: true, Length: lengthOf(back, x, y), Turns: back, End: [2]float64{x, y}, Piece: int(o.piece), Ties: o.ties || f.nodes[o.node].ties}
-	for n := o.node; n >= 0 && !p.Ties; n = f.nodes[n].parent {
-		p.Ties = f.nodes[n].ties
-	}
-	return p
+	x, y := f.place(o.end.node, o.end.off)
+	return Path{Found: true, Length: lengthOf(back, x, y), Turns: back, End: [2]float64{x, y}, Piece: int(o.end.piece),
+		Ties: o.ties || f.tiesOn(o.end.node)}
 }
 
 // lengthOf adds the walk's legs up, from the start on: the sum then depends on the walk alone and not on the corners at which
