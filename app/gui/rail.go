@@ -40,6 +40,7 @@ var tools = []toolKind{
 	{"Observer", "observer", "O", "Put down an observer", "Place", func() tool.Tool { return &tool.Mark{Kind: plan.KindObserver} }},
 	{"Target", "target", "T", "Put down a target: a thing to be seen", "Place", func() tool.Tool { return &tool.Mark{Kind: plan.KindTarget} }},
 	{"Start", "start", "B", "Put down a start: where a walk begins", "Place", func() tool.Tool { return &tool.Mark{Kind: plan.KindStart} }},
+	{"Route", "waypoint", "P", "Draw a route: a start, waypoints, a target", "Place", func() tool.Tool { return &tool.Route{} }},
 }
 
 // shapeOf returns the first of the tools that tool i is a shape of.

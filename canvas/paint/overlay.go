@@ -30,6 +30,7 @@ func Overlay(s *Scene, l *List) {
 	p.edges()
 	p.draggedBodies()
 	p.writeLabels(true)
+	p.routes()
 	p.walks(main)
 	p.marks()
 	p.writeLabels(false)

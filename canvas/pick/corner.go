@@ -14,26 +14,43 @@ type shape struct {
 	pts    plan.Chain
 	ring   bool
 	locked bool
+	centre *exact.Pt // of a round block, which has no corners
 }
 
-// shapes yields everything with corners that can be seen. A block drawn as a circle has none.
+// cornered yields everything with corners that can be dragged: what is drawn, and the waypoints of routes.
+func cornered(p *plan.Plan) iter.Seq[shape] {
+	return func(yield func(shape) bool) {
+		for s := range shapes(p) {
+			if !yield(s) {
+				return
+			}
+		}
+		for _, r := range p.Routes() {
+			if !r.Hidden && !yield(shape{ref: plan.Ref{Kind: plan.KindRoute, ID: r.ID}, pts: r.Via, ring: false, locked: r.Locked}) {
+				return
+			}
+		}
+	}
+}
+
+// shapes yields everything drawn that has corners and can be seen. A block drawn as a circle has none.
 func shapes(p *plan.Plan) iter.Seq[shape] {
 	return func(yield func(shape) bool) {
-		if p.Floor().Len() > 0 && !yield(shape{plan.Ref{Kind: plan.KindFloor}, p.Floor(), true, false}) {
+		if p.Floor().Len() > 0 && !yield(shape{ref: plan.Ref{Kind: plan.KindFloor}, pts: p.Floor(), ring: true, locked: false}) {
 			return
 		}
 		for _, z := range p.Zones() {
-			if !z.Hidden && !yield(shape{plan.Ref{Kind: plan.KindZone, ID: z.ID}, z.Ring, true, z.Locked}) {
+			if !z.Hidden && !yield(shape{ref: plan.Ref{Kind: plan.KindZone, ID: z.ID}, pts: z.Ring, ring: true, locked: z.Locked}) {
 				return
 			}
 		}
 		for _, b := range p.Blocks() {
-			if !b.Hidden && b.Circle == nil && !yield(shape{plan.Ref{Kind: plan.KindBlock, ID: b.ID}, b.Ring, true, b.Locked}) {
+			if !b.Hidden && b.Circle == nil && !yield(shape{ref: plan.Ref{Kind: plan.KindBlock, ID: b.ID}, pts: b.Ring, ring: true, locked: b.Locked}) {
 				return
 			}
 		}
 		for _, w := range p.Walls() {
-			if !w.Hidden && !yield(shape{plan.Ref{Kind: plan.KindWall, ID: w.ID}, w.Line, false, w.Locked}) {
+			if !w.Hidden && !yield(shape{ref: plan.Ref{Kind: plan.KindWall, ID: w.ID}, pts: w.Line, ring: false, locked: w.Locked}) {
 				return
 			}
 		}
@@ -44,7 +61,7 @@ func shapes(p *plan.Plan) iter.Seq[shape] {
 // dragged.
 func CornersAt(p *plan.Plan, at exact.Pt) []plan.Corner {
 	var out []plan.Corner
-	for s := range shapes(p) {
+	for s := range cornered(p) {
 		if s.locked {
 			continue
 		}
@@ -59,15 +76,19 @@ func CornersAt(p *plan.Plan, at exact.Pt) []plan.Corner {
 
 // corner finds the corner under the pointer. A corner's reach shrinks with the shorter of its two edges, so that small
 // things can still be taken by their body.
-func corner(p *plan.Plan, cam view.Camera, s spot) (Hit, bool) {
-	var n nearest
+func corner(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool) (Hit, bool) {
+	n := nearest{skip: skip}
 	reach := units(cam, cornerReach)
-	for sh := range shapes(p) {
+	for sh := range cornered(p) {
 		if s.apart(sh.pts, reach) {
 			continue
 		}
 		for i, q := range sh.pts.All() {
 			if d := s.dist(spotOf(q)); d <= reach {
+				if sh.ref.Kind == plan.KindRoute { // a waypoint has no body to be taken by
+					n.offer(d, reach, Hit{sh.ref, Corner, i, q})
+					continue
+				}
 				r := min(reach, 0.3*shortEdge(sh, i))
 				if r >= units(cam, cornerReach/2.0) {
 					n.offer(d, r, Hit{sh.ref, Corner, i, q})
@@ -96,44 +117,6 @@ func shortEdge(sh shape, i int) float64 {
 	return best
 }
 
-// InBox returns the items that lie with all their points in the box spanned by a and b, in the order of the plan's lists.
-// Openings go with their walls and are left out; so are hidden and locked items and the floor.
-func InBox(p *plan.Plan, a, b exact.Pt) []plan.Ref {
-	var out []plan.Ref
-	all := func(c plan.Chain) bool {
-		for _, q := range c.All() {
-			if !exact.InBox(a, b, q) {
-				return false
-			}
-		}
-		return c.Len() > 0
-	}
-	add := func(in bool, m plan.Meta, kind plan.Kind, id string) {
-		if in && !m.Hidden && !m.Locked {
-			out = append(out, plan.Ref{Kind: kind, ID: id})
-		}
-	}
-	for _, w := range p.Walls() {
-		add(all(w.Line), w.Meta, plan.KindWall, w.ID)
-	}
-	for _, k := range p.Blocks() {
-		add(all(k.Ring), k.Meta, plan.KindBlock, k.ID)
-	}
-	for _, z := range p.Zones() {
-		add(all(z.Ring), z.Meta, plan.KindZone, z.ID)
-	}
-	for _, o := range p.Observers() {
-		add(exact.InBox(a, b, o.At), o.Meta, plan.KindObserver, o.ID)
-	}
-	for _, t := range p.Targets() {
-		add(exact.InBox(a, b, t.At), t.Meta, plan.KindTarget, t.ID)
-	}
-	for _, t := range p.Starts() {
-		add(exact.InBox(a, b, t.At), t.Meta, plan.KindStart, t.ID)
-	}
-	return out
-}
-
 // Points returns the points that make an item: its line or ring, or its place. Openings and what is not in the plan have
 // none.
 func Points(p *plan.Plan, r plan.Ref) (plan.Chain, bool) {
@@ -144,7 +127,7 @@ func Points(p *plan.Plan, r plan.Ref) (plan.Chain, bool) {
 		}
 	case plan.KindTarget:
 		if t, ok := p.Target(r.ID); ok {
-			return plan.ChainOf(t.At), true
+			return plan.ChainOf(TargetAt(t)), true
 		}
 	case plan.KindStart:
 		if t, ok := p.Start(r.ID); ok {
@@ -155,7 +138,7 @@ func Points(p *plan.Plan, r plan.Ref) (plan.Chain, bool) {
 			return b.Ring, b.Ring.Len() > 0
 		}
 	}
-	for s := range shapes(p) {
+	for s := range cornered(p) {
 		if s.ref == r {
 			return s.pts, s.pts.Len() > 0
 		}

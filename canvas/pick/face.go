@@ -13,6 +13,7 @@ type Face struct {
 	At     exact.Pt
 	Normal float64 // degrees, away from the wall
 	Ref    plan.Ref
+	Ends   [2]exact.Pt // of the face, on its free side, which is to the left of the way from the first to the second
 }
 
 // faceReach is how near the pointer must come to a face to stick to it, in px at 100 %.
@@ -90,7 +91,13 @@ func (f *faceFinder) side(a, b exact.Pt, off float64, ref plan.Ref) {
 		return
 	}
 	f.best, f.ok = d, true
-	f.face = Face{At: f.free(on, a, b, nx, ny, off), Normal: math.Atan2(ny, nx) * 180 / math.Pi, Ref: ref}
+	end := func(q exact.Pt) exact.Pt {
+		if off == math.Trunc(off) && (a.X == b.X || a.Y == b.Y) {
+			return lifted(q, nx, ny, off)
+		}
+		return spot{float64(q.X) + nx*(off+standOff), float64(q.Y) + ny*(off+standOff)}.grid()
+	}
+	f.face = Face{At: f.free(on, a, b, nx, ny, off), Normal: math.Atan2(ny, nx) * 180 / math.Pi, Ref: ref, Ends: [2]exact.Pt{end(a), end(b)}}
 }
 
 // free returns the grid point for a place on a face.

@@ -16,13 +16,16 @@ const (
 	Body    Part = iota
 	Corner       // a point of its line or ring
 	Heading      // the handle that turns an observer
+	View         // the handles that open an observer's view angle: 0 to the left of its heading, 1 to the right
+	Range        // the handle that stretches an observer's range
+	FaceEnd      // the handles at the ends of a target's face
 )
 
 // Hit is what lies under the pointer.
 type Hit struct {
 	Ref   plan.Ref
 	Part  Part
-	Index int      // of the corner in its line or ring
+	Index int      // of the corner in its line or ring, or which of two handles
 	At    exact.Pt // of the corner, or the point of a mark
 }
 
@@ -37,73 +40,70 @@ const (
 	lineReach     = 5
 	handleReach   = 8
 
-	// HandleDist is how far the heading handle of a selected observer stands from its eye.
+	// HandleDist is how far the heading handle of a selected observer stands from its eye, ViewDist how far the handles
+	// of its view angle.
 	HandleDist = 34
+	ViewDist   = 26
 	// MatDist is how far the mat of a start lies from its point, outside the door: 0.78 m, in grid units.
 	MatDist = 7800
 )
 
-// At returns what lies under the pixel place (x, y): first the heading handle of a selected observer, then marks, corners,
-// openings, walls and blocks, zones and the floor's outline. Hidden items are passed over.
+// At returns what lies under the pixel place (x, y): first the handles of selected marks, then marks, corners, openings,
+// walls and blocks, routes, zones and the floor's outline. Hidden items are passed over.
 func At(p *plan.Plan, cam view.Camera, x, y float64, selected []plan.Ref) (Hit, bool) {
 	s := pointer(cam, x, y)
-	for _, find := range []func() (Hit, bool){
-		func() (Hit, bool) { return heading(p, cam, s, selected) },
-		func() (Hit, bool) { return mark(p, cam, s) },
-		func() (Hit, bool) { return corner(p, cam, s) },
-		func() (Hit, bool) { return opening(p, cam, s) },
-		func() (Hit, bool) { return body(p, cam, s) },
-		func() (Hit, bool) { return outline(p, cam, s) },
+	if h, ok := knob(p, cam, s, selected); ok {
+		return h, true
+	}
+	return top(p, cam, s, nil)
+}
+
+// Under returns all that lies under the pixel place (x, y), what lies on top first, each item once and handles left out.
+func Under(p *plan.Plan, cam view.Camera, x, y float64) []Hit {
+	const most = 32
+	s := pointer(cam, x, y)
+	var out []Hit
+	skip := map[plan.Ref]bool{}
+	for len(out) < most {
+		h, ok := top(p, cam, s, skip)
+		if !ok {
+			break
+		}
+		out = append(out, h)
+		skip[h.Ref] = true
+	}
+	return out
+}
+
+// top returns what lies on top at a place, without the items of skip.
+func top(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool) (Hit, bool) {
+	for _, find := range [...]func(*plan.Plan, view.Camera, spot, map[plan.Ref]bool) (Hit, bool){
+		mark, corner, opening, body, path, outline,
 	} {
-		if h, ok := find(); ok {
+		if h, ok := find(p, cam, s, skip); ok {
 			return h, true
 		}
 	}
 	return Hit{}, false
 }
 
-// Handle returns the pixel place of an observer's heading handle.
-func Handle(o plan.Observer, cam view.Camera) (x, y float64) {
-	x, y = cam.Pixel(o.At)
-	sin, cos := math.Sincos(o.Heading * math.Pi / 180)
-	return x + cos*HandleDist*cam.K, y - sin*HandleDist*cam.K
-}
-
-func heading(p *plan.Plan, cam view.Camera, s spot, selected []plan.Ref) (Hit, bool) {
-	for _, r := range selected {
-		o, ok := p.Observer(r.ID)
-		if r.Kind != plan.KindObserver || !ok {
-			continue
-		}
-		if s.dist(handleSpot(cam, o)) <= units(cam, handleReach) {
-			return Hit{Ref: r, Part: Heading, At: o.At}, true
-		}
-	}
-	return Hit{}, false
-}
-
-// handleSpot returns the plan's place of an observer's heading handle.
-func handleSpot(cam view.Camera, o plan.Observer) spot {
-	x, y := Handle(o, cam)
-	return pointer(cam, x, y)
-}
-
 // nearest keeps the hit with the smallest distance, the later one on a tie: it lies on top.
 type nearest struct {
+	skip map[plan.Ref]bool
 	hit  Hit
 	dist float64
 	ok   bool
 }
 
 func (n *nearest) offer(d, reach float64, h Hit) {
-	if d <= reach && (!n.ok || d <= n.dist) {
+	if d <= reach && (!n.ok || d <= n.dist) && !n.skip[h.Ref] {
 		n.hit, n.dist, n.ok = h, d, true
 	}
 }
 
 // mark finds observers, targets and starts.
-func mark(p *plan.Plan, cam view.Camera, s spot) (Hit, bool) {
-	var n nearest
+func mark(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool) (Hit, bool) {
+	n := nearest{skip: skip}
 	for _, t := range p.Starts() {
 		if !t.Hidden {
 			h := Hit{Ref: plan.Ref{Kind: plan.KindStart, ID: t.ID}, At: t.At}
@@ -115,7 +115,12 @@ func mark(p *plan.Plan, cam view.Camera, s spot) (Hit, bool) {
 	}
 	for _, t := range p.Targets() {
 		if !t.Hidden {
-			n.offer(s.dist(spotOf(t.At)), units(cam, targetReach), Hit{Ref: plan.Ref{Kind: plan.KindTarget, ID: t.ID}, At: t.At})
+			h := Hit{Ref: plan.Ref{Kind: plan.KindTarget, ID: t.ID}, At: TargetAt(t)}
+			n.offer(s.dist(spotOf(h.At)), units(cam, targetReach), h)
+			if t.Face != nil {
+				f, _ := s.foot(t.Face[0], t.Face[1])
+				n.offer(s.dist(f), units(cam, lineReach), h)
+			}
 		}
 	}
 	for _, o := range p.Observers() {
@@ -124,6 +129,27 @@ func mark(p *plan.Plan, cam view.Camera, s spot) (Hit, bool) {
 		}
 	}
 	return n.hit, n.ok
+}
+
+// TargetAt returns the grid point nearest to a target's place: its point, or the middle of its face.
+func TargetAt(t plan.Target) exact.Pt {
+	if t.Face != nil {
+		return middleOf(t.Face[0], t.Face[1])
+	}
+	return t.At
+}
+
+// MarkAt returns the mark of a kind, observer, target or start, that lies under the pixel place (x, y).
+func MarkAt(p *plan.Plan, cam view.Camera, x, y float64, kind plan.Kind) (Hit, bool) {
+	s := pointer(cam, x, y)
+	skip := map[plan.Ref]bool{}
+	for {
+		h, ok := mark(p, cam, s, skip)
+		if !ok || h.Ref.Kind == kind {
+			return h, ok
+		}
+		skip[h.Ref] = true
+	}
 }
 
 // mat returns where a start's mat lies: behind someone who faces the way the start says.
@@ -136,7 +162,7 @@ func mat(t plan.Start) (spot, bool) {
 }
 
 // opening finds doors and gaps by their place in the wall.
-func opening(p *plan.Plan, cam view.Camera, s spot) (Hit, bool) {
+func opening(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool) (Hit, bool) {
 	for _, o := range p.Openings() {
 		w, ok := p.Wall(o.Wall)
 		if o.Hidden || !ok || o.Segment < 0 || o.Segment+1 >= w.Line.Len() {
@@ -146,8 +172,9 @@ func opening(p *plan.Plan, cam view.Camera, s spot) (Hit, bool) {
 		_, along := s.foot(a, b)
 		right, left := sides(w, units(cam, lineReach))
 		d := s.aside(a, b)
-		if along > float64(o.At) && along < float64(o.At+o.Width) && d <= left && d >= -right {
-			return Hit{Ref: plan.Ref{Kind: plan.KindOpening, ID: o.ID}}, true
+		ref := plan.Ref{Kind: plan.KindOpening, ID: o.ID}
+		if along > float64(o.At) && along < float64(o.At+o.Width) && d <= left && d >= -right && !skip[ref] {
+			return Hit{Ref: ref}, true
 		}
 	}
 	return Hit{}, false
@@ -160,8 +187,8 @@ func sides(w plan.Wall, reach float64) (right, left float64) {
 }
 
 // body finds walls and blocks. A line is preferred to a block it lies on.
-func body(p *plan.Plan, cam view.Camera, s spot) (Hit, bool) {
-	var n nearest
+func body(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool) (Hit, bool) {
+	n := nearest{skip: skip}
 	reach := units(cam, lineReach)
 	for _, b := range p.Blocks() {
 		if b.Hidden || s.apart(b.Ring, reach) {
@@ -193,9 +220,36 @@ func body(p *plan.Plan, cam view.Camera, s spot) (Hit, bool) {
 	return n.hit, n.ok
 }
 
+// path finds routes by the straight legs between their points.
+func path(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool) (Hit, bool) {
+	n := nearest{skip: skip}
+	reach := units(cam, lineReach)
+	for _, r := range p.Routes() {
+		if r.Hidden {
+			continue
+		}
+		ref := plan.Ref{Kind: plan.KindRoute, ID: r.ID}
+		n.offer(s.outlineDist(plan.ChainOf(RoutePoints(p, r)...), false), reach, Hit{Ref: ref})
+	}
+	return n.hit, n.ok
+}
+
+// RoutePoints returns the points of a route: its start, where that is in the plan, its waypoints, and its target.
+func RoutePoints(p *plan.Plan, r plan.Route) []exact.Pt {
+	var out []exact.Pt
+	if s, ok := p.Start(r.From); ok {
+		out = append(out, s.At)
+	}
+	out = append(out, r.Via.Points()...)
+	if t, ok := p.Target(r.To); ok {
+		out = append(out, TargetAt(t))
+	}
+	return out
+}
+
 // outline finds zones and the floor by their outlines.
-func outline(p *plan.Plan, cam view.Camera, s spot) (Hit, bool) {
-	var n nearest
+func outline(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool) (Hit, bool) {
+	n := nearest{skip: skip}
 	reach := units(cam, lineReach)
 	if p.Floor().Len() > 0 {
 		n.offer(s.outlineDist(p.Floor(), true), reach, Hit{Ref: plan.Ref{Kind: plan.KindFloor}})

@@ -109,15 +109,9 @@ func (s spot) inside(ring plan.Chain) bool {
 
 // apart reports whether s lies farther than r from the box around a chain: a quick no.
 func (s spot) apart(c plan.Chain, r float64) bool {
-	n := c.Len()
-	if n == 0 {
+	if c.Len() == 0 {
 		return true
 	}
-	lo := c.At(0)
-	hi := lo
-	for i := 1; i < n; i++ {
-		q := c.At(i)
-		lo.X, lo.Y, hi.X, hi.Y = min(lo.X, q.X), min(lo.Y, q.Y), max(hi.X, q.X), max(hi.Y, q.Y)
-	}
-	return s.x < float64(lo.X)-r || s.x > float64(hi.X)+r || s.y < float64(lo.Y)-r || s.y > float64(hi.Y)+r
+	b := boxAround(c)
+	return s.off(b.lo, b.hi, r)
 }

@@ -131,7 +131,7 @@ func TestCornersAt(t *testing.T) {
 }
 
 func TestInBox(t *testing.T) {
-	got := fmt.Sprint(pick.InBox(room(), m(5, -5), m(-1, 2.5)))
+	got := fmt.Sprint(pick.InBox(room(), m(5, -5), m(-1, 2.5), false))
 	if want := fmt.Sprint([]plan.Ref{{Kind: plan.KindBlock, ID: "B1"}, {Kind: plan.KindObserver, ID: "O1"}, {Kind: plan.KindStart, ID: "S1"}}); got != want {
 		t.Errorf("in the box %s, want %s", got, want)
 	}

@@ -7,9 +7,10 @@ import (
 )
 
 // Snapper finds where places snap to. It keeps its scratch space from call to call, so that a move of the pointer allocates
-// nothing; it keeps nothing of the plan.
+// nothing, and the boxes around what the last plan has to snap to.
 type Snapper struct {
 	On   Set // the kinds of snapping that are switched on
+	kept kept
 	near []nearEdge
 }
 
@@ -24,7 +25,7 @@ type nearEdge struct {
 const mostNear = 128
 
 // At returns where the place under the pixel (x, y) snaps to: a near end, else the nearest middle or crossing, else a near
-// line, else what it is in line with, else the grid. All are sought in one pass over the plan.
+// line, else what it is in line with, else the grid.
 func (n *Snapper) At(p *plan.Plan, cam view.Camera, x, y float64, to SnapTo) Snap {
 	s := pointer(cam, x, y)
 	if to.Free {
@@ -89,21 +90,14 @@ func (f *search) gather(p *plan.Plan) {
 	if f.to.From != nil {
 		f.begun = f.s.dist(spotOf(*f.to.From))
 	}
-	for sh := range shapes(p) {
-		if f.to.Skip != nil && f.to.Skip(sh.ref) || f.s.apart(sh.pts, f.far) {
+	f.n.kept.of(p)
+	window := f.window(f.far)
+	for i, b := range f.n.kept.boxes {
+		if b.hi.X < window.lo.X || b.lo.X > window.hi.X || b.hi.Y < window.lo.Y || b.lo.Y > window.hi.Y {
 			continue
 		}
-		for _, q := range sh.pts.All() {
-			f.corner(q, sh.ref, f.far)
-		}
-		edges(sh.pts, sh.ring, func(_ int, a, b exact.Pt) bool {
-			f.edge(a, b, sh.ref)
-			return true
-		})
-	}
-	for _, b := range p.Blocks() {
-		if b.Circle != nil && !b.Hidden && (f.to.Skip == nil || !f.to.Skip(plan.Ref{Kind: plan.KindBlock, ID: b.ID})) {
-			f.middle(b.Circle.At, Snap{Ref: plan.Ref{Kind: plan.KindBlock, ID: b.ID}})
+		if sh := &f.n.kept.shapes[i]; f.to.Skip == nil || !f.to.Skip(sh.ref) {
+			f.shape(sh)
 		}
 	}
 	anywhere := units(f.cam, 1e9)
@@ -115,6 +109,30 @@ func (f *search) gather(p *plan.Plan) {
 	}
 	if f.to.From != nil && (f.n.On.Has(SnapInLine) || f.n.On.Has(SnapParallel)) {
 		f.lineUp(*f.to.From, anywhere)
+	}
+}
+
+// window returns the box of what lies no farther than so many units in x and in y.
+func (f *search) window(far float64) box {
+	return box{spot{f.s.x - far, f.s.y - far}.grid(), spot{f.s.x + far, f.s.y + far}.grid()}
+}
+
+// shape offers all that a shape has.
+func (f *search) shape(sh *shape) {
+	if sh.centre != nil {
+		f.middle(*sh.centre, Snap{Ref: sh.ref})
+		return
+	}
+	n := sh.pts.Len()
+	for i := range n {
+		q := sh.pts.At(i)
+		f.corner(q, sh.ref, f.far)
+		switch {
+		case i+1 < n:
+			f.edge(q, sh.pts.At(i+1), sh.ref)
+		case sh.ring:
+			f.edge(q, sh.pts.At(0), sh.ref)
+		}
 	}
 }
 

@@ -14,8 +14,8 @@ func dragEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 	switch {
 	case locked(h.Plan(), g.hit.Ref):
 		return nil, nil
-	case g.hit.Part == pick.Heading:
-		return turnEdit(h, g, e), nil
+	case g.handle():
+		return handleEdit(h, g, e)
 	case g.hit.Part == pick.Corner:
 		return cornerEdit(h, g, e)
 	case g.hit.Ref.Kind == plan.KindOpening:
@@ -28,23 +28,8 @@ func dragEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 	return moveEdit(h, g, e)
 }
 
-// turnEdit points the observer at the pointer, in whole degrees, with Shift in steps of 15.
-func turnEdit(h Host, g *grip, e Pointer) plan.Edit {
-	o, ok := h.Plan().Observer(g.hit.Ref.ID)
-	at := h.Camera().Grid(e.X, e.Y)
-	if !ok || at == o.At {
-		return nil
-	}
-	deg := math.Atan2(float64(at.Y)-float64(o.At.Y), float64(at.X)-float64(o.At.X)) * 180 / math.Pi
-	step := 1.0
-	if e.Shift {
-		step = 15
-	}
-	deg = math.Mod(math.Round(deg/step)*step+360, 360)
-	g.heading = deg
-	o.Heading = deg
-	return relabelled{plan.SetObserver{Observer: o}, "turn observer"}
-}
+// handle reports whether a handle of a mark is held.
+func (g *grip) handle() bool { return g.hit.Part != pick.Body && g.hit.Part != pick.Corner }
 
 // cornerEdit moves the corner and every corner that lies on it.
 func cornerEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
@@ -99,7 +84,7 @@ func anchorOf(h Host, g *grip) exact.Pt {
 	return best
 }
 
-// slideEdit moves an opening along its wall.
+// slideEdit moves an opening along its wall, or into another one under the pointer.
 func slideEdit(h Host, g *grip, e Pointer) plan.Edit {
 	o, ok := h.Plan().Opening(g.hit.Ref.ID)
 	w, found := h.Plan().Wall(o.Wall)
@@ -108,14 +93,23 @@ func slideEdit(h Host, g *grip, e Pointer) plan.Edit {
 	}
 	a, b := w.Line.At(o.Segment), w.Line.At(o.Segment+1)
 	step := gridStep(h, e)
-	by := alongOf(h, a, b, e.X, e.Y) - alongOf(h, a, b, g.x, g.y)
-	at := int32(math.Round((float64(o.At)+by)/float64(step))) * step
-	at = max(0, min(at, int32(exact.Dist(a, b))-o.Width))
-	if at == o.At {
+	old := o
+	if p, ok := pick.WallAt(h.Plan(), h.Camera(), e.X, e.Y, step); ok && (p.Wall != o.Wall || p.Segment != o.Segment) && p.Length >= o.Width {
+		o.Wall, o.Segment = p.Wall, p.Segment
+		o.At = max(0, min(p.Along-o.Width/2, p.Length-o.Width))
+		a, b = p.A, p.B
+	} else {
+		by := alongOf(h, a, b, e.X, e.Y) - alongOf(h, a, b, g.x, g.y)
+		at := int32(math.Round((float64(o.At)+by)/float64(step))) * step
+		o.At = max(0, min(at, int32(exact.Dist(a, b))-o.Width))
+	}
+	if o == old {
 		return nil
 	}
-	o.At = at
-	return relabelled{plan.SetOpening{Opening: o}, "move opening"}
+	rest := int32(exact.Dist(a, b)) - o.At - o.Width
+	g.label = h.FormatLength(float64(o.At)) + "  |  " + h.FormatLength(float64(o.Width)) + "  |  " + h.FormatLength(float64(rest))
+	g.to = along(a, b, (float64(o.At)+float64(o.Width)/2)/exact.Dist(a, b))
+	return Named("move opening", plan.SetOpening{Opening: o})
 }
 
 // alongOf returns how far along the line from a to b the pixel place lies, in grid units.
@@ -130,12 +124,16 @@ func targetEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 	if !ok {
 		return nil, nil
 	}
-	at, normal, snap := targetPlace(h, e)
-	g.to = at
-	if at == p.At {
+	to, snap := targetPlace(h, e)
+	g.to = to.at
+	if to.at == pick.TargetAt(p) {
 		return nil, snap
 	}
-	p.At, p.Normal = at, normal
+	p.At, p.Normal = to.at, to.facing
+	if p.Face != nil {
+		face := carried(*p.Face, to.at, to.face)
+		p.Face, p.Normal, p.At = &face, nil, along(face[0], face[1], 0.5)
+	}
 	return relabelled{plan.SetTarget{Target: p}, "move target"}, snap
 }
 
@@ -145,15 +143,15 @@ func startEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 	if !ok {
 		return nil, nil
 	}
-	at, facing, snap := startPlace(h, e)
-	if facing == nil {
-		facing = p.Facing
+	to, snap := startPlace(h, e)
+	if to.facing == nil {
+		to.facing = p.Facing
 	}
-	g.to = at
-	if at == p.At {
+	g.to = to.at
+	if to.at == p.At {
 		return nil, snap
 	}
-	p.At, p.Facing = at, facing
+	p.At, p.Facing = to.at, to.facing
 	return relabelled{plan.SetStart{Start: p}, "move start"}, snap
 }
 
@@ -168,7 +166,7 @@ func draggedBy(h Host, g *grip) []plan.Ref {
 		}
 		return out
 	}
-	if g.hit.Part == pick.Heading || g.hit.Ref.Kind == plan.KindOpening {
+	if g.handle() || g.hit.Ref.Kind == plan.KindOpening {
 		return []plan.Ref{g.hit.Ref}
 	}
 	return movable(h.Plan(), h.Selection())
@@ -179,14 +177,11 @@ func dragLabel(h Host, g *grip) string {
 	if g.edit == nil {
 		return ""
 	}
-	switch g.hit.Part {
-	case pick.Heading:
-		return degrees(g.heading) + "°"
-	case pick.Corner:
+	switch {
+	case g.label != "":
+		return g.label
+	case g.hit.Part == pick.Corner:
 		return h.FormatLength(exact.Dist(g.hit.At, g.to))
-	}
-	if g.hit.Ref.Kind == plan.KindOpening {
-		return ""
 	}
 	return h.FormatLength(exact.Dist(anchorOf(h, g), g.to))
 }

@@ -13,7 +13,8 @@ import (
 type Select struct {
 	hover   pick.Hit
 	hovered bool
-	grip    *grip // while the button is down
+	grip    *grip       // while the button is down
+	last    *[2]float64 // device pixels of the last click, for taking what lies below on the next
 	snap    *pick.Snap
 	fault   string
 }
@@ -27,9 +28,11 @@ type grip struct {
 	to       exact.Pt
 	moved    bool // the pointer went farther than a click does
 	edit     plan.Edit
-	toggle   bool    // pressed with Shift
-	selected bool    // the hit was selected before
-	heading  float64 // the heading an observer is turned to
+	toggle   bool   // pressed with Shift
+	selected bool   // the hit was selected before
+	again    bool   // pressed where the last click was
+	touch    bool   // the box takes what it touches
+	label    string // the measure beside the pointer, where it is not a distance
 }
 
 // dragStart is how far the pointer goes before a press becomes a drag, in px at 100 %.
@@ -45,13 +48,42 @@ func (t *Select) Down(h Host, e Pointer) {
 		}
 		return
 	}
-	t.grip.selected = slices.Contains(h.Selection(), hit.Ref)
+	g := t.grip
+	if t.last != nil && e.Clicks == 1 && math.Hypot(e.X-t.last[0], e.Y-t.last[1]) < dragStart*h.Camera().K && !g.handle() {
+		if below, ok := selectedUnder(h, e); ok {
+			g.hit, g.again = below, true
+		}
+	}
+	g.selected = slices.Contains(h.Selection(), g.hit.Ref)
 	switch {
-	case e.Shift && !t.grip.selected:
+	case e.Shift && !g.selected:
 		h.Select(append(slices.Clone(h.Selection()), hit.Ref)...)
-	case !e.Shift && !t.grip.selected:
+	case !e.Shift && !g.selected:
 		h.Select(hit.Ref)
 	}
+}
+
+// selectedUnder returns the only selected item when it lies under the pointer, on top or not.
+func selectedUnder(h Host, e Pointer) (pick.Hit, bool) {
+	sel := h.Selection()
+	if len(sel) != 1 {
+		return pick.Hit{}, false
+	}
+	under := pick.Under(h.Plan(), h.Camera(), e.X, e.Y)
+	if i := slices.IndexFunc(under, func(u pick.Hit) bool { return u.Ref == sel[0] }); i >= 0 {
+		return under[i], true
+	}
+	return pick.Hit{}, false
+}
+
+// below returns the item under the pointer that lies below the held one, from the lowest round to the top.
+func (g *grip) below(h Host, e Pointer) plan.Ref {
+	under := pick.Under(h.Plan(), h.Camera(), e.X, e.Y)
+	i := slices.IndexFunc(under, func(u pick.Hit) bool { return u.Ref == g.hit.Ref })
+	if len(under) == 0 {
+		return g.hit.Ref
+	}
+	return under[(i+1)%len(under)].Ref
 }
 
 // Move drags what is held, or shows what could be.
@@ -64,7 +96,7 @@ func (t *Select) Move(h Host, e Pointer) {
 	if !g.moved && math.Hypot(e.X-g.x, e.Y-g.y) < dragStart*h.Camera().K {
 		return
 	}
-	g.moved = true
+	g.moved, g.touch, g.label = true, e.Ctrl, ""
 	g.to = h.Camera().Grid(e.X, e.Y)
 	if !g.on {
 		return
@@ -86,10 +118,13 @@ func (t *Select) Up(h Host, e Pointer) {
 	if g == nil {
 		return
 	}
-	t.grip, t.snap, t.fault = nil, nil, ""
+	t.grip, t.snap, t.fault, t.last = nil, nil, "", nil
+	if !g.moved {
+		t.last = &[2]float64{e.X, e.Y}
+	}
 	switch {
 	case g.moved && !g.on:
-		in := pick.InBox(h.Plan(), g.from, g.to)
+		in := pick.InBox(h.Plan(), g.from, g.to, e.Ctrl)
 		if g.toggle {
 			in = append(slices.Clone(h.Selection()), in...)
 		}
@@ -100,6 +135,8 @@ func (t *Select) Up(h Host, e Pointer) {
 		h.Cancel()
 	case g.on && g.toggle && g.selected:
 		h.Select(slices.DeleteFunc(slices.Clone(h.Selection()), func(r plan.Ref) bool { return r == g.hit.Ref })...)
+	case g.on && !g.toggle && g.again && g.selected:
+		h.Select(g.below(h, e))
 	case g.on && !g.toggle:
 		h.Select(g.hit.Ref)
 	}
@@ -128,29 +165,23 @@ func (t *Select) Key(h Host, k Key) bool {
 		if len(h.Selection()) == 0 || t.grip != nil {
 			return false
 		}
-		return h.Do(plan.MoveItems{Items: movable(h.Plan(), h.Selection()), By: nudge(k)}) == nil
+		e := nudgeEdit(h.Plan(), h.Selection(), nudge(k))
+		if e == nil {
+			return true // all of it is locked
+		}
+		t.fault = ""
+		if err := h.Do(e); err != nil {
+			t.fault = reason(err)
+		}
+		return true
+	case KeyRune:
+		if t.grip != nil {
+			return false
+		}
+		e := turnedOver(h.Plan(), h.Selection(), k.Rune)
+		return e != nil && h.Do(e) == nil
 	}
 	return false
-}
-
-// nudge is the step of an arrow key: 0.1 m, with Shift 1 m, with Ctrl 1 cm.
-func nudge(k Key) exact.Vec {
-	step := int32(1000)
-	switch {
-	case k.Shift:
-		step = 10000
-	case k.Ctrl:
-		step = 100
-	}
-	switch k.Name {
-	case KeyLeft:
-		return exact.Vec{X: -step}
-	case KeyRight:
-		return exact.Vec{X: step}
-	case KeyUp:
-		return exact.Vec{Y: step}
-	}
-	return exact.Vec{Y: -step}
 }
 
 // Stop lets go without doing anything.
@@ -172,7 +203,7 @@ func (t *Select) Sketch(h Host) Sketch {
 	}
 	g := t.grip
 	if g == nil || !g.moved {
-		s.Handles = handles(h.Plan(), h.Selection())
+		s.Handles, s.Knobs = handles(h.Plan(), h.Selection()), knobs(h)
 		return s
 	}
 	if !g.on {
@@ -187,21 +218,63 @@ func (t *Select) Sketch(h Host) Sketch {
 
 // Hint says what the next click does.
 func (t *Select) Hint(h Host) string {
+	g := t.grip
 	switch {
-	case t.grip != nil && t.grip.moved && t.grip.on:
-		return "release to put it down, Esc to leave it where it was"
-	case t.grip != nil && t.grip.moved:
-		return "release to select what lies in the box"
-	case t.hovered && t.hover.Part == pick.Heading:
-		return "drag to turn, with Shift in steps of 15°"
-	case t.hovered && t.hover.Part == pick.Corner:
-		return "drag to move this corner"
+	case g != nil && g.moved && g.on:
+		return "release to put it down, Esc to leave it where it was; Ctrl: without snapping"
+	case g != nil && g.moved && g.touch:
+		return "release to select all that the box touches"
+	case g != nil && g.moved:
+		return "release to select what lies inside the box, with Ctrl also what it touches"
 	case t.hovered:
-		return "click to select, drag to move"
+		return t.hoverHint(h)
 	case len(h.Selection()) > 0:
-		return "arrows nudge, Delete takes away"
+		return selectionHint(h.Selection())
 	}
-	return "click an item, or drag a box around some"
+	return "click an item, or drag a box around some; Shift adds"
+}
+
+// hoverHint says what a drag or a click on what is under the pointer does.
+func (t *Select) hoverHint(h Host) string {
+	if locked(h.Plan(), t.hover.Ref) {
+		return "click to select; it is locked and stays where it is"
+	}
+	switch t.hover.Part {
+	case pick.Heading:
+		return "drag to turn, with Shift in steps of 15°"
+	case pick.View:
+		return "drag to open or close the view angle, with Shift in steps of 15°; to behind for all round"
+	case pick.Range:
+		return "drag to change how far it sees"
+	case pick.FaceEnd:
+		return "drag this end of the face"
+	case pick.Corner:
+		return "drag to move this corner"
+	}
+	if t.last != nil && slices.Contains(h.Selection(), t.hover.Ref) {
+		return "drag to move; click again for what lies below; Shift adds and takes away"
+	}
+	if t.hover.Ref.Kind == plan.KindOpening {
+		return "click to select, drag along its wall or into another"
+	}
+	return "click to select, drag to move; Shift adds and takes away"
+}
+
+// selectionHint says which keys change the selection.
+func selectionHint(sel []plan.Ref) string {
+	kind := sel[0].Kind
+	for _, r := range sel {
+		if r.Kind != kind {
+			kind = plan.KindPlan
+		}
+	}
+	switch kind {
+	case plan.KindOpening:
+		return "arrows nudge along the wall, Delete takes away · leaf (K), open or shut (U), hinges (H), side (J)"
+	case plan.KindWall:
+		return "arrows nudge, Delete takes away · J: body centred, left, right"
+	}
+	return "arrows nudge, Delete takes away"
 }
 
 // handles returns the corners of the selected items, at most as many as can be told apart.

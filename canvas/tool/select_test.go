@@ -1,6 +1,7 @@
 package tool_test
 
 import (
+	"slices"
 	"testing"
 
 	"enfilade/canvas/tool"
@@ -250,4 +251,98 @@ func TestSelectHandles(t *testing.T) {
 	s := &tool.Select{}
 	h.click(s, -4, 0)
 	h.points("handles", s.Sketch(h).Handles, exact.Pt{X: -50000}, exact.Pt{})
+}
+
+// TestSelectTakesWhatLiesBelow: clicks on one spot go from item to item under the pointer, and the one taken is the one dragged.
+func TestSelectTakesWhatLiesBelow(t *testing.T) {
+	parts := corner()
+	parts.Observers[0].At = m(3, 3) // on the block
+	h := newHost(t, parts)
+	s := &tool.Select{}
+	var got []plan.Kind
+	for range 4 {
+		h.click(s, 3, 3)
+		got = append(got, h.selected[0].Kind)
+	}
+	if want := []plan.Kind{plan.KindObserver, plan.KindBlock, plan.KindObserver, plan.KindBlock}; !slices.Equal(got, want) {
+		t.Errorf("four clicks took %v, want %v", got, want)
+	}
+	h.drag(s, 3, 3, 4, 3)
+	if o, _ := h.plan.Observer("O1"); o.At != m(3, 3) {
+		t.Error("the drag took the observer, not the block below it")
+	}
+	h.steps("move block")
+	h.click(s, -4, 3)
+	e := h.at(-4, 3)
+	e.Clicks = 2
+	s.Down(h, e)
+	s.Up(h, e)
+	if h.selected[0] != ref(plan.KindTarget, "T1") {
+		t.Error("a double click is no click again")
+	}
+}
+
+func TestSelectBoxTouches(t *testing.T) {
+	h := newHost(t, corner())
+	s := &tool.Select{}
+	box := func(ctrl bool) []plan.Ref {
+		h.press(s, 1, 1)
+		e := h.at(3, 3)
+		e.Ctrl, e.Pressed = ctrl, true
+		s.Move(h, e)
+		s.Up(h, e)
+		return h.selected
+	}
+	if got := box(false); len(got) != 0 {
+		t.Errorf("inside the box lies %v", got)
+	}
+	if got := box(true); len(got) != 1 || got[0] != ref(plan.KindBlock, "B1") {
+		t.Errorf("the box touches %v, want the block", got)
+	}
+}
+
+// TestSelectHangsDoors: with doors selected the keys change how they hang; with walls J moves their body.
+func TestSelectHangsDoors(t *testing.T) {
+	h := newHost(t, corner())
+	s := &tool.Select{}
+	h.typed(s, "h")
+	h.click(s, -2.5, 0)
+	h.typed(s, "khju")
+	if o, _ := firstOpening(h.plan); o.Leaf != plan.SolidLeaf || !o.HingeEnd || !o.SideRight || !o.Shut {
+		t.Errorf("door %+v", o)
+	}
+	h.typed(s, "u")
+	h.steps("change leaf", "hang door", "hang door", "shut door", "open door")
+	h.click(s, -4, 0)
+	h.typed(s, "j")
+	if w, _ := h.plan.Wall("W1"); w.Justify != plan.Left {
+		t.Errorf("wall %+v", w)
+	}
+}
+
+func TestSelectNudgesADoorAlongItsWall(t *testing.T) {
+	h := newHost(t, corner())
+	s := &tool.Select{}
+	h.click(s, -2.5, 0)
+	h.key(s, tool.KeyRight, tool.KeyUp, tool.KeyRight)
+	if o, _ := firstOpening(h.plan); o.At != 22000 {
+		t.Errorf("the door went to %d, want 22000", o.At)
+	}
+	h.steps("move opening", "move opening")
+}
+
+func TestSelectDragsADoorIntoAnotherWall(t *testing.T) {
+	h := newHost(t, corner())
+	s := &tool.Select{}
+	h.press(s, -2.5, 0)
+	h.dragTo(s, -1, 0.5)
+	h.dragTo(s, 0, 2.45)
+	if k := s.Sketch(h); k.Label != "1.95 m  |  0.90 m  |  2.15 m" && k.Label != "2.05 m  |  0.90 m  |  2.05 m" {
+		t.Errorf("label %q", k.Label)
+	}
+	s.Up(h, h.at(0, 2.45))
+	if o, _ := firstOpening(h.plan); o.Wall != "W2" || o.Width != 9000 {
+		t.Errorf("door %+v, want it in W2", o)
+	}
+	h.steps("move opening")
 }

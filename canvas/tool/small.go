@@ -34,6 +34,9 @@ func locked(p *plan.Plan, r plan.Ref) bool {
 	case plan.KindZone:
 		z, _ := p.Zone(r.ID)
 		return z.Locked
+	case plan.KindRoute:
+		t, _ := p.Route(r.ID)
+		return t.Locked
 	}
 	return false
 }
