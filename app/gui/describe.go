@@ -275,6 +275,10 @@ func (w *window) describeOne(p *plan.Plan, r plan.Ref) card {
 		if x, ok := p.Zone(r.ID); ok {
 			w.describeZone(&c, x)
 		}
+	case plan.KindRoute:
+		if x, ok := p.Route(r.ID); ok {
+			w.describeRoute(&c, p, x)
+		}
 	case plan.KindFloor:
 		c.title, c.icon = "Floor", "floor"
 		c.where = "the outline within which all happens"
@@ -289,7 +293,7 @@ func (w *window) describeMany(p *plan.Plan, sel []plan.Ref) card {
 		count[r.Kind]++
 	}
 	var parts []string
-	for k := plan.KindFloor; k <= plan.KindStart; k++ {
+	for k := plan.KindFloor; k <= plan.KindRoute; k++ {
 		if n := count[k]; n > 0 {
 			parts = append(parts, counted(n, k.String()))
 		}

@@ -15,7 +15,9 @@ import (
 func TestBoxTouches(t *testing.T) {
 	count := [2]int{}
 	c := rapid.Int32Range(-6, 6)
-	pt := func(t *rapid.T, name string) exact.Pt { return exact.Pt{X: c.Draw(t, name+"x"), Y: c.Draw(t, name+"y")} }
+	pt := func(t *rapid.T, name string) exact.Pt {
+		return exact.Pt{X: c.Draw(t, name+"x"), Y: c.Draw(t, name+"y")}
+	}
 	rapid.Check(t, func(t *rapid.T) {
 		for range aims {
 			a, b, p, q := pt(t, "a"), pt(t, "b"), pt(t, "p"), pt(t, "q")
