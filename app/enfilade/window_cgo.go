@@ -11,10 +11,15 @@ import (
 )
 
 // openWindow opens the window on the plan of that path, or on an empty plan when the path is empty, and returns when it is
-// closed. The environment's ENFILADE_THEME wins over the theme asked for.
+// closed.
 func openWindow(path, theme string) error {
-	if t := os.Getenv("ENFILADE_THEME"); t == "light" || t == "dark" {
-		theme = t
+	return gui.Run(app.NewWithID, gui.Options{Path: path, Theme: themeFor(theme, os.Getenv("ENFILADE_THEME"))})
+}
+
+// themeFor returns the theme to open in: the one asked for, else the environment's, else none.
+func themeFor(asked, env string) string {
+	if asked == "" && (env == "light" || env == "dark" || env == "system") {
+		return env
 	}
-	return gui.Run(app.NewWithID, gui.Options{Path: path, Theme: theme})
+	return asked
 }

@@ -10,6 +10,7 @@ import (
 type desk struct {
 	parts   parts
 	look    *look
+	setting bool // the look is being set: the toolkit tells that its settings have changed
 	size    fyne.Size
 	windows []*window
 	opened  int // windows so far: each has a number of its own
@@ -63,7 +64,9 @@ func (d *desk) setLook(l *look) {
 	for _, w := range d.windows {
 		w.look = l
 	}
+	d.setting = true
 	d.parts.app.Settings().SetTheme(l)
+	d.setting = false
 	for _, w := range d.windows {
 		w.acted()
 	}

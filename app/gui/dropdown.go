@@ -17,6 +17,7 @@ type dropDown struct {
 	at       int // the open menu
 	commands []command
 	lines    []dropLine
+	alt      bool   // Alt is down and nothing else has happened since
 	under    int    // the command under the pointer or chosen by keys, -1 for none
 	back     func() // gives the focus back
 	page     *canvas.Rectangle
@@ -193,6 +194,17 @@ func (d *dropDown) TypedKey(e *fyne.KeyEvent) {
 	case fyne.KeyReturn, fyne.KeyEnter, fyne.KeySpace:
 		d.run(d.under)
 	}
+}
+
+// KeyDown notes that Alt is pressed.
+func (d *dropDown) KeyDown(e *fyne.KeyEvent) { d.alt = isAlt(e.Name) }
+
+// KeyUp puts the menu away when Alt was pressed alone, as it was opened.
+func (d *dropDown) KeyUp(e *fyne.KeyEvent) {
+	if d.alt && isAlt(e.Name) {
+		d.close()
+	}
+	d.alt = false
 }
 
 // step goes to the next command that can be done.

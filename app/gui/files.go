@@ -24,6 +24,8 @@ import (
 // Names of what is remembered between sessions.
 const (
 	prefTheme  = "theme"
+	prefStill  = "reduce motion"
+	prefScale  = "scale"
 	prefRecent = "recent"
 	maxRecent  = 8
 )

@@ -12,7 +12,13 @@ import (
 // glideTime is how long zooming and fitting take; nothing else in the window moves by itself.
 const glideTime = 120 * time.Millisecond
 
-// glide moves the camera from where it is to another one. It takes the goal at once where the desktop wants no animations.
+// still reports whether nothing is to move by itself: the user or the desktop wants no animations.
+func still() bool {
+	a := fyne.CurrentApp()
+	return a.Preferences().Bool(prefStill) || !a.Settings().ShowAnimations()
+}
+
+// glide moves the camera from where it is to another one. It takes the goal at once where nothing is to move by itself.
 type glide struct {
 	goal view.Camera
 	run  *fyne.Animation // nil when the camera is at rest
@@ -21,7 +27,7 @@ type glide struct {
 // to begins a glide; show is told each camera on the way, the last one being the goal itself.
 func (g *glide) to(from, goal view.Camera, show func(view.Camera)) {
 	g.stop()
-	if !fyne.CurrentApp().Settings().ShowAnimations() || from.W != goal.W || from.H != goal.H || from.K != goal.K || from.Scale <= 0 {
+	if still() || from.W != goal.W || from.H != goal.H || from.K != goal.K || from.Scale <= 0 {
 		show(goal)
 		return
 	}

@@ -157,7 +157,7 @@ func (w *window) toggleSide() {
 // setTheme changes the look and remembers it.
 func (w *window) setTheme(choice string) {
 	w.app.Preferences().SetString(prefTheme, choice)
-	w.desk.setLook(&look{choice: choice})
+	w.desk.setLook(&look{choice: choice, silent: w.look.silent})
 }
 
 // showKeys shows the page of keys.
@@ -170,7 +170,7 @@ func (w *window) showKeys() {
 		{"Ctrl+R, Ctrl+M", "rotate, mirror: type the measures or click in the plan"}, {"Ctrl+A, Ctrl+Shift+A", "select all, or all of the same kind"},
 		{"Ctrl+L, Ctrl+H", "lock, hide; with Shift unlock and show everything"},
 		{"arrows", "nudge by 0.1 m, with Shift 1 m, with Ctrl 1 cm"}, {"Delete", "take the selection away"},
-		{"wheel, + and −", "zoom at the pointer"}, {"middle button, Space and drag", "pan"}, {"0, Home", "fit the plan"},
+		{"wheel, + and −", "zoom at the pointer"}, {"middle button, Space and drag", "pan"}, {"0, Home", "fit the plan"}, {"Alt, F10", "the menus"},
 		{"Ctrl+Z, Ctrl+Shift+Z", "undo, redo"}, {"Ctrl+S, Ctrl+O, Ctrl+N", "save, open, new"},
 	}
 	box := pile()

@@ -112,6 +112,8 @@ func (w *window) viewMenu() []command {
 	for _, t := range []struct{ name, choice string }{{"Light", themeLight}, {"Dark", themeDark}, {"As the system", themeSystem}} {
 		list = append(list, command{label: t.name, inner: true, do: func() { w.setTheme(t.choice) }, checked: w.look.choice == t.choice})
 	}
+	list = append(list, w.scaleMenu()...)
+	list = append(list, command{label: "Reduce motion", do: w.toggleStill, checked: w.app.Preferences().Bool(prefStill), rule: true})
 	return list
 }
 

@@ -42,12 +42,14 @@ func Run(newApp func(id string) fyne.App, o Options) error {
 	if choice == "" {
 		choice = a.Preferences().StringWithFallback(prefTheme, themeSystem)
 	}
+	startScale(a.Preferences())
 	d := newDesk(parts{
 		app:    a,
 		solver: func() live.Solver { return study.NewSolver() },
 		do:     fyne.Do,
 		now:    time.Now,
-	}, &look{choice: choice})
+	}, &look{choice: choice, silent: systemIsSilent()})
+	d.hearSystem()
 	if o.Width > 0 && o.Height > 0 {
 		d.size = fyne.NewSize(o.Width, o.Height)
 	}

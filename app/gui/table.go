@@ -1,8 +1,6 @@
 package gui
 
 import (
-	"fmt"
-
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/container"
@@ -15,8 +13,8 @@ import (
 	"enfilade/solver/study"
 )
 
-// table lists the approaches from every start to every target. The row under the pointer is shown in the plan while it
-// is there; a click chooses it.
+// table lists the approaches to every target under the start they are from. The row under the pointer is shown in the plan
+// while it is there; a click chooses it.
 type table struct {
 	w     *window
 	box   *fyne.Container
@@ -24,7 +22,9 @@ type table struct {
 	empty *fyne.Container
 	list  *widget.List
 	rows  []row
+	lines []int // what the list shows: indices of rows, and for the heading above a row -1 less its index
 	seen  tableKey
+	fresh freshRows
 }
 
 // tableKey is all that the table depends on.
@@ -43,18 +43,25 @@ type row struct {
 	mark        string // icon
 	stale       bool
 	chosen      bool
+	fresh       bool   // it has changed just now
 	tip         string // what is said when the pointer rests on it
 }
 
 func newTable(w *window) *table {
 	t := &table{w: w, count: caption("").right()}
-	t.list = widget.NewList(func() int { return len(t.rows) }, func() fyne.CanvasObject { return newTableRow(t) },
-		func(i widget.ListItemID, o fyne.CanvasObject) { o.(*tableRow).put(t.rows[i]) })
+	t.list = widget.NewList(func() int { return len(t.lines) }, func() fyne.CanvasObject { return newTableRow(t) },
+		func(i widget.ListItemID, o fyne.CanvasObject) {
+			if n := t.lines[i]; n < 0 {
+				o.(*tableRow).putHead(t.rows[-1-n])
+			} else {
+				o.(*tableRow).put(t.rows[n])
+			}
+		})
 	t.list.HideSeparators = true
 	t.empty = pile(body("No approaches yet."), caption("Put down a start (B) and a target (T): the walk to"),
 		caption("first sight is worked out as you draw."))
 	head := around(nil, nil, heading("Approaches"), nil, t.count)
-	columns := container.New(rowLayout{}, newText("", assets.Regular, 11, roleInk3), newText("from, to", assets.Regular, 11, roleInk3),
+	columns := container.New(rowLayout{}, newText("", assets.Regular, 11, roleInk3), newText("target", assets.Regular, 11, roleInk3),
 		newText("first sight", assets.Regular, 11, roleInk3).right(), newText("full walk", assets.Regular, 11, roleInk3).right())
 	top := pile(inset(18, 14, 18, 4, head), columns)
 	t.box = around(pile(hairline(), top), nil, nil, nil,
@@ -71,6 +78,13 @@ func (t *table) update() {
 	}
 	t.seen = key
 	rows := tableRows(p, r)
+	t.fresh.compare(t.w, rows)
+	t.show(rows)
+}
+
+// show puts rows in the list.
+func (t *table) show(rows []row) {
+	t.fresh.mark(rows, t.w.now())
 	t.empty.Hidden = len(rows) > 0
 	switch n := len(rows); n {
 	case 0:
@@ -81,7 +95,13 @@ func (t *table) update() {
 	if same(rows, t.rows) {
 		return
 	}
-	t.rows = rows
+	t.rows, t.lines = rows, t.lines[:0]
+	for i := range rows {
+		if i == 0 || rows[i].start != rows[i-1].start {
+			t.lines = append(t.lines, -1-i)
+		}
+		t.lines = append(t.lines, i)
+	}
 	t.empty.Refresh()
 	t.list.Refresh()
 }
@@ -148,24 +168,26 @@ type tableRow struct {
 	widget.BaseWidget
 	t           *table
 	row         row
+	head        bool // it is the heading of the row's start
 	hovered     bool
 	mark        *icon
-	walk        *inkText
+	from, walk  *inkText
 	first, full *inkText
 }
 
 func newTableRow(t *table) *tableRow {
 	r := &tableRow{t: t, mark: newIcon("unknown", 16, roleInk3), walk: body("").shrinking(),
+		from:  newText("", assets.Semibold, 12.5, roleInk).shrinking(),
 		first: newText("", assets.Bold, 12.5, roleInk).right(), full: newText("", assets.Regular, 12, roleInk2).right()}
 	r.ExtendBaseWidget(r)
 	return r
 }
 
 func (r *tableRow) put(w row) {
-	if r.row == w {
+	if r.row == w && !r.head {
 		return
 	}
-	r.row = w
+	r.row, r.head = w, false
 	role := roleInk
 	switch {
 	case w.stale, w.mark == "unknown":
@@ -174,7 +196,7 @@ func (r *tableRow) put(w row) {
 		role = roleRed
 	}
 	r.mark.set(w.mark, role)
-	r.walk.set(fmt.Sprintf("%s → %s", w.from, w.to))
+	r.walk.set(w.to)
 	r.first.role, r.full.role = roleInk, roleInk2
 	if w.stale {
 		r.first.role, r.full.role = roleInk3, roleInk3
@@ -184,10 +206,24 @@ func (r *tableRow) put(w row) {
 	r.Refresh()
 }
 
-// Tapped chooses the row's start and target.
+// putHead makes the line the heading of the start that a row is from.
+func (r *tableRow) putHead(w row) {
+	if r.head && r.row.pair == w.pair && r.row.from == w.from {
+		return
+	}
+	r.row, r.head = w, true
+	r.row.chosen, r.row.fresh = false, false
+	r.from.set("from " + w.from)
+	r.Refresh()
+}
+
+// Tapped chooses the row's start and target, or of a heading the start.
 func (r *tableRow) Tapped(*fyne.PointEvent) {
 	w := r.t.w
-	w.results.start, w.results.target = r.row.start, r.row.target
+	w.results.start = r.row.start
+	if !r.head {
+		w.results.target = r.row.target
+	}
 	var keep []plan.Ref
 	for _, ref := range w.session.Selection() {
 		if ref.Kind != plan.KindStart && ref.Kind != plan.KindTarget {
@@ -200,6 +236,9 @@ func (r *tableRow) Tapped(*fyne.PointEvent) {
 
 // MouseIn shows the row's approach in the plan.
 func (r *tableRow) MouseIn(*desktop.MouseEvent) {
+	if r.head {
+		return
+	}
 	r.hovered = true
 	p := r.row.pair
 	r.t.w.results.hover = &p
@@ -223,7 +262,8 @@ func (r *tableRow) MouseOut() {
 // CreateRenderer is for the toolkit.
 func (r *tableRow) CreateRenderer() fyne.WidgetRenderer {
 	cells := container.New(rowLayout{}, r.mark, r.walk, r.first, r.full)
-	x := &tableRowRenderer{r: r, ground: canvas.NewRectangle(nil), bar: canvas.NewRectangle(nil), cells: cells}
+	x := &tableRowRenderer{r: r, ground: canvas.NewRectangle(nil), bar: canvas.NewRectangle(nil), cells: cells,
+		from: inset(18, 6, 18, 0, r.from)}
 	x.Refresh()
 	return x
 }
@@ -231,13 +271,14 @@ func (r *tableRow) CreateRenderer() fyne.WidgetRenderer {
 type tableRowRenderer struct {
 	r           *tableRow
 	ground, bar *canvas.Rectangle
-	cells       *fyne.Container
+	cells, from *fyne.Container
 }
 
 func (x *tableRowRenderer) Layout(s fyne.Size) {
 	x.ground.Resize(s)
 	x.bar.Resize(fyne.NewSize(3, s.Height))
 	x.cells.Resize(s)
+	x.from.Resize(s)
 }
 func (x *tableRowRenderer) MinSize() fyne.Size { return fyne.NewSize(200, 28) }
 func (x *tableRowRenderer) Refresh() {
@@ -246,15 +287,19 @@ func (x *tableRowRenderer) Refresh() {
 	switch {
 	case x.r.row.chosen:
 		x.ground.FillColor, x.bar.FillColor = p.Field, p.Ink
+	case x.r.row.fresh:
+		x.ground.FillColor = p.Field
 	case x.r.hovered:
 		x.ground.FillColor = faded(p.Ink, 7)
 	}
+	x.cells.Hidden, x.from.Hidden = x.r.head, !x.r.head
 	x.cells.Refresh()
+	x.from.Refresh()
 	canvas.Refresh(x.ground)
 	canvas.Refresh(x.bar)
 }
 func (x *tableRowRenderer) Objects() []fyne.CanvasObject {
-	return []fyne.CanvasObject{x.ground, x.bar, x.cells}
+	return []fyne.CanvasObject{x.ground, x.bar, x.cells, x.from}
 }
 func (x *tableRowRenderer) Destroy() {}
 
@@ -266,7 +311,7 @@ func (rowLayout) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(20
 
 // Layout is for the toolkit.
 func (rowLayout) Layout(o []fyne.CanvasObject, s fyne.Size) {
-	const side, firstWide, fullWide = 18, 58, 54
+	const side, firstWide, fullWide = 18, 54, 50
 	place := func(o fyne.CanvasObject, x, w float32) {
 		o.Move(fyne.NewPos(x, 0))
 		o.Resize(fyne.NewSize(w, s.Height))

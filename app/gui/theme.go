@@ -2,6 +2,8 @@ package gui
 
 import (
 	"image/color"
+	"os"
+	"runtime"
 
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/theme"
@@ -20,6 +22,7 @@ const (
 // look is the toolkit's theme: ink on paper, without colour.
 type look struct {
 	choice string // themeSystem, themeLight or themeDark
+	silent bool   // the system has not said which it wants; what the toolkit then takes it to want does not count
 }
 
 // dark reports whether the look is the dark one when the system asks for the given variant.
@@ -30,7 +33,31 @@ func (l *look) dark(v fyne.ThemeVariant) bool {
 	case themeDark:
 		return true
 	}
-	return v == theme.VariantDark
+	return v == theme.VariantDark && !l.silent
+}
+
+// systemIsSilent reports whether the system may have no say in how windows look: elsewhere than on a free Unix desktop it always
+// has one, and there the environment may speak for it.
+func systemIsSilent() bool {
+	switch runtime.GOOS {
+	case "windows", "darwin":
+		return false
+	}
+	return os.Getenv("FYNE_THEME") == ""
+}
+
+// hearSystem takes note when the system says which look it wants: a change of the toolkit's settings that is not the desk's own.
+func (d *desk) hearSystem() {
+	d.parts.app.Settings().AddListener(func(fyne.Settings) {
+		if d.setting {
+			return
+		}
+		d.parts.do(func() {
+			if d.look.silent {
+				d.setLook(&look{choice: d.look.choice})
+			}
+		})
+	})
 }
 
 // Color returns the colour of a part of the toolkit's widgets.

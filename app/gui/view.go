@@ -34,6 +34,7 @@ type planView struct {
 	pressed desktop.MouseButton // the button that is down over the picture, 0 for none
 	panning bool
 	space   bool
+	alt     bool      // Alt is down and nothing else has happened since
 	clicked time.Time // for double clicks
 	at      fyne.Position
 }
@@ -64,6 +65,7 @@ func (v *planView) pointer(p fyne.Position, clicks int) tool.Pointer {
 // MouseDown gives the picture the focus, and the tool a press; the middle button, and the first one with Space, pan.
 func (v *planView) MouseDown(e *desktop.MouseEvent) {
 	v.grab()
+	v.alt = false
 	if v.pressed != 0 {
 		return
 	}
@@ -165,6 +167,7 @@ func (v *planView) MouseOut() {
 
 // Scrolled zooms at the pointer: a notch is 25 units, and the toolkit may send many at once.
 func (v *planView) Scrolled(e *fyne.ScrollEvent) {
+	v.alt = false
 	notches := math.Max(-2, math.Min(2, float64(e.Scrolled.DY)/25))
 	v.zoom(e.Position, math.Pow(1.2, notches))
 }
@@ -231,12 +234,15 @@ func (v *planView) FocusGained() {}
 
 // FocusLost takes the ring away.
 func (v *planView) FocusLost() {
-	v.space = false
+	v.space, v.alt = false, false
 	if v.ringed {
 		v.ringed = false
 		v.Refresh()
 	}
 }
+
+// isAlt reports whether a key is either Alt.
+func isAlt(name fyne.KeyName) bool { return name == desktop.KeyAltLeft || name == desktop.KeyAltRight }
 
 // TypedKey is for the toolkit.
 func (v *planView) TypedKey(e *fyne.KeyEvent) { v.w.typedKey(e.Name) }
@@ -247,8 +253,9 @@ func (v *planView) TypedRune(r rune) { v.w.typedRune(r) }
 // AcceptsTab reports whether Tab is for the tool: it goes between the fields at the pointer.
 func (v *planView) AcceptsTab() bool { return v.w.sketch.Types }
 
-// KeyDown notes that Space is held, for panning.
+// KeyDown notes that Space is held, for panning, and that Alt is pressed with nothing else.
 func (v *planView) KeyDown(e *fyne.KeyEvent) {
+	v.alt = isAlt(e.Name)
 	if e.Name == fyne.KeySpace {
 		v.space = true
 	}
@@ -256,6 +263,12 @@ func (v *planView) KeyDown(e *fyne.KeyEvent) {
 
 // KeyUp notes that Space is let go, and draws the focus ring on the picture's inner edge when Tab led here.
 func (v *planView) KeyUp(e *fyne.KeyEvent) {
+	if v.alt && isAlt(e.Name) && v.w.modal == nil && v.pressed == 0 {
+		v.alt = false
+		v.w.bar.drop.open(0)
+		return
+	}
+	v.alt = false
 	switch e.Name {
 	case fyne.KeySpace:
 		v.space = false

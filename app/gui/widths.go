@@ -1,6 +1,8 @@
 package gui
 
 import (
+	"strings"
+
 	"fyne.io/fyne/v2"
 
 	"enfilade/solver/study"
@@ -39,11 +41,15 @@ func tipWords(a study.Approach) string {
 // showTip tells what the row has no column for, below it, when the pointer rests there.
 func (r *tableRow) showTip() {
 	w := r.t.w
-	if r.row.tip == "" {
+	tip := r.row.tip
+	if s := r.walk.Size(); fitted(r.walk.text, r.walk.weight, r.walk.size, s.Width) != r.walk.text { // the name is cut
+		tip = strings.TrimSuffix(r.row.to+": "+tip, ": ")
+	}
+	if tip == "" {
 		w.tips.hide()
 		return
 	}
-	w.tips.after(tipDelay, r.row.tip, func() fyne.Position {
+	w.tips.after(tipDelay, tip, func() fyne.Position {
 		return w.app.Driver().AbsolutePositionForObject(r).AddXY(30, r.Size().Height+2)
 	})
 }
