@@ -25,7 +25,7 @@ func (w *window) turning() []plan.Ref {
 }
 
 // whatTurns are the choices between the items and copies of theirs.
-var whatTurns = []string{"the items themselves", "a copy of them"}
+var whatTurns = []string{"these items", "a copy"}
 
 // adds names what an edit of items adds when it makes copies, else the items.
 func adds(w *window, refs []plan.Ref, copies bool) []plan.Ref {
@@ -47,7 +47,7 @@ func (w *window) askRotate() {
 	}
 	about := middleOf(lo, hi)
 	p := &editPanel{title: "Rotate", hint: "click the point to turn about, Enter rotates, Esc leaves it",
-		rows: []*panelRow{{label: "Angle", unit: "° to the left", text: "90"}, {label: "Turn", choices: whatTurns}}}
+		rows: []*panelRow{{label: "To the left by", unit: "°", text: "90"}, {label: "Turn", choices: whatTurns}}}
 	p.edit = func() (plan.Edit, error) {
 		deg, err := parseNumber(p.rows[0].entry.Text)
 		return plan.Rotate{Items: refs, About: about, Degrees: deg, Copy: p.rows[1].chosen == 1}, err

@@ -25,6 +25,7 @@ const (
 	StageApproaches
 	StageSeenFrom
 	StageDistances // only when it is asked for
+	StageFindings
 	StageWidths
 	StageReach // only when it is asked for
 	NumStages
@@ -33,11 +34,11 @@ const (
 // String names the stage as the window says it: what is being worked out.
 func (s Stage) String() string {
 	return [...]string{"the mesh of the plan", "what observers see", "approaches", "where targets are seen from",
-		"walking distances", "clear widths", "how far zones are"}[s]
+		"walking distances", "problems of the plan", "clear widths", "how far zones are"}[s]
 }
 
 // rests reports whether the stage waits until the plan is at rest: a draft, which a drag shows on its way, goes without.
-func (s Stage) rests() bool { return s >= StageWidths }
+func (s Stage) rests() bool { return s >= StageFindings }
 
 // wants reports whether a stage is to answer.
 func (a *Ask) wants(s Stage) bool {
@@ -59,6 +60,7 @@ type Solver interface {
 	Sights(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
 	Approaches(ctx context.Context, p *plan.Plan) ([]study.Approach, error)
 	SeenFrom(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
+	Findings(ctx context.Context, p *plan.Plan, rows []study.Approach) ([]plan.Finding, error)
 	ClearWidths(ctx context.Context, p *plan.Plan, rows []study.Approach) error // rows as Approaches gave them
 	Field(ctx context.Context, p *plan.Plan, start string) (*study.Field, error)
 	Reaches(ctx context.Context, p *plan.Plan) ([]study.Reach, error)
@@ -82,6 +84,7 @@ type Update struct {
 	Sights     []study.Sight    // of StageSights and StageSeenFrom
 	Approaches []study.Approach // of StageApproaches, and of StageWidths: the same with their clear widths
 	Problems   []plan.Problem   // of StageMesh: what is wrong with the drawing
+	Findings   []plan.Finding   // of StageFindings: all that looks wrong, with what would mend it
 	Distances  *Distances       // of StageDistances
 	Reach      []study.Reach    // of StageReach
 	Field      FieldAsk         // as in the Ask
@@ -104,7 +107,7 @@ type job struct {
 // share is the part of a whole study's time that each stage takes, as a study that is solved at once tells it.
 // What is not asked for takes none.
 var share = [NumStages]float64{StageMesh: 0.5, StageSights: 0.05, StageApproaches: 0.2, StageSeenFrom: 0.05, StageDistances: 0.2,
-	StageWidths: 0.2, StageReach: 0.2}
+	StageFindings: 0.02, StageWidths: 0.2, StageReach: 0.2}
 
 // Progress is how far the study of a plan is.
 type Progress struct {
@@ -242,7 +245,7 @@ func (r *Runner) stage(ctx context.Context, j *job, s Stage) (u Update) {
 	u = Update{Rev: j.Rev, Plan: j.Plan, Draft: j.Draft, Field: j.Field, Stage: s}
 	defer func() {
 		if v := recover(); v != nil {
-			u.Sights, u.Approaches, u.Problems, u.Distances, u.Reach = nil, nil, nil, nil, nil
+			u.Sights, u.Approaches, u.Problems, u.Distances, u.Reach, u.Findings = nil, nil, nil, nil, nil, nil
 			u.Err = &Crash{Stage: s, Value: v, Stack: debug.Stack()}
 			r.solver = r.fresh()
 			j.note(u)
@@ -272,6 +275,8 @@ func (r *Runner) stage(ctx context.Context, j *job, s Stage) (u Update) {
 		u.Sights, u.Err = r.solver.SeenFrom(ctx, j.Plan)
 	case StageDistances:
 		u.Distances, u.Err = r.distances(ctx, j)
+	case StageFindings:
+		u.Findings, u.Err = r.solver.Findings(ctx, j.Plan, j.rows)
 	case StageReach:
 		u.Reach, u.Err = r.solver.Reaches(ctx, j.Plan)
 	case StageWidths:

@@ -160,12 +160,15 @@ type ProblemKind uint8
 
 // The kinds of problem.
 const (
-	ProblemInside  ProblemKind = iota + 1 // a mark stands inside a body
-	ProblemOutside                        // an item lies outside the floor
-	ProblemShape                          // a ring or chain that encloses or spans nothing
-	ProblemOpening                        // an opening that does not fit its wall
-	ProblemMissing                        // an item names another that is not there
-	ProblemLow                            // a low wall without a height
-	ProblemMoved                          // a mark less than 1 mm inside a face was moved to the free side
-	ProblemTight                          // no room for the walker's body where a walk begins
+	ProblemInside    ProblemKind = iota + 1 // a mark stands inside a body
+	ProblemOutside                          // an item lies outside the floor
+	ProblemShape                            // a ring or chain that encloses or spans nothing
+	ProblemOpening                          // an opening that does not fit its wall
+	ProblemMissing                          // an item names another that is not there
+	ProblemLow                              // a low wall without a height
+	ProblemMoved                            // a mark less than 1 mm inside a face was moved to the free side
+	ProblemTight                            // no room for the walker's body where a walk begins
+	ProblemGap                              // a wall ends shortly before another thing
+	ProblemDouble                           // walls lie on one another
+	ProblemUnreached                        // nobody can walk to a place that sees a target
 )
