@@ -18,6 +18,7 @@ type editing struct {
 	said       said
 	panel      *editPanel      // nil when none is open
 	panelLayer *fyne.Container // over the picture
+	problems   *problems
 }
 
 // editMenu is the Edit menu: what is done to the selection.

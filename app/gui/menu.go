@@ -92,6 +92,7 @@ func (w *window) studyMenu() []command {
 		{label: "Next observer", do: func() { w.next(kindObserver) }, dead: p.NumObservers() == 0},
 		{label: "Next start", do: func() { w.next(kindStart) }, dead: p.NumStarts() == 0},
 		{label: "Next target", do: func() { w.next(kindTarget) }, dead: p.NumTargets() == 0},
+		{label: "Next problem", do: w.problems.next, dead: len(w.problems.found) == 0, rule: true},
 		{label: "Measure", icon: "measure", key: "M", do: func() { w.choose(1) }, rule: true},
 	}
 }

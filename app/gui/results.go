@@ -196,6 +196,8 @@ func (w *window) answered(s *live.State) {
 	}
 	w.results.answer(s)
 	w.report()
+	w.problems.update()
+	w.status.count(w.session.Plan(), w.problems)
 	w.view.Refresh()
 	w.form.update(w.session.Plan(), w.session.Selection())
 	w.table.update()

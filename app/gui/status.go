@@ -28,7 +28,7 @@ func newStatus() *status {
 		place: newText("", assets.Medium, 12, roleInk), snap: caption(""), counts: caption(""), solve: caption(""),
 		hint: caption("").shrinking().right(), progress: newProgress(),
 	}
-	left := container.NewHBox(fixed(146, s.place), tick(), fixed(128, s.snap), tick(), fixed(150, s.counts), tick(), fixed(240, s.solve), s.progress)
+	left := container.NewHBox(fixed(146, s.place), tick(), fixed(128, s.snap), tick(), fixed(212, s.counts), tick(), fixed(240, s.solve), s.progress)
 	row := container.New(layout.NewBorderLayout(nil, nil, left, nil), left, inset(12, 0, 0, 0, s.hint))
 	s.box = on(roleChrome, around(hairline(), nil, nil, nil, inset(14, 4, 18, 5, row)))
 	return s
@@ -71,14 +71,16 @@ func unitOf(unit string) string {
 	return unit
 }
 
-// count shows how much there is in the plan.
-func (s *status) count(p *plan.Plan) {
-	switch b := p.NumBlocks(); {
-	case b == 0:
-		s.counts.set(counted(p.NumWalls(), "wall"))
-	default:
-		s.counts.set(counted(p.NumWalls(), "wall") + ", " + counted(b, "block"))
+// count shows how much there is in the plan, and how much of it looks wrong.
+func (s *status) count(p *plan.Plan, wrong *problems) {
+	text := counted(p.NumWalls(), "wall")
+	if b := p.NumBlocks(); b > 0 {
+		text += ", " + counted(b, "block")
 	}
+	if n := len(wrong.found); n > 0 {
+		text += ", " + problemCount(n)
+	}
+	s.counts.set(text)
 }
 
 func counted(n int, what string) string {

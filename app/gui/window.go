@@ -130,7 +130,8 @@ func (w *window) build() {
 func (w *window) sideColumn() *fyne.Container {
 	split := container.NewVSplit(w.form.box, w.table.box)
 	split.SetOffset(0.47)
-	return container.NewStack(newPaper(rolePanel), around(nil, nil, hairline(), nil, split))
+	w.problems = newProblems(w)
+	return container.NewStack(newPaper(rolePanel), around(nil, w.problems.box, hairline(), nil, split))
 }
 
 // frame lays out rail, rule, picture, foot and right column.
@@ -193,7 +194,7 @@ func (w *window) acted() {
 	w.status.at(w.view.cam.Grid(w.view.place()), p.Sheet().Unit, w.view.inside)
 	w.status.snap.set(snapText(w.sketch.Snap, w.view.cam, w.snapper.On))
 	w.status.hint.set(w.onFoot(w.hint()))
-	w.status.count(p)
+	w.status.count(p, w.problems)
 	w.form.update(p, w.session.Selection())
 	w.table.update()
 	w.foot.update(w)
