@@ -1,5 +1,7 @@
 package exact
 
+import "math"
+
 // inCircleBound times the permanent of the in-circle determinant bounds the rounding error of its float64 evaluation when
 // the coordinate differences are exact, as they are here: (10 + 96 u) u with u = 2^-53.
 // Source: Shewchuk, "Adaptive precision floating-point arithmetic and fast robust geometric predicates", DCG 18, 1997,
@@ -18,7 +20,7 @@ func InCircle(a, b, c, d Pt) int {
 	ab1, ab2 := ax*by, ay*bx
 	al, bl, cl := ax*ax+ay*ay, bx*bx+by*by, cx*cx+cy*cy
 	det := al*(bc1-bc2) + bl*(ca1-ca2) + cl*(ab1-ab2)
-	bound := inCircleBound * (al*(abs(bc1)+abs(bc2)) + bl*(abs(ca1)+abs(ca2)) + cl*(abs(ab1)+abs(ab2)))
+	bound := inCircleBound * (al*(math.Abs(bc1)+math.Abs(bc2)) + bl*(math.Abs(ca1)+math.Abs(ca2)) + cl*(math.Abs(ab1)+math.Abs(ab2)))
 	switch {
 	case det > bound:
 		return 1
@@ -32,11 +34,4 @@ func inCircleExact(a, b, c, d Pt) int {
 	u, v, w := a.Sub(d), b.Sub(d), c.Sub(d)
 	sum := Mul(u.Len2(), v.Cross(w)).Add(Mul(v.Len2(), w.Cross(u))).Add(Mul(w.Len2(), u.Cross(v)))
 	return sum.Sign()
-}
-
-func abs(x float64) float64 {
-	if x < 0 {
-		return -x
-	}
-	return x
 }

@@ -1,5 +1,7 @@
 package exact
 
+import "math"
+
 // Line is a directed line through a grid point: At + t·Dir. Its left side is the positive one.
 type Line struct {
 	At  Pt
@@ -37,7 +39,7 @@ func SideOfMeet(i, j, k Line) int {
 	// additions by 2u of the sum of magnitudes together; 8u covers them with room.
 	p, q, r := float64(ci)*float64(jk), float64(cj)*float64(ki), float64(ck)*float64(ij)
 	det := p + q + r
-	bound := 0x1p-50 * (abs(p) + abs(q) + abs(r))
+	bound := 0x1p-50 * (math.Abs(p) + math.Abs(q) + math.Abs(r))
 	switch {
 	case det > bound:
 		return 1
