@@ -54,36 +54,48 @@ type triangles interface {
 	Neighbour(t int32, i int) (tri, constraint int32)
 }
 
-// flood walks from triangle to triangle for as long as enter accepts the next one, keeping the winding numbers of the place in
-// w, which hold for the first triangle; it tells what each triangle stops, and takes every step back when it has seen what
-// lies behind it. O(triangles entered).
+// flood walks over the mesh for as long as enter accepts the next triangle, face by face, a face being what no edge of the
+// graph parts. It keeps the winding numbers of the place in w, which hold for the first triangle, tells what each triangle
+// stops, and takes every step across an edge back when it has seen what lies behind it. O(triangles entered).
 func (g *Graph) flood(f triangles, w *winding, first int32, enter func(t int32) bool, found func(t int32, s mesh.Tag)) {
-	type step struct {
-		tri  int32
-		edge int32 // constraint crossed to get here, or -1
-		sign int32 // +1 when it was crossed from its right to its left
+	type border struct {
+		tri  int32 // behind it
+		edge int32 // of the graph, or -1
+		sign int32 // +1 when it is crossed from its right to its left
 		back bool
 	}
-	stack := []step{{tri: first, edge: -1}}
-	for len(stack) > 0 {
-		s := stack[len(stack)-1]
-		stack = stack[:len(stack)-1]
-		if s.back {
-			w.cross(g, s.edge, -s.sign)
+	borders := []border{{tri: first, edge: -1}}
+	var face []int32
+	for len(borders) > 0 {
+		b := borders[len(borders)-1]
+		borders = borders[:len(borders)-1]
+		if b.back {
+			w.cross(g, b.edge, -b.sign)
 			continue
 		}
-		if !enter(s.tri) {
+		if !enter(b.tri) {
 			continue
 		}
-		if s.edge >= 0 {
-			w.cross(g, s.edge, s.sign)
-			stack = append(stack, step{edge: s.edge, sign: s.sign, back: true})
+		if b.edge >= 0 {
+			w.cross(g, b.edge, b.sign)
+			borders = append(borders, border{edge: b.edge, sign: b.sign, back: true})
 		}
-		found(s.tri, w.stops())
-		v := f.Corners(s.tri)
-		for i := range 3 {
-			if next, edge := f.Neighbour(s.tri, i); next >= 0 && enter(next) {
-				stack = append(stack, step{tri: next, edge: edge, sign: g.leaving(edge, v[i])})
+		stops := w.stops()
+		found(b.tri, stops)
+		for face = append(face, b.tri); len(face) > 0; {
+			t := face[len(face)-1]
+			face = face[:len(face)-1]
+			for i := range 3 {
+				next, edge := f.Neighbour(t, i)
+				if next < 0 || !enter(next) {
+					continue
+				}
+				if edge >= 0 {
+					borders = append(borders, border{tri: next, edge: edge, sign: g.leaving(edge, f.Corners(t)[i])})
+					continue
+				}
+				found(next, stops)
+				face = append(face, next)
 			}
 		}
 	}

@@ -8,19 +8,24 @@ import (
 	"enfilade/solver/pulse"
 )
 
-// constrainAll forces every edge into the triangulation and restores the Delaunay property around it.
-func (tr *Triangulation) constrainAll(ctx context.Context, edges [][2]int32) error {
+// constrainAll forces every edge into the triangulation and restores the Delaunay property around it. The edges are taken in
+// the order of their first points along the curve.
+func (tr *Triangulation) constrainAll(ctx context.Context, edges [][2]int32, along []int32) error {
 	tr.out = make([]Edge, len(tr.Pts))
 	for t := range tr.tris {
 		for i, v := range tr.tris[t].v {
 			tr.out[v] = EdgeOf(int32(t), i)
 		}
 	}
+	first := make([]int32, len(edges))
 	for k, e := range edges {
-		if err := pulse.Step(ctx, k, len(edges)); err != nil {
+		first[k] = along[e[0]]
+	}
+	for i, k := range byKey(first, len(along)) {
+		if err := pulse.Step(ctx, i, len(edges)); err != nil {
 			return err
 		}
-		if err := tr.constrain(e[0], e[1], int32(k)); err != nil {
+		if err := tr.constrain(along[edges[k][0]], along[edges[k][1]], k); err != nil {
 			return err
 		}
 	}

@@ -1,65 +1,89 @@
 package mesh
 
-// chunk is how many triangles of one open stretch of floor are laid side by side before the layout goes on along the curve:
-// about what a room has.
+import "enfilade/solver/exact"
+
+// chunk is how many triangles of one stretch of floor are laid side by side before the layout goes on along the curve: about
+// what a room has.
 const chunk = 64
 
-// layout orders the triangles so that those that a cone passes one after the other lie near each other in memory: first the
-// open ones, room by room along the curve through the points, then those that are solid, which no cone enters. order[k] is the
-// old index of triangle k, place the inverse. O(n).
-func (tr *Triangulation) layout(solid []Tag) (order, place []int32) {
-	along := tr.alongCurve()
-	order, place = make([]int32, 0, len(along)), make([]int32, len(along))
+// arrange numbers the points as they were given and puts the triangles in their final order, each with its first point in
+// front. pts are the points as given, curve says which of them each point is.
+func (tr *Triangulation) arrange(pts []exact.Pt, curve []int32) {
+	order, place := tr.layout()
+	first := make([]uint8, len(tr.tris))
+	for t := range tr.tris {
+		first[t] = tr.firstCorner(&tr.tris[t])
+	}
+	tris := make([]rawTri, len(order), len(order)+len(order)/8)
+	for k, old := range order {
+		r, q := &tr.tris[old], &tris[k]
+		i := int(first[old])
+		for j := range 3 {
+			q.v[j], q.c[j], q.n[j] = curve[r.v[i]], r.c[i], None
+			if n := r.n[i]; n != None {
+				corner := n.Corner() - int(first[n.Tri()])
+				if corner < 0 {
+					corner += 3
+				}
+				q.n[j] = EdgeOf(place[n.Tri()], corner)
+			}
+			i = inc[i]
+		}
+	}
+	tr.tris, tr.Pts = tris, pts
+	for t := range tr.tris {
+		for i, v := range tr.tris[t].v {
+			tr.out[v] = EdgeOf(int32(t), i)
+		}
+	}
+}
+
+// layout orders the triangles so that those that a cone passes one after the other lie near each other in memory: room by
+// room along the curve, points being numbered along it. order[k] is the old index of triangle k, place the inverse. O(n).
+func (tr *Triangulation) layout() (order, place []int32) {
+	key := make([]int32, len(tr.tris))
+	for t := range tr.tris {
+		v := &tr.tris[t].v
+		key[t] = min(v[0], v[1], v[2])
+	}
+	along := byKey(key, len(tr.Pts))
+	order, place = make([]int32, 0, len(along)), key
 	for t := range place {
 		place[t] = -1
 	}
-	put := func(t int32) {
-		place[t] = int32(len(order))
-		order = append(order, t)
-	}
 	for _, t := range along {
-		if place[t] >= 0 || solid[t].Top > 0 {
+		if place[t] >= 0 {
 			continue
 		}
 		first := len(order)
-		put(t)
+		place[t] = int32(first)
+		order = append(order, t)
 		for next := first; next < len(order) && len(order) < first+chunk; next++ {
 			r := &tr.tris[order[next]]
 			for i, n := range r.n {
 				if n != None && r.c[i] < 0 && place[n.Tri()] < 0 {
-					put(n.Tri())
+					place[n.Tri()] = int32(len(order))
+					order = append(order, n.Tri())
 				}
 			}
-		}
-	}
-	for _, t := range along {
-		if place[t] < 0 {
-			put(t)
 		}
 	}
 	return order, place
 }
 
-// alongCurve lists the triangles in the order in which the curve through the points comes to them. O(n) by counting.
-func (tr *Triangulation) alongCurve() []int32 {
-	along := make([]int32, len(tr.Pts))
-	for r, p := range tr.curve {
-		along[p] = int32(r)
+// byKey returns the indices of keys, all of them below n, in the order of the keys, equal ones as they come. O(n) by counting.
+func byKey(keys []int32, n int) []int32 {
+	next := make([]int32, n+1)
+	for _, k := range keys {
+		next[k+1]++
 	}
-	key := make([]int32, len(tr.tris))
-	count := make([]int32, len(tr.Pts)+1)
-	for t := range tr.tris {
-		v := tr.tris[t].v
-		key[t] = min(along[v[0]], along[v[1]], along[v[2]])
-		count[key[t]+1]++
+	for i := 1; i < len(next); i++ {
+		next[i] += next[i-1]
 	}
-	for i := 1; i < len(count); i++ {
-		count[i] += count[i-1]
+	order := make([]int32, len(keys))
+	for i, k := range keys {
+		order[next[k]] = int32(i)
+		next[k]++
 	}
-	list := make([]int32, len(tr.tris))
-	for t, k := range key {
-		list[count[k]] = int32(t)
-		count[k]++
-	}
-	return list
+	return order
 }

@@ -75,15 +75,15 @@ func Inc(i int) int { return inc[i] }
 //   - Errors: the context's when it is cancelled.
 //   - Cost: O(n), n the number of triangles.
 func (tr *Triangulation) Finish(ctx context.Context, tags []Tag, solid []Tag) (*Mesh, error) {
-	order := tr.arrange(solid)
-	if err := pulse.Tell(ctx, 0.3); err != nil {
+	n := len(tr.tris)
+	m := &Mesh{Pts: tr.Pts, Tris: make([]Tri, n), Solid: make([]int32, n), raw: tr, tags: tags}
+	for t := range m.Tris {
+		m.setSolid(int32(t), solid[t])
+	}
+	if err := pulse.Tell(ctx, 0.2); err != nil {
 		return nil, err
 	}
-	m := &Mesh{Pts: tr.Pts, Tris: make([]Tri, len(order)), Solid: make([]int32, len(order)), raw: tr, tags: tags}
-	for k, old := range order {
-		m.setSolid(int32(k), solid[old])
-	}
-	middle := pulse.Part(ctx, 0.3, 0.6)
+	middle := pulse.Part(ctx, 0.2, 0.6)
 	for k := range m.Tris {
 		if err := pulse.Step(middle, k, len(m.Tris)); err != nil {
 			return nil, err
@@ -96,33 +96,6 @@ func (tr *Triangulation) Finish(ctx context.Context, tags []Tag, solid []Tag) (*
 	}
 	m.turn = makeTurning(m)
 	return m, pulse.Tell(ctx, 1)
-}
-
-// arrange puts the triangles in their final order, each with its first point in front, and returns their old indices.
-func (tr *Triangulation) arrange(solid []Tag) (order []int32) {
-	order, place := tr.layout(solid)
-	first := make([]uint8, len(tr.tris))
-	for t := range tr.tris {
-		first[t] = tr.firstCorner(&tr.tris[t])
-	}
-	tris := make([]rawTri, len(order), len(order)+len(order)/8)
-	for k, old := range order {
-		r := &tr.tris[old]
-		for j := range 3 {
-			i := (int(first[old]) + j) % 3
-			tris[k].v[j], tris[k].c[j], tris[k].n[j] = r.v[i], r.c[i], None
-			if n := r.n[i]; n != None {
-				tris[k].n[j] = EdgeOf(place[n.Tri()], (n.Corner()+3-int(first[n.Tri()]))%3)
-			}
-		}
-	}
-	tr.tris = tris
-	for t := range tr.tris {
-		for i, v := range tr.tris[t].v {
-			tr.out[v] = EdgeOf(int32(t), i)
-		}
-	}
-	return order
 }
 
 // firstCorner returns the corner of r that comes first in the order of points.

@@ -2,6 +2,7 @@ package mesh
 
 import (
 	"math/bits"
+	"slices"
 
 	"enfilade/solver/exact"
 )
@@ -22,22 +23,25 @@ func curveOrder(pts []exact.Pt) []int32 {
 	return order
 }
 
-// insertionOrder returns the order in which pts, given along a curve, are to be inserted: rounds of doubling size chosen by a
-// hash of the coordinates, so that the expected number of flips stays constant, and each round along the curve, so that the
-// walk to the next point is short. It depends on the points alone. O(n).
-func insertionOrder(pts []exact.Pt, curve []int32) []int32 {
+// insertionOrder returns the order in which pts, given along a curve, are to be inserted, but for those left out: rounds of
+// doubling size chosen by a hash of the coordinates, so that the expected number of flips stays constant, and each round along
+// the curve, so that the walk to the next point is short. It depends on the points alone. O(n).
+func insertionOrder(pts []exact.Pt, out []int32) []int32 {
 	var next [rounds]int32 // where the next point of each round goes; the last round, of half the points, is round 0
 	for _, p := range pts {
 		next[round(hash(p))]++
 	}
+	for _, i := range out {
+		next[round(hash(pts[i]))]--
+	}
 	for r, sum := rounds-1, int32(0); r >= 0; r-- {
 		next[r], sum = sum, sum+next[r]
 	}
-	order := make([]int32, len(pts))
-	for _, i := range curve {
-		if int(i) < len(pts) { // not a corner of the box
-			r := round(hash(pts[i]))
-			order[next[r]] = i
+	order := make([]int32, len(pts)-len(out))
+	for i, p := range pts {
+		if !slices.Contains(out, int32(i)) {
+			r := round(hash(p))
+			order[next[r]] = int32(i)
 			next[r]++
 		}
 	}

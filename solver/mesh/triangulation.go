@@ -49,7 +49,6 @@ type Triangulation struct {
 	Pts   []exact.Pt // the given points, then the four corners of the box around them, then points added later
 	tris  []rawTri
 	box   int32      // index of the first corner of the box
-	curve []int32    // the points in their order along a curve
 	out   []Edge     // some half-edge leaving each point
 	todo  []Edge     // stack of edges to examine
 	work  [][2]int32 // edges to examine, by their ends
@@ -75,14 +74,22 @@ const margin = 10000
 //   - Errors: ErrCrossing when they do not; the context's error when it is cancelled.
 //   - Cost: O(n log n) expected for the points; an edge costs time proportional to what it crosses.
 func Triangulate(ctx context.Context, pts []exact.Pt, edges [][2]int32) (*Triangulation, error) {
-	tr := &Triangulation{Pts: boxed(pts), box: int32(len(pts))}
-	if err := tr.insertAll(pulse.Part(ctx, 0, 0.7), len(pts)); err != nil {
+	// While it is made, points are numbered along a curve: neighbours then lie near each other in memory.
+	all := boxed(pts)
+	curve := curveOrder(all)
+	tr := &Triangulation{Pts: make([]exact.Pt, len(all)), box: int32(len(pts))}
+	along := make([]int32, len(all))
+	for i, v := range curve {
+		tr.Pts[i], along[v] = all[v], int32(i)
+	}
+	if err := tr.insertAll(pulse.Part(ctx, 0, 0.65), along); err != nil {
 		return nil, err
 	}
-	if err := tr.constrainAll(pulse.Part(ctx, 0.7, 1), edges); err != nil {
+	if err := tr.constrainAll(pulse.Part(ctx, 0.65, 0.9), edges, along); err != nil {
 		return nil, err
 	}
-	return tr, nil
+	tr.arrange(all, curve)
+	return tr, pulse.Tell(ctx, 1)
 }
 
 // boxed returns pts followed by the corners of a box that holds them strictly inside.
@@ -103,17 +110,17 @@ func boxed(pts []exact.Pt) []exact.Pt {
 	return append(all, lo, exact.Pt{X: hi.X, Y: lo.Y}, hi, exact.Pt{X: lo.X, Y: hi.Y})
 }
 
-// insertAll starts from the box and inserts the first n points.
-func (tr *Triangulation) insertAll(ctx context.Context, n int) error {
-	a, b, c, d := int32(n), int32(n+1), int32(n+2), int32(n+3)
+// insertAll starts from the box, whose corners along names last, and inserts the other points.
+func (tr *Triangulation) insertAll(ctx context.Context, along []int32) error {
+	n := len(along) - 4
+	a, b, c, d := along[n], along[n+1], along[n+2], along[n+3]
 	tr.tris = make([]rawTri, 0, 2*n+2)
 	free := [3]int32{-1, -1, -1}
 	tr.tris = append(tr.tris,
 		rawTri{[3]int32{a, b, c}, [3]Edge{None, None, EdgeOf(1, 0)}, free},
 		rawTri{[3]int32{a, c, d}, [3]Edge{EdgeOf(0, 2), None, None}, free})
-	tr.curve = curveOrder(tr.Pts)
 	last := int32(0)
-	for i, p := range insertionOrder(tr.Pts[:n], tr.curve) {
+	for i, p := range insertionOrder(tr.Pts, along[n:]) {
 		if err := pulse.Step(ctx, i, n); err != nil {
 			return err
 		}
