@@ -63,18 +63,25 @@ func hotPixels(ctx context.Context, segs []Segment, c *cells) ([]exact.Pt, error
 	for _, s := range segs {
 		keys = append(keys, key(s.A), key(s.B))
 	}
-	for cell := range len(c.start) - 1 {
-		if err := pulse.Step(ctx, cell, len(c.start)); err != nil {
-			return nil, err
-		}
-		list := c.seg[c.start[cell]:c.start[cell+1]]
-		for i, u := range list {
-			for _, v := range list[:i] {
-				if p, ok := crossing(&segs[u], &segs[v]); ok {
-					keys = append(keys, key(p))
+	found, err := pulse.Split(ctx, len(c.start)-1, func(ctx context.Context, lo, hi int) (keys []uint64, err error) {
+		for cell := lo; cell < hi && err == nil; cell++ {
+			list := c.seg[c.start[cell]:c.start[cell+1]]
+			for i, u := range list {
+				for _, v := range list[:i] {
+					if p, ok := crossing(&segs[u], &segs[v]); ok {
+						keys = append(keys, key(p))
+					}
 				}
 			}
+			err = pulse.Step(ctx, cell-lo, hi-lo)
 		}
+		return keys, err
+	})
+	if err != nil {
+		return nil, err
+	}
+	for _, f := range found {
+		keys = append(keys, f...)
 	}
 	exact.SortKeys(keys, make([]uint64, len(keys)))
 	keys = slices.Compact(keys)
@@ -151,45 +158,64 @@ type pass struct {
 // passing returns which segment passes which hot pixels: by segment, then along it. Those of segment i are
 // out[start[i]:start[i+1]].
 func passing(ctx context.Context, segs []Segment, c *cells, hot []exact.Pt) (out []pass, start []int32, err error) {
-	found := make([]pass, 0, 2*len(segs)+len(segs)/4)
-	for i, p := range hot {
-		if err := pulse.Step(ctx, i, len(hot)); err != nil {
-			return nil, nil, err
-		}
-		cell := c.of(p)
-		for _, s := range c.seg[c.start[cell]:c.start[cell+1]] {
-			if passes(segs[s].A, segs[s].B, p) {
-				found = append(found, pass{s, int32(i)})
+	parts, err := pulse.Split(ctx, len(hot), func(ctx context.Context, lo, hi int) ([]pass, error) {
+		found := make([]pass, 0, 3*(hi-lo))
+		for i, p := range hot[lo:hi] {
+			if err := pulse.Step(ctx, i, hi-lo); err != nil {
+				return nil, err
+			}
+			cell := c.of(p)
+			for _, s := range c.seg[c.start[cell]:c.start[cell+1]] {
+				if passes(segs[s].A, segs[s].B, p) {
+					found = append(found, pass{s, int32(lo + i)})
+				}
 			}
 		}
+		return found, nil
+	})
+	if err != nil {
+		return nil, nil, err
 	}
 	start = make([]int32, len(segs)+1)
-	for _, f := range found {
-		start[f.seg+1]++
+	total := 0
+	for _, found := range parts {
+		total += len(found)
+		for _, f := range found {
+			start[f.seg+1]++
+		}
 	}
 	for i := 1; i < len(start); i++ {
 		start[i] += start[i-1]
 	}
-	out = make([]pass, len(found))
+	out = make([]pass, total)
 	fill := slices.Clone(start[:len(segs)])
-	for _, f := range found {
-		out[fill[f.seg]] = f
-		fill[f.seg]++
-	}
-	for s := range segs {
-		list := out[start[s]:start[s+1]]
-		a, d := segs[s].A, segs[s].B.Sub(segs[s].A)
-		if len(list) == 2 { // its ends
-			if hot[list[0].pt] != a {
-				list[0], list[1] = list[1], list[0]
-			}
-			continue
+	for _, found := range parts {
+		for _, f := range found {
+			out[fill[f.seg]] = f
+			fill[f.seg]++
 		}
-		slices.SortFunc(list, func(p, q pass) int {
-			return cmp.Compare(hot[p.pt].Sub(a).Dot(d), hot[q.pt].Sub(a).Dot(d))
-		})
 	}
-	return out, start, nil
+	_, err = pulse.Split(ctx, len(segs), func(_ context.Context, lo, hi int) (none struct{}, err error) {
+		for s := lo; s < hi; s++ {
+			sortAlong(&segs[s], out[start[s]:start[s+1]], hot)
+		}
+		return none, nil
+	})
+	return out, start, err
+}
+
+// sortAlong sorts the passes of segment s by where along it they lie.
+func sortAlong(s *Segment, list []pass, hot []exact.Pt) {
+	if len(list) == 2 { // its ends
+		if hot[list[0].pt] != s.A {
+			list[0], list[1] = list[1], list[0]
+		}
+		return
+	}
+	d := s.B.Sub(s.A)
+	slices.SortFunc(list, func(p, q pass) int {
+		return cmp.Compare(hot[p.pt].Sub(s.A).Dot(d), hot[q.pt].Sub(s.A).Dot(d))
+	})
 }
 
 // link is one rounded piece of a segment: from its point to the point b, which comes after it.

@@ -260,7 +260,7 @@ func (d *Editor) Close(tags []Tag, solid map[int32]Tag) {
 	m, tr := d.m, d.tr
 	m.Pts, m.tags = tr.Pts, tags
 	for len(m.Tris) < len(tr.tris) {
-		m.Tris, m.Solid = append(m.Tris, Tri{}), append(m.Solid, 0)
+		m.Tris, m.Solid, m.shut = append(m.Tris, Tri{}), append(m.Solid, 0), append(m.shut, false)
 	}
 	for _, t := range tr.log {
 		if tr.tris[t].v[0] == dead {
@@ -290,7 +290,7 @@ func (d *Editor) Close(tags []Tag, solid map[int32]Tag) {
 
 // bury makes a triangle that was taken out stop everything.
 func (m *Mesh) bury(t int32) {
-	m.Solid[t] = Ceiling
+	m.setSolid(t, Tag{Ceiling, true})
 	m.Tris[t] = Tri{N: [3]Edge{m.raw.tris[t].n[0], None, None}, Top: [3]int32{Ceiling, Ceiling, Ceiling}, Flags: FlagNoWalk | flagDead | flagBoundary}
 }
 

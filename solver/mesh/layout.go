@@ -1,6 +1,11 @@
 package mesh
 
-import "enfilade/solver/exact"
+import (
+	"context"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/pulse"
+)
 
 // chunk is how many triangles of one stretch of floor are laid side by side before the layout goes on along the curve: about
 // what a room has.
@@ -8,27 +13,28 @@ const chunk = 64
 
 // arrange numbers the points as they were given and puts the triangles in their final order, each with its first point in
 // front. pts are the points as given, curve says which of them each point is.
-func (tr *Triangulation) arrange(pts []exact.Pt, curve []int32) {
+func (tr *Triangulation) arrange(ctx context.Context, pts []exact.Pt, curve []int32) error {
 	order, place := tr.layout()
 	first := make([]uint8, len(tr.tris))
-	for t := range tr.tris {
-		first[t] = tr.firstCorner(&tr.tris[t])
+	_, err := pulse.Split(pulse.Part(ctx, 0.3, 0.5), len(first), func(_ context.Context, lo, hi int) (none struct{}, err error) {
+		for t := lo; t < hi; t++ {
+			first[t] = tr.firstCorner(&tr.tris[t])
+		}
+		return none, nil
+	})
+	if err != nil {
+		return err
 	}
 	tris := make([]rawTri, len(order), len(order)+len(order)/8)
-	for k, old := range order {
-		r, q := &tr.tris[old], &tris[k]
-		i := int(first[old])
-		for j := range 3 {
-			q.v[j], q.c[j], q.n[j] = curve[r.v[i]], r.c[i], None
-			if n := r.n[i]; n != None {
-				corner := n.Corner() - int(first[n.Tri()])
-				if corner < 0 {
-					corner += 3
-				}
-				q.n[j] = EdgeOf(place[n.Tri()], corner)
-			}
-			i = inc[i]
+	_, err = pulse.Split(pulse.Part(ctx, 0.5, 1), len(tris), func(ctx context.Context, lo, hi int) (none struct{}, err error) {
+		for k := lo; k < hi && err == nil; k++ {
+			tris[k] = tr.arranged(order[k], curve, place, first)
+			err = pulse.Step(ctx, k-lo, hi-lo)
 		}
+		return none, err
+	})
+	if err != nil {
+		return err
 	}
 	tr.tris, tr.Pts = tris, pts
 	for t := range tr.tris {
@@ -36,6 +42,26 @@ func (tr *Triangulation) arrange(pts []exact.Pt, curve []int32) {
 			tr.out[v] = EdgeOf(int32(t), i)
 		}
 	}
+	return nil
+}
+
+// arranged returns triangle t as it is to be: its first corner and those of others turned to the front, points and triangles
+// named anew.
+func (tr *Triangulation) arranged(t int32, curve, place []int32, first []uint8) (q rawTri) {
+	r := &tr.tris[t]
+	i := int(first[t])
+	for j := range 3 {
+		q.v[j], q.c[j], q.n[j] = curve[r.v[i]], r.c[i], None
+		if n := r.n[i]; n != None {
+			corner := n.Corner() - int(first[n.Tri()])
+			if corner < 0 {
+				corner += 3
+			}
+			q.n[j] = EdgeOf(place[n.Tri()], corner)
+		}
+		i = inc[i]
+	}
+	return q
 }
 
 // layout orders the triangles so that those that a cone passes one after the other lie near each other in memory: room by

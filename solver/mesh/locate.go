@@ -28,22 +28,21 @@ func makeGrid(ctx context.Context, m *Mesh) (grid, error) {
 	g.nx, g.ny = int32(w>>g.shiftX)+1, int32(h>>g.shiftX)+1
 	g.near = make([]int32, g.nx*g.ny)
 	half := int32(1) << g.shiftX >> 1
-	t := int32(0)
-	for y := range g.ny {
-		if err := pulse.Step(ctx, int(y*g.nx), int(g.nx*g.ny)); err != nil {
-			return g, err
-		}
-		for k := range g.nx {
-			x := k
+	_, err := pulse.Split(ctx, len(g.near), func(ctx context.Context, from, to int) (none struct{}, err error) {
+		t := int32(0)
+		for k := from; k < to && err == nil; k++ {
+			y, x := int32(k)/g.nx, int32(k)%g.nx
 			if y&1 == 1 {
-				x = g.nx - 1 - k
+				x = g.nx - 1 - x // to and fro, so that the next cell is near
 			}
-			p := exact.Pt{X: min(lo.X+x<<g.shiftX+half, hi.X), Y: min(lo.Y+y<<g.shiftX+half, hi.Y)}
+			p := exact.Pt{X: min(g.lo.X+x<<g.shiftX+half, hi.X), Y: min(g.lo.Y+y<<g.shiftX+half, hi.Y)}
 			t, _, _ = m.walkTo(t, p)
 			g.near[y*g.nx+x] = t
+			err = pulse.Step(ctx, k-from, to-from)
 		}
-	}
-	return g, nil
+		return none, err
+	})
+	return g, err
 }
 
 // Place is where a point lies in the mesh.

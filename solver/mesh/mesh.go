@@ -43,6 +43,7 @@ type Mesh struct {
 	Pts   []exact.Pt // the graph's points, with the four corners of the box among them
 	Tris  []Tri
 	Solid []int32 // for each triangle the height up to which it is solid for sight
+	shut  []bool  // for each triangle whether nobody stands in it, as its Flags say
 	raw   *Triangulation
 	tags  []Tag
 	grid  grid
@@ -76,21 +77,23 @@ func Inc(i int) int { return inc[i] }
 //   - Cost: O(n), n the number of triangles.
 func (tr *Triangulation) Finish(ctx context.Context, tags []Tag, solid []Tag) (*Mesh, error) {
 	n := len(tr.tris)
-	m := &Mesh{Pts: tr.Pts, Tris: make([]Tri, n), Solid: make([]int32, n), raw: tr, tags: tags}
+	m := &Mesh{Pts: tr.Pts, Tris: make([]Tri, n), Solid: make([]int32, n), shut: make([]bool, n), raw: tr, tags: tags}
 	for t := range m.Tris {
 		m.setSolid(int32(t), solid[t])
 	}
 	if err := pulse.Tell(ctx, 0.2); err != nil {
 		return nil, err
 	}
-	middle := pulse.Part(ctx, 0.2, 0.6)
-	for k := range m.Tris {
-		if err := pulse.Step(middle, k, len(m.Tris)); err != nil {
-			return nil, err
+	_, err := pulse.Split(pulse.Part(ctx, 0.2, 0.6), n, func(ctx context.Context, lo, hi int) (none struct{}, err error) {
+		for k := lo; k < hi && err == nil; k++ {
+			m.refresh(int32(k))
+			err = pulse.Step(ctx, k-lo, hi-lo)
 		}
-		m.refresh(int32(k))
+		return none, err
+	})
+	if err != nil {
+		return nil, err
 	}
-	var err error
 	if m.grid, err = makeGrid(pulse.Part(ctx, 0.6, 0.9), m); err != nil {
 		return nil, err
 	}
@@ -110,22 +113,19 @@ func (tr *Triangulation) firstCorner(r *rawTri) uint8 {
 	return 2
 }
 
-func (m *Mesh) setSolid(t int32, s Tag) {
-	m.Solid[t] = s.Top
-	m.Tris[t].Flags = 0
-	if s.Walk {
-		m.Tris[t].Flags = FlagNoWalk
-	}
-}
+func (m *Mesh) setSolid(t int32, s Tag) { m.Solid[t], m.shut[t] = s.Top, s.Walk }
 
 // solid returns what triangle t stops.
-func (m *Mesh) solid(t int32) Tag { return Tag{m.Solid[t], m.Tris[t].Flags&FlagNoWalk != 0} }
+func (m *Mesh) solid(t int32) Tag { return Tag{m.Solid[t], m.shut[t]} }
 
 // refresh writes what queries read of triangle t, from its raw form and from what it and its neighbours stop.
 func (m *Mesh) refresh(t int32) {
 	r, q := &m.raw.tris[t], &m.Tris[t]
 	own := m.solid(t)
-	q.Flags &= FlagNoWalk
+	q.Flags = 0
+	if own.Walk {
+		q.Flags = FlagNoWalk
+	}
 	for i := range 3 {
 		tag := own
 		if n := r.n[i]; n != None {

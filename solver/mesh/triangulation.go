@@ -88,7 +88,9 @@ func Triangulate(ctx context.Context, pts []exact.Pt, edges [][2]int32) (*Triang
 	if err := tr.constrainAll(pulse.Part(ctx, 0.65, 0.9), edges, along); err != nil {
 		return nil, err
 	}
-	tr.arrange(all, curve)
+	if err := tr.arrange(pulse.Part(ctx, 0.9, 1), all, curve); err != nil {
+		return nil, err
+	}
 	return tr, pulse.Tell(ctx, 1)
 }
 
