@@ -69,6 +69,12 @@ void sees(Session &s, std::istream &in) {
   std::printf("%d\n", int(s.eye().holds(eye, s.eye().region(eye), p)));
 }
 
+void share(Session &s, std::istream &in) {
+  auto eye = point(in), a = point(in), b = point(in);
+  auto sum = s.eye().share(eye, s.eye().region(eye), a, b);
+  std::printf("%.17g %d\n", CGAL::to_double(sum.exact()), int(sum == 1));
+}
+
 void walk(Session &s, std::istream &in) {
   auto from = point(in), to = point(in);
   std::printf("%.17g\n", s.from(from).to(to));
@@ -107,6 +113,7 @@ void answer(Session &s, const std::string &word, std::istream &in) {
   } else if (word == "region") region(s, in);
   else if (word == "ring") ring(s, in);
   else if (word == "sees") sees(s, in);
+  else if (word == "share") share(s, in);
   else if (word == "walk") walk(s, in);
   else if (word == "approach") approach(s, in);
   else if (word == "judge") judge(s, in);

@@ -208,6 +208,32 @@ bool Sight::holds(const Point &at, const std::vector<Sector> &region, const Poin
   return false;
 }
 
+// Narrows the part u to v of the segment from a to b to what does not lie to the right of the line from p to q.
+static void narrow(const ExactPoint &a, const ExactPoint &b, const ExactPoint &p, const ExactPoint &q, Number &u, Number &v) {
+  Number from = CGAL::determinant(q - p, a - p), to = CGAL::determinant(q - p, b - p);
+  if (from < 0 && to < 0) u = 1, v = 0;
+  else if (from < 0) u = (std::max)(u, from / (from - to));
+  else if (to < 0) v = (std::min)(v, from / (from - to));
+}
+
+Number Sight::share(const Point &at, const std::vector<Sector> &region, const Point &from, const Point &to) const {
+  ExactPoint eye(at.x, at.y), a(from.x, from.y), b(to.x, to.y);
+  std::vector<std::pair<Number, Number>> parts;
+  for (auto &s : region)
+    for (auto &p : s.border) {
+      if (CGAL::orientation(eye, p.from, p.to) != CGAL::LEFT_TURN) continue;
+      Number u = 0, v = 1;
+      narrow(a, b, eye, p.from, u, v), narrow(a, b, p.from, p.to, u, v), narrow(a, b, p.to, eye, u, v);
+      if (u < v) parts.emplace_back(u, v);
+    }
+  std::sort(parts.begin(), parts.end());
+  Number sum = 0, end = 0;
+  for (auto &p : parts) {
+    if (p.second > end) sum += p.second - (std::max)(p.first, end), end = p.second;
+  }
+  return sum;
+}
+
 typedef Exact::Vector_2 Vector;
 
 // Adds, for a triangle that has p in its closure, the inward normals of the sides on which p lies; false when p is outside.

@@ -46,6 +46,9 @@ public:
   // that tile. Touching the back of a wall, or a body's border from without, is not seeing what is on its other side.
   bool beside(const Point &eye, const std::vector<Sector> &region, const Point &p, Field::Face tile) const;
 
+  // How much of the segment from a to b lies in the closed region, as a share of its length. Exact.
+  Number share(const Point &eye, const std::vector<Sector> &region, const Point &a, const Point &b) const;
+
 private:
   typedef Expansion<Exact>::Halfedge Halfedge;
 

@@ -29,6 +29,16 @@ func (r *Reference) Sees(eye, p exact.Pt) (bool, error) {
 	return err == nil && n[0] == 1, err
 }
 
+// Share returns how much of the segment from a to b lies in the closed region seen from eye, as a share of its length, and
+// whether that is all of it.
+func (r *Reference) Share(eye, a, b exact.Pt) (share float64, whole bool, err error) {
+	n, err := r.ask(2, "share", eye, a, b)
+	if err != nil {
+		return 0, false, err
+	}
+	return n[0], n[1] == 1, nil
+}
+
 // Walk returns the length of the shortest walk from start to goal, infinite when there is none.
 func (r *Reference) Walk(start, goal exact.Pt) (float64, error) {
 	n, err := r.ask(1, "walk", start, goal)

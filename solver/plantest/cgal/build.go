@@ -10,10 +10,12 @@ import (
 	"path/filepath"
 	"runtime"
 	"strings"
+	"sync"
 )
 
-// binary returns the path of the compiled reference program, compiling it unless these very sources were compiled before.
-func binary() (string, error) {
+// binary returns the path of the compiled reference program, compiling it unless these very sources were compiled before. Tests
+// that start side by side compile it once.
+var binary = sync.OnceValues(func() (string, error) {
 	source, err := sourceFolder()
 	if err != nil {
 		return "", err
@@ -35,7 +37,7 @@ func binary() (string, error) {
 		return "", err
 	}
 	return path, nil
-}
+})
 
 // compile builds into a folder of its own and renames it at the end, so that two tests may compile at once.
 func compile(source, folder string) error {

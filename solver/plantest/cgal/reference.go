@@ -39,6 +39,8 @@ func Start(t testing.TB) *Reference {
 	}
 	cmd := exec.Command(path)
 	cmd.Stderr = os.Stderr
+	// The C library would hand memory back to the system after every question and ask for it anew.
+	cmd.Env = append(os.Environ(), "MALLOC_TRIM_THRESHOLD_=1000000000", "MALLOC_MMAP_THRESHOLD_=1000000000", "MALLOC_TOP_PAD_=64000000")
 	in, err := cmd.StdinPipe()
 	if err != nil {
 		t.Fatal(err)

@@ -12,35 +12,34 @@ import (
 
 // TestRegionAgainstCGAL compares regions of eyes on open floor, on walls, at their ends and where they meet.
 func TestRegionAgainstCGAL(t *testing.T) {
-	r := cgal.Start(t)
-	var seeded, tangled tally
-	eachSpecimen(t, func(s *specimen) {
-		eyes := s.onWalls(8)
-		if s.walls >= 1000 {
-			eyes = s.onWalls(3)
-		}
-		for _, o := range s.plan.Observers() {
-			eyes = append(eyes, o.At)
-		}
-		compareRegions(t, r, s, eyes, &seeded)
+	sharded(t, "regions in seeded plans", func(t *testing.T, r *cgal.Reference, shard uint64, c *tally) {
+		eachSpecimen(t, shard, 5000, func(s *specimen) {
+			eyes := s.onWalls(8)
+			if s.walls >= 1000 {
+				eyes = s.onWalls(3)
+			}
+			compareRegions(t, r, s, append(eyes, s.observers()...), c)
+		})
 	})
-	eachTangle(t, 1500, func(s *specimen) {
-		var eyes []exact.Pt
-		for _, o := range s.plan.Observers() {
-			eyes = append(eyes, o.At)
-		}
-		compareRegions(t, r, s, append(eyes, s.graph.Pts...), &tangled)
+	sharded(t, "regions in tangles", func(t *testing.T, r *cgal.Reference, shard uint64, c *tally) {
+		eachTangle(t, shard, 1500, func(s *specimen) {
+			compareRegions(t, r, s, append(s.observers(), s.graph.Pts...), c)
+		})
 	})
-	seeded.log(t, "regions in seeded plans")
-	tangled.log(t, "regions in tangles")
+	// Narrowed floors have many edges more, which sight must pass as if they were not there.
+	sharded(t, "regions on narrowed floors", func(t *testing.T, r *cgal.Reference, shard uint64, c *tally) {
+		eachTangle(t, shard, 120, func(s *specimen) {
+			s.grow(t, s.radius())
+			compareRegions(t, r, s, append(s.observers(), s.onWalls(4)...), c)
+		})
+	})
 }
 
 func compareRegions(t *testing.T, r *cgal.Reference, s *specimen, eyes []exact.Pt, c *tally) {
 	t.Helper()
 	r.Plan(s.graph, plantest.Eye)
 	f := sight.New(s.mesh)
-	c.plans++
-	c.walls += s.walls
+	c.add(s)
 	for _, eye := range eyes {
 		want, wantErr := r.Region(eye)
 		region, err := f.Region(eye, plantest.Eye)

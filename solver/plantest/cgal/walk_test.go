@@ -16,44 +16,49 @@ import (
 // TestWalkAgainstCGAL compares full walks, approaches and first sights, from and to open floor, walls, their ends and the
 // places where they meet.
 func TestWalkAgainstCGAL(t *testing.T) {
-	r := cgal.Start(t)
-	var seeded, tangled tally
-	eachSpecimen(t, func(s *specimen) {
-		var starts, targets []exact.Pt
-		for _, x := range s.plan.Starts() {
-			starts = append(starts, x.At)
-		}
-		for _, x := range s.plan.Targets() {
-			targets = append(targets, x.At)
-		}
-		// A start costs CGAL a sequence tree over the whole plan.
-		if s.walls >= 1000 {
-			starts, targets = starts[:1], targets[:4]
-		} else {
-			starts, targets = append(starts[:2], s.onWalls(2)...), append(targets[:4], s.onWalls(2)...)
-		}
-		compareWalks(t, r, s, starts, targets, &seeded)
+	sharded(t, "walks and approaches in seeded plans", func(t *testing.T, r *cgal.Reference, shard uint64, c *tally) {
+		eachSpecimen(t, shard, 5000, func(s *specimen) {
+			starts, targets := s.starts(), s.targets()
+			// A start costs CGAL a sequence tree over the whole plan.
+			if s.walls >= 1000 {
+				starts, targets = starts[:1], targets[:4]
+			} else {
+				starts, targets = append(starts[:2], s.onWalls(1)...), append(targets[:4], s.onWalls(2)...)
+			}
+			compareWalks(t, r, s, starts, targets, c)
+		})
 	})
-	eachTangle(t, 1500, func(s *specimen) {
-		var starts, targets []exact.Pt
-		for _, x := range s.plan.Starts() {
-			starts = append(starts, x.At)
-		}
-		for _, x := range s.plan.Targets() {
-			targets = append(targets, x.At)
-		}
-		compareWalks(t, r, s, append(starts, s.onWalls(3)...), append(targets, s.onWalls(3)...), &tangled)
+	sharded(t, "walks and approaches in tangles", func(t *testing.T, r *cgal.Reference, shard uint64, c *tally) {
+		eachTangle(t, shard, 1000, func(s *specimen) {
+			compareWalks(t, r, s, append(s.starts(), s.onWalls(3)...), append(s.targets(), s.onWalls(3)...), c)
+		})
 	})
-	seeded.log(t, "walks and approaches in seeded plans")
-	tangled.log(t, "walks and approaches in tangles")
+}
+
+// TestBodiesAgainstCGAL does the same for walkers with a body.
+func TestBodiesAgainstCGAL(t *testing.T) {
+	sharded(t, "walks and approaches of bodies in seeded plans", func(t *testing.T, r *cgal.Reference, shard uint64, c *tally) {
+		seed := 0
+		eachSpecimen(t, shard, 150, func(s *specimen) {
+			if seed++; seed%8 == 0 {
+				s.grow(t, 500*(1+s.Int32N(8))) // 50 to 400 mm
+				compareWalks(t, r, s, append(s.starts()[:2], s.onWalls(1)...), append(s.targets()[:3], s.onWalls(1)...), c)
+			}
+		})
+	})
+	sharded(t, "walks and approaches of bodies in tangles", func(t *testing.T, r *cgal.Reference, shard uint64, c *tally) {
+		eachTangle(t, shard, 200, func(s *specimen) {
+			s.grow(t, s.radius())
+			compareWalks(t, r, s, append(s.starts(), s.onWalls(2)...), append(s.targets(), s.onWalls(2)...), c)
+		})
+	})
 }
 
 func compareWalks(t *testing.T, r *cgal.Reference, s *specimen, starts, targets []exact.Pt, c *tally) {
 	t.Helper()
 	r.Plan(s.graph, plantest.Eye)
 	eye, walker := sight.New(s.mesh), walk.New(s.mesh)
-	c.plans++
-	c.walls += s.walls
+	c.add(s)
 	var goals []walk.Goal // for each target that can be seen its region and itself
 	for _, target := range targets {
 		if cones, err := eye.Cones(target, plantest.Eye, sight.Clip{}); err == nil {
