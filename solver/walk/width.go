@@ -68,6 +68,7 @@ func NewWidths(ctx context.Context, m *mesh.Mesh) (*Widths, error) {
 	if err != nil {
 		return nil, err
 	}
+	lean.Spare()
 	w := &Widths{plain: m}
 	w.pieces.begin(lean)
 	b := gapFinder{pieces: &w.pieces}
