@@ -16,6 +16,7 @@ type form struct {
 	w      *window
 	box    *fyne.Container
 	page   *fyne.Container
+	scroll *container.Scroll
 	title  *inkText
 	key    string
 	where  *inkText
@@ -51,8 +52,9 @@ const (
 func newForm(w *window) *form {
 	f := &form{w: w, title: caption("").right(), page: pile()}
 	head := around(nil, nil, heading("Selection"), nil, f.title)
-	scroll := container.NewThemeOverride(container.NewVScroll(inset(formSide, 0, formSide, 12, f.page)), tightLook{w})
-	f.box = around(inset(formSide, 14, formSide, 8, head), nil, nil, nil, scroll)
+	f.scroll = container.NewVScroll(inset(formSide, 0, formSide, 12, f.page))
+	page := container.NewStack(container.NewThemeOverride(f.scroll, tightLook{w}), newWheel(f.scroll))
+	f.box = around(inset(formSide, 14, formSide, 8, head), nil, nil, nil, page)
 	return f
 }
 
@@ -80,10 +82,12 @@ func (f *form) fits(fields []field) bool {
 
 // build makes the form's widgets.
 func (f *form) build(c card) {
+	other := c.key != f.key
 	f.key, f.rows, f.facts = c.key, nil, nil
 	f.page.Objects = nil
 	f.title.set(c.title)
 	f.head(c)
+	f.figures(c.facts)
 	for i, h := range c.hint {
 		line := caption(h)
 		if i == 0 {
@@ -104,7 +108,6 @@ func (f *form) build(c card) {
 	}
 	f.fault = newText("", assets.Regular, 12, roleRed).shrinking()
 	f.page.Add(f.fault)
-	f.figures(c.facts)
 	if f.reach = newReachTable(c.reach); f.reach != nil {
 		f.page.Add(f.reach.box)
 	}
@@ -112,6 +115,9 @@ func (f *form) build(c card) {
 		f.page.Add(inset(0, 10, 0, 0, container.NewHBox(newPushButton("Delete", func() { f.w.typedKey(fyne.KeyDelete) }))))
 	}
 	f.page.Refresh()
+	if other {
+		f.scroll.ScrollToTop()
+	}
 }
 
 // head is the item's sign, letter and place.
@@ -187,8 +193,8 @@ func (f *form) figures(facts []fact) {
 		f.facts = append(f.facts, t)
 		cells = append(cells, pile(t.value, t.label))
 	}
-	f.page.Add(inset(0, 6, 0, 8, hairline()))
 	f.page.Add(container.NewGridWithColumns(len(cells), cells...))
+	f.page.Add(inset(0, 8, 0, 8, hairline()))
 }
 
 // put shows the card's texts in the form.

@@ -1,6 +1,7 @@
 package gui
 
 import (
+	"strings"
 	"time"
 
 	"enfilade/app/live"
@@ -258,7 +259,11 @@ func (w *window) report() {
 	r := &w.results
 	for s := range live.NumStages {
 		if err := r.failed(s); err != nil {
-			w.status.solve.set(failure(err))
+			text := failure(err)
+			if s == live.StageDistances {
+				text = "no walking distances: " + strings.TrimPrefix(text, "study: ")
+			}
+			w.status.solve.set(text)
 			w.status.progress.Hide()
 			return
 		}

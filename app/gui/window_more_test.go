@@ -7,6 +7,7 @@ import (
 
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/driver/desktop"
+	"fyne.io/fyne/v2/test"
 	"fyne.io/fyne/v2/theme"
 
 	"enfilade/solver/plan"
@@ -155,5 +156,28 @@ func TestScale(t *testing.T) {
 	startScale(r.app.Preferences())
 	if scaleNow() != 2 {
 		t.Errorf("against the environment the start draws at %v", scaleNow())
+	}
+}
+
+// TestWheelOverTheForm: the wheel scrolls the form also where a text field is under the pointer; another item's form begins at
+// its top, a change of the same one stays where it is.
+func TestWheelOverTheForm(t *testing.T) {
+	r := newGallery(t)
+	over := r.line("Title").entry
+	at := r.app.Driver().AbsolutePositionForObject(over).AddXY(20, 10)
+	test.Scroll(r.win.Canvas(), at, 0, -200)
+	y := r.form.scroll.Offset.Y
+	if y < 100 {
+		t.Fatalf("the form is scrolled by %v", y)
+	}
+	if err := r.line("Seen is").field.pick(1); err != nil {
+		t.Fatal(err)
+	}
+	if r.form.scroll.Offset.Y != y {
+		t.Errorf("after a field has come the form is scrolled by %v, want %v", r.form.scroll.Offset.Y, y)
+	}
+	r.click(11.35, 8.75)
+	if r.form.scroll.Offset.Y != 0 {
+		t.Errorf("another form begins at %v", r.form.scroll.Offset.Y)
 	}
 }
