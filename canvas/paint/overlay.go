@@ -23,6 +23,7 @@ func Overlay(s *Scene, l *List) {
 	}
 	foot := p.setSlip()
 	p.obstruct(main)
+	p.obstructRoutes()
 	p.placeLabels(main)
 
 	p.regions()

@@ -61,6 +61,20 @@ func (p *pen) route(r plan.Route, strong bool) {
 	}
 }
 
+// obstructRoutes keeps labels off the routes' waypoints and their numbers.
+func (p *pen) obstructRoutes() {
+	for _, r := range p.s.Plan.Routes() {
+		if r.Hidden {
+			continue
+		}
+		for _, q := range r.Via.All() {
+			c := p.point(q)
+			p.taken(c, waypointSize+1, waypointSize+1)
+			p.taken(place{c.x + (waypointShift+3)*p.k, c.y - 7*p.k}, 5, 6)
+		}
+	}
+}
+
 // waypoint draws a dot with its number.
 func (p *pen) waypoint(q exact.Pt, number int) {
 	c := p.point(q)

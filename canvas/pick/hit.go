@@ -139,17 +139,44 @@ func TargetAt(t plan.Target) exact.Pt {
 	return t.At
 }
 
-// MarkAt returns the mark of a kind, observer, target or start, that lies under the pixel place (x, y).
+// chooseReach is how near the pointer must come to a mark that is to be chosen among its kind, in px at 100 %.
+const chooseReach = 24
+
+// MarkAt returns the mark of a kind, observer, target or start, that is nearest to the pixel place (x, y), within a wider
+// reach than At: nothing else is looked for.
 func MarkAt(p *plan.Plan, cam view.Camera, x, y float64, kind plan.Kind) (Hit, bool) {
-	s := pointer(cam, x, y)
-	skip := map[plan.Ref]bool{}
-	for {
-		h, ok := mark(p, cam, s, skip)
-		if !ok || h.Ref.Kind == kind {
-			return h, ok
+	s, reach := pointer(cam, x, y), units(cam, chooseReach)
+	var n nearest
+	offer := func(id string, at exact.Pt, m plan.Meta, d float64) {
+		if !m.Hidden {
+			n.offer(d, reach, Hit{Ref: plan.Ref{Kind: kind, ID: id}, At: at})
 		}
-		skip[h.Ref] = true
 	}
+	switch kind {
+	case plan.KindStart:
+		for _, t := range p.Starts() {
+			d := s.dist(spotOf(t.At))
+			if m, ok := mat(t); ok {
+				d = min(d, s.dist(m))
+			}
+			offer(t.ID, t.At, t.Meta, d)
+		}
+	case plan.KindTarget:
+		for _, t := range p.Targets() {
+			at := TargetAt(t)
+			d := s.dist(spotOf(at))
+			if t.Face != nil {
+				f, _ := s.foot(t.Face[0], t.Face[1])
+				d = min(d, s.dist(f))
+			}
+			offer(t.ID, at, t.Meta, d)
+		}
+	case plan.KindObserver:
+		for _, o := range p.Observers() {
+			offer(o.ID, o.At, o.Meta, s.dist(spotOf(o.At)))
+		}
+	}
+	return n.hit, n.ok
 }
 
 // mat returns where a start's mat lies: behind someone who faces the way the start says.

@@ -131,6 +131,7 @@ func (t *Door) put(h Host) {
 	}
 	t.typing.clear()
 	t.fault = doAdd(h, plan.AddOpening{Opening: o})
+	t.on = t.fault != "" // a made one is left alone until the pointer moves on
 }
 
 func (t *Door) drop(h Host) {

@@ -199,7 +199,10 @@ func (t *Select) Leave(Host) { t.hovered = false }
 func (t *Select) Sketch(h Host) Sketch {
 	s := Sketch{Fault: t.fault, Snap: t.snap}
 	if t.hovered && t.grip == nil {
-		s.Hover, s.Grip = t.hover.Ref, GripHand
+		s.Hover = t.hover.Ref
+		if !locked(h.Plan(), t.hover.Ref) {
+			s.Grip = GripHand
+		}
 	}
 	g := t.grip
 	if g == nil || !g.moved {
