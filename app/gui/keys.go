@@ -6,10 +6,8 @@ import (
 	"unicode"
 
 	"fyne.io/fyne/v2"
-	"fyne.io/fyne/v2/container"
 
 	"enfilade/app/session"
-	"enfilade/assets"
 	"enfilade/canvas/tool"
 	"enfilade/solver/plan"
 )
@@ -158,26 +156,6 @@ func (w *window) toggleSide() {
 func (w *window) setTheme(choice string) {
 	w.app.Preferences().SetString(prefTheme, choice)
 	w.desk.setLook(&look{choice: choice, silent: w.look.silent})
-}
-
-// showKeys shows the page of keys.
-func (w *window) showKeys() {
-	rows := [][2]string{
-		{"Esc", "the select tool; in the middle of something, leave it; a long study stops"}, {"letters on the rail", "choose a tool"},
-		{"Enter, double click", "end a run of walls"}, {"digits", "type a length while drawing; Tab for the angle"},
-		{"Shift", "eight directions, squares, turns of 15°; a plain gap"}, {"Ctrl while dragging", "no snapping"},
-		{"Ctrl+X, Ctrl+C, Ctrl+V", "cut, copy, paste; also into another window"}, {"Ctrl+D", "duplicate; with Shift in rows"},
-		{"Ctrl+R, Ctrl+M", "rotate, mirror: type the measures or click in the plan"}, {"Ctrl+A, Ctrl+Shift+A", "select all, or all of the same kind"},
-		{"Ctrl+L, Ctrl+H", "lock, hide; with Shift unlock and show everything"},
-		{"arrows", "nudge by 0.1 m, with Shift 1 m, with Ctrl 1 cm"}, {"Delete", "take the selection away"},
-		{"wheel, + and −", "zoom at the pointer"}, {"middle button, Space and drag", "pan"}, {"0, Home", "fit the plan"}, {"Alt, F10", "the menus"},
-		{"Ctrl+Z, Ctrl+Shift+Z", "undo, redo"}, {"Ctrl+S, Ctrl+O, Ctrl+N", "save, open, new"},
-	}
-	box := pile()
-	for _, r := range rows {
-		box.Add(container.NewHBox(fixed(190, newText(r[0], assets.Semibold, 12.5, roleInk)), body(r[1])))
-	}
-	w.ask("Keys", box, 560, choice{"Close", nil})
 }
 
 // showAbout says what the program is and what it is not.
