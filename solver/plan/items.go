@@ -198,13 +198,13 @@ type Walker struct {
 // The pace is the design walking speed of FHWA-RD-98-107 (1998), section 2.2.
 func DefaultWalker() Walker { return Walker{Pace: 1.2, Eye: 1600 * exact.PerMM} }
 
-// Underlay is a picture to trace over.
+// Underlay is a picture to trace over. It is not changed in place.
 type Underlay struct {
-	Image      string // path relative to the plan file
-	At         exact.Pt
-	MMPerPixel float64
-	Opacity    float64 // 0 to 1
-	Turn       float64 // degrees
+	Image      string   // path; in a plan file relative to it
+	At         exact.Pt // where the picture's lower left corner lies
+	MMPerPixel float64  // how wide and high a pixel is
+	Opacity    float64  // 0 to 1
+	Turn       float64  // degrees counter-clockwise about At
 	Meta
 }
 
