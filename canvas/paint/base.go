@@ -20,6 +20,7 @@ func Base(s *Scene) *List {
 		l.Drawing = NewDrawing(shown)
 	}
 	p.paper(shown)
+	p.underlay()
 	p.contours()
 	held := heldBy(s, shown)
 	p.doorways(l.Drawing, func(ref plan.Ref) bool { return !held[ref] })

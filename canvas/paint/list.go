@@ -16,6 +16,7 @@ const (
 	Hatch              // fill the path with parallel lines; Style indexes List.Hatches
 	Wash               // fill the path with a radial wash that gathers along its border; Style indexes List.Washes
 	Text               // a line of text; Style indexes List.Texts, there is no path
+	Image              // a photo; Style indexes List.Images, there is no path; in a base only
 )
 
 // Ink says which ink of the base an Op is: overlay drawn under that ink is hidden by it.
@@ -122,6 +123,7 @@ type List struct {
 	Hatches []HatchStyle
 	Washes  []WashStyle
 	Texts   []TextStyle
+	Images  []ImageStyle
 	Chars   []byte
 
 	// InkColour is the colour of the base's hard ink.
@@ -139,6 +141,7 @@ func (l *List) Reset(w, h int, k float64) {
 	l.W, l.H, l.K = w, h, k
 	l.Ops, l.Subs, l.Points, l.Chars = l.Ops[:0], l.Subs[:0], l.Points[:0], l.Chars[:0]
 	l.Strokes, l.Hatches, l.Washes, l.Texts = l.Strokes[:0], l.Hatches[:0], l.Washes[:0], l.Texts[:0]
+	l.Images = l.Images[:0]
 }
 
 // Path returns the pieces of an Op's path.

@@ -18,7 +18,7 @@ func (l *List) String() string {
 }
 
 func (l *List) writeOp(b *strings.Builder, op *Op) {
-	fmt.Fprintf(b, "%s %s", [...]string{"fill", "stroke", "hatch", "wash", "text"}[op.Kind], hex(op.Colour))
+	fmt.Fprintf(b, "%s %s", [...]string{"fill", "stroke", "hatch", "wash", "text", "image"}[op.Kind], hex(op.Colour))
 	if op.Ink != NoInk {
 		b.WriteString([...]string{"", " low", " hard"}[op.Ink])
 	}
@@ -44,6 +44,10 @@ func (l *List) writeOp(b *strings.Builder, op *Op) {
 		w := l.Washes[op.Style]
 		fmt.Fprintf(b, " eye %.1f,%.1f radius %.1f %.3g-%.3g-%.3g rims %.4g %.4g at %.3g",
 			w.Eye.X, w.Eye.Y, w.Radius, w.Near, w.Mid, w.Far, w.Rims[0], w.Rims[1], w.RimStrength)
+	case Image:
+		m := l.Images[op.Style]
+		fmt.Fprintf(b, " %d by %d at %.4g strength %.3g turned %v\n", m.Photo.W, m.Photo.H, m.Place, m.Strength, m.Inverse)
+		return
 	case Text:
 		t := l.Texts[op.Style]
 		fmt.Fprintf(b, " %v %.4g", t.Weight, t.Size)

@@ -40,6 +40,8 @@ func (p *pen) outlineOf(ref plan.Ref, off float64) {
 		}
 	case plan.KindFloor:
 		p.addRing(p.frame, p.floorRing(p.s.Plan))
+	case plan.KindUnderlay:
+		p.underlayOutline()
 	}
 }
 

@@ -29,6 +29,8 @@ type Scene struct {
 	ContourStep float64         // mm from one to the next
 	ContoursOld bool            // they have been out of date for a while
 
+	Photo *Photo // the plan's underlay; nil for none, or where there is no picture to be had
+
 	Old     *plan.Plan  // the plan before a drag, nil when there is none: the dragged parts show faintly in their old place
 	Dragged []plan.Ref  // parts that move: left out of the base, drawn in the overlay
 	Pointer *[2]float64 // device pixels, for the marks on the rulers; nil when the pointer is elsewhere

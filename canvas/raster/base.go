@@ -91,6 +91,8 @@ func (d *baseDrawer) step(op *paint.Op) {
 		d.strokePath(op)
 	case paint.Text:
 		d.glyphs.paintText(p, d.l, op)
+	case paint.Image:
+		d.photo(op)
 	}
 }
 
