@@ -88,7 +88,7 @@ func folderNames(entries []os.DirEntry, folder, suffix string) []string {
 		case strings.HasPrefix(name, "."):
 		case e.IsDir() || e.Type()&os.ModeSymlink != 0 && isFolder(filepath.Join(folder, name)):
 			folders = append(folders, name+"/")
-		case strings.HasSuffix(strings.ToLower(name), suffix):
+		case hasSuffix(name, suffix):
 			files = append(files, name)
 		}
 	}

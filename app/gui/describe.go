@@ -46,6 +46,8 @@ type card struct {
 	fault  string // the item's problem
 	hint   []string
 	delete bool
+
+	actions []choice // buttons, two in a row
 }
 
 // describe makes the form of the selection.
@@ -278,6 +280,10 @@ func (w *window) describeOne(p *plan.Plan, r plan.Ref) card {
 	case plan.KindRoute:
 		if x, ok := p.Route(r.ID); ok {
 			w.describeRoute(&c, p, x)
+		}
+	case plan.KindUnderlay:
+		if u := p.Sheet().Underlay; u != nil {
+			w.describeUnderlay(&c, *u)
 		}
 	case plan.KindFloor:
 		c.title, c.icon = "Floor", "floor"

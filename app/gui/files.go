@@ -112,9 +112,14 @@ func (w *window) openFailed(path string, err error) {
 // openIn opens a plan file in a window of its own, unless nothing is lost by opening it here.
 func (w *window) openIn(path string) { w.desk.blank(w, path).open(path) }
 
-// dropped takes files that were dropped on the window: plans, the first in this window.
+// dropped takes files that were dropped on the window: a picture is laid under the plan; of plans the first is opened in
+// this window.
 func (w *window) dropped(paths []string) {
 	if len(paths) == 0 {
+		return
+	}
+	if isPhoto(paths[0]) {
+		w.layUnder(paths[0])
 		return
 	}
 	w.unlessUnsaved(func() {
@@ -168,7 +173,7 @@ func (w *window) write(path string, goOn func()) {
 			}
 		}
 		var text bytes.Buffer
-		err := planfile.Write(&text, p)
+		err := planfile.Write(&text, sited(p, func(image string) string { return store.Relate(path, image) }))
 		if err == nil {
 			err = store.Save(path, func(out io.Writer) error { _, err := out.Write(text.Bytes()); return err })
 		}
@@ -188,6 +193,7 @@ func (w *window) wrote(p *plan.Plan, path string, print store.Print, err error, 
 	w.notice.hide()
 	w.remember(path)
 	w.acted()
+	w.offerCopy()
 	if goOn != nil {
 		goOn()
 	}

@@ -103,5 +103,5 @@ func readPlan(path string) (*plan.Plan, store.Print, error) {
 	if err != nil {
 		return nil, print, err
 	}
-	return p, print, nil
+	return sited(p, func(named string) string { return store.Resolve(path, named) }), print, nil
 }

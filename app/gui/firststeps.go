@@ -42,7 +42,7 @@ func newFirstSteps() *firstSteps {
 	middle := func(t *inkText, y float32) { f.texts = append(f.texts, stepText{t, stepsWidth / 2, y, true}) }
 	middle(newText("A new plan", assets.Light, 28, roleInk), 18)
 	middle(newText("Three marks are enough for a first sight line.", assets.Regular, 14, roleInk2), 54)
-	middle(newText("or open a sample plan from the Help menu, or drop a plan file here", assets.Regular, 12.5, roleInk2), 350)
+	middle(newText("or open a sample plan from the Help menu, or drop a plan here, or a scan to trace", assets.Regular, 12.5, roleInk2), 350)
 	for i, s := range []struct{ key, head, one, two string }{
 		{"W", "Draw the walls", "Click corner to corner; type a length", "any time. Esc ends the run."},
 		{"O", "Place an observer", "A person, a seat, a counter: what they", "can see fills in as you move them."},

@@ -111,12 +111,24 @@ func (f *form) build(c card) {
 	if f.reach = newReachTable(c.reach); f.reach != nil {
 		f.page.Add(f.reach.box)
 	}
+	f.actions(c.actions)
 	if c.delete {
 		f.page.Add(inset(0, 10, 0, 0, container.NewHBox(newPushButton("Delete", func() { f.w.typedKey(fyne.KeyDelete) }))))
 	}
 	f.page.Refresh()
 	if other {
 		f.scroll.ScrollToTop()
+	}
+}
+
+// actions adds buttons, two in a row.
+func (f *form) actions(list []choice) {
+	for i := 0; i < len(list); i += 2 {
+		row := container.NewHBox()
+		for _, a := range list[i:min(i+2, len(list))] {
+			row.Add(inset(0, 0, 4, 0, newPushButton(a.text, a.do)))
+		}
+		f.page.Add(inset(0, 8, 0, 0, row))
 	}
 }
 

@@ -80,6 +80,6 @@ func emptyPlan(p *plan.Plan) bool {
 	for range p.Zones() {
 		return false
 	}
-	return p.Floor().Len() == 0 && p.NumWalls() == 0 && p.NumBlocks() == 0 && p.NumObservers() == 0 && p.NumTargets() == 0 &&
+	return p.Sheet().Underlay == nil && p.Floor().Len() == 0 && p.NumWalls() == 0 && p.NumBlocks() == 0 && p.NumObservers() == 0 && p.NumTargets() == 0 &&
 		p.NumStarts() == 0
 }

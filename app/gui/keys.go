@@ -41,6 +41,9 @@ func (w *window) typedKey(name fyne.KeyName) {
 	}
 	switch name {
 	case fyne.KeyEscape:
+		if w.leaveUnderlay() {
+			return
+		}
 		if w.toolAt != 0 {
 			w.choose(0)
 		}

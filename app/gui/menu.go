@@ -60,6 +60,7 @@ func (w *window) fileMenu() []command {
 	return append(list,
 		command{label: "Save", key: "Ctrl+S", shortcut: ctrl(fyne.KeyS, 0), do: func() { w.save(nil) }, rule: true},
 		command{label: "Save as…", key: "Ctrl+Shift+S", shortcut: ctrl(fyne.KeyS, fyne.KeyModifierShift), do: func() { w.askSave(nil) }},
+		command{label: "Underlay…", key: "Ctrl+U", shortcut: ctrl(fyne.KeyU, 0), do: w.underlayOrAsk, rule: true},
 		command{label: "Export picture…", key: "Ctrl+E", shortcut: ctrl(fyne.KeyE, 0), do: w.askPicture},
 		command{label: "Close the window", key: "Ctrl+W", shortcut: ctrl(fyne.KeyW, 0), do: func() { w.unlessUnsaved(w.shut) }, rule: true},
 		command{label: "Quit", key: "Ctrl+Q", shortcut: ctrl(fyne.KeyQ, 0), do: w.desk.quit})

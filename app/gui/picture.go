@@ -33,6 +33,8 @@ type baseKey struct {
 	camera    view.Camera
 	dark      bool
 	held      string
+	underlay  *plan.Underlay
+	photo     *paint.Photo
 	contours  *study.Contour // the first of the lines of walking distance
 	old       bool           // those lines are out of date
 }
@@ -97,6 +99,9 @@ func (p *picture) scene() *paint.Scene {
 	if w.session.Previewing() && !slices.Contains(w.sketch.Dragged, plan.Ref{Kind: plan.KindFloor}) {
 		s.Old, s.Dragged = w.session.Committed(), w.sketch.Dragged
 	}
+	if u := s.Plan.Sheet().Underlay; u != nil && u.Image == w.under.path {
+		s.Photo = w.under.photo
+	}
 	if w.view.inside {
 		x, y := w.view.place()
 		s.Pointer = &[2]float64{x, y}
@@ -111,6 +116,9 @@ func keyOf(s *paint.Scene) baseKey {
 		shown = s.Old
 	}
 	k := baseKey{obstacles: shown.Obstacles(), eye: shown.Walker().Eye, camera: s.Camera, dark: s.Theme == dark}
+	if s.Photo != nil {
+		k.underlay, k.photo = s.Plan.Sheet().Underlay, s.Photo
+	}
 	if shown.Floor().Len() == 0 {
 		k.marks = shown.Marks()
 	}

@@ -9,7 +9,6 @@ import (
 	"fyne.io/fyne/v2/driver/desktop"
 	"fyne.io/fyne/v2/widget"
 
-	"enfilade/canvas/paint"
 	"enfilade/canvas/tool"
 	"enfilade/canvas/view"
 )
@@ -194,7 +193,7 @@ func (v *planView) look(c view.Camera) {
 // fit shows the whole plan, and does so again when the window's size changes.
 func (v *planView) fit() {
 	v.fitted = true
-	v.glide.to(v.cam, view.Fit(paint.Bounds(v.w.session.Plan()), v.cam.W, v.cam.H, v.cam.K), v.see)
+	v.glide.to(v.cam, view.Fit(v.w.bounds(), v.cam.W, v.cam.H, v.cam.K), v.see)
 }
 
 // fitNow is fit at once, for another plan.
@@ -210,7 +209,7 @@ func (v *planView) resized(w, h int, pix float32) {
 	v.pix = pix
 	v.glide.stop()
 	if v.fitted {
-		v.cam = view.Fit(paint.Bounds(v.w.session.Plan()), w, h, float64(pix))
+		v.cam = view.Fit(v.w.bounds(), w, h, float64(pix))
 		return
 	}
 	v.cam = v.cam.Resize(w, h, float64(pix))

@@ -30,6 +30,7 @@ type window struct {
 	errands errands
 	print   store.Print // of the plan's file when it was last read or written
 	noted   noted       // what the keeper was told last
+	under   underlay
 
 	session *session.Session
 	runner  *live.Runner
@@ -91,6 +92,7 @@ func newWindow(d *desk) *window {
 	w.host = &host{w}
 	w.snapper.On = w.snapSet()
 	w.picture = newPicture(w)
+	w.under.errands = errands{do: p.do, guard: d.guarded, inline: p.inline}
 	w.tool = tools[0].make()
 	w.board = live.NewBoard(w.do, w.answered)
 	w.runner = live.New(p.solver, w.board.Put)
@@ -181,6 +183,7 @@ func (w *window) acted() {
 		return
 	}
 	p := w.session.Plan()
+	w.followUnderlay(p)
 	hovered := w.sketch.Hover
 	w.sketch = w.tool.Sketch(w.host)
 	if w.sketch.Hover != hovered {

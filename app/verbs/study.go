@@ -37,7 +37,7 @@ func (v *studyVerb) Run(ctx context.Context, p *Program) error {
 		return fmt.Errorf("%s: %w", v.Plan, err)
 	}
 	if v.Picture != "" {
-		if err := drawPicture(v.Picture, v.Theme, drawn, result); err != nil {
+		if err := p.drawPicture(v, drawn, result); err != nil {
 			return err
 		}
 	}
