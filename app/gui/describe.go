@@ -56,7 +56,9 @@ func (w *window) describe(p *plan.Plan, sel []plan.Ref) card {
 	case 0:
 		return w.describeNothing(p)
 	case 1:
-		return w.describeOne(p, sel[0])
+		c := w.describeOne(p, sel[0])
+		c.fields = append(c.fields, w.markFields(p, sel)...)
+		return c
 	}
 	return w.describeMany(p, sel)
 }
@@ -288,26 +290,6 @@ func (w *window) describeOne(p *plan.Plan, r plan.Ref) card {
 	case plan.KindFloor:
 		c.title, c.icon = "Floor", "floor"
 		c.where = "the outline within which all happens"
-	}
-	return c
-}
-
-// describeMany counts what is selected; what all of it shares can be changed at once.
-func (w *window) describeMany(p *plan.Plan, sel []plan.Ref) card {
-	count := map[plan.Kind]int{}
-	for _, r := range sel {
-		count[r.Kind]++
-	}
-	var parts []string
-	for k := plan.KindFloor; k <= plan.KindRoute; k++ {
-		if n := count[k]; n > 0 {
-			parts = append(parts, counted(n, k.String()))
-		}
-	}
-	c := card{key: fmt.Sprint(sel, w.unit()), title: fmt.Sprintf("%d items", len(sel)), colour: -1, delete: true,
-		hint: []string{strings.Join(parts, ", ")}}
-	if count[plan.KindWall] == len(sel) {
-		w.describeWalls(&c, p, sel)
 	}
 	return c
 }

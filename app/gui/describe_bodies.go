@@ -55,25 +55,6 @@ func (w *window) setKind(x *plan.Wall, k plan.WallKind) {
 	}
 }
 
-// describeWalls changes several walls at once.
-func (w *window) describeWalls(c *card, p *plan.Plan, sel []plan.Ref) {
-	first, same := plan.Wall{}, true
-	for i, r := range sel {
-		x, _ := p.Wall(r.ID)
-		if i == 0 {
-			first = x
-		}
-		same = same && x.Thickness == first.Thickness
-	}
-	f := w.lengthField("Thickness", first.Thickness, func(v int32) error {
-		return within(v, 0, plan.MaxThickness, func() error { return w.doEdit(thickness(p, sel, v)) })
-	})
-	if !same {
-		f.text, f.note = "", "mixed"
-	}
-	c.fields = []field{f}
-}
-
 // describeOpening is the form of a door or a gap.
 func (w *window) describeOpening(c *card, x plan.Opening) {
 	c.title, c.icon = "Opening", "door"
@@ -159,15 +140,4 @@ func (w *window) describeZone(c *card, x plan.Zone) {
 	}
 	c.fault = problemOf(w.results.result, plan.Ref{Kind: plan.KindZone, ID: x.ID})
 	c.reach = w.reachRows(x.ID)
-}
-
-// thickness returns the edit that gives several walls a thickness, as one step.
-func thickness(p *plan.Plan, sel []plan.Ref, v int32) plan.Edit {
-	e := plan.Steps{Text: "change thickness"}
-	for _, r := range sel {
-		x, _ := p.Wall(r.ID)
-		x.Thickness = v
-		e.Edits = append(e.Edits, plan.SetWall{Wall: x})
-	}
-	return e
 }

@@ -19,6 +19,8 @@ type editing struct {
 	panel      *editPanel      // nil when none is open
 	panelLayer *fyne.Container // over the picture
 	problems   *problems
+	manyKey    manyKey
+	many       card // of manyKey
 }
 
 // editMenu is the Edit menu: what is done to the selection.

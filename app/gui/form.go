@@ -225,6 +225,9 @@ func (f *form) put(c card) {
 		}
 		switch {
 		case r.entry != nil:
+			if r.entry.PlaceHolder != r.field.empty {
+				r.entry.SetPlaceHolder(r.field.empty)
+			}
 			r.entry.put(r.field.text)
 		case r.pick != nil:
 			r.pick.put(r.field.chosen)

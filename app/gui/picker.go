@@ -27,13 +27,14 @@ func newPicker(choices []string, picked func(i int)) *picker {
 	return p
 }
 
-// put shows a choice; -1 shows none.
+// put shows a choice; -1 says that several items have different ones.
 func (p *picker) put(i int) {
-	if i < 0 || i >= len(p.choices) {
-		p.text.set("")
-		return
+	text, r := mixed, roleInk3
+	if i >= 0 && i < len(p.choices) {
+		text, r = p.choices[i], roleInk
 	}
-	p.text.set(p.choices[i])
+	p.text.role = r
+	p.text.set(text)
 }
 
 func (p *picker) drop() {

@@ -241,7 +241,8 @@ func (r *problemRow) MouseIn(*desktop.MouseEvent) {
 	r.hovered = true
 	w := r.p.w
 	w.tips.after(nameDelay, r.tip, func() fyne.Position {
-		return w.app.Driver().AbsolutePositionForObject(r).AddXY(20, -26)
+		size := textSize(r.tip, assets.Regular, 12) // to the left of the column, away from the buttons
+		return w.app.Driver().AbsolutePositionForObject(r).AddXY(-size.Width-24, 12)
 	})
 	r.Refresh()
 }

@@ -150,7 +150,7 @@ func unreached(p *plan.Plan, rows []Approach, told []plan.Finding) (out []plan.F
 		if own || solved == 0 {
 			continue
 		}
-		text := "is seen from no place that a walk from a start leads to"
+		text := "no walk leads in sight of it"
 		if reason != "" {
 			text += ": " + reason
 		}

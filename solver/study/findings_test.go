@@ -20,7 +20,7 @@ func TestFindings(t *testing.T) {
 		{"start outside", "floor 0,0 10,0 10,8 0,8; start 12,3", "start S1 lies outside the floor", true},
 		{"observer in a thick wall", "floor 0,0 10,0 10,8 0,8; wall 5,1 5,7 th=0.4; observer 5.1,3", "observer O1 is inside wall W1", true},
 		{"target in a wall", "floor 0,0 10,0 10,8 0,8; wall 5,1 5,7 th=0.4; target 4.9,3", "target T1 is inside wall W1", true},
-		{"target shut in", "floor 0,0 10,0 10,8 0,8; wall 4,4 6,4 6,6 4,6 4,4; target 5,5; start 1,1", "target T1 is seen from no place that a walk", false},
+		{"target shut in", "floor 0,0 10,0 10,8 0,8; wall 4,4 6,4 6,6 4,6 4,4; target 5,5; start 1,1", "target T1 no walk leads in sight of it", false},
 		{"nearly met", "floor 0,0 10,0 10,8 0,8; wall 5,1 5,7; wall 1,4 4.985,4", "wall W2 ends 15.0 mm before wall W1", true},
 		{"nothing", "floor 0,0 10,0 10,8 0,8; wall 5,1 5,7; observer 1,1; target 8,4; start 1,1", "", false},
 	}
