@@ -210,8 +210,8 @@ func TestMixedThickness(t *testing.T) {
 		r.keys(fyne.KeyReturn)
 	}
 	r.selectAll()
-	if x := r.line("Thickness"); x.entry.Text != "" || x.field.note != "mixed" {
-		t.Errorf("two thicknesses are shown as %q, %q", x.entry.Text, x.field.note)
+	if x := r.line("Thickness"); x.entry.Text != "" || x.entry.PlaceHolder != "mixed" {
+		t.Errorf("two thicknesses are shown as %q, %q", x.entry.Text, x.entry.PlaceHolder)
 	}
 }
 
