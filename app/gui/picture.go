@@ -88,7 +88,7 @@ func (p *picture) scene() *paint.Scene {
 		Plan: w.session.Plan(), Result: r.result, Camera: w.view.cam, Theme: themed(),
 		Stale:    r.stale(live.StageSights),
 		Observer: r.shownObserver(), Start: pr.start, Target: pr.target,
-		Selected: w.session.Selection(), Hover: w.sketch.Hover, AllRegions: r.all,
+		Selected: w.outlined(), Hover: w.sketch.Hover, AllRegions: r.all,
 	}
 	if sel := w.session.Selection(); len(sel) == 1 && sel[0].Kind == plan.KindTarget && r.passing == "" {
 		s.SeenFrom, s.Stale = sel[0].ID, r.stale(live.StageSeenFrom)
