@@ -1,8 +1,10 @@
 package plantest
 
 import (
+	"flag"
 	"os"
 	"strconv"
+	"testing"
 )
 
 // Seeds returns how many seeds a test tries: the given number, or as many as the environment variable PLANTEST_SEEDS says,
@@ -12,4 +14,15 @@ func Seeds(usual int) uint64 {
 		return uint64(n)
 	}
 	return uint64(usual)
+}
+
+// FullChecks has property tests draw as many plans under -short as without, where rapid would draw a fifth: the tests count
+// how often they hit what they are for, and would miss it. To be called from TestMain. What -short leaves out are the tests
+// that take minutes.
+func FullChecks() {
+	flag.Parse()
+	checks := flag.Lookup("rapid.checks")
+	if n, err := strconv.Atoi(checks.Value.String()); testing.Short() && err == nil {
+		_ = checks.Value.Set(strconv.Itoa(5 * n)) // a number, as it was
+	}
 }
