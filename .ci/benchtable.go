@@ -21,6 +21,7 @@ var rows = []struct{ title, ours, theirs, unit string }{
 	{"one region, median", "Region", "CGALRegion", "median-ns"},
 	{"one approach", "Approach", "CGALWalk", "ns/op"},
 	{"one full walk", "FullWalk", "CGALWalk", "ns/op"},
+	{"10 starts x 50 targets", "AllApproaches", "", "ns/op"},
 }
 
 // key names one figure: benchmark, plan, walls, unit.
@@ -76,7 +77,7 @@ func median(list []float64) (float64, bool) {
 
 func print(figures map[key][]float64) {
 	out := tabwriter.NewWriter(os.Stdout, 0, 0, 2, ' ', tabwriter.AlignRight)
-	fmt.Fprintln(out, "what\tplan\twalls\tours\tCGAL\ttimes as fast\tallocations\tbytes\tns/triangle\tours, growth\tCGAL, growth\t")
+	fmt.Fprintln(out, "what\tplan\twalls\tours\tCGAL\ttimes as fast\tallocations\tbytes\tns/triangle\tsingle floods\tours, growth\tCGAL, growth\t")
 	for _, r := range rows {
 		first := map[string]key{}
 		for _, k := range sizes(figures, r.ours, r.unit) {
@@ -86,8 +87,8 @@ func print(figures map[key][]float64) {
 			mine := cell{figures, key{r.ours, k.plan, k.walls, r.unit}}
 			yours := cell{figures, key{r.theirs, k.plan, k.walls, r.unit}}
 			base := first[k.plan]
-			fmt.Fprintf(out, "%s\t%s\t%d\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t\n", r.title, k.plan, k.walls, mine.time(), yours.time(),
-				over(yours, mine), mine.at("allocs/op").number(), mine.at("B/op").number(), mine.at("ns/triangle").number(),
+			fmt.Fprintf(out, "%s\t%s\t%d\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t%s\t\n", r.title, k.plan, k.walls, mine.time(), yours.time(),
+				over(yours, mine), mine.at("allocs/op").number(), mine.at("B/op").number(), mine.at("ns/triangle").number(), mine.at("floods").number(),
 				over(mine, mine.size(base.walls)), over(yours, yours.size(base.walls)))
 		}
 	}
