@@ -18,9 +18,9 @@ const (
 	contourFifth  = 1.3
 	contourFaint  = 0.5 // strength
 	contourStrong = 0.75
-	contourApart  = 9  // px between two lines at least; with less only some of them are drawn
-	contourLabels = 44 // px between two lines that are both labelled at least
-	contourCell   = 200
+	contourApart  = 9   // px between two lines at least; with less only some of them are drawn
+	contourLabels = 44  // px between two lines that are both labelled at least
+	contourCell   = 320 // px, about
 )
 
 // contourEvery returns which lines are drawn: each so many, by five and two in turn, that they stay so many px apart.
