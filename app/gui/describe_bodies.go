@@ -112,7 +112,7 @@ func (w *window) describeBlock(c *card, x plan.Block) {
 		c.fields = append(c.fields, w.lengthField("Radius", x.Circle.Radius, func(v int32) error {
 			return within(v, 1, plan.MaxRound, func() error {
 				x.Circle = &plan.Circle{At: x.Circle.At, Radius: v}
-				x.Ring = plan.CircleRing(x.Circle.At, v, x.Ring.Len()/4*4)
+				x.Ring = plan.RoundRing(x.Circle.At, v)
 				return w.doEdit(tool.Named("change radius", set(x)))
 			})
 		}))

@@ -143,3 +143,29 @@ func TestBodyOfNewWalls(t *testing.T) {
 		t.Errorf("drew %+v", w)
 	}
 }
+
+// TestTypedInFeet: in a plan in feet and inches a typed length is one, and the label and the field tell it so.
+func TestTypedInFeet(t *testing.T) {
+	r := newEmpty(t)
+	sheet := r.session.Plan().Sheet()
+	sheet.Unit = "ft"
+	if err := r.doEdit(plan.SetSheet{Sheet: sheet}); err != nil {
+		t.Fatal(err)
+	}
+	r.runes("w")
+	r.click(0, 0)
+	r.move(3.048, 0)
+	if got := r.sketch.Label; got != `10' 0" · 0°` || !strings.HasPrefix(r.status.snap.text, "Snap: ") {
+		t.Errorf("label %q, snap %q", got, r.status.snap.text)
+	}
+	r.runes(`10'6"`)
+	r.keys(fyne.KeyTab)
+	r.runes("90")
+	if got := r.sketch.Fields[0].Live; got != `10' 6"` {
+		t.Errorf("the field stands for %q", got)
+	}
+	r.keys(fyne.KeyReturn, fyne.KeyReturn)
+	if got := r.points("W1"); !slices.Equal(got, []exact.Pt{{}, {Y: 10*3048 + 6*254}}) {
+		t.Errorf("the wall runs through %v", got)
+	}
+}

@@ -150,7 +150,7 @@ func (w *window) askRows() {
 		w.say("A door is duplicated with Ctrl+D; there is only one floor.")
 		return
 	}
-	step := max(1, pick.GridStep(w.view.cam))
+	step := max(1, w.host.Snapper().Step(w.view.cam))
 	text := func(v int32) string { return formatLength(roundUp(v+beside, step), w.unit()) }
 	unit := unitMark(w.unit())
 	p := &editPanel{title: "Duplicate", hint: "Enter duplicates, Esc leaves it",

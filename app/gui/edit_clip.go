@@ -8,7 +8,6 @@ import (
 
 	"fyne.io/fyne/v2"
 
-	"enfilade/canvas/pick"
 	"enfilade/fileio/planfile"
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
@@ -112,7 +111,7 @@ func (w *window) inSight(lo, hi exact.Pt) bool {
 func (w *window) toMiddle(lo, hi exact.Pt) exact.Vec {
 	c := w.view.cam
 	by := c.Grid(float64(c.W)/2, float64(c.H)/2).Sub(middleOf(lo, hi))
-	step := max(1, pick.GridStep(c))
+	step := max(1, w.host.Snapper().Step(c))
 	by.X, by.Y = by.X/step*step, by.Y/step*step
 	return by
 }

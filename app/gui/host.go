@@ -41,8 +41,11 @@ func (h *host) Defaults() tool.Defaults { return h.w.measures }
 // SetDefaults is for the tools.
 func (h *host) SetDefaults(d tool.Defaults) { h.w.measures = d }
 
-// Snapper is for the tools.
-func (h *host) Snapper() *pick.Snapper { return &h.w.snapper }
+// Snapper is for the tools. Its grid goes by the plan's display unit.
+func (h *host) Snapper() *pick.Snapper {
+	h.w.snapper.Feet = h.w.unit() == "ft"
+	return &h.w.snapper
+}
 
 // ParseLength is for the tools.
 func (h *host) ParseLength(text string) (int32, error) { return parseLength(text, h.w.unit()) }

@@ -1,6 +1,8 @@
 package gui
 
 import (
+	"strings"
+
 	"enfilade/canvas/pick"
 	"enfilade/canvas/view"
 	"enfilade/solver/plan"
@@ -48,12 +50,12 @@ func (w *window) snapMenu() []command {
 }
 
 // snapText says what the pointer snaps to.
-func snapText(s *pick.Snap, cam view.Camera, on pick.Set) string {
+func (w *window) snapText(s *pick.Snap, cam view.Camera) string {
 	if cam.Scale == 0 {
 		return ""
 	}
-	grid := "Snap: grid " + formatLength(pick.GridStep(cam), "m") + " m"
-	if !on.Has(pick.SnapGrid) {
+	grid := strings.TrimSpace("Snap: grid " + formatLength(w.snapper.Step(cam), w.unit()) + " " + unitMark(w.unit()))
+	if !w.snapper.On.Has(pick.SnapGrid) {
 		grid = "Snap: no grid"
 	}
 	if s == nil {

@@ -195,7 +195,7 @@ func (w *window) acted() {
 	w.view.over.show(w.sketch, w.view.cam, w.view.pix)
 	w.view.Refresh()
 	w.status.at(w.view.cam.Grid(w.view.place()), p.Sheet().Unit, w.view.inside)
-	w.status.snap.set(snapText(w.sketch.Snap, w.view.cam, w.snapper.On))
+	w.status.snap.set(w.snapText(w.sketch.Snap, w.view.cam))
 	w.status.hint.set(w.onFoot(w.hint()))
 	w.status.count(p, w.problems)
 	w.form.update(p, w.session.Selection())

@@ -25,10 +25,10 @@ const standOff = 1.5
 
 // FaceAt returns the nearest face of a wall, a block or the floor's inside within reach of the pixel place (x, y), and the
 // grid point on its free side. On a level or upright face of whole grid units the point lies on the face itself; along it
-// the point takes the snap grid. Screens and glazing have faces too; openings are not looked at.
-func FaceAt(p *plan.Plan, cam view.Camera, x, y float64) (Face, bool) {
+// the point takes steps. Screens and glazing have faces too; openings are not looked at.
+func FaceAt(p *plan.Plan, cam view.Camera, x, y float64, step int32) (Face, bool) {
 	s := pointer(cam, x, y)
-	f := faceFinder{s: s, cam: cam, best: units(cam, faceReach)}
+	f := faceFinder{s: s, step: step, best: units(cam, faceReach)}
 	for _, w := range p.Walls() {
 		right2, left2 := w.Sides2()
 		if w.Hidden || s.apart(w.Line, f.best+float64(max(right2, left2))/2) {
@@ -53,7 +53,7 @@ func FaceAt(p *plan.Plan, cam view.Camera, x, y float64) (Face, bool) {
 
 type faceFinder struct {
 	s    spot
-	cam  view.Camera
+	step int32
 	best float64
 	face Face
 	ok   bool
@@ -105,9 +105,9 @@ func (f *faceFinder) free(on spot, a, b exact.Pt, nx, ny, off float64) exact.Pt 
 	whole := off == math.Trunc(off)
 	switch {
 	case whole && a.Y == b.Y:
-		return onGridEdge(f.cam, on, lifted(a, nx, ny, off), lifted(b, nx, ny, off))
+		return alongEdge(on, lifted(a, nx, ny, off), lifted(b, nx, ny, off), f.step)
 	case whole && a.X == b.X:
-		return onGridEdge(f.cam, on, lifted(a, nx, ny, off), lifted(b, nx, ny, off))
+		return alongEdge(on, lifted(a, nx, ny, off), lifted(b, nx, ny, off), f.step)
 	}
 	return spot{on.x + nx*standOff, on.y + ny*standOff}.grid()
 }

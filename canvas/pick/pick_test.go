@@ -187,6 +187,20 @@ func TestGridStep(t *testing.T) {
 	}
 }
 
+// TestFeetStep: the grid of a plan in feet and inches goes by whole inches and feet.
+func TestFeetStep(t *testing.T) {
+	for perMetre, want := range map[float64]int32{5000: 10, 300: 127, 150: 254, 40: 762, 20: 1524, 10: 3048, 5: 2 * 3048, 1: 10 * 3048} {
+		if got := pick.FeetStep(view.Camera{Scale: perMetre / 1000, K: 1}); got != want {
+			t.Errorf("%g px/m: step %d, want %d", perMetre, got, want)
+		}
+	}
+	s := pick.Snapper{On: pick.AllSnaps, Feet: true}
+	px, py := cam(1).Pixel(m(1.23, -5.37))
+	if got := s.At(plan.New(), cam(1), px, py, pick.SnapTo{}); got.At.X%762 != 0 || got.At.Y%762 != 0 {
+		t.Errorf("snapped to %v, want whole 3 inches", got.At)
+	}
+}
+
 func TestFaceAt(t *testing.T) {
 	p := room()
 	for _, c := range []struct {
@@ -206,13 +220,13 @@ func TestFaceAt(t *testing.T) {
 		{"outside the floor", -8.2, 2.52, m(-8, 2.5), 0},
 	} {
 		px, py := cam(1).Pixel(m(c.x, c.y))
-		f, ok := pick.FaceAt(p, cam(1), px, py)
+		f, ok := pick.FaceAt(p, cam(1), px, py, pick.GridStep(cam(1)))
 		if !ok || f.At != c.at || math.Abs(math.Remainder(f.Normal-c.normal, 360)) > 1e-9 {
 			t.Errorf("%s: %+v %v, want %v facing %g", c.name, f, ok, c.at, c.normal)
 		}
 	}
 	px, py := cam(1).Pixel(m(1, 1.5))
-	if f, ok := pick.FaceAt(p, cam(1), px, py); ok {
+	if f, ok := pick.FaceAt(p, cam(1), px, py, pick.GridStep(cam(1))); ok {
 		t.Errorf("far from every face: %+v", f)
 	}
 }
@@ -229,7 +243,7 @@ func TestFaceLaws(t *testing.T) {
 		p := plan.From(plan.Parts{Walls: []plan.Wall{{ID: "W1", Line: plan.ChainOf(a, b), Thickness: thick}}})
 		mid := exact.Pt{X: (a.X + b.X) / 2, Y: (a.Y + b.Y) / 2}
 		px, py := cam(1).Pixel(mid)
-		f, ok := pick.FaceAt(p, cam(1), px+rapid.Float64Range(-15, 15).Draw(t, "dx"), py)
+		f, ok := pick.FaceAt(p, cam(1), px+rapid.Float64Range(-15, 15).Draw(t, "dx"), py, pick.GridStep(cam(1)))
 		if !ok {
 			t.Fatal("no face at a wall's middle")
 		}

@@ -79,14 +79,39 @@ const (
 	guideLeast = 30
 )
 
+// stepLeast is how wide a step of the snap grid is at the least, in px at 100 %.
+const stepLeast = 3
+
 // GridStep returns the snap grid's step at this zoom, in grid units: the smallest of 1, 2, 5 times a power of ten, from
 // 0.1 mm up, that is at least 3 px wide. At the scale a gallery opens in it is 0.10 m.
 func GridStep(cam view.Camera) int32 {
-	const least = 3
-	want := units(cam, least)
+	want := units(cam, stepLeast)
 	for step := int64(1); step <= int64(plan.MaxCoord); step *= 10 {
 		for _, d := range []int64{1, 2, 5} {
 			if float64(d*step) >= want {
+				return int32(d * step)
+			}
+		}
+	}
+	return plan.MaxCoord
+}
+
+// FeetStep is GridStep for plans in feet and inches: half an inch, 1, 3 or 6 inches, or 1, 2, 5 times a power of ten feet;
+// nearer than half an inch can be seen, GridStep.
+func FeetStep(cam view.Camera) int32 {
+	const inch, foot = 254, 3048
+	want := units(cam, stepLeast)
+	if want <= inch/4 {
+		return GridStep(cam)
+	}
+	for _, step := range []int32{inch / 2, inch, 3 * inch, 6 * inch} {
+		if float64(step) >= want {
+			return step
+		}
+	}
+	for step := int64(foot); step <= int64(plan.MaxCoord); step *= 10 {
+		for _, d := range []int64{1, 2, 5} {
+			if float64(d*step) >= want && d*step <= int64(plan.MaxCoord) {
 				return int32(d * step)
 			}
 		}

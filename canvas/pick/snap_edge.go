@@ -1,7 +1,6 @@
 package pick
 
 import (
-	"enfilade/canvas/view"
 	"enfilade/solver/exact"
 )
 
@@ -74,11 +73,6 @@ func alongEdge(f spot, a, b exact.Pt, step int32) exact.Pt {
 }
 
 func within(v, a, b int32) int32 { return min(max(v, min(a, b)), max(a, b)) }
-
-// onGridEdge is alongEdge with the grid's step at this zoom.
-func onGridEdge(cam view.Camera, f spot, a, b exact.Pt) exact.Pt {
-	return alongEdge(f, a, b, GridStep(cam))
-}
 
 // crossing returns where two pieces cross or touch, rounded exactly to the nearest grid point; not for parallel ones.
 func crossing(a, b, c, d exact.Pt) (exact.Pt, bool) {

@@ -9,7 +9,8 @@ import (
 // Snapper finds where places snap to. It keeps its scratch space from call to call, so that a move of the pointer allocates
 // nothing, and the boxes around what the last plan has to snap to.
 type Snapper struct {
-	On   Set // the kinds of snapping that are switched on
+	On   Set  // the kinds of snapping that are switched on
+	Feet bool // the grid goes by feet and inches
 	kept kept
 	near []nearEdge
 }
@@ -33,7 +34,7 @@ func (n *Snapper) At(p *plan.Plan, cam view.Camera, x, y float64, to SnapTo) Sna
 	}
 	f := search{n: n, s: s, cam: cam, to: to, step: 1, reach: units(cam, snapPoint), guide: units(cam, snapGuide)}
 	if n.On.Has(SnapGrid) {
-		f.step = GridStep(cam)
+		f.step = n.Step(cam)
 	}
 	f.end.best, f.point.best, f.along.best = f.reach, f.reach, units(cam, snapAlong)
 	n.near = n.near[:0]
@@ -48,6 +49,14 @@ func (n *Snapper) At(p *plan.Plan, cam view.Camera, x, y float64, to SnapTo) Sna
 		return f.onEdge()
 	}
 	return f.inLine()
+}
+
+// Step returns the snap grid's step at this zoom, in grid units.
+func (n *Snapper) Step(cam view.Camera) int32 {
+	if n.Feet {
+		return FeetStep(cam)
+	}
+	return GridStep(cam)
 }
 
 // search is one search for where a place snaps to.

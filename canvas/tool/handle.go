@@ -92,7 +92,7 @@ func faceEndEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 	}
 	x, y := h.Camera().Pixel(t.Face[1-g.hit.Index])
 	var snap pick.Snap
-	if f, ok := pick.FaceAt(h.Plan(), h.Camera(), x, y); ok && !e.Ctrl && straight(f, *t.Face) {
+	if f, ok := pick.FaceAt(h.Plan(), h.Camera(), x, y, gridStep(h, e)); ok && !e.Ctrl && straight(f, *t.Face) {
 		snap = pick.Snap{At: f.Place(h.Camera(), e.X, e.Y, gridStep(h, e)), Kind: pick.SnapAlong, Ref: f.Ref, Edge: f.Ends}
 	} else {
 		from := t.Face[1-g.hit.Index]

@@ -145,7 +145,7 @@ func (t *Mark) faceTo(h Host, e Pointer) ([2]exact.Pt, *pick.Snap) {
 
 // targetPlace returns where a target goes: on the free side of a near face, else on the grid.
 func targetPlace(h Host, e Pointer) (placed, *pick.Snap) {
-	if f, ok := pick.FaceAt(h.Plan(), h.Camera(), e.X, e.Y); ok && !e.Ctrl {
+	if f, ok := pick.FaceAt(h.Plan(), h.Camera(), e.X, e.Y, gridStep(h, e)); ok && !e.Ctrl {
 		return placed{f.At, &f.Normal, &f}, &pick.Snap{At: f.At, Kind: pick.SnapAlong, Ref: f.Ref, Edge: f.Ends}
 	}
 	snap := h.Snapper().At(plan.New(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl})

@@ -55,7 +55,7 @@ func gridStep(h Host, e Pointer) int32 {
 	if e.Ctrl || !h.Snapper().On.Has(pick.SnapGrid) {
 		return 1
 	}
-	return pick.GridStep(h.Camera())
+	return h.Snapper().Step(h.Camera())
 }
 
 // unitsOf returns how many grid units so many px at 100 % are.

@@ -69,7 +69,7 @@ func readBlock(o *object) plan.Block {
 	}
 	b.Ring = o.ring("ring", b.Circle == nil)
 	if b.Ring.Len() == 0 && b.Circle != nil {
-		b.Ring = plan.CircleRing(b.Circle.At, b.Circle.Radius, 24)
+		b.Ring = plan.RoundRing(b.Circle.At, b.Circle.Radius)
 		for _, p := range b.Ring.All() {
 			if !plan.InRange(p) {
 				o.fail("circle", "reaches outside the legal range of 50 km about the origin")

@@ -169,7 +169,7 @@ func TestRead(t *testing.T) {
 	if d := parts.Openings[1]; d.At != 1000 || d.Width != 5 {
 		t.Errorf("opening %+v", d)
 	}
-	if n := parts.Blocks[0].Ring.Len(); n != 24 || parts.Blocks[0].Ring.At(6) != (exact.Pt{X: 0, Y: 500}) {
+	if n := parts.Blocks[0].Ring.Len(); n != 20 || parts.Blocks[0].Ring.At(5) != (exact.Pt{X: 0, Y: 500}) {
 		t.Errorf("the circle's ring has %d corners: %v", n, parts.Blocks[0].Ring)
 	}
 	if parts.Walker != plan.DefaultWalker() || parts.Sheet.Unit != "m" || parts.Floor.Len() != 0 {
