@@ -17,6 +17,7 @@ type Frame struct {
 	canvas canvas
 	inked  pairs   // the colour of the base's ink
 	clip   []uint8 // coverage of the region that is being washed
+	rim    []paint.Pt
 }
 
 // Draw copies the base and blends the overlay into it. The image is tight, begins at (0, 0), is opaque, and belongs to the
@@ -109,10 +110,25 @@ func (f *Frame) washRegion(l *paint.List, op *paint.Op) {
 		p.colour(color.NRGBA{R: op.Colour.R, G: op.Colour.G, B: op.Colour.B, A: uint8(w.RimStrength*255 + 0.5)})
 		f.fill.open(l, op, width)
 		for _, sub := range l.Path(op) {
-			f.fill.strokeRun(l.Points[sub.First:sub.Last], true, paint.StrokeStyle{Width: width, Join: paint.RoundJoin})
+			f.rim = spaced(f.rim[:0], l.Points[sub.First:sub.Last])
+			f.fill.strokeRun(f.rim, true, paint.StrokeStyle{Width: width})
 		}
 		f.fill.r.Rasterize(p)
 	}
+}
+
+// spaced appends those points of a closed path that lie half a pixel from the one before: a rim is too faint and wide to show
+// less, and each corner costs.
+func spaced(dst, path []paint.Pt) []paint.Pt {
+	for _, q := range path {
+		if n := len(dst); n > 0 {
+			if dx, dy := q.X-dst[n-1].X, q.Y-dst[n-1].Y; dx*dx+dy*dy < 0.25 {
+				continue
+			}
+		}
+		dst = append(dst, q)
+	}
+	return dst
 }
 
 // fillRects fills a path of rectangles on whole pixels directly. It reports false when the path is something else, or when
