@@ -81,6 +81,8 @@ func (w *window) typedRune(r rune) {
 		w.zoom(0.8)
 	case '0':
 		w.view.fit()
+	case '9':
+		w.fitSelection()
 	}
 }
 

@@ -49,7 +49,7 @@ func keyGroups() []keyGroup {
 			{"Ctrl+L, Ctrl+H", "lock, hide; with Shift unlock, show everything"},
 		}},
 		{"Looking", [][2]string{
-			{"wheel, + and −", "zoom at the pointer"}, {"0, Home", "fit the plan"},
+			{"wheel, + and −", "zoom at the pointer"}, {"0, Home", "fit the plan"}, {"9", "fit the selection"},
 			{"middle button, Space", "drag to pan"},
 		}},
 		{"Files and menus", [][2]string{

@@ -101,14 +101,16 @@ func (w *window) studyMenu() []command {
 func (w *window) viewMenu() []command {
 	list := []command{
 		{label: "Fit the plan", icon: "fit", key: "0", do: w.view.fit},
+		{label: "Fit the selection", key: "9", do: w.fitSelection, dead: len(w.session.Selection()) == 0},
 		{label: "Zoom in", icon: "zoom-in", key: "+", do: func() { w.zoom(1.25) }},
 		{label: "Zoom out", icon: "zoom-out", key: "−", do: func() { w.zoom(0.8) }},
 		{label: "All regions", do: func() { w.results.all = !w.results.all; w.acted() }, checked: w.results.all, rule: true},
 		{label: "Walking distance", do: w.toggleWalking, checked: w.walking.shown, dead: w.session.Plan().NumStarts() == 0},
 	}
 	list = append(list, w.walkingMenu()...)
+	list = append(list, w.layerMenu()...)
 	list = append(list, []command{
-		{label: "Right column", do: w.toggleSide, checked: w.side.Visible()},
+		{label: "Right column", rule: true, do: w.toggleSide, checked: w.side.Visible()},
 		{label: "Theme", rule: true},
 	}...)
 	for _, t := range []struct{ name, choice string }{{"Light", themeLight}, {"Dark", themeDark}, {"As the system", themeSystem}} {

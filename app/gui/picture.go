@@ -33,6 +33,7 @@ type baseKey struct {
 	camera    view.Camera
 	dark      bool
 	held      string
+	without   paint.Layers
 	underlay  *plan.Underlay
 	photo     *paint.Photo
 	contours  *study.Contour // the first of the lines of walking distance
@@ -102,6 +103,7 @@ func (p *picture) scene() *paint.Scene {
 	if u := s.Plan.Sheet().Underlay; u != nil && u.Image == w.under.path {
 		s.Photo = w.under.photo
 	}
+	w.showLayers(s)
 	if w.view.inside {
 		x, y := w.view.place()
 		s.Pointer = &[2]float64{x, y}
@@ -116,6 +118,7 @@ func keyOf(s *paint.Scene) baseKey {
 		shown = s.Old
 	}
 	k := baseKey{obstacles: shown.Obstacles(), eye: shown.Walker().Eye, camera: s.Camera, dark: s.Theme == dark}
+	k.without = s.Without & (paint.LayerGrid | paint.LayerUnderlay)
 	if s.Photo != nil {
 		k.underlay, k.photo = s.Plan.Sheet().Underlay, s.Photo
 	}

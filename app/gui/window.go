@@ -11,6 +11,7 @@ import (
 
 	"enfilade/app/live"
 	"enfilade/app/session"
+	"enfilade/canvas/paint"
 	"enfilade/canvas/pick"
 	"enfilade/canvas/tool"
 	"enfilade/fileio/store"
@@ -31,6 +32,7 @@ type window struct {
 	print   store.Print // of the plan's file when it was last read or written
 	noted   noted       // what the keeper was told last
 	under   underlay
+	shown   shown
 
 	session *session.Session
 	runner  *live.Runner
@@ -92,6 +94,7 @@ func newWindow(d *desk) *window {
 	w.host = &host{w}
 	w.snapper.On = w.snapSet()
 	w.picture = newPicture(w)
+	w.shown.without = paint.Layers(p.app.Preferences().Int(prefHidden))
 	w.under.errands = errands{do: p.do, guard: d.guarded, inline: p.inline}
 	w.tool = tools[0].make()
 	w.board = live.NewBoard(w.do, w.answered)

@@ -74,6 +74,9 @@ func (p *pen) floorRing(shown *plan.Plan) []place {
 // come in from 12 to 28 and go out from 90 to 180, the coarse ones come in from 2 to 6 and go out with the fine ones.
 // They are drawn over one known colour, so they are mixed with it here and overlap without darkening.
 func (p *pen) gridLines(within []place, ground color.NRGBA, strength float64) {
+	if !p.s.layer(LayerGrid) {
+		return
+	}
 	perM := p.cam.PerMetre()
 	out := 1 - ramp(perM, 90, 180)
 	fine, coarse := ramp(perM, 12, 28)*out, ramp(perM, 2, 6)*out

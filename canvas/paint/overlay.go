@@ -24,11 +24,17 @@ func Overlay(s *Scene, l *List) {
 	foot := p.setSlip()
 	p.obstruct(main)
 	p.obstructRoutes()
-	p.placeLabels(main)
+	if s.layer(LayerLabels) {
+		p.placeLabels(main)
+	}
 
-	p.regions()
+	if s.layer(LayerRegions) {
+		p.regions()
+	}
 	p.draggedLow()
-	p.edges()
+	if s.layer(LayerRegions) {
+		p.edges()
+	}
 	p.draggedBodies()
 	p.writeLabels(true)
 	p.routes()
@@ -38,7 +44,9 @@ func Overlay(s *Scene, l *List) {
 	p.outlines()
 	p.problems()
 	p.drawSlip(foot)
-	p.rulers()
+	if s.layer(LayerRulers) {
+		p.rulers()
+	}
 }
 
 // heldKey says what List.memory.held was drawn from.
@@ -132,27 +140,35 @@ func (p *pen) walkShown(a *study.Approach) bool {
 	return ok1 && ok2 && !s.Hidden && !t.Hidden
 }
 
-// walks draws the approaches to the chosen target: those from other starts thin, the chosen one whole.
+// walks draws approaches: the chosen one whole, those that are shown beside it thin.
 func (p *pen) walks(main *study.Approach) {
-	target, ok := p.s.Plan.Target(p.s.Target)
-	if !ok || p.s.Result == nil {
+	if p.s.Result == nil {
 		return
 	}
 	for i := range p.s.Result.Approaches {
 		a := &p.s.Result.Approaches[i]
-		if a.Target != p.s.Target || a.Start == p.s.Start || a.Problem != "" || !p.walkShown(a) {
+		if !p.s.layer(LayerApproaches) || !p.s.beside(a) || !p.walkShown(a) {
 			continue
 		}
+		target, _ := p.s.Plan.Target(a.Target)
 		p.otherApproach(a)
 		if a.Status == study.StatusApproach {
 			p.firstSight(p.mm(a.FirstSight), p.inView(a, target), FirstSightSmall, FirstSightSmall+1.6, p.theme.Red)
 		}
 	}
-	if main == nil {
+	target, ok := p.s.Plan.Target(p.s.Target)
+	if main == nil || !ok {
 		return
 	}
-	p.fullWalk(main)
-	p.sight(main)
+	if p.s.layer(LayerFullWalks) {
+		p.fullWalk(main)
+	}
+	if p.s.layer(LayerSightLines) {
+		p.sight(main)
+	}
+	if !p.s.layer(LayerApproaches) {
+		return
+	}
 	p.approach(main)
 	p.tightMark(main)
 	if main.Status != study.StatusNone {

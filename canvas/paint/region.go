@@ -174,13 +174,13 @@ func (p *pen) regions() {
 	}
 }
 
-// edges draws the borders of the region that is washed, and of all observers' when they are asked for.
+// edges draws the borders of the region that is washed, and of those of other observers that are asked for.
 func (p *pen) edges() {
 	if p.s.Stale {
 		return
 	}
 	for i, o := range p.s.Plan.Observers() {
-		if o.Hidden || (o.ID != p.s.Observer || p.s.SeenFrom != "") && !p.s.AllRegions {
+		if o.Hidden || (o.ID != p.s.Observer || p.s.SeenFrom != "") && !p.s.bordered(o.ID) {
 			continue
 		}
 		if r := p.s.sightOf(o.ID); r != nil && r.Problem == "" {

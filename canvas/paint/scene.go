@@ -29,6 +29,11 @@ type Scene struct {
 	ContourStep float64         // mm from one to the next
 	ContoursOld bool            // they have been out of date for a while
 
+	Without    Layers     // what is left out of the picture
+	Regions    []string   // ids of observers whose regions' borders are drawn too
+	WalkChoice WalkChoice // which approaches are drawn beside the chosen one
+	Walks      []Walk     // those of WalksPicked
+
 	Photo *Photo // the plan's underlay; nil for none, or where there is no picture to be had
 
 	Old     *plan.Plan  // the plan before a drag, nil when there is none: the dragged parts show faintly in their old place
@@ -93,6 +98,9 @@ func newPen(s *Scene, l *List) pen {
 	c := s.Camera
 	l.Reset(c.W, c.H, c.K)
 	l.Left = int(view.Ruler*c.K + 0.5)
+	if !s.layer(LayerRulers) {
+		l.Left = 0
+	}
 	return pen{List: l, s: s, theme: s.Theme, cam: c, frame: frameOf(c.W, c.H, c.K), k: c.K}
 }
 

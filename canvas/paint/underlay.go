@@ -38,7 +38,7 @@ func UnderlayCorners(u *plan.Underlay, w, h int) [4]orb.Point {
 // underlay lists the picture to trace over. It follows the plan that is shown, also while it is being moved.
 func (p *pen) underlay() {
 	u, photo := p.s.Plan.Sheet().Underlay, p.s.Photo
-	if u == nil || photo == nil || u.Hidden || u.Opacity <= 0 {
+	if u == nil || photo == nil || u.Hidden || u.Opacity <= 0 || !p.s.layer(LayerUnderlay) {
 		return
 	}
 	c := UnderlayCorners(u, photo.W, photo.H)
