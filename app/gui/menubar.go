@@ -12,10 +12,11 @@ import (
 // menuBar is the line of menu titles along the top of the window. Its drop-down is a layer over the window.
 type menuBar struct {
 	widget.BaseWidget
-	menus  []menu
-	titles []*inkText
-	under  int // the title under the pointer, -1 for none
-	drop   *dropDown
+	menus   []menu
+	titles  []*inkText
+	under   int // the title under the pointer or chosen by keys, -1 for none
+	drop    *dropDown
+	focused bool
 }
 
 // The menu bar, in px at 100 %.
@@ -59,6 +60,35 @@ func (b *menuBar) MouseDown(e *desktop.MouseEvent) {
 	if i := b.titleAt(e.Position); i >= 0 {
 		b.drop.open(i)
 	}
+}
+
+// FocusGained tints the first title.
+func (b *menuBar) FocusGained() { b.focused = true; b.under = max(b.under, 0); b.Refresh() }
+
+// FocusLost takes the tint away.
+func (b *menuBar) FocusLost() { b.focused = false; b.under = -1; b.Refresh() }
+
+// TypedRune does nothing.
+func (b *menuBar) TypedRune(rune) {}
+
+// TypedKey goes along the titles by arrows, and opens one by Down, Space or Enter. Escape leads back to the picture.
+func (b *menuBar) TypedKey(e *fyne.KeyEvent) {
+	n := len(b.titles)
+	switch e.Name {
+	case fyne.KeyRight:
+		b.under = (b.under + 1) % n
+	case fyne.KeyLeft:
+		b.under = (b.under + n - 1) % n
+	case fyne.KeyDown, fyne.KeySpace, fyne.KeyReturn, fyne.KeyEnter:
+		at := max(b.under, 0)
+		b.drop.open(at)
+		b.drop.step(1)
+		return
+	case fyne.KeyEscape:
+		b.drop.back()
+		return
+	}
+	b.Refresh()
 }
 
 // MouseUp does nothing.
@@ -121,8 +151,12 @@ func (r *barRenderer) MinSize() fyne.Size { return fyne.NewSize(200, barHeight) 
 func (r *barRenderer) Refresh() {
 	p := themed()
 	r.ground.FillColor, r.tint.FillColor = p.Chrome, faded(p.Ink, 7)
+	r.tint.StrokeColor, r.tint.StrokeWidth = faded(p.Ink, 0), 0
 	if r.b.drop.Visible() {
 		r.tint.FillColor = faded(p.Ink, 13)
+	}
+	if r.b.focused {
+		r.tint.StrokeColor, r.tint.StrokeWidth = p.Ink, 2
 	}
 	r.tint.Hidden = r.lit() < 0
 	r.Layout(r.b.Size())

@@ -58,6 +58,7 @@ func newTable(w *window) *table {
 			}
 		})
 	t.list.HideSeparators = true
+	t.list.OnSelected = t.chosenByKey
 	t.empty = pile(body("No approaches yet."), caption("Put down a start (B) and a target (T): the walk to"),
 		caption("first sight is worked out as you draw."))
 	head := around(nil, nil, heading("Approaches"), nil, t.count)
@@ -218,11 +219,24 @@ func (r *tableRow) putHead(w row) {
 }
 
 // Tapped chooses the row's start and target, or of a heading the start.
-func (r *tableRow) Tapped(*fyne.PointEvent) {
-	w := r.t.w
-	w.results.start = r.row.start
-	if !r.head {
-		w.results.target = r.row.target
+func (r *tableRow) Tapped(*fyne.PointEvent) { r.t.choose(r.row, r.head) }
+
+// chosenByKey chooses a line when Space is pressed on it.
+func (t *table) chosenByKey(i widget.ListItemID) {
+	t.list.UnselectAll() // the row has a sign of its own
+	if n := t.lines[i]; n < 0 {
+		t.choose(t.rows[-1-n], true)
+	} else {
+		t.choose(t.rows[n], false)
+	}
+}
+
+// choose makes a row's start and target the chosen ones, or of a heading the start.
+func (t *table) choose(row row, head bool) {
+	w := t.w
+	w.results.start = row.start
+	if !head {
+		w.results.target = row.target
 	}
 	var keep []plan.Ref
 	for _, ref := range w.session.Selection() {

@@ -17,7 +17,9 @@ type toolButton struct {
 	tip     string
 	chosen  bool
 	hovered bool
+	focused bool
 	tapped  func()
+	typed   func(rune) // takes characters while the button has the focus
 	tips    *tips
 }
 
@@ -31,7 +33,7 @@ func newToolButton(iconName, letter, tip string, t *tips, tapped func()) *toolBu
 	b := &toolButton{
 		icon:   newIcon(iconName, 20, roleInk),
 		letter: newText(letter, assets.Semibold, 11.5, roleInk2),
-		tip:    tip, tapped: tapped, tips: t,
+		tip:    tip, tapped: tapped, tips: t, typed: func(rune) {},
 	}
 	b.ExtendBaseWidget(b)
 	return b
@@ -60,10 +62,39 @@ func (b *toolButton) Tapped(*fyne.PointEvent) { b.tips.hide(); b.tapped() }
 // MouseIn tints the button and shows its name after a while.
 func (b *toolButton) MouseIn(*desktop.MouseEvent) {
 	b.hovered = true
-	b.tips.after(tipDelay, b.tip, func() fyne.Position {
+	b.tell()
+	b.Refresh()
+}
+
+// tell shows the tool's name and its key after a while.
+func (b *toolButton) tell() {
+	tip := b.tip
+	if b.letter.text != "" {
+		tip += " (" + b.letter.text + ")"
+	}
+	b.tips.after(tipDelay, tip, func() fyne.Position {
 		return fyne.CurrentApp().Driver().AbsolutePositionForObject(b).AddXY(toolWidth+8, 7)
 	})
-	b.Refresh()
+}
+
+// FocusGained draws the focus ring and shows the tool's name after a while.
+func (b *toolButton) FocusGained() { b.focused = true; b.tell(); b.Refresh() }
+
+// FocusLost takes the focus ring away.
+func (b *toolButton) FocusLost() { b.focused = false; b.tips.hide(); b.Refresh() }
+
+// TypedRune chooses a tool by its letter, as in the picture.
+func (b *toolButton) TypedRune(r rune) {
+	if r != ' ' {
+		b.typed(r)
+	}
+}
+
+// TypedKey takes the tool in hand on Space and Enter.
+func (b *toolButton) TypedKey(e *fyne.KeyEvent) {
+	if e.Name == fyne.KeySpace || e.Name == fyne.KeyReturn || e.Name == fyne.KeyEnter {
+		b.Tapped(nil)
+	}
 }
 
 // MouseMoved does nothing.
@@ -78,8 +109,8 @@ func (b *toolButton) MouseOut() {
 
 // CreateRenderer is for the toolkit.
 func (b *toolButton) CreateRenderer() fyne.WidgetRenderer {
-	r := &toolButtonRenderer{b: b, ground: canvas.NewRectangle(nil)}
-	r.ground.CornerRadius = 6
+	r := &toolButtonRenderer{b: b, ground: canvas.NewRectangle(nil), ring: canvas.NewRectangle(nil)}
+	r.ground.CornerRadius, r.ring.CornerRadius = 6, 8
 	r.Refresh()
 	return r
 }
@@ -87,10 +118,13 @@ func (b *toolButton) CreateRenderer() fyne.WidgetRenderer {
 type toolButtonRenderer struct {
 	b      *toolButton
 	ground *canvas.Rectangle
+	ring   *canvas.Rectangle // keyboard focus
 }
 
 func (r *toolButtonRenderer) Layout(s fyne.Size) {
 	r.ground.Resize(s)
+	r.ring.Move(fyne.NewPos(-3, -3))
+	r.ring.Resize(s.AddWidthHeight(6, 6))
 	l := r.b.letter.MinSize()
 	x := float32(3.5)
 	if r.b.letter.text == "" {
@@ -117,10 +151,13 @@ func (r *toolButtonRenderer) Refresh() {
 	}
 	r.b.icon.Refresh()
 	r.b.letter.Refresh()
+	r.ring.FillColor, r.ring.StrokeColor, r.ring.StrokeWidth = faded(p.Ink, 0), p.Ink, 2
+	r.ring.Hidden = !r.b.focused
 	canvas.Refresh(r.ground)
+	canvas.Refresh(r.ring)
 }
 
 func (r *toolButtonRenderer) Objects() []fyne.CanvasObject {
-	return []fyne.CanvasObject{r.ground, r.b.icon, r.b.letter}
+	return []fyne.CanvasObject{r.ring, r.ground, r.b.icon, r.b.letter}
 }
 func (r *toolButtonRenderer) Destroy() {}

@@ -110,6 +110,11 @@ func (w *window) build() {
 	w.view, w.foot, w.form, w.table, w.first = newPlanView(w), newFoot(), newForm(w), newTable(w), newFirstSteps()
 	rail, buttons := newRail(w.tips, func(i int) { w.choose(w.asked(i)) })
 	w.rail = buttons
+	for _, b := range buttons {
+		if b != nil {
+			b.typed = w.typedRune
+		}
+	}
 	w.side = w.sideColumn()
 	w.panelLayer = container.NewStack()
 	w.panelLayer.Hide()

@@ -1,0 +1,64 @@
+package gui
+
+import (
+	"testing"
+
+	"fyne.io/fyne/v2"
+)
+
+// TestKeyboardReachesEverything: Tab goes through the menu bar, every tool, the picture, the form and the table, and comes
+// round; Space takes a tool, arrows go through the menus, Escape leads back.
+func TestKeyboardReachesEverything(t *testing.T) {
+	r := newGallery(t)
+	c := r.win.Canvas()
+	seen := map[fyne.Focusable]bool{}
+	c.Focus(r.view)
+	for range 200 {
+		c.FocusNext()
+		f := c.Focused()
+		if f == nil || seen[f] {
+			break
+		}
+		seen[f] = true
+	}
+	want := map[string]fyne.Focusable{"menu bar": r.bar, "picture": r.view, "table": r.table.list, "a field of the form": r.form.rows[0].entry}
+	for i, b := range r.rail {
+		if b != nil {
+			want[tools[i].name] = b
+		}
+	}
+	for name, f := range want {
+		if !seen[f] {
+			t.Errorf("Tab does not reach the %s", name)
+		}
+	}
+	var glass *toolButton
+	at := 0
+	for i, k := range tools {
+		if k.name == "Glazing" {
+			glass, at = r.rail[i], i
+		}
+	}
+	c.Focus(glass)
+	if !glass.focused {
+		t.Error("no focus ring")
+	}
+	glass.TypedKey(&fyne.KeyEvent{Name: fyne.KeySpace})
+	if r.toolAt != at || c.Focused() != fyne.Focusable(r.view) {
+		t.Errorf("Space took tool %d, and the focus is on %T", r.toolAt, c.Focused())
+	}
+	c.Focus(r.bar)
+	r.bar.TypedKey(&fyne.KeyEvent{Name: fyne.KeyRight})
+	r.bar.TypedKey(&fyne.KeyEvent{Name: fyne.KeyDown})
+	if !r.bar.drop.Visible() || r.bar.drop.at != 1 {
+		t.Error("the second menu is not open")
+	}
+	r.bar.drop.TypedKey(&fyne.KeyEvent{Name: fyne.KeyEscape})
+	if r.bar.drop.Visible() || c.Focused() != fyne.Focusable(r.view) {
+		t.Errorf("Escape leaves the focus on %T", c.Focused())
+	}
+	r.table.list.OnSelected(1)
+	if r.results.start == "" || r.results.target != r.table.rows[r.table.lines[1]].target {
+		t.Error("Space in the table does not choose its walk")
+	}
+}
