@@ -172,7 +172,13 @@ func (d *dropDown) MouseOut() {}
 func (d *dropDown) FocusGained() {}
 
 // FocusLost puts the menu away.
-func (d *dropDown) FocusLost() {}
+func (d *dropDown) FocusLost() {
+	if d.Visible() {
+		d.Hide()
+		d.bar.under = -1
+		d.bar.Refresh()
+	}
+}
 
 // TypedRune does nothing.
 func (d *dropDown) TypedRune(rune) {}

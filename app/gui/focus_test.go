@@ -57,6 +57,10 @@ func TestKeyboardReachesEverything(t *testing.T) {
 	if r.bar.drop.Visible() || c.Focused() != fyne.Focusable(r.view) {
 		t.Errorf("Escape leaves the focus on %T", c.Focused())
 	}
+	r.bar.drop.open(2)
+	if c.FocusNext(); r.bar.drop.Visible() {
+		t.Error("Tab leaves the menu open")
+	}
 	r.table.list.OnSelected(1)
 	if r.results.start == "" || r.results.target != r.table.rows[r.table.lines[1]].target {
 		t.Error("Space in the table does not choose its walk")
