@@ -1,6 +1,7 @@
 package walk
 
 import (
+	"math"
 	"slices"
 
 	"enfilade/solver/exact"
@@ -39,6 +40,8 @@ func (b *gapFinder) join() forest {
 	f := newForest(b.count)
 	gapOn := b.sortOut()
 	var crossing []int32
+	rank := make([]int32, len(b.gaps)) // of the gaps that cross the edge at hand
+	fill(rank, math.MaxInt32)
 	for t := range b.m.Tris {
 		tri := &b.m.Tris[t]
 		for i := range 3 {
@@ -47,15 +50,21 @@ func (b *gapFinder) join() forest {
 				continue
 			}
 			crossing = b.crossing(crossing[:0], e)
+			for n, g := range crossing {
+				rank[g] = int32(n)
+			}
 			for n := range len(crossing) + 1 {
-				x := b.along(int32(t), tri.P[i], tri.P[inc[i]], crossing, n)
-				y := b.along(tri.N[i].Tri(), tri.P[i], tri.P[inc[i]], crossing, n)
+				x := b.along(int32(t), tri.P[i], tri.P[inc[i]], rank, n)
+				y := b.along(tri.N[i].Tri(), tri.P[i], tri.P[inc[i]], rank, n)
 				if len(gapOn) > 0 && b.gaps[gapOn[0]].edge == e {
 					b.gaps[gapOn[0]].a, b.gaps[gapOn[0]].b = x, y
 					gapOn = gapOn[1:]
 				} else {
 					f.join(x, y)
 				}
+			}
+			for _, g := range crossing {
+				rank[g] = math.MaxInt32
 			}
 		}
 	}

@@ -127,19 +127,17 @@ func (p *pieces) gapsOf(dst []int32, node int32) []int32 {
 	return p.gapsOf(p.gapsOf(append(dst, c.gap), c.right), c.left)
 }
 
-// along returns the piece of triangle t at the edge from a to b beyond the first n of the gaps that cross the edge there,
-// given in order.
-func (p *pieces) along(t int32, a, b exact.Pt, crossing []int32, n int) int32 {
+// along returns the piece of triangle t at the edge from a to b beyond the first n of the gaps that cross the edge there; rank
+// gives their order, and no less than n for all other gaps.
+func (p *pieces) along(t int32, a, b exact.Pt, rank []int32, n int) int32 {
 	at := p.root[t]
 	for at >= 0 {
 		c := &p.cuts[at]
 		l := p.gaps[c.gap].line()
 		s, far := l.Side(a), l.Side(b)
 		if s*far < 0 {
-			for _, g := range crossing[:n] {
-				if g == c.gap {
-					s = far
-				}
+			if int(rank[c.gap]) < n {
+				s = far
 			}
 		} else if s == 0 {
 			s = far
