@@ -40,6 +40,9 @@ func TestDrawRoomByTypedLengths(t *testing.T) {
 		if f := r.sketch.Fields; len(f) != 2 || f[0].Text != side.length || !f[0].Here {
 			t.Fatalf("the fields hold %+v, want %q typed", f, side.length)
 		}
+		if !r.view.over.fields[0].box.Visible() || r.view.over.fields[0].text.text != side.length || r.view.over.label.Visible() {
+			t.Fatalf("the picture does not show the fields in place of the label")
+		}
 		if !r.view.AcceptsTab() {
 			t.Fatal("Tab is not for the fields")
 		}
@@ -49,6 +52,9 @@ func TestDrawRoomByTypedLengths(t *testing.T) {
 	}
 	if got, want := r.points("W1"), []exact.Pt{{}, m(4.2, 0), m(4.2, 3), m(0, 3), {}}; !slices.Equal(got, want) {
 		t.Fatalf("room %v, want %v", got, want)
+	}
+	if r.view.over.fields[0].box.Visible() || r.view.over.fields[1].text.Visible() {
+		t.Error("the fields stay when the room is closed")
 	}
 	r.runes("d")
 	r.move(1.2, 0)

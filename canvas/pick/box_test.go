@@ -7,6 +7,7 @@ import (
 	"pgregory.net/rapid"
 
 	"enfilade/canvas/pick"
+	"enfilade/canvas/view"
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 )
@@ -93,6 +94,11 @@ func TestKnobs(t *testing.T) {
 				t.Errorf("the handle %+v of %v is there without being selected", k, r)
 			}
 		}
+	}
+	far := view.Camera{Scale: 0.02, W: 1000, H: 800, K: 1}
+	x, y := far.Pixel(m(-2.5, .2))
+	if h, ok := pick.At(p, far, x+4, y, sel); !ok || h.Part != pick.Body || h.Ref.ID != "T1" {
+		t.Errorf("from afar a short face is not taken as a whole but by %+v", h)
 	}
 	if n := len(pick.Knobs(p, cam(1), sel[0])); n != 4 {
 		t.Errorf("an observer with view and range has %d handles, want 4", n)

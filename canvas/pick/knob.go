@@ -18,6 +18,10 @@ type Knob struct {
 // rangeLeast is how far from the eye, in px at 100 %, an observer's range must end for it to have a handle there.
 const rangeLeast = 50
 
+// faceLeast is how long, in px at 100 %, a target's face must be to have handles at its ends: between those of a shorter one
+// nothing would be left to move it by.
+const faceLeast = 40
+
 // Knobs returns the handles of a mark: of an observer those that turn it, open its view angle, and stretch its range when it
 // has one; of a target with a face those at the face's ends.
 func Knobs(p *plan.Plan, cam view.Camera, r plan.Ref) []Knob {
@@ -30,6 +34,9 @@ func Knobs(p *plan.Plan, cam view.Camera, r plan.Ref) []Knob {
 		if t, ok := p.Target(r.ID); ok && !t.Hidden && t.Face != nil {
 			x0, y0 := cam.Pixel(t.Face[0])
 			x1, y1 := cam.Pixel(t.Face[1])
+			if math.Hypot(x1-x0, y1-y0) < faceLeast*cam.K {
+				return nil
+			}
 			return []Knob{{FaceEnd, 0, x0, y0}, {FaceEnd, 1, x1, y1}}
 		}
 	}
