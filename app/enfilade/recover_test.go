@@ -6,12 +6,15 @@ import (
 	"bytes"
 	"image"
 	"os"
+	"os/exec"
 	"path/filepath"
+	"syscall"
 	"testing"
 	"time"
 
 	"enfilade/assets"
 	"enfilade/canvas/paint"
+	"enfilade/fileio/planfile"
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 )
@@ -69,6 +72,62 @@ func TestRecoversWhatWasKilled(t *testing.T) {
 	if left := s.copies(); len(left) > 0 {
 		t.Errorf("left behind after saving: %v", left)
 	}
+}
+
+// TestSignalsKeepTheWork: told to end, and when its terminal hangs up, the program copies unsaved work at once and ends.
+func TestSignalsKeepTheWork(t *testing.T) {
+	s := newScreen(t)
+	path := filepath.Join(t.TempDir(), "gallery.enfilade")
+	if err := os.WriteFile(path, assets.SamplePlan("gallery"), 0o666); err != nil {
+		t.Fatal(err)
+	}
+	for _, sig := range []syscall.Signal{syscall.SIGTERM, syscall.SIGHUP} {
+		before := s.start(path)
+		s.frameOf(before)
+		floor, behind := paint.Light().Floor, m(12.3, 14.3)
+		s.until("the tide clock's wall is seen", func(img image.Image) bool { return washed(s.colour(img, behind)) })
+		s.key("w")
+		s.click(m(9.8, 12.5))
+		s.click(m(14.2, 12.5))
+		s.key("Return")
+		s.until("the new wall hides the floor behind it", func(img image.Image) bool { return s.colour(img, behind) == [3]uint8{floor.R, floor.G, floor.B} })
+		for _, old := range s.copies() { // one may just have been made in its turn
+			if err := os.Remove(old); err != nil {
+				t.Fatal(err)
+			}
+		}
+		s.key("o") // an observer more, so that there is something new to keep
+		s.click(m(3, 3))
+		if err := s.cmd.Process.Signal(sig); err != nil {
+			t.Fatal(err)
+		}
+		ended := make(chan error, 1)
+		go func(p *exec.Cmd) { ended <- p.Wait() }(s.cmd)
+		select {
+		case <-ended:
+		case <-time.After(20 * time.Second):
+			t.Fatalf("%v: the program goes on", sig)
+		}
+		s.cmd = nil
+		p := planOf(t, s.kept(time.Second))
+		if p.NumWalls() != before.NumWalls()+1 || p.NumObservers() != before.NumObservers()+1 {
+			t.Errorf("%v: kept %d walls and %d observers", sig, p.NumWalls(), p.NumObservers())
+		}
+		for _, old := range s.copies() {
+			if err := os.Remove(old); err != nil {
+				t.Fatal(err)
+			}
+		}
+	}
+}
+
+func planOf(t *testing.T, text []byte) *plan.Plan {
+	t.Helper()
+	p, err := planfile.Read(bytes.NewReader(text), "copy")
+	if err != nil {
+		t.Fatal(err)
+	}
+	return p
 }
 
 // copies returns the files in which unsaved work is kept.

@@ -46,7 +46,9 @@ func (r *checkRow) TypedRune(rune) {}
 func (r *checkRow) TypedKey(e *fyne.KeyEvent) {
 	if e.Name == fyne.KeySpace {
 		r.set(!r.on)
+		return
 	}
+	passOn(r, e)
 }
 
 // MouseIn tints the line.

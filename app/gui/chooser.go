@@ -17,7 +17,7 @@ const planSuffix = ".enfilade"
 // chooser is the page that asks for a file: a path one can type, and what lies in its folder.
 type chooser struct {
 	path    *pathEntry
-	list    *widget.List
+	list    *nameList
 	empty   *inkText
 	folder  string
 	suffix  string
@@ -40,9 +40,10 @@ func newChooser(folder, name, suffix string, done func(string)) *chooser {
 			c.read(dir)
 		}
 	}
-	c.list = widget.NewList(func() int { return len(c.names) }, func() fyne.CanvasObject { return newChoiceRow(c) },
+	c.list = newNameList(func() int { return len(c.names) }, func() fyne.CanvasObject { return newChoiceRow(c) },
 		func(i widget.ListItemID, o fyne.CanvasObject) { o.(*choiceRow).put(c.names[i]) })
 	c.list.HideSeparators = true
+	c.list.OnSelected = func(i widget.ListItemID) { c.list.UnselectAll(); c.choose(c.names[i], false) }
 	c.list.MinSize() // from here on it can be scrolled
 	frame := container.NewStack(newPaper(roleField), c.list, container.NewCenter(c.empty))
 	c.content = around(inset(0, 0, 0, 8, c.path), nil, nil, nil,
@@ -125,6 +126,25 @@ func (c *chooser) typed(path string) {
 		return
 	}
 	c.done(path)
+}
+
+// nameList is the list of names; Space takes the one that arrows have come to.
+type nameList struct{ widget.List }
+
+func newNameList(length func() int, item func() fyne.CanvasObject, put func(widget.ListItemID, fyne.CanvasObject)) *nameList {
+	l := &nameList{widget.List{Length: length, CreateItem: item, UpdateItem: put}}
+	l.ExtendBaseWidget(l)
+	return l
+}
+
+// TypedKey is for the toolkit; Enter and Escape are the dialog's.
+func (l *nameList) TypedKey(e *fyne.KeyEvent) {
+	switch e.Name {
+	case fyne.KeyEscape, fyne.KeyReturn, fyne.KeyEnter:
+		passOn(l, e)
+	default:
+		l.List.TypedKey(e)
+	}
 }
 
 // pathEntry is the field for a file's path.

@@ -66,3 +66,42 @@ func TestKeyboardReachesEverything(t *testing.T) {
 		t.Error("Space in the table does not choose its walk")
 	}
 }
+
+// TestEscapePutsEveryDialogAway, wherever the focus is in it, and nothing has changed.
+func TestEscapePutsEveryDialogAway(t *testing.T) {
+	for name, open := range map[string]func(*rig){
+		"open": func(r *rig) { r.askOpen() }, "save": func(r *rig) { r.askSave(nil) }, "picture": func(r *rig) { r.askPicture() },
+		"underlay": func(r *rig) { r.askUnderlay() }, "keys": func(r *rig) { r.showKeys() }, "about": func(r *rig) { r.showAbout() },
+		"shown": func(r *rig) { r.askShown() }, "unsaved": func(r *rig) { r.unlessUnsaved(func() { r.t.Error("went on") }) },
+		"changed": func(r *rig) { r.askChanged("a.enfilade", r.print, nil) },
+	} {
+		r := newGallery(t)
+		r.drag(11.35, 8.75, 12, 8)
+		before, shown := r.session.Plan(), r.shown.choice
+		c := r.win.Canvas()
+		for stops := 0; ; stops++ {
+			open(r)
+			if r.modal == nil {
+				t.Fatalf("%s did not open", name)
+			}
+			c.Unfocus()
+			for range stops {
+				c.FocusNext()
+			}
+			if f := c.Focused(); f != nil {
+				f.TypedKey(&fyne.KeyEvent{Name: fyne.KeyEscape})
+			} else {
+				c.OnTypedKey()(&fyne.KeyEvent{Name: fyne.KeyEscape})
+			}
+			if r.modal != nil {
+				t.Fatalf("%s: Escape does nothing on %T", name, c.Focused())
+			}
+			if stops == 6 {
+				break
+			}
+		}
+		if r.session.Plan() != before || r.shown.choice != shown || !r.session.Dirty() {
+			t.Errorf("%s: Escape changed something", name)
+		}
+	}
+}

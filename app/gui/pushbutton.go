@@ -45,6 +45,15 @@ func (b *pushButton) TypedRune(rune) {}
 func (b *pushButton) TypedKey(e *fyne.KeyEvent) {
 	if e.Name == fyne.KeySpace || e.Name == fyne.KeyReturn || e.Name == fyne.KeyEnter {
 		b.tapped()
+		return
+	}
+	passOn(b, e)
+}
+
+// passOn gives a key that a widget has no use for to its window: Escape puts a dialog away wherever the focus is in it.
+func passOn(o fyne.CanvasObject, e *fyne.KeyEvent) {
+	if c := fyne.CurrentApp().Driver().CanvasForObject(o); c != nil && c.OnTypedKey() != nil {
+		c.OnTypedKey()(e)
 	}
 }
 

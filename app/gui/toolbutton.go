@@ -94,7 +94,9 @@ func (b *toolButton) TypedRune(r rune) {
 func (b *toolButton) TypedKey(e *fyne.KeyEvent) {
 	if e.Name == fyne.KeySpace || e.Name == fyne.KeyReturn || e.Name == fyne.KeyEnter {
 		b.Tapped(nil)
+		return
 	}
+	passOn(b, e)
 }
 
 // MouseMoved does nothing.

@@ -31,6 +31,7 @@ type underlay struct {
 	photo   *paint.Photo
 	fault   string // why there is no picture
 	loading bool
+	offered [2]string // the plan's and the picture's path for which a copy was offered last
 	errands errands
 }
 
@@ -214,6 +215,10 @@ func (w *window) offerCopy() {
 		return
 	}
 	image := u.Image
+	if w.under.offered == [2]string{path, image} {
+		return // whoever leaves it there is not asked again at each save
+	}
+	w.under.offered = [2]string{path, image}
 	w.notice.offer(sentence(filepath.Base(image)+" lies outside the folder of the plan, which looks for it there"),
 		choice{"Copy it beside the plan", func() { w.copyUnderlay(path, image) }},
 		choice{"Leave it there", nil})

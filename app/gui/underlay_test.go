@@ -69,6 +69,16 @@ func TestUnderlayIsLaidSavedAndOpened(t *testing.T) {
 	if r.underlay().Image != filepath.Join(dir, "scan.png") || r.under.photo == nil || r.session.Dirty() {
 		t.Errorf("opened as %+v", r.underlay())
 	}
+	// Saved elsewhere, a copy is offered, once.
+	far := filepath.Join(t.TempDir(), "c.enfilade")
+	r.write(far, nil)
+	if !r.notice.box.Visible() {
+		t.Error("no copy is offered")
+	}
+	r.notice.way.Objects[1].(*pushButton).tapped()
+	if r.write(far, nil); r.notice.box.Visible() {
+		t.Error("a copy is offered again at the next save")
+	}
 	// Saved elsewhere, the path is another one, and a copy is offered.
 	there := filepath.Join(t.TempDir(), "b.enfilade")
 	r.write(there, nil)
