@@ -210,7 +210,7 @@ func (t *Chain) Key(h Host, k Key) bool {
 	case KeyEscape:
 		t.Finish(h)
 	case KeyEnter:
-		if to, fault := t.target(h); t.typing.some() {
+		if to, fault := t.target(h); t.typing.on {
 			if fault == "" {
 				t.put(h, to)
 			}

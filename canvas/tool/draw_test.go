@@ -392,6 +392,38 @@ func TestWallUndoAndFinish(t *testing.T) {
 	h.steps("draw wall")
 }
 
+// TestBackspaceLeavesTheFieldsFirst: an emptied field costs no corner, and Enter in an empty one puts the corner at the pointer.
+func TestBackspaceLeavesTheFieldsFirst(t *testing.T) {
+	h := newHost(t, plan.Parts{})
+	w := &tool.Chain{}
+	h.click(w, 0, 0)
+	h.click(w, 2, 0)
+	h.move(w, 2, 3)
+	h.typed(w, "1")
+	h.key(w, tool.KeyBackspace)
+	if k := w.Sketch(h); len(k.Handles) != 2 || k.Fields == nil {
+		t.Errorf("after the digit: %d corners, fields %v", len(k.Handles), k.Fields)
+	}
+	h.key(w, tool.KeyBackspace)
+	if k := w.Sketch(h); len(k.Handles) != 2 || k.Fields != nil {
+		t.Errorf("after the empty field: %d corners, fields %v", len(k.Handles), k.Fields)
+	}
+	h.key(w, tool.KeyBackspace)
+	if k := w.Sketch(h); len(k.Handles) != 1 {
+		t.Errorf("after the corner: %d corners", len(k.Handles))
+	}
+	h.key(w, tool.KeyTab, tool.KeyEnter, tool.KeyEnter)
+	h.points("W1", h.wall("W1"), m(0, 0), m(2, 3))
+	r := &tool.Rect{Kind: plan.KindZone}
+	h.click(r, 0, 0)
+	h.move(r, 1, 1)
+	h.typed(r, "4")
+	h.key(r, tool.KeyBackspace, tool.KeyBackspace)
+	if k := r.Sketch(h); len(k.Handles) != 1 {
+		t.Error("an emptied field took the rectangle's first corner")
+	}
+}
+
 func TestWallTypedInFeet(t *testing.T) {
 	h := newHost(t, plan.Parts{})
 	w := &tool.Chain{}

@@ -35,10 +35,14 @@ func (t *typing) key(k Key) bool {
 		return true
 	case KeyBackspace:
 		r := []rune(*field)
-		if len(r) == 0 {
-			return false
+		switch {
+		case len(r) > 0:
+			*field = string(r[:len(r)-1])
+		case t.on && !t.some():
+			t.clear() // the next one takes back a point
+		default:
+			return t.on
 		}
-		*field = string(r[:len(r)-1])
 		return true
 	case KeyEscape:
 		if !t.on {
