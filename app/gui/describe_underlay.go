@@ -15,6 +15,7 @@ func (w *window) describeUnderlay(c *card, u plan.Underlay) {
 	c.title, c.icon, c.where = "Underlay", "open", filepath.Base(u.Image)
 	c.key += fmt.Sprint(u.Locked, u.Hidden)
 	c.fault = w.under.fault
+	c.delete = !u.Locked
 	put := func(label string, change func(*plan.Underlay)) error {
 		now := u
 		change(&now)

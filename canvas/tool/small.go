@@ -12,33 +12,8 @@ import (
 
 // locked reports whether the item may not be moved.
 func locked(p *plan.Plan, r plan.Ref) bool {
-	switch r.Kind {
-	case plan.KindWall:
-		w, _ := p.Wall(r.ID)
-		return w.Locked
-	case plan.KindObserver:
-		o, _ := p.Observer(r.ID)
-		return o.Locked
-	case plan.KindTarget:
-		t, _ := p.Target(r.ID)
-		return t.Locked
-	case plan.KindStart:
-		t, _ := p.Start(r.ID)
-		return t.Locked
-	case plan.KindOpening:
-		o, _ := p.Opening(r.ID)
-		return o.Locked
-	case plan.KindBlock:
-		b, _ := p.Block(r.ID)
-		return b.Locked
-	case plan.KindZone:
-		z, _ := p.Zone(r.ID)
-		return z.Locked
-	case plan.KindRoute:
-		t, _ := p.Route(r.ID)
-		return t.Locked
-	}
-	return false
+	m, _ := p.Meta(r)
+	return m.Locked
 }
 
 // reason is an error as the window says it: the cause without where in the program it was found.

@@ -62,6 +62,11 @@ func TestLockedUnderlayStays(t *testing.T) {
 		h.key(u, tool.KeyEnter, tool.KeyLeft)
 	}
 	h.steps()
+	h.selected = []plan.Ref{{Kind: plan.KindUnderlay}}
+	h.key(&tool.Select{}, tool.KeyLeft) // chosen in its form, with the select tool in hand
+	if got := h.underlay().At; got != m(0, 0) {
+		t.Errorf("the select tool nudged it to %v", got)
+	}
 }
 
 func TestUnderlayScale(t *testing.T) {
