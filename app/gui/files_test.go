@@ -186,3 +186,18 @@ func TestFileName(t *testing.T) {
 		}
 	}
 }
+
+// TestTheStripHidesNothing: what lies below moves down at once when it comes, and up again when it goes.
+func TestTheStripHidesNothing(t *testing.T) {
+	r := newGallery(t)
+	top := func() float32 { return r.app.Driver().AbsolutePositionForObject(r.rail[0]).Y }
+	before := top()
+	r.notice.show("Something is wrong.", "Mend it", func() {})
+	if h := r.notice.box.Size().Height; h < 20 || top() != before+h {
+		t.Errorf("the strip is %g high and the rail lies %g lower", h, top()-before)
+	}
+	r.notice.hide()
+	if top() != before {
+		t.Errorf("after it the rail lies %g lower", top()-before)
+	}
+}

@@ -13,6 +13,7 @@ type notice struct {
 	mark *icon
 	text *inkText
 	way  *fyne.Container
+	page *fyne.Container // laid out anew when the strip comes and goes; the toolkit does not see to that
 }
 
 func newNotice() *notice {
@@ -45,8 +46,19 @@ func (n *notice) offer(sentence string, ways ...choice) {
 		n.way.Objects = append(n.way.Objects, b)
 	}
 	n.way.Refresh()
-	n.box.Show()
 	n.box.Refresh()
+	n.put(true)
 }
 
-func (n *notice) hide() { n.box.Hide() }
+func (n *notice) hide() { n.put(false) }
+
+// put shows the strip, or puts it away.
+func (n *notice) put(show bool) {
+	if n.box.Visible() == show {
+		return
+	}
+	n.box.Hidden = !show
+	if n.page != nil {
+		n.page.Refresh()
+	}
+}

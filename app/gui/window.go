@@ -124,6 +124,7 @@ func (w *window) build() {
 	w.bar = newMenuBar(w.menus())
 	w.bar.drop.back = w.view.grab
 	page := around(pile(w.bar, hairline(), w.notice.box), w.status.box, nil, nil, middle)
+	w.notice.page = page
 	w.win.SetContent(container.NewStack(newPaper(roleChrome), page, w.bar.drop, w.tips.layer))
 	w.shortcuts()
 	c := w.win.Canvas()
