@@ -16,6 +16,9 @@ import (
 // are those nearer than the polygon; at an inward corner the outline goes back to the corner, which no arithmetic can get
 // wrong. All its corners are sums of grid points, so nothing is rounded before the crossings are.
 //
+// The outline goes along the obstacles with the floor on its other side, so it winds about open floor once the wrong way
+// round: a ring around everything makes that up, and what it makes solid besides is solid already.
+//
 //   - Cost: O(n) segments for n edges; an outward corner adds up to half the polygon's sides.
 func Grow(o *Outline, m *mesh.Mesh, radius int32) *Outline {
 	disc, _ := Disc(radius)
@@ -27,6 +30,7 @@ func Grow(o *Outline, m *mesh.Mesh, radius int32) *Outline {
 	g.item = int32(len(g.out.Items) - 1)
 	g.body = int32(len(g.out.Bodies))
 	g.out.Bodies = append(g.out.Bodies, Body{Stops: Stops{Walk: true}, Item: g.item})
+	g.around(o)
 	for t := range m.Tris {
 		tri := &m.Tris[t]
 		if tri.Flags&mesh.FlagNoWalk != 0 {
@@ -48,11 +52,29 @@ type grower struct {
 	item, body int32
 }
 
+// around adds a ring around everything drawn, beyond what a walker off the floor could reach over.
+func (g *grower) around(o *Outline) {
+	if len(o.Segments) == 0 {
+		return
+	}
+	lo, hi := o.Segments[0].A, o.Segments[0].A
+	for _, s := range o.Segments {
+		lo = exact.Pt{X: min(lo.X, s.A.X, s.B.X), Y: min(lo.Y, s.A.Y, s.B.Y)}
+		hi = exact.Pt{X: max(hi.X, s.A.X, s.B.X), Y: max(hi.Y, s.A.Y, s.B.Y)}
+	}
+	const far = 2 * MaxRadius
+	a, c := exact.Pt{X: lo.X - far, Y: lo.Y - far}, exact.Pt{X: hi.X + far, Y: hi.Y + far}
+	b, d := exact.Pt{X: c.X, Y: a.Y}, exact.Pt{X: a.X, Y: c.Y}
+	g.segment(a, b, Stops{})
+	g.segment(b, c, Stops{})
+	g.segment(c, d, Stops{})
+	g.segment(d, a, Stops{})
+}
+
 // edge adds what edge e of an obstacle, with floor to its left, and the corner at its start contribute.
 func (g *grower) edge(e mesh.Edge) {
 	a, b := g.mesh.Ends(e)
 	first, last := g.farthest(b.Sub(a))
-	g.segment(a, b, Stops{})
 	g.segment(b.Add(g.disc[last]), a.Add(g.disc[first]), Stops{Walk: true})
 	before := g.before(e)
 	_, from := g.farthest(before)

@@ -59,11 +59,11 @@ func closed(m *mesh.Mesh, p exact.Pt) bool {
 	return !ok || m.Tris[place.Tri].Flags&mesh.FlagNoWalk != 0
 }
 
-// area returns the area of the triangles on which nobody stands, in square metres.
-func shutArea(m *mesh.Mesh) float64 {
+// openArea returns the area of the triangles on which one can stand, in square metres.
+func openArea(m *mesh.Mesh) float64 {
 	sum := int64(0)
 	for i := range m.Tris {
-		if p := m.Tris[i].P; m.Tris[i].Flags&mesh.FlagNoWalk != 0 {
+		if p := m.Tris[i].P; m.Tris[i].Flags&mesh.FlagNoWalk == 0 {
 			sum += exact.Area2(p[0], p[1], p[2])
 		}
 	}
@@ -78,7 +78,7 @@ func TestGrowK17(t *testing.T) {
 	_, excess := arrange.Disc(radius)
 	rim := func(r float64) float64 { return 400*r - 4*r*r } // the strip along the floor's edge, which has inward corners only
 	steiner := func(r float64) float64 { return 8*r + math.Pi*r*r + rim(r) }
-	got := shutArea(wide) - shutArea(plain)
+	got := openArea(plain) - openArea(wide)
 	if lo, hi := steiner(.5), steiner(.5+excess/1e4); got < lo || got > hi {
 		t.Errorf("grown by %v m², not between %v and %v", got, lo, hi)
 	}

@@ -7,6 +7,7 @@ import (
 
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
+	"enfilade/solver/plan"
 	"enfilade/solver/pulse"
 )
 
@@ -38,14 +39,34 @@ type later struct {
 	tags   []mesh.Tag
 }
 
-// MaxEdges is the greatest number of edges that a plan's graph may have.
-const MaxEdges = 2_000_000
+// MaxEdges is the greatest number of edges that a plan's graph may have, MaxGrown the greatest number with the outlines that
+// keep a walker's body off things.
+const (
+	MaxEdges = 2_000_000
+	MaxGrown = 3 * MaxEdges
+)
 
-// TooLarge reports a plan whose graph would have more than MaxEdges edges.
-type TooLarge struct{ Edges int }
+// TooLarge reports a plan whose graph would have more edges than the limit.
+type TooLarge struct{ Edges, Limit int }
 
 func (e *TooLarge) Error() string {
-	return fmt.Sprintf("the plan makes %d edges and the limit is %d; leave some of it out, or make a walker's radius 0", e.Edges, MaxEdges)
+	if e.Limit == MaxGrown {
+		return fmt.Sprintf("the plan makes %d edges for a walker with a body and the limit is %d; leave some of it out, or make the walker's radius 0",
+			e.Edges, e.Limit)
+	}
+	return fmt.Sprintf("the plan makes %d edges and the limit is %d; leave some of it out", e.Edges, e.Limit)
+}
+
+// tooLarge returns the error for n segments or edges of o, nil when there are not too many.
+func (o *Outline) tooLarge(n int) error {
+	limit := MaxEdges
+	if k := len(o.Items); k > 0 && o.Items[k-1].Kind == plan.KindWalker {
+		limit = MaxGrown
+	}
+	if n > limit {
+		return &TooLarge{n, limit}
+	}
+	return nil
 }
 
 // NewSite rounds and triangulates an outline.
@@ -53,15 +74,15 @@ func (e *TooLarge) Error() string {
 //   - Errors: *TooLarge; the context's when it is cancelled.
 //   - Cost: as Round and Build.
 func NewSite(ctx context.Context, o *Outline) (*Site, error) {
-	if n := len(o.Segments); n > MaxEdges {
-		return nil, &TooLarge{n}
+	if err := o.tooLarge(len(o.Segments)); err != nil {
+		return nil, err
 	}
 	r, err := round(pulse.Part(ctx, 0, 0.3), o)
 	if err != nil {
 		return nil, err
 	}
-	if n := len(r.graph.Edges); n > MaxEdges {
-		return nil, &TooLarge{n}
+	if err := o.tooLarge(len(r.graph.Edges)); err != nil {
+		return nil, err
 	}
 	s := &Site{Outline: o, Graph: r.graph, segs: o.Segments, rounding: r}
 	s.Mesh, err = Build(pulse.Part(ctx, 0.3, 1), s.Graph)
