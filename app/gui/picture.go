@@ -3,6 +3,7 @@ package gui
 import (
 	"image"
 	"slices"
+	"strings"
 	"sync/atomic"
 	"time"
 
@@ -128,12 +129,16 @@ func keyOf(s *paint.Scene) baseKey {
 	if len(s.Contours) > 0 {
 		k.contours, k.old = &s.Contours[0], s.ContoursOld
 	}
+	var held strings.Builder
 	for _, r := range s.Dragged {
 		switch r.Kind {
 		case plan.KindWall, plan.KindOpening, plan.KindBlock:
-			k.held += r.String() + ";"
+			held.WriteString(r.Kind.Letter())
+			held.WriteString(r.ID)
+			held.WriteByte(';')
 		}
 	}
+	k.held = held.String()
 	return k
 }
 

@@ -87,7 +87,7 @@ func command(t *rapid.T, p *plan.Plan) plan.Edit {
 		plan.SplitWall{Wall: own.ID, Segment: piece, At: at}, plan.DuplicateOpening{Opening: "D1"}, plan.CloseWall{Wall: wall()}, plan.JoinWalls{Walls: []string{"W1", "W2"}},
 		plan.JoinWalls{Walls: []string{wall(), wall()}}, plan.CutBack{Wall: wall(), To: wall(), Start: yes}, plan.CutBack{Wall: "W1", To: "W3", Start: yes},
 		plan.Lengthen{Wall: wall(), To: wall(), Start: yes}, plan.Lengthen{Wall: "W6", To: "W7"},
-		plan.Mark{Items: some, Locked: &yes}, plan.SetItems{Text: "change", Walls: []plan.Wall{own}, Starts: []plan.Start{{ID: "S1", At: at}}},
+		plan.SetUnderlay{Underlay: plan.Underlay{Image: "b.png", At: at, MMPerPixel: 2, Opacity: 0.5}}, plan.Mark{Items: some, Locked: &yes}, plan.SetItems{Text: "change", Walls: []plan.Wall{own}, Starts: []plan.Start{{ID: "S1", At: at}}},
 	}
 	return rapid.SampledFrom(edits).Draw(t, "edit")
 }

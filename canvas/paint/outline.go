@@ -12,11 +12,33 @@ func (p *pen) outlines() {
 		p.outlineOf(h, HoverOffset)
 		p.op(m, p.stroked(at(p.theme.Ink, 0.55), StrokeStyle{Width: 1.5}))
 	}
-	m := p.begin()
-	for _, ref := range p.s.Selected {
-		p.outlineOf(ref, SelectedOffset)
+	p.selection()
+}
+
+// selection outlines what is selected. Of thousands of items, those that stand together in the plan's lists are stroked
+// together: the painter's time grows with the square of the outlines that one stroke has in a row of pixels.
+func (p *pen) selection() {
+	const (
+		many     = 1000 // of so many, doors are told by their walls alone, and all by their moving while they are dragged
+		together = 16
+	)
+	if len(p.s.Dragged) >= many {
+		return
 	}
-	p.op(m, p.stroked(p.theme.Ink, StrokeStyle{Width: 2}))
+	for rest := p.s.Selected; len(rest) > 0; {
+		n := len(rest)
+		if len(p.s.Selected) >= many {
+			n = min(n, together)
+		}
+		m := p.begin()
+		for _, ref := range rest[:n] {
+			if ref.Kind != plan.KindOpening || len(p.s.Selected) < many {
+				p.outlineOf(ref, SelectedOffset)
+			}
+		}
+		p.op(m, p.stroked(p.theme.Ink, StrokeStyle{Width: 2}))
+		rest = rest[n:]
+	}
 }
 
 // outlineOf adds the outline of a part, so many px outside of it.

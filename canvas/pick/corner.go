@@ -137,6 +137,14 @@ func Points(p *plan.Plan, r plan.Ref) (plan.Chain, bool) {
 		if b, ok := p.Block(r.ID); ok {
 			return b.Ring, b.Ring.Len() > 0
 		}
+	case plan.KindWall:
+		w, ok := p.Wall(r.ID)
+		return w.Line, ok && !w.Hidden && w.Line.Len() > 0
+	case plan.KindZone:
+		z, ok := p.Zone(r.ID)
+		return z.Ring, ok && !z.Hidden && z.Ring.Len() > 0
+	case plan.KindOpening:
+		return plan.Chain{}, false
 	}
 	for s := range cornered(p) {
 		if s.ref == r {

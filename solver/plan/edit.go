@@ -53,6 +53,7 @@ func draftOf(p *Plan) *draft { return &draft{old: p, new: *p} }
 func (d *draft) obstacles() *Obstacles {
 	if d.new.obstacles == d.old.obstacles {
 		o := *d.old.obstacles
+		o.ids = new(obstacleIDs)
 		d.new.obstacles = &o
 	}
 	return d.new.obstacles
@@ -61,6 +62,7 @@ func (d *draft) obstacles() *Obstacles {
 func (d *draft) marks() *Marks {
 	if d.new.marks == d.old.marks {
 		m := *d.old.marks
+		m.ids = new(markIDs)
 		d.new.marks = &m
 	}
 	return d.new.marks

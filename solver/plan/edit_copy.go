@@ -140,6 +140,7 @@ func paste(p, clip *Plan, places []exact.Vec) (*Plan, []Ref, error) {
 	d := draftOf(p)
 	s := paster{old: p, next: map[Kind]int{}}
 	o, m := *p.obstacles, *p.marks
+	o.ids, m.ids = new(obstacleIDs), new(markIDs)
 	o.walls, o.openings, o.blocks = slices.Clip(o.walls), slices.Clip(o.openings), slices.Clip(o.blocks)
 	m.zones, m.observers, m.targets = slices.Clip(m.zones), slices.Clip(m.observers), slices.Clip(m.targets)
 	m.starts, m.routes = slices.Clip(m.starts), slices.Clip(m.routes)

@@ -167,19 +167,19 @@ func (p *Plan) chain(r Ref) (Chain, error) {
 	case KindFloor:
 		return p.obstacles.floor, nil
 	case KindWall:
-		if i := indexOf(p.obstacles.walls, r.ID); i >= 0 {
+		if i := at(&p.obstacles.ids.walls, p.obstacles.walls, r.ID); i >= 0 {
 			return p.obstacles.walls[i].Line, nil
 		}
 	case KindBlock:
-		if i := indexOf(p.obstacles.blocks, r.ID); i >= 0 {
+		if i := at(&p.obstacles.ids.blocks, p.obstacles.blocks, r.ID); i >= 0 {
 			return p.obstacles.blocks[i].Ring, nil
 		}
 	case KindZone:
-		if i := indexOf(p.marks.zones, r.ID); i >= 0 {
+		if i := at(&p.marks.ids.zones, p.marks.zones, r.ID); i >= 0 {
 			return p.marks.zones[i].Ring, nil
 		}
 	case KindRoute:
-		if i := indexOf(p.marks.routes, r.ID); i >= 0 {
+		if i := at(&p.marks.ids.routes, p.marks.routes, r.ID); i >= 0 {
 			return p.marks.routes[i].Via, nil
 		}
 	default:

@@ -77,21 +77,21 @@ func (p *Plan) Has(r Ref) bool {
 	case KindFloor:
 		return r.ID == "" && p.obstacles.floor.Len() > 0
 	case KindWall:
-		return indexOf(p.obstacles.walls, r.ID) >= 0
+		return at(&p.obstacles.ids.walls, p.obstacles.walls, r.ID) >= 0
 	case KindOpening:
-		return indexOf(p.obstacles.openings, r.ID) >= 0
+		return at(&p.obstacles.ids.openings, p.obstacles.openings, r.ID) >= 0
 	case KindBlock:
-		return indexOf(p.obstacles.blocks, r.ID) >= 0
+		return at(&p.obstacles.ids.blocks, p.obstacles.blocks, r.ID) >= 0
 	case KindZone:
-		return indexOf(p.marks.zones, r.ID) >= 0
+		return at(&p.marks.ids.zones, p.marks.zones, r.ID) >= 0
 	case KindObserver:
-		return indexOf(p.marks.observers, r.ID) >= 0
+		return at(&p.marks.ids.observers, p.marks.observers, r.ID) >= 0
 	case KindTarget:
-		return indexOf(p.marks.targets, r.ID) >= 0
+		return at(&p.marks.ids.targets, p.marks.targets, r.ID) >= 0
 	case KindStart:
-		return indexOf(p.marks.starts, r.ID) >= 0
+		return at(&p.marks.ids.starts, p.marks.starts, r.ID) >= 0
 	case KindRoute:
-		return indexOf(p.marks.routes, r.ID) >= 0
+		return at(&p.marks.ids.routes, p.marks.routes, r.ID) >= 0
 	case KindUnderlay:
 		return r.ID == "" && p.sheet.Underlay != nil
 	}

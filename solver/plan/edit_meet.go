@@ -88,7 +88,7 @@ func (e Lengthen) Apply(p *Plan) (*Plan, error) {
 // meet changes the end of a wall for the sake of another: its beginning when start says so, for which the wall is turned about
 // and back again.
 func meet(p *Plan, id, toID string, start bool, change func(w, to *Wall, openings []Opening) ([]Opening, error)) (*Plan, error) {
-	i := indexOf(p.obstacles.walls, id)
+	i := at(&p.obstacles.ids.walls, p.obstacles.walls, id)
 	to, ok := p.Wall(toID)
 	switch {
 	case i < 0:

@@ -118,6 +118,7 @@ func (c *carrier) openings() error {
 
 func (c *carrier) marks() error {
 	old, now := c.draft.old.marks, *c.draft.old.marks
+	now.ids = new(markIDs)
 	var some [5]bool
 	var err [5]error
 	now.zones, some[0], err[0] = moved(&c.mover, KindZone, old.zones, func(z *Zone) error { return c.ring(&z.Ring) })

@@ -109,6 +109,7 @@ func (v *mover) obstacles() error {
 
 func (v *mover) marks() error {
 	old, now := v.draft.old.marks, *v.draft.old.marks
+	now.ids = new(markIDs)
 	var some [5]bool
 	var err [5]error
 	now.zones, some[0], err[0] = moved(v, KindZone, old.zones, func(z *Zone) error { return moveChain(&z.Ring, v.by) })

@@ -23,7 +23,7 @@ func (e SplitWall) Added(p *Plan) Ref { return freshRef(p, KindWall, "") }
 
 // Apply fails when the point does not lie on the piece, is an end of the wall, or an opening lies across it.
 func (e SplitWall) Apply(p *Plan) (*Plan, error) {
-	i := indexOf(p.obstacles.walls, e.Wall)
+	i := at(&p.obstacles.ids.walls, p.obstacles.walls, e.Wall)
 	if i < 0 {
 		return nil, missing(KindWall, e.Wall)
 	}
@@ -100,7 +100,7 @@ func (e CloseWall) Label() string { return "close wall" }
 
 // Apply fails when the wall is closed already, or has fewer than three corners.
 func (e CloseWall) Apply(p *Plan) (*Plan, error) {
-	i := indexOf(p.obstacles.walls, e.Wall)
+	i := at(&p.obstacles.ids.walls, p.obstacles.walls, e.Wall)
 	if i < 0 {
 		return nil, missing(KindWall, e.Wall)
 	}

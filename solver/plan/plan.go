@@ -13,6 +13,7 @@ type Obstacles struct {
 	walls    []Wall
 	openings []Opening
 	blocks   []Block
+	ids      *obstacleIDs
 }
 
 // Marks is everything put down on the floor that stops nothing: observers, targets, starts, routes, zones, and the walker.
@@ -23,6 +24,7 @@ type Marks struct {
 	starts    []Start
 	routes    []Route
 	walker    Walker
+	ids       *markIDs
 }
 
 // Plan is one state of the drawing. It never changes.
@@ -54,9 +56,9 @@ func New() *Plan { return From(Parts{Walker: DefaultWalker(), Sheet: Sheet{Unit:
 func From(p Parts) *Plan {
 	sheet := p.Sheet
 	return &Plan{
-		obstacles: &Obstacles{p.Floor, slices.Clone(p.Walls), slices.Clone(p.Openings), slices.Clone(p.Blocks)},
+		obstacles: &Obstacles{p.Floor, slices.Clone(p.Walls), slices.Clone(p.Openings), slices.Clone(p.Blocks), new(obstacleIDs)},
 		marks: &Marks{slices.Clone(p.Zones), slices.Clone(p.Observers), slices.Clone(p.Targets),
-			slices.Clone(p.Starts), slices.Clone(p.Routes), p.Walker},
+			slices.Clone(p.Starts), slices.Clone(p.Routes), p.Walker, new(markIDs)},
 		sheet: &sheet,
 	}
 }
@@ -121,30 +123,22 @@ func (p *Plan) NumStarts() int    { return len(p.marks.starts) }
 
 // Wall returns the wall with the given id.
 func (p *Plan) Wall(id string) (Wall, bool) {
-	return find(p.obstacles.walls, func(w Wall) bool { return w.ID == id })
+	return pickAt(&p.obstacles.ids.walls, p.obstacles.walls, id)
 }
 
 // Observer returns the observer with the given id.
 func (p *Plan) Observer(id string) (Observer, bool) {
-	return find(p.marks.observers, func(o Observer) bool { return o.ID == id })
+	return pickAt(&p.marks.ids.observers, p.marks.observers, id)
 }
 
 // Target returns the target with the given id.
 func (p *Plan) Target(id string) (Target, bool) {
-	return find(p.marks.targets, func(t Target) bool { return t.ID == id })
+	return pickAt(&p.marks.ids.targets, p.marks.targets, id)
 }
 
 // Start returns the start with the given id.
 func (p *Plan) Start(id string) (Start, bool) {
-	return find(p.marks.starts, func(s Start) bool { return s.ID == id })
-}
-
-func find[T any](list []T, ok func(T) bool) (T, bool) {
-	if i := slices.IndexFunc(list, ok); i >= 0 {
-		return list[i], true
-	}
-	var none T
-	return none, false
+	return pickAt(&p.marks.ids.starts, p.marks.starts, id)
 }
 
 // Problem is one fault of the drawing: data, not an error.
