@@ -118,6 +118,13 @@ func replaced[T any, P item[T]](kind Kind, list []T, it T) ([]T, error) {
 	return list, nil
 }
 
+// indexOf returns the index of the first item with an id, -1 when there is none. It looks at the items where they lie: a copy
+// of each would be put on the heap.
 func indexOf[T any, P identified[T]](list []T, id string) int {
-	return slices.IndexFunc(list, func(it T) bool { return *P(&it).id() == id })
+	for i := range list {
+		if *P(&list[i]).id() == id {
+			return i
+		}
+	}
+	return -1
 }
