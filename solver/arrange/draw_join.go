@@ -129,7 +129,7 @@ type mate struct {
 
 // wallEnd is one end of an open thick wall.
 type wallEnd struct {
-	at    exact.Pt
+	at    uint64 // key of its point
 	index int
 	mate
 }
@@ -140,11 +140,14 @@ func (d *drawer) joinEnds() {
 	ends := d.ends
 	for i := range d.strands {
 		if s := &d.strands[i]; s.thick() && !s.closed {
-			ends = append(ends, wallEnd{s.pts[0], i, mate{s, false}}, wallEnd{s.pts[len(s.pts)-1], i, mate{s, true}})
+			ends = append(ends, wallEnd{key(s.pts[0]), i, mate{s, false}}, wallEnd{key(s.pts[len(s.pts)-1]), i, mate{s, true}})
 		}
 	}
 	slices.SortFunc(ends, func(a, b wallEnd) int {
-		return cmp.Or(a.at.Compare(b.at), cmp.Compare(a.index, b.index))
+		if a.at != b.at {
+			return cmp.Compare(a.at, b.at)
+		}
+		return cmp.Compare(a.index, b.index)
 	})
 	for i := 0; i < len(ends); {
 		j := i + 1
