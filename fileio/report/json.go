@@ -103,7 +103,7 @@ type jsonProblem struct {
 
 // JSON writes the result as one JSON object, one entry a line.
 //
-//   - Members: title, walker, sight, seen_from, approaches, reach, problems, caution; their entries as in README.
+//   - Members: title, walker, sight, seen_from, approaches, reach, routes, problems, caution; their entries as in README.
 //   - Units: as the end of each name says; coordinates in mm, rings counter-clockwise, first point not repeated.
 //   - Errors: those of w.
 func JSON(w io.Writer, p *plan.Plan, r *study.Result) error {
@@ -114,6 +114,7 @@ func JSON(w io.Writer, p *plan.Plan, r *study.Result) error {
 	list(j, ",\n\"seen_from\": [", r.SeenFrom, targetEntry)
 	list(j, ",\n\"approaches\": [", r.Approaches, func(a study.Approach) any { return approachEntry(a, r.WalkerEye) })
 	list(j, ",\n\"reach\": [", r.Reach, func(a study.Reach) any { return reachEntry(p, a) })
+	list(j, ",\n\"routes\": [", r.Routes, routeEntry)
 	list(j, ",\n\"problems\": [", r.Problems, problemEntry)
 	j.write(",\n\"caution\": ", Caution)
 	j.text("}\n")

@@ -63,6 +63,16 @@ func sample(unit string) (*plan.Plan, *study.Result) {
 			{Start: "S1", Zone: "Z2"},
 			{Start: "S1", Zone: "Z3", Problem: "start S1 lies outside the floor; move it inside"},
 		},
+		Routes: []study.Route{
+			{ID: "R1", From: "S1", To: "T1", Length: 9000, Seconds: 7.5, Points: []orb.Point{{math.Copysign(0, -1), 0}, {3000, 0}, {3000, 6000}},
+				Legs: []study.Leg{{To: "waypoint 1", Length: 3000, Seconds: 2.5, Last: 1}, {To: "target T1", Length: 6000, Seconds: 5, First: 1, Last: 2}}},
+			{ID: "R2", From: "S1", Length: 3000, Seconds: 2.5, Points: []orb.Point{{0, 0}, {3000, 0}},
+				Legs: []study.Leg{{To: "waypoint 1", Length: 3000, Seconds: 2.5, Last: 1}}},
+			{ID: "R3", From: "S1", To: "T3", Length: 3000, Seconds: 2.5, Points: []orb.Point{{0, 0}, {3000, 0}},
+				Legs: []study.Leg{{To: "waypoint 1", Length: 3000, Seconds: 2.5, Last: 1}}, Closed: 2, ClosedTo: "waypoint 2", Reason: "glazing G1 closes the way"},
+			{ID: "R4", From: "S1", To: "T4", Points: []orb.Point{{0, 0}}, Closed: 1, ClosedTo: "target T4", Reason: "door D1 closes the way"},
+			{ID: "R5", From: "S1", To: "T4", Problem: "waypoint 2 is inside block B1; move it out, or lower what it stands in"},
+		},
 		Problems: []plan.Problem{{Kind: plan.ProblemInside, Items: []plan.Ref{{Kind: plan.KindObserver, ID: "B"},
 			{Kind: plan.KindWall, ID: "W3"}}, At: exact.Pt{X: 12345, Y: -20}, Text: "stands inside a body; move it onto the floor"}},
 	}

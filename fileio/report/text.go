@@ -13,7 +13,7 @@ import (
 )
 
 // Text writes the result as tables: what each observer sees, where each target is seen from, the approaches, how
-// far the zones are, the problems, and the caution. Whose eye each table is for stands in its heading.
+// far the zones are, the routes, the problems, and the caution. Whose eye each table is for stands in its heading.
 //
 //   - Units: the plan's display unit, named in the headings; areas in m², or square feet.
 //   - Errors: those of w.
@@ -24,6 +24,7 @@ func Text(w io.Writer, p *plan.Plan, r *study.Result) error {
 	t.seenFrom()
 	t.approaches()
 	t.reach()
+	t.routes()
 	t.problems()
 	t.b.WriteString("\n" + Caution + "\n")
 	_, err := io.WriteString(w, t.b.String())

@@ -120,6 +120,7 @@ func (p *Plan) NumBlocks() int    { return len(p.obstacles.blocks) }
 func (p *Plan) NumObservers() int { return len(p.marks.observers) }
 func (p *Plan) NumTargets() int   { return len(p.marks.targets) }
 func (p *Plan) NumStarts() int    { return len(p.marks.starts) }
+func (p *Plan) NumRoutes() int    { return len(p.marks.routes) }
 
 // Wall returns the wall with the given id.
 func (p *Plan) Wall(id string) (Wall, bool) {

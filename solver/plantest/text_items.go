@@ -35,6 +35,8 @@ func (s *words) add(parts *plan.Parts) error {
 		parts.Walker.Eye = s.length("eye", parts.Walker.Eye)
 	case "observer", "target", "start":
 		s.addMark(parts)
+	case "route":
+		s.addRoute(parts)
 	default:
 		return fmt.Errorf("unknown item %s", s.head)
 	}
@@ -65,6 +67,13 @@ func (s *words) addDoor(parts *plan.Parts) {
 		d.Wall, s.flags = s.flags[0], nil
 	}
 	parts.Openings = append(parts.Openings, d)
+}
+
+func (s *words) addRoute(parts *plan.Parts) {
+	r := plan.Route{ID: s.id("R", len(parts.Routes)), Via: plan.ChainOf(s.points...)}
+	r.From, _ = s.take("from")
+	r.To, _ = s.take("to")
+	parts.Routes = append(parts.Routes, r)
 }
 
 func (s *words) addMark(parts *plan.Parts) {

@@ -20,8 +20,9 @@ import (
 //	floor 0,0 8,0 8,5 0,5                   block 1,1 2,1 2,2 h=1.1        zone name=Hall 0,0 1,0 1,1 room
 //	observer 2,2 eye=1.6 heading=0 view=60 range=5
 //	target 3,3      target 3,3 4,3 (a face)     start 1,1     walker radius=0.3 pace=1.2 eye=1.6
+//	route from=S1 2,1 3,2 to=T1 (its waypoints)
 //
-// Items are numbered from 1 in their list as W1, D1, B1, Z1, O1, T1, S1, unless id= names them.
+// Items are numbered from 1 in their list as W1, D1, B1, Z1, O1, T1, S1, R1, unless id= names them.
 func Parse(t testing.TB, text string) *plan.Plan {
 	t.Helper()
 	p, err := Read(text)

@@ -40,6 +40,13 @@ func Text(p *plan.Plan) string {
 	for _, s := range parts.Starts {
 		fmt.Fprintf(&b, "start %s id=%s\n", written(s.At), s.ID)
 	}
+	for _, r := range parts.Routes {
+		fmt.Fprintf(&b, "route%s id=%s from=%s", places(r.Via), r.ID, r.From)
+		if r.To != "" {
+			b.WriteString(" to=" + r.To)
+		}
+		b.WriteByte('\n')
+	}
 	w := parts.Walker
 	fmt.Fprintf(&b, "walker radius=%s pace=%v eye=%s\n", metres(w.Radius), w.Pace, metres(w.Eye))
 	return b.String()

@@ -76,6 +76,32 @@ func (g *ground) holding(p exact.Pt, do func(tri int32)) {
 	}
 }
 
+// parted reports whether p is more than one place for walkers, which are not connected through it, and what parts them.
+func (g *ground) parted(p exact.Pt) (plan.Ref, bool) {
+	place, ok := g.mesh.Locate(p)
+	if !ok {
+		return plan.Ref{}, false
+	}
+	places, by := 0, int32(-1) // how many free sectors begin at an edge that stops walking
+	begins := func(e mesh.Edge) {
+		if !g.shut(e.Tri()) && g.mesh.Tris[e.Tri()].StopsWalk(e.Corner()) {
+			places++
+			by = g.mesh.Constraint(e)
+		}
+	}
+	switch {
+	case place.Corner >= 0:
+		g.mesh.Around(mesh.EdgeOf(place.Tri, place.Corner), begins)
+	case place.Edge != mesh.None && g.mesh.Twin(place.Edge) != mesh.None:
+		begins(place.Edge)
+		begins(g.mesh.Twin(place.Edge))
+	}
+	if places < 2 || by < 0 {
+		return plan.Ref{}, places > 1
+	}
+	return g.outline.Items[g.graph.Edges[by].Item], true
+}
+
 // holder returns the item, the first in the plan, of the bodies that wind about the solid place p and stop what stops says,
 // by the crossings of a ray to the right with the rounded graph. O(n).
 func (g *ground) holder(p exact.Pt, stops func(arrange.Stops) bool) plan.Ref {

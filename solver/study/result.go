@@ -89,12 +89,34 @@ type Reach struct {
 	Cut                   bool      // to some of the zone's floor no walk leads
 }
 
+// Route is a route as it is walked: each of its legs, from one of its points to the next, is the shortest walk.
+type Route struct {
+	ID, From, To string
+	Problem      string      // why it was not solved; empty when it was
+	Legs         []Leg       // those that can be walked, up to the first that cannot
+	Points       []orb.Point // mm, the walk from the start on, all legs in one
+	Length       float64     // mm, of the legs together
+	Seconds      float64     // of the legs together, at the walker's pace
+	Closed       int         // which leg no walk leads over, from 1; 0 when there is none
+	ClosedTo     string      // where that leg leads: "waypoint 2"
+	Reason       string      // what closes it
+}
+
+// Leg is one leg of a route: Points[First] to Points[Last].
+type Leg struct {
+	To          string  // "waypoint 2", "target T1"
+	Length      float64 // mm
+	Seconds     float64
+	First, Last int
+}
+
 // Result is everything studied about one plan.
 type Result struct {
 	Sight      []Sight    // one for each observer, in the plan's order
 	SeenFrom   []Sight    // one for each target
 	Approaches []Approach // one for each start and target, starts outermost
 	Reach      []Reach    // one for each start and zone, starts outermost
+	Routes     []Route    // one for each route, in the plan's order
 	WalkerEye  float64    // mm
 	// WalkerRadius is the radius that walks keep clear of everything that stops walking; the polygon that stands for the
 	// walker's disc encloses it and reaches at most RadiusExcess beyond. Both in mm.

@@ -136,7 +136,10 @@ func (s *Solver) Solve(ctx context.Context, p *plan.Plan) (*Result, error) {
 	if r.Approaches, r.Reach, err = s.fromStarts(pulse.Part(ctx, 0.6, 0.8), p, true); err != nil {
 		return nil, err
 	}
-	if err = s.ClearWidths(pulse.Part(ctx, 0.8, 1), p, r.Approaches); err != nil {
+	if err = s.ClearWidths(pulse.Part(ctx, 0.8, 0.95), p, r.Approaches); err != nil {
+		return nil, err
+	}
+	if r.Routes, err = s.Routes(pulse.Part(ctx, 0.95, 1), p); err != nil {
 		return nil, err
 	}
 	r.Problems = s.Problems(p)
@@ -159,7 +162,7 @@ func (s *Solver) Problems(p *plan.Plan) []plan.Problem {
 	for _, t := range p.Starts() {
 		all = s.scene.tell(all, plan.Ref{Kind: plan.KindStart, ID: t.ID}, t.At, s.scene.begin(t.At))
 	}
-	return all
+	return s.scene.tellRoutes(all, p)
 }
 
 // tell appends the problem of a mark that had to be moved or cannot stand where it is.
