@@ -104,22 +104,25 @@ var feelDrags = []struct {
 		return newFeelRig(tb, p, o, func(by exact.Vec) plan.Edit { return plan.MoveItems{Items: []plan.Ref{o}, By: by} })
 	}},
 	{"corner", func(tb testing.TB, p *plan.Plan) *feelRig {
-		at, best := firstObserver(p).At, math.Inf(1)
-		var wall string
-		var corner int
-		var from exact.Pt
-		for _, w := range p.Walls() {
-			for k := range w.Line.Len() {
-				if d := exact.Dist(w.Line.At(k), at); d < best && len(openingsOf(p, w.ID)) == 0 {
-					best, wall, corner, from = d, w.ID, k, w.Line.At(k)
-				}
-			}
-		}
+		wall, corner, from := cornerNear(p, firstObserver(p).At)
 		item := plan.Ref{Kind: plan.KindWall, ID: wall}
 		return newFeelRig(tb, p, item, func(by exact.Vec) plan.Edit {
 			return plan.MoveCorner{Corner: plan.Corner{Item: item, Index: corner}, To: from.Add(by), Along: true}
 		})
 	}},
+}
+
+// cornerNear returns the corner nearest to a place of a wall without openings.
+func cornerNear(p *plan.Plan, at exact.Pt) (wall string, corner int, from exact.Pt) {
+	best := math.Inf(1)
+	for _, w := range p.Walls() {
+		for k := range w.Line.Len() {
+			if d := exact.Dist(w.Line.At(k), at); d < best && len(openingsOf(p, w.ID)) == 0 {
+				best, wall, corner, from = d, w.ID, k, w.Line.At(k)
+			}
+		}
+	}
+	return wall, corner, from
 }
 
 func firstObserver(p *plan.Plan) plan.Observer {

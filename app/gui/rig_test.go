@@ -23,11 +23,11 @@ import (
 // test empties.
 type rig struct {
 	*window
-	t     *testing.T
+	t     testing.TB
 	queue chan func()
 }
 
-func newRig(t *testing.T, solver func() live.Solver) *rig {
+func newRig(t testing.TB, solver func() live.Solver) *rig {
 	t.Helper()
 	r := &rig{t: t, queue: make(chan func(), 1000)}
 	d := newDesk(parts{app: test.NewTempApp(t), solver: solver, do: func(f func()) { r.queue <- f }, now: time.Now, inline: true},
@@ -153,7 +153,7 @@ func (r *rig) pixel(x, y float64) colour {
 }
 
 // text returns the plan as its file would hold it.
-func text(t *testing.T, p *plan.Plan) string {
+func text(t testing.TB, p *plan.Plan) string {
 	t.Helper()
 	var b bytes.Buffer
 	if err := planfile.Write(&b, p); err != nil {

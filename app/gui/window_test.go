@@ -18,7 +18,7 @@ import (
 	"enfilade/solver/study"
 )
 
-func writeFile(t *testing.T, path string, data []byte) {
+func writeFile(t testing.TB, path string, data []byte) {
 	t.Helper()
 	if err := os.WriteFile(path, data, 0o666); err != nil {
 		t.Fatal(err)

@@ -21,8 +21,8 @@ type Drawing struct {
 	ink    inkIndex
 }
 
-// span is a run of bodies and a run of lines.
-type span struct{ body0, body1, line0, line1 int32 }
+// span is a run of bodies, a run of lines, and of an opening its door, counted from 1.
+type span struct{ body0, body1, line0, line1, door int32 }
 
 // look is how a body or line is drawn.
 type look uint8
@@ -67,6 +67,11 @@ func NewDrawing(p *plan.Plan) *Drawing {
 		i = j
 	}
 	d.doors = doorsOf(p)
+	for i := range d.doors {
+		sp := d.refs[d.doors[i].item]
+		sp.door = int32(i) + 1
+		d.refs[d.doors[i].item] = sp
+	}
 	d.ink = newInkIndex(d)
 	return d
 }
@@ -82,7 +87,7 @@ func (d *Drawing) addShape(o *arrange.Outline, segs []arrange.Segment, traits *t
 	t := traits.of(item)
 	sp, known := d.refs[item]
 	if !known {
-		sp = span{int32(len(d.bodies)), int32(len(d.bodies)), int32(len(d.lines)), int32(len(d.lines))}
+		sp = span{int32(len(d.bodies)), int32(len(d.bodies)), int32(len(d.lines)), int32(len(d.lines)), 0}
 	}
 	if b := segs[0].Body; b == arrange.NoBody {
 		d.addLines(segs, inkLine{look: t.lineLook, hidden: t.hidden, item: item})

@@ -1,6 +1,8 @@
 package paint
 
 import (
+	"math"
+
 	"enfilade/solver/plan"
 )
 
@@ -15,30 +17,70 @@ func (p *pen) outlines() {
 	p.selection()
 }
 
-// selection outlines what is selected. Of thousands of items, those that stand together in the plan's lists are stroked
-// together: the painter's time grows with the square of the outlines that one stroke has in a row of pixels.
+// Selections of many items are drawn some outlines at a time, for the rasteriser walks all that a row has to add to it; and where
+// more are in sight than can be told apart, one frame goes about them all.
+const (
+	outlinesAtOnce = 16
+	mostOutlines   = 600
+)
+
+// selection draws the outlines of what is selected. What is dragged in such numbers is told by its moving.
 func (p *pen) selection() {
-	const (
-		many     = 1000 // of so many, doors are told by their walls alone, and all by their moving while they are dragged
-		together = 16
-	)
-	if len(p.s.Dragged) >= many {
+	if len(p.s.Dragged) > mostOutlines {
 		return
 	}
-	for rest := p.s.Selected; len(rest) > 0; {
-		n := len(rest)
-		if len(p.s.Selected) >= many {
-			n = min(n, together)
+	style := p.stroked(p.theme.Ink, StrokeStyle{Width: 2})
+	ops, points := len(p.Ops), len(p.Points)
+	first := p.begin()
+	m := first
+	for _, ref := range p.s.Selected {
+		p.outlineOf(ref, SelectedOffset)
+		switch n := p.begin(); {
+		case n-first > mostOutlines:
+			p.Ops, p.Subs, p.Points = p.Ops[:ops], p.Subs[:first], p.Points[:points]
+			p.frameSelection()
+			return
+		case n-m >= outlinesAtOnce:
+			p.op(m, style)
+			m = n
 		}
-		m := p.begin()
-		for _, ref := range rest[:n] {
-			if ref.Kind != plan.KindOpening || len(p.s.Selected) < many {
-				p.outlineOf(ref, SelectedOffset)
+	}
+	p.op(m, style)
+}
+
+// frameSelection draws a frame about the obstacles that are selected.
+func (p *pen) frameSelection() {
+	d := p.drawing
+	in := box{math.Inf(1), math.Inf(1), math.Inf(-1), math.Inf(-1)}
+	add := func(pts [2]int32) {
+		for _, q := range d.pts[pts[0]:pts[1]] {
+			x, y := float64(q.X), float64(q.Y)
+			in = box{min(in.x0, x), min(in.y0, y), max(in.x1, x), max(in.y1, y)}
+		}
+	}
+	for _, ref := range p.s.Selected {
+		sp := d.refs[ref]
+		for i := sp.body0; i < sp.body1; i++ {
+			if b := &d.bodies[i]; b.item == ref && !b.hidden {
+				for _, r := range d.rings[b.rings[0]:b.rings[1]] {
+					add(r)
+				}
 			}
 		}
-		p.op(m, p.stroked(p.theme.Ink, StrokeStyle{Width: 2}))
-		rest = rest[n:]
+		for i := sp.line0; i < sp.line1; i++ {
+			if ln := &d.lines[i]; ln.item == ref && !ln.hidden {
+				add(ln.pts)
+			}
+		}
 	}
+	if in.x0 > in.x1 {
+		return
+	}
+	a, b := p.grid(vec{in.x0, in.y1}), p.grid(vec{in.x1, in.y0}) // upper left, lower right
+	off := SelectedOffset * p.k
+	m := p.begin()
+	p.addRing(p.frame, []place{{a.x - off, a.y - off}, {b.x + off, a.y - off}, {b.x + off, b.y + off}, {a.x - off, b.y + off}})
+	p.op(m, p.stroked(p.theme.Ink, StrokeStyle{Width: 2}))
 }
 
 // outlineOf adds the outline of a part, so many px outside of it.
@@ -136,13 +178,14 @@ func (p *pen) outlineDoor(ref plan.Ref, off float64) {
 			d = p.held
 		}
 	}
-	for i := range d.doors {
-		if dr := &d.doors[i]; dr.item == ref && !dr.hidden {
-			ring := append(p.work.ring[:0], p.grid(dr.right[0]), p.grid(dr.right[1]), p.grid(dr.left[1]), p.grid(dr.left[0]))
-			p.work.ring = ring
-			p.addOffset(ring, off*p.k)
-		}
+	n := d.refs[ref].door
+	if n == 0 || d.doors[n-1].hidden {
+		return
 	}
+	dr := &d.doors[n-1]
+	ring := append(p.work.ring[:0], p.grid(dr.right[0]), p.grid(dr.right[1]), p.grid(dr.left[1]), p.grid(dr.left[0]))
+	p.work.ring = ring
+	p.addOffset(ring, off*p.k)
 }
 
 // addOffset adds a ring moved outwards by d pixels. The ring has its inside to the left in the plan, so outwards lies to the

@@ -13,7 +13,7 @@ import (
 func knobs(h Host) [][2]float64 {
 	var out [][2]float64
 	for _, r := range h.Selection() {
-		if locked(h.Plan(), r) {
+		if r.Kind != plan.KindObserver && r.Kind != plan.KindTarget || locked(h.Plan(), r) {
 			continue
 		}
 		for _, k := range pick.Knobs(h.Plan(), h.Camera(), r) {

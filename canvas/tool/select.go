@@ -285,6 +285,9 @@ func handles(p *plan.Plan, sel []plan.Ref) []exact.Pt {
 	const most = 64
 	var out []exact.Pt
 	for _, r := range sel {
+		if len(out) == most {
+			break
+		}
 		c, ok := pick.Points(p, r)
 		mark := r.Kind == plan.KindObserver || r.Kind == plan.KindTarget || r.Kind == plan.KindStart
 		if !ok || mark || len(out)+c.Len() > most {

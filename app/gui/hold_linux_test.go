@@ -1,0 +1,253 @@
+//go:build linux
+
+package gui
+
+import (
+	"math"
+	"path/filepath"
+	"runtime"
+	"syscall"
+	"testing"
+	"time"
+	"unsafe"
+
+	"fyne.io/fyne/v2"
+
+	"enfilade/canvas/view"
+	"enfilade/solver/exact"
+	"enfilade/solver/plan"
+	"enfilade/solver/plantest"
+)
+
+// holdRig is a window whose every stay in the toolkit's goroutine is timed: our handlers of pointer and keys, the taking over
+// of answers, the drawing of the picture. The toolkit's own painting is no part of it.
+type holdRig struct {
+	*rig
+	held  holds
+	eye   exact.Pt // of the observer that is dragged
+	wall  exact.Pt // a wall's corner near it
+	close view.Camera
+	path  string // of the plan's file
+}
+
+// holds are the times the goroutine was held: of its thread by the processor, and by the clock, which also counts what other
+// work on the machine took from it.
+type holds struct{ thread, clock []time.Duration }
+
+// of times all holds of something that is done, on one thread: threadTime is that of the calling one.
+func (*holds) of(h *holdRig, do func(*holdRig)) {
+	runtime.LockOSThread()
+	defer runtime.UnlockOSThread()
+	do(h)
+}
+
+// longest is the longest hold by the processor's time.
+func (h *holds) longest() (most time.Duration) {
+	for _, d := range h.thread {
+		most = max(most, d)
+	}
+	return most
+}
+
+// newHoldRig opens a plan in a window whose picture is 1600 by 1000.
+func newHoldRig(tb testing.TB, p *plan.Plan) *holdRig {
+	tb.Helper()
+	h := &holdRig{rig: newRig(tb, realSolver), path: filepath.Join(tb.TempDir(), "plan.enfilade")}
+	h.errands.inline = false // as in the program: files are read beside the window
+	s := h.view.Size()
+	h.win.Resize(h.desk.size.AddWidthHeight(feelWidth-s.Width, feelHeight-s.Height))
+	writeFile(tb, h.path, []byte(text(tb, p)))
+	h.open(h.path)
+	h.until("the plan is open", func() bool { return h.session.Path() != "" })
+	h.settle()
+	h.eye = firstObserver(h.session.Plan()).At
+	_, _, h.wall = cornerNear(h.session.Plan(), h.eye)
+	h.close = h.view.cam
+	h.close.CX, h.close.CY = float64(h.wall.X)/exact.PerMM, float64(h.wall.Y)/exact.PerMM
+	h.close.Scale = max(h.close.Scale, 0.03)
+	return h
+}
+
+// hold times one stay in the toolkit's goroutine.
+func (h *holdRig) hold(f func()) {
+	clock, thread := time.Now(), threadTime()
+	f()
+	h.held.thread = append(h.held.thread, threadTime()-thread)
+	h.held.clock = append(h.held.clock, time.Since(clock))
+}
+
+// threadTime is the processor's time that the calling thread has taken.
+func threadTime() time.Duration {
+	const threadClock = 3 // CLOCK_THREAD_CPUTIME_ID; the sums of Getrusage go by ticks
+	var t syscall.Timespec
+	if _, _, e := syscall.Syscall(syscall.SYS_CLOCK_GETTIME, threadClock, uintptr(unsafe.Pointer(&t)), 0); e != 0 {
+		return 0
+	}
+	return time.Duration(t.Nano())
+}
+
+// paint draws the picture as the toolkit asks for it after every change.
+func (h *holdRig) paint() { h.hold(h.frame) }
+
+// event does what the toolkit does about one event: the handler, what workers queued meanwhile, and the picture.
+func (h *holdRig) event(f func()) {
+	h.hold(f)
+	h.paint()
+	for end := time.Now().Add(4 * time.Millisecond); time.Now().Before(end); {
+		select {
+		case f := <-h.queue:
+			h.hold(f)
+			h.paint()
+		case <-time.After(time.Millisecond):
+		}
+	}
+}
+
+// rest lets the study come to its end.
+func (h *holdRig) rest() {
+	h.until("the study is done", func() bool {
+		select {
+		case f := <-h.queue:
+			h.hold(f)
+			h.paint()
+		default:
+		}
+		return h.results.done()
+	})
+}
+
+// spot returns a grid point's place in metres, as the rig's moves take it.
+func spot(p exact.Pt) (x, y float64) { return float64(p.X) / 10000, float64(p.Y) / 10000 }
+
+// drawn drags from a point in a circle round it, 30 px wide.
+func (h *holdRig) drawn(from exact.Pt, moves int) {
+	x, y := spot(from)
+	r := 0.03 / h.view.cam.Scale
+	h.event(func() { h.move(x, y) })
+	h.event(func() { h.press(x, y) })
+	for i := range moves {
+		sin, cos := math.Sincos(float64(i) / 10)
+		h.event(func() { h.dragTo(x+r*cos, y+r*sin) })
+	}
+	h.event(func() { h.release(x+r, y) })
+	h.rest()
+	if !h.session.Dirty() {
+		h.t.Fatal("nothing was dragged")
+	}
+}
+
+// holdCases are what a person does, each beginning and ending with the plan as it was.
+var holdCases = []struct {
+	name string
+	do   func(h *holdRig)
+}{
+	{"hover", func(h *holdRig) {
+		for _, cam := range []view.Camera{h.view.cam, h.close} {
+			h.event(func() { h.view.look(cam) })
+			h.rest()
+			for i := range 30 {
+				at := fyne.NewPos(float32(i*53%feelWidth), float32(i*31%feelHeight))
+				h.event(func() { h.view.MouseMoved(mouse(at, 0)) })
+			}
+		}
+		h.event(h.view.fit)
+	}},
+	{"observer", func(h *holdRig) {
+		h.drawn(h.eye, 30)
+		h.event(h.undo)
+		h.rest()
+	}},
+	{"corner", func(h *holdRig) {
+		h.event(func() { h.view.look(h.close) })
+		h.drawn(h.wall, 30)
+		h.event(h.undo)
+		h.event(h.view.fit)
+		h.rest()
+	}},
+	{"redo", func(h *holdRig) {
+		h.drawn(h.eye, 3)
+		for range 5 {
+			h.event(h.undo)
+			h.event(h.redo)
+		}
+		h.event(h.undo)
+		h.rest()
+	}},
+	{"select", func(h *holdRig) {
+		x, y := spot(h.wall)
+		h.event(func() { h.view.look(h.close) })
+		h.event(func() { h.click(x+0.5, y) })
+		h.event(func() { h.click(x, y) })
+		h.event(func() { h.keys(fyne.KeyEscape) })
+		h.event(h.view.fit)
+	}},
+	{"all", func(h *holdRig) {
+		h.event(h.selectAll)
+		h.event(func() { h.move(5, 5) })
+		h.event(func() { h.keys(fyne.KeyEscape) })
+	}},
+	{"open", func(h *holdRig) {
+		h.open(h.path)
+		before := h.session.Rev()
+		h.until("the plan is open", func() bool {
+			select {
+			case f := <-h.queue:
+				h.hold(f)
+				h.paint()
+			default:
+			}
+			return h.session.Rev() != before
+		})
+		h.rest()
+	}},
+}
+
+// BenchmarkHold measures how long the toolkit's goroutine is held by what we do in it, while someone works: the median, the
+// 95th percentile and the longest in the processor's time of its thread, and the longest by the clock.
+func BenchmarkHold(b *testing.B) {
+	for _, on := range feelPlans {
+		b.Run("plan="+on.name, func(b *testing.B) {
+			h := newHoldRig(b, on.make(b))
+			for _, c := range holdCases {
+				b.Run("do="+c.name, func(b *testing.B) {
+					for h.held = (holds{}); b.Loop(); {
+						h.held.of(h, c.do)
+					}
+					b.ReportMetric(ms(h.held.thread, 0.5), "median-ms")
+					b.ReportMetric(ms(h.held.thread, 0.95), "p95-ms")
+					b.ReportMetric(ms(h.held.thread, 1), "longest-ms")
+					b.ReportMetric(ms(h.held.clock, 1), "clock-ms")
+					b.ReportMetric(float64(len(h.held.thread)), "holds")
+				})
+			}
+		})
+	}
+}
+
+// TestHold: no handler holds the toolkit's goroutine for longer than three times the 16 ms it should, at 20,000 walls. Of
+// some rounds the best counts, for what disturbs the caches and the collector's share cost the processor's time too.
+func TestHold(t *testing.T) {
+	if testing.Short() || raceEnabled {
+		t.Skip("measures time")
+	}
+	const limit = 48 * time.Millisecond
+	h := newHoldRig(t, plantest.Office(1, 20000))
+	was := text(t, h.session.Plan())
+	for _, c := range holdCases {
+		best := time.Hour
+		for range 3 {
+			h.held = holds{}
+			h.held.of(h, c.do)
+			best = min(best, h.held.longest())
+			if best < limit {
+				break
+			}
+		}
+		if best > limit {
+			t.Errorf("%s: the window's goroutine is held for %v of the processor's time, want under %v", c.name, best, limit)
+		}
+	}
+	if text(t, h.session.Plan()) != was {
+		t.Error("the plan is not as it was")
+	}
+}
