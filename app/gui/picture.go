@@ -76,6 +76,9 @@ func (p *picture) draw(w, h int) image.Image {
 	}
 	scene := p.scene()
 	under := p.baseFor(scene)
+	if under == nil {
+		return p.warp.paper(w, h, scene.Theme.Ground)
+	}
 	scene.Drawing = p.base.drawing
 	paint.Overlay(scene, &p.overlay)
 	return p.frame.Draw(under, &p.overlay)
@@ -142,8 +145,12 @@ func keyOf(s *paint.Scene) baseKey {
 	return k
 }
 
-// baseFor returns the base for a scene: the one at hand when it fits, a new one at once when that is quick or nothing at
-// hand is like it, else the one at hand, as the camera sees it, while the worker makes the new one.
+// fewItems is how many walls and blocks a base takes that may be made in the middle of a frame when nothing can stand in for it.
+const fewItems = 1000
+
+// baseFor returns the base for a scene: the one at hand when it fits, a new one at once when that is quick, else the one at hand,
+// as the camera sees it, while the worker makes the new one. It is nil while nothing can be shown yet: the plan is a large one
+// that has just been opened, or the theme has changed.
 func (p *picture) baseFor(s *paint.Scene) *raster.Base {
 	opened := p.w.results.opened
 	if b := p.worker.take(); b != nil && b.opened == opened {
@@ -153,9 +160,15 @@ func (p *picture) baseFor(s *paint.Scene) *raster.Base {
 	if p.base != nil && p.base.key == k {
 		return p.base.base
 	}
-	if p.base == nil || p.base.took < soon || p.base.opened != opened || !p.base.key.like(k) {
+	few := s.Plan.NumWalls()+s.Plan.NumBlocks() <= fewItems
+	likes := p.base != nil && p.base.opened == opened && p.base.key.dark == k.dark
+	if few && (!likes || p.base.took < soon) {
 		p.base = makeBase(s, k, opened)
 		return p.base.base
+	}
+	if !likes {
+		p.worker.ask(s, k, opened)
+		return nil
 	}
 	s.Drawing = p.base.drawing
 	p.worker.ask(s, k, opened)
@@ -163,11 +176,6 @@ func (p *picture) baseFor(s *paint.Scene) *raster.Base {
 		return p.base.base
 	}
 	return p.warp.show(p.base.base, p.base.key.camera, k.camera, s.Theme.Ground)
-}
-
-// like reports whether a base of one key can stand in for one of the other for a moment.
-func (k baseKey) like(q baseKey) bool {
-	return k.dark == q.dark && k.camera.W == q.camera.W && k.camera.H == q.camera.H && k.camera.K == q.camera.K
 }
 
 // makeBase lists and draws a base.

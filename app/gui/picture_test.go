@@ -9,6 +9,7 @@ import (
 	"enfilade/canvas/paint"
 	"enfilade/canvas/raster"
 	"enfilade/canvas/view"
+	"enfilade/solver/plantest"
 )
 
 // TestWarpShiftsAndStretches: the old base goes where the camera goes, and paper comes in from the sides.
@@ -26,11 +27,14 @@ func TestWarpShiftsAndStretches(t *testing.T) {
 	check := func(name string, to view.Camera, want func(x, y int) (int, int, bool)) {
 		var wp warper
 		got := wp.show(old, from, to, paper)
-		for y := range h {
-			for x := range w {
+		if got.W != to.W || got.H != to.H || got.Image.Rect != image.Rect(0, 0, to.W, to.H) {
+			t.Fatalf("%s: the picture is %d by %d", name, got.W, got.H)
+		}
+		for y := range to.H {
+			for x := range to.W {
 				c := got.Image.RGBAAt(x, y)
 				sx, sy, in := want(x, y)
-				i := y*w + x
+				i := y*to.W + x
 				if in && (int(c.R) != sx || int(c.G) != sy || int(got.Ink[i]) != sx || int(got.Low[i]) != sy) {
 					t.Fatalf("%s: pixel %d, %d is %v, want that of %d, %d", name, x, y, c, sx, sy)
 				}
@@ -43,6 +47,7 @@ func TestWarpShiftsAndStretches(t *testing.T) {
 	check("pan", from.Pan(5, -3), func(x, y int) (int, int, bool) { return x - 5, y + 3, x >= 5 && y+3 < h })
 	check("zoom", from.ZoomAt(0, 0, 2), func(x, y int) (int, int, bool) { return x / 2, y / 2, true })
 	check("out", from.ZoomAt(0, 0, 0.5), func(x, y int) (int, int, bool) { return 2*x + 1, 2*y + 1, 2*x+1 < w && 2*y+1 < h })
+	check("another size", from.Resize(w+20, h-10, 1), func(x, y int) (int, int, bool) { return x - 10, y + 5, x >= 10 && x < w+10 })
 }
 
 // TestSlowBaseIsShownShifted: while the worker makes the base of a panned picture, the old one is shown where it belongs.
@@ -70,5 +75,28 @@ func TestSlowBaseIsShownShifted(t *testing.T) {
 	r.frame()
 	if r.picture.base.key != keyOf(r.picture.scene()) {
 		t.Error("another plan is shown over the base of the one before")
+	}
+}
+
+// TestLargePlanIsDrawnBeside: the base of a large plan that is opened, and of one whose window changes its size or theme, is made
+// by the worker; until it is there paper is shown, or the base at hand.
+func TestLargePlanIsDrawnBeside(t *testing.T) {
+	r := newRig(t, realSolver)
+	large := plantest.Office(1, fewItems+200)
+	r.show(func() { r.session.Open(large, "") })
+	r.frame()
+	v := r.view
+	img := r.picture.draw(v.cam.W, v.cam.H).(*image.RGBA)
+	if r.picture.base.key.obstacles == large.Obstacles() || colour(img.RGBAAt(v.cam.W/2, v.cam.H/2)) != paint.Light().Ground {
+		t.Error("a large plan that was opened was drawn in the middle of a frame")
+	}
+	r.settle()
+	if r.picture.base.key.obstacles != large.Obstacles() {
+		t.Error("the plan's base was not taken")
+	}
+	w, h := v.cam.W-100, v.cam.H-60
+	img = r.picture.draw(w, h).(*image.RGBA)
+	if r.picture.base.key.camera.W == w || img.Rect != image.Rect(0, 0, w, h) || colour(img.RGBAAt(w/2, h/2)) == paint.Light().Ground {
+		t.Errorf("after a change of size the old base does not stand in: %v", img.Rect)
 	}
 }
