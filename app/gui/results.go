@@ -55,6 +55,9 @@ func (r *results) answer(s *live.State) {
 		if a := s.Latest[live.StageSeenFrom]; a.Rev < r.opened {
 			r.result.SeenFrom = nil
 		}
+		if a := s.Latest[live.StageRoutes]; a.Rev < r.opened {
+			r.result.Routes = nil
+		}
 		if a := s.Latest[live.StageReach]; a.Rev < r.opened {
 			r.result.Reach = nil
 		}

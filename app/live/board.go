@@ -48,6 +48,7 @@ func (s *State) Result() *study.Result {
 		Approaches: s.Latest[StageApproaches].Approaches,
 		SeenFrom:   s.Latest[StageSeenFrom].Sights,
 		Problems:   s.Latest[StageMesh].Problems,
+		Routes:     s.Latest[StageRoutes].Routes,
 		Reach:      s.Latest[StageReach].Reach,
 	}
 	if w := s.Latest[StageWidths]; w.Plan != nil && w.Rev == s.Latest[StageApproaches].Rev {

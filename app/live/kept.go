@@ -9,7 +9,7 @@ import (
 // kept holds the last answers of the stages that do not look at observers, so that dragging an observer does not solve
 // the approaches again.
 type kept struct {
-	approaches, seenFrom, distances, widths, reach Update
+	approaches, seenFrom, routes, distances, widths, reach Update
 }
 
 // fill answers u from what is kept and reports whether it could.
@@ -19,6 +19,8 @@ func (k *kept) fill(u *Update) bool {
 		u.Approaches = k.approaches.Approaches
 	case u.Stage == StageSeenFrom && k.seenFrom.Plan != nil && sameWalks(k.seenFrom.Plan, u.Plan):
 		u.Sights = k.seenFrom.Sights
+	case u.Stage == StageRoutes && k.routes.Plan != nil && sameWalks(k.routes.Plan, u.Plan) && sameRoutes(k.routes.Plan, u.Plan):
+		u.Routes = k.routes.Routes
 	case u.Stage == StageDistances && k.distances.Plan != nil && u.Field.Start != "" && u.Field == k.distances.Field &&
 		k.distances.Distances.holds(u.Plan):
 		u.Distances = k.distances.Distances
@@ -38,6 +40,8 @@ func (k *kept) keep(u Update) {
 		k.approaches = u
 	case StageSeenFrom:
 		k.seenFrom = u
+	case StageRoutes:
+		k.routes = u
 	case StageDistances:
 		k.distances = u
 	case StageWidths:
@@ -63,13 +67,22 @@ func sameWalks(p, q *plan.Plan) bool {
 
 // sameZones reports whether p and q have the same zones, for all that can be told quickly.
 func sameZones(p, q *plan.Plan) bool {
-	if p.Marks() == q.Marks() {
-		return true
-	}
-	next, stop := iter.Pull2(q.Zones())
+	return p.Marks() == q.Marks() || alike(p.Zones(), q.Zones(), func(x, y plan.Zone) bool { return x.ID == y.ID && x.Ring.Equal(y.Ring) })
+}
+
+// sameRoutes reports whether p and q have the same routes, for all that can be told quickly.
+func sameRoutes(p, q *plan.Plan) bool {
+	return p.Marks() == q.Marks() || alike(p.Routes(), q.Routes(), func(x, y plan.Route) bool {
+		return x.ID == y.ID && x.From == y.From && x.To == y.To && x.Via.Equal(y.Via)
+	})
+}
+
+// alike reports whether two lists are of the same length and hold the same, one after the other.
+func alike[T any](a, b iter.Seq2[int, T], same func(T, T) bool) bool {
+	next, stop := iter.Pull2(b)
 	defer stop()
-	for _, x := range p.Zones() {
-		if _, y, ok := next(); !ok || x.ID != y.ID || !x.Ring.Equal(y.Ring) {
+	for _, x := range a {
+		if _, y, ok := next(); !ok || !same(x, y) {
 			return false
 		}
 	}

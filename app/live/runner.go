@@ -24,6 +24,7 @@ const (
 	StageSights
 	StageApproaches
 	StageSeenFrom
+	StageRoutes
 	StageDistances // only when it is asked for
 	StageFindings
 	StageWidths
@@ -34,7 +35,7 @@ const (
 // String names the stage as the window says it: what is being worked out.
 func (s Stage) String() string {
 	return [...]string{"the mesh of the plan", "what observers see", "approaches", "where targets are seen from",
-		"walking distances", "problems of the plan", "clear widths", "how far zones are"}[s]
+		"routes", "walking distances", "problems of the plan", "clear widths", "how far zones are"}[s]
 }
 
 // rests reports whether the stage waits until the plan is at rest: a draft, which a drag shows on its way, goes without.
@@ -60,6 +61,7 @@ type Solver interface {
 	Sights(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
 	Approaches(ctx context.Context, p *plan.Plan) ([]study.Approach, error)
 	SeenFrom(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
+	Routes(ctx context.Context, p *plan.Plan) ([]study.Route, error)
 	Findings(ctx context.Context, p *plan.Plan, rows []study.Approach) ([]plan.Finding, error)
 	ClearWidths(ctx context.Context, p *plan.Plan, rows []study.Approach) error // rows as Approaches gave them
 	Field(ctx context.Context, p *plan.Plan, start string) (*study.Field, error)
@@ -83,6 +85,7 @@ type Update struct {
 	Stage      Stage
 	Sights     []study.Sight    // of StageSights and StageSeenFrom
 	Approaches []study.Approach // of StageApproaches, and of StageWidths: the same with their clear widths
+	Routes     []study.Route    // of StageRoutes
 	Problems   []plan.Problem   // of StageMesh: what is wrong with the drawing
 	Findings   []plan.Finding   // of StageFindings: all that looks wrong, with what would mend it
 	Distances  *Distances       // of StageDistances
@@ -106,7 +109,7 @@ type job struct {
 
 // share is the part of a whole study's time that each stage takes, as a study that is solved at once tells it.
 // What is not asked for takes none.
-var share = [NumStages]float64{StageMesh: 0.5, StageSights: 0.05, StageApproaches: 0.2, StageSeenFrom: 0.05, StageDistances: 0.2,
+var share = [NumStages]float64{StageMesh: 0.5, StageSights: 0.05, StageApproaches: 0.2, StageSeenFrom: 0.05, StageRoutes: 0.02, StageDistances: 0.2,
 	StageFindings: 0.02, StageWidths: 0.2, StageReach: 0.2}
 
 // Progress is how far the study of a plan is.
@@ -245,7 +248,7 @@ func (r *Runner) stage(ctx context.Context, j *job, s Stage) (u Update) {
 	u = Update{Rev: j.Rev, Plan: j.Plan, Draft: j.Draft, Field: j.Field, Stage: s}
 	defer func() {
 		if v := recover(); v != nil {
-			u.Sights, u.Approaches, u.Problems, u.Distances, u.Reach, u.Findings = nil, nil, nil, nil, nil, nil
+			u.Sights, u.Approaches, u.Routes, u.Problems, u.Distances, u.Reach, u.Findings = nil, nil, nil, nil, nil, nil, nil
 			u.Err = &Crash{Stage: s, Value: v, Stack: debug.Stack()}
 			r.solver = r.fresh()
 			j.note(u)
@@ -273,6 +276,8 @@ func (r *Runner) stage(ctx context.Context, j *job, s Stage) (u Update) {
 		u.Approaches, u.Err = r.solver.Approaches(ctx, j.Plan)
 	case StageSeenFrom:
 		u.Sights, u.Err = r.solver.SeenFrom(ctx, j.Plan)
+	case StageRoutes:
+		u.Routes, u.Err = r.solver.Routes(ctx, j.Plan)
 	case StageDistances:
 		u.Distances, u.Err = r.distances(ctx, j)
 	case StageFindings:

@@ -59,6 +59,9 @@ func (f *fake) ClearWidths(ctx context.Context, _ *plan.Plan, rows []study.Appro
 	}
 	return f.do(ctx, live.StageWidths)
 }
+func (f *fake) Routes(ctx context.Context, p *plan.Plan) ([]study.Route, error) {
+	return []study.Route{{ID: p.Sheet().Title}}, f.do(ctx, live.StageRoutes)
+}
 func (f *fake) Findings(ctx context.Context, p *plan.Plan, rows []study.Approach) ([]plan.Finding, error) {
 	return []plan.Finding{{Offer: fmt.Sprint(p.Sheet().Title, len(rows))}}, f.do(ctx, live.StageFindings)
 }
@@ -127,7 +130,7 @@ func revs(got []live.Update, s live.Stage) (r []uint64) {
 
 func TestRunnerDeliversEachStageInOrder(t *testing.T) {
 	synctest.Test(t, func(t *testing.T) {
-		r := newRig(&fake{take: [live.NumStages]time.Duration{ms(3), ms(1), ms(5), ms(7), ms(4), ms(8), ms(2), ms(6)}})
+		r := newRig(&fake{take: [live.NumStages]time.Duration{ms(3), ms(1), ms(5), ms(7), ms(9), ms(4), ms(8), ms(2), ms(6)}})
 		p := titled("a")
 		r.Submit(everything(7, p))
 		time.Sleep(ms(100))
@@ -141,7 +144,7 @@ func TestRunnerDeliversEachStageInOrder(t *testing.T) {
 			}
 		}
 		if r.got()[0].Problems[0].Text != "a" || r.got()[1].Sights[0].Name != "a" || r.got()[2].Approaches[0].Start != "a" || r.got()[3].Sights[0].Name != "a" ||
-			len(r.got()[4].Distances.Lines) == 0 || r.got()[live.StageReach].Reach[0].Zone != "a" || r.got()[live.StageFindings].Findings[0].Offer != "a1" {
+			r.got()[live.StageRoutes].Routes[0].ID != "a" || len(r.got()[live.StageDistances].Distances.Lines) == 0 || r.got()[live.StageReach].Reach[0].Zone != "a" || r.got()[live.StageFindings].Findings[0].Offer != "a1" {
 			t.Error("an update carries another plan's answer")
 		}
 		r.Close()
@@ -219,7 +222,7 @@ func TestRunnerKeepsApproachesWhenAnObserverMoves(t *testing.T) {
 		r.Submit(live.Ask{Rev: 2, Plan: one}) // the same parts
 		time.Sleep(ms(1))
 		synctest.Wait()
-		want := []live.Stage{0, 1, 2, 3, live.StageFindings, live.StageWidths, 0, 1, live.StageFindings}
+		want := []live.Stage{0, 1, 2, 3, live.StageRoutes, live.StageFindings, live.StageWidths, 0, 1, live.StageFindings}
 		if !slices.Equal(f.calls, want) {
 			t.Errorf("stages solved %v, want %v", f.calls, want)
 		}
@@ -229,7 +232,7 @@ func TestRunnerKeepsApproachesWhenAnObserverMoves(t *testing.T) {
 		r.Submit(live.Ask{Rev: 3, Plan: titled("two")})
 		time.Sleep(ms(1))
 		synctest.Wait()
-		if last := r.got()[len(r.got())-4]; last.Approaches[0].Start != "two" {
+		if last := r.got()[len(r.got())-5]; last.Approaches[0].Start != "two" {
 			t.Errorf("approaches of another plan were kept: %+v", last)
 		}
 		r.Close()
@@ -278,8 +281,8 @@ func TestRunnerDeliversErrors(t *testing.T) {
 		r.Submit(live.Ask{Rev: 1, Plan: titled("a")})
 		time.Sleep(ms(1))
 		synctest.Wait()
-		if len(r.got()) != 6 || r.got()[2].Err == nil || r.got()[3].Err != nil ||
-			r.got()[4].Err != nil || r.got()[5].Err == nil || slices.Contains(f.calls, live.StageWidths) {
+		if len(r.got()) != 7 || r.got()[2].Err == nil || r.got()[3].Err != nil ||
+			r.got()[4].Err != nil || r.got()[5].Err != nil || r.got()[6].Err == nil || slices.Contains(f.calls, live.StageWidths) {
 			t.Errorf("updates %+v, want an error of the approaches and of what goes on from them", r.got())
 		}
 		r.Close()
@@ -349,7 +352,7 @@ func TestRunnerLeavesWidthsToRest(t *testing.T) {
 // until the next plan, not even of a mesh that a drag would have finished.
 func TestRunnerTellsProgress(t *testing.T) {
 	synctest.Test(t, func(t *testing.T) {
-		f := &fake{take: [live.NumStages]time.Duration{ms(400), ms(10), ms(100), ms(10), 0, 0, ms(50)}}
+		f := &fake{take: [live.NumStages]time.Duration{ms(400), ms(10), ms(100), ms(10), 0, 0, 0, ms(50)}}
 		r := newRig(f)
 		r.Submit(live.Ask{Rev: 1, Plan: titled("a")})
 		last := live.Progress{}
@@ -362,7 +365,7 @@ func TestRunnerTellsProgress(t *testing.T) {
 			}
 			last = now
 		}
-		if want := (live.Progress{Rev: 1, Stage: live.StageWidths, Done: 0.82 / 1.02}); math.Abs(last.Done-want.Done) > 1e-9 || last.Stage != want.Stage {
+		if want := (live.Progress{Rev: 1, Stage: live.StageWidths, Done: 0.84 / 1.04}); math.Abs(last.Done-want.Done) > 1e-9 || last.Stage != want.Stage {
 			t.Errorf("in the last stage %+v is told, want %+v", last, want)
 		}
 		for rev := uint64(2); rev < 50; rev++ { // a drag that leaves no time for a mesh

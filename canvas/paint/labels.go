@@ -85,6 +85,7 @@ func (p *pen) placeLabels(main *study.Approach) {
 	if main != nil {
 		p.placeFirstSight(main)
 	}
+	p.placeRoutes()
 	for _, st := range p.s.Plan.Starts() {
 		if !st.Hidden && p.shows(p.mat(st)) {
 			p.placeStart(st)
