@@ -14,6 +14,8 @@ func widthWords(a study.Approach) string {
 	switch {
 	case a.Problem != "":
 		return ""
+	case a.WidthsUnknown:
+		return "clear width not known: too many walls stand side by side"
 	case a.HasClearWidth && a.HasFullClearWidth && first != full:
 		return "clear width " + full + " m, to first sight " + first + " m"
 	case a.HasFullClearWidth:

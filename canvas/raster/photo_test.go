@@ -50,7 +50,7 @@ func laid(t *testing.T, u plan.Underlay, photo *paint.Photo, theme *paint.Theme)
 
 func at(img *image.RGBA, xm, ym float64) color.NRGBA {
 	c := img.RGBAAt(200+int(xm*10), 150-int(ym*10))
-	return color.NRGBA{R: c.R, G: c.G, B: c.B, A: c.A}
+	return color.NRGBA(c)
 }
 
 // TestUnderlayLiesInItsPlace: its lower left corner lies at its point, it is as wide as its scale says, and turns

@@ -58,6 +58,7 @@ type jsonApproach struct {
 	SightTo          *orb.Point    `json:"sight_to"`
 	Seconds          *float64      `json:"seconds"`
 	ClearWidthMM     *float64      `json:"clear_width_mm"`
+	WidthsUnknown    bool          `json:"widths_unknown,omitempty"`
 	FullWalkMM       *float64      `json:"full_walk_mm"`
 	FullWalkPoints   []orb.Point   `json:"full_walk_points"`
 	FullClearWidthMM *float64      `json:"full_clear_width_mm"`
@@ -202,6 +203,7 @@ func approachEntry(a study.Approach, eye float64) any {
 
 // clear fills in the clear widths, which do not depend on whether the walker finds a way.
 func (e *jsonApproach) clear(a study.Approach) {
+	e.WidthsUnknown = a.WidthsUnknown
 	if a.HasClearWidth {
 		e.ClearWidthMM = number(a.ClearWidth)
 	}

@@ -177,3 +177,22 @@ func TestWriteErrors(t *testing.T) {
 		}
 	}
 }
+
+// TestUnknownWidths: a clear width that was given up reads as not known, never as one that nothing narrows.
+func TestUnknownWidths(t *testing.T) {
+	p, r := sample("m")
+	for i := range r.Approaches {
+		a := &r.Approaches[i]
+		a.HasClearWidth, a.HasFullClearWidth, a.WidthsUnknown = false, false, a.Problem == ""
+	}
+	var text, data bytes.Buffer
+	if err := errors.Join(report.Text(&text, p, r), report.JSON(&data, p, r)); err != nil {
+		t.Fatal(err)
+	}
+	if !strings.Contains(text.String(), "not known") || strings.Contains(text.String(), "  any") {
+		t.Errorf("the text reads\n%s", text.String())
+	}
+	if !strings.Contains(data.String(), `"widths_unknown":true`) {
+		t.Errorf("the data read\n%s", data.String())
+	}
+}

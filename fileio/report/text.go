@@ -149,11 +149,11 @@ func (t *texter) approach(a study.Approach) []string {
 		return append(row, a.Problem)
 	}
 	u, note := t.unit, a.Reason
-	full := []string{"none", t.clear(a.FullClearWidth, a.HasFullClearWidth, a.HasFullWalk), t.tightest(a)}
+	full := []string{"none", t.clear(a, a.FullClearWidth, a.HasFullClearWidth, a.HasFullWalk), t.tightest(a)}
 	if a.HasFullWalk {
 		full[0] = u.length(a.FullWalk)
 	}
-	clear := t.clear(a.ClearWidth, a.HasClearWidth, a.Status == study.StatusApproach)
+	clear := t.clear(a, a.ClearWidth, a.HasClearWidth, a.Status == study.StatusApproach)
 	if a.Status == study.StatusNone {
 		return append(append(row, "none", "", "", "", clear), append(full, note)...)
 	}
@@ -168,9 +168,11 @@ func (t *texter) approach(a study.Approach) []string {
 	return append(row, append(full, note)...)
 }
 
-// clear writes a clear width; "any" where there is a way and nothing narrows it.
-func (t *texter) clear(mm float64, has, way bool) string {
+// clear writes a clear width; "any" where there is a way and nothing narrows it, "not known" where it was given up.
+func (t *texter) clear(a study.Approach, mm float64, has, way bool) string {
 	switch {
+	case a.WidthsUnknown && way:
+		return "not known"
 	case has:
 		return t.unit.length(mm)
 	case way:

@@ -74,6 +74,8 @@ type Approach struct {
 	// stand so near each other that the way has to pass between them.
 	ClearWidth, FullClearWidth       float64
 	HasClearWidth, HasFullClearWidth bool
+	// WidthsUnknown says that clear widths were given up: the plan's walls stand so that to find them would take too long.
+	WidthsUnknown bool
 	// Tightest are the two points of the gap that FullClearWidth is of, mm; where nobody stands at the target, of ClearWidth.
 	Tightest [2]orb.Point
 }

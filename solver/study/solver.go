@@ -35,6 +35,7 @@ type scene struct {
 	seek     *sight.Finder // of cones on the wide ground
 	rooms    []int32       // for each triangle of the wide ground the floor it is connected to, once asked for
 	gaps     *walk.Widths  // of the plain ground, once asked for
+	crowded  bool          // its gaps were given up
 }
 
 // NewSolver returns a solver that has seen no plan yet.

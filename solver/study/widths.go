@@ -2,6 +2,7 @@ package study
 
 import (
 	"context"
+	"errors"
 	"fmt"
 	"math"
 
@@ -16,7 +17,8 @@ import (
 // first sight and to the target itself. They do not depend on the walker's own radius, so they tell by how much a body is too
 // wide, and they are of all walks, not only of the shortest.
 //
-//   - A row with a Problem stays as it is.
+//   - A row with a Problem stays as it is. Where the gaps of the plan are too crowded to be found, all others have
+//     WidthsUnknown set, and no number.
 //   - Errors: the context's when it is cancelled.
 //   - Cost: O(n log n) for n edges that stop walking when they are first asked for after a change of the obstacles; then, for
 //     each start, time proportional to the gaps of the plan.
@@ -28,7 +30,14 @@ func (s *Solver) ClearWidths(ctx context.Context, p *plan.Plan, rows []Approach)
 		return err
 	}
 	sc := s.scene
-	if err := sc.findGaps(pulse.Part(ctx, 0, 0.8)); err != nil {
+	err := sc.findGaps(pulse.Part(ctx, 0, 0.8))
+	if errors.Is(err, walk.ErrCrowded) {
+		for i := range rows {
+			rows[i].WidthsUnknown = rows[i].Problem == ""
+		}
+		return nil
+	}
+	if err != nil {
 		return err
 	}
 	ends, err := sc.findEnds(ctx, p)
@@ -56,13 +65,17 @@ func (s *Solver) ClearWidths(ctx context.Context, p *plan.Plan, rows []Approach)
 	return nil
 }
 
-// findGaps makes the gaps of the plain ground ready.
+// findGaps makes the gaps of the plain ground ready, or remembers that they are too crowded.
 func (sc *scene) findGaps(ctx context.Context) error {
 	if sc.gaps != nil {
 		return nil
 	}
+	if sc.crowded {
+		return walk.ErrCrowded
+	}
 	gaps, err := walk.NewWidths(ctx, sc.plain.mesh)
 	if err != nil {
+		sc.crowded = errors.Is(err, walk.ErrCrowded)
 		return err
 	}
 	sc.gaps = gaps
@@ -71,8 +84,10 @@ func (sc *scene) findGaps(ctx context.Context) error {
 
 // end is a target as someone of any width is to reach it.
 type end struct {
-	look       // on the plain ground
-	stood bool // a point can stand at the target
+	look              // on the plain ground
+	stood bool        // a point can stand at the target
+	seen  walk.Places // from where the target is in view
+	full  walk.Places // the target itself, when a point can stand there
 }
 
 // findEnds finds every target on the plain ground. The rows of one that cannot be looked for have a Problem.
@@ -83,19 +98,31 @@ func (sc *scene) findEnds(ctx context.Context, p *plan.Plan) ([]end, error) {
 		if err != nil {
 			return nil, err
 		}
-		ends = append(ends, end{k, k.fault == "" && sc.plain.free(k.at, sc.plain.shut)})
+		ends = append(ends, sc.endOf(k))
 	}
 	return ends, nil
 }
 
+// endOf finds where a walk to a target may end.
+func (sc *scene) endOf(k look) end {
+	e := end{look: k}
+	if k.fault != "" {
+		return e
+	}
+	if k.view != nil {
+		e.seen = sc.gaps.InPieces(k.view.pieces)
+	} else {
+		e.seen = sc.gaps.InCones(k.at, k.cones)
+	}
+	if e.stood = sc.plain.free(k.at, sc.plain.shut); e.stood {
+		e.full = sc.gaps.AtPoint(k.at)
+	}
+	return e
+}
+
 // fillWidths fills in the clear widths of one row. The gaps' start is the row's.
 func (sc *scene) fillWidths(a *Approach, e *end) {
-	var sightWidth walk.Width
-	if e.view != nil {
-		sightWidth = sc.gaps.ToPieces(e.view.pieces)
-	} else {
-		sightWidth = sc.gaps.ToCones(e.at, e.cones)
-	}
+	sightWidth := sc.gaps.To(e.seen)
 	a.ClearWidth, a.HasClearWidth = widthOf(sightWidth)
 	if a.HasClearWidth {
 		a.Tightest = gapOf(sightWidth)
@@ -103,7 +130,7 @@ func (sc *scene) fillWidths(a *Approach, e *end) {
 	if !e.stood {
 		return
 	}
-	full := sc.gaps.ToPoint(e.at)
+	full := sc.gaps.To(e.full)
 	a.FullClearWidth, a.HasFullClearWidth = widthOf(full)
 	a.Tightest = gapOf(full)
 }

@@ -119,3 +119,30 @@ func TestClearWidthsOnlyWhenAsked(t *testing.T) {
 		t.Error("cancelled work returned no error")
 	}
 }
+
+// TestWidthsUnknown: where clear widths are given up, rows say so and give no number, and everything else is solved.
+func TestWidthsUnknown(t *testing.T) {
+	p := plantest.Parse(t, room10+"wall 5,0 5,4; wall 5,4.8 5,10; start 2,5; start 50,50; target 5.2,9.5")
+	s := study.NewSolver()
+	want, err := s.Solve(context.Background(), p)
+	if err != nil {
+		t.Fatal(err)
+	}
+	s.GiveUpWidths()
+	got, err := s.Solve(context.Background(), p)
+	if err != nil {
+		t.Fatal(err)
+	}
+	a := &got.Approaches[0]
+	if !a.WidthsUnknown || a.HasClearWidth || a.HasFullClearWidth || !want.Approaches[0].HasClearWidth {
+		t.Errorf("given up: %+v", a)
+	}
+	if got.Approaches[1].WidthsUnknown || got.Approaches[1].Problem == "" {
+		t.Errorf("a row with a problem: %+v", got.Approaches[1])
+	}
+	w := want.Approaches[0]
+	w.ClearWidth, w.HasClearWidth, w.FullClearWidth, w.HasFullClearWidth, w.Tightest, w.WidthsUnknown = 0, false, 0, false, [2]orb.Point{}, true
+	if !reflect.DeepEqual(*a, w) {
+		t.Errorf("given up: %+v, want the rest as it was: %+v", *a, w)
+	}
+}

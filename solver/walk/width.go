@@ -3,6 +3,7 @@ package walk
 import (
 	"context"
 	"math"
+	"slices"
 
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
@@ -61,8 +62,9 @@ const (
 
 // NewWidths finds the gaps among the edges of m that stop walking.
 //
-//   - Errors: the context's when it is cancelled.
-//   - Cost: O(n log n) expected for n such edges, and the triangles that each gap's disc meets: few, since it is empty.
+//   - Errors: the context's when it is cancelled; ErrCrowded.
+//   - Cost: O(n log n) expected for n such edges, and the triangles that each gap's disc meets: few, since it is empty, unless
+//     many long gaps lie side by side. The search ends when it has taken a few thousand steps for each edge.
 func NewWidths(ctx context.Context, m *mesh.Mesh) (*Widths, error) {
 	lean, err := leanMesh(pulse.Part(ctx, 0, 0.6), m)
 	if err != nil {
@@ -75,7 +77,11 @@ func NewWidths(ctx context.Context, m *mesh.Mesh) (*Widths, error) {
 	if err := b.find(pulse.Part(ctx, 0.6, 1)); err != nil {
 		return nil, err
 	}
-	w.connect(b.join())
+	cells, err := b.join()
+	if err != nil {
+		return nil, err
+	}
+	w.connect(cells)
 	w.worst = make([]int32, len(w.first)-1)
 	w.bridge = newBridge(m, lean)
 	return w, nil
@@ -113,40 +119,56 @@ func (w *Widths) spread(from int32) {
 	}
 }
 
-// ToPoint returns the clear width of the way to p, from any side of it.
-func (w *Widths) ToPoint(p exact.Pt) Width {
-	w.goal = w.cellsAt(w.goal[:0], p)
-	return w.best()
-}
+// Places are where a way may lead. They are good for the Widths that made them, from whatever start.
+type Places []int32 // cells, in order
 
-// ToCones returns the clear width of the way to any place within the cones of sight from eye, given on the mesh that the
-// widths are of. A place counts when the cone holds floor around it: whether cone and cell share more than a border is
-// decided exactly. O(cones) once each triangle's cells are known.
-func (w *Widths) ToCones(eye exact.Pt, cones []sight.Cone) Width {
+// ToPoint returns the clear width of the way to p, from any side of it.
+func (w *Widths) ToPoint(p exact.Pt) Width { return w.To(w.AtPoint(p)) }
+
+// ToCones returns the clear width of the way to any place within cones of sight; see InCones.
+func (w *Widths) ToCones(eye exact.Pt, cones []sight.Cone) Width { return w.To(w.InCones(eye, cones)) }
+
+// ToPieces is ToCones for a region that is given as convex pieces.
+func (w *Widths) ToPieces(pieces []sight.Piece) Width { return w.To(w.InPieces(pieces)) }
+
+// AtPoint returns where one arrives at p, from any side of it.
+func (w *Widths) AtPoint(p exact.Pt) Places { return w.placesOf(w.cellsAt(w.goal[:0], p)) }
+
+// InCones returns where one arrives anywhere within the cones of sight from eye, given on the mesh that the widths are
+// of. A place counts when the cone holds floor around it: whether cone and cell share more than a border is decided exactly.
+// O(cones) once each triangle's cells are known.
+func (w *Widths) InCones(eye exact.Pt, cones []sight.Cone) Places {
 	w.goal = w.goal[:0]
 	for _, c := range cones {
 		if w.plain.Tris[c.Tri].Flags&mesh.FlagNoWalk == 0 {
 			w.goal = w.cellsWithin(w.goal, c.Tri, exact.Line{At: eye, Dir: c.R}, exact.Line{At: eye, Dir: c.L.Neg()})
 		}
 	}
-	return w.best()
+	return w.placesOf(w.goal)
 }
 
-// ToPieces is ToCones for a region that is given as convex pieces.
-func (w *Widths) ToPieces(pieces []sight.Piece) Width {
+// InPieces is InCones for a region that is given as convex pieces.
+func (w *Widths) InPieces(pieces []sight.Piece) Places {
 	w.goal = w.goal[:0]
 	for i := range pieces {
 		if p := &pieces[i]; w.plain.Tris[p.Tri].Flags&mesh.FlagNoWalk == 0 {
 			w.goal = w.cellsWithin(w.goal, p.Tri, p.Lines[:p.N]...)
 		}
 	}
-	return w.best()
+	return w.placesOf(w.goal)
 }
 
-// best returns the best way to any of the goal's cells.
-func (w *Widths) best() Width {
+// placesOf returns cells as places: each once.
+func (w *Widths) placesOf(cells []int32) Places {
+	w.goal = cells
+	slices.Sort(w.goal)
+	return slices.Clone(slices.Compact(w.goal))
+}
+
+// To returns the clear width of the way to a goal. O(cells of the goal).
+func (w *Widths) To(goal Places) Width {
 	least := noWay
-	for _, c := range w.goal {
+	for _, c := range goal {
 		least = min(least, w.worst[c])
 	}
 	switch least {

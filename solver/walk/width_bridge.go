@@ -13,6 +13,7 @@ type bridge struct {
 	stack []int32
 	found []int32      // the lean triangles that share floor with a plain one
 	lines []exact.Line // to the left of which floor is shared
+	stars []int32      // for each point of the plain mesh how many triangles meet there
 }
 
 const (
@@ -23,6 +24,12 @@ const (
 func newBridge(plain, lean *mesh.Mesh) bridge {
 	b := bridge{cell: make([]int32, len(plain.Tris)), seen: make([]int32, len(lean.Tris))}
 	fill(b.cell, notAsked)
+	b.stars = make([]int32, len(plain.Pts))
+	for t := range plain.Tris {
+		for _, v := range plain.Tris[t].V {
+			b.stars[v]++
+		}
+	}
 	return b
 }
 
@@ -60,7 +67,8 @@ func (w *Widths) cellsWithin(dst []int32, t int32, lines ...exact.Line) []int32 
 }
 
 // overlaps finds the lean triangles that share floor with plain triangle t: those around one of its corners, and from there
-// on through edges, since a triangle hangs together.
+// on through edges, since a triangle hangs together. Of its corners the one at which the fewest triangles meet is taken: at
+// the end of one long edge nearly all triangles of a plan may meet.
 func (w *Widths) overlaps(t int32) {
 	b := &w.bridge
 	b.round++
@@ -75,7 +83,14 @@ func (w *Widths) overlaps(t int32) {
 			b.stack = append(b.stack, u)
 		}
 	}
-	holders(w.m, w.plain.Tris[t].P[0], look)
+	tri := &w.plain.Tris[t]
+	quiet := 0
+	for i := range 3 {
+		if b.stars[tri.V[i]] < b.stars[tri.V[quiet]] {
+			quiet = i
+		}
+	}
+	holders(w.m, tri.P[quiet], look)
 	for len(b.stack) > 0 {
 		u := b.stack[len(b.stack)-1]
 		b.stack = b.stack[:len(b.stack)-1]
@@ -112,12 +127,12 @@ func (w *Widths) onlyCell() int32 {
 func (w *Widths) sharing(dst []int32, u, node, t int32) []int32 {
 	b := &w.bridge
 	if node < 0 {
-		w.clip.begin(&w.m.Tris[u])
-		w.clip.addTriangle(&w.plain.Tris[t])
-		w.clip.line = append(w.clip.line, b.lines...)
-		if w.clip.cutTriangle() {
+		if w.reached(u, t) {
 			dst = append(dst, w.cell[^node])
 		}
+		return dst
+	}
+	if !w.reached(u, t) {
 		return dst
 	}
 	c := &w.cuts[node]
@@ -129,6 +144,14 @@ func (w *Widths) sharing(dst []int32, u, node, t int32) []int32 {
 	dst = w.sharing(dst, u, c.left, t)
 	b.lines = b.lines[:n]
 	return dst
+}
+
+// reached reports whether lean triangle u and plain triangle t share floor to the left of the bridge's lines.
+func (w *Widths) reached(u, t int32) bool {
+	w.clip.begin(&w.m.Tris[u])
+	w.clip.addTriangle(&w.plain.Tris[t])
+	w.clip.line = append(w.clip.line, w.bridge.lines...)
+	return w.clip.cutTriangle()
 }
 
 // addTriangle adds the lines of another triangle's edges.

@@ -35,8 +35,8 @@ func (f forest) join(i, j int32) bool {
 }
 
 // join unites the pieces that meet along an edge, unless the edge stops walking or is a gap, and tells all gaps the pieces on
-// their two sides. What it returns are the cells: the pieces between which one walks without passing a gap.
-func (b *gapFinder) join() forest {
+// their two sides. What it returns are the cells: the pieces between which one walks without passing a gap. Errors: ErrCrowded.
+func (b *gapFinder) join() (forest, error) {
 	f := newForest(b.count)
 	gapOn := b.sortOut()
 	var crossing []int32
@@ -54,6 +54,9 @@ func (b *gapFinder) join() forest {
 				rank[g] = int32(n)
 			}
 			for n := range len(crossing) + 1 {
+				if err := b.crowded(); err != nil {
+					return nil, err
+				}
 				x := b.along(int32(t), tri.P[i], tri.P[inc[i]], rank, n)
 				y := b.along(tri.N[i].Tri(), tri.P[i], tri.P[inc[i]], rank, n)
 				if len(gapOn) > 0 && b.gaps[gapOn[0]].edge == e {
@@ -68,7 +71,7 @@ func (b *gapFinder) join() forest {
 			}
 		}
 	}
-	return f
+	return f, nil
 }
 
 // sortOut lists the gaps that are edges, in the order of their edges: that in which they were found. The others, all of whose

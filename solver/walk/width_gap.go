@@ -34,14 +34,19 @@ func (g *gap) ends() [2][2]float64 {
 // gapFinder finds the gaps of a lean mesh and cuts its triangles along them.
 type gapFinder struct {
 	*pieces
+	flat  []uint8 // for each triangle the corners, as bits, whose floor opens by half a turn exactly
 	chain []int32
 	stack []mesh.Edge
 }
 
 // find looks for the gaps between two corners, which are edges, and for those between a corner and an edge.
 func (b *gapFinder) find(ctx context.Context) error {
+	b.findFlat()
 	for t := range b.m.Tris {
 		if err := pulse.Step(ctx, t, len(b.m.Tris)); err != nil {
+			return err
+		}
+		if err := b.crowded(); err != nil {
 			return err
 		}
 		tri := &b.m.Tris[t]
@@ -65,7 +70,7 @@ func (b *gapFinder) betweenCorners(e mesh.Edge) {
 	t, u := &b.m.Tris[e.Tri()], &b.m.Tris[b.m.Twin(e).Tri()]
 	p, q := b.m.Ends(e)
 	v, w := t.P[e.Prev().Corner()], u.P[b.m.Twin(e).Prev().Corner()]
-	if p.Sub(v).Dot(q.Sub(v)) <= 0 || p.Sub(w).Dot(q.Sub(w)) <= 0 {
+	if p.Sub(v).Dot(q.Sub(v)) <= 0 || p.Sub(w).Dot(q.Sub(w)) <= 0 || b.isFlat(e) && b.isFlat(e.Next()) {
 		return
 	}
 	d := disc{at: p, dir: q.Sub(p), num: 1, den: 1}
@@ -80,12 +85,16 @@ func (b *gapFinder) betweenCorners(e mesh.Edge) {
 //
 // The perpendicular passes an edge only if the feet on it fall between its ends, else the nearer end would lie in the disc;
 // and of the two edges beyond, one at most is such, else the triangulation would not be Delaunay. So the search goes one
-// way.
+// way. From a flat corner it need not begin.
 func (b *gapFinder) toEdge(t int32, i int) {
+	if b.isFlat(mesh.EdgeOf(t, i)) {
+		return
+	}
 	at := b.m.Tris[t].P[i]
 	b.chain = append(b.chain[:0], t)
 	e := mesh.EdgeOf(t, inc[i])
 	for b.footInside(at, e) {
+		b.steps++
 		if b.m.Tris[e.Tri()].StopsWalk(e.Corner()) {
 			b.closeWith(at, mesh.EdgeOf(t, i), e)
 			return
@@ -132,6 +141,7 @@ func (b *gapFinder) closeWith(at exact.Pt, corner, e mesh.Edge) {
 // the half-edges on the stack lead into and those beyond. The far end lies on edge wall, or is a corner when that is None.
 func (b *gapFinder) empty(d *disc, wall mesh.Edge) bool {
 	for len(b.stack) > 0 {
+		b.steps++
 		in := b.stack[len(b.stack)-1]
 		b.stack = b.stack[:len(b.stack)-1]
 		z := b.m.Tris[in.Tri()].P[in.Prev().Corner()]

@@ -13,6 +13,7 @@ type pieces struct {
 	root  []int32 // for each triangle its tree: a cut, or the complement of a piece
 	cuts  []cut
 	count int32 // pieces in all
+	steps int64 // how often a triangle or a cut was looked at while gaps were found
 }
 
 // cut cuts along a gap; to its right and to its left, as seen from the gap's corner, lies another cut or, complemented, a
@@ -38,6 +39,7 @@ func (g *gap) line() exact.Line { return exact.Line{At: g.at, Dir: g.dir} }
 func (p *pieces) split(t, id int32) {
 	at := &p.root[t]
 	for *at >= 0 {
+		p.steps++
 		c := &p.cuts[*at]
 		if p.sideWithin(t, id, c.gap) > 0 {
 			at = &c.left
@@ -123,6 +125,7 @@ func (p *pieces) gapsOf(dst []int32, node int32) []int32 {
 	if node < 0 {
 		return dst
 	}
+	p.steps++
 	c := &p.cuts[node]
 	return p.gapsOf(p.gapsOf(append(dst, c.gap), c.right), c.left)
 }
@@ -132,6 +135,7 @@ func (p *pieces) gapsOf(dst []int32, node int32) []int32 {
 func (p *pieces) along(t int32, a, b exact.Pt, rank []int32, n int) int32 {
 	at := p.root[t]
 	for at >= 0 {
+		p.steps++
 		c := &p.cuts[at]
 		l := p.gaps[c.gap].line()
 		s, far := l.Side(a), l.Side(b)
