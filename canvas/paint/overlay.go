@@ -2,6 +2,7 @@ package paint
 
 import (
 	"image/color"
+	"slices"
 
 	"enfilade/solver/plan"
 	"enfilade/solver/study"
@@ -73,11 +74,22 @@ func (p *pen) findDrawings() {
 	}
 	key := heldKey{p.s.Plan.Obstacles(), shown.Obstacles(), len(p.s.Dragged)}
 	if p.memory.held == nil || p.memory.heldOf != key {
-		if held := heldBy(p.s, shown); held != nil {
+		if held := p.heldRefs(); held != nil {
 			p.memory.held, p.memory.heldOf = NewDrawing(heldPlan(held, p.s.Plan)), key
 		}
 	}
 	p.held = p.memory.held
+}
+
+// heldRefs returns the obstacles that the drag may reshape. They are the same in all its frames, and finding them looks at every
+// wall, so they are kept.
+func (p *pen) heldRefs() map[plan.Ref]bool {
+	m, resting := &p.memory, p.s.resting()
+	if m.heldIn != resting.Obstacles() || !slices.Equal(m.dragged, p.s.Dragged) {
+		m.heldIn, m.dragged = resting.Obstacles(), append(m.dragged[:0], p.s.Dragged...)
+		m.heldRefs = heldBy(p.s, resting)
+	}
+	return m.heldRefs
 }
 
 // draggedLow draws dragged low bodies in their new place; they lie under region edges as all low bodies do.
@@ -86,7 +98,7 @@ func (p *pen) draggedLow() {
 		return
 	}
 	p.ghosts()
-	held := heldBy(p.s, p.s.resting())
+	held := p.heldRefs()
 	first := len(p.Ops)
 	p.lowBodies(p.held, func(ref plan.Ref) bool { return held[ref] })
 	p.above(first)
@@ -97,7 +109,7 @@ func (p *pen) draggedBodies() {
 	if p.held == nil {
 		return
 	}
-	held := heldBy(p.s, p.s.resting())
+	held := p.heldRefs()
 	keep := func(ref plan.Ref) bool { return held[ref] }
 	first := len(p.Ops)
 	p.wallBodies(p.held, keep)

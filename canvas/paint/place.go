@@ -5,6 +5,7 @@ import (
 
 	"github.com/paulmach/orb"
 
+	"enfilade/solver/plan"
 	"enfilade/solver/study"
 )
 
@@ -60,6 +61,10 @@ type memory struct {
 	drawing *Drawing // of the plan, when the scene brought none
 	held    *Drawing // of what is being dragged
 	heldOf  heldKey
+
+	heldRefs map[plan.Ref]bool // of a drag of dragged in the plan with the obstacles heldIn
+	heldIn   *plan.Obstacles
+	dragged  []plan.Ref
 }
 
 // work is room that a list reuses.
