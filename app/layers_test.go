@@ -45,6 +45,8 @@ var layers = map[string][]string{
 	"canvas/paint":  {"solver/exact", "solver/plan", "solver/arrange", "solver/study", "canvas/view", "assets"},
 	"canvas/raster": {"solver/plan", "solver/study", "canvas/view", "canvas/paint", "assets"},
 
+	"canvas/raster/golden": {}, // kept pictures, for tests
+
 	"fileio/planfile": {"solver/exact", "solver/plan"},
 	"fileio/report":   {"solver/exact", "solver/plan", "solver/study"},
 	"fileio/store":    {},
@@ -57,8 +59,8 @@ var layers = map[string][]string{
 }
 
 // testsMayUse is what the tests of any package may import besides what the package may: the text notation for plans and the
-// slow answers, with what they are made of.
-var testsMayUse = append([]string{"solver/plantest"}, layers["solver/plantest"]...)
+// slow answers, with what they are made of, and kept pictures.
+var testsMayUse = append([]string{"solver/plantest", "canvas/raster/golden"}, layers["solver/plantest"]...)
 
 // outside says which packages of other modules each folder may import, by prefix; a package has the sum of what stands for
 // it and for the folders above. The standard library is free, but for cgo, which no code of ours uses.
