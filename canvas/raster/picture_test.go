@@ -1,20 +1,17 @@
 package raster_test
 
 import (
-	"bytes"
 	"context"
 	"flag"
 	"fmt"
 	"image"
 	"image/color"
-	"image/draw"
-	"image/png"
-	"os"
 	"path/filepath"
 	"testing"
 
 	"enfilade/canvas/paint"
 	"enfilade/canvas/raster"
+	"enfilade/canvas/raster/golden"
 	"enfilade/canvas/view"
 	"enfilade/solver/plan"
 	"enfilade/solver/plantest"
@@ -23,47 +20,9 @@ import (
 
 var update = flag.Bool("update", false, "write the golden pictures anew")
 
-// far is how much a channel may differ before the pixel counts, and few how many pixels in ten thousand may count: sums of
-// floats may fall on the other side of a pixel's border on another machine.
-const far, few = 12, 5
-
 func goldenPicture(t *testing.T, name string, got *image.RGBA) {
 	t.Helper()
-	file := filepath.Join("testdata", name+".png")
-	if *update {
-		var b bytes.Buffer
-		if err := png.Encode(&b, got); err != nil {
-			t.Fatal(err)
-		}
-		if err := os.WriteFile(file, b.Bytes(), 0o644); err != nil {
-			t.Fatal(err)
-		}
-	}
-	b, err := os.ReadFile(file)
-	if err != nil {
-		t.Fatal(err)
-	}
-	kept, err := png.Decode(bytes.NewReader(b))
-	if err != nil {
-		t.Fatal(err)
-	}
-	want := image.NewRGBA(kept.Bounds())
-	draw.Draw(want, want.Rect, kept, image.Point{}, draw.Src)
-	if want.Rect != got.Rect {
-		t.Fatalf("%s: size %v, want %v", name, got.Rect, want.Rect)
-	}
-	n := 0
-	for i := 0; i < len(got.Pix); i += 4 {
-		for c := range 3 {
-			if d := int(got.Pix[i+c]) - int(want.Pix[i+c]); d > far || d < -far {
-				n++
-				break
-			}
-		}
-	}
-	if limit := len(got.Pix) / 4 * few / 10000; n > limit {
-		t.Errorf("%s: %d of %d pixels differ, at most %d may", name, n, len(got.Pix)/4, limit)
-	}
+	golden.Picture(t, filepath.Join("testdata", name+".png"), got, *update)
 }
 
 // room has every kind of line, body and mark once.
