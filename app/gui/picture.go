@@ -191,7 +191,7 @@ type baseWorker struct {
 	slot chan baseJob
 	done chan struct{}
 	made atomic.Pointer[madeBase]
-	last baseKey // the last one asked for
+	last baseKey // the last one asked for, empty once it was taken
 	wake func()
 }
 
@@ -229,8 +229,15 @@ func (b *baseWorker) ask(s *paint.Scene, k baseKey, opened uint64) {
 	b.slot <- baseJob{*s, k, opened}
 }
 
-// take returns a base made since the last call, nil when there is none.
-func (b *baseWorker) take() *madeBase { return b.made.Swap(nil) }
+// take returns a base made since the last call, nil when there is none. From then on the worker may be asked for it again: the
+// picture may come back to it after others that were made in the middle of a frame.
+func (b *baseWorker) take() *madeBase {
+	m := b.made.Swap(nil)
+	if m != nil && m.key == b.last {
+		b.last = baseKey{}
+	}
+	return m
+}
 
 func (b *baseWorker) close() {
 	if b.slot != nil {

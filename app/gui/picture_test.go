@@ -9,6 +9,7 @@ import (
 	"enfilade/canvas/paint"
 	"enfilade/canvas/raster"
 	"enfilade/canvas/view"
+	"enfilade/solver/plan"
 	"enfilade/solver/plantest"
 )
 
@@ -99,4 +100,26 @@ func TestLargePlanIsDrawnBeside(t *testing.T) {
 	if r.picture.base.key.camera.W == w || img.Rect != image.Rect(0, 0, w, h) || colour(img.RGBAAt(w/2, h/2)) == paint.Light().Ground {
 		t.Errorf("after a change of size the old base does not stand in: %v", img.Rect)
 	}
+}
+
+// TestBaseIsMadeAgain: a step that was slow to draw, a quick one after it, and back: the picture is that of the plan again, even
+// though the base it needs is the one that the worker was asked for last.
+func TestBaseIsMadeAgain(t *testing.T) {
+	r := newGallery(t)
+	r.click(11.35, 8.75)
+	turn := func(took time.Duration) {
+		r.picture.base.took = took
+		w, _ := r.session.Committed().Wall("W1")
+		w.Thickness += 100
+		if err := r.session.Do(plan.SetWall{Wall: w}); err != nil {
+			t.Fatal(err)
+		}
+	}
+	turn(time.Hour)
+	r.settle() // made by the worker
+	turn(0)
+	r.frame() // made in the frame
+	r.picture.base.took = time.Hour
+	r.undo()
+	r.settle()
 }
