@@ -168,7 +168,7 @@ func parseNumber(text string) (float64, error) {
 	if err != nil || math.IsInf(v, 0) || math.IsNaN(v) {
 		return 0, errNumber
 	}
-	return v, nil
+	return v + 0, nil // -0 is 0
 }
 
 // metres writes a length of millimetres as metres with the given decimals.

@@ -1,6 +1,7 @@
 package gui
 
 import (
+	"math"
 	"testing"
 
 	"pgregory.net/rapid"
@@ -73,8 +74,8 @@ func TestFormatLength(t *testing.T) {
 }
 
 func TestParseNumber(t *testing.T) {
-	for text, want := range map[string]float64{"200": 200, "200,5": 200.5, " -90° ": -90, "0.25": 0.25} {
-		if got, err := parseNumber(text); err != nil || got != want {
+	for text, want := range map[string]float64{"200": 200, "200,5": 200.5, " -90° ": -90, "0.25": 0.25, "-0": 0} {
+		if got, err := parseNumber(text); err != nil || got != want || math.Signbit(got) != (want < 0) {
 			t.Errorf("parseNumber(%q) = %v, %v", text, got, err)
 		}
 	}

@@ -180,8 +180,9 @@ func appendPoints(out []byte, c plan.Chain) []byte {
 	return append(out, ']')
 }
 
-// appendFloat writes the shortest decimal that reads back the same.
+// appendFloat writes the shortest decimal that reads back the same; 0 has no sign.
 func appendFloat(out []byte, v float64) []byte {
+	v += 0
 	format := byte('f')
 	if v != 0 && (v < 1e-6 && v > -1e-6 || v >= 1e15 || v <= -1e15) {
 		format = 'e'

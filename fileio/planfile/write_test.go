@@ -270,7 +270,7 @@ func (g gen) id(letter string, i int) string {
 }
 
 func (g gen) degrees() float64 {
-	return rapid.OneOf(rapid.Float64Range(-360, 360), rapid.Map(rapid.IntRange(0, 8), func(i int) float64 { return float64(i) * 45 })).Draw(g.t, "degrees") + 0
+	return rapid.OneOf(rapid.Float64Range(-360, 360), rapid.Map(rapid.IntRange(0, 8), func(i int) float64 { return float64(i) * -45 })).Draw(g.t, "degrees")
 }
 
 func (g gen) height() int32 {
