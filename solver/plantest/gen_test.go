@@ -79,7 +79,8 @@ func legal(p *plan.Plan) error {
 	return nil
 }
 
-// A plan of 100,000 walls takes a third of a second at most on a quiet machine; anything quadratic would take minutes.
+// A plan of 100,000 walls takes a third of a second at most on a quiet machine, ten times that with the race detector on a busy
+// one; anything quadratic would take minutes.
 func TestSeededPlansAreLinear(t *testing.T) {
 	if testing.Short() {
 		t.Skip("large plans")
@@ -87,7 +88,7 @@ func TestSeededPlansAreLinear(t *testing.T) {
 	for _, g := range generators {
 		begun := time.Now()
 		p := g.make(1, 100_000)
-		if took := time.Since(begun); took > 3*time.Second {
+		if took := time.Since(begun); took > 20*time.Second {
 			t.Errorf("%s of 100,000 walls took %v", g.name, took)
 		} else {
 			t.Logf("%s of 100,000 walls: %v", g.name, took)

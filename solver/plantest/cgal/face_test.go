@@ -33,7 +33,7 @@ func TestFacesAgainstCGAL(t *testing.T) {
 					})
 				}
 			})
-			if none < 100 || all < 100 || part < 100 {
+			if none < 50 || all < 50 || part < 50 {
 				t.Errorf("of the places %d see nothing, %d a part and %d all: the test has lost its aim", none, part, all)
 			}
 		}
