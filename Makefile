@@ -1,5 +1,5 @@
 # Everything is done by the scripts in .ci; this file names them. `make help` lists what there is.
-.PHONY: help run build test check bench shots clean
+.PHONY: help run build test check bench feel shots clean
 .DEFAULT_GOAL := help
 
 help: ## list these targets
@@ -19,6 +19,9 @@ check: test ## every test, then staticcheck and ten seconds of each fuzz target
 
 bench: ## measure mesh, region and approach, beside CGAL
 	@bash .ci/bench
+
+feel: ## measure how quickly the window answers, and the real one beside an empty one
+	@bash .ci/feel
 
 shots: ## take screenshots of the real window on each sample, light and dark, into out/
 	@bash .ci/shots
