@@ -2,10 +2,12 @@ package gui
 
 import (
 	"fmt"
+	"math"
 
 	"enfilade/canvas/pick"
 	"enfilade/canvas/tool"
 	"enfilade/canvas/view"
+	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 )
 
@@ -45,6 +47,22 @@ func (h *host) SetDefaults(d tool.Defaults) { h.w.measures = d }
 func (h *host) Snapper() *pick.Snapper {
 	h.w.snapper.Feet = h.w.unit() == "ft"
 	return &h.w.snapper
+}
+
+// Walked is for the tools. What is known may be of the drawing a moment ago.
+func (h *host) Walked(route string) (legs [][]exact.Pt) {
+	w, ok := h.w.results.route(route)
+	if !ok {
+		return nil
+	}
+	for _, l := range w.Legs {
+		leg := make([]exact.Pt, 0, l.Last-l.First+1)
+		for _, q := range w.Points[l.First : l.Last+1] {
+			leg = append(leg, exact.Pt{X: int32(math.Round(q[0] * exact.PerMM)), Y: int32(math.Round(q[1] * exact.PerMM))})
+		}
+		legs = append(legs, leg)
+	}
+	return legs
 }
 
 // ParseLength is for the tools.

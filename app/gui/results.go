@@ -180,6 +180,18 @@ func (r *results) approach(p pair) (study.Approach, bool) {
 	return study.Approach{}, false
 }
 
+// route returns a route as it is walked.
+func (r *results) route(id string) (study.Route, bool) {
+	if r.result != nil {
+		for _, w := range r.result.Routes {
+			if w.ID == id {
+				return w, true
+			}
+		}
+	}
+	return study.Route{}, false
+}
+
 // took returns how long the study of the plan that is shown has taken.
 func (r *results) took() (sum time.Duration) {
 	if r.state == nil {

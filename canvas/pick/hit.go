@@ -13,12 +13,13 @@ type Part uint8
 
 // The parts of an item.
 const (
-	Body    Part = iota
-	Corner       // a point of its line or ring
-	Heading      // the handle that turns an observer
-	View         // the handles that open an observer's view angle: 0 to the left of its heading, 1 to the right
-	Range        // the handle that stretches an observer's range
-	FaceEnd      // the handles at the ends of a target's face
+	Body      Part = iota
+	Corner         // a point of its line or ring
+	Heading        // the handle that turns an observer
+	View           // the handles that open an observer's view angle: 0 to the left of its heading, 1 to the right
+	Range          // the handle that stretches an observer's range
+	FaceEnd        // the handles at the ends of a target's face
+	LegMiddle      // the handles half way along the legs of a route, which make new waypoints
 )
 
 // Hit is what lies under the pointer.
@@ -49,23 +50,24 @@ const (
 )
 
 // At returns what lies under the pixel place (x, y): first the handles of selected marks, then marks, corners, openings,
-// walls and blocks, routes, zones and the floor's outline. Hidden items are passed over.
-func At(p *plan.Plan, cam view.Camera, x, y float64, selected []plan.Ref) (Hit, bool) {
+// walls and blocks, routes, zones and the floor's outline. Hidden items are passed over. Routes lie where walks says, if it is
+// given.
+func At(p *plan.Plan, cam view.Camera, x, y float64, selected []plan.Ref, walks ...Walks) (Hit, bool) {
 	s := pointer(cam, x, y)
-	if h, ok := knob(p, cam, s, selected); ok {
+	if h, ok := knob(p, cam, s, selected, walks); ok {
 		return h, true
 	}
-	return top(p, cam, s, nil)
+	return top(p, cam, s, nil, walks)
 }
 
 // Under returns all that lies under the pixel place (x, y), what lies on top first, each item once and handles left out.
-func Under(p *plan.Plan, cam view.Camera, x, y float64) []Hit {
+func Under(p *plan.Plan, cam view.Camera, x, y float64, walks ...Walks) []Hit {
 	const most = 32
 	s := pointer(cam, x, y)
 	var out []Hit
 	skip := map[plan.Ref]bool{}
 	for len(out) < most {
-		h, ok := top(p, cam, s, skip)
+		h, ok := top(p, cam, s, skip, walks)
 		if !ok {
 			break
 		}
@@ -76,7 +78,10 @@ func Under(p *plan.Plan, cam view.Camera, x, y float64) []Hit {
 }
 
 // top returns what lies on top at a place, without the items of skip.
-func top(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool) (Hit, bool) {
+func top(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool, walks []Walks) (Hit, bool) {
+	path := func(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool) (Hit, bool) {
+		return path(p, cam, s, skip, walks)
+	}
 	for _, find := range [...]func(*plan.Plan, view.Camera, spot, map[plan.Ref]bool) (Hit, bool){
 		mark, corner, opening, body, path, outline,
 	} {
@@ -245,33 +250,6 @@ func body(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool) (Hit, b
 		})
 	}
 	return n.hit, n.ok
-}
-
-// path finds routes by the straight legs between their points.
-func path(p *plan.Plan, cam view.Camera, s spot, skip map[plan.Ref]bool) (Hit, bool) {
-	n := nearest{skip: skip}
-	reach := units(cam, lineReach)
-	for _, r := range p.Routes() {
-		if r.Hidden {
-			continue
-		}
-		ref := plan.Ref{Kind: plan.KindRoute, ID: r.ID}
-		n.offer(s.outlineDist(plan.ChainOf(RoutePoints(p, r)...), false), reach, Hit{Ref: ref})
-	}
-	return n.hit, n.ok
-}
-
-// RoutePoints returns the points of a route: its start, where that is in the plan, its waypoints, and its target.
-func RoutePoints(p *plan.Plan, r plan.Route) []exact.Pt {
-	var out []exact.Pt
-	if s, ok := p.Start(r.From); ok {
-		out = append(out, s.At)
-	}
-	out = append(out, r.Via.Points()...)
-	if t, ok := p.Target(r.To); ok {
-		out = append(out, TargetAt(t))
-	}
-	return out
 }
 
 // outline finds zones and the floor by their outlines.

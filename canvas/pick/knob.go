@@ -23,8 +23,8 @@ const rangeLeast = 50
 const faceLeast = 40
 
 // Knobs returns the handles of a mark: of an observer those that turn it, open its view angle, and stretch its range when it
-// has one; of a target with a face those at the face's ends.
-func Knobs(p *plan.Plan, cam view.Camera, r plan.Ref) []Knob {
+// has one; of a target with a face those at the face's ends; of a route those half way along its legs.
+func Knobs(p *plan.Plan, cam view.Camera, r plan.Ref, walks ...Walks) []Knob {
 	switch r.Kind {
 	case plan.KindObserver:
 		if o, ok := p.Observer(r.ID); ok && !o.Hidden {
@@ -38,6 +38,10 @@ func Knobs(p *plan.Plan, cam view.Camera, r plan.Ref) []Knob {
 				return nil
 			}
 			return []Knob{{FaceEnd, 0, x0, y0}, {FaceEnd, 1, x1, y1}}
+		}
+	case plan.KindRoute:
+		if x, ok := p.Route(r.ID); ok && !x.Hidden {
+			return routeKnobs(p, cam, x, walks)
 		}
 	}
 	return nil
@@ -60,15 +64,17 @@ func observerKnobs(o plan.Observer, cam view.Camera) []Knob {
 }
 
 // knob finds the handle under the pointer, of the selected marks.
-func knob(p *plan.Plan, cam view.Camera, s spot, selected []plan.Ref) (Hit, bool) {
+func knob(p *plan.Plan, cam view.Camera, s spot, selected []plan.Ref, walks []Walks) (Hit, bool) {
 	var n nearest
 	for _, r := range selected {
-		for _, k := range Knobs(p, cam, r) {
+		for _, k := range Knobs(p, cam, r, walks...) {
 			h := Hit{Ref: r, Part: k.Part, Index: k.Index}
 			if o, ok := p.Observer(r.ID); ok && r.Kind == plan.KindObserver {
 				h.At = o.At
 			} else if t, ok := p.Target(r.ID); ok && r.Kind == plan.KindTarget {
 				h.At = t.Face[k.Index]
+			} else if r.Kind == plan.KindRoute {
+				h.At = cam.Grid(k.X, k.Y)
 			}
 			n.offer(s.dist(pointer(cam, k.X, k.Y)), units(cam, handleReach), h)
 		}

@@ -13,10 +13,10 @@ import (
 func knobs(h Host) [][2]float64 {
 	var out [][2]float64
 	for _, r := range h.Selection() {
-		if r.Kind != plan.KindObserver && r.Kind != plan.KindTarget || locked(h.Plan(), r) {
+		if r.Kind != plan.KindObserver && r.Kind != plan.KindTarget && r.Kind != plan.KindRoute || locked(h.Plan(), r) {
 			continue
 		}
-		for _, k := range pick.Knobs(h.Plan(), h.Camera(), r) {
+		for _, k := range pick.Knobs(h.Plan(), h.Camera(), r, h.Walked) {
 			if k.Part != pick.Heading {
 				out = append(out, [2]float64{k.X, k.Y})
 			}
@@ -29,6 +29,9 @@ func knobs(h Host) [][2]float64 {
 func handleEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 	if g.hit.Part == pick.FaceEnd {
 		return faceEndEdit(h, g, e)
+	}
+	if g.hit.Part == pick.LegMiddle {
+		return legEdit(h, g, e)
 	}
 	o, ok := h.Plan().Observer(g.hit.Ref.ID)
 	to := h.Camera().Grid(e.X, e.Y)

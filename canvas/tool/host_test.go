@@ -23,6 +23,7 @@ type host struct {
 	done     []string
 	snapper  pick.Snapper
 	defaults tool.Defaults
+	walked   [][]exact.Pt // of every route
 }
 
 func newHost(t *testing.T, parts plan.Parts) *host {
@@ -37,6 +38,8 @@ func (h *host) Cancel()                     { h.shown = h.plan }
 func (h *host) Defaults() tool.Defaults     { return h.defaults }
 func (h *host) SetDefaults(d tool.Defaults) { h.defaults = d }
 func (h *host) Snapper() *pick.Snapper      { return &h.snapper }
+
+func (h *host) Walked(string) [][]exact.Pt { return h.walked }
 
 // Camera is 40 px to the metre, with 0, 0 at the picture's centre.
 func (h *host) Camera() view.Camera { return view.Camera{Scale: 0.04, W: 1000, H: 800, K: 1} }

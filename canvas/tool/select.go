@@ -40,12 +40,15 @@ const dragStart = 3
 
 // Down takes hold of what is under the pointer.
 func (t *Select) Down(h Host, e Pointer) {
-	hit, ok := pick.At(h.Plan(), h.Camera(), e.X, e.Y, h.Selection())
+	hit, ok := pick.At(h.Plan(), h.Camera(), e.X, e.Y, h.Selection(), h.Walked)
 	t.grip = &grip{hit: hit, on: ok, x: e.X, y: e.Y, from: h.Camera().Grid(e.X, e.Y), toggle: e.Shift}
 	if !ok {
 		if !e.Shift {
 			h.Select()
 		}
+		return
+	}
+	if e.Clicks > 1 && t.addWaypoint(h, hit, e) {
 		return
 	}
 	g := t.grip
@@ -69,7 +72,7 @@ func selectedUnder(h Host, e Pointer) (pick.Hit, bool) {
 	if len(sel) != 1 {
 		return pick.Hit{}, false
 	}
-	under := pick.Under(h.Plan(), h.Camera(), e.X, e.Y)
+	under := pick.Under(h.Plan(), h.Camera(), e.X, e.Y, h.Walked)
 	if i := slices.IndexFunc(under, func(u pick.Hit) bool { return u.Ref == sel[0] }); i >= 0 {
 		return under[i], true
 	}
@@ -78,7 +81,7 @@ func selectedUnder(h Host, e Pointer) (pick.Hit, bool) {
 
 // below returns the item under the pointer that lies below the held one, from the lowest round to the top.
 func (g *grip) below(h Host, e Pointer) plan.Ref {
-	under := pick.Under(h.Plan(), h.Camera(), e.X, e.Y)
+	under := pick.Under(h.Plan(), h.Camera(), e.X, e.Y, h.Walked)
 	i := slices.IndexFunc(under, func(u pick.Hit) bool { return u.Ref == g.hit.Ref })
 	if len(under) == 0 {
 		return g.hit.Ref
@@ -90,7 +93,7 @@ func (g *grip) below(h Host, e Pointer) plan.Ref {
 func (t *Select) Move(h Host, e Pointer) {
 	g := t.grip
 	if g == nil {
-		t.hover, t.hovered = pick.At(h.Plan(), h.Camera(), e.X, e.Y, h.Selection())
+		t.hover, t.hovered = pick.At(h.Plan(), h.Camera(), e.X, e.Y, h.Selection(), h.Walked)
 		return
 	}
 	if !g.moved && math.Hypot(e.X-g.x, e.Y-g.y) < dragStart*h.Camera().K {
@@ -140,7 +143,7 @@ func (t *Select) Up(h Host, e Pointer) {
 	case g.on && !g.toggle:
 		h.Select(g.hit.Ref)
 	}
-	t.hover, t.hovered = pick.At(h.Plan(), h.Camera(), e.X, e.Y, h.Selection())
+	t.hover, t.hovered = pick.At(h.Plan(), h.Camera(), e.X, e.Y, h.Selection(), h.Walked)
 }
 
 // Key nudges, deletes, and lets go of a drag or the selection.
@@ -159,6 +162,10 @@ func (t *Select) Key(h Host, k Key) bool {
 	case KeyDelete, KeyBackspace:
 		if len(h.Selection()) == 0 || t.grip != nil {
 			return false
+		}
+		if edit := t.withoutWaypoint(h); edit != nil {
+			t.hovered = false
+			return h.Do(edit) == nil
 		}
 		return h.Do(plan.Delete{Items: slices.Clone(h.Selection())}) == nil
 	case KeyLeft, KeyRight, KeyUp, KeyDown:
@@ -251,11 +258,16 @@ func (t *Select) hoverHint(h Host) string {
 		return "drag to change how far it sees"
 	case pick.FaceEnd:
 		return "drag this end of the face"
+	case pick.LegMiddle:
+		return "drag for a new waypoint on this leg"
 	case pick.Corner:
-		return "drag to move this corner"
+		return cornerHint(h, t.hover.Ref)
 	}
 	if t.last != nil && slices.Contains(h.Selection(), t.hover.Ref) {
 		return "drag to move; click again for what lies below; Shift adds and takes away"
+	}
+	if t.hover.Ref.Kind == plan.KindRoute {
+		return "click to select, double-click for a new waypoint; drag to move all waypoints"
 	}
 	if t.hover.Ref.Kind == plan.KindOpening {
 		return "click to select, drag along its wall or into another"

@@ -29,6 +29,8 @@ type Host interface {
 	SetDefaults(Defaults)
 	// Snapper returns what finds where places snap, with the kinds of snapping that are switched on.
 	Snapper() *pick.Snapper
+	// Walked returns the legs of the route with an id as they are walked, as far as that is known.
+	Walked(route string) [][]exact.Pt
 	// ParseLength reads a typed length in the plan's display unit, as grid units.
 	ParseLength(text string) (int32, error)
 	// FormatLength writes a length of grid units in the plan's display unit, with the unit's name.
