@@ -43,6 +43,7 @@ type card struct {
 	fields []field
 	facts  []fact
 	reach  []reachRow
+	legs   []legRow
 	fault  string // the item's problem
 	hint   []string
 	delete bool

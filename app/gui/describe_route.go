@@ -1,15 +1,13 @@
 package gui
 
 import (
-	"enfilade/canvas/pick"
 	"enfilade/canvas/tool"
-	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 )
 
-// describeRoute is the form of a route: where it begins and ends, and how long it is as drawn.
+// describeRoute is the form of a route: where it begins and ends, and how far it is on foot, leg by leg.
 func (w *window) describeRoute(c *card, p *plan.Plan, x plan.Route) {
-	c.title, c.icon, c.where = "Route", "waypoint", counted(x.Via.Len(), "waypoint")+", straight from point to point"
+	c.title, c.icon, c.where = "Route", "waypoint", counted(x.Via.Len(), "waypoint")+", each leg by the shortest walk"
 	put := func(label string, change func(*plan.Route)) error {
 		change(&x)
 		return w.doEdit(tool.Named(label, plan.SetRoute{Route: x}))
@@ -37,12 +35,9 @@ func (w *window) describeRoute(c *card, p *plan.Plan, x plan.Route) {
 		to.choices = append(to.choices, named(t.ID, t.Name))
 	}
 	c.fields = []field{from, to}
-	sum := 0.0
-	pts := pick.RoutePoints(p, x)
-	for i := 1; i < len(pts); i++ {
-		sum += exact.Dist(pts[i-1], pts[i])
+	walk, known := w.results.route(x.ID)
+	c.facts, c.legs = w.walkFacts(walk, known), w.legRows(p, x)
+	if c.fault = routeFault(walk); c.fault == "" {
+		c.fault = problemOf(w.results.result, plan.Ref{Kind: plan.KindRoute, ID: x.ID})
 	}
-	const perMetre = 1000 * exact.PerMM
-	c.facts = []fact{{w.host.FormatLength(sum), "as drawn"}, {number(sum/perMetre/p.Walker().Pace, 1) + " s", "at the walker's pace"}}
-	c.fault = problemOf(w.results.result, plan.Ref{Kind: plan.KindRoute, ID: x.ID})
 }

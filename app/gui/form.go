@@ -25,6 +25,7 @@ type form struct {
 	rows   []*formRow
 	facts  []*factText
 	reach  *reachTable
+	legs   *legTable
 	fault  *inkText
 }
 
@@ -61,7 +62,7 @@ func newForm(w *window) *form {
 // update shows the selection: a new form for another item, new texts in the same form for the same one.
 func (f *form) update(p *plan.Plan, sel []plan.Ref) {
 	c := f.w.describe(p, sel)
-	if c.key != f.key || len(c.facts) != len(f.facts) || !f.reach.fits(c.reach) || !f.fits(c.fields) {
+	if c.key != f.key || len(c.facts) != len(f.facts) || !f.reach.fits(c.reach) || !f.legs.fits(c.legs) || !f.fits(c.fields) {
 		f.build(c)
 	}
 	f.put(c)
@@ -110,6 +111,9 @@ func (f *form) build(c card) {
 	f.page.Add(f.fault)
 	if f.reach = newReachTable(c.reach); f.reach != nil {
 		f.page.Add(f.reach.box)
+	}
+	if f.legs = newLegTable(c.legs, f.w.tips); f.legs != nil {
+		f.page.Add(f.legs.box)
 	}
 	f.actions(c.actions)
 	if c.delete {
@@ -240,6 +244,7 @@ func (f *form) put(c card) {
 		t.label.set(c.facts[i].label)
 	}
 	f.reach.put(c.reach)
+	f.legs.put(c.legs)
 	f.fault.set(sentence(c.fault))
 	f.fault.Hidden = c.fault == ""
 }

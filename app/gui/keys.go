@@ -29,7 +29,7 @@ func (w *window) typedKey(name fyne.KeyName) {
 	if name == fyne.KeyEscape && resting && w.stopStudy() {
 		return
 	}
-	if (name == fyne.KeyDelete || name == fyne.KeyBackspace) && w.toolAt == 0 && resting {
+	if (name == fyne.KeyDelete || name == fyne.KeyBackspace) && w.toolAt == 0 && resting && !w.overWaypoint() {
 		w.deleteSelection()
 		return
 	}

@@ -78,6 +78,7 @@ func TestDrawRoute(t *testing.T) {
 		t.Errorf("on the way: %q", r.status.hint.text)
 	}
 	r.click(tx, ty)
+	r.settle()
 	got, ok := r.session.Plan().Route("R1")
 	if !ok || got.From != "S1" || got.To != "T1" || got.Via.Len() != 1 {
 		t.Fatalf("route %+v", got)
@@ -88,10 +89,11 @@ func TestDrawRoute(t *testing.T) {
 	before := r.form.facts[0].value.text
 	r.keys(fyne.KeyEscape)
 	r.drag(11, 9, 12, 9)
+	r.settle()
 	if r.form.facts[0].value.text == before {
 		t.Error("the form does not follow the waypoint")
 	}
-	r.keys(fyne.KeyDelete)
+	r.keys(fyne.KeyDelete, fyne.KeyDelete) // the waypoint under the pointer, then the route
 	if _, ok := r.session.Plan().Route("R1"); ok {
 		t.Error("Delete left the route")
 	}

@@ -62,6 +62,9 @@ func (t *Select) addWaypoint(h Host, hit pick.Hit, e Pointer) bool {
 	return true
 }
 
+// OverWaypoint reports whether Delete takes out the waypoint under the pointer, and not what is selected.
+func (t *Select) OverWaypoint(h Host) bool { return t.withoutWaypoint(h) != nil }
+
 // withoutWaypoint returns the edit that takes out the waypoint under the pointer, when its route alone is selected; else nil.
 func (t *Select) withoutWaypoint(h Host) plan.Edit {
 	sel := h.Selection()
