@@ -89,6 +89,9 @@ func (f *form) build(c card) {
 	f.title.set(c.title)
 	f.head(c)
 	f.figures(c.facts)
+	if f.legs = newLegTable(c.legs, f.w.tips); f.legs != nil {
+		f.page.Add(f.legs.box)
+	}
 	for i, h := range c.hint {
 		line := caption(h)
 		if i == 0 {
@@ -111,9 +114,6 @@ func (f *form) build(c card) {
 	f.page.Add(f.fault)
 	if f.reach = newReachTable(c.reach); f.reach != nil {
 		f.page.Add(f.reach.box)
-	}
-	if f.legs = newLegTable(c.legs, f.w.tips); f.legs != nil {
-		f.page.Add(f.legs.box)
 	}
 	f.actions(c.actions)
 	if c.delete {

@@ -107,7 +107,7 @@ func newLegTable(rows []legRow, t *tips) *legTable {
 	if len(rows) == 0 {
 		return nil
 	}
-	table := &legTable{box: pile(inset(0, 6, 0, 8, hairline()), newText("Leg by leg, on foot", assets.Semibold, 12.5, roleInk))}
+	table := &legTable{box: pile(newText("Leg by leg, on foot", assets.Semibold, 12.5, roleInk))}
 	for i := range rows {
 		l := &legLine{to: body("").shrinking(), far: newText("", assets.Bold, 12.5, roleInk).right(), time: newText("", assets.Regular, 12, roleInk2).right()}
 		l.sooner = newIconButton("chevron-up", "before waypoint "+number(float64(i), 0), t, func() { l.row.sooner() })
@@ -115,6 +115,7 @@ func newLegTable(rows []legRow, t *tips) *legTable {
 		table.rows = append(table.rows, l)
 		table.box.Add(container.New(legLayout{}, l.to, l.far, l.time, l.sooner, l.remove))
 	}
+	table.box.Add(inset(0, 6, 0, 8, hairline()))
 	return table
 }
 
