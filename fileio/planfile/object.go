@@ -15,7 +15,8 @@ type object struct {
 	fault   **Fault       // the reader's first fault
 	where   func() string // names the object: "wall W3", or nothing for the plan itself
 	members []member
-	pts     []exact.Pt // reused from list to list
+	names   map[string]bool // of the members, once there are many
+	pts     []exact.Pt      // reused from list to list
 }
 
 type member struct {
@@ -54,13 +55,42 @@ func (o *object) open(text []byte) {
 			}
 			name = []byte(s)
 		}
-		for i := range o.members {
-			if bytes.Equal(o.members[i].name, name) {
-				o.fail(string(name), "is there twice; a name may stand once in an object")
-				return
-			}
+		if o.has(name) {
+			o.fail(string(name), "is there twice; a name may stand once in an object")
+			return
 		}
 		o.members = append(o.members, member{name: name, quote: quote, value: value})
+		if len(o.members) >= manyMembers {
+			o.index(len(o.members) == manyMembers)
+		}
+	}
+}
+
+// manyMembers is from how many on the members of an object are looked up in a map: no plan has as many that are known, and
+// comparing all with all would take minutes for a file of a million.
+const manyMembers = 64
+
+// has reports whether a member of this name has been read.
+func (o *object) has(name []byte) bool {
+	if len(o.members) >= manyMembers {
+		return o.names[string(name)]
+	}
+	for i := range o.members {
+		if bytes.Equal(o.members[i].name, name) {
+			return true
+		}
+	}
+	return false
+}
+
+// index notes the name of the last member, or of all so far when it begins.
+func (o *object) index(begin bool) {
+	last := o.members[len(o.members)-1:]
+	if begin {
+		o.names, last = make(map[string]bool, 4*manyMembers), o.members
+	}
+	for _, m := range last {
+		o.names[string(m.name)] = true
 	}
 }
 

@@ -7,6 +7,7 @@ import (
 	"strings"
 	"testing"
 	"testing/iotest"
+	"time"
 
 	"enfilade/fileio/planfile"
 	"enfilade/solver/exact"
@@ -193,3 +194,29 @@ func TestReadBadReader(t *testing.T) {
 		t.Errorf("got %v", err)
 	}
 }
+
+// TestManyMembers: a plan may hold members that are not known, however many; one that is there twice is told among them too.
+func TestManyMembers(t *testing.T) {
+	const n = 150_000
+	var b strings.Builder
+	b.WriteString(`{"enfilade": 1`)
+	for i := range n {
+		fmt.Fprintf(&b, `,"k%d":%d`, i, i)
+	}
+	began := time.Now()
+	if _, err := planfile.Read(strings.NewReader(b.String()+"}"), "x"); err != nil {
+		t.Fatal(err)
+	}
+	if took := time.Since(began); took > 20*time.Second {
+		t.Errorf("reading %d members took %v", n, took)
+	}
+	for _, again := range []int{0, manyBefore, manyBefore + 1, n - 1} {
+		_, err := planfile.Read(strings.NewReader(fmt.Sprintf(`%s,"k%d":0}`, b.String(), again)), "x")
+		if err == nil || !strings.Contains(err.Error(), fmt.Sprintf("k%d: is there twice", again)) {
+			t.Errorf("k%d twice: %v", again, err)
+		}
+	}
+}
+
+// manyBefore is a member near where the reader goes over to another way of looking names up.
+const manyBefore = 62
