@@ -3,6 +3,7 @@ package arrange
 import (
 	"cmp"
 	"context"
+	"math"
 	"slices"
 
 	"enfilade/solver/exact"
@@ -16,10 +17,10 @@ import (
 //
 //   - Input: every segment has positive length and legal ends.
 //   - Cost: O((n + k) log n) for n segments with k crossings, when segments are spread evenly; the cells it uses degrade to
-//     O(n²) only when most segments share one cell.
+//     O(n²) only when most segments share one cell, and not an end.
 //   - Source: Hobby 1999, section 2; the half-open pixel is his.
 func Round(o *Outline) *Graph {
-	r, err := round(context.Background(), o)
+	r, err := round(context.Background(), o, math.MaxInt)
 	if err != nil {
 		panic("arrange: " + err.Error()) // nobody cancels the background
 	}
@@ -35,14 +36,14 @@ type rounding struct {
 	whole  bool // every hot pixel is a point of the graph
 }
 
-// round does the work of Round.
-func round(ctx context.Context, o *Outline) (*rounding, error) {
+// round does the work of Round. It gives up with an error once there are many more crossings than edges may be.
+func round(ctx context.Context, o *Outline, limit int) (*rounding, error) {
 	r := &rounding{graph: &Graph{Items: o.Items, Bodies: o.Bodies}}
 	if len(o.Segments) == 0 {
 		return r, nil
 	}
 	r.cells = makeCells(o.Segments)
-	hot, err := hotPixels(pulse.Part(ctx, 0.2, 0.5), o.Segments, r.cells)
+	hot, err := hotPixels(pulse.Part(ctx, 0.2, 0.5), o.Segments, r.cells, limit)
 	if err != nil {
 		return nil, err
 	}
@@ -58,20 +59,20 @@ func round(ctx context.Context, o *Outline) (*rounding, error) {
 }
 
 // hotPixels returns the centres of the hot pixels, in order, each once.
-func hotPixels(ctx context.Context, segs []Segment, c *cells) ([]exact.Pt, error) {
+func hotPixels(ctx context.Context, segs []Segment, c *cells, limit int) ([]exact.Pt, error) {
 	keys := make([]uint64, 0, 2*len(segs)+len(segs)/4)
 	for _, s := range segs {
 		keys = append(keys, key(s.A), key(s.B))
 	}
 	found, err := pulse.Split(ctx, len(c.start)-1, func(ctx context.Context, lo, hi int) (keys []uint64, err error) {
+		full := limit
 		for cell := lo; cell < hi && err == nil; cell++ {
-			list := c.seg[c.start[cell]:c.start[cell+1]]
-			for i, u := range list {
-				for _, v := range list[:i] {
-					if p, ok := crossing(&segs[u], &segs[v]); ok {
-						keys = append(keys, key(p))
-					}
+			keys = crossings(keys, segs, c.seg[c.start[cell]:c.start[cell+1]])
+			if len(keys) > full {
+				if keys, err = thin(keys, limit); err != nil {
+					return nil, err
 				}
+				full = len(keys) + limit
 			}
 			err = pulse.Step(ctx, cell-lo, hi-lo)
 		}
@@ -90,6 +91,16 @@ func hotPixels(ctx context.Context, segs []Segment, c *cells) ([]exact.Pt, error
 		pts[i] = unkey(k)
 	}
 	return pts, nil
+}
+
+// thin drops the second of equal keys. Every crossing makes at least one edge of its own: more of them than there may be edges
+// are too many, whatever comes after.
+func thin(keys []uint64, limit int) ([]uint64, error) {
+	exact.SortKeys(keys, make([]uint64, len(keys)))
+	if keys = slices.Compact(keys); len(keys) > limit {
+		return nil, &TooLarge{Edges: len(keys), Limit: limit, Least: true}
+	}
+	return keys, nil
 }
 
 // key packs p so that unsigned order is the order of points.

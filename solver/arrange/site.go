@@ -4,6 +4,7 @@ import (
 	"context"
 	"fmt"
 	"slices"
+	"strconv"
 
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
@@ -47,26 +48,37 @@ const (
 )
 
 // TooLarge reports a plan whose graph would have more edges than the limit.
-type TooLarge struct{ Edges, Limit int }
+type TooLarge struct {
+	Edges, Limit int
+	Least        bool // there are more edges still: they were not all counted
+}
 
 func (e *TooLarge) Error() string {
-	if e.Limit == MaxGrown {
-		return fmt.Sprintf("the plan makes %d edges for a walker with a body and the limit is %d; leave some of it out, or make the walker's radius 0",
-			e.Edges, e.Limit)
+	edges := strconv.Itoa(e.Edges)
+	if e.Least {
+		edges = "more than " + edges
 	}
-	return fmt.Sprintf("the plan makes %d edges and the limit is %d; leave some of it out", e.Edges, e.Limit)
+	if e.Limit == MaxGrown {
+		return fmt.Sprintf("the plan makes %s edges for a walker with a body and the limit is %d; leave some of it out, or make the walker's radius 0",
+			edges, e.Limit)
+	}
+	return fmt.Sprintf("the plan makes %s edges and the limit is %d; leave some of it out", edges, e.Limit)
 }
 
 // tooLarge returns the error for n segments or edges of o, nil when there are not too many.
 func (o *Outline) tooLarge(n int) error {
-	limit := MaxEdges
-	if k := len(o.Items); k > 0 && o.Items[k-1].Kind == plan.KindWalker {
-		limit = MaxGrown
-	}
-	if n > limit {
-		return &TooLarge{n, limit}
+	if limit := o.limit(); n > limit {
+		return &TooLarge{Edges: n, Limit: limit}
 	}
 	return nil
+}
+
+// limit returns how many edges the graph of o may have.
+func (o *Outline) limit() int {
+	if k := len(o.Items); k > 0 && o.Items[k-1].Kind == plan.KindWalker {
+		return MaxGrown
+	}
+	return MaxEdges
 }
 
 // NewSite rounds and triangulates an outline.
@@ -77,7 +89,7 @@ func NewSite(ctx context.Context, o *Outline) (*Site, error) {
 	if err := o.tooLarge(len(o.Segments)); err != nil {
 		return nil, err
 	}
-	r, err := round(pulse.Part(ctx, 0, 0.3), o)
+	r, err := round(pulse.Part(ctx, 0, 0.3), o, o.limit())
 	if err != nil {
 		return nil, err
 	}
