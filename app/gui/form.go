@@ -89,8 +89,10 @@ func (f *form) build(c card) {
 	f.title.set(c.title)
 	f.head(c)
 	f.figures(c.facts)
-	if f.legs = newLegTable(c.legs, f.w.tips); f.legs != nil {
+	f.fault = newText("", assets.Regular, 12, roleRed).shrinking()
+	if f.legs = newLegTable(c.legs, f.w.tips); f.legs != nil { // what is wrong belongs to a leg
 		f.page.Add(f.legs.box)
+		f.page.Add(f.fault)
 	}
 	for i, h := range c.hint {
 		line := caption(h)
@@ -110,8 +112,9 @@ func (f *form) build(c card) {
 			f.page.Add(inset(labelWidth, 0, 0, 4, r.under))
 		}
 	}
-	f.fault = newText("", assets.Regular, 12, roleRed).shrinking()
-	f.page.Add(f.fault)
+	if f.legs == nil {
+		f.page.Add(f.fault)
+	}
 	if f.reach = newReachTable(c.reach); f.reach != nil {
 		f.page.Add(f.reach.box)
 	}
