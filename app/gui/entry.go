@@ -58,10 +58,12 @@ func (e *entry) say(err error) {
 	}
 }
 
-// FocusGained is for the toolkit.
+// FocusGained chooses the whole text, so that what is typed after Tab replaces it; a click puts the cursor where it falls
+// afterwards, which ends that choice.
 func (e *entry) FocusGained() {
 	e.inside = true
 	e.Entry.FocusGained()
+	e.Entry.TypedShortcut(&fyne.ShortcutSelectAll{})
 }
 
 // FocusLost takes the text over.
@@ -96,7 +98,20 @@ func (e *entry) TypedShortcut(s fyne.Shortcut) {
 		e.beyond(s)
 		return
 	}
+	if _, ok := s.(*fyne.ShortcutUndo); ok {
+		e.Undo()
+		return
+	}
 	e.Entry.TypedShortcut(s)
+}
+
+// Undo takes back the last typing. Typing over a chosen text is two steps to the toolkit, the second of which leaves
+// nothing; to people it is one.
+func (e *entry) Undo() {
+	e.Entry.Undo()
+	if e.Text == "" && e.shown != "" {
+		e.Entry.Undo()
+	}
 }
 
 // undoable is a field that has its own undo, which Ctrl+Z means while it has the focus.
