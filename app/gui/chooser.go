@@ -8,6 +8,7 @@ import (
 
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/container"
+	"fyne.io/fyne/v2/driver/desktop"
 	"fyne.io/fyne/v2/widget"
 )
 
@@ -158,6 +159,20 @@ func newPathEntry(enter func()) *pathEntry {
 	e.Wrapping, e.Scroll = fyne.TextWrapOff, fyne.ScrollHorizontalOnly
 	e.ExtendBaseWidget(e)
 	return e
+}
+
+// chooseName puts the cursor behind the file's name and chooses the name without what ends it, so that what is typed
+// replaces just the name.
+func (e *pathEntry) chooseName(suffix string) {
+	name := filepath.Base(e.Text)
+	stem := len([]rune(strings.TrimSuffix(name, suffix)))
+	e.CursorColumn = len([]rune(e.Text)) - len([]rune(name)) + stem
+	shift := &fyne.KeyEvent{Name: desktop.KeyShiftLeft}
+	e.KeyDown(shift)
+	for range stem {
+		e.Entry.TypedKey(&fyne.KeyEvent{Name: fyne.KeyLeft})
+	}
+	e.KeyUp(shift)
 }
 
 // TypedKey is for the toolkit.

@@ -273,6 +273,9 @@ func (w *window) askFile(title, verb, name, suffix string, done func(string)) {
 	}}, choice{"Cancel", nil})
 	w.win.Canvas().Focus(c.path)
 	c.path.TypedKey(&fyne.KeyEvent{Name: fyne.KeyEnd})
+	if name != "" {
+		c.path.chooseName(suffix)
+	}
 }
 
 // home is where files are looked for when no plan is open: the folder of the last one, else the working folder.
