@@ -82,6 +82,9 @@ func (w *window) tookUnderlay(photo *paint.Photo) {
 
 // readPhoto reads and decodes a picture.
 func readPhoto(path string) (*paint.Photo, error) {
+	if !store.Ends(path) {
+		return nil, fmt.Errorf("%s: is a device, not a file; choose a PNG or a JPEG", filepath.Base(path))
+	}
 	data, err := os.ReadFile(path)
 	if err != nil {
 		return nil, err

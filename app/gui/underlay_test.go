@@ -221,3 +221,13 @@ func (r *rig) find(text string) *pushButton {
 	walk(r.form.page)
 	return found
 }
+
+// TestUnderlayThatNeverEnds: a plan may name a device as its picture; it is told and not read.
+func TestUnderlayThatNeverEnds(t *testing.T) {
+	if _, err := os.Stat("/dev/zero"); err != nil {
+		t.Skip("there is no such device here")
+	}
+	if _, err := readPhoto("/dev/zero"); err == nil || !strings.Contains(err.Error(), "is a device") {
+		t.Errorf("%v", err)
+	}
+}

@@ -56,6 +56,9 @@ func (pr *Program) drawPicture(v *studyVerb, p *plan.Plan, r *study.Result) erro
 
 // readPhoto reads a picture to trace over.
 func readPhoto(path string) (*paint.Photo, error) {
+	if !store.Ends(path) {
+		return nil, fmt.Errorf("%s: is a device, not a file; name a PNG or a JPEG", path)
+	}
 	f, err := open(path)
 	if err != nil {
 		return nil, err

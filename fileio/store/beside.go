@@ -64,3 +64,10 @@ func CopyBeside(owner, path string) (string, error) {
 	}
 	return to, Save(to, func(w io.Writer) error { _, err := w.Write(data); return err })
 }
+
+// Ends reports whether reading the file at path comes to an end: devices and pipes may go on for ever, and a plan that came from
+// elsewhere may name one as its picture. What is not there ends.
+func Ends(path string) bool {
+	info, err := os.Stat(path)
+	return err != nil || info.Mode().IsRegular() || info.IsDir()
+}
