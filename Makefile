@@ -1,9 +1,9 @@
 # Everything is done by the scripts in .ci; this file names them. `make help` lists what there is.
-.PHONY: help run build test check bench feel shots clean
+.PHONY: help run build test check bench feel shots walkthrough clean
 .DEFAULT_GOAL := help
 
 help: ## list these targets
-	@awk -F ':.*## ' '/^[a-z]+:.*## /{printf "  make %-7s %s\n", $$1, $$2}' Makefile
+	@awk -F ':.*## ' '/^[a-z]+:.*## /{printf "  make %-11s %s\n", $$1, $$2}' Makefile
 
 run: ## install what is missing, build, and open the sample gallery
 	@bash .ci/start
@@ -25,6 +25,9 @@ feel: ## measure how quickly the window answers, and the real one beside an empt
 
 shots: ## take screenshots of the real window on each sample, light and dark, into out/
 	@bash .ci/shots
+
+walkthrough: ## draw a six-room gallery from nothing in the real window; screenshots into out/, clicks and keys counted
+	@bash .ci/walkthrough
 
 clean: ## remove bin/ and out/
 	@rm -rf bin out
