@@ -30,7 +30,7 @@ type specimen struct {
 // ladder is how many seeded plans there are of each size. Most are small: they are quick, and a wrong turn shows in them as
 // well; a few are large enough for what only happens in the middle of thousands of walls.
 var ladder = []struct{ from, to, plans int }{
-	{20, 60, 160}, {60, 150, 120}, {150, 400, 40}, {1000, 1000, 8}, {2000, 2000, 4}, {5000, 5000, 4},
+	{20, 60, 250}, {60, 150, 200}, {150, 400, 40}, {1000, 1000, 8}, {2000, 2000, 4}, {5000, 5000, 4},
 }
 
 // batch shifts the seeds, to look further than the tests do by themselves: CGAL_BATCH=7 go test ./solver/plantest/cgal.
