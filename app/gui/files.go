@@ -193,6 +193,7 @@ func (w *window) wrote(p *plan.Plan, path string, print store.Print, err error, 
 	w.notice.hide()
 	w.remember(path)
 	w.acted()
+	w.say("Saved as " + filepath.Base(path) + ".")
 	w.offerCopy()
 	if goOn != nil {
 		goOn()

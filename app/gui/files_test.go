@@ -25,6 +25,9 @@ func TestSaveAndReopenIsTheSamePlan(t *testing.T) {
 	if r.session.Dirty() || r.notice.box.Visible() {
 		t.Fatalf("after saving dirty %v, notice %q", r.session.Dirty(), r.notice.text.text)
 	}
+	if got, want := r.status.hint.text, "Saved as "+filepath.Base(path)+"."; got != want {
+		t.Errorf("after saving the status line says %q, want %q", got, want)
+	}
 	r.newPlan()
 	r.open(path)
 	if got := text(t, r.session.Plan()); got != want {
