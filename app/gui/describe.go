@@ -304,29 +304,6 @@ func (w *window) at(p *plan.Plan, q exact.Pt) string {
 	return strings.TrimSpace(s)
 }
 
-// roomAt returns the name of the zone a point lies in, the last drawn first.
-func roomAt(p *plan.Plan, q exact.Pt) string {
-	name := ""
-	for _, z := range p.Zones() {
-		if z.Name != "" && inRing(z.Ring, q) {
-			name = z.Name
-		}
-	}
-	return name
-}
-
-// inRing reports whether q lies in a ring, by the parity of the edges to its right.
-func inRing(ring plan.Chain, q exact.Pt) bool {
-	in, n := false, ring.Len()
-	for i := range n {
-		a, b := ring.At(i), ring.At((i+1)%n)
-		if (a.Y > q.Y) != (b.Y > q.Y) && (exact.Orient(a, b, q) > 0) == (b.Y > a.Y) {
-			in = !in
-		}
-	}
-	return in
-}
-
 // problemOf returns the first problem of the drawing that names the item.
 func problemOf(r *study.Result, ref plan.Ref) string {
 	if r == nil {
