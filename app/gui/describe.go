@@ -6,7 +6,6 @@ import (
 	"math"
 	"strings"
 
-	"enfilade/canvas/tool"
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 	"enfilade/solver/study"
@@ -64,72 +63,10 @@ func (w *window) describe(p *plan.Plan, sel []plan.Ref) card {
 	return w.describeMany(p, sel)
 }
 
-// describeNothing offers the measures of new items.
-func (w *window) describeNothing(p *plan.Plan) card {
-	d := &w.measures
-	height := ""
-	if d.Height != plan.Ceiling {
-		height = formatLength(d.Height, w.unit())
-	}
-	c := card{
-		key:  "nothing " + w.unit(),
-		hint: []string{"Nothing is selected.", "Click a wall, an observer or a target to see", "and change its measures here."},
-		fields: []field{
-			headed("New walls", w.lengthField("Thickness", d.Thickness, func(v int32) error {
-				return within(v, 0, plan.MaxThickness, func() error { d.Thickness = v; return nil })
-			})),
-			{label: "Height", unit: unitMark(w.unit()), text: height, empty: "ceiling", set: func(text string) error {
-				v, err := w.height(text)
-				if err == nil {
-					d.Height = v
-				}
-				return err
-			}},
-			w.newBody(),
-			w.lengthField("Low walls", d.LowHeight, func(v int32) error {
-				return within(v, 1, plan.Ceiling-1, func() error { d.LowHeight = v; return nil })
-			}),
-			w.lengthField("Door width", d.DoorWidth, func(v int32) error {
-				return within(v, 1, plan.MaxThickness, func() error { d.DoorWidth = v; return nil })
-			}),
-		},
-	}
-	c.fields = append(c.fields, w.describePlan(p)...)
-	return c
-}
-
 // headed puts a heading above a field.
 func headed(group string, f field) field {
 	f.group = group
 	return f
-}
-
-// units are the display units and what the form calls them.
-var units = []struct{ unit, name string }{{"m", "metres"}, {"cm", "centimetres"}, {"mm", "millimetres"}, {"ft", "feet and inches"}}
-
-// describePlan is what the form offers of the plan itself: its title, place and unit, and the person who walks.
-func (w *window) describePlan(p *plan.Plan) []field {
-	sheet := p.Sheet()
-	putSheet := func(label string, change func(*plan.Sheet)) error {
-		change(&sheet)
-		return w.doEdit(tool.Named(label, plan.SetSheet{Sheet: sheet}))
-	}
-	unit := field{label: "Unit", pick: func(i int) error {
-		return putSheet("change unit", func(s *plan.Sheet) { s.Unit = units[i].unit })
-	}}
-	for i, u := range units {
-		unit.choices = append(unit.choices, u.name)
-		if u.unit == unitOf(sheet.Unit) {
-			unit.chosen = i
-		}
-	}
-	return append([]field{
-		headed("Plan", textField("Title", sheet.Title, func(t string) error {
-			return putSheet("change title", func(s *plan.Sheet) { s.Title = t })
-		})),
-		textField("Place", sheet.Place, func(t string) error { return putSheet("change place", func(s *plan.Sheet) { s.Place = t }) }),
-		unit,
-	}, w.describeWalker(p.Walker())...)
 }
 
 // errPositive is what a form says of a measure that must be above nothing.

@@ -146,17 +146,6 @@ func (w *window) next(kind plan.Kind) {
 	w.acted()
 }
 
-// toggleSide shows or hides the right column.
-func (w *window) toggleSide() {
-	if w.side.Visible() {
-		w.side.Hide()
-	} else {
-		w.side.Show()
-	}
-	w.win.Content().Refresh()
-	w.acted()
-}
-
 // setTheme changes the look and remembers it.
 func (w *window) setTheme(choice string) {
 	w.app.Preferences().SetString(prefTheme, choice)

@@ -50,18 +50,22 @@ type window struct {
 	walking  walking
 	editing
 
-	rail    []*toolButton
-	tips    *tips
-	notice  *notice
-	status  *status
-	foot    *foot
-	form    *form
-	table   *table
-	first   *firstSteps
-	side    *fyne.Container
-	modal   *modal
-	bar     *menuBar
-	closing bool
+	rail   []*toolButton
+	tips   *tips
+	notice *notice
+	status *status
+	foot   *foot
+	form   *form
+	table  *table
+	first  *firstSteps
+	side   *fyne.Container
+	middle *fyne.Container // rail, picture and right column
+	frame  frame
+
+	columnSplit *container.Split // of the right column: form and table
+	modal       *modal
+	bar         *menuBar
+	closing     bool
 }
 
 // parts is what a window is made with; tests hand in their own.
@@ -120,10 +124,10 @@ func (w *window) build() {
 	w.panelLayer.Hide()
 	picture := container.NewStack(w.view, w.first.box, w.panelLayer)
 	foot := around(hairline(), nil, nil, nil, w.foot.box)
-	middle := container.New(frame{}, rail, hairline(), picture, foot, w.side)
+	w.middle = container.New(&w.frame, rail, hairline(), picture, foot, w.side)
 	w.bar = newMenuBar(w.menus())
 	w.bar.drop.back = w.view.grab
-	page := around(pile(w.bar, hairline(), w.notice.box), w.status.box, nil, nil, middle)
+	page := around(pile(w.bar, hairline(), w.notice.box), w.status.box, nil, nil, w.middle)
 	w.notice.page = page
 	w.win.SetContent(container.NewStack(newPaper(roleChrome), page, w.bar.drop, w.tips.layer))
 	w.shortcuts()
@@ -135,48 +139,6 @@ func (w *window) build() {
 		d.SetOnKeyUp(w.view.KeyUp)
 	}
 	w.rail[0].choose(true)
-}
-
-// sideColumn is the right column: the selection above, the approaches below, their share draggable.
-func (w *window) sideColumn() *fyne.Container {
-	split := container.NewVSplit(w.form.box, w.table.box)
-	split.SetOffset(0.47)
-	w.problems = newProblems(w)
-	return container.NewStack(newPaper(rolePanel), around(nil, w.problems.box, hairline(), nil, split))
-}
-
-// frame lays out rail, rule, picture, foot and right column.
-type frame struct{}
-
-const (
-	sideWidth  = 320
-	footHeight = 32
-	narrow     = 1100 // below this width the right column folds away
-)
-
-// MinSize is for the toolkit.
-func (frame) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(480, 320) }
-
-// Layout is for the toolkit.
-func (frame) Layout(o []fyne.CanvasObject, s fyne.Size) {
-	rail, rule, picture, foot, side := o[0], o[1], o[2], o[3], o[4]
-	right := s.Width
-	if side.Visible() && s.Width >= narrow {
-		right -= sideWidth
-		side.Move(fyne.NewPos(right, 0))
-		side.Resize(fyne.NewSize(sideWidth, s.Height))
-	} else {
-		side.Move(fyne.NewPos(s.Width, 0))
-		side.Resize(fyne.NewSize(sideWidth, s.Height))
-	}
-	rail.Resize(fyne.NewSize(railWidth, s.Height))
-	rule.Move(fyne.NewPos(railWidth, 0))
-	rule.Resize(fyne.NewSize(1, s.Height))
-	left := float32(railWidth + 1)
-	picture.Move(fyne.NewPos(left, 0))
-	picture.Resize(fyne.NewSize(right-left, s.Height-footHeight))
-	foot.Move(fyne.NewPos(left, s.Height-footHeight))
-	foot.Resize(fyne.NewSize(right-left, footHeight))
 }
 
 // changed is told every change of the plan that is shown.
