@@ -10,13 +10,12 @@ import "enfilade/solver/exact"
 func Bounds(p *Plan) (lo, hi exact.Pt, ok bool) {
 	var b box
 	b.chain(p.obstacles.floor, 0)
-	for i := range p.obstacles.walls {
-		w := &p.obstacles.walls[i]
+	for _, w := range p.obstacles.walls.refs() {
 		right2, left2 := w.Sides2()
 		b.chain(w.Line, (max(right2, left2)+1)/2)
 	}
-	for i := range p.obstacles.blocks {
-		b.chain(p.obstacles.blocks[i].Ring, 0)
+	for _, k := range p.obstacles.blocks.refs() {
+		b.chain(k.Ring, 0)
 	}
 	b.marks(p.marks)
 	return b.lo, b.hi, b.some
@@ -45,25 +44,24 @@ type box struct {
 }
 
 func (b *box) marks(m *Marks) {
-	for i := range m.zones {
-		b.chain(m.zones[i].Ring, 0)
+	for _, z := range m.zones.refs() {
+		b.chain(z.Ring, 0)
 	}
-	for i := range m.observers {
-		b.point(m.observers[i].At, 0)
+	for _, o := range m.observers.refs() {
+		b.point(o.At, 0)
 	}
-	for i := range m.targets {
-		t := &m.targets[i]
+	for _, t := range m.targets.refs() {
 		b.point(t.At, 0)
 		if t.Face != nil {
 			b.point(t.Face[0], 0)
 			b.point(t.Face[1], 0)
 		}
 	}
-	for i := range m.starts {
-		b.point(m.starts[i].At, 0)
+	for _, s := range m.starts.refs() {
+		b.point(s.At, 0)
 	}
-	for i := range m.routes {
-		b.chain(m.routes[i].Via, 0)
+	for _, r := range m.routes.refs() {
+		b.chain(r.Via, 0)
 	}
 }
 

@@ -102,32 +102,35 @@ func (w *Walker) fault() string {
 
 // fitted returns the openings with those of wall w made to fit: one that the shortened wall pushes slides back along it.
 // Errors name the opening that fits nowhere, or lies over another.
-func fitted(openings []Opening, w *Wall) ([]Opening, error) {
-	copied := false
+func fitted(openings list[Opening], w *Wall) (list[Opening], error) {
 	var own []int
-	for i := range openings {
-		o := openings[i]
-		if o.Wall != w.ID {
-			continue
+	for i, o := range openings.refs() {
+		if o.Wall == w.ID {
+			own = append(own, i)
 		}
-		if _, text := w.Fit(o); text != "" {
-			at := w.lastPlace(o)
-			if at < 0 {
-				return nil, fault(KindOpening, o.ID, text)
-			}
-			if !copied {
-				openings, copied = append([]Opening(nil), openings...), true
-			}
-			openings[i].At = at
-		}
-		for _, j := range own {
-			if openings[i].Over(openings[j]) {
-				return nil, fault(KindOpening, o.ID, fmt.Sprintf("would lie over opening %s", openings[j].ID))
-			}
-		}
-		own = append(own, i)
 	}
-	return openings, nil
+	e := openings.edit()
+	err := fitOwn(&e, own, w)
+	return e.list, err
+}
+
+// fitOwn makes the openings of wall w fit, whose places in the list are given in order.
+func fitOwn(e *listEdit[Opening], own []int, w *Wall) error {
+	for k, i := range own {
+		o := *e.list.at(i)
+		if _, text := w.Fit(o); text != "" {
+			if o.At = w.lastPlace(o); o.At < 0 {
+				return fault(KindOpening, o.ID, text)
+			}
+			e.at(i).At = o.At
+		}
+		for _, j := range own[:k] {
+			if q := e.list.at(j); o.Over(*q) {
+				return fault(KindOpening, o.ID, fmt.Sprintf("would lie over opening %s", q.ID))
+			}
+		}
+	}
+	return nil
 }
 
 // lastPlace returns the farthest place along its straight piece at which an opening fits, negative when none.

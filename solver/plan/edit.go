@@ -1,9 +1,6 @@
 package plan
 
-import (
-	"fmt"
-	"slices"
-)
+import "fmt"
 
 // Edit makes a new plan from an old one.
 type Edit interface {
@@ -41,7 +38,7 @@ func (s Steps) Apply(p *Plan) (*Plan, error) {
 	return p, nil
 }
 
-// draft is a plan in the making: parts and lists are copied when they are first touched.
+// draft is a plan in the making: parts are copied when they are first touched.
 type draft struct {
 	old *Plan
 	new Plan
@@ -53,7 +50,6 @@ func draftOf(p *Plan) *draft { return &draft{old: p, new: *p} }
 func (d *draft) obstacles() *Obstacles {
 	if d.new.obstacles == d.old.obstacles {
 		o := *d.old.obstacles
-		o.ids = new(obstacleIDs)
 		d.new.obstacles = &o
 	}
 	return d.new.obstacles
@@ -62,7 +58,6 @@ func (d *draft) obstacles() *Obstacles {
 func (d *draft) marks() *Marks {
 	if d.new.marks == d.old.marks {
 		m := *d.old.marks
-		m.ids = new(markIDs)
 		d.new.marks = &m
 	}
 	return d.new.marks
@@ -90,41 +85,28 @@ func fault(kind Kind, id, text string) error { return fmt.Errorf("%v: %s", Ref{k
 func missing(kind Kind, id string) error { return fault(kind, id, "is not in the plan") }
 
 // added returns the list with an item more, which gets the next free id if it has none.
-func added[T any, P item[T]](kind Kind, list []T, it T) ([]T, error) {
+func added[T any, P item[T]](kind Kind, l list[T], it T) (list[T], error) {
 	id := P(&it).id()
 	if *id == "" {
-		*id = nextID[T, P](kind, list)
-	} else if indexOf[T, P](list, *id) >= 0 {
-		return nil, fault(kind, *id, "is in the plan already; each needs its own id")
+		*id = nextID[T, P](kind, &l)
+	} else if at[T, P](&l, *id) >= 0 {
+		return l, fault(kind, *id, "is in the plan already; each needs its own id")
 	}
 	if text := P(&it).fault(); text != "" {
-		return nil, fault(kind, *id, text)
+		return l, fault(kind, *id, text)
 	}
-	return append(slices.Clip(list), it), nil
+	return l.with(it), nil
 }
 
 // replaced returns the list with the item of the same id replaced.
-func replaced[T any, P item[T]](kind Kind, list []T, it T) ([]T, error) {
+func replaced[T any, P item[T]](kind Kind, l list[T], it T) (list[T], error) {
 	id := *P(&it).id()
-	i := indexOf[T, P](list, id)
+	i := at[T, P](&l, id)
 	if i < 0 {
-		return nil, missing(kind, id)
+		return l, missing(kind, id)
 	}
 	if text := P(&it).fault(); text != "" {
-		return nil, fault(kind, id, text)
+		return l, fault(kind, id, text)
 	}
-	list = slices.Clone(list)
-	list[i] = it
-	return list, nil
-}
-
-// indexOf returns the index of the first item with an id, -1 when there is none. It looks at the items where they lie: a copy
-// of each would be put on the heap.
-func indexOf[T any, P identified[T]](list []T, id string) int {
-	for i := range list {
-		if *P(&list[i]).id() == id {
-			return i
-		}
-	}
-	return -1
+	return l.put(i, it), nil
 }

@@ -93,7 +93,7 @@ func (a AddOpening) Apply(p *Plan) (*Plan, error) {
 	if err != nil {
 		return nil, err
 	}
-	return withOpenings(p, list, list[len(list)-1])
+	return withOpenings(p, list, *list.at(list.n - 1))
 }
 
 // Apply adds the block.
@@ -145,7 +145,7 @@ func (a AddRoute) Apply(p *Plan) (*Plan, error) {
 }
 
 // withOpenings returns the plan with another list of openings, of which one is new and must fit its wall.
-func withOpenings(p *Plan, list []Opening, o Opening) (*Plan, error) {
+func withOpenings(p *Plan, openings list[Opening], o Opening) (*Plan, error) {
 	w, ok := p.Wall(o.Wall)
 	if !ok {
 		return nil, fault(KindOpening, o.ID, "names wall \""+o.Wall+"\", which is not in the plan")
@@ -153,12 +153,12 @@ func withOpenings(p *Plan, list []Opening, o Opening) (*Plan, error) {
 	if _, text := w.Fit(o); text != "" {
 		return nil, fault(KindOpening, o.ID, text)
 	}
-	for _, q := range list {
-		if q.ID != o.ID && q.Over(o) {
+	for _, q := range openings.refs() {
+		if q.Wall == o.Wall && q.ID != o.ID && q.Over(o) {
 			return nil, fault(KindOpening, o.ID, "would lie over opening "+q.ID)
 		}
 	}
 	d := draftOf(p)
-	d.obstacles().openings = list
+	d.obstacles().openings = openings
 	return d.plan(), nil
 }

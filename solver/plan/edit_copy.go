@@ -2,7 +2,6 @@ package plan
 
 import (
 	"fmt"
-	"slices"
 	"strconv"
 
 	"enfilade/solver/exact"
@@ -23,9 +22,9 @@ func Extract(p *Plan, items []Ref) *Plan {
 		parts.Floor = p.obstacles.floor
 	}
 	parts.Walls = only(KindWall, p.obstacles.walls, in)
-	for _, o := range p.obstacles.openings {
+	for _, o := range p.obstacles.openings.refs() {
 		if in[Ref{KindWall, o.Wall}] {
-			parts.Openings = append(parts.Openings, o)
+			parts.Openings = append(parts.Openings, *o)
 		}
 	}
 	parts.Blocks = only(KindBlock, p.obstacles.blocks, in)
@@ -38,10 +37,10 @@ func Extract(p *Plan, items []Ref) *Plan {
 }
 
 // only returns the items of a list that are in a set.
-func only[T any, P identified[T]](kind Kind, list []T, in map[Ref]bool) (out []T) {
-	for i := range list {
-		if in[Ref{kind, *P(&list[i]).id()}] {
-			out = append(out, list[i])
+func only[T any, P identified[T]](kind Kind, l list[T], in map[Ref]bool) (out []T) {
+	for _, it := range l.refs() {
+		if in[Ref{kind, *P(it).id()}] {
+			out = append(out, *it)
 		}
 	}
 	return out
@@ -129,9 +128,7 @@ func (e Duplicate) run(p *Plan) (*Plan, []Ref, error) {
 		}
 	}
 	clip := Extract(p, e.Items)
-	clip = From(Parts{Walls: clip.obstacles.walls, Openings: clip.obstacles.openings, Blocks: clip.obstacles.blocks,
-		Zones: clip.marks.zones, Observers: clip.marks.observers, Targets: clip.marks.targets, Starts: clip.marks.starts,
-		Routes: clip.marks.routes})
+	clip.obstacles.floor = Chain{} // there is only one
 	return paste(p, clip, places)
 }
 
@@ -140,10 +137,6 @@ func paste(p, clip *Plan, places []exact.Vec) (*Plan, []Ref, error) {
 	d := draftOf(p)
 	s := paster{old: p, next: map[Kind]int{}}
 	o, m := *p.obstacles, *p.marks
-	o.ids, m.ids = new(obstacleIDs), new(markIDs)
-	o.walls, o.openings, o.blocks = slices.Clip(o.walls), slices.Clip(o.openings), slices.Clip(o.blocks)
-	m.zones, m.observers, m.targets = slices.Clip(m.zones), slices.Clip(m.observers), slices.Clip(m.targets)
-	m.starts, m.routes = slices.Clip(m.starts), slices.Clip(m.routes)
 	c, k := clip.obstacles, clip.marks
 	for _, by := range places {
 		s.names = map[Ref]string{}
@@ -169,7 +162,7 @@ func paste(p, clip *Plan, places []exact.Vec) (*Plan, []Ref, error) {
 	if s.err != nil {
 		return nil, nil, s.err
 	}
-	if len(o.walls) > len(p.obstacles.walls) || len(o.openings) > len(p.obstacles.openings) || len(o.blocks) > len(p.obstacles.blocks) ||
+	if o.walls.n > p.obstacles.walls.n || o.openings.n > p.obstacles.openings.n || o.blocks.n > p.obstacles.blocks.n ||
 		o.floor.Len() > p.obstacles.floor.Len() {
 		*d.obstacles() = o
 	}
@@ -213,33 +206,28 @@ func (s *paster) renamed(kind Kind, id string) string {
 }
 
 // kept returns the routes whose ends will be in the plan.
-func (s *paster) kept(routes []Route) (out []Route) {
+func (s *paster) kept(routes list[Route]) list[Route] {
 	there := func(kind Kind, id string) bool {
 		_, along := s.names[Ref{kind, id}]
 		return along || id == "" || s.old.Has(Ref{kind, id})
 	}
-	for _, r := range routes {
-		if there(KindStart, r.From) && there(KindTarget, r.To) {
-			out = append(out, r)
-		}
-	}
-	return out
+	routes, _ = routes.without(func(r *Route) bool { return !there(KindStart, r.From) || !there(KindTarget, r.To) })
+	return routes
 }
 
 // pasted appends the items of a clip under new ids, changed.
-func pasted[T any, P item[T]](s *paster, kind Kind, list, clip []T, change func(P) error) []T {
-	for i := range clip {
-		it := clip[i]
-		id := P(&it).id()
+func pasted[T any, P item[T]](s *paster, kind Kind, l, clip list[T], change func(P) error) list[T] {
+	items := clip.slice()
+	for i := range items {
+		id := P(&items[i]).id()
 		name := s.id(kind)
 		s.names[Ref{kind, *id}] = name
 		*id = name
-		s.note(change(&it), kind, name)
+		s.note(change(&items[i]), kind, name)
 		if kind != KindOpening {
 			s.added = append(s.added, Ref{kind, name})
 			s.marked = s.marked || kind >= KindZone
 		}
-		list = append(list, it)
 	}
-	return list
+	return l.with(items...)
 }

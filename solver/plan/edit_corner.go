@@ -55,10 +55,12 @@ func (m MoveCorner) Apply(p *Plan) (*Plan, error) {
 // wallCornersAt returns the corners of walls at a point, but for one.
 func (p *Plan) wallCornersAt(at exact.Pt, but Corner) []Corner {
 	var list []Corner
-	for i := range p.obstacles.walls {
-		w := &p.obstacles.walls[i]
+	for _, w := range p.obstacles.walls.refs() {
 		for k, q := range w.Line.pts {
-			if c := (Corner{Ref{KindWall, w.ID}, k}); q == at && c != but {
+			if q != at {
+				continue
+			}
+			if c := (Corner{Ref{KindWall, w.ID}, k}); c != but {
 				list = append(list, c)
 			}
 		}
@@ -149,16 +151,16 @@ func (d *draft) moveCorner(c Corner, by exact.Vec) error {
 }
 
 // changed returns the list with one item changed; an error of the change gets the item's name.
-func changed[T any, P identified[T]](r Ref, list []T, change func(P) error) ([]T, error) {
-	i := indexOf[T, P](list, r.ID)
+func changed[T any, P identified[T]](r Ref, l list[T], change func(P) error) (list[T], error) {
+	i := at[T, P](&l, r.ID)
 	if i < 0 {
-		return nil, missing(r.Kind, r.ID)
+		return l, missing(r.Kind, r.ID)
 	}
-	list = slices.Clone(list)
-	if err := change(&list[i]); err != nil {
-		return nil, fault(r.Kind, r.ID, err.Error())
+	e := l.edit()
+	if err := change(e.at(i)); err != nil {
+		return l, fault(r.Kind, r.ID, err.Error())
 	}
-	return list, nil
+	return e.list, nil
 }
 
 // chain returns an item's corners.
@@ -167,20 +169,20 @@ func (p *Plan) chain(r Ref) (Chain, error) {
 	case KindFloor:
 		return p.obstacles.floor, nil
 	case KindWall:
-		if i := at(&p.obstacles.ids.walls, p.obstacles.walls, r.ID); i >= 0 {
-			return p.obstacles.walls[i].Line, nil
+		if i := at(&p.obstacles.walls, r.ID); i >= 0 {
+			return p.obstacles.walls.at(i).Line, nil
 		}
 	case KindBlock:
-		if i := at(&p.obstacles.ids.blocks, p.obstacles.blocks, r.ID); i >= 0 {
-			return p.obstacles.blocks[i].Ring, nil
+		if i := at(&p.obstacles.blocks, r.ID); i >= 0 {
+			return p.obstacles.blocks.at(i).Ring, nil
 		}
 	case KindZone:
-		if i := at(&p.marks.ids.zones, p.marks.zones, r.ID); i >= 0 {
-			return p.marks.zones[i].Ring, nil
+		if i := at(&p.marks.zones, r.ID); i >= 0 {
+			return p.marks.zones.at(i).Ring, nil
 		}
 	case KindRoute:
-		if i := at(&p.marks.ids.routes, p.marks.routes, r.ID); i >= 0 {
-			return p.marks.routes[i].Via, nil
+		if i := at(&p.marks.routes, r.ID); i >= 0 {
+			return p.marks.routes.at(i).Via, nil
 		}
 	default:
 		return Chain{}, fault(r.Kind, r.ID, "has no corners")

@@ -1,7 +1,5 @@
 package plan
 
-import "slices"
-
 // Delete takes items out of the plan. The openings of a wall go with it, and the routes from a start or to a target.
 type Delete struct{ Items []Ref }
 
@@ -33,20 +31,20 @@ func (e Delete) Apply(p *Plan) (*Plan, error) {
 		d.sheet().Underlay = nil
 	}
 	o, m := p.obstacles, p.marks
-	walls, w := without(o.walls, func(w *Wall) bool { return gone[Ref{KindWall, w.ID}] })
-	openings, c := without(o.openings, func(o *Opening) bool {
+	walls, w := o.walls.without(func(w *Wall) bool { return gone[Ref{KindWall, w.ID}] })
+	openings, c := o.openings.without(func(o *Opening) bool {
 		return gone[Ref{KindOpening, o.ID}] || gone[Ref{KindWall, o.Wall}]
 	})
-	blocks, b := without(o.blocks, func(b *Block) bool { return gone[Ref{KindBlock, b.ID}] })
+	blocks, b := o.blocks.without(func(b *Block) bool { return gone[Ref{KindBlock, b.ID}] })
 	if w || c || b {
 		n := d.obstacles()
 		n.walls, n.openings, n.blocks = walls, openings, blocks
 	}
-	zones, z := without(m.zones, func(z *Zone) bool { return gone[Ref{KindZone, z.ID}] })
-	observers, v := without(m.observers, func(o *Observer) bool { return gone[Ref{KindObserver, o.ID}] })
-	targets, t := without(m.targets, func(t *Target) bool { return gone[Ref{KindTarget, t.ID}] })
-	starts, s := without(m.starts, func(s *Start) bool { return gone[Ref{KindStart, s.ID}] })
-	routes, r := without(m.routes, func(r *Route) bool {
+	zones, z := m.zones.without(func(z *Zone) bool { return gone[Ref{KindZone, z.ID}] })
+	observers, v := m.observers.without(func(o *Observer) bool { return gone[Ref{KindObserver, o.ID}] })
+	targets, t := m.targets.without(func(t *Target) bool { return gone[Ref{KindTarget, t.ID}] })
+	starts, s := m.starts.without(func(s *Start) bool { return gone[Ref{KindStart, s.ID}] })
+	routes, r := m.routes.without(func(r *Route) bool {
 		return gone[Ref{KindRoute, r.ID}] || gone[Ref{KindStart, r.From}] || gone[Ref{KindTarget, r.To}]
 	})
 	if z || v || t || s || r {
@@ -56,42 +54,27 @@ func (e Delete) Apply(p *Plan) (*Plan, error) {
 	return d.plan(), nil
 }
 
-// without returns the list without what goes, the list itself when nothing does.
-func without[T any](list []T, goes func(*T) bool) (left []T, some bool) {
-	at := slices.IndexFunc(list, func(it T) bool { return goes(&it) })
-	if at < 0 {
-		return list, false
-	}
-	left = slices.Clone(list[:at])
-	for i := at + 1; i < len(list); i++ {
-		if !goes(&list[i]) {
-			left = append(left, list[i])
-		}
-	}
-	return left, true
-}
-
 // Has reports whether the item is in the plan. The plan itself and the walker always are.
 func (p *Plan) Has(r Ref) bool {
 	switch r.Kind {
 	case KindFloor:
 		return r.ID == "" && p.obstacles.floor.Len() > 0
 	case KindWall:
-		return at(&p.obstacles.ids.walls, p.obstacles.walls, r.ID) >= 0
+		return at(&p.obstacles.walls, r.ID) >= 0
 	case KindOpening:
-		return at(&p.obstacles.ids.openings, p.obstacles.openings, r.ID) >= 0
+		return at(&p.obstacles.openings, r.ID) >= 0
 	case KindBlock:
-		return at(&p.obstacles.ids.blocks, p.obstacles.blocks, r.ID) >= 0
+		return at(&p.obstacles.blocks, r.ID) >= 0
 	case KindZone:
-		return at(&p.marks.ids.zones, p.marks.zones, r.ID) >= 0
+		return at(&p.marks.zones, r.ID) >= 0
 	case KindObserver:
-		return at(&p.marks.ids.observers, p.marks.observers, r.ID) >= 0
+		return at(&p.marks.observers, r.ID) >= 0
 	case KindTarget:
-		return at(&p.marks.ids.targets, p.marks.targets, r.ID) >= 0
+		return at(&p.marks.targets, r.ID) >= 0
 	case KindStart:
-		return at(&p.marks.ids.starts, p.marks.starts, r.ID) >= 0
+		return at(&p.marks.starts, r.ID) >= 0
 	case KindRoute:
-		return at(&p.marks.ids.routes, p.marks.routes, r.ID) >= 0
+		return at(&p.marks.routes, r.ID) >= 0
 	case KindUnderlay:
 		return r.ID == "" && p.sheet.Underlay != nil
 	}

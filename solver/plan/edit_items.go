@@ -1,6 +1,9 @@
 package plan
 
-import "slices"
+import (
+	"maps"
+	"slices"
+)
 
 // SetItems replaces many items at once, each the one with its id, in one pass over the lists.
 type SetItems struct {
@@ -34,7 +37,7 @@ func (e SetItems) Apply(p *Plan) (*Plan, error) {
 		for i := range e.Openings {
 			touched[e.Openings[i].Wall] = true
 		}
-		openings, s.err = fittedAll(openings, walls, func(id string) bool { return touched[id] })
+		openings, s.err = fittedAll(openings, &walls, func(id string) bool { return touched[id] })
 	}
 	if len(e.Walls)+len(e.Openings)+len(e.Blocks) > 0 {
 		o := d.obstacles()
@@ -54,67 +57,46 @@ func (e SetItems) Apply(p *Plan) (*Plan, error) {
 type setter struct{ err error }
 
 // put returns the list with some items replaced, the list itself when there are none.
-func put[T any, P item[T]](s *setter, kind Kind, list, items []T) []T {
-	if len(items) == 0 || s.err != nil {
-		return list
-	}
-	at := make(map[string]int, len(list))
-	for i := range list {
-		at[*P(&list[i]).id()] = i
-	}
-	list = slices.Clone(list)
-	for i := range items {
+func put[T any, P item[T]](s *setter, kind Kind, l list[T], items []T) list[T] {
+	e := l.edit()
+	for i := 0; i < len(items) && s.err == nil; i++ {
 		it := P(&items[i])
-		k, ok := at[*it.id()]
-		if !ok {
+		k := at[T, P](&l, *it.id())
+		if k < 0 {
 			s.err = missing(kind, *it.id())
-			return list
-		}
-		if text := it.fault(); text != "" {
+		} else if text := it.fault(); text != "" {
 			s.err = fault(kind, *it.id(), text)
-			return list
+		} else {
+			*e.at(k) = items[i]
 		}
-		list[k] = items[i]
 	}
-	return list
+	return e.list
 }
 
 // fittedAll is fitted for all walls for which touched holds, in one pass over the openings. An opening that names none of the
 // walls is an error when its wall was to be touched.
-func fittedAll(openings []Opening, walls []Wall, touched func(id string) bool) ([]Opening, error) {
-	own := map[string][]int{}
-	for i := range openings {
-		if id := openings[i].Wall; touched(id) {
-			own[id] = append(own[id], i)
-		}
-	}
-	if len(own) == 0 {
-		return openings, nil
-	}
-	now := slices.Clone(openings)
-	for i := range walls {
-		w := &walls[i]
-		list := own[w.ID]
-		if len(list) == 0 {
+func fittedAll(openings list[Opening], walls *list[Wall], touched func(id string) bool) (list[Opening], error) {
+	own := map[int][]int{} // by the wall's place
+	lost := -1             // the first whose wall is not there
+	for i, o := range openings.refs() {
+		if !touched(o.Wall) {
 			continue
 		}
-		delete(own, w.ID)
-		few := make([]Opening, len(list))
-		for k, at := range list {
-			few[k] = openings[at]
-		}
-		few, err := fitted(few, w)
-		if err != nil {
-			return nil, err
-		}
-		for k, at := range list {
-			now[at] = few[k]
+		if k := at(walls, o.Wall); k >= 0 {
+			own[k] = append(own[k], i)
+		} else if lost < 0 {
+			lost = i
 		}
 	}
-	for i := range openings { // in the plan's order, so that the same plan gives the same error
-		if o := &openings[i]; len(own[o.Wall]) > 0 {
-			return nil, fault(KindOpening, o.ID, "names wall \""+o.Wall+"\", which is not in the plan")
+	e := openings.edit()
+	for _, k := range slices.Sorted(maps.Keys(own)) { // in the plan's order, so that the same plan gives the same error
+		if err := fitOwn(&e, own[k], walls.at(k)); err != nil {
+			return openings, err
 		}
 	}
-	return now, nil
+	if lost >= 0 {
+		o := openings.at(lost)
+		return openings, fault(KindOpening, o.ID, "names wall \""+o.Wall+"\", which is not in the plan")
+	}
+	return e.list, nil
 }

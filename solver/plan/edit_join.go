@@ -31,7 +31,7 @@ func (e JoinWalls) Apply(p *Plan) (*Plan, error) {
 		}
 		walls = append(walls, w)
 	}
-	j := joiner{wall: walls[0], openings: slices.Clone(p.obstacles.openings)}
+	j := joiner{wall: walls[0], openings: p.obstacles.openings}
 	for rest := walls[1:]; len(rest) > 0; {
 		i := slices.IndexFunc(rest, func(w Wall) bool { return j.meets(w) })
 		if i < 0 {
@@ -47,8 +47,8 @@ func (e JoinWalls) Apply(p *Plan) (*Plan, error) {
 	for _, w := range walls[1:] {
 		gone[w.ID] = true
 	}
-	left, _ := without(p.obstacles.walls, func(w *Wall) bool { return gone[w.ID] })
-	left[indexOf(left, j.wall.ID)] = j.wall
+	left, _ := p.obstacles.walls.without(func(w *Wall) bool { return gone[w.ID] })
+	left = left.put(at(&left, j.wall.ID), j.wall)
 	openings, err := fitted(j.openings, &j.wall)
 	if err != nil {
 		return nil, err
@@ -61,7 +61,7 @@ func (e JoinWalls) Apply(p *Plan) (*Plan, error) {
 // joiner is a join under way: the wall as far as it goes, and all openings of the plan.
 type joiner struct {
 	wall     Wall
-	openings []Opening
+	openings list[Opening]
 }
 
 func ends(w *Wall) (first, last exact.Pt) { return w.Line.At(0), w.Line.At(w.Line.Len() - 1) }
@@ -102,12 +102,8 @@ func unlike(v, w *Wall, about bool) string {
 // join adds a wall at the end that it meets.
 func (j *joiner) join(w Wall) {
 	about := j.about(w)
-	for i := range j.openings {
-		if o := &j.openings[i]; about && o.Wall == w.ID {
-			o.turnAbout(&w)
-		}
-	}
 	if about {
+		j.openings = j.openings.changed(func(o *Opening) bool { return o.Wall == w.ID }, func(o *Opening) { o.turnAbout(&w) })
 		w = w.backwards()
 	}
 	front, back := j.wall.Line, w.Line
@@ -117,15 +113,13 @@ func (j *joiner) join(w Wall) {
 	}
 	joint := front.Len() - 1
 	pts := append(front.Points(), back.pts[1:]...)
-	for i := range j.openings {
-		o := &j.openings[i]
-		if (o.Wall == w.ID) == atEnd && (o.Wall == w.ID || o.Wall == j.wall.ID) {
+	ours := func(o *Opening) bool { return o.Wall == w.ID || o.Wall == j.wall.ID }
+	j.openings = j.openings.changed(ours, func(o *Opening) {
+		if (o.Wall == w.ID) == atEnd {
 			o.Segment += joint
 		}
-		if o.Wall == w.ID {
-			o.Wall = j.wall.ID
-		}
-	}
+		o.Wall = j.wall.ID
+	})
 	j.wall.Line = Chain{pts}
 	j.straighten(joint)
 }
@@ -137,15 +131,11 @@ func (j *joiner) straighten(joint int) {
 		return
 	}
 	j.wall.Line = Chain{slices.Delete(j.wall.Line.Points(), joint, joint+1)}
-	for i := range j.openings {
-		o := &j.openings[i]
-		switch {
-		case o.Wall != j.wall.ID || o.Segment < joint:
-		case o.Segment == joint:
-			o.Segment--
+	beyond := func(o *Opening) bool { return o.Wall == j.wall.ID && o.Segment >= joint }
+	j.openings = j.openings.changed(beyond, func(o *Opening) {
+		o.Segment--
+		if o.Segment == joint-1 {
 			o.shifted(&j.wall, exact.Dist(a, q))
-		default:
-			o.Segment--
 		}
-	}
+	})
 }

@@ -31,52 +31,48 @@ func (e Lengthen) Label() string { return "lengthen wall" }
 
 // Apply fails when the walls do not cross, or an opening lies across the place where they do.
 func (e CutBack) Apply(p *Plan) (*Plan, error) {
-	return meet(p, e.Wall, e.To, e.Start, func(w, to *Wall, openings []Opening) ([]Opening, error) {
+	return meet(p, e.Wall, e.To, e.Start, func(w, to *Wall, openings list[Opening]) (list[Opening], error) {
 		seg, at, ok := lastCrossing(w.Line, to.Line)
 		if !ok {
-			return nil, fault(KindWall, w.ID, "does not cross wall "+to.ID+"; lengthen it to that wall instead")
+			return openings, fault(KindWall, w.ID, "does not cross wall "+to.ID+"; lengthen it to that wall instead")
 		}
 		pts := w.Line.Points()[:seg+1]
 		if at != pts[seg] {
 			pts = append(pts, at)
 		}
 		if len(pts) < 2 {
-			return nil, fault(KindWall, w.ID, "would be gone; it begins on wall "+to.ID)
+			return openings, fault(KindWall, w.ID, "would be gone; it begins on wall "+to.ID)
 		}
 		return cutOff(openings, w, seg, at, pts)
 	})
 }
 
 // cutOff shortens the wall to some points and drops the openings beyond a place on one of its pieces.
-func cutOff(openings []Opening, w *Wall, seg int, at exact.Pt, pts []exact.Pt) ([]Opening, error) {
+func cutOff(openings list[Opening], w *Wall, seg int, at exact.Pt, pts []exact.Pt) (list[Opening], error) {
 	len2 := exact.Dist2(w.Line.At(seg), at)
-	var left []Opening
-	for i := range openings {
-		o := &openings[i]
-		if o.Wall == w.ID && o.Segment >= seg {
-			if o.Segment > seg || int64(o.At)*int64(o.At) >= len2 {
-				continue
-			}
-			if !upTo(len2, int64(o.At)+int64(o.Width)) {
-				return nil, errAcross(o)
-			}
+	beyond := func(o *Opening) bool {
+		return o.Wall == w.ID && (o.Segment > seg || o.Segment == seg && int64(o.At)*int64(o.At) >= len2)
+	}
+	for _, o := range openings.refs() {
+		if o.Wall == w.ID && o.Segment == seg && !beyond(o) && !upTo(len2, int64(o.At)+int64(o.Width)) {
+			return openings, errAcross(o)
 		}
-		left = append(left, *o)
 	}
 	w.Line = Chain{pts}
+	left, _ := openings.without(beyond)
 	return left, nil
 }
 
 // Apply fails when the wall would not meet the other one, or ends there already.
 func (e Lengthen) Apply(p *Plan) (*Plan, error) {
-	return meet(p, e.Wall, e.To, e.Start, func(w, to *Wall, openings []Opening) ([]Opening, error) {
+	return meet(p, e.Wall, e.To, e.Start, func(w, to *Wall, openings list[Opening]) (list[Opening], error) {
 		at, ok := firstMeeting(w.Line, to.Line)
 		n := w.Line.Len()
 		switch {
 		case !ok:
-			return nil, fault(KindWall, w.ID, "does not meet wall "+to.ID+" straight on; turn it, or lengthen its other end")
+			return openings, fault(KindWall, w.ID, "does not meet wall "+to.ID+" straight on; turn it, or lengthen its other end")
 		case at == w.Line.At(n-1):
-			return nil, fault(KindWall, w.ID, "ends on wall "+to.ID+" already")
+			return openings, fault(KindWall, w.ID, "ends on wall "+to.ID+" already")
 		}
 		pts := w.Line.Points()
 		pts[n-1] = at
@@ -87,8 +83,8 @@ func (e Lengthen) Apply(p *Plan) (*Plan, error) {
 
 // meet changes the end of a wall for the sake of another: its beginning when start says so, for which the wall is turned about
 // and back again.
-func meet(p *Plan, id, toID string, start bool, change func(w, to *Wall, openings []Opening) ([]Opening, error)) (*Plan, error) {
-	i := at(&p.obstacles.ids.walls, p.obstacles.walls, id)
+func meet(p *Plan, id, toID string, start bool, change func(w, to *Wall, openings list[Opening]) (list[Opening], error)) (*Plan, error) {
+	i := at(&p.obstacles.walls, id)
 	to, ok := p.Wall(toID)
 	switch {
 	case i < 0:
@@ -98,17 +94,13 @@ func meet(p *Plan, id, toID string, start bool, change func(w, to *Wall, opening
 	case id == toID:
 		return nil, fault(KindWall, id, "cannot meet itself; click another wall")
 	}
-	w := p.obstacles.walls[i]
+	w := *p.obstacles.walls.at(i)
 	if w.Line.Closed() {
 		return nil, fault(KindWall, id, "is closed, so it has no end")
 	}
-	openings := slices.Clone(p.obstacles.openings)
+	openings := p.obstacles.openings
 	about := func() {
-		for k := range openings {
-			if openings[k].Wall == id {
-				openings[k].turnAbout(&w)
-			}
-		}
+		openings = openings.changed(func(o *Opening) bool { return o.Wall == id }, func(o *Opening) { o.turnAbout(&w) })
 		w = w.backwards()
 	}
 	if start {
@@ -125,9 +117,7 @@ func meet(p *Plan, id, toID string, start bool, change func(w, to *Wall, opening
 		return nil, err
 	}
 	d := draftOf(p)
-	walls := slices.Clone(p.obstacles.walls)
-	walls[i] = w
-	d.obstacles().walls, d.obstacles().openings = walls, openings
+	d.obstacles().walls, d.obstacles().openings = p.obstacles.walls.put(i, w), openings
 	return d.plan(), nil
 }
 

@@ -36,7 +36,6 @@ func (e Mark) Apply(p *Plan) (*Plan, error) {
 	}
 	m := marker{&v, e, [2]bool{}}
 	o, k := *p.obstacles, *p.marks
-	o.ids, k.ids = new(obstacleIDs), new(markIDs)
 	o.walls = marked(&m, 0, KindWall, o.walls, func(w *Wall) *Meta { return &w.Meta })
 	o.openings = marked(&m, 0, KindOpening, o.openings, func(o *Opening) *Meta { return &o.Meta })
 	o.blocks = marked(&m, 0, KindBlock, o.blocks, func(b *Block) *Meta { return &b.Meta })
@@ -79,8 +78,8 @@ type marker struct {
 	touched [2]bool // the obstacles, the marks
 }
 
-func marked[T any, P identified[T]](m *marker, part int, kind Kind, list []T, meta func(P) *Meta) []T {
-	now, some, _ := moved(m.mover, kind, list, func(it P) error {
+func marked[T any, P identified[T]](m *marker, part int, kind Kind, l list[T], meta func(P) *Meta) list[T] {
+	now, some, _ := moved(m.mover, kind, l, func(it P) error {
 		m.edit.put(meta(it))
 		return nil
 	})
@@ -92,21 +91,21 @@ func marked[T any, P identified[T]](m *marker, part int, kind Kind, list []T, me
 func (p *Plan) Meta(r Ref) (m Meta, ok bool) {
 	switch r.Kind {
 	case KindWall:
-		return metaOf(&p.obstacles.ids.walls, p.obstacles.walls, r.ID, func(w *Wall) Meta { return w.Meta })
+		return metaOf(&p.obstacles.walls, r.ID, func(w *Wall) Meta { return w.Meta })
 	case KindOpening:
-		return metaOf(&p.obstacles.ids.openings, p.obstacles.openings, r.ID, func(o *Opening) Meta { return o.Meta })
+		return metaOf(&p.obstacles.openings, r.ID, func(o *Opening) Meta { return o.Meta })
 	case KindBlock:
-		return metaOf(&p.obstacles.ids.blocks, p.obstacles.blocks, r.ID, func(b *Block) Meta { return b.Meta })
+		return metaOf(&p.obstacles.blocks, r.ID, func(b *Block) Meta { return b.Meta })
 	case KindZone:
-		return metaOf(&p.marks.ids.zones, p.marks.zones, r.ID, func(z *Zone) Meta { return z.Meta })
+		return metaOf(&p.marks.zones, r.ID, func(z *Zone) Meta { return z.Meta })
 	case KindObserver:
-		return metaOf(&p.marks.ids.observers, p.marks.observers, r.ID, func(o *Observer) Meta { return o.Meta })
+		return metaOf(&p.marks.observers, r.ID, func(o *Observer) Meta { return o.Meta })
 	case KindTarget:
-		return metaOf(&p.marks.ids.targets, p.marks.targets, r.ID, func(t *Target) Meta { return t.Meta })
+		return metaOf(&p.marks.targets, r.ID, func(t *Target) Meta { return t.Meta })
 	case KindStart:
-		return metaOf(&p.marks.ids.starts, p.marks.starts, r.ID, func(s *Start) Meta { return s.Meta })
+		return metaOf(&p.marks.starts, r.ID, func(s *Start) Meta { return s.Meta })
 	case KindRoute:
-		return metaOf(&p.marks.ids.routes, p.marks.routes, r.ID, func(t *Route) Meta { return t.Meta })
+		return metaOf(&p.marks.routes, r.ID, func(t *Route) Meta { return t.Meta })
 	case KindUnderlay:
 		if p.sheet.Underlay != nil {
 			return p.sheet.Underlay.Meta, true
@@ -115,9 +114,9 @@ func (p *Plan) Meta(r Ref) (m Meta, ok bool) {
 	return Meta{}, false
 }
 
-func metaOf[T any, P identified[T]](f *finder, list []T, id string, meta func(P) Meta) (Meta, bool) {
-	if i := at[T, P](f, list, id); i >= 0 {
-		return meta(&list[i]), true
+func metaOf[T any, P identified[T]](l *list[T], id string, meta func(P) Meta) (Meta, bool) {
+	if i := at[T, P](l, id); i >= 0 {
+		return meta(l.at(i)), true
 	}
 	return Meta{}, false
 }

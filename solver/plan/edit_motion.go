@@ -85,9 +85,8 @@ func (c *carrier) obstacles() error {
 // changed places.
 func (c *carrier) openings() error {
 	old := c.draft.old.obstacles.openings
-	now := old
-	for i := range old {
-		o := &old[i]
+	now := old.edit()
+	for i, o := range old.refs() {
 		with := c.moving[Ref{KindWall, o.Wall}]
 		if c.moving[Ref{KindOpening, o.ID}] {
 			c.found++
@@ -95,30 +94,27 @@ func (c *carrier) openings() error {
 				return fault(KindOpening, o.ID, "can only be "+c.what+" with its wall")
 			}
 		}
-		if !with || !c.flips {
-			continue
+		if with && c.flips {
+			now.at(i).SideRight = !o.SideRight
 		}
-		if &now[0] == &old[0] {
-			now = append([]Opening(nil), old...)
-		}
-		now[i].SideRight = !o.SideRight
 	}
 	if c.kinds[KindWall] == 0 {
 		return nil
 	}
+	openings := now.list
 	if !c.whole { // a rounded piece may be shorter by a unit
 		var err error
-		if now, err = fittedAll(now, c.draft.new.obstacles.walls, func(id string) bool { return c.moving[Ref{KindWall, id}] }); err != nil {
+		walls := &c.draft.new.obstacles.walls
+		if openings, err = fittedAll(openings, walls, func(id string) bool { return c.moving[Ref{KindWall, id}] }); err != nil {
 			return err
 		}
 	}
-	c.draft.obstacles().openings = now
+	c.draft.obstacles().openings = openings
 	return nil
 }
 
 func (c *carrier) marks() error {
 	old, now := c.draft.old.marks, *c.draft.old.marks
-	now.ids = new(markIDs)
 	var some [5]bool
 	var err [5]error
 	now.zones, some[0], err[0] = moved(&c.mover, KindZone, old.zones, func(z *Zone) error { return c.ring(&z.Ring) })

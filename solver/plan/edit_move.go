@@ -91,25 +91,11 @@ func (v *mover) obstacles() error {
 	if some {
 		v.draft.obstacles().blocks = blocks
 	}
-	for i := 0; i < len(old.openings) && v.kinds[KindOpening] > 0; i++ {
-		o := &old.openings[i]
-		if !v.moving[Ref{KindOpening, o.ID}] {
-			continue
-		}
-		v.found++
-		if v.moving[Ref{KindWall, o.Wall}] {
-			continue
-		}
-		if err := v.draft.slide(*o, v.by); err != nil {
-			return err
-		}
-	}
-	return nil
+	return v.openings()
 }
 
 func (v *mover) marks() error {
 	old, now := v.draft.old.marks, *v.draft.old.marks
-	now.ids = new(markIDs)
 	var some [5]bool
 	var err [5]error
 	now.zones, some[0], err[0] = moved(v, KindZone, old.zones, func(z *Zone) error { return moveChain(&z.Ring, v.by) })
@@ -137,43 +123,102 @@ func (v *mover) sheet() error {
 	return nil
 }
 
-// moved returns the list with what moves moved, the list itself when nothing does.
-func moved[T any, P identified[T]](v *mover, kind Kind, list []T, move func(P) error) (now []T, some bool, err error) {
-	now = list
-	for i := 0; i < len(list) && v.kinds[kind] > 0; i++ {
-		id := *P(&list[i]).id()
-		if !v.moving[Ref{kind, id}] {
-			continue
-		}
+// moved returns the list with what moves moved, the list itself when nothing does. Cost: that of what moves, when it is a small
+// part of the list, else one pass.
+func moved[T any, P identified[T]](v *mover, kind Kind, l list[T], move func(P) error) (now list[T], some bool, err error) {
+	e := l.edit()
+	for _, i := range places[T, P](v, kind, &l) {
 		v.found++
-		if !some {
-			now, some = slices.Clone(list), true
-		}
-		if err := move(&now[i]); err != nil {
-			return nil, false, fault(kind, id, err.Error())
+		it := P(e.at(i))
+		if err := move(it); err != nil {
+			return l, false, fault(kind, *it.id(), err.Error())
 		}
 	}
-	return now, some, nil
+	return e.list, e.touched(), nil
 }
 
-// slide moves an opening along its wall.
-func (d *draft) slide(o Opening, by exact.Vec) error {
-	w, ok := d.new.Wall(o.Wall)
-	if !ok {
+// places returns where in a list the items lie that move, in order.
+func places[T any, P identified[T]](v *mover, kind Kind, l *list[T]) (list []int) {
+	const part = 8 // looking up so many takes about as long as asking for each of the list
+	if v.kinds[kind] == 0 {
+		return nil
+	}
+	if v.kinds[kind] > l.n/part {
+		for i, it := range l.refs() {
+			if v.moving[Ref{kind, *P(it).id()}] {
+				list = append(list, i)
+			}
+		}
+		return list
+	}
+	for r := range v.moving {
+		if r.Kind != kind {
+			continue
+		}
+		if i := at[T, P](l, r.ID); i >= 0 {
+			list = append(list, i)
+		}
+	}
+	slices.Sort(list)
+	return list
+}
+
+// openings slides the openings that move without their walls, one after the other.
+func (v *mover) openings() error {
+	old := &v.draft.old.obstacles.openings
+	moving := places(v, KindOpening, old)
+	v.found += len(moving)
+	moving = slices.DeleteFunc(moving, func(i int) bool { return v.moving[Ref{KindWall, old.at(i).Wall}] })
+	if len(moving) == 0 {
+		return nil
+	}
+	s := slider{walls: &v.draft.new.obstacles.walls, edit: old.edit(), beside: map[string][]int{}, by: v.by}
+	for _, i := range moving {
+		s.beside[old.at(i).Wall] = nil
+	}
+	for i, o := range old.refs() {
+		if list, ok := s.beside[o.Wall]; ok {
+			s.beside[o.Wall] = append(list, i)
+		}
+	}
+	for _, i := range moving {
+		if err := s.slide(i); err != nil {
+			return err
+		}
+	}
+	v.draft.obstacles().openings = s.edit.list
+	return nil
+}
+
+// slider moves openings along their walls.
+type slider struct {
+	walls  *list[Wall]
+	edit   listEdit[Opening]
+	beside map[string][]int // the openings of each wall in which one moves
+	by     exact.Vec
+}
+
+// slide moves opening i, which must lie over none of the others where they are by then.
+func (s *slider) slide(i int) error {
+	o := s.edit.at(i)
+	k := at(s.walls, o.Wall)
+	if k < 0 {
 		return fault(KindOpening, o.ID, "names wall \""+o.Wall+"\", which is not in the plan")
 	}
-	if last := w.lastPlace(o); last >= 0 {
+	w := s.walls.at(k)
+	if last := w.lastPlace(*o); last >= 0 {
 		along := w.Line.At(o.Segment + 1).Sub(w.Line.At(o.Segment))
-		step := math.Round(float64(along.Dot(by)) / math.Sqrt(float64(along.Len2())))
+		step := math.Round(float64(along.Dot(s.by)) / math.Sqrt(float64(along.Len2())))
 		o.At = int32(min(max(0, int64(o.At)+int64(step)), int64(last)))
 	}
-	list := slices.Clone(d.new.obstacles.openings)
-	list[indexOf(list, o.ID)] = o
-	next, err := withOpenings(&d.new, list, o)
-	if err != nil {
-		return err
+	if _, text := w.Fit(*o); text != "" {
+		return fault(KindOpening, o.ID, text)
 	}
-	d.obstacles().openings = next.obstacles.openings
+	for _, j := range s.beside[o.Wall] {
+		if q := s.edit.list.at(j); j != i && q.Over(*o) {
+			return fault(KindOpening, o.ID, "would lie over opening "+q.ID)
+		}
+	}
 	return nil
 }
 

@@ -34,7 +34,7 @@ func (e DuplicateOpening) Apply(p *Plan) (*Plan, error) {
 
 // placesBeside returns the places right beside the openings of a piece, with a gap, the nearest first.
 func placesBeside(p *Plan, o Opening, gap int32) (places []int32) {
-	for _, q := range p.obstacles.openings {
+	for _, q := range p.obstacles.openings.refs() {
 		if q.Wall == o.Wall && q.Segment == o.Segment {
 			places = append(places, q.At+q.Width+gap, q.At-o.Width-gap)
 		}

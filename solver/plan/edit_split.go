@@ -2,7 +2,6 @@ package plan
 
 import (
 	"fmt"
-	"slices"
 
 	"enfilade/solver/exact"
 )
@@ -23,11 +22,11 @@ func (e SplitWall) Added(p *Plan) Ref { return freshRef(p, KindWall, "") }
 
 // Apply fails when the point does not lie on the piece, is an end of the wall, or an opening lies across it.
 func (e SplitWall) Apply(p *Plan) (*Plan, error) {
-	i := at(&p.obstacles.ids.walls, p.obstacles.walls, e.Wall)
+	i := at(&p.obstacles.walls, e.Wall)
 	if i < 0 {
 		return nil, missing(KindWall, e.Wall)
 	}
-	w := p.obstacles.walls[i]
+	w := *p.obstacles.walls.at(i)
 	pieces := w.Line.Len() - 1
 	if e.Segment < 0 || e.Segment >= pieces || !OnPiece(w.Line.At(e.Segment), w.Line.At(e.Segment+1), e.At) {
 		return nil, fault(KindWall, e.Wall, "does not run through the place; click on its line")
@@ -54,17 +53,16 @@ func (e SplitWall) Apply(p *Plan) (*Plan, error) {
 	}
 	d := draftOf(p)
 	o := d.obstacles()
-	o.walls = append(slices.Clone(o.walls), second)
-	o.walls[i] = first
+	o.walls = o.walls.put(i, first).with(second)
 	o.openings = openings
 	return d.plan(), nil
 }
 
 // openings hands the openings to the two walls.
-func (e SplitWall) openings(p *Plan, first, second *Wall, seg int, corner bool) ([]Opening, error) {
-	list := slices.Clone(p.obstacles.openings)
-	for i := range list {
-		o := &list[i]
+func (e SplitWall) openings(p *Plan, first, second *Wall, seg int, corner bool) (list[Opening], error) {
+	list := p.obstacles.openings
+	now := list.edit()
+	for i, o := range list.refs() {
 		if o.Wall != e.Wall || o.Segment < seg {
 			continue
 		}
@@ -75,18 +73,21 @@ func (e SplitWall) openings(p *Plan, first, second *Wall, seg int, corner bool) 
 				continue
 			}
 			if int64(o.At)*int64(o.At) < len2 {
-				return nil, errAcross(o)
+				return list, errAcross(o)
 			}
+			o = now.at(i)
 			o.Wall, o.Segment = second.ID, 0
 			o.shifted(second, -exact.Dist(near, e.At))
 			continue
 		}
+		o = now.at(i)
 		o.Wall, o.Segment = second.ID, o.Segment-seg
 	}
+	list = now.list
 	for _, w := range []*Wall{first, second} {
 		var err error
 		if list, err = fitted(list, w); err != nil {
-			return nil, err
+			return list, err
 		}
 	}
 	return list, nil
@@ -100,11 +101,11 @@ func (e CloseWall) Label() string { return "close wall" }
 
 // Apply fails when the wall is closed already, or has fewer than three corners.
 func (e CloseWall) Apply(p *Plan) (*Plan, error) {
-	i := at(&p.obstacles.ids.walls, p.obstacles.walls, e.Wall)
+	i := at(&p.obstacles.walls, e.Wall)
 	if i < 0 {
 		return nil, missing(KindWall, e.Wall)
 	}
-	w := p.obstacles.walls[i]
+	w := *p.obstacles.walls.at(i)
 	switch n := w.Line.Len(); {
 	case w.Line.Closed():
 		return nil, fault(KindWall, e.Wall, "is closed already")
@@ -113,8 +114,6 @@ func (e CloseWall) Apply(p *Plan) (*Plan, error) {
 	}
 	w.Line = Chain{append(w.Line.Points(), w.Line.At(0))}
 	d := draftOf(p)
-	walls := slices.Clone(p.obstacles.walls)
-	walls[i] = w
-	d.obstacles().walls = walls
+	d.obstacles().walls = p.obstacles.walls.put(i, w)
 	return d.plan(), nil
 }

@@ -43,31 +43,38 @@ func (r Ref) Number() int {
 func NextID(p *Plan, kind Kind) string {
 	switch kind {
 	case KindWall:
-		return nextID(kind, p.obstacles.walls)
+		return nextID(kind, &p.obstacles.walls)
 	case KindOpening:
-		return nextID(kind, p.obstacles.openings)
+		return nextID(kind, &p.obstacles.openings)
 	case KindBlock:
-		return nextID(kind, p.obstacles.blocks)
+		return nextID(kind, &p.obstacles.blocks)
 	case KindZone:
-		return nextID(kind, p.marks.zones)
+		return nextID(kind, &p.marks.zones)
 	case KindObserver:
-		return nextID(kind, p.marks.observers)
+		return nextID(kind, &p.marks.observers)
 	case KindTarget:
-		return nextID(kind, p.marks.targets)
+		return nextID(kind, &p.marks.targets)
 	case KindStart:
-		return nextID(kind, p.marks.starts)
+		return nextID(kind, &p.marks.starts)
 	case KindRoute:
-		return nextID(kind, p.marks.routes)
+		return nextID(kind, &p.marks.routes)
 	}
 	return ""
 }
 
-func nextID[T any, P identified[T]](kind Kind, list []T) string {
-	highest := 0
-	for i := range list {
-		highest = max(highest, Ref{kind, *P(&list[i]).id()}.Number())
+func nextID[T any, P identified[T]](kind Kind, l *list[T]) string {
+	if l.n == 0 {
+		return kind.Letter() + "1"
 	}
-	return kind.Letter() + strconv.Itoa(highest+1)
+	next := l.ids.next.Load()
+	if next == 0 {
+		for _, it := range l.refs() {
+			next = max(next, int64(Ref{kind, *P(it).id()}.Number()))
+		}
+		next++
+		l.ids.next.Store(next)
+	}
+	return kind.Letter() + strconv.FormatInt(next, 10)
 }
 
 // identified is a pointer to an item with an id.

@@ -30,19 +30,19 @@ func TestLookupAgainstWalking(t *testing.T) {
 				for k := range 200 {
 					id := fmt.Sprint("W", (k*7+g)%320)
 					got, ok := p.Wall(id)
-					i := indexOf(p.obstacles.walls, id)
-					if ok != (i >= 0) || ok && !got.Line.Equal(p.obstacles.walls[i].Line) {
+					i := indexFrom(&p.obstacles.walls, 0, id)
+					if ok != (i >= 0) || ok && !got.Line.Equal(p.obstacles.walls.at(i).Line) {
 						t.Errorf("wall %s: %v, %v; walking finds %d", id, got, ok, i)
 					}
 					id = fmt.Sprint("S", (k*5+g)%320)
-					if start, ok := p.Start(id); ok != (indexOf(p.marks.starts, id) >= 0) || ok && start.ID != id {
+					if start, ok := p.Start(id); ok != (indexFrom(&p.marks.starts, 0, id) >= 0) || ok && start.ID != id {
 						t.Errorf("start %s: %v, %v", id, start, ok)
 					}
 				}
 			}()
 		}
 		wait.Wait()
-		if p.obstacles.ids.walls.table.Load() != nil {
+		if p.obstacles.walls.ids.table.Load() != nil {
 			tables++
 		}
 		k := fmt.Sprint("W", r.IntN(290))

@@ -47,16 +47,16 @@ func outsiders(p *Plan) (out []Finding) {
 		out = append(out, Finding{Problem: Problem{Kind: ProblemOutside, Items: []Ref{{kind, id}}, At: c.pts[0],
 			Text: "lies outside the floor; move it inside, or draw the floor around it"}})
 	}
-	for _, w := range p.obstacles.walls {
+	for _, w := range p.obstacles.walls.refs() {
 		tell(KindWall, w.ID, w.Line)
 	}
-	for _, b := range p.obstacles.blocks {
+	for _, b := range p.obstacles.blocks.refs() {
 		tell(KindBlock, b.ID, b.Ring)
 	}
-	for _, z := range p.marks.zones {
+	for _, z := range p.marks.zones.refs() {
 		tell(KindZone, z.ID, z.Ring)
 	}
-	for _, r := range p.marks.routes {
+	for _, r := range p.marks.routes.refs() {
 		tell(KindRoute, r.ID, r.Via)
 	}
 	return out
@@ -134,7 +134,7 @@ func between(s, t *piece) exact.Pt {
 
 // double tells of two walls; the later one may be deleted when it is nothing but the other again.
 func (c *cells) double(first, second int32, at exact.Pt) Finding {
-	v, w := &c.plan.obstacles.walls[first], &c.plan.obstacles.walls[second]
+	v, w := c.plan.obstacles.walls.at(int(first)), c.plan.obstacles.walls.at(int(second))
 	f := Finding{Problem: Problem{Kind: ProblemDouble, Items: []Ref{{KindWall, w.ID}, {KindWall, v.ID}}, At: at,
 		Text: fmt.Sprintf("lies on wall %s for a part of its length; cut it back, or delete one of them", v.ID)}}
 	if !v.Line.Equal(w.Line) && !v.Line.Equal(w.backwards().Line) {

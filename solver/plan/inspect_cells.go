@@ -45,8 +45,8 @@ func (e entry) compare(f entry) int {
 
 func newCells(p *Plan) *cells {
 	c := &cells{plan: p, doored: map[string]bool{}}
-	for i := range p.obstacles.openings {
-		c.doored[p.obstacles.openings[i].Wall] = true
+	for _, o := range p.obstacles.openings.refs() {
+		c.doored[o.Wall] = true
 	}
 	total := 0.0
 	add := func(s piece) {
@@ -56,8 +56,7 @@ func newCells(p *Plan) *cells {
 		c.pieces = append(c.pieces, s)
 		total += exact.Dist(s.a, s.b) + s.right + s.left
 	}
-	for i := range p.obstacles.walls {
-		w := &p.obstacles.walls[i]
+	for i, w := range p.obstacles.walls.refs() {
 		right2, left2 := w.Sides2()
 		for k := range max(0, w.Line.Len()-1) {
 			add(piece{w.Line.At(k), w.Line.At(k + 1), int32(i), int32(k), Ref{KindWall, w.ID}, float64(right2) / 2, float64(left2) / 2})
@@ -68,8 +67,8 @@ func newCells(p *Plan) *cells {
 			add(piece{a: ring.At(k), b: ring.At((k + 1) % ring.Len()), wall: -1, ref: ref})
 		}
 	}
-	for i := range p.obstacles.blocks {
-		ring(Ref{KindBlock, p.obstacles.blocks[i].ID}, p.obstacles.blocks[i].Ring)
+	for _, b := range p.obstacles.blocks.refs() {
+		ring(Ref{KindBlock, b.ID}, b.Ring)
 	}
 	ring(Ref{Kind: KindFloor}, p.obstacles.floor)
 	// Cells as wide as pieces are long on the average: all pieces together then touch a few times their number of cells.

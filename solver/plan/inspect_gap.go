@@ -25,7 +25,7 @@ func (c *cells) gaps() (out []Finding) {
 		if s.wall < 0 {
 			continue
 		}
-		w := &c.plan.obstacles.walls[s.wall]
+		w := c.plan.obstacles.walls.at(int(s.wall))
 		if w.Line.Closed() {
 			continue
 		}
@@ -148,7 +148,7 @@ func closing(p *Plan, w *Wall, t *piece, inner, end exact.Pt, start bool) Edit {
 	at := footOn(t.a, t.b, end)
 	reach := float64(GapLimit) + max(t.right, t.left)
 	if t.wall >= 0 {
-		other := &p.obstacles.walls[t.wall]
+		other := p.obstacles.walls.at(int(t.wall))
 		first, last := ends(other)
 		for _, q := range [2]exact.Pt{first, last} {
 			if q != end && (q == t.a || q == t.b) && exact.Dist(q, end) <= float64(GapLimit) {

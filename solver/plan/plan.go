@@ -2,7 +2,6 @@ package plan
 
 import (
 	"iter"
-	"slices"
 
 	"enfilade/solver/exact"
 )
@@ -10,21 +9,19 @@ import (
 // Obstacles is everything that stops sight or walking, and the floor. Two plans with the same *Obstacles have the same mesh.
 type Obstacles struct {
 	floor    Chain
-	walls    []Wall
-	openings []Opening
-	blocks   []Block
-	ids      *obstacleIDs
+	walls    list[Wall]
+	openings list[Opening]
+	blocks   list[Block]
 }
 
 // Marks is everything put down on the floor that stops nothing: observers, targets, starts, routes, zones, and the walker.
 type Marks struct {
-	zones     []Zone
-	observers []Observer
-	targets   []Target
-	starts    []Start
-	routes    []Route
+	zones     list[Zone]
+	observers list[Observer]
+	targets   list[Target]
+	starts    list[Start]
+	routes    list[Route]
 	walker    Walker
-	ids       *markIDs
 }
 
 // Plan is one state of the drawing. It never changes.
@@ -56,21 +53,20 @@ func New() *Plan { return From(Parts{Walker: DefaultWalker(), Sheet: Sheet{Unit:
 func From(p Parts) *Plan {
 	sheet := p.Sheet
 	return &Plan{
-		obstacles: &Obstacles{p.Floor, slices.Clone(p.Walls), slices.Clone(p.Openings), slices.Clone(p.Blocks), new(obstacleIDs)},
-		marks: &Marks{slices.Clone(p.Zones), slices.Clone(p.Observers), slices.Clone(p.Targets),
-			slices.Clone(p.Starts), slices.Clone(p.Routes), p.Walker, new(markIDs)},
-		sheet: &sheet,
+		obstacles: &Obstacles{p.Floor, listOf(p.Walls), listOf(p.Openings), listOf(p.Blocks)},
+		marks:     &Marks{listOf(p.Zones), listOf(p.Observers), listOf(p.Targets), listOf(p.Starts), listOf(p.Routes), p.Walker},
+		sheet:     &sheet,
 	}
 }
 
 // Parts takes the plan apart; the lists are copies.
 func (p *Plan) Parts() Parts {
 	return Parts{
-		Floor: p.obstacles.floor, Walls: slices.Clone(p.obstacles.walls),
-		Openings: slices.Clone(p.obstacles.openings), Blocks: slices.Clone(p.obstacles.blocks),
-		Zones: slices.Clone(p.marks.zones), Observers: slices.Clone(p.marks.observers),
-		Targets: slices.Clone(p.marks.targets), Starts: slices.Clone(p.marks.starts),
-		Routes: slices.Clone(p.marks.routes), Walker: p.marks.walker, Sheet: *p.sheet,
+		Floor: p.obstacles.floor, Walls: p.obstacles.walls.slice(),
+		Openings: p.obstacles.openings.slice(), Blocks: p.obstacles.blocks.slice(),
+		Zones: p.marks.zones.slice(), Observers: p.marks.observers.slice(),
+		Targets: p.marks.targets.slice(), Starts: p.marks.starts.slice(),
+		Routes: p.marks.routes.slice(), Walker: p.marks.walker, Sheet: *p.sheet,
 	}
 }
 
@@ -84,28 +80,28 @@ func (p *Plan) Marks() *Marks { return p.marks }
 func (p *Plan) Floor() Chain { return p.obstacles.floor }
 
 // Walls yields the walls in the plan's order.
-func (p *Plan) Walls() iter.Seq2[int, Wall] { return slices.All(p.obstacles.walls) }
+func (p *Plan) Walls() iter.Seq2[int, Wall] { return p.obstacles.walls.all() }
 
 // Openings yields the openings in the plan's order.
-func (p *Plan) Openings() iter.Seq2[int, Opening] { return slices.All(p.obstacles.openings) }
+func (p *Plan) Openings() iter.Seq2[int, Opening] { return p.obstacles.openings.all() }
 
 // Blocks yields the blocks in the plan's order.
-func (p *Plan) Blocks() iter.Seq2[int, Block] { return slices.All(p.obstacles.blocks) }
+func (p *Plan) Blocks() iter.Seq2[int, Block] { return p.obstacles.blocks.all() }
 
 // Zones yields the zones in the plan's order.
-func (p *Plan) Zones() iter.Seq2[int, Zone] { return slices.All(p.marks.zones) }
+func (p *Plan) Zones() iter.Seq2[int, Zone] { return p.marks.zones.all() }
 
 // Observers yields the observers in the plan's order.
-func (p *Plan) Observers() iter.Seq2[int, Observer] { return slices.All(p.marks.observers) }
+func (p *Plan) Observers() iter.Seq2[int, Observer] { return p.marks.observers.all() }
 
 // Targets yields the targets in the plan's order.
-func (p *Plan) Targets() iter.Seq2[int, Target] { return slices.All(p.marks.targets) }
+func (p *Plan) Targets() iter.Seq2[int, Target] { return p.marks.targets.all() }
 
 // Starts yields the starts in the plan's order.
-func (p *Plan) Starts() iter.Seq2[int, Start] { return slices.All(p.marks.starts) }
+func (p *Plan) Starts() iter.Seq2[int, Start] { return p.marks.starts.all() }
 
 // Routes yields the routes in the plan's order.
-func (p *Plan) Routes() iter.Seq2[int, Route] { return slices.All(p.marks.routes) }
+func (p *Plan) Routes() iter.Seq2[int, Route] { return p.marks.routes.all() }
 
 // Walker returns the person who walks.
 func (p *Plan) Walker() Walker { return p.marks.walker }
@@ -114,32 +110,32 @@ func (p *Plan) Walker() Walker { return p.marks.walker }
 func (p *Plan) Sheet() Sheet { return *p.sheet }
 
 // Counts of the lists.
-func (p *Plan) NumWalls() int     { return len(p.obstacles.walls) }
-func (p *Plan) NumOpenings() int  { return len(p.obstacles.openings) }
-func (p *Plan) NumBlocks() int    { return len(p.obstacles.blocks) }
-func (p *Plan) NumObservers() int { return len(p.marks.observers) }
-func (p *Plan) NumTargets() int   { return len(p.marks.targets) }
-func (p *Plan) NumStarts() int    { return len(p.marks.starts) }
-func (p *Plan) NumRoutes() int    { return len(p.marks.routes) }
+func (p *Plan) NumWalls() int     { return p.obstacles.walls.n }
+func (p *Plan) NumOpenings() int  { return p.obstacles.openings.n }
+func (p *Plan) NumBlocks() int    { return p.obstacles.blocks.n }
+func (p *Plan) NumObservers() int { return p.marks.observers.n }
+func (p *Plan) NumTargets() int   { return p.marks.targets.n }
+func (p *Plan) NumStarts() int    { return p.marks.starts.n }
+func (p *Plan) NumRoutes() int    { return p.marks.routes.n }
 
 // Wall returns the wall with the given id.
 func (p *Plan) Wall(id string) (Wall, bool) {
-	return pickAt(&p.obstacles.ids.walls, p.obstacles.walls, id)
+	return pickAt(&p.obstacles.walls, id)
 }
 
 // Observer returns the observer with the given id.
 func (p *Plan) Observer(id string) (Observer, bool) {
-	return pickAt(&p.marks.ids.observers, p.marks.observers, id)
+	return pickAt(&p.marks.observers, id)
 }
 
 // Target returns the target with the given id.
 func (p *Plan) Target(id string) (Target, bool) {
-	return pickAt(&p.marks.ids.targets, p.marks.targets, id)
+	return pickAt(&p.marks.targets, id)
 }
 
 // Start returns the start with the given id.
 func (p *Plan) Start(id string) (Start, bool) {
-	return pickAt(&p.marks.ids.starts, p.marks.starts, id)
+	return pickAt(&p.marks.starts, id)
 }
 
 // Problem is one fault of the drawing: data, not an error.
