@@ -150,13 +150,13 @@ func (l *nameList) TypedKey(e *fyne.KeyEvent) {
 
 // pathEntry is the field for a file's path.
 type pathEntry struct {
-	widget.Entry
+	textEntry
 	enter, escape func()
 }
 
 func newPathEntry(enter func()) *pathEntry {
 	e := &pathEntry{enter: enter, escape: func() {}}
-	e.Wrapping, e.Scroll = fyne.TextWrapOff, fyne.ScrollHorizontalOnly
+	e.oneLine()
 	e.ExtendBaseWidget(e)
 	return e
 }

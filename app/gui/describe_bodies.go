@@ -105,10 +105,10 @@ func hinge(x plan.Opening) (i int) {
 
 // describeBlock is the form of a column, a plinth or another body.
 func (w *window) describeBlock(c *card, x plan.Block) {
-	c.title, c.icon = "Block", "block"
+	c.title, c.icon = "Block", "box"
 	c.where = fmt.Sprintf("%s m² of floor", number(ringArea(x.Ring), 2))
 	if x.Circle != nil {
-		c.title = "Column"
+		c.title, c.icon = "Column", "block"
 		c.fields = append(c.fields, w.lengthField("Radius", x.Circle.Radius, func(v int32) error {
 			return within(v, 1, plan.MaxRound, func() error {
 				x.Circle = &plan.Circle{At: x.Circle.At, Radius: v}

@@ -6,7 +6,6 @@ import (
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/container"
 	"fyne.io/fyne/v2/layout"
-	"fyne.io/fyne/v2/widget"
 
 	"enfilade/assets"
 	"enfilade/canvas/pick"
@@ -257,13 +256,13 @@ func (p *editPanel) count(i, most int) (int, error) {
 
 // panelEntry is an entry of a panel: what is typed is previewed at once, Enter and Escape are the panel's.
 type panelEntry struct {
-	widget.Entry
+	textEntry
 	key func(fyne.KeyName) bool
 }
 
 func newPanelEntry(key func(fyne.KeyName) bool) *panelEntry {
 	e := &panelEntry{key: key}
-	e.Wrapping, e.Scroll = fyne.TextWrapOff, fyne.ScrollHorizontalOnly
+	e.oneLine()
 	e.ExtendBaseWidget(e)
 	return e
 }

@@ -3,14 +3,13 @@ package gui
 import (
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/driver/desktop"
-	"fyne.io/fyne/v2/widget"
 )
 
 // entry is a field for one value: Enter and leaving it take the text over, Escape puts the old text back, and both give
 // the focus back, so that undo means the plan's again. A text that is
 // not taken stays, and its fault is told.
 type entry struct {
-	widget.Entry
+	textEntry
 	shown  string                   // the text last put in by the program
 	accept func(text string) error  // takes the text over
 	fault  func(err error)          // shows why it was not, or nil that all is well; may be nil
@@ -22,7 +21,7 @@ type entry struct {
 
 func newEntry(accept func(string) error) *entry {
 	e := &entry{accept: accept}
-	e.Wrapping, e.Scroll = fyne.TextWrapOff, fyne.ScrollHorizontalOnly
+	e.oneLine()
 	e.ExtendBaseWidget(e)
 	return e
 }
@@ -62,14 +61,14 @@ func (e *entry) say(err error) {
 // afterwards, which ends that choice.
 func (e *entry) FocusGained() {
 	e.inside = true
-	e.Entry.FocusGained()
+	e.textEntry.FocusGained()
 	e.Entry.TypedShortcut(&fyne.ShortcutSelectAll{})
 }
 
 // FocusLost takes the text over.
 func (e *entry) FocusLost() {
 	e.inside = false
-	e.Entry.FocusLost()
+	e.textEntry.FocusLost()
 	e.take()
 }
 

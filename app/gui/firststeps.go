@@ -60,6 +60,7 @@ func newFirstSteps() *firstSteps {
 		put(newText(s.one, assets.Regular, 12.5, roleInk2), 0, 280, false)
 		put(newText(s.two, assets.Regular, 12.5, roleInk2), 0, 298, false)
 	}
+	f.texts = append(f.texts, stepText{newText("2.40 m", assets.Semibold, 11.5, roleInk), 206, 151, false})
 	f.ExtendBaseWidget(f)
 	f.box = container.New(stepsLayout{}, f)
 	f.box.Hide()

@@ -5,6 +5,7 @@ import (
 	"testing"
 
 	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/driver/desktop"
 
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
@@ -37,7 +38,7 @@ func TestObserverForm(t *testing.T) {
 	if r.form.title.text != "Observer" || r.line("Name").entry.Text != "Rotunda attendant" || r.line("Eye height").entry.Text != "1.60" {
 		t.Fatalf("form of %q, %q, %q", r.form.title.text, r.line("Name").entry.Text, r.line("Eye height").entry.Text)
 	}
-	if !strings.HasPrefix(r.form.where.text, "at 11.35, 8.75 m") {
+	if r.form.where.text != "at 11.35, 8.75 m in Rotunda" { // not "in Public floor", the larger zone around it
 		t.Errorf("where %q", r.form.where.text)
 	}
 	r.settle()
@@ -254,5 +255,19 @@ func TestTableKeepsUp(t *testing.T) {
 	r.settle()
 	if len(r.table.rows) != 12 {
 		t.Errorf("%d rows after a target is deleted, want 12", len(r.table.rows))
+	}
+}
+
+// TestCursorUnderPointer: a click into a field puts the cursor where the text stands that is under the pointer.
+func TestCursorUnderPointer(t *testing.T) {
+	r := newGallery(t)
+	r.click(11.35, 8.75)
+	e := r.line("Name").entry
+	for n, text := range []string{"", "R", "Rotunda", "Rotunda att"} {
+		x := 10 + fyne.MeasureText(text, 12.5, fyne.TextStyle{}).Width
+		e.MouseDown(&desktop.MouseEvent{PointEvent: fyne.PointEvent{Position: fyne.NewPos(x+0.5, 13)}, Button: desktop.MouseButtonPrimary})
+		if e.CursorColumn != len(text) {
+			t.Errorf("%d: a click behind %q puts the cursor at %d", n, text, e.CursorColumn)
+		}
 	}
 }

@@ -10,7 +10,7 @@ import (
 // colour is a colour without its alpha multiplied in.
 type colour = color.NRGBA
 
-// tightLook is the window's look for forms and tables: no shadows.
+// tightLook is the window's look for forms and tables: no shadows, smaller text.
 type tightLook struct{ w *window }
 
 // Color is for the toolkit.
@@ -27,7 +27,10 @@ func (t tightLook) Font(s fyne.TextStyle) fyne.Resource { return t.w.look.Font(s
 // Icon is for the toolkit.
 func (t tightLook) Icon(n fyne.ThemeIconName) fyne.Resource { return t.w.look.Icon(n) }
 
-// Size is for the toolkit.
+// Size is for the toolkit; what is typed is as large as what stands beside it.
 func (t tightLook) Size(n fyne.ThemeSizeName) float32 {
+	if n == theme.SizeNameText {
+		return 12.5
+	}
 	return t.w.look.Size(n)
 }

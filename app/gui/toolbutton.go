@@ -134,7 +134,7 @@ func (r *toolButtonRenderer) Layout(s fyne.Size) {
 	}
 	r.b.icon.Move(fyne.NewPos(x, (s.Height-20)/2))
 	r.b.icon.Resize(fyne.NewSquareSize(20))
-	r.b.letter.Move(fyne.NewPos(29, (s.Height-l.Height)/2))
+	r.b.letter.Move(fyne.NewPos(33.5-l.Width/2, (s.Height-l.Height)/2)) // one below the other by their middles
 	r.b.letter.Resize(l)
 }
 
