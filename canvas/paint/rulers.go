@@ -105,7 +105,7 @@ func (p *pen) rulerFigures(u unit, s view.Steps) {
 			switch {
 			case axis == 0 && at+5*p.k+half < float64(p.W):
 				p.centred(t, at+5*p.k, base, look)
-			case axis == 1 && at-9*p.k+half < float64(p.H):
+			case axis == 1 && at-9*p.k+half < float64(p.H) && at-9*p.k-half > float64(p.Left):
 				p.centred(t, base, at-9*p.k, look)
 			}
 		})

@@ -8,7 +8,8 @@ import (
 )
 
 // slip is the line at the foot of the picture: a scale bar at the left and the plan's title at the right, each under the
-// plan's edge as long as that is in view, and never over each other.
+// plan's edge as long as that is in view and the plan fills half the picture, else at the picture's sides: under a plan that
+// is just being begun they would wander with every wall. They never lie over each other.
 type slip struct {
 	unit       unit
 	bar        box
@@ -37,7 +38,10 @@ func (p *pen) setSlip() slip {
 	left, right := float64(p.Left)+slipMargin*p.k, float64(p.W)-slipMargin*p.k
 	x0, x1 := left, right
 	if b := p.within; b.Max[0] >= b.Min[0] {
-		x0, x1 = max(p.mm(b.Min).x, left), min(p.mm(b.Max).x, right)
+		from, to := max(p.mm(b.Min).x, left), min(p.mm(b.Max).x, right)
+		if to-from >= (right-left)/2 {
+			x0, x1 = from, to
+		}
 	}
 	wide := s.units * perUnit * p.k
 	x0 = math.Round(max(min(x0, float64(p.W)/2-wide), left))
