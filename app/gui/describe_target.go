@@ -6,6 +6,7 @@ import (
 	"math"
 	"strings"
 
+	"enfilade/canvas/pick"
 	"enfilade/canvas/tool"
 	"enfilade/solver/exact"
 	"enfilade/solver/plan"
@@ -27,6 +28,7 @@ func (w *window) describeTarget(c *card, p *plan.Plan, t plan.Target) {
 	})}
 	c.fields = append(c.fields, w.describeFace(t, put)...)
 	c.fields = append(c.fields, w.describeLimits(t, put)...)
+	c.actions = w.turnActions(p, t)
 	c.fault = problemOf(w.results.result, plan.Ref{Kind: plan.KindTarget, ID: t.ID})
 	if s, ok := w.results.seenFrom(t.ID); ok {
 		if s.Problem != "" {
@@ -35,6 +37,24 @@ func (w *window) describeTarget(c *card, p *plan.Plan, t plan.Target) {
 		}
 		c.facts = []fact{{number(s.Area, 1), "m² see " + askedShort(s.Asked)}, {w.seenBy(p, t.ID), "see it now"}}
 	}
+}
+
+// turnActions offers to hang a target on the other face of its wall, or to turn a free one round; J does the same.
+func (w *window) turnActions(p *plan.Plan, t plan.Target) []choice {
+	heading, faces := facing(t)
+	if !faces || t.Locked {
+		return nil
+	}
+	text := "Turn round (J)"
+	if _, hangs := pick.Hanging(p, pick.TargetAt(t), heading); hangs {
+		text = "To the wall's other face (J)"
+	}
+	ref := plan.Ref{Kind: plan.KindTarget, ID: t.ID}
+	return []choice{{text, func() {
+		if e := tool.TurnRound(w.session.Committed(), ref); e != nil {
+			w.try(e)
+		}
+	}}}
 }
 
 // describeFace is what the form offers of where a target looks to: the side a point is seen from, or a face with its ends.

@@ -1,6 +1,7 @@
 package gui
 
 import (
+	"slices"
 	"strconv"
 
 	"fyne.io/fyne/v2"
@@ -27,6 +28,8 @@ type form struct {
 	reach  *reachTable
 	legs   *legTable
 	fault  *inkText
+
+	offered []choice // the buttons
 }
 
 // formRow is one field of the form on the window.
@@ -62,7 +65,7 @@ func newForm(w *window) *form {
 // update shows the selection: a new form for another item, new texts in the same form for the same one.
 func (f *form) update(p *plan.Plan, sel []plan.Ref) {
 	c := f.w.describe(p, sel)
-	if c.key != f.key || len(c.facts) != len(f.facts) || !f.reach.fits(c.reach) || !f.legs.fits(c.legs) || !f.fits(c.fields) {
+	if c.key != f.key || len(c.facts) != len(f.facts) || !f.reach.fits(c.reach) || !f.legs.fits(c.legs) || !f.fits(c.fields) || !f.offers(c.actions) {
 		f.build(c)
 	}
 	f.put(c)
@@ -79,6 +82,11 @@ func (f *form) fits(fields []field) bool {
 		}
 	}
 	return true
+}
+
+// offers reports whether the form has the buttons for some actions.
+func (f *form) offers(actions []choice) bool {
+	return slices.EqualFunc(f.offered, actions, func(a, b choice) bool { return a.text == b.text })
 }
 
 // build makes the form's widgets.
@@ -130,6 +138,7 @@ func (f *form) build(c card) {
 
 // actions adds buttons, two in a row.
 func (f *form) actions(list []choice) {
+	f.offered = list
 	for i := 0; i < len(list); i += 2 {
 		row := container.NewHBox()
 		for _, a := range list[i:min(i+2, len(list))] {

@@ -27,7 +27,7 @@ func keyGroups() []keyGroup {
 			{"double click, Esc", "end the run; the first corner closes it"},
 			{"Shift", "eight directions, squares; a plain gap"},
 			{"Ctrl", "nothing snaps; the Snap menu switches each kind"},
-			{"J", "the other side: of a wall's body, a door, a free face"},
+			{"J", "the other side: of a wall's body, a door, a target's wall"},
 			{"H", "walls: thin or thick; doors: hinges at the other jamb"},
 			{"K, U", "doors: the leaf; open or shut"},
 		}},
@@ -38,7 +38,7 @@ func keyGroups() []keyGroup {
 			{"Ctrl+A, Ctrl+Shift+A", "all, or all of the same kind"},
 			{"arrows", "nudge by 0.1 m, with Shift 1 m, with Ctrl 1 cm"},
 			{"H, J, K, U", "selected doors: hinges, side, leaf, open or shut"},
-			{"J", "selected walls: body centred, left, right"},
+			{"J", "selected walls: body centred, left, right; targets: other face"},
 			{"Shift while turning", "steps of 15°"},
 		}},
 		{"Changing", [][2]string{

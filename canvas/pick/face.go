@@ -14,7 +14,75 @@ type Face struct {
 	Normal float64 // degrees, away from the wall
 	Ref    plan.Ref
 	Ends   [2]exact.Pt // of the face, on its free side, which is to the left of the way from the first to the second
+	Middle bool        // the pointer is in the middle between this face and the one behind it, which could be meant as well
+
+	edge   edge // that it belongs to
+	behind edge // that the face behind it belongs to; of a wall only
 }
+
+// edge is a face as its finder knows it: it lies off grid units to the left of the way from a to b.
+type edge struct {
+	a, b exact.Pt
+	off  float64
+}
+
+// Other returns the face on the other side of a wall for the pixel place (x, y), in steps along it. ok is false of a block's
+// face and of the floor's.
+func (f Face) Other(cam view.Camera, x, y float64, step int32) (other Face, ok bool) {
+	return f.across(pointer(cam, x, y), step)
+}
+
+// Across returns the face on the other side of a wall, at the place over against q. ok is false of a block's face and of the
+// floor's.
+func (f Face) Across(q exact.Pt) (other Face, ok bool) { return f.across(spotOf(q), 1) }
+
+func (f Face) across(s spot, step int32) (Face, bool) {
+	if f.behind.a == f.behind.b {
+		return Face{}, false
+	}
+	g := faceFinder{s: s, step: step, best: math.Inf(1)}
+	g.side(f.behind, f.Ref)
+	g.face.behind, g.face.Middle = f.edge, f.Middle
+	return g.face, g.ok
+}
+
+// hangs is how far off a wall's face a thing is that hangs on it, at most, in grid units: 20 mm; and hangsTurned how far from
+// the face's normal it looks, in degrees.
+const hangs, hangsTurned = 20 * exact.PerMM, 0.5
+
+// Hanging returns the face of a wall on which a thing at a place hangs that looks to a direction in degrees; ok is false when
+// it hangs on none.
+func Hanging(p *plan.Plan, at exact.Pt, normal float64) (face Face, ok bool) {
+	f := faceFinder{s: spotOf(at), step: 1, best: hangs}
+	for _, w := range p.Walls() {
+		right2, left2 := w.Sides2()
+		if f.s.apart(w.Line, hangs+float64(max(right2, left2))/2) {
+			continue
+		}
+		edges(w.Line, false, func(_ int, a, b exact.Pt) bool {
+			left, right := edge{a, b, float64(left2) / 2}, edge{b, a, float64(right2) / 2}
+			for _, e := range [2][2]edge{{left, right}, {right, left}} {
+				turned := math.Remainder(e[0].normal()-normal, 360)
+				if math.Abs(turned) <= hangsTurned && f.side(e[0], plan.Ref{Kind: plan.KindWall, ID: w.ID}) {
+					f.face.behind = e[1]
+				}
+			}
+			return true
+		})
+	}
+	return f.face, f.ok
+}
+
+// normal is the direction a face looks to, in degrees.
+func (e edge) normal() float64 {
+	return math.Atan2(float64(e.b.X)-float64(e.a.X), float64(e.a.Y)-float64(e.b.Y)) * 180 / math.Pi
+}
+
+// Same reports whether both are places on the same face.
+func (f Face) Same(g Face) bool { return f.Ref == g.Ref && f.edge == g.edge }
+
+// middleReach is how near the pointer is to the middle of a wall to be in it, in px at 100 %: the pixel right on it.
+const middleReach = 0.5
 
 // faceReach is how near the pointer must come to a face to stick to it, in px at 100 %.
 const faceReach = 16
@@ -24,19 +92,18 @@ const faceReach = 16
 const standOff = 1.5
 
 // FaceAt returns the nearest face of a wall, a block or the floor's inside within reach of the pixel place (x, y), and the
-// grid point on its free side. On a level or upright face of whole grid units the point lies on the face itself; along it
+// grid point on its free side; in the middle of a wall the face that looks up, or of an upright wall to the left. On a level or upright face of whole grid units the point lies on the face itself; along it
 // the point takes steps. Screens and glazing have faces too; openings are not looked at.
 func FaceAt(p *plan.Plan, cam view.Camera, x, y float64, step int32) (Face, bool) {
 	s := pointer(cam, x, y)
-	f := faceFinder{s: s, step: step, best: units(cam, faceReach)}
+	f := faceFinder{s: s, step: step, best: units(cam, faceReach), middle: units(cam, middleReach)}
 	for _, w := range p.Walls() {
 		right2, left2 := w.Sides2()
 		if w.Hidden || s.apart(w.Line, f.best+float64(max(right2, left2))/2) {
 			continue
 		}
 		edges(w.Line, false, func(_ int, a, b exact.Pt) bool {
-			f.side(a, b, float64(left2)/2, plan.Ref{Kind: plan.KindWall, ID: w.ID})
-			f.side(b, a, float64(right2)/2, plan.Ref{Kind: plan.KindWall, ID: w.ID})
+			f.wall(edge{a, b, float64(left2) / 2}, edge{b, a, float64(right2) / 2}, plan.Ref{Kind: plan.KindWall, ID: w.ID})
 			return true
 		})
 	}
@@ -52,43 +119,62 @@ func FaceAt(p *plan.Plan, cam view.Camera, x, y float64, step int32) (Face, bool
 }
 
 type faceFinder struct {
-	s    spot
-	step int32
-	best float64
-	face Face
-	ok   bool
+	s      spot
+	step   int32
+	best   float64
+	middle float64 // how near the middle of a wall is in it
+	face   Face
+	ok     bool
 }
 
 // ring offers the edges of a ring, with the free side to their left when left says so.
 func (f *faceFinder) ring(c plan.Chain, left bool, ref plan.Ref) {
 	edges(c, true, func(_ int, a, b exact.Pt) bool {
 		if left {
-			f.side(a, b, 0, ref)
+			f.side(edge{a, b, 0}, ref)
 		} else {
-			f.side(b, a, 0, ref)
+			f.side(edge{b, a, 0}, ref)
 		}
 		return true
 	})
 }
 
-// side offers the face that lies off units to the left of ab; its free side is the left one.
-func (f *faceFinder) side(a, b exact.Pt, off float64, ref plan.Ref) {
+// wall offers the face of a piece of wall that is on the pointer's side of its middle; within the wall it is the nearer one.
+func (f *faceFinder) wall(left, right edge, ref plan.Ref) {
+	beyond := f.s.aside(left.a, left.b) - (left.off-right.off)/2
+	near, behind := left, right
+	middle := math.Abs(beyond) <= f.middle
+	if beyond < 0 && !middle || middle && !looksUp(left) {
+		near, behind = right, left
+	}
+	if f.side(near, ref) {
+		f.face.behind, f.face.Middle = behind, middle
+	}
+}
+
+// looksUp reports whether a face looks up, or straight to the left.
+func looksUp(e edge) bool {
+	if e.a.X == e.b.X {
+		return e.b.Y > e.a.Y
+	}
+	return e.b.X > e.a.X
+}
+
+// side offers a face and reports whether it is the nearest so far; its free side is the left one.
+func (f *faceFinder) side(e edge, ref plan.Ref) bool {
+	a, b, off := e.a, e.b, e.off
 	dx, dy := float64(b.X)-float64(a.X), float64(b.Y)-float64(a.Y)
 	l := math.Hypot(dx, dy)
 	if l == 0 {
-		return
+		return false
 	}
 	nx, ny := -dy/l, dx/l
 	// The foot is sought from the pointer brought back to the line, so it is the foot on the face too.
 	foot, _ := spot{f.s.x - nx*off, f.s.y - ny*off}.foot(a, b)
 	on := spot{foot.x + nx*off, foot.y + ny*off}
-	// On a tie between the two faces of a line the one on the pointer's side is meant.
 	d := f.s.dist(on)
-	if behind := f.s.aside(a, b) < off; behind && off == 0 {
-		d = math.Nextafter(d, math.Inf(1))
-	}
 	if d > f.best {
-		return
+		return false
 	}
 	f.best, f.ok = d, true
 	end := func(q exact.Pt) exact.Pt {
@@ -97,7 +183,9 @@ func (f *faceFinder) side(a, b exact.Pt, off float64, ref plan.Ref) {
 		}
 		return spot{float64(q.X) + nx*(off+standOff), float64(q.Y) + ny*(off+standOff)}.grid()
 	}
-	f.face = Face{At: f.free(on, a, b, nx, ny, off), Normal: math.Atan2(ny, nx) * 180 / math.Pi, Ref: ref, Ends: [2]exact.Pt{end(a), end(b)}}
+	f.face = Face{At: f.free(on, a, b, nx, ny, off), Normal: math.Atan2(ny, nx) * 180 / math.Pi, Ref: ref, Ends: [2]exact.Pt{end(a), end(b)},
+		edge: e}
+	return true
 }
 
 // free returns the grid point for a place on a face.

@@ -124,7 +124,7 @@ func targetEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 	if !ok {
 		return nil, nil
 	}
-	to, snap := targetPlace(h, e)
+	to, snap := (&Mark{Kind: plan.KindTarget}).facePlace(h, e)
 	g.to = to.at
 	if to.at == pick.TargetAt(p) {
 		return nil, snap
@@ -143,7 +143,7 @@ func startEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 	if !ok {
 		return nil, nil
 	}
-	to, snap := startPlace(h, e)
+	to, snap := (&Mark{Kind: plan.KindStart}).startPlace(h, e)
 	if to.facing == nil {
 		to.facing = p.Facing
 	}

@@ -16,7 +16,9 @@ type Mark struct {
 	edit  plan.Edit
 	place placed
 	press press
-	turn  bool // J: a free target's face looks the other way
+	last  Pointer
+	turn  bool       // J: a free target's face looks the other way
+	side  *pick.Face // J: the face to hang on while it or the one behind it is near
 	label string
 	snap  *pick.Snap
 	fault string
@@ -31,7 +33,7 @@ type placed struct {
 
 // Move carries the mark along, or turns or draws it out.
 func (t *Mark) Move(h Host, e Pointer) {
-	t.label = ""
+	t.label, t.last = "", e
 	if t.press.move(h, e) {
 		t.drag(h, e)
 	} else if !t.press.down {
@@ -57,7 +59,7 @@ func (t *Mark) Up(h Host, e Pointer) {
 	}
 	t.Move(h, e)
 	edit := t.edit
-	t.edit, t.press, t.label = nil, press{}, ""
+	t.edit, t.press, t.label, t.side = nil, press{}, "", nil
 	t.fault = doAdd(h, edit)
 }
 
@@ -65,9 +67,9 @@ func (t *Mark) Up(h Host, e Pointer) {
 func (t *Mark) find(h Host, e Pointer) (placed, *pick.Snap) {
 	switch t.Kind {
 	case plan.KindTarget:
-		return targetPlace(h, e)
+		return t.facePlace(h, e)
 	case plan.KindStart:
-		return startPlace(h, e)
+		return t.startPlace(h, e)
 	}
 	snap := h.Snapper().At(plan.New(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl})
 	return placed{at: snap.At}, &snap
@@ -143,21 +145,56 @@ func (t *Mark) faceTo(h Host, e Pointer) ([2]exact.Pt, *pick.Snap) {
 	return [2]exact.Pt{t.place.at, snap.At}, &snap
 }
 
-// targetPlace returns where a target goes: on the free side of a near face, else on the grid.
-func targetPlace(h Host, e Pointer) (placed, *pick.Snap) {
+// facePlace returns where a target or a start goes: on the free side of a near face, else on the grid.
+func (t *Mark) facePlace(h Host, e Pointer) (placed, *pick.Snap) {
 	if f, ok := pick.FaceAt(h.Plan(), h.Camera(), e.X, e.Y, gridStep(h, e)); ok && !e.Ctrl {
+		f = t.asked(h, e, f)
 		return placed{f.At, &f.Normal, &f}, &pick.Snap{At: f.At, Kind: pick.SnapAlong, Ref: f.Ref, Edge: f.Ends}
 	}
+	t.side = nil
 	snap := h.Snapper().At(plan.New(), h.Camera(), e.X, e.Y, pick.SnapTo{Free: e.Ctrl})
 	return placed{at: snap.At}, &snap
 }
 
+// asked returns the face that J asked for when it is near or the one behind it, else near.
+func (t *Mark) asked(h Host, e Pointer, near pick.Face) pick.Face {
+	if t.side == nil || near.Same(*t.side) {
+		return near
+	}
+	if other, ok := near.Other(h.Camera(), e.X, e.Y, gridStep(h, e)); ok && other.Same(*t.side) {
+		return other
+	}
+	t.side = nil
+	return near
+}
+
+// flip hangs the mark on the other face of its wall, or turns the front of a free target's face round.
+func (t *Mark) flip(h Host) bool {
+	f := t.place.face
+	switch {
+	case t.press.down && (f != nil || t.Kind != plan.KindTarget), t.Kind == plan.KindObserver, f == nil && t.Kind != plan.KindTarget:
+		return false
+	case f == nil:
+		t.turn = !t.turn
+	default:
+		other, ok := f.Other(h.Camera(), t.last.X, t.last.Y, gridStep(h, t.last))
+		if !ok {
+			return false
+		}
+		t.side = &other
+	}
+	if t.edit != nil {
+		t.Move(h, t.last)
+	}
+	return true
+}
+
 // startPlace returns where a start goes: on the threshold of a near opening, else on a near face, else on the grid.
-func startPlace(h Host, e Pointer) (placed, *pick.Snap) {
+func (t *Mark) startPlace(h Host, e Pointer) (placed, *pick.Snap) {
 	if d, ok := pick.DoorAt(h.Plan(), h.Camera(), e.X, e.Y); ok && !e.Ctrl {
 		return placed{at: d.At, facing: &d.Facing}, &pick.Snap{At: d.At, Kind: pick.SnapAlong, Ref: d.Ref, Edge: alongNormal(d.At, d.Facing)}
 	}
-	return targetPlace(h, e)
+	return t.facePlace(h, e)
 }
 
 // alongNormal returns a short piece of the line through p that has the given normal, for the snap mark's direction.
@@ -166,11 +203,10 @@ func alongNormal(p exact.Pt, normal float64) [2]exact.Pt {
 	return [2]exact.Pt{p.Add(v.Neg()), p.Add(v)}
 }
 
-// Key turns a free target's face round, and lets go of a pressed mark.
+// Key takes the other face of the wall or turns a free target's face round, and lets go of a pressed mark.
 func (t *Mark) Key(h Host, k Key) bool {
 	switch {
-	case k.Name == KeyRune && (k.Rune == 'j' || k.Rune == 'J') && t.Kind == plan.KindTarget:
-		t.turn = !t.turn
+	case k.Name == KeyRune && (k.Rune == 'j' || k.Rune == 'J') && t.flip(h):
 		return true
 	case k.Name == KeyEscape && t.press.down:
 		t.Stop(h)
@@ -208,6 +244,8 @@ func (t *Mark) Hint(Host) string {
 		return "release at the face's other end"
 	case t.press.moved:
 		return "release when it looks the right way, Shift for steps of 15°"
+	case t.edit != nil && t.place.face != nil:
+		return t.hangs()
 	case t.Kind == plan.KindTarget:
 		return "click to put a target here, drag for a face; near a wall it hangs on it"
 	case t.Kind == plan.KindStart:

@@ -75,7 +75,7 @@ func stepsOf(label string, all []plan.Edit) plan.Edit {
 }
 
 // turnedOver returns the edit of a key that changes how the selected openings hang, or on which side of its line the body of
-// the selected walls lies; nil when the key is none, or the selection holds neither.
+// the selected walls lies, or which way the selected targets look; nil when the key is none, or the selection holds no such item.
 func turnedOver(p *plan.Plan, sel []plan.Ref, r rune) plan.Edit {
 	label, ok := hang(&plan.Opening{Leaf: plan.SolidLeaf}, r)
 	if !ok {
@@ -96,11 +96,16 @@ func turnedOver(p *plan.Plan, sel []plan.Ref, r rune) plan.Edit {
 		return nil
 	}
 	var all []plan.Edit
+	text := "move body of wall"
 	for _, q := range sel {
+		if e := TurnRound(p, q); e != nil {
+			all = append(all, e)
+			text = e.Label()
+		}
 		if w, ok := p.Wall(q.ID); ok && q.Kind == plan.KindWall && !w.Locked {
 			w.Justify = (w.Justify + 1) % 3
 			all = append(all, plan.SetWall{Wall: w})
 		}
 	}
-	return stepsOf("move body of wall", all)
+	return stepsOf(text, all)
 }

@@ -288,6 +288,8 @@ func selectionHint(sel []plan.Ref) string {
 		return "arrows nudge along the wall, Delete takes away · leaf (K), open or shut (U), hinges (H), side (J)"
 	case plan.KindWall:
 		return "arrows nudge, Delete takes away · J: body centred, left, right"
+	case plan.KindTarget:
+		return "arrows nudge, Delete takes away · J: to the wall's other face, or turned round"
 	}
 	return "arrows nudge, Delete takes away"
 }
