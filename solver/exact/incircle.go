@@ -1,37 +1,37 @@
 package exact
 
-import "math"
-
-// inCircleBound times the permanent of the in-circle determinant bounds the rounding error of its float64 evaluation when
-// the coordinate differences are exact, as they are here: (10 + 96 u) u with u = 2^-53.
-// Source: Shewchuk, "Adaptive precision floating-point arithmetic and fast robust geometric predicates", DCG 18, 1997,
-// section 4.2, bound A of the in-circle test.
-const inCircleBound = (10 + 96*0x1p-53) * 0x1p-53
+import "math/bits"
 
 // InCircle returns +1 when d lies inside the circle through the counter-clockwise triangle a, b, c, 0 on it, -1 outside.
-// A float64 filter decides nearly always; where it cannot, 128-bit integers do (differences below 2^30, so the lifted
-// coordinates and the cross products stay below 2^61 and the determinant below 2^124).
+//
+// Seen from c and from d, the edge ab spans two angles, and they make more than half a turn together when d is inside. With
+// cross and dot products in place of sines and cosines, the sine of their sum is, but for its sign, the in-circle determinant
+// itself: an identity that holds for any four points. It takes two wide products where the determinant has three. The
+// products stay below 2^122, as cross and dot products stay below 2^61.
 func InCircle(a, b, c, d Pt) int {
-	ax, ay := float64(a.X-d.X), float64(a.Y-d.Y)
-	bx, by := float64(b.X-d.X), float64(b.Y-d.Y)
-	cx, cy := float64(c.X-d.X), float64(c.Y-d.Y)
-	bc1, bc2 := bx*cy, by*cx
-	ca1, ca2 := cx*ay, cy*ax
-	ab1, ab2 := ax*by, ay*bx
-	al, bl, cl := ax*ax+ay*ay, bx*bx+by*by, cx*cx+cy*cy
-	det := al*(bc1-bc2) + bl*(ca1-ca2) + cl*(ab1-ab2)
-	bound := inCircleBound * (al*(math.Abs(bc1)+math.Abs(bc2)) + bl*(math.Abs(ca1)+math.Abs(ca2)) + cl*(math.Abs(ab1)+math.Abs(ab2)))
-	switch {
-	case det > bound:
-		return 1
-	case -det > bound:
-		return -1
-	}
-	return inCircleExact(a, b, c, d)
+	ca, cb, da, db := a.Sub(c), b.Sub(c), a.Sub(d), b.Sub(d)
+	return Mul(ca.Cross(cb), da.Dot(db)).Add(Mul(db.Cross(da), ca.Dot(cb))).Neg().Sign()
 }
 
-func inCircleExact(a, b, c, d Pt) int {
-	u, v, w := a.Sub(d), b.Sub(d), c.Sub(d)
-	sum := Mul(u.Len2(), v.Cross(w)).Add(Mul(v.Len2(), w.Cross(u))).Add(Mul(w.Len2(), u.Cross(v)))
-	return sum.Sign()
+// Inside reports whether d lies inside (+1), on (0) or outside (-1) the circle through a, b and c, where the edge from a to b
+// has c strictly to its left and d strictly to its right: InCircle, some steps shorter.
+func Inside(a, b, c, d Pt) int {
+	ca, cb, da, db := a.Sub(c), b.Sub(c), a.Sub(d), b.Sub(d)
+	hi1, lo1 := mulPositive(ca.Cross(cb), da.Dot(db))
+	hi2, lo2 := mulPositive(db.Cross(da), ca.Dot(cb))
+	lo, carry := bits.Add64(lo1, lo2, 0)
+	hi := int64(hi1 + hi2 + carry)
+	switch {
+	case hi < 0:
+		return 1
+	case uint64(hi)|lo != 0:
+		return -1
+	}
+	return 0
+}
+
+// mulPositive returns the two halves of p times v, in two's complement, for p > 0.
+func mulPositive(p, v int64) (hi, lo uint64) {
+	hi, lo = bits.Mul64(uint64(p), uint64(v))
+	return hi - uint64(p&(v>>63)), lo // a negative v, taken for v + 2^64, makes 2^64 p too much
 }

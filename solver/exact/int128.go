@@ -12,14 +12,7 @@ type Int128 struct {
 func Mul(a, b int64) Int128 {
 	hi, lo := bits.Mul64(uint64(a), uint64(b))
 	// bits.Mul64 multiplies unsigned; each negative factor adds 2^64 times the other one too much.
-	h := int64(hi)
-	if a < 0 {
-		h -= b
-	}
-	if b < 0 {
-		h -= a
-	}
-	return Int128{h, lo}
+	return Int128{int64(hi) - a>>63&b - b>>63&a, lo}
 }
 
 // Add returns a + b. The caller keeps the sum below 2^127.
@@ -33,6 +26,9 @@ func (a Int128) Sub(b Int128) Int128 {
 	lo, borrow := bits.Sub64(a.Lo, b.Lo, 0)
 	return Int128{a.Hi - b.Hi - int64(borrow), lo}
 }
+
+// Neg returns -a.
+func (a Int128) Neg() Int128 { return Int128{}.Sub(a) }
 
 // Sign returns -1, 0 or +1.
 func (a Int128) Sign() int {

@@ -102,6 +102,10 @@ func (d *Editor) star(v int32) ([]Edge, error) {
 func (d *Editor) join(v int32, star []Edge) {
 	tr := d.tr
 	n := len(star)
+	far := func(i int) exact.Pt { return tr.Pts[tr.tris[star[i].Tri()].v[star[i].Next().Corner()]] }
+	if n == 4 && exact.Area2(far(0), far(2), tr.Pts[v]) != 0 {
+		star = append(star[1:], star[0])
+	}
 	ring, out, con := make([]int32, n), make([]Edge, n), make([]int32, n)
 	for i, e := range star {
 		r := &tr.tris[e.Tri()]
@@ -116,7 +120,8 @@ func (d *Editor) join(v int32, star []Edge) {
 		tr.set(t, rawTri{[3]int32{ring[0], ring[1], ring[2]}, [3]Edge{out[0], out[1], out[2]}, [3]int32{con[0], con[1], con[2]}})
 		d.kill(star[1:], t)
 	} else {
-		// Four edges of which none can be flipped meet at right of way: v lies on both diagonals.
+		// Of four edges none can be flipped only when v lies between two of the far ends. These are joined: where the ring has
+		// an inward corner, it is one of them.
 		u := star[2].Tri()
 		tr.set(t, rawTri{[3]int32{ring[0], ring[1], ring[2]}, [3]Edge{out[0], out[1], EdgeOf(u, 2)}, [3]int32{con[0], con[1], -1}})
 		tr.set(u, rawTri{[3]int32{ring[2], ring[3], ring[0]}, [3]Edge{out[2], out[3], EdgeOf(t, 2)}, [3]int32{con[2], con[3], -1}})
@@ -161,19 +166,18 @@ func (d *Editor) Add(p exact.Pt) (int32, error) {
 	}
 	v := int32(len(tr.Pts))
 	tr.Pts, tr.out = append(tr.Pts, p), append(tr.out, None)
-	mark := len(tr.log)
-	if on < 0 {
-		tr.splitTri(t, v)
-	} else {
-		tr.splitEdge(EdgeOf(t, on), v)
-	}
-	tr.legalise()
-	for _, t := range tr.log[mark:] {
-		for i, w := range tr.tris[t].v {
-			tr.out[w] = EdgeOf(t, i)
+	u, w := tr.fresh(), tr.fresh()
+	tr.put(v, t, on, u, w)
+	// What changed is what lies around the new point.
+	for first, e := EdgeOf(u, 2), EdgeOf(u, 2); ; {
+		tr.log = append(tr.log, e.Tri())
+		for i, w := range tr.tris[e.Tri()].v {
+			tr.out[w] = EdgeOf(e.Tri(), i)
+		}
+		if e = tr.tris[e.Tri()].n[e.Prev().Corner()]; e == first {
+			return v, nil
 		}
 	}
-	return v, nil
 }
 
 // alive returns t, or a triangle that took its place.

@@ -3,7 +3,6 @@ package mesh
 import (
 	"context"
 	"errors"
-	"fmt"
 
 	"enfilade/solver/exact"
 	"enfilade/solver/pulse"
@@ -50,7 +49,7 @@ type Triangulation struct {
 	tris  []rawTri
 	box   int32      // index of the first corner of the box
 	out   []Edge     // some half-edge leaving each point
-	todo  []Edge     // stack of edges to examine
+	todo  []int32    // stack of triangles around a new point to examine
 	work  [][2]int32 // edges to examine, by their ends
 	free  []int32    // triangles taken out, to be used again
 	log   []int32    // triangles changed since the last call of Edit
@@ -110,35 +109,6 @@ func boxed(pts []exact.Pt) []exact.Pt {
 	all := make([]exact.Pt, len(pts), len(pts)+4)
 	copy(all, pts)
 	return append(all, lo, exact.Pt{X: hi.X, Y: lo.Y}, hi, exact.Pt{X: lo.X, Y: hi.Y})
-}
-
-// insertAll starts from the box, whose corners along names last, and inserts the other points.
-func (tr *Triangulation) insertAll(ctx context.Context, along []int32) error {
-	n := len(along) - 4
-	a, b, c, d := along[n], along[n+1], along[n+2], along[n+3]
-	tr.tris = make([]rawTri, 0, 2*n+2)
-	free := [3]int32{-1, -1, -1}
-	tr.tris = append(tr.tris,
-		rawTri{[3]int32{a, b, c}, [3]Edge{None, None, EdgeOf(1, 0)}, free},
-		rawTri{[3]int32{a, c, d}, [3]Edge{EdgeOf(0, 2), None, None}, free})
-	last := int32(0)
-	for i, p := range insertionOrder(tr.Pts, along[n:]) {
-		if err := pulse.Step(ctx, i, n); err != nil {
-			return err
-		}
-		t, on, ok := tr.walk(last, tr.Pts[p])
-		if !ok {
-			return fmt.Errorf("mesh: point %v twice or outside the box", tr.Pts[p])
-		}
-		if on < 0 {
-			tr.splitTri(t, p)
-		} else {
-			tr.splitEdge(EdgeOf(t, on), p)
-		}
-		tr.legalise()
-		last = int32(len(tr.tris) - 1)
-	}
-	return nil
 }
 
 // walk finds the triangle that holds p, starting at t: its index, the corner whose half-edge holds p or -1, and false when
@@ -211,52 +181,6 @@ func (tr *Triangulation) set(t int32, r rawTri) {
 	}
 }
 
-// splitTri puts p strictly inside t and leaves the three edges around it to examine.
-func (tr *Triangulation) splitTri(t, p int32) {
-	r := tr.tris[t]
-	u, w := tr.fresh(), tr.fresh()
-	tr.set(t, rawTri{[3]int32{r.v[0], r.v[1], p}, [3]Edge{r.n[0], EdgeOf(u, 2), EdgeOf(w, 1)}, [3]int32{r.c[0], -1, -1}})
-	tr.set(u, rawTri{[3]int32{r.v[1], r.v[2], p}, [3]Edge{r.n[1], EdgeOf(w, 2), EdgeOf(t, 1)}, [3]int32{r.c[1], -1, -1}})
-	tr.set(w, rawTri{[3]int32{r.v[2], r.v[0], p}, [3]Edge{r.n[2], EdgeOf(t, 2), EdgeOf(u, 1)}, [3]int32{r.c[2], -1, -1}})
-	tr.link(r.n[1], EdgeOf(u, 0))
-	tr.link(r.n[2], EdgeOf(w, 0))
-	tr.todo = append(tr.todo, EdgeOf(t, 0), EdgeOf(u, 0), EdgeOf(w, 0))
-}
-
-// splitEdge puts p on e, inside the box, and leaves the four edges around it to examine.
-func (tr *Triangulation) splitEdge(e Edge, p int32) {
-	f := tr.tris[e.Tri()].n[e.Corner()]
-	t, u := e.Tri(), f.Tri()
-	i, j := e.Corner(), f.Corner()
-	rt, ru := tr.tris[t], tr.tris[u]
-	i1, i2, j1, j2 := inc[i], inc[inc[i]], inc[j], inc[inc[j]]
-	a, b, c, d := rt.v[i], rt.v[i1], rt.v[i2], ru.v[j2]
-	bc, ca, ad, db := rt.n[i1], rt.n[i2], ru.n[j1], ru.n[j2]
-	w, x := tr.fresh(), tr.fresh()
-	// Around p: c a | a d | d b | b c.
-	tr.set(t, rawTri{[3]int32{c, a, p}, [3]Edge{ca, EdgeOf(u, 2), EdgeOf(x, 1)}, [3]int32{rt.c[i2], -1, -1}})
-	tr.set(u, rawTri{[3]int32{a, d, p}, [3]Edge{ad, EdgeOf(w, 2), EdgeOf(t, 1)}, [3]int32{ru.c[j1], -1, -1}})
-	tr.set(w, rawTri{[3]int32{d, b, p}, [3]Edge{db, EdgeOf(x, 2), EdgeOf(u, 1)}, [3]int32{ru.c[j2], -1, -1}})
-	tr.set(x, rawTri{[3]int32{b, c, p}, [3]Edge{bc, EdgeOf(t, 2), EdgeOf(w, 1)}, [3]int32{rt.c[i1], -1, -1}})
-	tr.link(ca, EdgeOf(t, 0))
-	tr.link(ad, EdgeOf(u, 0))
-	tr.link(db, EdgeOf(w, 0))
-	tr.link(bc, EdgeOf(x, 0))
-	tr.todo = append(tr.todo, EdgeOf(t, 0), EdgeOf(u, 0), EdgeOf(w, 0), EdgeOf(x, 0))
-}
-
-// legalise flips the edges on the stack, each opposite the new point p, until all are as they should be.
-func (tr *Triangulation) legalise() {
-	for len(tr.todo) > 0 {
-		e := tr.todo[len(tr.todo)-1]
-		tr.todo = tr.todo[:len(tr.todo)-1]
-		if tr.wrong(e) {
-			t, u := tr.flip(e)
-			tr.todo = append(tr.todo, EdgeOf(t, 1), EdgeOf(u, 0))
-		}
-	}
-}
-
 // wrong reports whether e must give way to the other diagonal of its two triangles: no constraint holds it, and the circle
 // through one triangle has the apex of the other inside. When the four points lie on one circle, the diagonal that ends at
 // the first of them in the order of points is kept. That is what pulling every point a little off the plane of the lifting
@@ -270,7 +194,12 @@ func (tr *Triangulation) wrong(e Edge) bool {
 	}
 	a, b, c := tr.Pts[r.v[i]], tr.Pts[r.v[inc[i]]], tr.Pts[r.v[inc[inc[i]]]]
 	d := tr.Pts[tr.tris[f.Tri()].v[inc[inc[f.Corner()]]]]
-	side := exact.InCircle(a, b, c, d)
+	return outdone(a, b, c, d)
+}
+
+// outdone reports whether the edge from a to b, with c to its left and d to its right, must give way to the one from c to d.
+func outdone(a, b, c, d exact.Pt) bool {
+	side := exact.Inside(a, b, c, d)
 	if side != 0 {
 		return side > 0
 	}
