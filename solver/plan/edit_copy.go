@@ -211,7 +211,7 @@ func (s *paster) kept(routes list[Route]) list[Route] {
 		_, along := s.names[Ref{kind, id}]
 		return along || id == "" || s.old.Has(Ref{kind, id})
 	}
-	routes, _ = routes.without(func(r *Route) bool { return !there(KindStart, r.From) || !there(KindTarget, r.To) })
+	routes, _ = routes.without(func(_ int, r *Route) bool { return !there(KindStart, r.From) || !there(KindTarget, r.To) })
 	return routes
 }
 

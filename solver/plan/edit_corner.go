@@ -71,37 +71,30 @@ func (p *Plan) wallCornersAt(at exact.Pt, but Corner) []Corner {
 // Apply moves each corner once, however often it is listed, or none when one is missing, out of range, or an opening fits its
 // wall no more.
 func (m MoveCorners) Apply(p *Plan) (*Plan, error) {
-	d := draftOf(p)
+	o, k := p.obstacles, p.marks
+	c := cornerMover{draft: draftOf(p), by: m.By, walls: o.walls.edit(), blocks: o.blocks.edit(), zones: k.zones.edit(), routes: k.routes.edit()}
 	done := map[Corner]bool{}
-	var walls []Ref
-	for _, c := range m.Corners {
-		for _, k := range d.sameCorner(c) {
-			if done[k] {
+	var walls []int
+	for _, corner := range m.Corners {
+		for _, twin := range p.sameCorner(corner) {
+			if done[twin] {
 				continue
 			}
-			done[k] = true
-			if err := d.moveCorner(k, m.By); err != nil {
+			done[twin] = true
+			if err := c.move(twin); err != nil {
 				return nil, err
 			}
 		}
-		if c.Item.Kind == KindWall && !slices.Contains(walls, c.Item) {
-			walls = append(walls, c.Item)
+		if i := p.place(corner.Item); corner.Item.Kind == KindWall && !slices.Contains(walls, i) {
+			walls = append(walls, i)
 		}
 	}
-	for _, r := range walls {
-		w, _ := d.new.Wall(r.ID)
-		openings, err := fitted(d.new.obstacles.openings, &w)
-		if err != nil {
-			return nil, err
-		}
-		d.obstacles().openings = openings
-	}
-	return d.plan(), nil
+	return c.plan(walls)
 }
 
 // sameCorner returns the corner, and with the closing point of a closed wall its twin at the other end.
-func (d *draft) sameCorner(c Corner) []Corner {
-	w, ok := d.old.Wall(c.Item.ID)
+func (p *Plan) sameCorner(c Corner) []Corner {
+	w, ok := p.Wall(c.Item.ID)
 	if c.Item.Kind != KindWall || !ok || !w.Line.Closed() {
 		return []Corner{c}
 	}
@@ -114,53 +107,74 @@ func (d *draft) sameCorner(c Corner) []Corner {
 	return []Corner{c}
 }
 
-func (d *draft) moveCorner(c Corner, by exact.Vec) error {
-	r := c.Item
-	turn := func(chain *Chain) error {
-		if c.Index < 0 || c.Index >= chain.Len() {
-			return errCorner
-		}
-		pts := chain.Points()
-		if err := movePoint(&pts[c.Index], by); err != nil {
-			return err
-		}
-		*chain = Chain{pts}
-		return nil
-	}
-	var err error
-	switch r.Kind {
-	case KindFloor:
-		if err = turn(&d.obstacles().floor); err != nil {
-			err = fault(r.Kind, r.ID, err.Error())
-		}
-	case KindWall:
-		d.obstacles().walls, err = changed(r, d.new.obstacles.walls, func(w *Wall) error { return turn(&w.Line) })
-	case KindBlock:
-		d.obstacles().blocks, err = changed(r, d.new.obstacles.blocks, func(b *Block) error {
-			b.Circle = nil // it is round no more
-			return turn(&b.Ring)
-		})
-	case KindZone:
-		d.marks().zones, err = changed(r, d.new.marks.zones, func(z *Zone) error { return turn(&z.Ring) })
-	case KindRoute:
-		d.marks().routes, err = changed(r, d.new.marks.routes, func(t *Route) error { return turn(&t.Via) })
-	default:
-		err = fault(r.Kind, r.ID, "has no corners")
-	}
-	return err
+// cornerMover moves corners.
+type cornerMover struct {
+	draft  *draft
+	by     exact.Vec
+	walls  listEdit[Wall]
+	blocks listEdit[Block]
+	zones  listEdit[Zone]
+	routes listEdit[Route]
 }
 
-// changed returns the list with one item changed; an error of the change gets the item's name.
-func changed[T any, P identified[T]](r Ref, l list[T], change func(P) error) (list[T], error) {
-	i := at[T, P](&l, r.ID)
-	if i < 0 {
-		return l, missing(r.Kind, r.ID)
+func (m *cornerMover) move(c Corner) error {
+	chain, err := m.chain(c.Item)
+	if err != nil {
+		return err
 	}
-	e := l.edit()
-	if err := change(e.at(i)); err != nil {
-		return l, fault(r.Kind, r.ID, err.Error())
+	if c.Index < 0 || c.Index >= chain.Len() {
+		return fault(c.Item.Kind, c.Item.ID, errCorner.Error())
 	}
-	return e.list, nil
+	pts := chain.Points()
+	if err := movePoint(&pts[c.Index], m.by); err != nil {
+		return fault(c.Item.Kind, c.Item.ID, err.Error())
+	}
+	*chain = Chain{pts}
+	return nil
+}
+
+// chain returns an item's corners, to be replaced.
+func (m *cornerMover) chain(r Ref) (*Chain, error) {
+	i := m.draft.old.place(r)
+	if i < 0 && r.Kind != KindFloor {
+		return nil, missing(r.Kind, r.ID)
+	}
+	switch r.Kind {
+	case KindFloor:
+		return &m.draft.obstacles().floor, nil
+	case KindWall:
+		return &m.walls.at(i).Line, nil
+	case KindBlock:
+		b := m.blocks.at(i)
+		b.Circle = nil // it is round no more
+		return &b.Ring, nil
+	case KindZone:
+		return &m.zones.at(i).Ring, nil
+	case KindRoute:
+		return &m.routes.at(i).Via, nil
+	}
+	return nil, fault(r.Kind, r.ID, "has no corners")
+}
+
+// plan returns the plan with the corners moved; the openings of the walls at some places are made to fit.
+func (m *cornerMover) plan(walls []int) (*Plan, error) {
+	d := m.draft
+	openings := d.old.obstacles.openings
+	for _, i := range walls {
+		var err error
+		if openings, err = fitted(openings, m.walls.list.at(i)); err != nil {
+			return nil, err
+		}
+	}
+	if m.walls.touched() || m.blocks.touched() {
+		o := d.obstacles()
+		o.walls, o.blocks, o.openings = m.walls.list, m.blocks.list, openings
+	}
+	if m.zones.touched() || m.routes.touched() {
+		k := d.marks()
+		k.zones, k.routes = m.zones.list, m.routes.list
+	}
+	return d.plan(), nil
 }
 
 // chain returns an item's corners.

@@ -13,39 +13,36 @@ func (e Delete) Label() string {
 
 // Apply fails when an item is not in the plan.
 func (e Delete) Apply(p *Plan) (*Plan, error) {
-	gone := make(map[Ref]bool, len(e.Items))
-	for _, r := range e.Items {
+	gone := p.pick(e.Items)
+	for i, r := range e.Items {
 		if !r.Kind.moves() {
 			return nil, fault(r.Kind, r.ID, "cannot be deleted")
 		}
-		if !p.Has(r) {
+		if i == gone.lost {
 			return nil, missing(r.Kind, r.ID)
 		}
-		gone[r] = true
 	}
 	d := draftOf(p)
-	if gone[Ref{Kind: KindFloor}] {
+	if gone.some(KindFloor) {
 		d.obstacles().floor = Chain{}
 	}
-	if gone[Ref{Kind: KindUnderlay}] {
+	if gone.some(KindUnderlay) {
 		d.sheet().Underlay = nil
 	}
 	o, m := p.obstacles, p.marks
-	walls, w := o.walls.without(func(w *Wall) bool { return gone[Ref{KindWall, w.ID}] })
-	openings, c := o.openings.without(func(o *Opening) bool {
-		return gone[Ref{KindOpening, o.ID}] || gone[Ref{KindWall, o.Wall}]
-	})
-	blocks, b := o.blocks.without(func(b *Block) bool { return gone[Ref{KindBlock, b.ID}] })
+	walls, w := o.walls.without(func(i int, _ *Wall) bool { return gone.at(KindWall, i) })
+	openings, c := o.openings.without(func(i int, o *Opening) bool { return gone.at(KindOpening, i) || gone.has(KindWall, o.Wall) })
+	blocks, b := o.blocks.without(func(i int, _ *Block) bool { return gone.at(KindBlock, i) })
 	if w || c || b {
 		n := d.obstacles()
 		n.walls, n.openings, n.blocks = walls, openings, blocks
 	}
-	zones, z := m.zones.without(func(z *Zone) bool { return gone[Ref{KindZone, z.ID}] })
-	observers, v := m.observers.without(func(o *Observer) bool { return gone[Ref{KindObserver, o.ID}] })
-	targets, t := m.targets.without(func(t *Target) bool { return gone[Ref{KindTarget, t.ID}] })
-	starts, s := m.starts.without(func(s *Start) bool { return gone[Ref{KindStart, s.ID}] })
-	routes, r := m.routes.without(func(r *Route) bool {
-		return gone[Ref{KindRoute, r.ID}] || gone[Ref{KindStart, r.From}] || gone[Ref{KindTarget, r.To}]
+	zones, z := m.zones.without(func(i int, _ *Zone) bool { return gone.at(KindZone, i) })
+	observers, v := m.observers.without(func(i int, _ *Observer) bool { return gone.at(KindObserver, i) })
+	targets, t := m.targets.without(func(i int, _ *Target) bool { return gone.at(KindTarget, i) })
+	starts, s := m.starts.without(func(i int, _ *Start) bool { return gone.at(KindStart, i) })
+	routes, r := m.routes.without(func(i int, r *Route) bool {
+		return gone.at(KindRoute, i) || gone.has(KindStart, r.From) || gone.has(KindTarget, r.To)
 	})
 	if z || v || t || s || r {
 		n := d.marks()
@@ -55,28 +52,4 @@ func (e Delete) Apply(p *Plan) (*Plan, error) {
 }
 
 // Has reports whether the item is in the plan. The plan itself and the walker always are.
-func (p *Plan) Has(r Ref) bool {
-	switch r.Kind {
-	case KindFloor:
-		return r.ID == "" && p.obstacles.floor.Len() > 0
-	case KindWall:
-		return at(&p.obstacles.walls, r.ID) >= 0
-	case KindOpening:
-		return at(&p.obstacles.openings, r.ID) >= 0
-	case KindBlock:
-		return at(&p.obstacles.blocks, r.ID) >= 0
-	case KindZone:
-		return at(&p.marks.zones, r.ID) >= 0
-	case KindObserver:
-		return at(&p.marks.observers, r.ID) >= 0
-	case KindTarget:
-		return at(&p.marks.targets, r.ID) >= 0
-	case KindStart:
-		return at(&p.marks.starts, r.ID) >= 0
-	case KindRoute:
-		return at(&p.marks.routes, r.ID) >= 0
-	case KindUnderlay:
-		return r.ID == "" && p.sheet.Underlay != nil
-	}
-	return r.ID == ""
-}
+func (p *Plan) Has(r Ref) bool { return p.place(r) >= 0 }

@@ -47,7 +47,7 @@ func (e JoinWalls) Apply(p *Plan) (*Plan, error) {
 	for _, w := range walls[1:] {
 		gone[w.ID] = true
 	}
-	left, _ := p.obstacles.walls.without(func(w *Wall) bool { return gone[w.ID] })
+	left, _ := p.obstacles.walls.without(func(_ int, w *Wall) bool { return gone[w.ID] })
 	left = left.put(at(&left, j.wall.ID), j.wall)
 	openings, err := fitted(j.openings, &j.wall)
 	if err != nil {

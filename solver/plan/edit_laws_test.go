@@ -138,21 +138,3 @@ func TestMoveLaws(t *testing.T) {
 		}
 	})
 }
-
-func BenchmarkMoveObserver(b *testing.B) {
-	parts := room().Parts()
-	for i := range 10_000 {
-		parts.Walls = append(parts.Walls, plan.Wall{ID: fmt.Sprint("W", 10+i), Line: chain(0, 0, 9, 9), Height: 1})
-	}
-	p := plan.From(parts)
-	for _, r := range []plan.Ref{ref(plan.KindObserver, "O1"), ref(plan.KindWall, "W9000")} {
-		b.Run(fmt.Sprintf("walls=10000/kind=%v", r.Kind), func(b *testing.B) {
-			b.ReportAllocs()
-			for b.Loop() {
-				if _, err := (plan.MoveItems{Items: []plan.Ref{r}, By: exact.Vec{X: 1}}).Apply(p); err != nil {
-					b.Fatal(err)
-				}
-			}
-		})
-	}
-}

@@ -59,7 +59,7 @@ func cutOff(openings list[Opening], w *Wall, seg int, at exact.Pt, pts []exact.P
 		}
 	}
 	w.Line = Chain{pts}
-	left, _ := openings.without(beyond)
+	left, _ := openings.without(func(_ int, o *Opening) bool { return beyond(o) })
 	return left, nil
 }
 

@@ -1,7 +1,5 @@
 package plan
 
-import "slices"
-
 // Mark locks, frees, hides or shows items. What is locked is not moved, changed or deleted by hand; what is hidden is left out
 // of the picture, never out of the study.
 type Mark struct {
@@ -24,15 +22,14 @@ func (e Mark) Label() string {
 
 // Apply marks all items or none. The floor, the walker and the plan itself cannot be marked.
 func (e Mark) Apply(p *Plan) (*Plan, error) {
-	v := mover{draft: draftOf(p), moving: make(map[Ref]bool, len(e.Items))}
+	v := mover{draft: draftOf(p), moving: p.pick(e.Items)}
 	for _, r := range e.Items {
 		if !r.Kind.moves() || r.Kind == KindFloor {
 			return nil, fault(r.Kind, r.ID, "cannot be locked or hidden")
 		}
-		if !v.moving[r] {
-			v.moving[r] = true
-			v.kinds[r.Kind]++
-		}
+	}
+	if i := v.moving.lost; i >= 0 {
+		return nil, missing(e.Items[i].Kind, e.Items[i].ID)
 	}
 	m := marker{&v, e, [2]bool{}}
 	o, k := *p.obstacles, *p.marks
@@ -50,15 +47,10 @@ func (e Mark) Apply(p *Plan) (*Plan, error) {
 	if m.touched[1] {
 		*v.draft.marks() = k
 	}
-	if u := p.sheet.Underlay; u != nil && v.moving[Ref{Kind: KindUnderlay}] {
-		v.found++
+	if u := p.sheet.Underlay; u != nil && v.moving.some(KindUnderlay) {
 		now := *u
 		e.put(&now.Meta)
 		v.draft.sheet().Underlay = &now
-	}
-	if v.found < len(v.moving) {
-		i := slices.IndexFunc(e.Items, func(r Ref) bool { return !p.Has(r) })
-		return nil, missing(e.Items[i].Kind, e.Items[i].ID)
 	}
 	return v.draft.plan(), nil
 }

@@ -33,33 +33,24 @@ func (m motion) apply(p *Plan, items []Ref, copies bool) (*Plan, error) {
 		}
 		p, items = q, paste.Added(p)
 	}
-	c := carrier{mover{draft: draftOf(p), moving: make(map[Ref]bool, len(items))}, m}
+	c := carrier{mover{draft: draftOf(p), moving: p.pick(items)}, m}
 	for _, r := range items {
 		if !r.Kind.moves() || r.Kind == KindUnderlay && m.flips {
 			return nil, fault(r.Kind, r.ID, "cannot be "+m.what)
 		}
-		c.moving[r] = true
-	}
-	for r := range c.moving {
-		c.kinds[r.Kind]++
 	}
 	if err := errors.Join(c.obstacles(), c.marks(), c.sheet()); err != nil {
 		return nil, firstError(err)
 	}
-	if c.found < len(c.moving) {
-		for _, r := range items {
-			if !p.Has(r) {
-				return nil, missing(r.Kind, r.ID)
-			}
-		}
+	if i := c.moving.lost; i >= 0 {
+		return nil, missing(items[i].Kind, items[i].ID)
 	}
 	return c.draft.plan(), nil
 }
 
 func (c *carrier) obstacles() error {
 	old := c.draft.old.obstacles
-	if c.moving[Ref{Kind: KindFloor}] && old.floor.Len() > 0 {
-		c.found++
+	if c.moving.some(KindFloor) {
 		if err := c.ring(&c.draft.obstacles().floor); err != nil {
 			return fault(KindFloor, "", err.Error())
 		}
@@ -87,25 +78,22 @@ func (c *carrier) openings() error {
 	old := c.draft.old.obstacles.openings
 	now := old.edit()
 	for i, o := range old.refs() {
-		with := c.moving[Ref{KindWall, o.Wall}]
-		if c.moving[Ref{KindOpening, o.ID}] {
-			c.found++
-			if !with {
-				return fault(KindOpening, o.ID, "can only be "+c.what+" with its wall")
-			}
+		with := c.moving.has(KindWall, o.Wall)
+		if c.moving.at(KindOpening, i) && !with {
+			return fault(KindOpening, o.ID, "can only be "+c.what+" with its wall")
 		}
 		if with && c.flips {
 			now.at(i).SideRight = !o.SideRight
 		}
 	}
-	if c.kinds[KindWall] == 0 {
+	if !c.moving.some(KindWall) {
 		return nil
 	}
 	openings := now.list
 	if !c.whole { // a rounded piece may be shorter by a unit
 		var err error
 		walls := &c.draft.new.obstacles.walls
-		if openings, err = fittedAll(openings, walls, func(id string) bool { return c.moving[Ref{KindWall, id}] }); err != nil {
+		if openings, err = fittedAll(openings, walls, func(id string) bool { return c.moving.has(KindWall, id) }); err != nil {
 			return err
 		}
 	}
@@ -136,10 +124,9 @@ func (c *carrier) marks() error {
 
 func (c *carrier) sheet() error {
 	old := c.draft.old.sheet.Underlay
-	if old == nil || !c.moving[Ref{Kind: KindUnderlay}] {
+	if !c.moving.some(KindUnderlay) {
 		return nil
 	}
-	c.found++
 	u := *old
 	u.Turn = c.angle(u.Turn)
 	if err := c.at(&u.At); err != nil {

@@ -3,7 +3,6 @@ package plan
 import (
 	"errors"
 	"math"
-	"slices"
 
 	"enfilade/solver/exact"
 )
@@ -26,26 +25,17 @@ func (m MoveItems) Label() string {
 // Apply moves all items or none: an item that is not in the plan, would leave the legal range, or an opening that would lie
 // over another, is an error. Cost: one pass over the lists, and one over the openings for each that is moved.
 func (m MoveItems) Apply(p *Plan) (*Plan, error) {
-	moving := make(map[Ref]bool, len(m.Items))
 	for _, r := range m.Items {
 		if !r.Kind.moves() {
 			return nil, fault(r.Kind, r.ID, "cannot be moved")
 		}
-		moving[r] = true
 	}
-	v := mover{draft: draftOf(p), moving: moving, by: m.By}
-	for r := range moving {
-		v.kinds[r.Kind]++
-	}
+	v := mover{draft: draftOf(p), moving: p.pick(m.Items), by: m.By}
 	if err := errors.Join(v.obstacles(), v.marks(), v.sheet()); err != nil {
 		return nil, firstError(err)
 	}
-	if v.found < len(moving) {
-		for _, r := range m.Items {
-			if !p.Has(r) {
-				return nil, missing(r.Kind, r.ID)
-			}
-		}
+	if i := v.moving.lost; i >= 0 {
+		return nil, missing(m.Items[i].Kind, m.Items[i].ID)
 	}
 	return v.draft.plan(), nil
 }
@@ -63,16 +53,13 @@ func firstError(err error) error {
 // mover is a move under way.
 type mover struct {
 	draft  *draft
-	moving map[Ref]bool
-	kinds  [len(kinds)]int // how many of each kind
+	moving picked
 	by     exact.Vec
-	found  int // of what is to move
 }
 
 func (v *mover) obstacles() error {
 	old := v.draft.old.obstacles
-	if v.moving[Ref{Kind: KindFloor}] && old.floor.Len() > 0 {
-		v.found++
+	if v.moving.some(KindFloor) {
 		if err := moveChain(&v.draft.obstacles().floor, v.by); err != nil {
 			return fault(KindFloor, "", err.Error())
 		}
@@ -111,10 +98,9 @@ func (v *mover) marks() error {
 
 func (v *mover) sheet() error {
 	old := v.draft.old.sheet.Underlay
-	if old == nil || !v.moving[Ref{Kind: KindUnderlay}] {
+	if !v.moving.some(KindUnderlay) {
 		return nil
 	}
-	v.found++
 	u := *old
 	if err := movePoint(&u.At, v.by); err != nil {
 		return fault(KindUnderlay, "", err.Error())
@@ -123,12 +109,10 @@ func (v *mover) sheet() error {
 	return nil
 }
 
-// moved returns the list with what moves moved, the list itself when nothing does. Cost: that of what moves, when it is a small
-// part of the list, else one pass.
+// moved returns the list with what moves moved, the list itself when nothing does. Cost: that of what moves.
 func moved[T any, P identified[T]](v *mover, kind Kind, l list[T], move func(P) error) (now list[T], some bool, err error) {
 	e := l.edit()
-	for _, i := range places[T, P](v, kind, &l) {
-		v.found++
+	for i := range v.moving.places(kind) {
 		it := P(e.at(i))
 		if err := move(it); err != nil {
 			return l, false, fault(kind, *it.id(), err.Error())
@@ -137,38 +121,15 @@ func moved[T any, P identified[T]](v *mover, kind Kind, l list[T], move func(P) 
 	return e.list, e.touched(), nil
 }
 
-// places returns where in a list the items lie that move, in order.
-func places[T any, P identified[T]](v *mover, kind Kind, l *list[T]) (list []int) {
-	const part = 8 // looking up so many takes about as long as asking for each of the list
-	if v.kinds[kind] == 0 {
-		return nil
-	}
-	if v.kinds[kind] > l.n/part {
-		for i, it := range l.refs() {
-			if v.moving[Ref{kind, *P(it).id()}] {
-				list = append(list, i)
-			}
-		}
-		return list
-	}
-	for r := range v.moving {
-		if r.Kind != kind {
-			continue
-		}
-		if i := at[T, P](l, r.ID); i >= 0 {
-			list = append(list, i)
-		}
-	}
-	slices.Sort(list)
-	return list
-}
-
 // openings slides the openings that move without their walls, one after the other.
 func (v *mover) openings() error {
 	old := &v.draft.old.obstacles.openings
-	moving := places(v, KindOpening, old)
-	v.found += len(moving)
-	moving = slices.DeleteFunc(moving, func(i int) bool { return v.moving[Ref{KindWall, old.at(i).Wall}] })
+	var moving []int
+	for i := range v.moving.places(KindOpening) {
+		if !v.moving.has(KindWall, old.at(i).Wall) {
+			moving = append(moving, i)
+		}
+	}
 	if len(moving) == 0 {
 		return nil
 	}

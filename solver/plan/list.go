@@ -98,22 +98,32 @@ func (l list[T]) put(i int, it T) list[T] {
 }
 
 // without returns the list without what goes, the list itself when nothing does.
-func (l list[T]) without(goes func(*T) bool) (left list[T], some bool) {
+func (l list[T]) without(goes func(int, *T) bool) (left list[T], some bool) {
 	for i, it := range l.refs() {
-		if !goes(it) {
+		if !goes(i, it) {
 			continue
 		}
 		first := i / chunkLen
-		left = list[T]{chunks: l.chunks[:first:first], n: first * chunkLen, ids: new(finder)}
-		var rest []T
-		for _, c := range l.chunks[first:] {
-			for k := range c {
-				if !goes(&c[k]) {
-					rest = append(rest, c[k])
-				}
+		left = list[T]{chunks: slices.Clone(l.chunks[:first]), n: first * chunkLen, ids: new(finder)}
+		var chunk []T
+		for j := left.n; j < l.n; j++ {
+			it := l.at(j)
+			if goes(j, it) {
+				continue
+			}
+			if chunk == nil {
+				chunk = make([]T, 0, min(chunkLen, l.n-j))
+			}
+			chunk = append(chunk, *it)
+			left.n++
+			if len(chunk) == chunkLen {
+				left.chunks, chunk = append(left.chunks, chunk), nil
 			}
 		}
-		return left.with(rest...), true
+		if chunk != nil {
+			left.chunks = append(left.chunks, chunk)
+		}
+		return left, true
 	}
 	return l, false
 }

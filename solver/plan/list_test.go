@@ -47,7 +47,7 @@ func TestListLaws(t *testing.T) {
 				for k := i; k < n; k += step {
 					gone[now.slice[k].ID] = true
 				}
-				now.list, _ = now.list.without(func(s *Start) bool { return gone[s.ID] })
+				now.list, _ = now.list.without(func(_ int, s *Start) bool { return gone[s.ID] })
 				now.slice = slices.DeleteFunc(now.slice, func(s Start) bool { return gone[s.ID] })
 			default:
 				number := func(s *Start) int { return Ref{KindStart, s.ID}.Number() }
