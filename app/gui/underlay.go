@@ -76,6 +76,7 @@ func (w *window) loadUnderlay(path string) {
 func (w *window) tookUnderlay(photo *paint.Photo) {
 	w.under.photo = photo
 	if w.view.fitted {
+		w.view.around = w.bounds()
 		w.view.resized(w.view.cam.W, w.view.cam.H, w.view.pix)
 	}
 }

@@ -8,6 +8,7 @@ import (
 	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/driver/desktop"
 	"fyne.io/fyne/v2/widget"
+	"github.com/paulmach/orb"
 
 	"enfilade/canvas/tool"
 	"enfilade/canvas/view"
@@ -24,9 +25,10 @@ type planView struct {
 
 	cam    view.Camera
 	glide  glide
-	fitted bool    // the camera follows the window's size until someone moves it
-	pix    float32 // device pixels per unit of the toolkit, from the last drawing
-	ringed bool    // the focus came by Tab, so its ring is shown
+	fitted bool      // the camera follows the window's size until someone moves it
+	around orb.Bound // what it is fitted to then, in mm: what was drawn when it was, so that drawing never moves it
+	pix    float32   // device pixels per unit of the toolkit, from the last drawing
+	ringed bool      // the focus came by Tab, so its ring is shown
 
 	last    fyne.Position // of the pointer
 	inside  bool
@@ -45,7 +47,7 @@ const (
 )
 
 func newPlanView(w *window) *planView {
-	v := &planView{w: w, fitted: true, pix: 1, over: newOverlay(), ring: canvas.NewRectangle(nil)}
+	v := &planView{w: w, fitted: true, around: w.bounds(), pix: 1, over: newOverlay(), ring: canvas.NewRectangle(nil)}
 	v.raster = canvas.NewRaster(w.picture.draw)
 	v.ExtendBaseWidget(v)
 	return v
@@ -192,14 +194,14 @@ func (v *planView) look(c view.Camera) {
 
 // fit shows the whole plan, and does so again when the window's size changes.
 func (v *planView) fit() {
-	v.fitted = true
-	v.glide.to(v.cam, view.Fit(v.w.bounds(), v.cam.W, v.cam.H, v.cam.K), v.see)
+	v.fitted, v.around = true, v.w.bounds()
+	v.glide.to(v.cam, view.Fit(v.around, v.cam.W, v.cam.H, v.cam.K), v.see)
 }
 
 // fitNow is fit at once, for another plan.
 func (v *planView) fitNow() {
 	v.glide.stop()
-	v.fitted = true
+	v.fitted, v.around = true, v.w.bounds()
 	v.resized(v.cam.W, v.cam.H, v.pix)
 	v.w.acted()
 }
@@ -209,7 +211,7 @@ func (v *planView) resized(w, h int, pix float32) {
 	v.pix = pix
 	v.glide.stop()
 	if v.fitted {
-		v.cam = view.Fit(v.w.bounds(), w, h, float64(pix))
+		v.cam = view.Fit(v.around, w, h, float64(pix))
 		return
 	}
 	v.cam = v.cam.Resize(w, h, float64(pix))

@@ -66,6 +66,7 @@ type window struct {
 	modal       *modal
 	bar         *menuBar
 	closing     bool
+	bare        bool // nothing was drawn yet when the tool last rested
 }
 
 // parts is what a window is made with; tests hand in their own.
@@ -161,6 +162,7 @@ func (w *window) acted() {
 		w.nameHovered()
 	}
 	w.results.follow(w.session, w.sketch)
+	w.fitFirst(p)
 	w.askMore()
 	w.first.showIf(emptyPlan(p) && len(w.sketch.Band) == 0 && w.sketch.Handles == nil && !w.session.Previewing())
 	w.view.over.show(w.sketch, w.view.cam, w.view.pix)

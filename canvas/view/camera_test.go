@@ -36,9 +36,16 @@ func TestFitGallery(t *testing.T) {
 }
 
 func TestFitOddBounds(t *testing.T) {
-	empty := view.Fit(orb.Bound{Min: orb.Point{1, 1}, Max: orb.Point{-1, -1}}, 1000, 700, 1)
-	if math.Abs(empty.PerMetre()-37) > 1e-9 {
-		t.Errorf("empty plan: %v", empty)
+	for _, c := range []struct {
+		w, h  int
+		k     float64
+		scale float64
+	}{{1065, 812, 1, 37}, {2130, 1624, 2, 37}, {1945, 1352, 1, 65}, {649, 612, 1, 20}} {
+		empty := view.Fit(orb.Bound{Min: orb.Point{1, 1}, Max: orb.Point{-1, -1}}, c.w, c.h, c.k)
+		if x, y := empty.PixelMM(orb.Point{10000, 8000}); math.Abs(empty.PerMetre()-c.scale) > 1e-9 ||
+			math.Abs(x-(float64(c.w)+22*c.k)/2) > 1 || math.Abs(y-(float64(c.h)+12*c.k)/2) > 1 {
+			t.Errorf("empty plan in %d by %d px: %v, want %g px per metre about 10, 8", c.w, c.h, empty, c.scale)
+		}
 	}
 	p := orb.Point{5000, 5000}
 	point := view.Fit(orb.Bound{Min: p, Max: p}, 1000, 700, 1)

@@ -14,22 +14,22 @@ const (
 	MarginSide   = 64 // beside a fitted plan: start mats stand outside the doors
 )
 
-// A plan with nothing in it opens on 20 by 16 m at this scale.
+// A plan with nothing in it opens on so many mm about this place: some rooms side by side, in a picture of any size.
 const (
-	emptyPerMetre      = 37
-	emptyCX, emptyCY   = 10000, 8000
-	wholePixelPerMetre = 8 // from here on a fitted plan has a whole number of device pixels per metre
+	emptyWide, emptyHigh = 24500, 19500
+	emptyCX, emptyCY     = 10000, 8000
+	wholePixelPerMetre   = 8 // from here on a fitted plan has a whole number of device pixels per metre
 )
 
 // Fit returns the camera that shows bounds, in mm, inside the rulers and margins of a picture of w by h device pixels.
 //
 // Its scale is cut to a whole number of device pixels per metre and the lower left corner of bounds lies on a pixel's
 // corner, so that walls and grid lines on whole metres are sharp. Bounds without extent in either direction (an empty
-// plan, a single point) are shown at a middling scale.
+// plan, a single point) are shown with as much around them as some rooms take.
 func Fit(bounds orb.Bound, w, h int, k float64) Camera {
-	c := Camera{W: w, H: h, K: k, Scale: emptyPerMetre * k / 1000, CX: emptyCX, CY: emptyCY}
 	left, top := (Ruler+MarginSide)*k, (Ruler+MarginTop)*k
 	right, bottom := float64(w)-MarginSide*k, float64(h)-MarginBottom*k
+	c := Camera{W: w, H: h, K: k, Scale: wholePixels(fitScale(right-left, emptyWide, bottom-top, emptyHigh, k)), CX: emptyCX, CY: emptyCY}
 	bw, bh := bounds.Max[0]-bounds.Min[0], bounds.Max[1]-bounds.Min[1]
 	switch {
 	case !(bw >= 0 && bh >= 0): // the empty bound has Max below Min
