@@ -50,30 +50,6 @@ func (f *Finder) close(key float64) {
 // in the last place, which tieSlack covers.
 func (f *Finder) left(a, b exact.Pt) float64 { return boxAt(a, b).gap(f.ahead) }
 
-// giveUp ends the search for the goals that no walk from start leads to. It looks at all of the floor, so it is called only
-// when a flood has gone far without having found everything.
-func (f *Finder) giveUp(start exact.Pt) {
-	if f.rooms == nil {
-		f.rooms = Rooms(f.m)
-	}
-	reached := map[int32]bool{}
-	f.eachCorner(start, func(t int32) { reached[f.rooms[t]] = true })
-	near := make([]bool, len(f.goals))
-	for _, t := range f.marked {
-		if reached[f.rooms[t]] {
-			for i := f.heads[t]; i >= 0; i = f.marks[i].next {
-				near[f.marks[i].goal] = true
-			}
-		}
-	}
-	for i := range f.goals {
-		if !near[i] {
-			f.goals[i].closed = true
-		}
-	}
-	f.aim()
-}
-
 // Rooms numbers the stretches of floor between which nobody walks, and returns for each triangle its own; -1 where nobody
 // stands. O(n).
 func Rooms(m *mesh.Mesh) []int32 {

@@ -35,6 +35,7 @@ func TestFloodAgainstFloodOfAll(t *testing.T) {
 			t.Fatal(err)
 		}
 		eyes, walker := sight.New(g.Mesh), walk.New(g.Mesh)
+		walker.KnowNecks()
 		places := g.Places(7, 60)
 		for k := range 20 {
 			goals := goalsAt(eyes, places[20+k:21+k+k%5/4*9]) // 2 of them, or 20
@@ -69,6 +70,7 @@ func TestFloodAgainstFloodOfAllSmall(t *testing.T) {
 			g, m := graphAndMesh(t, p)
 			at := places(p, g)
 			eyes, walker := sight.New(m), walk.New(m)
+			walker.KnowNecks()
 			goals := goalsAt(eyes, at)
 			from := at[rapid.IntRange(0, len(at)-1).Draw(t, "from")]
 			want, _, err := walker.FloodField(context.Background(), from, goals)

@@ -10,7 +10,8 @@
 // Mitchell, Polishchuk, Rote, Schlipf and Talvitie, JoCG 7, 2016). The target's region is known as cones of sight in each
 // triangle. Where a walking cone enters such a triangle, the point nearest to the root within triangle, walking cone and
 // cone of sight is a candidate end; whether those three share more than a border is decided exactly. The search stops when
-// nothing in its queue can be better. One flood from a start serves all goals.
+// nothing in its queue can be better. One flood from a start serves all goals. It goes towards them first, and does not enter
+// floor from which one comes back only by the edge one came in by, when there is no goal.
 //
 // Walking may touch walls, a gap of zero width is no gap, and a walk turns at a point only within one sector between the
 // walls there: the sides of a thin wall are different places.

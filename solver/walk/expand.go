@@ -92,8 +92,11 @@ func (f *Finder) expand(c cone) {
 }
 
 // send queues the cone from r to l of node n that is about to enter a triangle through in, unless a corner already reached
-// leads to all of the edge at least as shortly.
+// leads to all of the edge at least as shortly, or nothing that counts lies beyond.
 func (f *Finder) send(n int32, in mesh.Edge, r, l exact.Vec, key float64) {
+	if !f.enters(in.Tri()) {
+		return
+	}
 	t := &f.m.Tris[in.Tri()]
 	i := in.Corner()
 	root := &f.nodes[n]
@@ -196,7 +199,13 @@ func (f *Finder) turn(n int32, key float64) {
 		i := e.Corner()
 		a, b := t.P[inc[i]].Sub(root.at), t.P[inc[inc[i]]].Sub(root.at)
 		if p, q, ok := within(a, b, r, l); ok {
-			f.leave(n, e.Next(), p, q, key)
+			if f.enters(e.Tri()) {
+				f.leave(n, e.Next(), p, q, key)
+			} else if e != s.First && r.Cross(a) == 0 { // the neck to what is not entered is straight ahead
+				f.arrive(n, e.Next(), a)
+			} else if b.Cross(l) == 0 && !t.StopsWalk(e.Prev().Corner()) {
+				f.arrive(n, e.Prev(), b)
+			}
 		}
 		if t.StopsWalk(e.Prev().Corner()) {
 			return

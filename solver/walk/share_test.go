@@ -51,23 +51,21 @@ func (c *crowd) all(tb testing.TB) (cones int, paths [][]walk.Path) {
 	return cones, paths
 }
 
-// single returns the cones of one flood over the whole floor: from a start to a target that it is farthest from.
-func (c *crowd) single(tb testing.TB, start int, paths []walk.Path) int {
+// whole returns the most cones that a flood over all of the floor takes from one of the starts.
+func (c *crowd) whole(tb testing.TB) int {
 	tb.Helper()
-	far := 0
-	for i, p := range paths {
-		if p.Found && (!paths[far].Found || p.Length > paths[far].Length) {
-			far = i
+	most := 0
+	for _, s := range c.starts {
+		if _, err := c.walker.Field(context.Background(), s); err != nil {
+			tb.Fatal(err)
 		}
+		most = max(most, c.walker.Expanded)
 	}
-	if _, err := c.walker.Flood(context.Background(), c.starts[start], c.goals[far:far+1]); err != nil {
-		tb.Fatal(err)
-	}
-	return c.walker.Expanded
+	return most
 }
 
-// TestFloodsAreShared holds that 10 starts x 50 targets cost less than 15 floods to a single target, counted in cones that enter a
-// triangle, and give the walks that single floods give.
+// TestFloodsAreShared holds that 10 starts x 50 targets cost no more than 10 floods over all of the floor, counted in cones that
+// enter a triangle, and give the walks that single floods give.
 func TestFloodsAreShared(t *testing.T) {
 	for _, kind := range plantest.Kinds {
 		g, err := plantest.NewGround(kind.Make(1, 1000))
@@ -76,9 +74,8 @@ func TestFloodsAreShared(t *testing.T) {
 		}
 		c := newCrowd(t, g)
 		cones, paths := c.all(t)
-		singles, one := 0, 0
+		singles, one := 0, c.whole(t)
 		for i, s := range c.starts {
-			one = max(one, c.single(t, i, paths[i]))
 			for k, goal := range c.goals {
 				p, err := c.walker.Flood(context.Background(), s, []walk.Goal{goal})
 				if err != nil {
@@ -90,9 +87,9 @@ func TestFloodsAreShared(t *testing.T) {
 				}
 			}
 		}
-		t.Logf("%s: %d cones for all, %.1f times a single flood; %d for each by itself", kind.Name, cones, float64(cones)/float64(one), singles)
-		if cones >= 15*one {
-			t.Errorf("%s: all take %d cones, a single flood %d", kind.Name, cones, one)
+		t.Logf("%s: %d cones for all, %.1f times a flood over all of the floor; %d for each by itself", kind.Name, cones, float64(cones)/float64(one), singles)
+		if cones > 10*one {
+			t.Errorf("%s: all take %d cones, a flood over all of the floor %d", kind.Name, cones, one)
 		}
 		if cones >= singles {
 			t.Errorf("%s: all take %d cones, each by itself %d", kind.Name, cones, singles)
@@ -100,7 +97,7 @@ func TestFloodsAreShared(t *testing.T) {
 	}
 }
 
-// BenchmarkAllApproaches measures 10 starts x 50 targets, and reports how many floods to the farthest single target that is worth.
+// BenchmarkAllApproaches measures 10 starts x 50 targets, and reports how many floods over all of the floor that is worth.
 func BenchmarkAllApproaches(b *testing.B) {
 	for _, kind := range plantest.Kinds {
 		for _, walls := range []int{1000, 10_000, 100_000} {
@@ -110,11 +107,8 @@ func BenchmarkAllApproaches(b *testing.B) {
 					b.Fatal(err)
 				}
 				c := newCrowd(b, g)
-				cones, paths := c.all(b)
-				one := 0
-				for i := range c.starts {
-					one = max(one, c.single(b, i, paths[i]))
-				}
+				cones, _ := c.all(b)
+				one := c.whole(b)
 				b.ReportAllocs()
 				for b.Loop() {
 					c.all(b)
