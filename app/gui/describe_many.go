@@ -318,7 +318,7 @@ func (w *window) markFields(p *plan.Plan, sel []plan.Ref) []field {
 		return blank(f, same)
 	}
 	return []field{
-		headed("In the window", flag("Changes", []string{"free", "locked"}, isLocked, func(yes *bool) plan.Mark { return plan.Mark{Items: refs, Locked: yes} })),
+		headed("In the window", flag("Changes", []string{"allowed", "locked"}, isLocked, func(yes *bool) plan.Mark { return plan.Mark{Items: refs, Locked: yes} })),
 		flag("Picture", []string{"shown", "hidden"}, isHidden, func(yes *bool) plan.Mark { return plan.Mark{Items: refs, Hidden: yes} }),
 	}
 }

@@ -17,11 +17,14 @@ type dropDown struct {
 	at       int // the open menu
 	commands []command
 	lines    []dropLine
-	alt      bool   // Alt is down and nothing else has happened since
-	under    int    // the command under the pointer or chosen by keys, -1 for none
-	back     func() // gives the focus back
+	alt      bool    // Alt is down and nothing else has happened since
+	under    int     // the command under the pointer or chosen by keys, -1 for none
+	take     func()  // takes the focus
+	back     func()  // gives the focus back
+	scroll   float32 // how far the commands are moved up in a window too low for all
 	page     *canvas.Rectangle
 	tint     *canvas.Rectangle
+	more     [2]*icon // commands are left out above, and below
 }
 
 // dropLine is one command on the window.
@@ -35,13 +38,16 @@ type dropLine struct {
 // The drop-down, in px at 100 %.
 const (
 	dropLineHeight = 27
+	dropLineLeast  = 22 // in a low window
+	dropMore       = 15 // the strip that says that there are more commands
 	dropRule       = 9
 	dropSide       = 12
 	dropIcon       = 26 // room for icons and check marks
 )
 
 func newDropDown(b *menuBar) *dropDown {
-	d := &dropDown{bar: b, under: -1, page: canvas.NewRectangle(nil), tint: canvas.NewRectangle(nil), back: func() {}}
+	d := &dropDown{bar: b, under: -1, page: canvas.NewRectangle(nil), tint: canvas.NewRectangle(nil), take: func() {}, back: func() {},
+		more: [2]*icon{newIcon("chevron-up", 14, roleInk2), newIcon("chevron-down", 14, roleInk2)}}
 	d.page.CornerRadius, d.tint.CornerRadius = 4, 3
 	d.ExtendBaseWidget(d)
 	d.Hide()
@@ -53,7 +59,6 @@ func (d *dropDown) open(i int) {
 	d.at, d.under = i, -1
 	d.commands = d.bar.menus[i].commands()
 	d.lines = nil
-	y := float32(5)
 	for _, c := range d.commands {
 		l := dropLine{label: newText(c.label, assets.Regular, 13, c.role()), key: newText(c.key, assets.Regular, 12, roleInk3).right()}
 		if c.do == nil {
@@ -67,18 +72,14 @@ func (d *dropDown) open(i int) {
 		}
 		if c.rule {
 			l.rule = hairline()
-			y += dropRule
 		}
-		l.y, l.height = y, dropLineHeight
-		y += dropLineHeight
 		d.lines = append(d.lines, l)
 	}
+	d.pack()
 	d.Show()
 	d.Refresh()
 	d.bar.Refresh()
-	if c := fyne.CurrentApp().Driver().CanvasForObject(d); c != nil {
-		c.Focus(d)
-	}
+	d.take()
 }
 
 // role is the colour of a command's words.
@@ -109,7 +110,7 @@ func (d *dropDown) run(i int) {
 	do()
 }
 
-// box returns where the page of commands lies.
+// box returns where the page of all commands lies; what does not fit into the window is scrolled to.
 func (d *dropDown) box() (at fyne.Position, size fyne.Size) {
 	from, _ := d.bar.span(d.at)
 	labels, keys := float32(0), float32(0)
@@ -127,7 +128,7 @@ func (d *dropDown) lineAt(p fyne.Position) int {
 		return -1
 	}
 	for i, l := range d.lines {
-		if y := p.Y - at.Y - l.y; y >= 0 && y < l.height {
+		if y := p.Y - at.Y - l.y + d.scroll; y >= 0 && y < l.height && d.shows(i) {
 			return i
 		}
 	}
@@ -225,71 +226,6 @@ func (d *dropDown) step(by int) {
 			break
 		}
 	}
+	d.reveal(d.under)
 	d.Refresh()
 }
-
-// CreateRenderer is for the toolkit.
-func (d *dropDown) CreateRenderer() fyne.WidgetRenderer { return &dropRenderer{d} }
-
-type dropRenderer struct{ d *dropDown }
-
-func (r *dropRenderer) Layout(fyne.Size) {
-	d := r.d
-	if len(d.lines) == 0 {
-		return
-	}
-	at, size := d.box()
-	d.page.Move(at)
-	d.page.Resize(size)
-	for i, l := range d.lines {
-		y := at.Y + l.y
-		x := at.X + dropSide + dropIcon
-		if d.commands[i].do == nil {
-			x = at.X + dropSide
-		}
-		l.label.Move(fyne.NewPos(x, y))
-		l.label.Resize(fyne.NewSize(l.label.MinSize().Width, l.height))
-		l.key.Move(fyne.NewPos(at.X+size.Width-dropSide-90, y))
-		l.key.Resize(fyne.NewSize(90, l.height))
-		if l.icon != nil {
-			l.icon.Move(fyne.NewPos(at.X+dropSide, y+(l.height-16)/2))
-			l.icon.Resize(fyne.NewSquareSize(16))
-		}
-		if l.rule != nil {
-			l.rule.Move(fyne.NewPos(at.X+1, y-dropRule/2-0.5))
-			l.rule.Resize(fyne.NewSize(size.Width-2, 1))
-		}
-		if i == d.under {
-			d.tint.Move(fyne.NewPos(at.X+4, y))
-			d.tint.Resize(fyne.NewSize(size.Width-8, l.height))
-		}
-	}
-}
-
-func (r *dropRenderer) MinSize() fyne.Size { return fyne.Size{} }
-
-func (r *dropRenderer) Refresh() {
-	d := r.d
-	p := themed()
-	d.page.FillColor, d.page.StrokeColor, d.page.StrokeWidth = p.Panel, p.Rule, 1
-	d.page.Shadow = canvas.Shadow{Color: colour{A: 60}, BlurRadius: 12, Offset: fyne.NewPos(0, 4), Variant: canvas.DropShadow}
-	d.tint.FillColor = faded(p.Ink, 10)
-	d.tint.Hidden = d.under < 0 || d.commands[d.under].do == nil || d.commands[d.under].dead
-	r.Layout(d.Size())
-	canvas.Refresh(d)
-}
-
-func (r *dropRenderer) Objects() []fyne.CanvasObject {
-	o := []fyne.CanvasObject{r.d.page, r.d.tint}
-	for _, l := range r.d.lines {
-		o = append(o, l.label, l.key)
-		if l.icon != nil {
-			o = append(o, l.icon)
-		}
-		if l.rule != nil {
-			o = append(o, l.rule)
-		}
-	}
-	return o
-}
-func (r *dropRenderer) Destroy() {}

@@ -55,7 +55,7 @@ func (w *window) editMenu() []command {
 func (w *window) wallMenu(walls []string) []command {
 	n := len(walls)
 	return []command{
-		{label: "Parallel wall", do: func() { w.takeUp(&tool.Beside{}) }, dead: w.session.Plan().NumWalls() == 0, rule: true},
+		{label: "Parallel wall…", do: func() { w.takeUp(&tool.Beside{}) }, dead: w.session.Plan().NumWalls() == 0, rule: true},
 		{label: "Cut back to…", do: func() { w.takeUp(&tool.Meet{}) }, dead: n == 0},
 		{label: "Lengthen to…", do: func() { w.takeUp(&tool.Meet{Lengthen: true}) }, dead: n == 0},
 		{label: "Split wall…", do: func() { w.takeUp(&tool.Split{}) }, dead: w.session.Plan().NumWalls() == 0},

@@ -1,6 +1,8 @@
 package gui
 
 import (
+	"math"
+
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/widget"
@@ -17,7 +19,8 @@ type inkText struct {
 	size   float32
 	role   role
 	align  fyne.TextAlign
-	soft   bool // its minimum width is nothing
+	soft   bool   // its minimum width is nothing
+	brief  string // what stands for the text where there is no room for it; empty to cut it
 }
 
 func newText(text string, weight assets.Weight, size float32, r role) *inkText {
@@ -79,6 +82,9 @@ func (r *textRenderer) Layout(s fyne.Size) {
 	r.c.Text = r.t.text
 	if r.t.soft {
 		r.c.Text = fitted(r.t.text, r.t.weight, r.t.size, s.Width)
+		if r.c.Text != r.t.text && r.t.brief != "" {
+			r.c.Text = fitted(r.t.brief, r.t.weight, r.t.size, s.Width)
+		}
 	}
 	h := r.c.MinSize().Height
 	r.c.Move(fyne.NewPos(0, (s.Height-h)/2))
@@ -87,6 +93,7 @@ func (r *textRenderer) Layout(s fyne.Size) {
 
 func (r *textRenderer) MinSize() fyne.Size {
 	s := textSize(r.t.text, r.t.weight, r.t.size)
+	s.Height = float32(math.Ceil(float64(s.Height))) // whole pixels, so that what stands in one line is rounded alike
 	if r.t.soft {
 		s.Width = 0
 	}

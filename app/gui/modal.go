@@ -24,6 +24,7 @@ type choice struct {
 
 // ask shows a modal over the window, with the first choice as the one Enter means, at the right.
 func (w *window) ask(title string, content fyne.CanvasObject, width float32, choices ...choice) *modal {
+	w.bar.drop.FocusLost()
 	m := &modal{buttons: choices}
 	row := container.NewHBox(layout.NewSpacer())
 	for i := len(choices) - 1; i >= 0; i-- {

@@ -7,7 +7,6 @@ import (
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/container"
-	"fyne.io/fyne/v2/layout"
 	"fyne.io/fyne/v2/widget"
 
 	"enfilade/assets"
@@ -28,14 +27,45 @@ func newStatus() *status {
 		place: newText("", assets.Medium, 12, roleInk), snap: caption(""), counts: caption(""), solve: caption(""),
 		hint: caption("").shrinking().right(), progress: newProgress(),
 	}
-	left := container.NewHBox(fixed(146, s.place), tick(), fixed(128, s.snap), tick(), fixed(212, s.counts), tick(), fixed(240, s.solve), s.progress)
-	row := container.New(layout.NewBorderLayout(nil, nil, left, nil), left, inset(12, 0, 0, 0, s.hint))
+	s.solve.shrinking()
+	row := container.New(statusRow{}, s.place, tick(), s.snap, tick(), s.counts, tick(), s.solve, s.progress, s.hint)
 	s.box = on(roleChrome, around(hairline(), nil, nil, nil, inset(14, 4, 18, 5, row)))
 	return s
 }
 
 // tick is the short rule between two parts of the line.
 func tick() fyne.CanvasObject { return inset(4, 3, 10, 3, hairline()) }
+
+// statusRow sets the parts of the line beside each other, each in a place of its own, so that none is moved by another's figures;
+// the hint has what is left. In a narrow window the others give way to it.
+type statusRow struct{}
+
+// narrowStatus is the width of a line in which the hint's room is short.
+const narrowStatus = 1240
+
+// MinSize is for the toolkit.
+func (statusRow) MinSize(o []fyne.CanvasObject) fyne.Size {
+	return fyne.NewSize(400, o[len(o)-1].MinSize().Height)
+}
+
+// Layout is for the toolkit.
+func (statusRow) Layout(o []fyne.CanvasObject, s fyne.Size) {
+	widths := [...]float32{146, 15, 128, 15, 212, 15, 240, 0}
+	if s.Width < narrowStatus {
+		widths = [...]float32{140, 15, 122, 15, 176, 15, 104, 0}
+	}
+	if o[7].Visible() {
+		widths[7] = o[7].MinSize().Width + 8
+	}
+	x := float32(0)
+	for i, w := range widths {
+		o[i].Move(fyne.NewPos(x, 0))
+		o[i].Resize(fyne.NewSize(w, s.Height))
+		x += w + 4
+	}
+	o[8].Move(fyne.NewPos(x, 0))
+	o[8].Resize(fyne.NewSize(max(0, s.Width-x), s.Height))
+}
 
 // fixed gives content a width of its own.
 func fixed(width float32, content fyne.CanvasObject) *fyne.Container {
@@ -92,7 +122,8 @@ func counted(n int, what string) string {
 
 // solved shows how long the study took.
 func (s *status) solved(took time.Duration) {
-	s.solve.set(fmt.Sprintf("solved in %s, in the plane of the eye", brief(took)))
+	s.solve.brief = "solved in " + brief(took)
+	s.solve.set(s.solve.brief + ", in the plane of the eye")
 }
 
 // brief writes a duration as people say it.

@@ -127,6 +127,7 @@ func (w *window) build() {
 	foot := around(hairline(), nil, nil, nil, w.foot.box)
 	w.middle = container.New(&w.frame, rail, hairline(), picture, foot, w.side)
 	w.bar = newMenuBar(w.menus())
+	w.bar.drop.take = func() { w.win.Canvas().Focus(w.bar.drop) }
 	w.bar.drop.back = w.view.grab
 	page := around(pile(w.bar, hairline(), w.notice.box), w.status.box, nil, nil, w.middle)
 	w.notice.page = page
