@@ -88,9 +88,15 @@ func (w *window) showKeys() {
 		if wide && i > 1 {
 			c = columns[1]
 		}
-		c.Add(inset(0, 8, 0, 2, newText(g.title, assets.Semibold, 12.5, roleInk2)))
+		above := float32(14)
+		if len(c.Objects) == 0 {
+			above = 0
+		}
+		c.Add(inset(0, above, 0, 3, newText(g.title, assets.Bold, 12.5, roleInk)))
+		c.Add(inset(0, 0, 0, 3, hairline()))
 		for _, r := range g.rows {
-			c.Add(container.NewHBox(fixed(158, newText(r[0], assets.Semibold, 12, roleInk)), newText(r[1], assets.Regular, 12, roleInk)))
+			key := fixed(146, newText(r[0], assets.Semibold, 12, roleInk))
+			c.Add(inset(0, 1, 0, 2, container.NewHBox(key, newText(r[1], assets.Regular, 12, roleInk2))))
 		}
 	}
 	row := container.NewHBox(columns[0])

@@ -99,28 +99,21 @@ type railLayout struct{}
 
 const railWidth = 54
 
-// MinSize is for the toolkit. The rail may be cut off below: its tools are in the menus too.
+// MinSize is for the toolkit. In a very low window the rail is cut off below: its tools are in the menus too.
 func (railLayout) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(railWidth, 0) }
 
 // Layout is for the toolkit.
 func (railLayout) Layout(objects []fyne.CanvasObject, s fyne.Size) {
-	pitch := float32(40)
-	n := float32(0)
-	for i := range tools {
-		if shapeOf(i) == i {
-			n++
-		}
-	}
-	if need := n*40 + 3*22 + 2*14; s.Height < need {
-		pitch = max(28, 40-(need-s.Height)/n)
-	}
+	pitch, names := railPitch(s.Height)
 	y := float32(8)
 	for _, o := range objects {
 		switch w := o.(type) {
 		case *inkText:
-			w.Move(fyne.NewPos(0, y))
-			w.Resize(fyne.NewSize(s.Width, 16))
-			y += 20
+			if w.Hidden = !names; names {
+				w.Move(fyne.NewPos(0, y))
+				w.Resize(fyne.NewSize(s.Width, 16))
+				y += 20
+			}
 		case *paper:
 			w.Move(fyne.NewPos((s.Width-24)/2, y+4))
 			w.Resize(fyne.NewSize(24, 1))
@@ -131,4 +124,23 @@ func (railLayout) Layout(objects []fyne.CanvasObject, s fyne.Size) {
 			y += pitch
 		}
 	}
+}
+
+// railPitch is the pitch of the buttons of a rail, and whether the groups have their names: in a low window the buttons come closer
+// together, and then the names go.
+func railPitch(height float32) (pitch float32, names bool) {
+	n, groups := float32(0), float32(0)
+	for i, k := range tools {
+		if shapeOf(i) == i {
+			n++
+		}
+		if i == 0 || tools[i-1].group != k.group {
+			groups++
+		}
+	}
+	rules := 8 + (groups-1)*11
+	if pitch = (height - rules - groups*20) / n; pitch >= 28 {
+		return min(pitch, 40), true
+	}
+	return min(max((height-rules)/n, 22), 40), false
 }

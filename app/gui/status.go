@@ -28,6 +28,7 @@ func newStatus() *status {
 		hint: caption("").shrinking().right(), progress: newProgress(),
 	}
 	s.solve.shrinking()
+	s.counts.shrinking()
 	row := container.New(statusRow{}, s.place, tick(), s.snap, tick(), s.counts, tick(), s.solve, s.progress, s.hint)
 	s.box = on(roleChrome, around(hairline(), nil, nil, nil, inset(14, 4, 18, 5, row)))
 	return s
@@ -51,7 +52,10 @@ func (statusRow) MinSize(o []fyne.CanvasObject) fyne.Size {
 // Layout is for the toolkit.
 func (statusRow) Layout(o []fyne.CanvasObject, s fyne.Size) {
 	widths := [...]float32{146, 15, 128, 15, 212, 15, 240, 0}
-	if s.Width < narrowStatus {
+	switch {
+	case s.Width < narrowStatus/1.4:
+		widths = [...]float32{140, 15, 122, 15, 0, 0, 0, 0}
+	case s.Width < narrowStatus:
 		widths = [...]float32{140, 15, 122, 15, 176, 15, 104, 0}
 	}
 	if o[7].Visible() {
