@@ -13,7 +13,7 @@ import (
 // openWindow opens the window on the plan of that path, or on an empty plan when the path is empty, and returns when it is
 // closed.
 func openWindow(path, theme string) error {
-	return gui.Run(app.NewWithID, gui.Options{Path: path, Theme: themeFor(theme, os.Getenv("ENFILADE_THEME"))})
+	return gui.Run(app.NewWithID, gui.Options{Path: path, Theme: themeFor(theme, os.Getenv("ENFILADE_THEME")), Room: displayRoom})
 }
 
 // themeFor returns the theme to open in: the one asked for, else the environment's, else none.

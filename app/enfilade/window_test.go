@@ -109,6 +109,12 @@ const pictureX, pictureY = 55, 31
 // newScreen builds the program and starts a display for it.
 func newScreen(t *testing.T) *screen {
 	t.Helper()
+	return newScreenOf(t, "1440x900")
+}
+
+// newScreenOf is newScreen with a display of another size.
+func newScreenOf(t *testing.T, size string) *screen {
+	t.Helper()
 	for _, tool := range []string{"Xvfb", "xdotool", "import"} {
 		if _, err := exec.LookPath(tool); err != nil {
 			t.Skipf("%s is not installed", tool)
@@ -126,7 +132,7 @@ func newScreen(t *testing.T) *screen {
 	if err != nil {
 		t.Fatal(err)
 	}
-	x := exec.Command("Xvfb", "-displayfd", "3", "-screen", "0", "1440x900x24", "-nolisten", "tcp")
+	x := exec.Command("Xvfb", "-displayfd", "3", "-screen", "0", size+"x24", "-nolisten", "tcp")
 	x.ExtraFiles = []*os.File{w}
 	if err := x.Start(); err != nil {
 		t.Fatal(err)

@@ -10,8 +10,8 @@ import (
 type desk struct {
 	parts   parts
 	look    *look
-	setting bool // the look is being set: the toolkit tells that its settings have changed
-	size    fyne.Size
+	setting bool      // the look is being set: the toolkit tells that its settings have changed
+	size    fyne.Size // of windows, where it was asked for
 	windows []*window
 	opened  int // windows so far: each has a number of its own
 	keeper  *keeper
@@ -19,13 +19,13 @@ type desk struct {
 
 func newDesk(p parts, look *look) *desk {
 	p.app.Settings().SetTheme(look)
-	return &desk{parts: p, look: look, size: fyne.NewSize(1440, 900)}
+	return &desk{parts: p, look: look}
 }
 
 // open makes another window, with an empty plan in it, and shows it.
 func (d *desk) open() *window {
 	w := newWindow(d)
-	w.win.Resize(d.size)
+	d.resize(w)
 	w.win.Show()
 	w.view.grab()
 	return w

@@ -53,6 +53,7 @@ func (w *window) unlessUnsaved(goOn func()) {
 
 // shut closes the window for good; other windows stay.
 func (w *window) shut() {
+	w.keepSize()
 	w.closing = true
 	w.desk.keeper.forget(w.number)
 	w.desk.windows = slices.DeleteFunc(w.desk.windows, func(x *window) bool { return x == w })

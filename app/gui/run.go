@@ -20,8 +20,9 @@ const appID = "enfilade.plans"
 type Options struct {
 	Path   string  // the plan to open; empty for an empty plan
 	Theme  string  // "light", "dark" or "system"; empty for what was chosen last
-	Width  float32 // of the window, in px at 100 %; 0 for the usual size
+	Width  float32 // of the window, in px at 100 %; 0 for as it was left, and no larger than the display
 	Height float32
+	Room   func() (width, height float32) // on the display for a window, in its px, once one is made; nil where nobody knows
 }
 
 // ErrNoDisplay says that there is no display to open a window on.
@@ -48,6 +49,7 @@ func Run(newApp func(id string) fyne.App, o Options) error {
 		solver: func() live.Solver { return study.NewSolver() },
 		do:     fyne.Do,
 		now:    time.Now,
+		room:   o.Room,
 	}, &look{choice: choice, silent: systemIsSilent()})
 	d.hearSystem()
 	if o.Width > 0 && o.Height > 0 {

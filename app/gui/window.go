@@ -75,7 +75,8 @@ type parts struct {
 	solver func() live.Solver
 	do     func(func())
 	now    func() time.Time
-	inline bool // files are read and written at once on the window's goroutine
+	room   func() (width, height float32) // on the display for a window, in its px; nil where nobody knows
+	inline bool                           // files are read and written at once on the window's goroutine
 }
 
 // newWindow makes another window of the desk, with an empty plan in it.
