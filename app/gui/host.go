@@ -65,6 +65,14 @@ func (h *host) Walked(route string) (legs [][]exact.Pt) {
 	return legs
 }
 
+// UnderlaySize is for the tools.
+func (h *host) UnderlaySize() (int, int) {
+	if u := h.w.session.Committed().Sheet().Underlay; u == nil || u.Image != h.w.under.path {
+		return 0, 0
+	}
+	return h.w.photoSize()
+}
+
 // ParseLength is for the tools.
 func (h *host) ParseLength(text string) (int32, error) { return parseLength(text, h.w.unit()) }
 

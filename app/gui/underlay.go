@@ -182,7 +182,7 @@ func (w *window) freshUnderlay(photo *paint.Photo) plan.Underlay {
 func (w *window) takeUnderlay(job tool.UnderlayJob) {
 	w.choose(0)
 	w.session.Select(theUnderlay)
-	t := &tool.Underlay{Job: job, Size: w.photoSize}
+	t := &tool.Underlay{Job: job}
 	t.Done = func() {
 		t.Job = tool.MoveUnderlay
 		w.view.Refresh()

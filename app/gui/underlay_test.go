@@ -231,3 +231,24 @@ func TestUnderlayThatNeverEnds(t *testing.T) {
 		t.Errorf("%v", err)
 	}
 }
+
+func TestUnderlayIsPickedByAClick(t *testing.T) {
+	r := newRig(t, realSolver)
+	r.dropped([]string{scan(t, filepath.Join(t.TempDir(), "scan.png"))})
+	r.keys(fyne.KeyEscape)
+	u := r.underlay()
+	m := u.MMPerPixel / 1000
+	x, y := float64(u.At.X)/10000+200*m, float64(u.At.Y)/10000+150*m
+	r.click(x, y)
+	if r.form.title.text != "Underlay" {
+		t.Fatalf("a click on the picture shows the form of %q", r.form.title.text)
+	}
+	r.runes("w") // what is drawn over it is picked before it
+	r.click(x+1, y)
+	r.click(x+3, y)
+	r.keys(fyne.KeyReturn, fyne.KeyEscape)
+	r.click(x+2, y)
+	if r.form.title.text != "Wall" {
+		t.Errorf("a click on the wall over it shows the form of %q", r.form.title.text)
+	}
+}

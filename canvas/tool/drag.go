@@ -18,6 +18,8 @@ func dragEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 		return handleEdit(h, g, e)
 	case g.hit.Part == pick.Corner:
 		return cornerEdit(h, g, e)
+	case g.hit.Ref == theUnderlay:
+		return carryEdit(h, g), nil
 	case g.hit.Ref.Kind == plan.KindOpening:
 		return slideEdit(h, g, e), nil
 	case len(h.Selection()) == 1 && g.hit.Ref.Kind == plan.KindTarget:

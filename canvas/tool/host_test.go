@@ -24,6 +24,7 @@ type host struct {
 	snapper  pick.Snapper
 	defaults tool.Defaults
 	walked   [][]exact.Pt // of every route
+	photo    [2]int       // size of the underlay's picture
 }
 
 func newHost(t *testing.T, parts plan.Parts) *host {
@@ -38,6 +39,8 @@ func (h *host) Cancel()                     { h.shown = h.plan }
 func (h *host) Defaults() tool.Defaults     { return h.defaults }
 func (h *host) SetDefaults(d tool.Defaults) { h.defaults = d }
 func (h *host) Snapper() *pick.Snapper      { return &h.snapper }
+
+func (h *host) UnderlaySize() (int, int) { return h.photo[0], h.photo[1] }
 
 func (h *host) Walked(string) [][]exact.Pt { return h.walked }
 

@@ -13,6 +13,7 @@ import (
 type Select struct {
 	hover   pick.Hit
 	hovered bool
+	under   bool        // no item is under the pointer, but the picture to trace over
 	grip    *grip       // while the button is down
 	last    *[2]float64 // device pixels of the last click, for taking what lies below on the next
 	snap    *pick.Snap
@@ -41,6 +42,9 @@ const dragStart = 3
 // Down takes hold of what is under the pointer.
 func (t *Select) Down(h Host, e Pointer) {
 	hit, ok := pick.At(h.Plan(), h.Camera(), e.X, e.Y, h.Selection(), h.Walked)
+	if !ok && !e.Shift {
+		hit, ok = t.underHit(h, e)
+	}
 	t.grip = &grip{hit: hit, on: ok, x: e.X, y: e.Y, from: h.Camera().Grid(e.X, e.Y), toggle: e.Shift}
 	if !ok {
 		if !e.Shift {
@@ -93,7 +97,7 @@ func (g *grip) below(h Host, e Pointer) plan.Ref {
 func (t *Select) Move(h Host, e Pointer) {
 	g := t.grip
 	if g == nil {
-		t.hover, t.hovered = pick.At(h.Plan(), h.Camera(), e.X, e.Y, h.Selection(), h.Walked)
+		t.look(h, e)
 		return
 	}
 	if !g.moved && math.Hypot(e.X-g.x, e.Y-g.y) < dragStart*h.Camera().K {
@@ -140,10 +144,23 @@ func (t *Select) Up(h Host, e Pointer) {
 		h.Select(slices.DeleteFunc(slices.Clone(h.Selection()), func(r plan.Ref) bool { return r == g.hit.Ref })...)
 	case g.on && !g.toggle && g.again && g.selected:
 		h.Select(g.below(h, e))
+	case g.on && !g.toggle && g.hit.Ref == theUnderlay:
+		h.Select() // below it lies nothing
 	case g.on && !g.toggle:
 		h.Select(g.hit.Ref)
+	case !g.on && !g.toggle && t.overUnderlay(h, e):
+		h.Select(theUnderlay)
 	}
+	t.look(h, e)
+}
+
+// look finds what lies under the pointer.
+func (t *Select) look(h Host, e Pointer) {
 	t.hover, t.hovered = pick.At(h.Plan(), h.Camera(), e.X, e.Y, h.Selection(), h.Walked)
+	t.under = !t.hovered && t.overUnderlay(h, e)
+	if !t.hovered {
+		t.hover, t.hovered = t.underHit(h, e)
+	}
 }
 
 // Key nudges, deletes, and lets go of a drag or the selection.
@@ -200,7 +217,7 @@ func (t *Select) Stop(h Host) {
 }
 
 // Leave forgets what was under the pointer.
-func (t *Select) Leave(Host) { t.hovered = false }
+func (t *Select) Leave(Host) { t.hovered, t.under = false, false }
 
 // Sketch shows the hovered item, the box, the handles of the selection, and what is dragged.
 func (t *Select) Sketch(h Host) Sketch {
@@ -238,6 +255,8 @@ func (t *Select) Hint(h Host) string {
 		return "release to select what lies inside the box, with Ctrl also what it touches"
 	case t.hovered:
 		return t.hoverHint(h)
+	case t.under:
+		return "click to pick the underlay, or drag a box around items"
 	case len(h.Selection()) > 0:
 		return selectionHint(h.Selection())
 	}
@@ -262,6 +281,9 @@ func (t *Select) hoverHint(h Host) string {
 		return "drag for a new waypoint on this leg"
 	case pick.Corner:
 		return cornerHint(h, t.hover.Ref)
+	}
+	if t.hover.Ref == theUnderlay {
+		return "drag to move the underlay, arrows nudge it; click again to let go of it"
 	}
 	if t.last != nil && slices.Contains(h.Selection(), t.hover.Ref) {
 		return "drag to move; click again for what lies below; Shift adds and takes away"

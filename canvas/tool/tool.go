@@ -31,6 +31,8 @@ type Host interface {
 	Snapper() *pick.Snapper
 	// Walked returns the legs of the route with an id as they are walked, as far as that is known.
 	Walked(route string) [][]exact.Pt
+	// UnderlaySize returns the size of the picture to trace over, in its pixels; nothing when none is shown.
+	UnderlaySize() (w, h int)
 	// ParseLength reads a typed length in the plan's display unit, as grid units.
 	ParseLength(text string) (int32, error)
 	// FormatLength writes a length of grid units in the plan's display unit, with the unit's name.

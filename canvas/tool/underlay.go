@@ -21,8 +21,7 @@ const (
 // the picture.
 type Underlay struct {
 	Job  UnderlayJob
-	Size func() (w, h int) // of the picture, in pixels
-	Done func()            // told when the scale is set or the picture is straight; may be nil
+	Done func() // told when the scale is set or the picture is straight; may be nil
 
 	from   *exact.Pt // the first place
 	to     exact.Pt
@@ -45,8 +44,8 @@ func (t *Underlay) under(h Host) (plan.Underlay, bool) {
 }
 
 // covers reports whether a place lies on the picture.
-func (t *Underlay) covers(u plan.Underlay, p exact.Pt) bool {
-	w, h := t.Size()
+func covers(host Host, u plan.Underlay, p exact.Pt) bool {
+	w, h := host.UnderlaySize()
 	sin, cos := math.Sincos(u.Turn * math.Pi / 180)
 	x, y := float64(p.X)-float64(u.At.X), float64(p.Y)-float64(u.At.Y)
 	x, y = x*cos+y*sin, y*cos-x*sin
@@ -61,7 +60,7 @@ func (t *Underlay) Down(h Host, e Pointer) {
 	switch {
 	case !ok || t.held:
 	case t.Job == MoveUnderlay:
-		if t.covers(u, at) {
+		if covers(h, u, at) {
 			t.from, t.to, t.drag = &at, at, true
 		}
 	case t.from == nil:
@@ -224,7 +223,7 @@ func (t *Underlay) Stop(h Host) {
 	if t.drag {
 		h.Cancel()
 	}
-	*t = Underlay{Job: t.Job, Size: t.Size, Done: t.Done}
+	*t = Underlay{Job: t.Job, Done: t.Done}
 }
 
 // Leave does nothing: the line waits where it was.

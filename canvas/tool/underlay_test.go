@@ -22,7 +22,8 @@ func traced(t *testing.T, change func(*plan.Underlay)) (*host, *tool.Underlay) {
 		t.Fatal(err)
 	}
 	h.plan, h.shown = p, p
-	return h, &tool.Underlay{Size: func() (int, int) { return 400, 300 }}
+	h.photo = [2]int{400, 300}
+	return h, &tool.Underlay{}
 }
 
 func (h *host) underlay() plan.Underlay { return *h.plan.Sheet().Underlay }
