@@ -84,7 +84,7 @@ func (w *window) describePlan(p *plan.Plan) []field {
 		})),
 		textField("Place", sheet.Place, func(t string) error { return putSheet("change place", func(s *plan.Sheet) { s.Place = t }) }),
 		unit,
-	}, w.describeWalker(p.Walker())...)
+	}, w.describeWalker(p)...)
 }
 
 // newBody chooses where the body of new walls lies, or that they have none; J and H do the same while a wall is drawn.

@@ -12,8 +12,9 @@ import (
 	"enfilade/solver/plan"
 )
 
-// describeWalker is what the form offers of the person who walks.
-func (w *window) describeWalker(walker plan.Walker) []field {
+// describeWalker is what the form offers of the person who walks in p.
+func (w *window) describeWalker(p *plan.Plan) []field {
+	walker := p.Walker()
 	put := func(label string, change func(*plan.Walker)) error {
 		change(&walker)
 		return w.doEdit(tool.Named(label, plan.SetWalker{Walker: walker}))
@@ -27,7 +28,7 @@ func (w *window) describeWalker(walker plan.Walker) []field {
 		}
 		return put("change walker's radius", func(k *plan.Walker) { k.Radius = v })
 	})
-	radius.under = radiusWords(walker.Radius)
+	radius.under = radiusWords(walker.Radius, arrange.Sides(p))
 	return append([]field{
 		headed("Walker", w.lengthField("Eye height", walker.Eye, func(v int32) error {
 			return put("change walker's eye", func(k *plan.Walker) { k.Eye = v })
@@ -76,12 +77,12 @@ func describeSeen(walker plan.Walker, put func(string, func(*plan.Walker)) error
 		}}}
 }
 
-// radiusWords says what a walker's radius means to the walks: by how much the polygon that stands for the body may keep them
-// farther off.
-func radiusWords(radius int32) string {
+// radiusWords says what a walker's radius means to the walks: by how much the polygon that stands for the body, with so many
+// sides, may keep them farther off.
+func radiusWords(radius int32, sides int) string {
 	if radius <= 0 {
 		return "a point: walks touch corners"
 	}
-	_, excess := arrange.Disc(min(radius, plan.MaxBodyRadius))
+	_, excess := arrange.Disc(min(radius, plan.MaxBodyRadius), sides)
 	return fmt.Sprintf("walks keep at most %.1f mm more", excess/exact.PerMM)
 }

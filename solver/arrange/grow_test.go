@@ -4,6 +4,7 @@ import (
 	"context"
 	"math"
 	"math/rand/v2"
+	"slices"
 	"testing"
 
 	"enfilade/solver/arrange"
@@ -13,9 +14,18 @@ import (
 )
 
 func TestDisc(t *testing.T) {
+	for _, sides := range allSides {
+		testDisc(t, sides)
+	}
+}
+
+// allSides are the numbers of sides that a walker's polygon may have.
+var allSides = []int{arrange.FineSides, arrange.CoarseSides}
+
+func testDisc(t *testing.T, sides int) {
 	for _, r := range []int32{1, 7, 3000, 3001, 4567, arrange.MaxRadius} {
-		ring, excess := arrange.Disc(r)
-		if len(ring) < 16 {
+		ring, excess := arrange.Disc(r, sides)
+		if len(ring) != sides || sides < 16 {
 			t.Fatalf("radius %d: %d sides", r, len(ring))
 		}
 		far := 0.0
@@ -28,26 +38,30 @@ func TestDisc(t *testing.T) {
 			if q := ring[(i+len(ring)/4)%len(ring)]; q != a.Left() {
 				t.Errorf("radius %d: corner %d does not turn into %v", r, i, q)
 			}
-			if m := ring[(len(ring)-i)%len(ring)]; m != (exact.Vec{X: a.X, Y: -a.Y}) {
+			if !slices.Contains(ring, exact.Vec{X: a.X, Y: -a.Y}) {
 				t.Errorf("radius %d: corner %d has no mirror image", r, i)
+			}
+			if c := a.Cross(ring[(i+1)%sides]); c <= 0 {
+				t.Errorf("radius %d: the ring does not run on at corner %d", r, i)
 			}
 			far = max(far, math.Hypot(float64(a.X), float64(a.Y)))
 		}
-		if math.Abs(far-float64(r)-excess) > 1e-6 || excess > 0.006*float64(r)+6 {
+		most := 1/math.Cos(math.Pi/float64(sides)) - 1
+		if math.Abs(far-float64(r)-excess) > 1e-6 || excess > 1.1*most*float64(r)+6 {
 			t.Errorf("radius %d: excess %v, farthest corner at %v", r, excess, far)
 		}
 	}
 }
 
 // grown builds the meshes of a plan for a point and for a body of the given radius.
-func grown(t testing.TB, text string, radius int32) (plain, wide *mesh.Mesh) {
+func grown(t testing.TB, text string, radius int32, sides int) (plain, wide *mesh.Mesh) {
 	t.Helper()
 	o, _ := arrange.Draw(plantest.Parse(t, text))
 	plain, err := arrange.Build(context.Background(), arrange.Round(o))
 	if err != nil {
 		t.Fatal(err)
 	}
-	wide, err = arrange.Build(context.Background(), arrange.Round(arrange.Grow(o, plain, radius)))
+	wide, err = arrange.Build(context.Background(), arrange.Round(arrange.Grow(o, plain, radius, sides)))
 	if err != nil {
 		t.Fatal(err)
 	}
@@ -74,13 +88,15 @@ func openArea(m *mesh.Mesh) float64 {
 // of 2 m grown by 0.5 m has 4 + 4 + pi/4. The polygon may exceed the disc by its stated excess, never fall short.
 func TestGrowK17(t *testing.T) {
 	const radius = 5000
-	plain, wide := grown(t, "floor -50,-50 50,-50 50,50 -50,50; block 4,4 6,4 6,6 4,6", radius)
-	_, excess := arrange.Disc(radius)
-	rim := func(r float64) float64 { return 400*r - 4*r*r } // the strip along the floor's edge, which has inward corners only
-	steiner := func(r float64) float64 { return 8*r + math.Pi*r*r + rim(r) }
-	got := openArea(plain) - openArea(wide)
-	if lo, hi := steiner(.5), steiner(.5+excess/1e4); got < lo || got > hi {
-		t.Errorf("grown by %v m², not between %v and %v", got, lo, hi)
+	for _, sides := range allSides {
+		plain, wide := grown(t, "floor -50,-50 50,-50 50,50 -50,50; block 4,4 6,4 6,6 4,6", radius, sides)
+		_, excess := arrange.Disc(radius, sides)
+		rim := func(r float64) float64 { return 400*r - 4*r*r } // the strip along the floor's edge, which has inward corners only
+		steiner := func(r float64) float64 { return 8*r + math.Pi*r*r + rim(r) }
+		got := openArea(plain) - openArea(wide)
+		if lo, hi := steiner(.5), steiner(.5+excess/1e4); got < lo || got > hi {
+			t.Errorf("%d sides: grown by %v m², not between %v and %v", sides, got, lo, hi)
+		}
 	}
 }
 
@@ -93,9 +109,10 @@ func TestGrowAgainstDistances(t *testing.T) {
 	}
 	r := rand.New(rand.NewPCG(7, 7))
 	for _, text := range plans {
-		for _, radius := range []int32{50, 1500, 3300, 9000} {
-			plain, wide := grown(t, text, radius)
-			_, excess := arrange.Disc(radius)
+		for i, radius := range []int32{50, 1500, 3300, 9000, 50, 1500, 3300, 9000} {
+			sides := allSides[i/4]
+			plain, wide := grown(t, text, radius, sides)
+			_, excess := arrange.Disc(radius, sides)
 			near, far := 0, 0
 			for range 4000 {
 				p := exact.Pt{X: r.Int32N(100000), Y: r.Int32N(100000)}

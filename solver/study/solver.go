@@ -63,7 +63,7 @@ func (s *Solver) Mesh(ctx context.Context, p *plan.Plan) error {
 	if err != nil {
 		return err
 	}
-	sc, err := makeScene(pulse.Part(ctx, half, 1), plain, radius)
+	sc, err := makeScene(pulse.Part(ctx, half, 1), plain, radius, arrange.Sides(p))
 	if err != nil {
 		return err
 	}
@@ -89,12 +89,12 @@ func (s *Solver) groundFor(ctx context.Context, o *arrange.Outline) (*ground, er
 }
 
 // makeScene sets the scene on the plain ground. A walker with a body takes a second one: the obstacles are grown in the first.
-func makeScene(ctx context.Context, plain *ground, radius int32) (*scene, error) {
+func makeScene(ctx context.Context, plain *ground, radius int32, sides int) (*scene, error) {
 	sc := &scene{plain: plain, wide: plain, floor: floorRing(plain.outline), radius: radius}
 	if radius > 0 {
-		_, sc.excess = arrange.Disc(radius)
+		_, sc.excess = arrange.Disc(radius, sides)
 		var err error
-		if sc.wide, err = makeGround(ctx, arrange.Grow(plain.outline, plain.mesh, radius)); err != nil {
+		if sc.wide, err = makeGround(ctx, arrange.Grow(plain.outline, plain.mesh, radius, sides)); err != nil {
 			return nil, err
 		}
 	}

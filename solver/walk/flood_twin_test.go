@@ -89,7 +89,8 @@ func TestFloodOfBodiesAgainstTwin(t *testing.T) {
 			o, _ := arrange.Draw(p)
 			_, plain := graphAndMesh(t, p)
 			radius := rapid.SampledFrom([]int32{1, 2, 300, 500, 1000, 1500}).Draw(t, "radius")
-			g := arrange.Round(arrange.Grow(o, plain, radius))
+			sides := rapid.SampledFrom([]int{arrange.FineSides, arrange.CoarseSides}).Draw(t, "sides")
+			g := arrange.Round(arrange.Grow(o, plain, radius, sides))
 			if len(g.Edges) > 120 {
 				t.Skip("too large for the twin")
 			}

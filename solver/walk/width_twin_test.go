@@ -269,14 +269,15 @@ func TestWidthsAgainstGrown(t *testing.T) {
 				continue
 			}
 			stuck := int32(math.Ceil(got.Clear / 2)) // a body of this radius does not pass
-			_, excess := arrange.Disc(stuck)
+			sides := []int{arrange.FineSides, arrange.CoarseSides}[tried%2]
+			_, excess := arrange.Disc(stuck, sides)
 			less := int32(got.Clear/2 - excess - 3) // rounding moves each outline by a unit at most
 			if less < 1 || float64(stuck)+excess > room {
 				continue
 			}
 			tried++
 			for r, want := range map[int32]bool{less: true, stuck: false} {
-				wide, err := arrange.Build(context.Background(), arrange.Round(arrange.Grow(o, m, r)))
+				wide, err := arrange.Build(context.Background(), arrange.Round(arrange.Grow(o, m, r, sides)))
 				if err != nil {
 					t.Fatal(err)
 				}

@@ -135,8 +135,9 @@ func (s *specimen) lay(t *testing.T, o *arrange.Outline) {
 // stops walking: all of its outline does, where Grow leaves that to the triangles on its inside.
 func (s *specimen) grow(t *testing.T, radius int32) {
 	t.Helper()
-	s.name = fmt.Sprintf("%s, radius %d", s.name, radius)
-	s.lay(t, arrange.Grow(s.outline, s.mesh, radius))
+	sides := []int{arrange.FineSides, arrange.CoarseSides}[s.IntN(2)]
+	s.name = fmt.Sprintf("%s, radius %d, %d sides", s.name, radius, sides)
+	s.lay(t, arrange.Grow(s.outline, s.mesh, radius, sides))
 	for i, e := range s.graph.Edges {
 		for _, w := range s.graph.Winds[e.Wind0:e.Wind1] {
 			if int(w.Body) == len(s.graph.Bodies)-1 {
