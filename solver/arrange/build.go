@@ -32,73 +32,8 @@ func Build(ctx context.Context, g *Graph) (*mesh.Mesh, error) {
 
 // solids returns what each triangle stops.
 func (g *Graph) solids(ctx context.Context, tr *mesh.Triangulation) ([]mesh.Tag, error) {
-	solid := make([]mesh.Tag, tr.Len())
-	seen := make([]bool, tr.Len())
 	w := winding{count: make([]int32, len(g.Bodies)), bodies: g.Bodies}
-	count := 0
-	var err error
-	g.flood(tr, &w, g.outside(tr), func(t int32) bool { return !seen[t] && err == nil }, func(t int32, s mesh.Tag) {
-		seen[t] = true
-		solid[t] = s
-		if e := pulse.Step(ctx, count, tr.Len()); e != nil {
-			err = e
-		}
-		count++
-	})
-	return solid, err
-}
-
-// triangles is a triangulation as flood walks over it.
-type triangles interface {
-	Corners(t int32) [3]int32
-	Neighbour(t int32, i int) (tri, constraint int32)
-}
-
-// flood walks over the mesh for as long as enter accepts the next triangle, face by face, a face being what no edge of the
-// graph parts. It keeps the winding numbers of the place in w, which hold for the first triangle, tells what each triangle
-// stops, and takes every step across an edge back when it has seen what lies behind it. O(triangles entered).
-func (g *Graph) flood(f triangles, w *winding, first int32, enter func(t int32) bool, found func(t int32, s mesh.Tag)) {
-	type border struct {
-		tri  int32 // behind it
-		edge int32 // of the graph, or -1
-		sign int32 // +1 when it is crossed from its right to its left
-		back bool
-	}
-	borders := []border{{tri: first, edge: -1}}
-	var face []int32
-	for len(borders) > 0 {
-		b := borders[len(borders)-1]
-		borders = borders[:len(borders)-1]
-		if b.back {
-			w.cross(g, b.edge, -b.sign)
-			continue
-		}
-		if !enter(b.tri) {
-			continue
-		}
-		if b.edge >= 0 {
-			w.cross(g, b.edge, b.sign)
-			borders = append(borders, border{edge: b.edge, sign: b.sign, back: true})
-		}
-		stops := w.stops()
-		found(b.tri, stops)
-		for face = append(face, b.tri); len(face) > 0; {
-			t := face[len(face)-1]
-			face = face[:len(face)-1]
-			for i := range 3 {
-				next, edge := f.Neighbour(t, i)
-				if next < 0 || !enter(next) {
-					continue
-				}
-				if edge >= 0 {
-					borders = append(borders, border{tri: next, edge: edge, sign: g.leaving(edge, f.Corners(t)[i])})
-					continue
-				}
-				found(next, stops)
-				face = append(face, next)
-			}
-		}
-	}
+	return tr.Faces(ctx, func(edge, from int32) { w.cross(g, edge, g.leaving(edge, from)) }, w.stops)
 }
 
 // leaving returns the sign with which a triangle is left through graph edge e, or -1 for none, of which its half-edge starts
@@ -111,18 +46,6 @@ func (g *Graph) leaving(e, v int32) int32 {
 		return -1
 	}
 	return 1
-}
-
-// outside returns a triangle at a corner of the box, which lies outside every body.
-func (g *Graph) outside(tr *mesh.Triangulation) int32 {
-	corner := int32(len(g.Pts))
-	for t := range int32(tr.Len()) {
-		v := tr.Corners(t)
-		if v[0] == corner || v[1] == corner || v[2] == corner {
-			return t
-		}
-	}
-	panic("arrange: the box has no triangle")
 }
 
 // winding is the winding number of a place about every body.

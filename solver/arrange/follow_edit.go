@@ -178,6 +178,59 @@ func (c *change) solids(d *mesh.Editor) map[int32]mesh.Tag {
 	return solid
 }
 
+// triangles is a triangulation as flood walks over it.
+type triangles interface {
+	Corners(t int32) [3]int32
+	Neighbour(t int32, i int) (tri, constraint int32)
+}
+
+// flood walks over the mesh for as long as enter accepts the next triangle, face by face, a face being what no edge of the
+// graph parts. It keeps the winding numbers of the place in w, which hold for the first triangle, tells what each triangle
+// stops, and takes every step across an edge back when it has seen what lies behind it. O(triangles entered).
+func (g *Graph) flood(f triangles, w *winding, first int32, enter func(t int32) bool, found func(t int32, s mesh.Tag)) {
+	type border struct {
+		tri  int32 // behind it
+		edge int32 // of the graph, or -1
+		sign int32 // +1 when it is crossed from its right to its left
+		back bool
+	}
+	borders := []border{{tri: first, edge: -1}}
+	var face []int32
+	for len(borders) > 0 {
+		b := borders[len(borders)-1]
+		borders = borders[:len(borders)-1]
+		if b.back {
+			w.cross(g, b.edge, -b.sign)
+			continue
+		}
+		if !enter(b.tri) {
+			continue
+		}
+		if b.edge >= 0 {
+			w.cross(g, b.edge, b.sign)
+			borders = append(borders, border{edge: b.edge, sign: b.sign, back: true})
+		}
+		stops := w.stops()
+		found(b.tri, stops)
+		for face = append(face, b.tri); len(face) > 0; {
+			t := face[len(face)-1]
+			face = face[:len(face)-1]
+			for i := range 3 {
+				next, edge := f.Neighbour(t, i)
+				if next < 0 || !enter(next) {
+					continue
+				}
+				if edge >= 0 {
+					borders = append(borders, border{tri: next, edge: edge, sign: g.leaving(edge, f.Corners(t)[i])})
+					continue
+				}
+				found(next, stops)
+				face = append(face, next)
+			}
+		}
+	}
+}
+
 // nearBox reports whether triangle t reaches into the box around the change. Rounding moves a segment by less than a unit.
 func (c *change) nearBox(d *mesh.Editor, t int32) bool {
 	v := d.Corners(t)

@@ -69,6 +69,7 @@ func TestCrowdedPoints(t *testing.T) {
 			if tr.most() < int32(n)/3 {
 				t.Fatalf("%s of %d: at most %d edges meet in a point; wanted a crowd", name, n, tr.most())
 			}
+			tr.findOut()
 			for k := range tr.tris { // every edge from both its ends
 				for i, v := range tr.tris[k].v {
 					if e := EdgeOf(int32(k), i); tr.lookup(v, tr.tris[k].v[inc[i]]) != e {
@@ -144,6 +145,7 @@ func TestThroughPencil(t *testing.T) {
 		if back {
 			a, b = b, a
 		}
+		tr.findOut()
 		before := tr.steps
 		if err := tr.constrain(a, b, 0); err != nil {
 			t.Fatal(err)

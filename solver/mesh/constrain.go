@@ -8,28 +8,110 @@ import (
 	"enfilade/solver/pulse"
 )
 
-// constrainAll forces every edge into the triangulation and restores the Delaunay property around it. The edges are taken in
-// the order of their first points along the curve.
+// constrainAll forces every edge into the triangulation and restores the Delaunay property around it. Most edges are there
+// already, as corners of a plan lie close along its walls: they are recognised in one pass over the triangles, and the others
+// are forced in one by one, in the order of their first points along the curve. O(n) for those that are there.
 func (tr *Triangulation) constrainAll(ctx context.Context, edges [][2]int32, along []int32) error {
-	tr.out = make([]Edge, len(tr.Pts))
-	for t := range tr.tris {
-		for i, v := range tr.tris[t].v {
-			tr.out[v] = EdgeOf(int32(t), i)
+	h := holdBy(edges, along)
+	_, err := pulse.Split(pulse.Part(ctx, 0, 0.3), len(tr.tris), func(ctx context.Context, lo, hi int) (none struct{}, err error) {
+		for t := lo; t < hi && err == nil; t++ {
+			tr.recognise(int32(t), h)
+			err = pulse.Step(ctx, t-lo, hi-lo)
 		}
+		return none, err
+	})
+	if err != nil {
+		return err
 	}
-	first := make([]int32, len(edges))
-	for k, e := range edges {
-		first[k] = along[e[0]]
-	}
-	for i, k := range byKey(first, len(along)) {
+	ctx = pulse.Part(ctx, 0.3, 1)
+	for i, e := range h.list {
 		if err := pulse.Step(ctx, i, len(edges)); err != nil {
 			return err
 		}
-		if err := tr.constrain(along[edges[k][0]], along[edges[k][1]], k); err != nil {
+		if e.done {
+			continue
+		}
+		if tr.out == nil {
+			tr.findOut()
+		}
+		ends := edges[e.edge]
+		if err := tr.constrain(along[ends[0]], along[ends[1]], e.edge); err != nil {
 			return err
 		}
 	}
 	return nil
+}
+
+// held is an edge as known to the one of its ends that comes first along the curve: the other end, and whether it has been
+// marked.
+type held struct {
+	to, edge int32
+	done     bool
+}
+
+// holds are edges by their first ends: those of point v are list[start[v]:start[v+1]].
+type holds struct {
+	start []int32
+	list  []held
+}
+
+// holdBy gathers edges by counting. O(n).
+func holdBy(edges [][2]int32, along []int32) holds {
+	h := holds{make([]int32, len(along)+2), make([]held, len(edges))}
+	next := h.start[1:] // which becomes where the next point's begin
+	for _, e := range edges {
+		h.start[min(along[e[0]], along[e[1]])+2]++
+	}
+	for i := 2; i < len(h.start); i++ {
+		h.start[i] += h.start[i-1]
+	}
+	for k, e := range edges {
+		a, b := along[e[0]], along[e[1]]
+		a, b = min(a, b), max(a, b)
+		h.list[next[a]] = held{to: b, edge: int32(k)}
+		next[a]++
+	}
+	return h
+}
+
+// few is how many edges of one point recognise goes through; any number is right.
+const few = 16
+
+// recognise marks those edges of triangle t that are to be held, each from one of its two sides.
+func (tr *Triangulation) recognise(t int32, h holds) {
+	r := &tr.tris[t]
+	for i, n := range r.n {
+		if n < EdgeOf(t, i) {
+			continue // or None
+		}
+		a, b := r.v[i], r.v[inc[i]]
+		a, b = min(a, b), max(a, b)
+		list := h.list[h.start[a]:h.start[a+1]]
+		if len(list) > few {
+			continue // those of a point where many meet are found from their other ends
+		}
+		for k := range list {
+			if e := &list[k]; e.to == b && !e.done {
+				e.done = true
+				r.c[i] = e.edge
+				tr.tris[n.Tri()].c[n.Corner()] = e.edge
+				break
+			}
+		}
+	}
+}
+
+// findOut finds a half-edge that leaves each point. O(n).
+func (tr *Triangulation) findOut() {
+	tr.out = make([]Edge, len(tr.Pts))
+	for t := range tr.tris {
+		if tr.tris[t].v[0] == dead {
+			continue
+		}
+		for i, v := range tr.tris[t].v {
+			tr.out[v] = EdgeOf(int32(t), i)
+		}
+	}
 }
 
 // constrain forces the edge from a to b in as constraint k.

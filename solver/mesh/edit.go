@@ -21,9 +21,12 @@ type Editor struct {
 	changed []int32
 }
 
-// NewEditor begins a change of m.
+// NewEditor begins a change of m. The first one takes O(n).
 func NewEditor(m *Mesh) *Editor {
 	m.raw.log, m.raw.logs = m.raw.log[:0], true
+	if m.raw.out == nil { // only changes ask for it
+		m.raw.findOut()
+	}
 	return &Editor{m: m, tr: m.raw}
 }
 

@@ -31,8 +31,8 @@ func (tr *Triangulation) insertAll(ctx context.Context, along []int32) error {
 	return nil
 }
 
-// strides is how many triangles find crosses before it takes to walk; any number is right.
-const strides = 1 << 10
+// strides is how many triangles find crosses before it takes to walk, and walkTo before it wanders; any number is right.
+const strides = 1 << 8
 
 // find is walk for a triangulation that no constraint has changed yet. It need not toss for its way: in a Delaunay
 // triangulation no walk across edges that have p behind them goes in circles (De Floriani, Falcidieno, Nagy and Pienovi, "On

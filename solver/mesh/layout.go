@@ -36,12 +36,7 @@ func (tr *Triangulation) arrange(ctx context.Context, pts []exact.Pt, curve []in
 	if err != nil {
 		return err
 	}
-	tr.tris, tr.Pts = tris, pts
-	for t := range tr.tris {
-		for i, v := range tr.tris[t].v {
-			tr.out[v] = EdgeOf(int32(t), i)
-		}
-	}
+	tr.tris, tr.Pts, tr.out = tris, pts, nil
 	return nil
 }
 

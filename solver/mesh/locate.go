@@ -83,9 +83,49 @@ func (m *Mesh) hint(p exact.Pt) int32 {
 	return t
 }
 
-// walkTo walks from triangle t to one that holds p, which must lie in the mesh's rectangle: see Triangulation.walk. It
-// returns the triangle, the last of its edges with p on their line, and how many such edges there are.
+// walkTo walks from triangle t to one that holds p, which must lie in the mesh's rectangle. It returns the triangle, the last
+// of its edges with p on their line, and how many such edges there are.
+//
+// It goes straight on as long as it may, and tosses for its way from then on: around constraints a walk that does not may go in
+// circles for ever (see Triangulation.walk).
 func (m *Mesh) walkTo(t int32, p exact.Pt) (tri int32, zero, zeros int) {
+	r := &m.Tris[t]
+	e := EdgeOf(t, 0)
+	a, b := r.P[0], r.P[1]
+	s := exact.Area2(a, b, p)
+	if s < 0 {
+		e, a, b = r.N[0], b, a
+	}
+	for range strides {
+		r = &m.Tris[e.Tri()]
+		next, last := e.Next(), e.Prev()
+		c := r.P[last.Corner()]
+		s1 := exact.Area2(b, c, p)
+		if s1 < 0 {
+			e, a, s = r.N[next.Corner()], c, 1
+			continue
+		}
+		s2 := exact.Area2(c, a, p)
+		if s2 < 0 {
+			e, b, s = r.N[last.Corner()], c, 1
+			continue
+		}
+		if s == 0 {
+			zero, zeros = e.Corner(), 1
+		}
+		if s1 == 0 {
+			zero, zeros = next.Corner(), zeros+1
+		}
+		if s2 == 0 {
+			zero, zeros = last.Corner(), zeros+1
+		}
+		return e.Tri(), zero, zeros
+	}
+	return m.wander(e.Tri(), p)
+}
+
+// wander is walkTo for those who have not arrived.
+func (m *Mesh) wander(t int32, p exact.Pt) (tri int32, zero, zeros int) {
 	came := int32(-1)
 	for turn := uint32(1); ; turn = turn*1664525 + 1013904223 {
 		r := &m.Tris[t]

@@ -78,15 +78,11 @@ func Inc(i int) int { return inc[i] }
 func (tr *Triangulation) Finish(ctx context.Context, tags []Tag, solid []Tag) (*Mesh, error) {
 	n := len(tr.tris)
 	m := &Mesh{Pts: tr.Pts, Tris: make([]Tri, n), Solid: make([]int32, n), shut: make([]bool, n), raw: tr, tags: tags}
-	for t := range m.Tris {
-		m.setSolid(int32(t), solid[t])
-	}
-	if err := pulse.Tell(ctx, 0.2); err != nil {
-		return nil, err
-	}
-	_, err := pulse.Split(pulse.Part(ctx, 0.2, 0.6), n, func(ctx context.Context, lo, hi int) (none struct{}, err error) {
+	line := make([]Tag, len(tags)+1) // what lies along an edge, the first one without a constraint
+	copy(line[1:], tags)
+	_, err := pulse.Split(pulse.Part(ctx, 0, 0.6), n, func(ctx context.Context, lo, hi int) (none struct{}, err error) {
 		for k := lo; k < hi && err == nil; k++ {
-			m.refresh(int32(k))
+			m.lay(int32(k), solid, line)
 			err = pulse.Step(ctx, k-lo, hi-lo)
 		}
 		return none, err
@@ -97,26 +93,54 @@ func (tr *Triangulation) Finish(ctx context.Context, tags []Tag, solid []Tag) (*
 	if m.grid, err = makeGrid(pulse.Part(ctx, 0.6, 0.9), m); err != nil {
 		return nil, err
 	}
-	m.turn = makeTurning(m)
 	return m, pulse.Tell(ctx, 1)
 }
 
 // firstCorner returns the corner of r that comes first in the order of points.
-func (tr *Triangulation) firstCorner(r *rawTri) uint8 {
-	a, b, c := tr.Pts[r.v[0]], tr.Pts[r.v[1]], tr.Pts[r.v[2]]
-	switch {
-	case a.Less(b) && a.Less(c):
-		return 0
-	case b.Less(c):
-		return 1
+func (tr *Triangulation) firstCorner(r *rawTri) (first uint8) {
+	least, b, c := packed(tr.Pts[r.v[0]]), packed(tr.Pts[r.v[1]]), packed(tr.Pts[r.v[2]])
+	if b < least {
+		first, least = 1, b
 	}
-	return 2
+	if c < least {
+		first = 2
+	}
+	return first
 }
+
+// packed makes p a number, so that the order of numbers is that of points.
+func packed(p exact.Pt) int64 { return int64(p.X)<<32 | int64(uint32(p.Y)^1<<31) }
 
 func (m *Mesh) setSolid(t int32, s Tag) { m.Solid[t], m.shut[t] = s.Top, s.Walk }
 
 // solid returns what triangle t stops.
 func (m *Mesh) solid(t int32) Tag { return Tag{m.Solid[t], m.shut[t]} }
+
+// lay is refresh for a mesh that is new: solid is what every triangle stops, line[k+1] what constraint k does. It asks no
+// question whose answer is as often yes as no.
+func (m *Mesh) lay(t int32, solid, line []Tag) {
+	r, q := &m.raw.tris[t], &m.Tris[t]
+	own := solid[t]
+	m.Solid[t], m.shut[t] = own.Top, own.Walk
+	flags := bit(own.Walk) * FlagNoWalk
+	for i, n := range r.n {
+		behind := Tag{Ceiling, true}
+		if n != None {
+			behind = solid[n.Tri()]
+		}
+		along := line[r.c[i]+1]
+		q.P[i], q.Top[i] = m.Pts[r.v[i]], max(own.Top, behind.Top, along.Top)
+		flags |= (bit(own.Walk) | bit(behind.Walk) | bit(along.Walk)) << uint(i)
+	}
+	q.V, q.N, q.Flags = r.v, r.n, flags
+}
+
+func bit(b bool) (v uint32) {
+	if b {
+		v = 1
+	}
+	return v
+}
 
 // refresh writes what queries read of triangle t, from its raw form and from what it and its neighbours stop.
 func (m *Mesh) refresh(t int32) {

@@ -81,24 +81,36 @@ func hash(p exact.Pt) uint32 {
 	return h ^ h>>16
 }
 
-// hilbert returns the position of the cell x, y of a 2^16 square along the Hilbert curve of that order.
+// hilbert returns the position of the cell x, y of a 2^16 square along the Hilbert curve of that order: four bits of each at a
+// time.
 func hilbert(x, y uint32) uint32 {
-	var d uint32
-	for s := uint32(1) << 15; s > 0; s >>= 1 {
-		var rx, ry uint32
-		if x&s != 0 {
-			rx = 1
-		}
-		if y&s != 0 {
-			ry = 1
-		}
-		d += s * s * (3*rx ^ ry)
-		if ry == 0 {
-			if rx == 1 {
-				x, y = 1<<16-1-x, 1<<16-1-y
-			}
-			x, y = y, x
-		}
+	var d, turned uint32
+	for s := 12; s >= 0; s -= 4 {
+		step := uint32(hilbertSteps[turned<<8|x>>s&15<<4|y>>s&15])
+		d, turned = d<<8|step>>2, step&3
 	}
 	return d
+}
+
+// hilbertSteps is what four bits of x and four of y, lower ones, add to the position along the Hilbert curve, in a square that is
+// turned in one of four ways: eight bits of the position, then two of how the cell is turned. A square is turned by taking the
+// complements of its coordinates (1), or by swapping them (2), or both.
+var hilbertSteps = makeHilbertSteps()
+
+func makeHilbertSteps() (table [4 << 8]uint16) {
+	for k := range table {
+		turned, x, y, d := k>>8, k>>4&15, k&15, 0
+		for s := 3; s >= 0; s-- {
+			rx, ry := x>>s&1^turned&1, y>>s&1^turned&1
+			if turned&2 != 0 {
+				rx, ry = ry, rx
+			}
+			d = d<<2 | 3*rx ^ ry
+			if ry == 0 {
+				turned ^= rx | 2
+			}
+		}
+		table[k] = uint16(d<<2 | turned)
+	}
+	return table
 }

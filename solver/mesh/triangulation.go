@@ -48,7 +48,7 @@ type Triangulation struct {
 	Pts   []exact.Pt // the given points, then the four corners of the box around them, then points added later
 	tris  []rawTri
 	box   int32      // index of the first corner of the box
-	out   []Edge     // some half-edge leaving each point
+	out   []Edge     // some half-edge leaving each point; nil until it is needed
 	todo  []int32    // stack of triangles around a new point to examine
 	work  [][2]int32 // edges to examine, by their ends
 	free  []int32    // triangles taken out, to be used again

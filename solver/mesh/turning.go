@@ -1,6 +1,11 @@
 package mesh
 
-import "enfilade/solver/exact"
+import (
+	"sync"
+	"sync/atomic"
+
+	"enfilade/solver/exact"
+)
 
 // Sector is the floor around a point between two edges there that stop walking. Someone who walks past the point turns
 // within one sector; a point where several walls meet has several, and they are different places.
@@ -14,29 +19,58 @@ type Sector struct {
 
 // turning holds the sectors in which a shortest walk may turn: those wider than half a turn.
 type turning struct {
+	made    atomic.Bool
+	making  sync.Mutex
 	sectors []Sector
 	at      []int32 // for each half-edge the sector that its starting corner belongs to, or -1
 	places  []uint8 // for each point the number of its sectors, wide or not, capped
 }
 
 // SectorAt returns the turning sector that the starting corner of e belongs to, or -1 where no shortest walk turns.
-func (m *Mesh) SectorAt(e Edge) int32 { return m.turn.at[e] }
+func (m *Mesh) SectorAt(e Edge) int32 { return m.turning().at[e] }
 
 // Sector returns turning sector s.
-func (m *Mesh) Sector(s int32) *Sector { return &m.turn.sectors[s] }
+func (m *Mesh) Sector(s int32) *Sector { return &m.turning().sectors[s] }
 
 // NumSectors returns the number of turning sectors.
-func (m *Mesh) NumSectors() int { return len(m.turn.sectors) }
+func (m *Mesh) NumSectors() int { return len(m.turning().sectors) }
 
 // OnePlace reports whether point v is a single place for someone who walks: no two sectors meet there.
-func (m *Mesh) OnePlace(v int32) bool { return m.turn.places[v] < 2 }
+func (m *Mesh) OnePlace(v int32) bool { return m.turning().places[v] < 2 }
 
-// makeTurning finds the turning sectors by going around every point from each edge that stops walking. O(n).
-func makeTurning(m *Mesh) turning {
-	turn := turning{at: make([]int32, 4*len(m.Tris)), places: make([]uint8, len(m.Pts))}
+// turning returns the sectors, which are found when they are first asked for: nobody may ever walk on the mesh. Several may ask
+// at once.
+func (m *Mesh) turning() *turning {
+	if !m.turn.made.Load() {
+		m.turn.make(m)
+	}
+	return &m.turn
+}
+
+// make finds the turning sectors by going around every point from each edge that stops walking. O(n).
+func (turn *turning) make(m *Mesh) {
+	turn.making.Lock()
+	defer turn.making.Unlock()
+	if turn.made.Load() {
+		return
+	}
+	turn.at, turn.places = make([]int32, 4*len(m.Tris)), make([]uint8, len(m.Pts))
 	for i := range turn.at {
 		turn.at[i] = -1
 	}
+	borders := 0
+	turn.eachBorder(m, func(Edge) { borders++ })
+	turn.sectors = make([]Sector, 0, borders/2+16) // about half of all corners are inward ones
+	turn.eachBorder(m, func(e Edge) {
+		v := &turn.places[m.Tris[e.Tri()].V[e.Corner()]]
+		*v = min(*v+1, 2)
+		turn.add(m, e)
+	})
+	turn.made.Store(true)
+}
+
+// eachBorder calls do for every edge that stops walking with walkable floor to its left.
+func (turn *turning) eachBorder(m *Mesh, do func(e Edge)) {
 	for t := range m.Tris {
 		tri := &m.Tris[t]
 		if tri.Flags&FlagNoWalk != 0 || tri.Flags&flagBoundary == 0 {
@@ -44,16 +78,17 @@ func makeTurning(m *Mesh) turning {
 		}
 		for i := range 3 {
 			if tri.StopsWalk(i) {
-				turn.places[tri.V[i]] = min(turn.places[tri.V[i]]+1, 2)
-				turn.add(m, EdgeOf(int32(t), i))
+				do(EdgeOf(int32(t), i))
 			}
 		}
 	}
-	return turn
 }
 
-// update finds the sectors again around every point of the triangles listed.
+// update finds the sectors again around every point of the triangles listed, if they have been found before.
 func (turn *turning) update(m *Mesh, tris []int32) {
+	if !turn.made.Load() {
+		return
+	}
 	for len(turn.at) < 4*len(m.Tris) {
 		turn.at = append(turn.at, -1)
 	}
