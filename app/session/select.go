@@ -12,30 +12,7 @@ func (s *Session) Selection() []plan.Ref { return s.selected }
 
 // Select makes refs the selection, without doubles and without items the shown plan does not have.
 func (s *Session) Select(refs ...plan.Ref) {
-	has := holder(s.Plan(), len(refs))
-	seen := make(map[plan.Ref]bool, len(refs))
-	var sel []plan.Ref
-	for _, r := range refs {
-		if !seen[r] && has(r) {
-			seen[r] = true
-			sel = append(sel, r)
-		}
-	}
-	s.selected = sel
-}
-
-// holder returns a function that tells whether p has an item, quick when it is called that often: each call of Plan.Has walks a
-// list, which for everything in a plan of 20,000 walls takes seconds.
-func holder(p *plan.Plan, calls int) func(plan.Ref) bool {
-	const few = 16
-	if calls <= few {
-		return p.Has
-	}
-	in := map[plan.Ref]bool{}
-	for r := range All(p) {
-		in[r] = true
-	}
-	return func(r plan.Ref) bool { return in[r] || r.Kind.Letter() == "" && p.Has(r) }
+	s.selected = s.Plan().Present(refs)
 }
 
 // Toggle adds r to the selection, or takes it out when it is there.

@@ -134,8 +134,10 @@ func (s *Session) settle(shown *plan.Plan) {
 	if s.Plan() == shown {
 		return
 	}
-	has := holder(s.Plan(), len(s.selected))
-	s.selected = slices.DeleteFunc(s.selected, func(r plan.Ref) bool { return !has(r) })
+	if !plan.SameItems(shown, s.Plan()) {
+		has := s.Plan().Has
+		s.selected = slices.DeleteFunc(s.selected, func(r plan.Ref) bool { return !has(r) })
+	}
 	s.tell()
 }
 

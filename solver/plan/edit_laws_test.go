@@ -48,7 +48,7 @@ func genEdit(t *rapid.T) plan.Edit {
 // TestEditLaws applies random edits one after another: no edit changes the plan it is given, marks alone never touch the
 // obstacles nor the other way round, ids stay apart, and openings go on fitting their walls side by side.
 func TestEditLaws(t *testing.T) {
-	done, refused := 0, 0
+	done, refused, alike := 0, 0, 0
 	rapid.Check(t, func(t *rapid.T) {
 		p := room()
 		for range 12 {
@@ -74,13 +74,49 @@ func TestEditLaws(t *testing.T) {
 			if !same(a, b) {
 				t.Fatalf("%+v changed a part it says it shares", e)
 			}
+			if plan.SameItems(p, q) {
+				alike++
+				if got, want := names(q), names(p); got != want {
+					t.Fatalf("%+v: items %s, said to be the same as %s", e, got, want)
+				}
+			}
 			checkFits(t, b)
 			p = q
 		}
 	})
-	if done < 200 || refused < 100 {
-		t.Errorf("%d edits done, %d refused: the generator lost its aim", done, refused)
+	if done < 200 || refused < 100 || alike < 50 {
+		t.Errorf("%d edits done, %d refused, %d left the items the same: the generator lost its aim", done, refused, alike)
 	}
+}
+
+// names lists what is in a plan.
+func names(p *plan.Plan) string {
+	var out []any
+	for _, w := range p.Walls() {
+		out = append(out, w.ID)
+	}
+	for _, o := range p.Openings() {
+		out = append(out, o.ID)
+	}
+	for _, b := range p.Blocks() {
+		out = append(out, b.ID)
+	}
+	for _, z := range p.Zones() {
+		out = append(out, z.ID)
+	}
+	for _, o := range p.Observers() {
+		out = append(out, o.ID)
+	}
+	for _, t := range p.Targets() {
+		out = append(out, t.ID)
+	}
+	for _, s := range p.Starts() {
+		out = append(out, s.ID)
+	}
+	for _, r := range p.Routes() {
+		out = append(out, r.ID)
+	}
+	return fmt.Sprintln(append(out, p.Floor().Len() > 0, p.Sheet().Underlay != nil)...)
 }
 
 func checkFits(t *rapid.T, p plan.Parts) {

@@ -24,15 +24,56 @@ func (p *Plan) pick(items []Ref) picked {
 			}
 			continue
 		}
-		set := s.sets[r.Kind]
-		if set == nil {
-			set = make([]uint64, p.count(r.Kind)/64+1)
-			s.sets[r.Kind] = set
-		}
-		set[i/64] |= 1 << (i % 64)
+		s.add(r.Kind, i)
 	}
 	return s
 }
+
+// add picks the item at a place, and reports whether it was not yet.
+func (s *picked) add(kind Kind, i int) bool {
+	set := s.sets[kind]
+	if set == nil {
+		set = make([]uint64, s.plan.count(kind)/64+1)
+		s.sets[kind] = set
+	}
+	was := set[i/64]
+	set[i/64] |= 1 << (i % 64)
+	return set[i/64] != was
+}
+
+// Present returns the items that are in the plan, each once, in the order given. Cost: constant for each of many.
+func (p *Plan) Present(items []Ref) []Ref {
+	if len(items) == 0 {
+		return nil
+	}
+	out := make([]Ref, 0, len(items))
+	s := picked{plan: p}
+	for _, r := range items {
+		if i := p.place(r); i >= 0 && s.add(r.Kind, i) {
+			out = append(out, r)
+		}
+	}
+	return out
+}
+
+// SameItems reports whether q was made from p, or p from q, without an item being added or taken away. It may say no where that is
+// so, and is quick.
+func SameItems(p, q *Plan) bool {
+	a, b, m, n := p.obstacles, q.obstacles, p.marks, q.marks
+	return a.walls.ids == b.walls.ids && a.openings.ids == b.openings.ids && a.blocks.ids == b.blocks.ids &&
+		m.zones.ids == n.zones.ids && m.observers.ids == n.observers.ids && m.targets.ids == n.targets.ids &&
+		m.starts.ids == n.starts.ids && m.routes.ids == n.routes.ids &&
+		(a.floor.Len() > 0) == (b.floor.Len() > 0) && (p.sheet.Underlay == nil) == (q.sheet.Underlay == nil)
+}
+
+// Set is a set of items of a plan, which tells at once what it holds.
+type Set struct{ picked }
+
+// SetOf returns the set of those of some items that are in the plan.
+func (p *Plan) SetOf(items []Ref) Set { return Set{p.pick(items)} }
+
+// Has reports whether an item is in the set.
+func (s *Set) Has(r Ref) bool { return s.has(r.Kind, r.ID) }
 
 // some reports whether any item of a kind is picked.
 func (s *picked) some(kind Kind) bool { return s.sets[kind] != nil }
