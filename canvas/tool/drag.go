@@ -50,13 +50,13 @@ func cornerEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
 
 // moveEdit moves the selected items so that the held one's anchor snaps.
 func moveEdit(h Host, g *grip, e Pointer) (plan.Edit, *pick.Snap) {
-	refs := movable(h.Plan(), h.Selection())
+	refs := g.moving(h)
 	if len(refs) == 0 {
 		return nil, nil
 	}
 	anchor := anchorOf(h, g)
 	ax, ay := h.Camera().Pixel(anchor)
-	to := pick.SnapTo{Free: e.Ctrl, Skip: func(r plan.Ref) bool { return slices.Contains(refs, r) }, From: &anchor}
+	to := pick.SnapTo{Free: e.Ctrl, Skip: g.moves.Has, From: &anchor}
 	var snap pick.Snap
 	if g.hit.Ref.Kind == plan.KindObserver {
 		// Eyes stand on floor: a wall's line lies inside its body, so they snap to the grid alone.
@@ -171,7 +171,16 @@ func draggedBy(h Host, g *grip) []plan.Ref {
 	if g.handle() || g.hit.Ref.Kind == plan.KindOpening {
 		return []plan.Ref{g.hit.Ref}
 	}
-	return movable(h.Plan(), h.Selection())
+	return g.moving(h)
+}
+
+// moving returns what moves when the selection is dragged.
+func (g *grip) moving(h Host) []plan.Ref {
+	if g.refs == nil {
+		g.refs = movable(h.Plan(), h.Selection())
+		g.moves = h.Plan().SetOf(g.refs)
+	}
+	return g.refs
 }
 
 // dragLabel is the measure beside the pointer.

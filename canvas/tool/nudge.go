@@ -33,10 +33,10 @@ func nudgeEdit(p *plan.Plan, sel []plan.Ref, by exact.Vec) plan.Edit {
 	if refs := movable(p, sel); len(refs) > 0 {
 		return plan.MoveItems{Items: refs, By: by}
 	}
-	return each(p, sel, "move opening", func(o plan.Opening) plan.Edit {
+	return each(p, sel, "move opening", func(o *plan.Opening) bool {
 		w, ok := p.Wall(o.Wall)
 		if !ok || o.Segment < 0 || o.Segment+1 >= w.Line.Len() {
-			return nil
+			return false
 		}
 		a, b := w.Line.At(o.Segment), w.Line.At(o.Segment+1)
 		step := max(abs(by.X), abs(by.Y))
@@ -45,26 +45,31 @@ func nudgeEdit(p *plan.Plan, sel []plan.Ref, by exact.Vec) plan.Edit {
 		}
 		at := max(0, min(o.At+step, int32(math.Floor(exact.Dist(a, b)))-o.Width))
 		if at == o.At || b.Sub(a).Dot(by) == 0 {
-			return nil
+			return false
 		}
 		o.At = at
-		return plan.SetOpening{Opening: o}
+		return true
 	})
 }
 
-// each returns the edits of all selected openings that are not locked as one, nil when there are none.
-func each(p *plan.Plan, sel []plan.Ref, label string, edit func(plan.Opening) plan.Edit) plan.Edit {
-	var all []plan.Edit
+// each returns the edit that changes all selected openings that are not locked at once, nil when change changes none.
+func each(p *plan.Plan, sel []plan.Ref, label string, change func(*plan.Opening) bool) plan.Edit {
+	var all []plan.Opening
 	for _, r := range sel {
-		o, ok := p.Opening(r.ID)
-		if r.Kind != plan.KindOpening || !ok || o.Locked {
+		if r.Kind != plan.KindOpening {
 			continue
 		}
-		if e := edit(o); e != nil {
-			all = append(all, e)
+		if o, ok := p.Opening(r.ID); ok && !o.Locked && change(&o) {
+			all = append(all, o)
 		}
 	}
-	return stepsOf(label, all)
+	switch len(all) {
+	case 0:
+		return nil
+	case 1:
+		return plan.Steps{Text: label, Edits: []plan.Edit{plan.SetOpening{Opening: all[0]}}}
+	}
+	return plan.SetItems{Text: label, Openings: all}
 }
 
 func stepsOf(label string, all []plan.Edit) plan.Edit {
@@ -81,14 +86,14 @@ func turnedOver(p *plan.Plan, sel []plan.Ref, r rune) plan.Edit {
 	if !ok {
 		return nil
 	}
-	if e := each(p, sel, label, func(o plan.Opening) plan.Edit {
-		old := o
-		text, _ := hang(&o, r)
-		if o == old {
-			return nil
+	if e := each(p, sel, label, func(o *plan.Opening) bool {
+		old := *o
+		text, _ := hang(o, r)
+		if *o == old {
+			return false
 		}
 		label = text
-		return plan.SetOpening{Opening: o}
+		return true
 	}); e != nil {
 		return Named(label, e)
 	}
@@ -96,6 +101,7 @@ func turnedOver(p *plan.Plan, sel []plan.Ref, r rune) plan.Edit {
 		return nil
 	}
 	var all []plan.Edit
+	var walls []plan.Wall
 	text := "move body of wall"
 	for _, q := range sel {
 		if e := TurnRound(p, q); e != nil {
@@ -104,8 +110,11 @@ func turnedOver(p *plan.Plan, sel []plan.Ref, r rune) plan.Edit {
 		}
 		if w, ok := p.Wall(q.ID); ok && q.Kind == plan.KindWall && !w.Locked {
 			w.Justify = (w.Justify + 1) % 3
-			all = append(all, plan.SetWall{Wall: w})
+			walls = append(walls, w)
 		}
+	}
+	if len(walls) > 0 {
+		all = append(all, plan.SetItems{Walls: walls})
 	}
 	return stepsOf(text, all)
 }

@@ -29,11 +29,13 @@ type grip struct {
 	to       exact.Pt
 	moved    bool // the pointer went farther than a click does
 	edit     plan.Edit
-	toggle   bool   // pressed with Shift
-	selected bool   // the hit was selected before
-	again    bool   // pressed where the last click was
-	touch    bool   // the box takes what it touches
-	label    string // the measure beside the pointer, where it is not a distance
+	toggle   bool       // pressed with Shift
+	selected bool       // the hit was selected before
+	again    bool       // pressed where the last click was
+	refs     []plan.Ref // what moves when the selection is dragged, found at the first move: while it is dragged the plan stays the same
+	moves    plan.Set   // the same
+	touch    bool       // the box takes what it touches
+	label    string     // the measure beside the pointer, where it is not a distance
 }
 
 // dragStart is how far the pointer goes before a press becomes a drag, in px at 100 %.
@@ -320,10 +322,7 @@ func selectionHint(sel []plan.Ref) string {
 func handles(p *plan.Plan, sel []plan.Ref) []exact.Pt {
 	const most = 64
 	var out []exact.Pt
-	for _, r := range sel {
-		if len(out) == most {
-			break
-		}
+	for _, r := range sel[:min(len(sel), most)] {
 		c, ok := pick.Points(p, r)
 		mark := r.Kind == plan.KindObserver || r.Kind == plan.KindTarget || r.Kind == plan.KindStart
 		if !ok || mark || len(out)+c.Len() > most {
