@@ -21,8 +21,11 @@ type manyKey struct {
 }
 
 // describeMany counts what is selected and offers the measures that all of it has, to be changed at once as one step. The form
-// of thousands of items is made once, not at each move of the pointer.
+// of thousands of items is made once, not at each move of the pointer; while they are dragged it shows what they were before.
 func (w *window) describeMany(p *plan.Plan, sel []plan.Ref) card {
+	if w.session.Previewing() {
+		p = w.session.Committed()
+	}
 	key := manyKey{p, &sel[0], len(sel), w.unit()}
 	if w.manyKey == key {
 		return w.many

@@ -84,6 +84,10 @@ func (p *picture) draw(w, h int) image.Image {
 	return p.frame.Draw(under, &p.overlay)
 }
 
+// mostHeld is how many items a drag may hold for them to be drawn anew in each frame. Of more the whole picture is: the worker makes
+// bases of the plan as it is in the midst of the drag, as fast as it can, and the frames show the newest.
+const mostHeld = 300
+
 // scene gathers all that the picture depends on.
 func (p *picture) scene() *paint.Scene {
 	w := p.w
@@ -101,7 +105,7 @@ func (p *picture) scene() *paint.Scene {
 	if d := w.distances(); d != nil {
 		s.Contours, s.ContourStep, s.ContoursOld = d.Lines, d.Step, r.stale(live.StageDistances)
 	}
-	if w.session.Previewing() && !slices.Contains(w.sketch.Dragged, plan.Ref{Kind: plan.KindFloor}) {
+	if d := w.sketch.Dragged; w.session.Previewing() && len(d) <= mostHeld && !slices.Contains(d, plan.Ref{Kind: plan.KindFloor}) {
 		s.Old, s.Dragged = w.session.Committed(), w.sketch.Dragged
 	}
 	if u := s.Plan.Sheet().Underlay; u != nil && u.Image == w.under.path {

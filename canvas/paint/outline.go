@@ -1,10 +1,6 @@
 package paint
 
-import (
-	"math"
-
-	"enfilade/solver/plan"
-)
+import "enfilade/solver/plan"
 
 // outlines draws a line about what is under the pointer and about what is selected, a few px outside of it.
 func (p *pen) outlines() {
@@ -29,16 +25,20 @@ func (p *pen) selection() {
 	if len(p.s.Dragged) > mostOutlines {
 		return
 	}
+	refs := p.s.Selected
+	if len(refs) > mostOutlines {
+		refs = p.chosen().inSight(p)
+	}
 	style := p.stroked(p.theme.Ink, StrokeStyle{Width: 2})
 	ops, points := len(p.Ops), len(p.Points)
 	first := p.begin()
 	m := first
-	for _, ref := range p.s.Selected {
+	for _, ref := range refs {
 		p.outlineOf(ref, SelectedOffset)
 		switch n := p.begin(); {
 		case n-first > mostOutlines:
 			p.Ops, p.Subs, p.Points = p.Ops[:ops], p.Subs[:first], p.Points[:points]
-			p.frameSelection()
+			p.frameAbout(p.chosen().all)
 			return
 		case n-m >= outlinesAtOnce:
 			p.op(m, style)
@@ -48,31 +48,8 @@ func (p *pen) selection() {
 	p.op(m, style)
 }
 
-// frameSelection draws a frame about the obstacles that are selected.
-func (p *pen) frameSelection() {
-	d := p.drawing
-	in := box{math.Inf(1), math.Inf(1), math.Inf(-1), math.Inf(-1)}
-	add := func(pts [2]int32) {
-		for _, q := range d.pts[pts[0]:pts[1]] {
-			x, y := float64(q.X), float64(q.Y)
-			in = box{min(in.x0, x), min(in.y0, y), max(in.x1, x), max(in.y1, y)}
-		}
-	}
-	for _, ref := range p.s.Selected {
-		sp := d.refs[ref]
-		for i := sp.body0; i < sp.body1; i++ {
-			if b := &d.bodies[i]; b.item == ref && !b.hidden {
-				for _, r := range d.rings[b.rings[0]:b.rings[1]] {
-					add(r)
-				}
-			}
-		}
-		for i := sp.line0; i < sp.line1; i++ {
-			if ln := &d.lines[i]; ln.item == ref && !ln.hidden {
-				add(ln.pts)
-			}
-		}
-	}
+// frameAbout draws a frame about a box in grid units.
+func (p *pen) frameAbout(in box) {
 	if in.x0 > in.x1 {
 		return
 	}

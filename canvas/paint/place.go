@@ -65,6 +65,8 @@ type memory struct {
 	heldRefs map[plan.Ref]bool // of a drag of dragged in the plan with the obstacles heldIn
 	heldIn   *plan.Obstacles
 	dragged  []plan.Ref
+
+	chosen manyChosen
 }
 
 // work is room that a list reuses.
