@@ -18,7 +18,7 @@ import (
 // MaxPhoto is how many pixels a photo may have: it takes four bytes for each, and a third more for its smaller levels.
 const MaxPhoto = 64_000_000
 
-// ReadPhoto decodes a PNG or JPEG. It may run on any goroutine.
+// ReadPhoto decodes a PNG or JPEG, and turns one upright that says how the camera was held. It may run on any goroutine.
 //
 //   - Errors say what is wrong and what would be right: it is neither, it is damaged, or it is too large.
 func ReadPhoto(data []byte) (*paint.Photo, error) {
@@ -35,18 +35,22 @@ func ReadPhoto(data []byte) (*paint.Photo, error) {
 	if err != nil {
 		return nil, fmt.Errorf("is a damaged %s: %w", kind, err)
 	}
-	return NewPhoto(img), nil
+	return makePhoto(img, orientation(data)), nil
 }
 
 // leastLevel is the width or height below which a photo is not halved any more.
 const leastLevel = 64
 
 // NewPhoto makes a picture ready to be drawn at any zoom.
-func NewPhoto(img image.Image) *paint.Photo {
+func NewPhoto(img image.Image) *paint.Photo { return makePhoto(img, 1) }
+
+// makePhoto is NewPhoto of a picture that was held in one of the eight ways.
+func makePhoto(img image.Image, held int) *paint.Photo {
 	b := img.Bounds()
 	full := image.NewRGBA(image.Rect(0, 0, b.Dx(), b.Dy()))
 	draw.Draw(full, full.Rect, img, b.Min, draw.Src)
-	p := &paint.Photo{W: b.Dx(), H: b.Dy(), Levels: []*image.RGBA{full}}
+	full = upright(full, held)
+	p := &paint.Photo{W: full.Rect.Dx(), H: full.Rect.Dy(), Levels: []*image.RGBA{full}}
 	last := full
 	for last.Rect.Dx() > leastLevel && last.Rect.Dy() > leastLevel {
 		last = halved(last)
