@@ -440,7 +440,7 @@ func (h *hunter) compare() {
 			h.t.Errorf("%s: the window shows\n%+v\nalone it is\n%+v\nof\n%s", name, pair[0], pair[1], text(h.t, p))
 		}
 	}
-	found, err := s.Findings(ctx, p, want.Approaches)
+	found, err := s.Findings(ctx, p, want.Approaches, want.Routes)
 	if err == nil && h.problems.rev == h.session.Rev() && len(found)+len(h.problems.found) > 0 && !reflect.DeepEqual(found, h.problems.found) {
 		h.t.Errorf("the window lists\n%+v\nalone it is\n%+v", h.problems.found, found)
 	}

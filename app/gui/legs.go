@@ -83,7 +83,7 @@ func (w *window) walkFacts(walk study.Route, known bool) []fact {
 
 // routeFault is what is wrong with a route: why it cannot be walked, or what closes it.
 func routeFault(walk study.Route) string {
-	if walk.Closed > 0 {
+	if walk.Closed > 0 && walk.Problem == "" {
 		return "to " + walk.ClosedTo + ": " + walk.Reason
 	}
 	return walk.Problem

@@ -77,6 +77,10 @@ func TestRouteFormClosed(t *testing.T) {
 	if f.facts[0].value.text != "no way" || !strings.Contains(f.fault.text, "aypoint 2: glazing X1 closes the way") || f.legs.rows[1].far.text != "closed" || f.legs.rows[2].far.text != "–" {
 		t.Errorf("%q, %q, %q, %q", f.facts[0].value.text, f.fault.text, f.legs.rows[1].far.text, f.legs.rows[2].far.text)
 	}
+	r.until("the closed leg is listed", func() bool { return len(r.problems.found) > 0 })
+	if got := r.problems.found[0]; got.Kind != plan.ProblemClosed || got.At != at || got.Text != "no walk leads to waypoint 2: glazing X1 closes the way" {
+		t.Errorf("listed is %+v", got.Problem)
+	}
 	ring := plan.ChainOf(around(6000).Points()[:4]...)
 	if err := r.doEdit(plan.AddBlock{Block: plan.Block{Ring: ring, Height: plan.Ceiling}}); err != nil {
 		t.Fatal(err)
@@ -84,6 +88,10 @@ func TestRouteFormClosed(t *testing.T) {
 	r.settle()
 	if !strings.Contains(f.fault.text, "aypoint 2 is inside ") {
 		t.Errorf("in a block the form says %q", f.fault.text)
+	}
+	if walk, _ := r.results.route("R1"); len(walk.Legs) != 1 || f.legs.rows[0].far.text != r.host.FormatLength(walk.Legs[0].Length*exact.PerMM) ||
+		f.legs.rows[1].far.text != "closed" || f.facts[0].value.text != "no way" {
+		t.Errorf("up to the block it is walked by %+v; the form says %q, %q", walk.Legs, f.legs.rows[0].far.text, f.legs.rows[1].far.text)
 	}
 }
 

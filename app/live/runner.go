@@ -62,7 +62,7 @@ type Solver interface {
 	Approaches(ctx context.Context, p *plan.Plan) ([]study.Approach, error)
 	SeenFrom(ctx context.Context, p *plan.Plan) ([]study.Sight, error)
 	Routes(ctx context.Context, p *plan.Plan) ([]study.Route, error)
-	Findings(ctx context.Context, p *plan.Plan, rows []study.Approach) ([]plan.Finding, error)
+	Findings(ctx context.Context, p *plan.Plan, rows []study.Approach, routes []study.Route) ([]plan.Finding, error)
 	ClearWidths(ctx context.Context, p *plan.Plan, rows []study.Approach) error // rows as Approaches gave them
 	Field(ctx context.Context, p *plan.Plan, start string) (*study.Field, error)
 	Reaches(ctx context.Context, p *plan.Plan) ([]study.Reach, error)
@@ -105,6 +105,8 @@ type job struct {
 	base context.Context  // of ctx; ends only when the runner is told to stop, not when a newer plan comes
 	rows []study.Approach // what StageApproaches found
 	fail error            // or why it found nothing
+
+	routes []study.Route // what StageRoutes found
 }
 
 // share is the part of a whole study's time that each stage takes, as a study that is solved at once tells it.
@@ -281,7 +283,7 @@ func (r *Runner) stage(ctx context.Context, j *job, s Stage) (u Update) {
 	case StageDistances:
 		u.Distances, u.Err = r.distances(ctx, j)
 	case StageFindings:
-		u.Findings, u.Err = r.solver.Findings(ctx, j.Plan, j.rows)
+		u.Findings, u.Err = r.solver.Findings(ctx, j.Plan, j.rows, j.routes)
 	case StageReach:
 		u.Reach, u.Err = r.solver.Reaches(ctx, j.Plan)
 	case StageWidths:
@@ -303,8 +305,11 @@ var errRests = errors.New("live: not asked for")
 
 // note keeps what later stages go on from.
 func (j *job) note(u Update) {
-	if u.Stage == StageApproaches {
+	switch u.Stage {
+	case StageApproaches:
 		j.rows, j.fail = u.Approaches, u.Err
+	case StageRoutes:
+		j.routes = u.Routes
 	}
 }
 

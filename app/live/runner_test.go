@@ -62,8 +62,8 @@ func (f *fake) ClearWidths(ctx context.Context, _ *plan.Plan, rows []study.Appro
 func (f *fake) Routes(ctx context.Context, p *plan.Plan) ([]study.Route, error) {
 	return []study.Route{{ID: p.Sheet().Title}}, f.do(ctx, live.StageRoutes)
 }
-func (f *fake) Findings(ctx context.Context, p *plan.Plan, rows []study.Approach) ([]plan.Finding, error) {
-	return []plan.Finding{{Offer: fmt.Sprint(p.Sheet().Title, len(rows))}}, f.do(ctx, live.StageFindings)
+func (f *fake) Findings(ctx context.Context, p *plan.Plan, rows []study.Approach, routes []study.Route) ([]plan.Finding, error) {
+	return []plan.Finding{{Offer: fmt.Sprint(p.Sheet().Title, len(rows), len(routes))}}, f.do(ctx, live.StageFindings)
 }
 func (f *fake) Field(ctx context.Context, _ *plan.Plan, start string) (*study.Field, error) {
 	if err := f.do(ctx, live.StageDistances); err != nil {
@@ -144,7 +144,7 @@ func TestRunnerDeliversEachStageInOrder(t *testing.T) {
 			}
 		}
 		if r.got()[0].Problems[0].Text != "a" || r.got()[1].Sights[0].Name != "a" || r.got()[2].Approaches[0].Start != "a" || r.got()[3].Sights[0].Name != "a" ||
-			r.got()[live.StageRoutes].Routes[0].ID != "a" || len(r.got()[live.StageDistances].Distances.Lines) == 0 || r.got()[live.StageReach].Reach[0].Zone != "a" || r.got()[live.StageFindings].Findings[0].Offer != "a1" {
+			r.got()[live.StageRoutes].Routes[0].ID != "a" || len(r.got()[live.StageDistances].Distances.Lines) == 0 || r.got()[live.StageReach].Reach[0].Zone != "a" || r.got()[live.StageFindings].Findings[0].Offer != "a1 1" {
 			t.Error("an update carries another plan's answer")
 		}
 		r.Close()

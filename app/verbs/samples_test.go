@@ -5,6 +5,7 @@ import (
 	"math"
 	"os"
 	"path/filepath"
+	"slices"
 	"strings"
 	"testing"
 
@@ -53,7 +54,7 @@ func TestSamples(t *testing.T) {
 			if p.NumObservers() == 0 || p.NumTargets() == 0 || p.NumStarts() == 0 || p.NumWalls()+p.NumBlocks() < 18 {
 				t.Error("something is missing")
 			}
-			for _, q := range r.Problems {
+			for _, q := range slices.Concat(r.Problems, r.Doubts) {
 				t.Errorf("%v %s", q.Items, q.Text)
 			}
 			for _, v := range append(r.Sight, r.SeenFrom...) {
@@ -140,7 +141,7 @@ func TestSamplesHaveRoom(t *testing.T) {
 		if err != nil {
 			t.Fatal(err)
 		}
-		for _, q := range r.Problems {
+		for _, q := range slices.Concat(r.Problems, r.Doubts) {
 			t.Errorf("%s: %v %s", s.Name, q.Items, q.Text)
 		}
 		for _, a := range r.Approaches {

@@ -38,7 +38,7 @@ func (p *pen) route(r plan.Route, strong bool) {
 	switch {
 	case w == nil:
 		p.routeLine(p.rest(r, nil), strong, false)
-	case w.Problem != "":
+	case len(w.Points) == 0: // nothing of it could be walked
 		p.routeLine(p.rest(r, nil), strong, true)
 	default:
 		line := p.work.route[:0]
@@ -150,12 +150,12 @@ func (p *pen) closedEnds(r plan.Route, w *study.Route) (from, to place, ok bool)
 	return place{from.x + u.x*d, from.y + u.y*d}, to, true
 }
 
-// placeRoutes says at each closed leg what closes it.
+// placeRoutes says at each closed leg what closes it; what is wrong with a waypoint is said where that stands.
 func (p *pen) placeRoutes() {
 	look := p.walkFigure(labelText, assets.Semibold)
 	for _, r := range p.s.Plan.Routes() {
 		w := p.s.walked(r)
-		if r.Hidden || w == nil || w.Closed == 0 {
+		if r.Hidden || w == nil || w.Closed == 0 || w.Problem != "" {
 			continue
 		}
 		at, to, ok := p.closedEnds(r, w)
@@ -176,7 +176,7 @@ func (p *pen) obstructRoutes() {
 		if r.Hidden {
 			continue
 		}
-		if w := p.s.walked(r); w != nil && w.Problem == "" {
+		if w := p.s.walked(r); w != nil {
 			p.routed(w.Points)
 			if at, to, ok := p.closedEnds(r, w); ok {
 				p.routeLeg(at, to)

@@ -57,6 +57,15 @@ func TestRouteClosed(t *testing.T) {
 	if n := dashes(); n != 1 || !strings.Contains(l.String(), s.Result.Routes[0].Reason) {
 		t.Errorf("%d dashed lines, want 1, and the reason beside it:\n%s", n, l)
 	}
+	// A waypoint that nobody can come to: walked up to there, and what is wrong is said where it stands, by the problem.
+	walked := &s.Result.Routes[0]
+	walked.Problem, walked.Reason = "waypoint 2 is inside block B1", ""
+	if n := dashes(); n != 1 || !strings.Contains(overlayOf(s).String(), "width 1.3 round roundjoin") {
+		t.Errorf("%d dashed lines of a route with a waypoint in a block, want 1 behind the legs up to there", n)
+	}
+	if strings.Contains(overlayOf(s).String(), walked.Problem) {
+		t.Error("what is wrong with the waypoint is said twice")
+	}
 	s.Result.Routes[0] = study.Route{ID: "R1", From: parts.Starts[0].ID, To: parts.Targets[0].ID, Problem: "waypoint 2 is inside block B1"}
 	if n := dashes(); n != 1 {
 		t.Errorf("%d dashed lines of a route that is not solved, want 1", n)

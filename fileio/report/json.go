@@ -116,7 +116,7 @@ func JSON(w io.Writer, p *plan.Plan, r *study.Result) error {
 	list(j, ",\n\"approaches\": [", r.Approaches, func(a study.Approach) any { return approachEntry(a, r.WalkerEye) })
 	list(j, ",\n\"reach\": [", r.Reach, func(a study.Reach) any { return reachEntry(p, a) })
 	list(j, ",\n\"routes\": [", r.Routes, routeEntry)
-	list(j, ",\n\"problems\": [", r.Problems, problemEntry)
+	list(j, ",\n\"problems\": [", allProblems(r), problemEntry)
 	j.write(",\n\"caution\": ", Caution)
 	j.text("}\n")
 	if j.err != nil {

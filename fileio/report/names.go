@@ -16,7 +16,8 @@ var kindNames = [...]string{
 var problemNames = [...]string{
 	plan.ProblemInside: "inside", plan.ProblemOutside: "outside", plan.ProblemShape: "shape",
 	plan.ProblemOpening: "opening", plan.ProblemMissing: "missing", plan.ProblemLow: "low", plan.ProblemMoved: "moved",
-	plan.ProblemTight: "tight",
+	plan.ProblemTight: "tight", plan.ProblemGap: "gap", plan.ProblemDouble: "double", plan.ProblemUnreached: "unreached",
+	plan.ProblemClosed: "closed",
 }
 
 // statusNames are the ends of an approach.

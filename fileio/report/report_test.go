@@ -71,10 +71,21 @@ func sample(unit string) (*plan.Plan, *study.Result) {
 			{ID: "R3", From: "S1", To: "T3", Length: 3000, Seconds: 2.5, Points: []orb.Point{{0, 0}, {3000, 0}},
 				Legs: []study.Leg{{To: "waypoint 1", Length: 3000, Seconds: 2.5, Last: 1}}, Closed: 2, ClosedTo: "waypoint 2", Reason: "glazing G1 closes the way"},
 			{ID: "R4", From: "S1", To: "T4", Points: []orb.Point{{0, 0}}, Closed: 1, ClosedTo: "target T4", Reason: "door D1 closes the way"},
-			{ID: "R5", From: "S1", To: "T4", Problem: "waypoint 2 is inside block B1; move it out, or lower what it stands in"},
+			{ID: "R5", From: "S1", To: "T4", Problem: "waypoint 1 is inside block B1; move it out, or lower what it stands in", Points: []orb.Point{{0, 0}},
+				Closed: 1, ClosedTo: "waypoint 1"},
+			{ID: "R6", From: "S1", To: "T4", Problem: "waypoint 2 is inside block B1; move it out, or lower what it stands in",
+				Length: 3000, Seconds: 2.5, Points: []orb.Point{{0, 0}, {3000, 0}},
+				Legs: []study.Leg{{To: "waypoint 1", Length: 3000, Seconds: 2.5, Last: 1}}, Closed: 2, ClosedTo: "waypoint 2"},
+			{ID: "R7", From: "S9", To: "T4", Problem: "has the start S9, which is not in the plan; choose another"},
 		},
 		Problems: []plan.Problem{{Kind: plan.ProblemInside, Items: []plan.Ref{{Kind: plan.KindObserver, ID: "B"},
 			{Kind: plan.KindWall, ID: "W3"}}, At: exact.Pt{X: 12345, Y: -20}, Text: "stands inside a body; move it onto the floor"}},
+		Doubts: []plan.Problem{
+			{Kind: plan.ProblemUnreached, Items: []plan.Ref{{Kind: plan.KindTarget, ID: "T2"}}, At: exact.Pt{X: 20000}, Text: "no walk leads in sight of it"},
+			{Kind: plan.ProblemClosed, Items: []plan.Ref{{Kind: plan.KindRoute, ID: "R3"}}, Text: "no walk leads to waypoint 2: glazing G1 closes the way"},
+			{Kind: plan.ProblemGap, Items: []plan.Ref{{Kind: plan.KindWall, ID: "W1"}, {Kind: plan.KindWall, ID: "W2"}}, At: exact.Pt{Y: 5}, Text: "ends 15.0 mm before wall W2"},
+			{Kind: plan.ProblemDouble, Items: []plan.Ref{{Kind: plan.KindWall, ID: "W4"}, {Kind: plan.KindWall, ID: "W5"}}, Text: "lies on wall W5 for 3.000 m"},
+		},
 	}
 	return p, r
 }

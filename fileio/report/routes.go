@@ -31,7 +31,7 @@ type jsonLeg struct {
 
 func routeEntry(r study.Route) any {
 	e := &jsonRoute{Route: r.ID, From: r.From, To: words(r.To), Problem: words(r.Problem), Reason: words(r.Reason)}
-	if r.Problem != "" {
+	if r.Problem != "" && r.Closed == 0 {
 		return e
 	}
 	e.Legs, e.Points = make([]jsonLeg, 0, len(r.Legs)), points(r.Points)
@@ -58,13 +58,15 @@ func (t *texter) routes() {
 	for _, r := range t.result.Routes {
 		start, _ := t.plan.Start(r.From)
 		row := []string{r.ID, label(r.From, start.Name), t.routeEnd(r)}
-		if r.Problem != "" {
+		switch {
+		case r.Problem != "" && len(r.Legs) == 0:
 			table.add(append(row, r.Problem)...)
 			continue
-		}
-		if r.Closed > 0 {
+		case r.Problem != "":
+			table.add(append(row, "none", "", r.Problem)...)
+		case r.Closed > 0:
 			table.add(append(row, "none", "", "to "+r.ClosedTo+": "+r.Reason)...)
-		} else {
+		default:
 			table.add(append(row, u.length(r.Length), decimal(r.Seconds, 1), "")...)
 		}
 		if len(r.Legs)+min(r.Closed, 1) < 2 {

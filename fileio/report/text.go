@@ -3,6 +3,7 @@ package report
 import (
 	"fmt"
 	"io"
+	"slices"
 	"strconv"
 	"strings"
 
@@ -219,12 +220,13 @@ func (t *texter) reach() {
 }
 
 func (t *texter) problems() {
-	if len(t.result.Problems) == 0 {
+	all := allProblems(t.result)
+	if len(all) == 0 {
 		t.b.WriteString("\nNo problems in the plan.\n")
 		return
 	}
 	t.b.WriteString("\nProblems in the plan\n")
-	for _, p := range t.result.Problems {
+	for _, p := range all {
 		blame := "plan"
 		if len(p.Items) > 0 { // the text names the others
 			blame = strings.TrimSpace(nameOf(kindNames[:], p.Items[0].Kind) + " " + p.Items[0].ID)
@@ -232,6 +234,9 @@ func (t *texter) problems() {
 		t.b.WriteString("  " + blame + " at " + t.place(millimetres(p.At)) + ": " + p.Text + "\n")
 	}
 }
+
+// allProblems are the problems of the plan, and what else looks wrong in it.
+func allProblems(r *study.Result) []plan.Problem { return slices.Concat(r.Problems, r.Doubts) }
 
 // place writes a point in the display unit.
 func (t *texter) place(p orb.Point) string { return t.unit.length(p[0]) + ", " + t.unit.length(p[1]) }

@@ -162,4 +162,5 @@ const (
 	ProblemGap                              // a wall ends shortly before another thing
 	ProblemDouble                           // walls lie on one another
 	ProblemUnreached                        // nobody can walk to a place that sees a target
+	ProblemClosed                           // nobody can walk a leg of a route
 )

@@ -11,26 +11,70 @@ import (
 )
 
 // Findings returns all that looks wrong with p, with what would mend it where that is sure: the problems that Problems tells,
-// what plan.Inspect sees in the drawing, and targets that no walk leads in sight of. rows are the approaches of p.
+// what plan.Inspect sees in the drawing, targets that no walk leads in sight of, and routes that cannot be walked. rows are the
+// approaches of p, routes its routes.
 //
 //   - Errors: the context's when it is cancelled.
-func (s *Solver) Findings(ctx context.Context, p *plan.Plan, rows []Approach) ([]plan.Finding, error) {
+func (s *Solver) Findings(ctx context.Context, p *plan.Plan, rows []Approach, routes []Route) ([]plan.Finding, error) {
 	if err := s.Mesh(ctx, p); err != nil {
 		return nil, err
 	}
 	var out []plan.Finding
-	for _, f := range s.Problems(p) {
+	problems := s.Problems(p)
+	for _, f := range problems {
 		out = append(out, s.mended(p, f))
 		if err := ctx.Err(); err != nil {
 			return nil, err
 		}
 	}
-	out = append(out, unreached(p, rows, out)...)
-	drawn := plan.Inspect(p, func() bool { return ctx.Err() != nil })
+	more, err := doubts(ctx, p, rows, routes, problems)
+	return append(out, more...), err
+}
+
+// doubts is what looks wrong besides the problems that were told: what cannot be reached or walked, and what plan.Inspect sees.
+func doubts(ctx context.Context, p *plan.Plan, rows []Approach, routes []Route, told []plan.Problem) ([]plan.Finding, error) {
+	out := append(unreached(p, rows, told), unwalked(p, routes, told)...)
+	out = append(out, plan.Inspect(p, func() bool { return ctx.Err() != nil })...)
 	if err := ctx.Err(); err != nil {
 		return nil, err
 	}
-	return append(out, drawn...), nil
+	return out, nil
+}
+
+// unwalked are the routes that cannot be walked to their end, where no problem names what is wrong with them: a leg is closed,
+// or they lead nowhere.
+func unwalked(p *plan.Plan, routes []Route, told []plan.Problem) (out []plan.Finding) {
+	for i := range routes {
+		r := &routes[i]
+		ref := plan.Ref{Kind: plan.KindRoute, ID: r.ID}
+		named := func(x plan.Ref) bool {
+			return slices.ContainsFunc(told, func(f plan.Problem) bool { return f.Kind != plan.ProblemMoved && slices.Contains(f.Items, x) })
+		}
+		f := plan.Problem{Kind: plan.ProblemClosed, Items: []plan.Ref{ref}}
+		switch start, ok := p.Start(r.From); {
+		case r.Problem == "" && r.Closed == 0:
+			continue
+		case r.Problem == "":
+			f.At, f.Text = r.closedAt(p), "no walk leads to "+r.ClosedTo+": "+r.Reason
+		case named(ref), named(plan.Ref{Kind: plan.KindStart, ID: r.From}), named(plan.Ref{Kind: plan.KindTarget, ID: r.To}), !ok:
+			continue
+		default:
+			f.At, f.Text = start.At, r.Problem
+		}
+		out = append(out, plan.Finding{Problem: f})
+	}
+	return out
+}
+
+// closedAt is the place that the closed leg of a route leads to.
+func (r *Route) closedAt(p *plan.Plan) exact.Pt {
+	for _, x := range p.Routes() {
+		if i := r.Closed - 1; x.ID == r.ID && i >= 0 && i < x.Via.Len() {
+			return x.Via.At(i)
+		}
+	}
+	t, _ := p.Target(r.To) // a closed leg leads to a waypoint or to a target
+	return targetPoint(t)
 }
 
 // mended finds what would mend a problem.
@@ -131,10 +175,10 @@ func (g *ground) inside(tri int32, p exact.Pt, shut func(int32) bool) (exact.Pt,
 }
 
 // unreached are the targets that can be seen from somewhere, to where no walk leads from any start.
-func unreached(p *plan.Plan, rows []Approach, told []plan.Finding) (out []plan.Finding) {
+func unreached(p *plan.Plan, rows []Approach, told []plan.Problem) (out []plan.Finding) {
 	for _, t := range p.Targets() {
 		ref := plan.Ref{Kind: plan.KindTarget, ID: t.ID}
-		own := slices.ContainsFunc(told, func(f plan.Finding) bool { return slices.Contains(f.Items, ref) && f.Kind != plan.ProblemMoved })
+		own := slices.ContainsFunc(told, func(f plan.Problem) bool { return slices.Contains(f.Items, ref) && f.Kind != plan.ProblemMoved })
 		solved, reason := 0, ""
 		for i := range rows {
 			r := &rows[i]

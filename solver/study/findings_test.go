@@ -2,6 +2,7 @@ package study_test
 
 import (
 	"context"
+	"slices"
 	"strings"
 	"testing"
 
@@ -22,6 +23,10 @@ func TestFindings(t *testing.T) {
 		{"target in a wall", "floor 0,0 10,0 10,8 0,8; wall 5,1 5,7 th=0.4; target 4.9,3", "target T1 is inside wall W1", true},
 		{"target shut in", "floor 0,0 10,0 10,8 0,8; wall 4,4 6,4 6,6 4,6 4,4; target 5,5; start 1,1", "target T1 no walk leads in sight of it", false},
 		{"nearly met", "floor 0,0 10,0 10,8 0,8; wall 5,1 5,7; wall 1,4 4.985,4", "wall W2 ends 15.0 mm before wall W1", true},
+		{"a closed route", "floor 0,0 10,0 10,8 0,8; glass 5,0 5,8; start 1,1; route from=S1 2,2 8,4", "route R1 no walk leads to waypoint 2: glazing W1 closes the way", false},
+		{"a route that leads nowhere", "floor 0,0 10,0 10,8 0,8; start 1,1; route from=S1", "route R1 leads nowhere; give it a waypoint or a target", false},
+		{"a waypoint in a block", "floor 0,0 10,0 10,8 0,8; block 2,2 4,2 4,4 2,4; start 1,1; route from=S1 3,3 8,4", "route R1 waypoint 1 is inside block B1", false},
+		{"walls on one another", "floor 0,0 10,0 10,8 0,8; wall 2,4 8,4; wall 3,4 6,4", "wall W2 ", false},
 		{"nothing", "floor 0,0 10,0 10,8 0,8; wall 5,1 5,7; observer 1,1; target 8,4; start 1,1", "", false},
 	}
 	for _, tt := range tests {
@@ -60,9 +65,18 @@ func findings(t *testing.T, p *plan.Plan) []plan.Finding {
 	if err != nil {
 		t.Fatal(err)
 	}
-	f, err := s.Findings(context.Background(), p, r.Approaches)
+	f, err := s.Findings(context.Background(), p, r.Approaches, r.Routes)
 	if err != nil {
 		t.Fatal(err)
+	}
+	told := slices.Concat(r.Problems, r.Doubts)
+	if len(told) != len(f) {
+		t.Errorf("a study tells %+v, the findings are %+v", told, f)
+	}
+	for i := range min(len(told), len(f)) {
+		if told[i].Kind != f[i].Kind || told[i].Text != f[i].Text || told[i].At != f[i].At {
+			t.Errorf("a study tells %+v, the findings have %+v", told[i], f[i].Problem)
+		}
 	}
 	return f
 }

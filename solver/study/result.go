@@ -94,14 +94,14 @@ type Reach struct {
 // Route is a route as it is walked: each of its legs, from one of its points to the next, is the shortest walk.
 type Route struct {
 	ID, From, To string
-	Problem      string      // why it was not solved; empty when it was
+	Problem      string      // why it, or what follows on Legs, was not solved; empty when it was
 	Legs         []Leg       // those that can be walked, up to the first that cannot
 	Points       []orb.Point // mm, the walk from the start on, all legs in one
 	Length       float64     // mm, of the legs together
 	Seconds      float64     // of the legs together, at the walker's pace
-	Closed       int         // which leg no walk leads over, from 1; 0 when there is none
+	Closed       int         // which leg no walk leads over, from 1; 0 when there is none, or none could begin
 	ClosedTo     string      // where that leg leads: "waypoint 2"
-	Reason       string      // what closes it
+	Reason       string      // what closes it; empty where Problem says what is wrong with the place it leads to
 }
 
 // Leg is one leg of a route: Points[First] to Points[Last].
@@ -124,4 +124,7 @@ type Result struct {
 	// walker's disc encloses it and reaches at most RadiusExcess beyond. Both in mm.
 	WalkerRadius, RadiusExcess float64
 	Problems                   []plan.Problem
+	// Doubts are what else looks wrong, though all was solved: targets and legs that no walk leads to, walls that nearly meet or
+	// lie on one another, items off the floor.
+	Doubts []plan.Problem
 }

@@ -15,7 +15,7 @@ import (
 // Routes returns every route of p as it is walked, in the plan's order: from its start over its waypoints in turn to its target,
 // each leg the shortest walk.
 //
-//   - A route with a start, a waypoint or a target that nobody can stand at has a Problem.
+//   - A route with a start, a waypoint or a target that nobody can stand at has a Problem; it is walked up to there.
 //   - Errors: the context's when it is cancelled.
 //   - Cost: one flood for each leg.
 func (s *Solver) Routes(ctx context.Context, p *plan.Plan) ([]Route, error) {
@@ -39,10 +39,11 @@ func (s *Solver) Routes(ctx context.Context, p *plan.Plan) ([]Route, error) {
 // stop is a point that a route calls at, made ready to be walked to.
 type stop struct {
 	sought
-	name string // "waypoint 2"
+	name  string // "waypoint 2"
+	fault string // why nobody can come there
 }
 
-// route walks one route, up to the first leg that is closed.
+// route walks one route, up to the first leg that is closed or leads where nobody can stand.
 func (sc *scene) route(ctx context.Context, p *plan.Plan, r plan.Route) (Route, error) {
 	row := Route{ID: r.ID, From: r.From, To: r.To}
 	at, stops, fault, err := sc.stops(ctx, p, r)
@@ -51,6 +52,10 @@ func (sc *scene) route(ctx context.Context, p *plan.Plan, r plan.Route) (Route, 
 	}
 	row.Points = []orb.Point{pointMM(at)}
 	for i, k := range stops {
+		if k.fault != "" {
+			row.Closed, row.ClosedTo, row.Problem = i+1, k.name, k.fault
+			return row, nil
+		}
 		paths, err := sc.walk.Flood(ctx, at, []walk.Goal{{Spot: sc.destination(k.sought, at)}})
 		if err != nil {
 			return row, err
@@ -82,7 +87,8 @@ func (r *Route) add(path walk.Path, to string, pace float64) {
 	r.Seconds += leg.Seconds
 }
 
-// stops returns where a route begins and all that it calls at, or what is wrong with one of them.
+// stops returns where a route begins and all that it calls at, up to the first where nobody can stand; or what is wrong with
+// where it begins.
 func (sc *scene) stops(ctx context.Context, p *plan.Plan, r plan.Route) (at exact.Pt, all []stop, fault string, err error) {
 	start, ok := p.Start(r.From)
 	if !ok {
@@ -95,9 +101,9 @@ func (sc *scene) stops(ctx context.Context, p *plan.Plan, r plan.Route) (at exac
 	for i, q := range r.Via.All() {
 		w := sc.call(q)
 		if !w.ok {
-			return at, nil, waypoint(i) + " " + w.text, nil
+			return f.at, append(all, stop{name: waypoint(i), fault: waypoint(i) + " " + w.text}), "", nil
 		}
-		all = append(all, stop{sought{look: look{at: w.at}, stood: true}, waypoint(i)})
+		all = append(all, stop{sought: sought{look: look{at: w.at}, stood: true}, name: waypoint(i)})
 	}
 	if r.To == "" && len(all) == 0 {
 		return at, nil, "leads nowhere; give it a waypoint or a target", nil
@@ -106,14 +112,15 @@ func (sc *scene) stops(ctx context.Context, p *plan.Plan, r plan.Route) (at exac
 		return f.at, all, "", nil
 	}
 	t, ok := p.Target(r.To)
+	last := stop{name: "target " + r.To}
 	if !ok {
-		return at, nil, missingEnd("target", r.To), nil
+		last.fault = missingEnd("target", r.To)
+		return f.at, append(all, last), "", nil
 	}
-	k, err := sc.arrive(ctx, t, p.Walker())
-	if err == nil && k.fault != "" {
-		fault = "target " + r.To + " " + k.fault
+	if last.sought, err = sc.arrive(ctx, t, p.Walker()); err == nil && last.sought.fault != "" {
+		last.fault = last.name + " " + last.sought.fault
 	}
-	return f.at, append(all, stop{k, "target " + r.To}), fault, err
+	return f.at, append(all, last), "", err
 }
 
 // missingEnd says that a route's start or target is not in the plan.

@@ -140,11 +140,15 @@ func (s *Solver) Solve(ctx context.Context, p *plan.Plan) (*Result, error) {
 	if err = s.ClearWidths(pulse.Part(ctx, 0.8, 0.95), p, r.Approaches); err != nil {
 		return nil, err
 	}
-	if r.Routes, err = s.Routes(pulse.Part(ctx, 0.95, 1), p); err != nil {
+	if r.Routes, err = s.Routes(pulse.Part(ctx, 0.95, 0.98), p); err != nil {
 		return nil, err
 	}
 	r.Problems = s.Problems(p)
-	return r, nil
+	found, err := doubts(ctx, p, r.Approaches, r.Routes, r.Problems)
+	for _, f := range found {
+		r.Doubts = append(r.Doubts, f.Problem)
+	}
+	return r, err
 }
 
 // Problems returns what is wrong with the drawing of p: what cannot be outlined, and marks that cannot stand where they
