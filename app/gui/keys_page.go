@@ -16,7 +16,7 @@ type keyGroup struct {
 }
 
 // keyGroups are the parts of the page of keys. The letters of the tools come from the tools themselves.
-func keyGroups() []keyGroup {
+func keyGroups(unit string) []keyGroup {
 	return []keyGroup{
 		{"Tools", toolRows()},
 		{"While drawing", [][2]string{
@@ -36,7 +36,7 @@ func keyGroups() []keyGroup {
 			{"Shift and click", "add, or take out"},
 			{"drag a box", "what lies inside; with Ctrl also what it touches"},
 			{"Ctrl+A, Ctrl+Shift+A", "all, or all of the same kind"},
-			{"arrows", "nudge by 0.1 m, with Shift 1 m, with Ctrl 1 cm"},
+			{"arrows", nudgeRow(unit)},
 			{"H, J, K, U", "selected doors: hinges, side, leaf, open or shut"},
 			{"J", "selected walls: body centred, left, right; targets: other face"},
 			{"Shift while turning", "steps of 15°"},
@@ -57,6 +57,14 @@ func keyGroups() []keyGroup {
 			{"Esc", "the select tool; a long study stops"},
 		}},
 	}
+}
+
+// nudgeRow tells how far the arrow keys nudge in a plan of a display unit.
+func nudgeRow(unit string) string {
+	if unit == "ft" {
+		return "nudge by 1 in, with Shift 1 ft, with Ctrl ½ in"
+	}
+	return "nudge by 0.1 m, with Shift 1 m, with Ctrl 1 cm"
 }
 
 // toolRows tells the letters of the tools, with the shapes that a letter goes through.
@@ -83,7 +91,7 @@ func (w *window) showKeys() {
 	if !wide {
 		columns = columns[:1]
 	}
-	for i, g := range keyGroups() {
+	for i, g := range keyGroups(w.unit()) {
 		c := columns[0]
 		if wide && i > 1 {
 			c = columns[1]

@@ -5,12 +5,14 @@ import (
 	"testing"
 
 	"fyne.io/fyne/v2"
+
+	"enfilade/solver/plan"
 )
 
 // TestKeysPage: the page names every tool with its letter, and every shape of one; it fits a small window.
 func TestKeysPage(t *testing.T) {
 	said := ""
-	for _, r := range keyGroups()[0].rows {
+	for _, r := range keyGroups("m")[0].rows {
 		said += r[0] + " " + r[1] + "\n"
 	}
 	for i, k := range tools {
@@ -36,5 +38,24 @@ func TestKeysPage(t *testing.T) {
 		if r.modal != nil {
 			t.Fatal("Escape does not close the page")
 		}
+	}
+}
+
+// TestArrowsNudgeByInchesInFeet: what the page of keys and the status line say is what an arrow does.
+func TestArrowsNudgeByInchesInFeet(t *testing.T) {
+	r := newGallery(t)
+	sheet := r.session.Plan().Sheet()
+	sheet.Unit = "ft"
+	if err := r.doEdit(plan.SetSheet{Sheet: sheet}); err != nil {
+		t.Fatal(err)
+	}
+	r.click(11.35, 8.75)
+	was := r.observer("O1").At
+	r.keys(fyne.KeyRight)
+	if by := r.observer("O1").At.X - was.X; by != 254 {
+		t.Errorf("an arrow moved the observer by %d, want an inch, 254", by)
+	}
+	if got := nudgeRow("ft"); !strings.HasPrefix(got, "nudge by 1 in, with Shift 1 ft") {
+		t.Errorf("the page of keys says %q", got)
 	}
 }

@@ -7,14 +7,40 @@ import (
 	"enfilade/solver/plan"
 )
 
-// nudge is the step of an arrow key: 0.1 m, with Shift 1 m, with Ctrl 1 cm.
-func nudge(k Key) exact.Vec {
-	step := int32(1000)
+// Nudges are the steps of an arrow key, in grid units: alone, with Shift, with Ctrl.
+type Nudges struct{ Step, Far, Fine int32 }
+
+// The steps where people measure in metres, 0.1 m, 1 m and 1 cm, and where in feet, 1 in, 1 ft and half an inch.
+var (
+	MetreNudges = Nudges{1000, 10000, 100}
+	FeetNudges  = Nudges{254, 3048, 127}
+)
+
+// nudgesOf returns the steps for the plan's display unit.
+func nudgesOf(h Host) Nudges {
+	if h.Snapper().Feet {
+		return FeetNudges
+	}
+	return MetreNudges
+}
+
+// nudgeWords says what the arrow keys do: "arrows nudge by 0.1 m".
+func nudgeWords(h Host) string {
+	if h.Snapper().Feet {
+		return "arrows nudge by 1 in"
+	}
+	return "arrows nudge by 0.1 m"
+}
+
+// nudge is the step of an arrow key.
+func nudge(h Host, k Key) exact.Vec {
+	n := nudgesOf(h)
+	step := n.Step
 	switch {
 	case k.Shift:
-		step = 10000
+		step = n.Far
 	case k.Ctrl:
-		step = 100
+		step = n.Fine
 	}
 	switch k.Name {
 	case KeyLeft:

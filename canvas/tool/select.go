@@ -191,7 +191,7 @@ func (t *Select) Key(h Host, k Key) bool {
 		if len(h.Selection()) == 0 || t.grip != nil {
 			return false
 		}
-		e := nudgeEdit(h.Plan(), h.Selection(), nudge(k))
+		e := nudgeEdit(h.Plan(), h.Selection(), nudge(h, k))
 		if e == nil {
 			return true // all of it is locked
 		}
@@ -260,7 +260,7 @@ func (t *Select) Hint(h Host) string {
 	case t.under:
 		return "click to pick the underlay, or drag a box around items"
 	case len(h.Selection()) > 0:
-		return selectionHint(h.Selection())
+		return selectionHint(h)
 	}
 	return "click an item, or drag a box around some; Shift adds"
 }
@@ -285,7 +285,7 @@ func (t *Select) hoverHint(h Host) string {
 		return cornerHint(h, t.hover.Ref)
 	}
 	if t.hover.Ref == theUnderlay {
-		return "drag to move the underlay, arrows nudge it; click again to let go of it"
+		return "drag to move the underlay, " + nudgeWords(h) + "; click again to let go of it"
 	}
 	if t.last != nil && slices.Contains(h.Selection(), t.hover.Ref) {
 		return "drag to move; click again for what lies below; Shift adds and takes away"
@@ -300,7 +300,8 @@ func (t *Select) hoverHint(h Host) string {
 }
 
 // selectionHint says which keys change the selection.
-func selectionHint(sel []plan.Ref) string {
+func selectionHint(h Host) string {
+	sel, arrows := h.Selection(), nudgeWords(h)
 	kind := sel[0].Kind
 	for _, r := range sel {
 		if r.Kind != kind {
@@ -309,13 +310,13 @@ func selectionHint(sel []plan.Ref) string {
 	}
 	switch kind {
 	case plan.KindOpening:
-		return "arrows nudge along the wall, Delete takes away · leaf (K), open or shut (U), hinges (H), side (J)"
+		return arrows + " along the wall, Delete takes away · leaf (K), open or shut (U), hinges (H), side (J)"
 	case plan.KindWall:
-		return "arrows nudge, Delete takes away · J: body centred, left, right"
+		return arrows + ", Delete takes away · J: body centred, left, right"
 	case plan.KindTarget:
-		return "arrows nudge, Delete takes away · J: to the wall's other face, or turned round"
+		return arrows + ", Delete takes away · J: to the wall's other face, or turned round"
 	}
-	return "arrows nudge, Delete takes away"
+	return arrows + " (Shift more, Ctrl less), Delete takes away"
 }
 
 // handles returns the corners of the selected items, at most as many as can be told apart.

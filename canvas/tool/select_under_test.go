@@ -27,7 +27,7 @@ func TestAClickWhereNothingElseLiesPicksTheUnderlay(t *testing.T) {
 	}
 	h.click(s, 2, 2)
 	picked("a click on the picture", under)
-	if got := s.Hint(h); got != "drag to move the underlay, arrows nudge it; click again to let go of it" {
+	if got := s.Hint(h); got != "drag to move the underlay, arrows nudge by 0.1 m; click again to let go of it" {
 		t.Errorf("over the picked picture the hint is %q", got)
 	}
 	h.click(s, 2, 1)

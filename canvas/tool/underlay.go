@@ -212,7 +212,7 @@ func (t *Underlay) nudge(h Host, k Key) bool {
 		}
 	case KeyLeft, KeyRight, KeyUp, KeyDown:
 		if _, ok := t.under(h); ok && t.from == nil {
-			return h.Do(plan.MoveItems{Items: []plan.Ref{theUnderlay}, By: nudge(k)}) == nil
+			return h.Do(plan.MoveItems{Items: []plan.Ref{theUnderlay}, By: nudge(h, k)}) == nil
 		}
 	}
 	return false
@@ -275,7 +275,7 @@ func (t *Underlay) Hint(h Host) string {
 	case u.Locked:
 		return "the underlay is locked; its form unlocks it"
 	case t.Job == MoveUnderlay:
-		return "drag the picture; arrows nudge it"
+		return "drag the picture; " + nudgeWords(h) + "; Esc when it lies right"
 	case t.held:
 		return "type the true distance and press Enter"
 	case t.from == nil && t.Job == ScaleUnderlay:
