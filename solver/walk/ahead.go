@@ -7,32 +7,77 @@ import (
 	"enfilade/solver/mesh"
 )
 
-// mostBoxes is up to how many goals are told apart when asking how far the nearest one is; beyond, one box around them all
-// serves. The bench of many goals watches it.
-const mostBoxes = 6
+// mostTold is up to how many open goals are told apart when asking how far the nearest one is; beyond, one box around them all
+// serves, since they lie all around. The bench of many goals watches it.
+const mostTold = 6
 
-// aim looks for the goals that are still open: a walk to one of them is not shorter than a straight line to its box. With that
-// bound the flood goes towards the goals first and leaves out what lies off the way (A*: Hart, Nilsson and Raphael, "A formal
-// basis for the heuristic determination of minimum cost paths", IEEE Trans. SSC 4, 1968).
+// cells is how many cells a side the grid has that sorts a goal near the start into boxes, when it is the only one. On clutter
+// of 10,000 walls, where regions are all spikes, cones fall to a half with 4, to 43 % with 8 and to 39 % with a box for each
+// triangle.
+const cells = 8
+
+// aim looks up which goals are still open. A walk to one of them is not shorter than a straight line to a box that holds a part
+// of it; with that bound the flood goes towards the goals first and leaves out what lies off the way (A*: Hart, Nilsson and
+// Raphael, "A formal basis for the heuristic determination of minimum cost paths", IEEE Trans. SSC 4, 1968). A goal that is
+// farther from the start than it is wide is one box. O(marks).
 func (f *Finder) aim() {
+	f.bound()
 	f.ahead = f.ahead[:0]
-	f.limit, f.settled = -1, math.Inf(1)
-	all := box{}
+	if f.field != nil {
+		return
+	}
+	open, all := 0, box{}
 	for i := range f.goals {
-		g := &f.goals[i]
-		if g.closed {
-			continue
+		if g := &f.goals[i]; !g.closed {
+			open++
+			all = all.with(g.box)
 		}
-		f.limit = max(f.limit, g.g/tieSlack)
-		f.settled = min(f.settled, g.g/tieSlack)
-		all = all.with(g.box)
-		f.ahead = append(f.ahead, g.box)
 	}
-	if len(f.ahead) > mostBoxes {
-		f.ahead = append(f.ahead[:0], all)
+	if open > mostTold {
+		f.ahead = append(f.ahead, all)
+		return
 	}
+	side := cells / int(math.Ceil(math.Sqrt(float64(max(open, 1)))))
+	for i := range f.goals {
+		switch g := &f.goals[i]; {
+		case g.closed:
+		case boxAt(f.start, f.start).gap2(g.box) > g.box.size2():
+			f.ahead = append(f.ahead, g.box)
+		default:
+			f.sortAhead(int32(i), side)
+		}
+	}
+}
+
+// sortAhead puts what goal i holds into the boxes of a grid with so many cells a side.
+func (f *Finder) sortAhead(i int32, side int) {
+	var grid [cells * cells]box
+	all := &f.goals[i].box
+	x, y := float64(side)/float64(1+int64(all.hi.X)-int64(all.lo.X)), float64(side)/float64(1+int64(all.hi.Y)-int64(all.lo.Y))
+	for k := f.goals[i].first; k < len(f.marks) && f.marks[k].goal == i; k++ {
+		b := boxOf(&f.m.Tris[f.marks[k].tri])
+		c := &grid[int(float64(b.hi.X-all.lo.X)*x)*side+int(float64(b.hi.Y-all.lo.Y)*y)]
+		*c = c.with(b)
+	}
+	for _, b := range grid[:side*side] {
+		if !b.empty() {
+			f.ahead = append(f.ahead, b)
+		}
+	}
+}
+
+// bound looks up how far it is to the open goals at most.
+func (f *Finder) bound() {
+	f.limit, f.settled = -1, math.Inf(1)
 	if f.field != nil { // which wants all of the floor
-		f.ahead, f.limit, f.settled = f.ahead[:0], math.Inf(1), math.Inf(1)
+		f.limit = math.Inf(1)
+		return
+	}
+	for i := range f.goals {
+		if g := &f.goals[i]; !g.closed {
+			f.limit = max(f.limit, g.g/tieSlack)
+			f.settled = min(f.settled, g.g/tieSlack)
+		}
 	}
 }
 

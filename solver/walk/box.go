@@ -36,6 +36,12 @@ func (b box) gap2(o box) float64 {
 	return dx*dx + dy*dy
 }
 
+// size2 returns the square of the longer side; it only measures.
+func (b box) size2() float64 {
+	long := float64(max(int64(b.hi.X)-int64(b.lo.X), int64(b.hi.Y)-int64(b.lo.Y)))
+	return long * long
+}
+
 // boxAt returns the box of two points.
 func boxAt(a, b exact.Pt) box {
 	return box{exact.Pt{X: min(a.X, b.X), Y: min(a.Y, b.Y)}, exact.Pt{X: max(a.X, b.X), Y: max(a.Y, b.Y)}}

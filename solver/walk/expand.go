@@ -52,103 +52,142 @@ func (f *Finder) leave(n int32, e mesh.Edge, r, l exact.Vec, key float64) {
 	if b := t.P[e.Next().Corner()].Sub(root); b.Cross(l) == 0 {
 		f.arrive(n, e.Next(), b)
 	}
-	if !t.StopsWalk(e.Corner()) {
-		f.send(n, t.N[e.Corner()], r, l, key)
+	if t.StopsWalk(e.Corner()) {
+		return
+	}
+	switch c := (cone{key, n, t.N[e.Corner()], r, l}); {
+	case !f.enters(c.in.Tri()):
+	case f.passes(e.Tri(), c.in.Tri()):
+		f.expand(c)
+	default:
+		f.send(&c)
 	}
 }
 
-// expand lets cone c enter its triangle.
+// expand lets cone c enter its triangle, and those beyond for as long as one cone alone goes on, over a neck, and holds no part
+// of a goal: that has nothing to wait for.
 func (f *Finder) expand(c cone) {
+	for f.step(&c) {
+	}
+}
+
+// step lets cone c enter its triangle. It reports true when c, as it goes on, may be followed at once.
+func (f *Finder) step(c *cone) bool {
 	f.Expanded++
-	t := &f.m.Tris[c.in.Tri()]
-	f.meetGoals(c.node, c.in.Tri(), c.r, c.l, c.key)
+	now := c.in.Tri()
+	t := &f.m.Tris[now]
+	f.meetGoals(c.node, now, c.r, c.l, c.key)
 	if f.field != nil {
-		f.field.add(c.in.Tri(), c.node, c.r, c.l)
+		f.field.add(now, c.node, c.r, c.l)
 	}
 	// Seen from the root, the edge of entry runs from its end (right) to its corner (left); the apex lies behind.
 	left := c.in.Corner()
 	right := inc[left]
 	apex := inc[right]
-	first := c.in - mesh.Edge(left)
 	v := t.P[apex].Sub(f.nodes[c.node].at)
 	onRight, onLeft := c.r.Cross(v), v.Cross(c.l)
 	if onRight >= 0 && onLeft >= 0 {
-		f.arrive(c.node, first+mesh.Edge(apex), v)
+		f.arrive(c.node, mesh.EdgeOf(now, apex), v)
 	}
-	if onRight > 0 && !t.StopsWalk(right) {
-		l := c.l
+	goesRight := onRight > 0 && !t.StopsWalk(right) && f.enters(t.N[right].Tri())
+	goesLeft := onLeft > 0 && !t.StopsWalk(apex) && f.enters(t.N[apex].Tri())
+	switch {
+	case goesRight && goesLeft:
+		f.send(&cone{c.key, c.node, t.N[right], c.r, v})
+		f.send(&cone{c.key, c.node, t.N[apex], v, c.l})
+		return false
+	case goesRight:
+		c.in = t.N[right]
 		if onLeft > 0 {
-			l = v
+			c.l = v
 		}
-		f.send(c.node, t.N[right], c.r, l, c.key)
-	}
-	if onLeft > 0 && !t.StopsWalk(apex) {
-		r := c.r
+	case goesLeft:
+		c.in = t.N[apex]
 		if onRight > 0 {
-			r = v
+			c.r = v
 		}
-		f.send(c.node, t.N[apex], r, c.l, c.key)
+	default:
+		return false
 	}
+	if f.passes(now, c.in.Tri()) {
+		return true
+	}
+	f.send(c)
+	return false
 }
 
-// send queues the cone from r to l of node n that is about to enter a triangle through in, unless a corner already reached
-// leads to all of the edge at least as shortly, or nothing that counts lies beyond.
-func (f *Finder) send(n int32, in mesh.Edge, r, l exact.Vec, key float64) {
-	if !f.enters(in.Tri()) {
-		return
-	}
-	t := &f.m.Tris[in.Tri()]
-	i := in.Corner()
-	root := &f.nodes[n]
+// passes reports whether a neck leads from one triangle to the next, which holds no part of a goal.
+func (f *Finder) passes(from, to int32) bool {
+	return f.narrowed && f.necks.part[from] != f.necks.part[to] && f.heads[to] < 0
+}
+
+// send queues cone c, which is about to enter a triangle and has the key of the one before it, unless corners already reached
+// lead to all of the edge at least as shortly.
+func (f *Finder) send(c *cone) {
+	t := &f.m.Tris[c.in.Tri()]
+	i := c.in.Corner()
+	root := &f.nodes[c.node]
 	b, a := t.P[i], t.P[inc[i]] // left and right end of the edge as seen from the root
-	edge := exact.Line{At: a, Dir: b.Sub(a)}
-	dr, dl := reach(root.at, r, edge), reach(root.at, l, edge)
-	normal := edge.Dir.Left().Neg() // away from the root
-	low := min(dr, dl)
-	if r.Cross(normal) >= 0 && normal.Cross(l) >= 0 {
-		low = float64(exact.Area2(a, b, root.at)) / math.Sqrt(float64(edge.Dir.Len2()))
-	}
-	if f.dominated(t.V[inc[i]], a, root, l, edge, dl) || f.dominated(t.V[i], b, root, r, edge, dr) {
+	s := crossing(root.at, a, b, c.r, c.l)
+	if s.dominated(root.g, f.reach[t.V[inc[i]]], f.reach[t.V[i]]) {
 		return
 	}
-	if key = max(key, root.g+low+f.left(a, b)); key <= f.limit {
-		f.queue.push(cone{key, n, in, r, l})
+	if key := max(c.key, root.g+s.least()+f.left(a, b)); key <= f.limit {
+		f.queue.push(cone{key, c.node, c.in, c.r, c.l})
 	}
 }
 
-// reach returns the distance from root to line e along direction d; it only measures.
-func reach(root exact.Pt, d exact.Vec, e exact.Line) float64 {
-	num, den := exact.Line{At: root, Dir: d}.Meet(e)
-	return float64(num) / float64(den) * math.Sqrt(float64(d.Len2()))
+// span is where a cone crosses an edge, measured along that from its right end.
+type span struct {
+	long float64 // of the edge
+	r, l float64 // the sides of the cone
+	foot float64 // where the edge's line is nearest to the root
+	off  float64 // how far the root is off that line
+}
+
+// crossing returns where the cone from r to l of root crosses the edge from a to b; it only measures.
+func crossing(root, a, b exact.Pt, r, l exact.Vec) span {
+	e, p := b.Sub(a), root.Sub(a)
+	long := math.Sqrt(float64(e.Len2()))
+	s := span{long: long, foot: float64(p.Dot(e)) / long, off: float64(e.Cross(p)) / long}
+	s.r = s.foot + s.off*(float64(r.Dot(e))/float64(r.Cross(e)))
+	s.l = s.foot + s.off*(float64(l.Dot(e))/float64(l.Cross(e)))
+	return s
+}
+
+// dist returns the distance of the root from place x.
+func (s *span) dist(x float64) float64 { return math.Sqrt(s.off*s.off + (x-s.foot)*(x-s.foot)) }
+
+// least returns the distance of the root from the nearest place of the span.
+func (s *span) least() float64 {
+	x := min(max(s.foot, s.r), s.l)
+	if x == s.foot {
+		return s.off
+	}
+	return s.dist(x)
 }
 
 // tieSlack is how much shorter, relatively, another way must be to stop a cone: four units in the last place and the error
 // of the sums, so that equally long walks are all found and reported.
 const tieSlack = 1 - 0x1p-46
 
-// dominated reports whether a walk over corner v, one end of the edge, is shorter than the cone's own to all of its stretch
-// of the edge. Going from v along the edge, the walk over v grows as fast as any can; so if it is the shorter one at the
-// stretch's far end, in direction d at distance dist from the root, it is so everywhere before.
-func (f *Finder) dominated(v int32, at exact.Pt, root *node, d exact.Vec, e exact.Line, dist float64) bool {
-	g := f.reach[v]
-	if g >= root.g+dist {
-		return false
-	}
-	len2 := math.Sqrt(float64(d.Len2()))
-	x := float64(root.at.X-at.X) + float64(d.X)*(dist/len2)
-	y := float64(root.at.Y-at.Y) + float64(d.Y)*(dist/len2)
-	return g+math.Hypot(x, y) < (root.g+dist)*tieSlack
+// dominated reports whether walks over the ends of the edge, at distances a and b, are shorter than the cone's own, whose root is
+// at distance g, to all of its span. Going from an end along the edge, the walk over that end grows as fast as any can; so if it
+// is the shorter one at some place, it is so everywhere before. The place to ask is where both ends lead equally shortly.
+func (s *span) dominated(g, a, b float64) bool {
+	x := min(max((b-a+s.long)/2, s.r), s.l)
+	return min(a+x, b+s.long-x) < (g+s.dist(x))*tieSlack
 }
 
 // arrive notes that node n reaches the starting corner of half-edge e, at offset v, and makes it a root when a walk may turn
 // there.
 func (f *Finder) arrive(n int32, e mesh.Edge, v exact.Vec) {
 	g := f.nodes[n].g + math.Sqrt(float64(v.Len2()))
-	t := &f.m.Tris[e.Tri()]
-	i := e.Corner()
-	if g+f.left(t.P[i], t.P[i]) > f.limit {
+	if g > f.limit {
 		return
 	}
+	t := &f.m.Tris[e.Tri()]
+	i := e.Corner()
 	if id := t.V[i]; f.m.OnePlace(id) && g < f.reach[id] {
 		if math.IsInf(f.reach[id], 1) {
 			f.wiped = append(f.wiped, id)

@@ -48,7 +48,7 @@ func (f *Finder) FloodField(ctx context.Context, start exact.Pt, goals []Goal) (
 	defer f.reset()
 	field := &Field{m: f.m}
 	f.setGoals(goals)
-	f.field, f.limit = field, math.Inf(1)
+	f.field = field
 	if err := f.run(ctx, start); err != nil {
 		return nil, nil, err
 	}

@@ -41,6 +41,7 @@ type Finder struct {
 	reach []float64 // for each point of the mesh that is one place for walkers, an upper bound of its distance
 	wiped []int32   // points whose reach must be reset
 
+	start   exact.Pt
 	goals   []goal
 	ends    []ending
 	tied    []int32 // nodes to which there are equally long walks over other corners
@@ -50,7 +51,7 @@ type Finder struct {
 	marked  []int32 // triangles whose head must be reset
 	limit   float64 // no cone beyond this distance can help any goal
 	settled float64 // a cone beyond this distance tells that some goal's walk is found
-	ahead   []box   // of the goals that are still open
+	ahead   []box   // that hold the goals still open
 	field   *Field  // which keeps the cones of the flood; nil when nobody asked
 
 	necks    *necks   // nil until it pays to know them
@@ -81,6 +82,7 @@ type node struct {
 type mark struct {
 	goal  int32
 	next  int32
+	tri   int32
 	piece int32     // index into the goal's pieces, or -1
 	r, l  exact.Vec // the cone; zero when the goal is none of cones
 }
@@ -89,6 +91,7 @@ type goal struct {
 	spot   *Spot
 	eye    exact.Pt
 	pieces []sight.Piece
+	first  int     // of its marks
 	box    box     // around all of it
 	near   bool    // it has a part in a room of the start; known once the flood is narrowed
 	closed bool    // nothing more is to be found
@@ -144,11 +147,12 @@ func (f *Finder) Flood(ctx context.Context, start exact.Pt, goals []Goal) ([]Pat
 
 // run sends cones from start until none can help any goal.
 func (f *Finder) run(ctx context.Context, start exact.Pt) error {
+	f.start = start
+	far := f.learn(start)
 	f.aim()
 	if err := f.begin(start); err != nil {
 		return err
 	}
-	far := f.learn(start)
 	for n := 1; !f.queue.empty(); n++ {
 		if n&1023 == 0 && ctx.Err() != nil {
 			return ctx.Err()
@@ -156,6 +160,7 @@ func (f *Finder) run(ctx context.Context, start exact.Pt) error {
 		c := f.queue.pop()
 		if f.Expanded > far {
 			far = f.learn(start)
+			f.aim()
 		}
 		if c.key > f.settled {
 			f.close(c.key)
@@ -210,7 +215,7 @@ func (f *Finder) reset() {
 func (f *Finder) setGoals(goals []Goal) {
 	f.Expanded = 0
 	for i, g := range goals {
-		f.goals = append(f.goals, goal{spot: g.Spot, eye: g.Eye, pieces: g.Pieces, g: math.Inf(1), last: -1})
+		f.goals = append(f.goals, goal{spot: g.Spot, eye: g.Eye, pieces: g.Pieces, first: len(f.marks), g: math.Inf(1), last: -1})
 		for _, c := range g.Cones {
 			f.mark(c.Tri, mark{goal: int32(i), piece: -1, r: c.R, l: c.L})
 		}
@@ -232,7 +237,7 @@ func (f *Finder) mark(t int32, k mark) {
 		f.marked = append(f.marked, t)
 	}
 	f.goals[k.goal].box = f.goals[k.goal].box.with(boxOf(&f.m.Tris[t]))
-	k.next = f.heads[t]
+	k.next, k.tri = f.heads[t], t
 	f.heads[t] = int32(len(f.marks))
 	f.marks = append(f.marks, k)
 }

@@ -168,7 +168,6 @@ func (f *Finder) narrow(start exact.Pt) {
 		}
 	}
 	f.narrowed = true
-	f.aim()
 }
 
 // join adds part, and what lies between, to the parts of its room that are wanted. It reports false when none is.

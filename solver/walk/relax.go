@@ -22,8 +22,8 @@ type other struct {
 	next   int32 // -1 for none
 }
 
-// relax makes k the root of its sector if it is nearer to the start than the one before. An equally near one is remembered;
-// its cones would be the same.
+// relax makes k the root of its sector if it is nearer to the start than the one before and can lead to a goal. An equally near
+// one is remembered; its cones would be the same.
 func (f *Finder) relax(k node) {
 	old := f.best[k.sector]
 	if old >= 0 {
@@ -42,9 +42,13 @@ func (f *Finder) relax(k node) {
 			return
 		}
 	}
+	key := k.g + f.left(k.at, k.at)
+	if key > f.limit {
+		return
+	}
 	f.best[k.sector] = int32(len(f.nodes))
 	f.nodes = append(f.nodes, k)
-	f.queue.push(cone{key: k.g + f.left(k.at, k.at), node: f.best[k.sector], in: mesh.None})
+	f.queue.push(cone{key: key, node: f.best[k.sector], in: mesh.None})
 }
 
 // settleTies chooses among equally long walks, to the nodes first, the nearest one before the others, then to the goals: the
@@ -140,7 +144,7 @@ func (f *Finder) offer(i int32, n int32, g float64, end [2]float64, piece int32)
 	f.ends = append(f.ends, e)
 	if g < o.g {
 		o.g = g
-		f.aim()
+		f.bound()
 	}
 }
 
