@@ -76,11 +76,17 @@ func (f *Finder) settleTies() {
 // settleTie chooses between two equally long walks to one root: the one with fewer turns, then the one whose points come first
 // in order. A second, different way is told as a tie.
 func (f *Finder) settleTie(o *node, k *other) {
-	f.one = f.chain(f.one[:0], o.parent, o.at)
-	f.two = f.chain(f.two[:0], k.parent, o.at)
+	fork := f.fork(o.parent, k.parent)
+	// A step beyond the fork, where a straight stretch of both may end, the walks are the same.
+	stop := f.nodes[fork].parent
+	if stop >= 0 {
+		stop = f.nodes[stop].parent
+	}
+	f.one = f.chainUpTo(f.one[:0], o.parent, o.at, stop)
+	f.two = f.chainUpTo(f.two[:0], k.parent, o.at, stop)
 	switch c := compareWalks(f.one, f.two); {
 	case c == 0:
-		o.ties = o.ties || f.tiesOn(k.parent)
+		o.ties = o.ties || f.tiesUpTo(k.parent, fork)
 	case c > 0:
 		o.parent, o.g, o.ties = k.parent, k.g, true
 	default:
@@ -89,8 +95,11 @@ func (f *Finder) settleTie(o *node, k *other) {
 }
 
 // tiesOn reports whether there is another walk as long to a node on the walk to n.
-func (f *Finder) tiesOn(n int32) bool {
-	for ; n >= 0; n = f.nodes[n].parent {
+func (f *Finder) tiesOn(n int32) bool { return f.tiesUpTo(n, -1) }
+
+// tiesUpTo is tiesOn without node stop and what comes before it.
+func (f *Finder) tiesUpTo(n, stop int32) bool {
+	for ; n != stop; n = f.nodes[n].parent {
 		if f.nodes[n].ties {
 			return true
 		}
@@ -100,8 +109,13 @@ func (f *Finder) tiesOn(n int32) bool {
 
 // chain appends the points of the walk to node n and on to end, without straight ones, from the end backwards.
 func (f *Finder) chain(dst []exact.Pt, n int32, end exact.Pt) []exact.Pt {
+	return f.chainUpTo(dst, n, end, -1)
+}
+
+// chainUpTo is chain without node stop and what comes before it.
+func (f *Finder) chainUpTo(dst []exact.Pt, n int32, end exact.Pt, stop int32) []exact.Pt {
 	dst = append(dst, end)
-	for ; n >= 0; n = f.nodes[n].parent {
+	for ; n != stop; n = f.nodes[n].parent {
 		p := f.nodes[n].at
 		if k := len(dst); k >= 2 && straight(dst[k-2], dst[k-1], p) {
 			dst[k-1] = p
@@ -110,6 +124,18 @@ func (f *Finder) chain(dst []exact.Pt, n int32, end exact.Pt) []exact.Pt {
 		dst = append(dst, p)
 	}
 	return dst
+}
+
+// fork returns the last node that the walks to nodes a and b have in common.
+func (f *Finder) fork(a, b int32) int32 {
+	for a != b {
+		if f.nodes[a].g > f.nodes[b].g {
+			a = f.nodes[a].parent
+		} else {
+			b = f.nodes[b].parent
+		}
+	}
+	return a
 }
 
 // straight reports whether b lies on the way straight on from a to c. At the end of a thin wall a walk may turn straight
@@ -201,7 +227,8 @@ func (f *Finder) path(o *goal) Path {
 	if o.last < 0 {
 		return Path{Piece: -1}
 	}
-	back := f.turnsTo(nil, o.end.node, o.end.off)
+	f.one = f.turnsTo(f.one[:0], o.end.node, o.end.off)
+	back := slices.Clone(f.one)
 	slices.Reverse(back)
 	x, y := f.place(o.end.node, o.end.off)
 	return Path{Found: true, Length: lengthOf(back, x, y), Turns: back, End: [2]float64{x, y}, Piece: int(o.end.piece),
