@@ -229,7 +229,21 @@ func (w *window) describeOne(p *plan.Plan, r plan.Ref) card {
 		c.title, c.icon = "Floor", "floor"
 		c.where = "the outline within which all happens"
 	}
+	if nameless(p, r) {
+		c.title += " " + r.ID
+	}
 	return c
+}
+
+// nameless reports whether people have no name for an item: then its sign says which one is meant, in the form as in problems.
+func nameless(p *plan.Plan, r plan.Ref) bool {
+	switch r.Kind {
+	case plan.KindWall, plan.KindOpening, plan.KindBlock, plan.KindRoute:
+		return true
+	case plan.KindZone:
+		return itemName(p, r) == ""
+	}
+	return false
 }
 
 // at writes where a mark stands, and in which room.

@@ -83,7 +83,7 @@ func TestDrawRoute(t *testing.T) {
 	if !ok || got.From != "S1" || got.To != "T1" || got.Via.Len() != 1 {
 		t.Fatalf("route %+v", got)
 	}
-	if r.form.title.text != "Route" || len(r.form.facts) != 2 || !strings.HasSuffix(r.form.facts[0].value.text, " m") {
+	if r.form.title.text != "Route R1" || len(r.form.facts) != 2 || !strings.HasSuffix(r.form.facts[0].value.text, " m") {
 		t.Errorf("form of a %q", r.form.title.text)
 	}
 	before := r.form.facts[0].value.text

@@ -3,6 +3,7 @@ package gui
 import (
 	"fmt"
 	"math"
+	"strings"
 
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
@@ -125,8 +126,16 @@ func (p *problems) goTo(i int) {
 	w.choose(0)
 	w.session.Select(f.Items...)
 	w.lookAt(f.At, f.Kind == plan.ProblemGap || f.Kind == plan.ProblemDouble)
-	w.say(sentence(problemName(w.session.Plan(), f.Items[0]) + " " + f.Text))
+	w.say(told(problemName(w.session.Plan(), f.Items[0]), f.Text))
 	w.acted()
+}
+
+// told makes a sentence of an item's name and what is wrong with it.
+func told(name, text string) string {
+	if strings.HasPrefix(text, "no ") {
+		return sentence(name + ": " + text)
+	}
+	return sentence(name + " " + text)
 }
 
 // next goes to the next problem, round and round.

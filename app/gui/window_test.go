@@ -113,7 +113,7 @@ func TestDrawWallAcrossTheView(t *testing.T) {
 	if r.session.Plan().NumWalls() != walls+1 {
 		t.Fatalf("%d walls, want one more than %d", r.session.Plan().NumWalls(), walls)
 	}
-	if sel := r.session.Selection(); len(sel) != 1 || sel[0].Kind != plan.KindWall || r.form.title.text != "Wall" {
+	if sel := r.session.Selection(); len(sel) != 1 || sel[0].Kind != plan.KindWall || r.form.title.text != "Wall "+sel[0].ID {
 		t.Errorf("selected %v, form of a %q", sel, r.form.title.text)
 	}
 	r.keys(fyne.KeyEscape)

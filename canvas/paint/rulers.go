@@ -103,7 +103,7 @@ func (p *pen) rulerFigures(u unit, s view.Steps) {
 			t := p.said(from)
 			half := p.width(t, look) / 2
 			switch {
-			case axis == 0 && at+5*p.k+half < float64(p.W):
+			case axis == 0 && at+5*p.k+half < float64(p.W) && at+5*p.k-half > float64(p.Left):
 				p.centred(t, at+5*p.k, base, look)
 			case axis == 1 && at-9*p.k+half < float64(p.H) && at-9*p.k-half > float64(p.Left):
 				p.centred(t, base, at-9*p.k, look)
