@@ -95,16 +95,9 @@ func (r *results) follow(s *session.Session, k tool.Sketch) {
 	if k.Show.Kind == plan.KindObserver {
 		r.passing = k.Show.ID
 	}
-	for _, ref := range s.Selection() {
-		switch ref.Kind {
-		case plan.KindObserver:
-			r.observer = ref.ID
-		case plan.KindStart:
-			r.start = ref.ID
-		case plan.KindTarget:
-			r.target = ref.ID
-		}
-	}
+	r.observer = lastOf(s.Selection(), plan.KindObserver, r.observer)
+	r.start = lastOf(s.Selection(), plan.KindStart, r.start)
+	r.target = lastOf(s.Selection(), plan.KindTarget, r.target)
 	if _, ok := p.Observer(r.observer); !ok {
 		r.observer = ""
 		for _, o := range p.Observers() {
@@ -126,6 +119,19 @@ func (r *results) follow(s *session.Session, k tool.Sketch) {
 			break
 		}
 	}
+}
+
+// lastOf returns the last item of a kind in a selection; the one that was chosen before when it is among them or there is none.
+func lastOf(sel []plan.Ref, kind plan.Kind, before string) string {
+	last := before
+	for _, ref := range sel {
+		if ref.Kind == kind {
+			if last = ref.ID; last == before {
+				return before
+			}
+		}
+	}
+	return last
 }
 
 // shownObserver returns the id of the observer whose region is washed.

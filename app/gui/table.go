@@ -77,10 +77,23 @@ func (t *table) update() {
 	if key == t.seen {
 		return
 	}
+	other := key.start != t.seen.start || key.target != t.seen.target
 	t.seen = key
 	rows := tableRows(p, r)
 	t.fresh.compare(t.w, rows)
 	t.show(rows)
+	if other {
+		t.bringUp()
+	}
+}
+
+// bringUp scrolls the chosen walk into sight, for it may have been chosen in the picture.
+func (t *table) bringUp() {
+	for i, n := range t.lines {
+		if n >= 0 && t.rows[n].chosen {
+			t.list.ScrollTo(i)
+		}
+	}
 }
 
 // show puts rows in the list.

@@ -211,6 +211,15 @@ func TestTableShowsAndChoosesPairs(t *testing.T) {
 	if s := r.picture.scene(); s.Target != "T2" {
 		t.Errorf("selecting a target shows %s", s.Target)
 	}
+	r.selectAll()
+	if s := r.picture.scene(); s.Start != "S1" || s.Target != "T2" || s.Observer != "O1" {
+		t.Errorf("selecting everything shows %s, and %s to %s", s.Observer, s.Start, s.Target)
+	}
+	r.win.Resize(fyne.NewSize(1280, 620))
+	r.session.Select(plan.Ref{Kind: plan.KindStart, ID: "S2"})
+	if r.acted(); r.table.list.GetScrollOffset() == 0 {
+		t.Error("the walk chosen in the picture is not brought into sight in the table")
+	}
 }
 
 func TestThemes(t *testing.T) {

@@ -12,7 +12,7 @@ import (
 // has itself.
 func knobs(h Host) [][2]float64 {
 	var out [][2]float64
-	for _, r := range h.Selection() {
+	for _, r := range alone(h) {
 		if r.Kind != plan.KindObserver && r.Kind != plan.KindTarget && r.Kind != plan.KindRoute || locked(h.Plan(), r) {
 			continue
 		}

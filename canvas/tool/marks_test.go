@@ -85,6 +85,11 @@ func TestFaceIsCarriedAndStretched(t *testing.T) {
 	if k := s.Sketch(h); len(k.Knobs) != 2 {
 		t.Fatalf("a face has %d handles", len(k.Knobs))
 	}
+	h.Select(ref(plan.KindTarget, "T1"), ref(plan.KindWall, "W1"))
+	if k := s.Sketch(h); len(k.Knobs)+len(k.Handles) != 0 {
+		t.Errorf("two items have %d handles", len(k.Knobs)+len(k.Handles))
+	}
+	h.Select(ref(plan.KindTarget, "T1"))
 	h.drag(s, 0, -0.1, -1.52, -0.6)
 	if q, _ := h.plan.Target("T1"); *q.Face != [2]exact.Pt{m(2, -0.1), m(-1.5, -0.1)} {
 		t.Errorf("stretched: %v", *q.Face)

@@ -43,7 +43,7 @@ const dragStart = 3
 
 // Down takes hold of what is under the pointer.
 func (t *Select) Down(h Host, e Pointer) {
-	hit, ok := pick.At(h.Plan(), h.Camera(), e.X, e.Y, h.Selection(), h.Walked)
+	hit, ok := pick.At(h.Plan(), h.Camera(), e.X, e.Y, alone(h), h.Walked)
 	if !ok && !e.Shift {
 		hit, ok = t.underHit(h, e)
 	}
@@ -70,6 +70,14 @@ func (t *Select) Down(h Host, e Pointer) {
 	case !e.Shift && !g.selected:
 		h.Select(hit.Ref)
 	}
+}
+
+// alone returns the selection when it is one item: of several, only the outlines are shown, and none has handles.
+func alone(h Host) []plan.Ref {
+	if sel := h.Selection(); len(sel) == 1 {
+		return sel
+	}
+	return nil
 }
 
 // selectedUnder returns the only selected item when it lies under the pointer, on top or not.
@@ -158,7 +166,7 @@ func (t *Select) Up(h Host, e Pointer) {
 
 // look finds what lies under the pointer.
 func (t *Select) look(h Host, e Pointer) {
-	t.hover, t.hovered = pick.At(h.Plan(), h.Camera(), e.X, e.Y, h.Selection(), h.Walked)
+	t.hover, t.hovered = pick.At(h.Plan(), h.Camera(), e.X, e.Y, alone(h), h.Walked)
 	t.under = !t.hovered && t.overUnderlay(h, e)
 	if !t.hovered {
 		t.hover, t.hovered = t.underHit(h, e)
@@ -232,7 +240,7 @@ func (t *Select) Sketch(h Host) Sketch {
 	}
 	g := t.grip
 	if g == nil || !g.moved {
-		s.Handles, s.Knobs = handles(h.Plan(), h.Selection()), knobs(h)
+		s.Handles, s.Knobs = handles(h.Plan(), alone(h)), knobs(h)
 		return s
 	}
 	if !g.on {
