@@ -1,6 +1,8 @@
 package gui
 
 import (
+	"image/color"
+
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/driver/desktop"
@@ -89,7 +91,7 @@ func (r *iconButtonRenderer) MinSize() fyne.Size { return fyne.NewSize(iconSide,
 
 func (r *iconButtonRenderer) Refresh() {
 	p := themed()
-	r.tint.FillColor = faded(p.Ink, 0)
+	r.tint.FillColor = color.Transparent
 	if r.b.hovered {
 		r.tint.FillColor = faded(p.Ink, 10)
 	}

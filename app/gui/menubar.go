@@ -113,19 +113,18 @@ func (b *menuBar) MouseOut() {
 
 // CreateRenderer is for the toolkit.
 func (b *menuBar) CreateRenderer() fyne.WidgetRenderer {
-	r := &barRenderer{b: b, ground: canvas.NewRectangle(nil), tint: canvas.NewRectangle(nil)}
+	r := &barRenderer{b: b, tint: canvas.NewRectangle(nil)}
 	r.tint.CornerRadius = 4
 	r.Refresh()
 	return r
 }
 
 type barRenderer struct {
-	b            *menuBar
-	ground, tint *canvas.Rectangle
+	b    *menuBar
+	tint *canvas.Rectangle
 }
 
 func (r *barRenderer) Layout(s fyne.Size) {
-	r.ground.Resize(s)
 	for i, t := range r.b.titles {
 		from, _ := r.b.span(i)
 		t.Move(fyne.NewPos(from+barGap/2, 0))
@@ -150,7 +149,7 @@ func (r *barRenderer) MinSize() fyne.Size { return fyne.NewSize(200, barHeight) 
 
 func (r *barRenderer) Refresh() {
 	p := themed()
-	r.ground.FillColor, r.tint.FillColor = p.Chrome, faded(p.Ink, 7)
+	r.tint.FillColor = faded(p.Ink, 7)
 	r.tint.StrokeColor, r.tint.StrokeWidth = faded(p.Ink, 0), 0
 	if r.b.drop.Visible() {
 		r.tint.FillColor = faded(p.Ink, 13)
@@ -163,12 +162,11 @@ func (r *barRenderer) Refresh() {
 	for _, t := range r.b.titles {
 		t.Refresh()
 	}
-	canvas.Refresh(r.ground)
 	canvas.Refresh(r.tint)
 }
 
 func (r *barRenderer) Objects() []fyne.CanvasObject {
-	o := []fyne.CanvasObject{r.ground, r.tint}
+	o := []fyne.CanvasObject{r.tint}
 	for _, t := range r.b.titles {
 		o = append(o, t)
 	}

@@ -1,6 +1,8 @@
 package gui
 
 import (
+	"image/color"
+
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/driver/desktop"
@@ -109,7 +111,7 @@ func (r *pickerRenderer) Refresh() {
 	if r.p.focused {
 		r.ground.StrokeColor, r.ground.StrokeWidth = c.Ink, 2
 	}
-	r.tint.FillColor = faded(c.Ink, 0)
+	r.tint.FillColor = color.Transparent
 	if r.p.hovered {
 		r.tint.FillColor = faded(c.Ink, 7)
 	}

@@ -1,6 +1,8 @@
 package gui
 
 import (
+	"image/color"
+
 	"fmt"
 	"math"
 	"strings"
@@ -299,7 +301,7 @@ func (x *problemRowRenderer) Layout(s fyne.Size) {
 func (x *problemRowRenderer) MinSize() fyne.Size { return fyne.NewSize(200, problemHeight) }
 func (x *problemRowRenderer) Refresh() {
 	p := themed()
-	x.ground.FillColor = faded(p.Ink, 0)
+	x.ground.FillColor = color.Transparent
 	if x.r.hovered {
 		x.ground.FillColor = faded(p.Ink, 7)
 	}

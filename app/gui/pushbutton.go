@@ -1,6 +1,8 @@
 package gui
 
 import (
+	"image/color"
+
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/driver/desktop"
@@ -99,7 +101,7 @@ func (r *pushRenderer) Refresh() {
 		r.ground.FillColor, r.ground.StrokeColor = p.ToolFill, p.ToolFill
 		r.b.text.role = roleToolIcon
 	}
-	r.tint.FillColor = faded(p.Ink, 0)
+	r.tint.FillColor = color.Transparent
 	if r.b.hovered {
 		r.tint.FillColor = faded(p.Ink, 7)
 		if r.b.primary {

@@ -30,7 +30,7 @@ func newStatus() *status {
 	s.solve.shrinking()
 	s.counts.shrinking()
 	row := container.New(statusRow{}, s.place, tick(), s.snap, tick(), s.counts, tick(), s.solve, s.progress, s.hint)
-	s.box = on(roleChrome, around(hairline(), nil, nil, nil, inset(14, 4, 18, 5, row)))
+	s.box = around(hairline(), nil, nil, nil, inset(14, 4, 18, 5, row))
 	return s
 }
 

@@ -1,6 +1,8 @@
 package gui
 
 import (
+	"image/color"
+
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/container"
@@ -310,7 +312,7 @@ func (x *tableRowRenderer) Layout(s fyne.Size) {
 func (x *tableRowRenderer) MinSize() fyne.Size { return fyne.NewSize(200, 28) }
 func (x *tableRowRenderer) Refresh() {
 	p := themed()
-	x.ground.FillColor, x.bar.FillColor = faded(p.Ink, 0), faded(p.Ink, 0)
+	x.ground.FillColor, x.bar.FillColor = color.Transparent, color.Transparent
 	switch {
 	case x.r.row.chosen:
 		x.ground.FillColor, x.bar.FillColor = p.Field, p.Ink

@@ -1,6 +1,8 @@
 package gui
 
 import (
+	"image/color"
+
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/driver/desktop"
@@ -143,7 +145,7 @@ func (r *toolButtonRenderer) MinSize() fyne.Size { return fyne.NewSize(toolWidth
 func (r *toolButtonRenderer) Refresh() {
 	p := themed()
 	r.b.icon.role, r.b.letter.role = roleInk, roleInk2
-	r.ground.FillColor = faded(p.Ink, 0)
+	r.ground.FillColor = color.Transparent
 	switch {
 	case r.b.chosen:
 		r.ground.FillColor = p.ToolFill

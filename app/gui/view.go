@@ -49,6 +49,7 @@ const (
 func newPlanView(w *window) *planView {
 	v := &planView{w: w, fitted: true, around: w.bounds(), pix: 1, over: newOverlay(), ring: canvas.NewRectangle(nil)}
 	v.raster = canvas.NewRaster(w.picture.draw)
+	v.raster.ScaleMode = canvas.ImageScalePixels // a pixel of the picture is one of the screen: nothing to blend
 	v.ExtendBaseWidget(v)
 	return v
 }

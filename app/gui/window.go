@@ -110,7 +110,7 @@ func newWindow(d *desk) *window {
 	return w
 }
 
-// build puts the window together.
+// build puts the window together. The toolkit clears it in the chrome's colour, so that bars and rail need no ground of their own.
 func (w *window) build() {
 	w.tips, w.notice, w.status = newTips(w.do), newNotice(), newStatus()
 	w.view, w.foot, w.form, w.table, w.first = newPlanView(w), newFoot(), newForm(w), newTable(w), newFirstSteps()
@@ -132,7 +132,7 @@ func (w *window) build() {
 	w.bar.drop.back = w.view.grab
 	page := around(pile(w.bar, hairline(), w.notice.box), w.status.box, nil, nil, w.middle)
 	w.notice.page = page
-	w.win.SetContent(container.NewStack(newPaper(roleChrome), page, w.bar.drop, w.tips.layer))
+	w.win.SetContent(container.NewStack(page, w.bar.drop, w.tips.layer))
 	w.shortcuts()
 	c := w.win.Canvas()
 	c.SetOnTypedKey(func(e *fyne.KeyEvent) { w.typedKey(e.Name) })
