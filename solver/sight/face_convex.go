@@ -46,9 +46,9 @@ func (p *Piece) add(l exact.Line, clip bool) {
 // buffers, so a warm one does not allocate.
 type Convex struct {
 	lines []exact.Line
-	ring  []uint8 // indices into lines, counter-clockwise, each line once
+	ring  []int32 // indices into lines, counter-clockwise, each line once
 	side  []int
-	next  []uint8
+	next  []int32
 }
 
 // Start makes the polygon triangle t.
@@ -60,7 +60,7 @@ func (c *Convex) Start(t *mesh.Tri) {
 // Cut keeps the part to the left of l, and reports whether it has an inside. After it has not, the polygon must be started
 // again.
 func (c *Convex) Cut(l exact.Line) bool {
-	k := uint8(len(c.lines))
+	k := int32(len(c.lines))
 	c.lines = append(c.lines, l)
 	n := len(c.ring)
 	c.side = c.side[:0]
@@ -86,6 +86,21 @@ func (c *Convex) Cut(l exact.Line) bool {
 		}
 	}
 	c.ring, c.next = c.next, c.ring
+	return true
+}
+
+// CutCone keeps what lies between the directions r and l from at, less than half a turn, as Cut does.
+func (c *Convex) CutCone(at exact.Pt, r, l exact.Vec) bool {
+	return c.Cut(exact.Line{At: at, Dir: r}) && c.Cut(exact.Line{At: at, Dir: l.Neg()})
+}
+
+// CutTriangle keeps what lies in t too, as Cut does.
+func (c *Convex) CutTriangle(t *mesh.Tri) bool {
+	for i := range 3 {
+		if !c.Cut(exact.Through(t.P[i], t.P[inc[i]])) {
+			return false
+		}
+	}
 	return true
 }
 
@@ -118,17 +133,24 @@ func (c *Convex) trim(p *Piece) {
 
 // cut reports whether any line but the triangle's edges bounds the polygon.
 func (c *Convex) cut() bool {
-	return slices.ContainsFunc(c.ring, func(k uint8) bool { return k > 2 })
+	return slices.ContainsFunc(c.ring, func(k int32) bool { return k > 2 })
 }
 
 // bounded reports whether line i of the piece that the polygon was made from bounds it.
-func (c *Convex) bounded(i int) bool { return slices.Contains(c.ring, uint8(3+i)) }
+func (c *Convex) bounded(i int) bool { return slices.Contains(c.ring, int32(3+i)) }
 
 // Len returns the number of edges.
 func (c *Convex) Len() int { return len(c.ring) }
 
 // Line returns the line of edge i, the polygon to its left; i may be one too small or too large.
-func (c *Convex) Line(i int) exact.Line { return c.lines[c.ring[(i+len(c.ring))%len(c.ring)]] }
+func (c *Convex) Line(i int) exact.Line {
+	if n := len(c.ring); i < 0 {
+		i += n
+	} else if i >= n {
+		i -= n
+	}
+	return c.lines[c.ring[i]]
+}
 
 // Source says which line edge i lies on: 0 to 2 for the edges of the triangle, then the cuts in order.
 func (c *Convex) Source(i int) int { return int(c.ring[i]) }

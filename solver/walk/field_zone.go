@@ -38,9 +38,8 @@ func NewZone(m, zone *mesh.Mesh) *Zone {
 		}
 		for j := range zone.Tris {
 			if boxes[j].meets(b) {
-				clip.begin(t)
-				clip.addTriangle(&zone.Tris[j])
-				if clip.cutTriangle() {
+				clip.Start(t)
+				if clip.CutTriangle(&zone.Tris[j]) {
 					z.pairs = append(z.pairs, overlap{int32(i), int32(j)})
 				}
 			}
@@ -150,18 +149,15 @@ func (k *site) to(x, y float64) float64 { return k.g + math.Hypot(x-k.x, y-k.y) 
 func (s *spanner) corners() {
 	for i, k := range s.parts {
 		from := &s.field.roots[k.root]
-		s.clip.begin(s.tri)
-		s.clip.addTriangle(s.tile)
-		s.clip.addCone(from.at, k.r, k.l)
-		if !s.clip.cutTriangle() {
+		s.clip.Start(s.tri)
+		if !s.clip.CutTriangle(s.tile) || !s.clip.CutCone(from.at, k.r, k.l) {
 			continue
 		}
 		end := s.clip.closest(from.at)
 		x, y := end.Offset(s.at)
 		s.offerNear(s.sites[i].to(x, y), x, y)
-		n := len(s.clip.ring)
-		for j, e := range s.clip.ring {
-			corner := meeting(s.clip.line[e], s.clip.line[s.clip.ring[(j+1)%n]])
+		for j := range s.clip.Len() {
+			corner := meeting(s.clip.Line(j), s.clip.Line(j+1))
 			x, y := corner.Offset(s.at)
 			s.offerFar(s.least(x, y), x, y)
 		}

@@ -104,9 +104,8 @@ func (w *Widths) overlaps(t int32) {
 
 // shares reports whether lean triangle u and plain triangle t have more than a border in common.
 func (w *Widths) shares(u, t int32) bool {
-	w.clip.begin(&w.m.Tris[u])
-	w.clip.addTriangle(&w.plain.Tris[t])
-	return w.clip.cutTriangle()
+	w.clip.Start(&w.m.Tris[u])
+	return w.clip.CutTriangle(&w.plain.Tris[t])
 }
 
 // onlyCell returns the one cell that all found triangles lie in, or several.
@@ -148,15 +147,13 @@ func (w *Widths) sharing(dst []int32, u, node, t int32) []int32 {
 
 // reached reports whether lean triangle u and plain triangle t share floor to the left of the bridge's lines.
 func (w *Widths) reached(u, t int32) bool {
-	w.clip.begin(&w.m.Tris[u])
-	w.clip.addTriangle(&w.plain.Tris[t])
-	w.clip.line = append(w.clip.line, w.bridge.lines...)
-	return w.clip.cutTriangle()
-}
-
-// addTriangle adds the lines of another triangle's edges.
-func (c *clipper) addTriangle(t *mesh.Tri) {
-	for i := range 3 {
-		c.line = append(c.line, exact.Through(t.P[i], t.P[inc[i]]))
+	if !w.shares(u, t) {
+		return false
 	}
+	for _, l := range w.bridge.lines {
+		if !w.clip.Cut(l) {
+			return false
+		}
+	}
+	return true
 }
