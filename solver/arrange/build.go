@@ -13,21 +13,37 @@ import (
 //   - Errors: the context's when it is cancelled; mesh.ErrCrossing if g is not planar, which Round never yields.
 //   - Cost: O(n log n) expected; the solid triangles are found in one pass over the mesh.
 func Build(ctx context.Context, g *Graph) (*mesh.Mesh, error) {
-	ends := make([][2]int32, len(g.Edges))
-	tags := make([]mesh.Tag, len(g.Edges))
-	for i, e := range g.Edges {
+	loose, err := mesh.TriangulatePoints(pulse.Part(ctx, 0, 0.4), g.Pts)
+	if err != nil {
+		return nil, err
+	}
+	ends, tags := g.split()
+	return g.finish(pulse.Part(ctx, 0.4, 1), loose, ends, tags)
+}
+
+// split returns the edges as the mesh takes them: their ends and what they stop.
+func (g *Graph) split() (ends [][2]int32, tags []mesh.Tag) {
+	ends = make([][2]int32, len(g.Edges))
+	tags = make([]mesh.Tag, len(g.Edges))
+	for i := range g.Edges {
+		e := &g.Edges[i]
 		ends[i] = [2]int32{e.A, e.B}
 		tags[i] = mesh.Tag{Top: e.Top, Walk: e.Walk}
 	}
-	tr, err := mesh.Triangulate(pulse.Part(ctx, 0, 0.6), g.Pts, ends)
+	return ends, tags
+}
+
+// finish puts the edges into the triangulation of the points and finds out which triangles are solid.
+func (g *Graph) finish(ctx context.Context, loose *mesh.Loose, ends [][2]int32, tags []mesh.Tag) (*mesh.Mesh, error) {
+	tr, err := loose.Constrain(pulse.Part(ctx, 0, 0.3), ends)
 	if err != nil {
 		return nil, err
 	}
-	solid, err := g.solids(pulse.Part(ctx, 0.6, 0.7), tr)
+	solid, err := g.solids(pulse.Part(ctx, 0.3, 0.5), tr)
 	if err != nil {
 		return nil, err
 	}
-	return tr.Finish(pulse.Part(ctx, 0.7, 1), tags, solid)
+	return tr.Finish(pulse.Part(ctx, 0.5, 1), tags, solid)
 }
 
 // solids returns what each triangle stops.

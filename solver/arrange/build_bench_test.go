@@ -13,7 +13,7 @@ import (
 func BenchmarkBuild(b *testing.B) {
 	eachOutline(b, func(b *testing.B, o *arrange.Outline) {
 		for b.Loop() {
-			if _, err := arrange.Build(context.Background(), arrange.Round(o)); err != nil {
+			if _, err := arrange.NewSite(context.Background(), o); err != nil {
 				b.Fatal(err)
 			}
 		}

@@ -20,10 +20,15 @@ import (
 //     O(n²) only when most segments share one cell, and not an end.
 //   - Source: Hobby 1999, section 2; the half-open pixel is his.
 func Round(o *Outline) *Graph {
-	r, err := round(context.Background(), o, math.MaxInt)
+	ctx := context.Background()
+	r, err := heat(ctx, o, math.MaxInt)
+	if err == nil {
+		err = r.draw(ctx, o)
+	}
 	if err != nil {
 		panic("arrange: " + err.Error()) // nobody cancels the background
 	}
+	r.compact()
 	return r.graph
 }
 
@@ -33,29 +38,45 @@ type rounding struct {
 	cells  *cells
 	passes []pass // those of segment i are passes[start[i]:start[i+1]]
 	start  []int32
-	whole  bool // every hot pixel is a point of the graph
+	place  []int32 // the points that compact is to drop, if any: see used
+	whole  bool    // every hot pixel is a point of the graph
 }
 
-// round does the work of Round. It gives up with an error once there are many more crossings than edges may be.
-func round(ctx context.Context, o *Outline, limit int) (*rounding, error) {
+// heat is the first step of Round: it finds the hot pixels, which are the points of the graph, but for those that compact drops. It
+// gives up with an error once there are many more crossings than edges may be.
+func heat(ctx context.Context, o *Outline, limit int) (*rounding, error) {
 	r := &rounding{graph: &Graph{Items: o.Items, Bodies: o.Bodies}}
 	if len(o.Segments) == 0 {
 		return r, nil
 	}
 	r.cells = makeCells(o.Segments)
-	hot, err := hotPixels(pulse.Part(ctx, 0.2, 0.5), o.Segments, r.cells, limit)
-	if err != nil {
-		return nil, err
+	var err error
+	r.graph.Pts, err = hotPixels(ctx, o.Segments, r.cells, limit)
+	return r, err
+}
+
+// draw is the second step: it draws the segments through the hot pixels. It leaves the points as they are.
+func (r *rounding) draw(ctx context.Context, o *Outline) (err error) {
+	if len(o.Segments) == 0 {
+		return nil
 	}
-	if r.passes, r.start, err = passing(pulse.Part(ctx, 0.5, 0.8), o.Segments, r.cells, hot); err != nil {
-		return nil, err
+	if r.passes, r.start, err = passing(pulse.Part(ctx, 0, 0.6), o.Segments, r.cells, r.graph.Pts); err != nil {
+		return err
 	}
-	r.graph.Pts = hot
-	if err := r.graph.merge(pulse.Part(ctx, 0.8, 1), o.Segments, r.passes); err != nil {
-		return nil, err
+	if err := r.graph.merge(pulse.Part(ctx, 0.6, 1), o.Segments, r.passes); err != nil {
+		return err
 	}
-	r.whole = r.graph.compact()
-	return r, nil
+	r.place = r.graph.used()
+	return nil
+}
+
+// compact is the third step: it drops the points that no edge ends at, those of outlines that run there and back.
+func (r *rounding) compact() {
+	if r.whole = r.cells != nil && r.place == nil; r.place == nil {
+		return
+	}
+	r.graph.compact(r.place)
+	r.place = nil
 }
 
 // hotPixels returns the centres of the hot pixels, in order, each once.
@@ -311,29 +332,40 @@ func (g *Graph) mergeLinks(a int32, segs []Segment, links []link) {
 	}
 }
 
-// compact drops the points that no edge ends at: those of outlines that run there and back. It reports whether all stay.
-func (g *Graph) compact() (whole bool) {
-	place := make([]int32, len(g.Pts))
+// used returns which number each point would have if those that no edge ends at were dropped, -1 for these, and nil when there
+// are none.
+func (g *Graph) used() (place []int32) {
+	place = make([]int32, len(g.Pts))
 	for _, e := range g.Edges {
 		place[e.A], place[e.B] = 1, 1
 	}
 	n := int32(0)
 	for i, used := range place {
-		if used == 1 {
-			g.Pts[n] = g.Pts[i]
+		if place[i] = -1; used == 1 {
 			place[i] = n
 			n++
 		}
 	}
-	if int(n) == len(g.Pts) {
-		return true
+	if int(n) == len(place) {
+		return nil
+	}
+	return place
+}
+
+// compact drops points as used tells.
+func (g *Graph) compact(place []int32) {
+	n := 0
+	for i, k := range place {
+		if k >= 0 {
+			g.Pts[k] = g.Pts[i]
+			n++
+		}
 	}
 	g.Pts = g.Pts[:n]
 	for i := range g.Edges {
 		e := &g.Edges[i]
 		e.A, e.B = place[e.A], place[e.B]
 	}
-	return false
 }
 
 func (g *Graph) addWind(from int, w Wind) {

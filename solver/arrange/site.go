@@ -81,7 +81,8 @@ func (o *Outline) limit() int {
 	return MaxEdges
 }
 
-// NewSite rounds and triangulates an outline.
+// NewSite rounds and triangulates an outline, as Round and Build do one after the other. The points are known before the edges:
+// they are triangulated while the segments are drawn through them.
 //
 //   - Errors: *TooLarge; the context's when it is cancelled.
 //   - Cost: as Round and Build.
@@ -89,15 +90,33 @@ func NewSite(ctx context.Context, o *Outline) (*Site, error) {
 	if err := o.tooLarge(len(o.Segments)); err != nil {
 		return nil, err
 	}
-	r, err := round(pulse.Part(ctx, 0, 0.3), o, o.limit())
+	r, err := heat(pulse.Part(ctx, 0, 0.1), o, o.limit())
 	if err != nil {
 		return nil, err
 	}
-	if err := o.tooLarge(len(r.graph.Edges)); err != nil {
+	s := &Site{Outline: o, Graph: r.graph, segs: o.Segments, rounding: r}
+	var loose *mesh.Loose
+	err = pulse.Each(pulse.Part(ctx, 0.1, 0.5), 2, func(ctx context.Context, i int) (err error) {
+		if i == 0 {
+			loose, err = mesh.TriangulatePoints(ctx, r.graph.Pts)
+			return err
+		}
+		if err := r.draw(ctx, o); err != nil {
+			return err
+		}
+		return o.tooLarge(len(r.graph.Edges))
+	})
+	if err != nil {
 		return nil, err
 	}
-	s := &Site{Outline: o, Graph: r.graph, segs: o.Segments, rounding: r}
-	s.Mesh, err = Build(pulse.Part(ctx, 0.3, 1), s.Graph)
+	r.compact()
+	if !r.whole { // rarely: the points that were dropped must not be corners of triangles
+		if loose, err = mesh.TriangulatePoints(ctx, r.graph.Pts); err != nil {
+			return nil, err
+		}
+	}
+	ends, tags := r.graph.split()
+	s.Mesh, err = r.graph.finish(pulse.Part(ctx, 0.5, 1), loose, ends, tags)
 	return s, err
 }
 

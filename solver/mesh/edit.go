@@ -170,7 +170,8 @@ func (d *Editor) Add(p exact.Pt) (int32, error) {
 	v := int32(len(tr.Pts))
 	tr.Pts, tr.out = append(tr.Pts, p), append(tr.out, None)
 	u, w := tr.fresh(), tr.fresh()
-	tr.put(v, t, on, u, w)
+	in := inserter{tr: tr, n: uint32(len(tr.Pts))}
+	in.put(v, t, on, u, w)
 	// What changed is what lies around the new point.
 	for first, e := EdgeOf(u, 2), EdgeOf(u, 2); ; {
 		tr.log = append(tr.log, e.Tri())

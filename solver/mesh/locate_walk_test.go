@@ -26,13 +26,14 @@ func TestWander(t *testing.T) {
 		if err != nil {
 			t.Fatal(err)
 		}
+		in := inserter{tr: tr, n: uint32(len(tr.Pts))}
 		lo, hi := m.Box()
 		for range 500 {
 			from, p := r.Int32N(int32(len(m.Tris))), exact.Pt{X: r.Int32N(side+2) - 1, Y: r.Int32N(side+2) - 1}
 			p.X, p.Y = min(max(p.X, lo.X), hi.X), min(max(p.Y, lo.Y), hi.Y)
 			t1, _, z1 := m.walkTo(from, p)
 			t2, _, z2 := m.wander(from, p)
-			t3, on3, ok3 := tr.find(from, p)
+			t3, on3, ok3 := in.find(from, p)
 			t4, on4, ok4 := tr.walk(from, p)
 			if z1 != z2 || z1 == 0 && (t1 != t2 || t3 != t1 || t4 != t1) || (on3 < 0) != (on4 < 0) || ok3 != ok4 {
 				t.Fatalf("seed %d: %v from %d: in %d (%d), %d (%d), %d (%d, %v), %d (%d, %v)", seed, p, from, t1, z1, t2, z2, t3, on3, ok3, t4, on4, ok4)

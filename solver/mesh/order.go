@@ -25,8 +25,9 @@ func curveOrder(pts []exact.Pt) []int32 {
 
 // insertionOrder returns the order in which pts, given along a curve, are to be inserted, but for those left out: rounds of
 // doubling size chosen by a hash of the coordinates, so that the expected number of flips stays constant, and each round along
-// the curve, so that the walk to the next point is short. It depends on the points alone. O(n).
-func insertionOrder(pts []exact.Pt, out []int32) []int32 {
+// the curve, so that the walk to the next point is short. It depends on the points alone. Round r, of which the last one is 0,
+// ends before order[ends[r]]. O(n).
+func insertionOrder(pts []exact.Pt, out []int32) (order []int32, ends [rounds]int32) {
 	var next [rounds]int32 // where the next point of each round goes; the last round, of half the points, is round 0
 	for _, p := range pts {
 		next[round(hash(p))]++
@@ -37,7 +38,7 @@ func insertionOrder(pts []exact.Pt, out []int32) []int32 {
 	for r, sum := rounds-1, int32(0); r >= 0; r-- {
 		next[r], sum = sum, sum+next[r]
 	}
-	order := make([]int32, len(pts)-len(out))
+	order = make([]int32, len(pts)-len(out))
 	for i, p := range pts {
 		if !slices.Contains(out, int32(i)) {
 			r := round(hash(p))
@@ -45,7 +46,7 @@ func insertionOrder(pts []exact.Pt, out []int32) []int32 {
 			next[r]++
 		}
 	}
-	return order
+	return order, next
 }
 
 // curveFrame returns the lower left corner of pts and the shift that brings their extent to 16 bits.

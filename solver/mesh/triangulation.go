@@ -49,7 +49,6 @@ type Triangulation struct {
 	tris  []rawTri
 	box   int32      // index of the first corner of the box
 	out   []Edge     // some half-edge leaving each point; nil until it is needed
-	todo  []int32    // stack of triangles around a new point to examine
 	work  [][2]int32 // edges to examine, by their ends
 	free  []int32    // triangles taken out, to be used again
 	log   []int32    // triangles changed since the last call of Edit
@@ -73,24 +72,48 @@ const margin = 10000
 //   - Errors: ErrCrossing when they do not; the context's error when it is cancelled.
 //   - Cost: O(n log n) expected for the points; an edge costs time proportional to what it crosses.
 func Triangulate(ctx context.Context, pts []exact.Pt, edges [][2]int32) (*Triangulation, error) {
+	loose, err := TriangulatePoints(pulse.Part(ctx, 0, 0.65), pts)
+	if err != nil {
+		return nil, err
+	}
+	return loose.Constrain(pulse.Part(ctx, 0.65, 1), edges)
+}
+
+// Loose is the Delaunay triangulation of points whose edges are still to come.
+type Loose struct {
+	tr           *Triangulation
+	given        []exact.Pt // the points as given, with the corners of the box
+	curve, along []int32    // which of the given points each point along the curve is, and the inverse
+}
+
+// TriangulatePoints is the first step of Triangulate, for those who do not know the edges yet. Constrain is the other one.
+func TriangulatePoints(ctx context.Context, pts []exact.Pt) (*Loose, error) {
+	return triangulatePoints(ctx, pts, partsOf(len(pts)))
+}
+
+func triangulatePoints(ctx context.Context, pts []exact.Pt, parts int) (*Loose, error) {
 	// While it is made, points are numbered along a curve: neighbours then lie near each other in memory.
 	all := boxed(pts)
-	curve := curveOrder(all)
-	tr := &Triangulation{Pts: make([]exact.Pt, len(all)), box: int32(len(pts))}
-	along := make([]int32, len(all))
-	for i, v := range curve {
-		tr.Pts[i], along[v] = all[v], int32(i)
+	l := &Loose{given: all, curve: curveOrder(all), along: make([]int32, len(all))}
+	l.tr = &Triangulation{Pts: make([]exact.Pt, len(all)), box: int32(len(pts))}
+	for i, v := range l.curve {
+		l.tr.Pts[i], l.along[v] = all[v], int32(i)
 	}
-	if err := tr.insertAll(pulse.Part(ctx, 0, 0.65), along); err != nil {
+	if err := l.tr.insertAll(ctx, l.along, parts); err != nil {
 		return nil, err
 	}
-	if err := tr.constrainAll(pulse.Part(ctx, 0.65, 0.9), edges, along); err != nil {
+	return l, nil
+}
+
+// Constrain forces the edges in, as Triangulate does. l is used up.
+func (l *Loose) Constrain(ctx context.Context, edges [][2]int32) (*Triangulation, error) {
+	if err := l.tr.constrainAll(pulse.Part(ctx, 0, 0.7), edges, l.along); err != nil {
 		return nil, err
 	}
-	if err := tr.arrange(pulse.Part(ctx, 0.9, 1), all, curve); err != nil {
+	if err := l.tr.arrange(pulse.Part(ctx, 0.7, 1), l.given, l.curve); err != nil {
 		return nil, err
 	}
-	return tr, pulse.Tell(ctx, 1)
+	return l.tr, pulse.Tell(ctx, 1)
 }
 
 // boxed returns pts followed by the corners of a box that holds them strictly inside.

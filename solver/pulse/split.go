@@ -33,3 +33,24 @@ func Split[T any](ctx context.Context, n int, work func(ctx context.Context, lo,
 	}
 	return out, nil
 }
+
+// Each does n pieces of work side by side. All have ended when it returns. The first, on the
+// caller's goroutine, speaks for the others where they tell how far they are.
+//
+//   - Errors: the first piece's that fails, in order.
+func Each(ctx context.Context, n int, work func(ctx context.Context, i int) error) error {
+	errs := make([]error, n)
+	silent := context.WithValue(ctx, key{}, nil)
+	var others sync.WaitGroup
+	for i := 1; i < n; i++ {
+		others.Go(func() { errs[i] = work(silent, i) })
+	}
+	errs[0] = work(ctx, 0)
+	others.Wait()
+	for _, err := range errs {
+		if err != nil {
+			return err
+		}
+	}
+	return nil
+}

@@ -73,3 +73,30 @@ func TestSplitTells(t *testing.T) {
 		t.Errorf("cancelled: %v", err)
 	}
 }
+
+// TestEach: every piece is done once, a fault of any comes through, and the first alone tells how far it is.
+func TestEach(t *testing.T) {
+	told := 0
+	ctx := pulse.With(context.Background(), func(float64) { told++ })
+	for _, n := range []int{1, 2, 9} {
+		done := make([]int, n)
+		told = 0
+		err := pulse.Each(ctx, n, func(ctx context.Context, i int) error {
+			done[i]++
+			return pulse.Tell(ctx, 0.5)
+		})
+		if err != nil || told != 1 || slices.ContainsFunc(done, func(k int) bool { return k != 1 }) {
+			t.Errorf("%d pieces: %v, done %v, told %d times", n, err, done, told)
+		}
+	}
+	fault := errors.New("the last piece")
+	err := pulse.Each(ctx, 3, func(_ context.Context, i int) error {
+		if i == 2 {
+			return fault
+		}
+		return nil
+	})
+	if !errors.Is(err, fault) {
+		t.Errorf("error %v", err)
+	}
+}
