@@ -81,14 +81,11 @@ type group[T any] struct {
 }
 
 // chosen gathers the selected items of a kind in one pass over the plan.
-func chosen[T any](w *window, all iter.Seq2[int, T], sel []plan.Ref, id func(*T) string, meta func(*T) *plan.Meta, store func(*plan.SetItems, []T)) group[T] {
-	in := make(map[string]bool, len(sel))
-	for _, r := range sel {
-		in[r.ID] = true
-	}
-	g := group[T]{w: w, store: store, meta: meta}
-	for _, x := range all {
-		if in[id(&x)] {
+func chosen[T any](w *window, all iter.Seq2[int, T], kind plan.Kind, p *plan.Plan, sel []plan.Ref, meta func(*T) *plan.Meta, store func(*plan.SetItems, []T)) group[T] {
+	in := p.SetOf(sel)
+	g := group[T]{w: w, store: store, meta: meta, items: make([]T, 0, len(sel))}
+	for i, x := range all {
+		if in.At(kind, i) {
 			g.items = append(g.items, x)
 		}
 	}
@@ -100,11 +97,11 @@ var errLocked = errors.New("they are locked")
 
 // change changes all items that are not locked, as one step.
 func (g group[T]) change(label string, change func(*T)) error {
-	var items []T
-	for _, x := range g.items {
-		if !g.meta(&x).Locked {
-			change(&x)
-			items = append(items, x)
+	items := make([]T, 0, len(g.items))
+	for i := range g.items {
+		if !g.meta(&g.items[i]).Locked {
+			items = append(items, g.items[i])
+			change(&items[len(items)-1])
 		}
 	}
 	if len(items) == 0 {
@@ -193,7 +190,7 @@ func (g group[T]) choice(label, undo string, choices []string, get func(*T) int,
 }
 
 func (w *window) manyWalls(p *plan.Plan, sel []plan.Ref) []field {
-	g := chosen(w, p.Walls(), sel, func(x *plan.Wall) string { return x.ID }, func(x *plan.Wall) *plan.Meta { return &x.Meta },
+	g := chosen(w, p.Walls(), plan.KindWall, p, sel, func(x *plan.Wall) *plan.Meta { return &x.Meta },
 		func(e *plan.SetItems, items []plan.Wall) { e.Walls = items })
 	fields := []field{
 		g.choice("Kind", "change kind of walls", wallKinds, func(x *plan.Wall) int { return int(x.Kind) },
@@ -211,7 +208,7 @@ func (w *window) manyWalls(p *plan.Plan, sel []plan.Ref) []field {
 }
 
 func (w *window) manyOpenings(p *plan.Plan, sel []plan.Ref) []field {
-	g := chosen(w, p.Openings(), sel, func(x *plan.Opening) string { return x.ID }, func(x *plan.Opening) *plan.Meta { return &x.Meta },
+	g := chosen(w, p.Openings(), plan.KindOpening, p, sel, func(x *plan.Opening) *plan.Meta { return &x.Meta },
 		func(e *plan.SetItems, items []plan.Opening) { e.Openings = items })
 	fields := []field{
 		g.length("Width", "change width", 1, func(x *plan.Opening) *int32 { return &x.Width }),
@@ -233,7 +230,7 @@ func (w *window) manyOpenings(p *plan.Plan, sel []plan.Ref) []field {
 }
 
 func (w *window) manyBlocks(p *plan.Plan, sel []plan.Ref) []field {
-	g := chosen(w, p.Blocks(), sel, func(x *plan.Block) string { return x.ID }, func(x *plan.Block) *plan.Meta { return &x.Meta },
+	g := chosen(w, p.Blocks(), plan.KindBlock, p, sel, func(x *plan.Block) *plan.Meta { return &x.Meta },
 		func(e *plan.SetItems, items []plan.Block) { e.Blocks = items })
 	var fields []field
 	if round, same := shared(g.items, func(x *plan.Block) bool { return x.Circle != nil }); same && round {
@@ -251,7 +248,7 @@ func (w *window) manyBlocks(p *plan.Plan, sel []plan.Ref) []field {
 }
 
 func (w *window) manyZones(p *plan.Plan, sel []plan.Ref) []field {
-	g := chosen(w, p.Zones(), sel, func(x *plan.Zone) string { return x.ID }, func(x *plan.Zone) *plan.Meta { return &x.Meta },
+	g := chosen(w, p.Zones(), plan.KindZone, p, sel, func(x *plan.Zone) *plan.Meta { return &x.Meta },
 		func(e *plan.SetItems, items []plan.Zone) { e.Zones = items })
 	room := func(x *plan.Zone) int {
 		if x.Room {
@@ -263,7 +260,7 @@ func (w *window) manyZones(p *plan.Plan, sel []plan.Ref) []field {
 }
 
 func (w *window) manyObservers(p *plan.Plan, sel []plan.Ref) []field {
-	g := chosen(w, p.Observers(), sel, func(x *plan.Observer) string { return x.ID }, func(x *plan.Observer) *plan.Meta { return &x.Meta },
+	g := chosen(w, p.Observers(), plan.KindObserver, p, sel, func(x *plan.Observer) *plan.Meta { return &x.Meta },
 		func(e *plan.SetItems, items []plan.Observer) { e.Observers = items })
 	return []field{
 		g.length("Eye height", "change eye height", 1, func(x *plan.Observer) *int32 { return &x.Eye }),
@@ -274,7 +271,7 @@ func (w *window) manyObservers(p *plan.Plan, sel []plan.Ref) []field {
 }
 
 func (w *window) manyTargets(p *plan.Plan, sel []plan.Ref) []field {
-	g := chosen(w, p.Targets(), sel, func(x *plan.Target) string { return x.ID }, func(x *plan.Target) *plan.Meta { return &x.Meta },
+	g := chosen(w, p.Targets(), plan.KindTarget, p, sel, func(x *plan.Target) *plan.Meta { return &x.Meta },
 		func(e *plan.SetItems, items []plan.Target) { e.Targets = items })
 	// A limit is a pointer in the plan; the form sees 0 for none, and makes new pointers, for the old ones are another plan's.
 	limit := func(label, undo string, get func(*plan.Target) **int32) field {

@@ -47,28 +47,45 @@ func (w *window) cut() {
 	}
 }
 
-// toClipboard puts items on the clipboard and reports whether there was anything to put.
+// toClipboard puts items on the clipboard, once their text is written beside the window, and reports whether there was anything to
+// put.
 func (w *window) toClipboard(refs []plan.Ref, pastes int32) bool {
 	if !slices.ContainsFunc(refs, func(r plan.Ref) bool { return r.Kind != plan.KindOpening && r.Kind != plan.KindUnderlay }) {
 		w.say("A door is copied with its wall; Ctrl+D makes another one beside it.")
 		return false
 	}
-	var b bytes.Buffer
-	if err := planfile.Write(&b, plan.Extract(w.session.Committed(), refs)); err != nil {
-		w.say(sentence(err.Error()))
-		return false
-	}
-	w.clip = clip{b.String(), pastes}
-	w.app.Clipboard().SetContent(w.clip.text)
-	w.acted()
+	p, refs := w.session.Committed(), slices.Clone(refs)
+	w.errands.run(func() func() {
+		var b bytes.Buffer
+		err := planfile.Write(&b, plan.Extract(p, refs))
+		return func() {
+			if w.closing {
+				return
+			}
+			if err != nil {
+				w.say(sentence(err.Error()))
+				return
+			}
+			w.clip = clip{b.String(), pastes}
+			w.app.Clipboard().SetContent(w.clip.text)
+			w.acted()
+		}
+	})
 	return true
 }
 
 // paste adds what is on the clipboard and selects it: beside what it was copied from, or in the middle of the picture when
-// that is out of sight.
+// that is out of sight. It waits its turn after what is being copied, and reads beside the window.
 func (w *window) paste() {
 	if f, ok := w.win.Canvas().Focused().(undoable); ok {
 		f.TypedShortcut(&fyne.ShortcutPaste{Clipboard: w.app.Clipboard()})
+		return
+	}
+	w.errands.run(func() func() { return w.pasteNow })
+}
+
+func (w *window) pasteNow() {
+	if w.closing {
 		return
 	}
 	text := w.app.Clipboard().Content()
@@ -76,11 +93,22 @@ func (w *window) paste() {
 		w.say("There is nothing of a plan on the clipboard; copy some items first.")
 		return
 	}
-	p, err := planfile.Read(strings.NewReader(text), "clipboard")
-	if err != nil {
-		w.say(sentence(err.Error()))
-		return
-	}
+	w.errands.run(func() func() {
+		p, err := planfile.Read(strings.NewReader(text), "clipboard")
+		return func() {
+			switch {
+			case w.closing:
+			case err != nil:
+				w.say(sentence(err.Error()))
+			default:
+				w.pasted(text, p)
+			}
+		}
+	})
+}
+
+// pasted adds what was read from the clipboard.
+func (w *window) pasted(text string, p *plan.Plan) {
 	if text != w.clip.text {
 		w.clip = clip{text: text}
 	}
@@ -89,14 +117,23 @@ func (w *window) paste() {
 		e.By = w.toMiddle(lo, hi)
 		w.clip.pastes = 0
 	}
-	if len(e.Added(w.session.Committed())) == 0 {
-		w.say("There is nothing on the clipboard that could be pasted here.")
-		return
-	}
-	w.choose(0)
-	if w.tryAdd(e) {
-		w.clip.pastes++
-	}
+	into := w.session.Committed()
+	w.errands.run(func() func() {
+		ready := plan.Prepare(e, into)
+		return func() {
+			if w.closing {
+				return
+			}
+			if len(ready.Added(w.session.Committed())) == 0 {
+				w.say("There is nothing on the clipboard that could be pasted here.")
+				return
+			}
+			w.choose(0)
+			if w.tryAdd(ready) {
+				w.clip.pastes++
+			}
+		}
+	})
 }
 
 // inSight reports whether the middle of a box lies in the picture.

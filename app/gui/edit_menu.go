@@ -104,10 +104,7 @@ func (w *window) try(e plan.Edit) bool {
 }
 
 // tryAdd is try for an edit that adds items, which are then selected.
-func (w *window) tryAdd(e interface {
-	plan.Edit
-	Added(p *plan.Plan) []plan.Ref
-}) bool {
+func (w *window) tryAdd(e plan.Maker) bool {
 	added := e.Added(w.session.Committed())
 	if !w.try(e) {
 		return false

@@ -15,6 +15,7 @@ import (
 	"enfilade/assets"
 	"enfilade/fileio/planfile"
 	"enfilade/fileio/store"
+	"enfilade/solver/plan"
 )
 
 // shelterFolder is where copies of unsaved work lie: beside the program's settings.
@@ -153,30 +154,42 @@ func folderWords(path string) string {
 // openLeft opens work that was left unsaved, as unsaved changes of its file. The copy is taken away when the window has made
 // one of its own.
 func (w *window) openLeft(l store.Left) {
-	data, err := l.Read()
-	if err == nil {
-		p, fault := planfile.Read(bytes.NewReader(data), leftName(l))
-		if err = fault; err == nil {
-			in := w.desk.blank(w, l.Path)
-			in.show(func() {
-				in.session.OpenUnsaved(p)
-				in.session.Saved(nil, l.Path)
-			})
-			in.print = l.Print
-			in.acted()
-			in.errands.run(func() func() {
-				w.desk.keeper.flush()
-				if err := l.Discard(); err != nil && !os.IsNotExist(err) {
-					return func() {
-						in.notice.show(sentence("the copy stays and is offered again: "+failure(err)), "Save…", func() { in.save(nil) })
-					}
-				}
-				return nil
-			})
-			return
+	w.errands.run(func() func() {
+		var p *plan.Plan
+		data, err := l.Read()
+		if err == nil {
+			p, err = planfile.Read(bytes.NewReader(data), leftName(l))
 		}
-	}
-	w.notice.show(sentence("this unsaved work cannot be read, it stays at "+l.File()+": "+failure(err)), "New plan", func() { w.unlessUnsaved(w.newPlan) })
+		return func() {
+			switch {
+			case w.closing:
+			case err != nil:
+				w.notice.show(sentence("this unsaved work cannot be read, it stays at "+l.File()+": "+failure(err)), "New plan", func() { w.unlessUnsaved(w.newPlan) })
+			default:
+				w.openedLeft(l, p)
+			}
+		}
+	})
+}
+
+// openedLeft shows work that was left unsaved.
+func (w *window) openedLeft(l store.Left, p *plan.Plan) {
+	in := w.desk.blank(w, l.Path)
+	in.show(func() {
+		in.session.OpenUnsaved(p)
+		in.session.Saved(nil, l.Path)
+	})
+	in.print = l.Print
+	in.acted()
+	in.errands.run(func() func() {
+		w.desk.keeper.flush()
+		if err := l.Discard(); err != nil && !os.IsNotExist(err) {
+			return func() {
+				in.notice.show(sentence("the copy stays and is offered again: "+failure(err)), "Save…", func() { in.save(nil) })
+			}
+		}
+		return nil
+	})
 }
 
 // ago says how long ago something was, in words.

@@ -75,6 +75,9 @@ func (p *Plan) SetOf(items []Ref) Set { return Set{p.pick(items)} }
 // Has reports whether an item is in the set.
 func (s *Set) Has(r Ref) bool { return s.has(r.Kind, r.ID) }
 
+// At reports whether the item of a kind at a place of the plan's list is in the set.
+func (s *Set) At(kind Kind, i int) bool { return s.at(kind, i) }
+
 // some reports whether any item of a kind is picked.
 func (s *picked) some(kind Kind) bool { return s.sets[kind] != nil }
 
