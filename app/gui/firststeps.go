@@ -123,6 +123,9 @@ func (r *stepsRenderer) MinSize() fyne.Size { return fyne.NewSize(stepsWidth, st
 func (r *stepsRenderer) Refresh() {
 	p := themed()
 	f := r.f
+	if f.box != nil && f.box.Hidden { // drawn when it is shown
+		return
+	}
 	f.ground.FillColor = faded(p.Ground, 92)
 	f.ground.Shadow = canvas.Shadow{Color: faded(p.Ground, 92), BlurRadius: 26, Spread: 4, Variant: canvas.DropShadow}
 	f.art.Resource = fyne.NewStaticResource("steps"+p.Name+".svg", []byte(stepsArt(p.Poche, p.Red, p.Ink2, p.Floor, p.FirstWash, p.Observers[0])))

@@ -2,6 +2,7 @@ package gui
 
 import (
 	"math"
+	"sort"
 
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
@@ -58,12 +59,12 @@ func fitted(text string, w assets.Weight, size, width float32) string {
 		return text
 	}
 	r := []rune(text)
-	for n := len(r) - 1; n > 0; n-- {
-		if s := string(r[:n]) + "…"; textSize(s, w, size).Width <= width {
-			return s
-		}
+	cut := func(n int) string { return string(r[:n]) + "…" }
+	n := sort.Search(len(r)-1, func(n int) bool { return textSize(cut(n+1), w, size).Width > width }) // more letters are wider
+	if n == 0 {
+		return ""
 	}
-	return ""
+	return cut(n)
 }
 
 // CreateRenderer is for the toolkit.

@@ -149,12 +149,12 @@ func keyOf(s *paint.Scene) baseKey {
 	return k
 }
 
-// fewItems is how many walls and blocks a base takes that may be made in the middle of a frame when nothing can stand in for it.
+// fewItems is how many walls and blocks a base takes that may be made in the middle of a frame.
 const fewItems = 1000
 
-// baseFor returns the base for a scene: the one at hand when it fits, a new one at once when that is quick, else the one at hand,
-// as the camera sees it, while the worker makes the new one. It is nil while nothing can be shown yet: the plan is a large one
-// that has just been opened, or the theme has changed.
+// baseFor returns the base for a scene: the one at hand when it fits, a new one at once when the last one was quick, else the one
+// at hand, as the camera sees it, while the worker makes the new one. It is nil while nothing can be shown yet: the plan has just
+// been opened, or the theme has changed.
 func (p *picture) baseFor(s *paint.Scene) *raster.Base {
 	opened := p.w.results.opened
 	if b := p.worker.take(); b != nil && b.opened == opened {
@@ -166,7 +166,7 @@ func (p *picture) baseFor(s *paint.Scene) *raster.Base {
 	}
 	few := s.Plan.NumWalls()+s.Plan.NumBlocks() <= fewItems
 	likes := p.base != nil && p.base.opened == opened && p.base.key.dark == k.dark
-	if few && (!likes || p.base.took < soon) {
+	if few && likes && p.base.took < soon {
 		p.base = makeBase(s, k, opened)
 		return p.base.base
 	}

@@ -71,11 +71,16 @@ func TestSlowBaseIsShownShifted(t *testing.T) {
 	if r.picture.base.key.camera != r.view.cam {
 		t.Error("the worker's base was not taken")
 	}
-	r.picture.base.took = time.Hour
 	r.openSample("training")
-	r.frame()
+	img = r.picture.draw(r.view.cam.W, r.view.cam.H).(*image.RGBA)
+	for _, at := range []image.Point{{r.view.cam.W / 2, r.view.cam.H / 2}, {r.view.cam.W / 3, r.view.cam.H / 3}} {
+		if got := img.RGBAAt(at.X, at.Y); colour(got) != paint.Light().Ground {
+			t.Errorf("until the first base of another plan is made, %v is shown at %v instead of paper", got, at)
+		}
+	}
+	r.settle()
 	if r.picture.base.key != keyOf(r.picture.scene()) {
-		t.Error("another plan is shown over the base of the one before")
+		t.Error("the first base of another plan was not taken")
 	}
 }
 
@@ -88,7 +93,7 @@ func TestLargePlanIsDrawnBeside(t *testing.T) {
 	r.frame()
 	v := r.view
 	img := r.picture.draw(v.cam.W, v.cam.H).(*image.RGBA)
-	if r.picture.base.key.obstacles == large.Obstacles() || colour(img.RGBAAt(v.cam.W/2, v.cam.H/2)) != paint.Light().Ground {
+	if b := r.picture.base; b != nil && b.key.obstacles == large.Obstacles() || colour(img.RGBAAt(v.cam.W/2, v.cam.H/2)) != paint.Light().Ground {
 		t.Error("a large plan that was opened was drawn in the middle of a frame")
 	}
 	r.settle()

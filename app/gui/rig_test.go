@@ -61,7 +61,7 @@ func (r *rig) settle() {
 	r.until("the study is done", func() bool { return r.results.done() })
 	r.until("the base is made", func() bool {
 		r.frame()
-		return r.picture.base.key == keyOf(r.picture.scene())
+		return r.picture.base != nil && r.picture.base.key == keyOf(r.picture.scene())
 	})
 }
 
