@@ -73,14 +73,14 @@ func headed(group string, f field) field {
 var errPositive = errors.New("more than 0, please")
 
 // within takes v over when it lies between lo and hi.
-func within(v, lo, hi int32, take func() error) error {
+func (w *window) within(v, lo, hi int32, take func() error) error {
 	switch {
 	case v < lo && lo > 0:
 		return errPositive
 	case v < lo:
-		return errors.New("not below 0, please")
+		return errors.New("0 or more, please")
 	case v > hi:
-		return errors.New("that is too much for a plan")
+		return fmt.Errorf("%s at most, please", w.host.FormatLength(float64(hi)))
 	}
 	return take()
 }

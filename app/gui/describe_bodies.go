@@ -24,7 +24,7 @@ func (w *window) describeWall(c *card, x plan.Wall) {
 	}}}
 	if x.Kind == plan.Solid || x.Kind == plan.Low {
 		c.fields = append(c.fields, w.lengthField("Thickness", x.Thickness, func(v int32) error {
-			return within(v, 0, plan.MaxThickness, func() error { return put("change thickness", func(x *plan.Wall) { x.Thickness = v }) })
+			return w.within(v, 0, plan.MaxThickness, func() error { return put("change thickness", func(x *plan.Wall) { x.Thickness = v }) })
 		}))
 	}
 	switch x.Kind {
@@ -34,7 +34,7 @@ func (w *window) describeWall(c *card, x plan.Wall) {
 		}))
 	case plan.Low:
 		c.fields = append(c.fields, w.lengthField("Height", x.Height, func(v int32) error {
-			return within(v, 1, plan.Ceiling-1, func() error { return put("change height", func(x *plan.Wall) { x.Height = v }) })
+			return w.within(v, 1, plan.Ceiling-1, func() error { return put("change height", func(x *plan.Wall) { x.Height = v }) })
 		}))
 	}
 	c.fields = append(c.fields, field{label: "Body", choices: []string{"centred on its line", "left of its line", "right of its line"},
@@ -110,7 +110,7 @@ func (w *window) describeBlock(c *card, x plan.Block) {
 	if x.Circle != nil {
 		c.title, c.icon = "Column", "block"
 		c.fields = append(c.fields, w.lengthField("Radius", x.Circle.Radius, func(v int32) error {
-			return within(v, 1, plan.MaxRound, func() error {
+			return w.within(v, 1, plan.MaxRound, func() error {
 				x.Circle = &plan.Circle{At: x.Circle.At, Radius: v}
 				x.Ring = plan.RoundRing(x.Circle.At, v)
 				return w.doEdit(tool.Named("change radius", set(x)))

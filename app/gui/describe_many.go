@@ -141,7 +141,7 @@ func (g group[T]) length(label, undo string, lo int32, get func(*T) *int32) fiel
 		hi = plan.MaxThickness
 	}
 	return blank(g.w.lengthField(label, v, func(v int32) error {
-		return within(v, lo, hi, func() error { return g.change(undo, func(x *T) { *get(x) = v }) })
+		return g.w.within(v, lo, hi, func() error { return g.change(undo, func(x *T) { *get(x) = v }) })
 	}), same)
 }
 
@@ -236,7 +236,7 @@ func (w *window) manyBlocks(p *plan.Plan, sel []plan.Ref) []field {
 	if round, same := shared(g.items, func(x *plan.Block) bool { return x.Circle != nil }); same && round {
 		v, alike := shared(g.items, func(x *plan.Block) int32 { return x.Circle.Radius })
 		fields = append(fields, blank(w.lengthField("Radius", v, func(v int32) error {
-			return within(v, 1, plan.MaxRound, func() error {
+			return w.within(v, 1, plan.MaxRound, func() error {
 				return g.change("change radius", func(x *plan.Block) {
 					x.Circle = &plan.Circle{At: x.Circle.At, Radius: v, Extra: x.Circle.Extra}
 					x.Ring = plan.CircleRing(x.Circle.At, v, max(x.Ring.Len()/4*4, 4))

@@ -40,7 +40,7 @@ func (w *window) describeNew() []field {
 	}
 	return []field{
 		headed("New walls", w.lengthField("Thickness", d.Thickness, func(v int32) error {
-			return within(v, 0, plan.MaxThickness, func() error { d.Thickness = v; return nil })
+			return w.within(v, 0, plan.MaxThickness, func() error { d.Thickness = v; return nil })
 		})),
 		{label: "Height", unit: unitMark(w.unit()), text: height, empty: "ceiling", set: func(text string) error {
 			v, err := w.height(text)
@@ -51,10 +51,10 @@ func (w *window) describeNew() []field {
 		}},
 		w.newBody(),
 		w.lengthField("Low walls", d.LowHeight, func(v int32) error {
-			return within(v, 1, plan.Ceiling-1, func() error { d.LowHeight = v; return nil })
+			return w.within(v, 1, plan.Ceiling-1, func() error { d.LowHeight = v; return nil })
 		}),
 		w.lengthField("Door width", d.DoorWidth, func(v int32) error {
-			return within(v, 1, plan.MaxThickness, func() error { d.DoorWidth = v; return nil })
+			return w.within(v, 1, plan.MaxThickness, func() error { d.DoorWidth = v; return nil })
 		}),
 	}
 }

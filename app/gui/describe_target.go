@@ -107,7 +107,7 @@ func (w *window) describeFace(t plan.Target, put func(string, func(*plan.Target)
 		return fields
 	}
 	width := w.lengthField("Width", int32(math.Round(exact.Dist(t.Face[0], t.Face[1]))), func(v int32) error {
-		return within(v, 1, plan.MaxThickness, func() error {
+		return w.within(v, 1, plan.MaxThickness, func() error {
 			return put("change width of target", func(t *plan.Target) { t.Face = faceAcross(t.At, heading, float64(v)) })
 		})
 	})

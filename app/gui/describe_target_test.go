@@ -48,7 +48,7 @@ func TestWhatCountsAsSeen(t *testing.T) {
 		t.Errorf("any part after %v mm, half after %v, all after %v; want them to rise", some, half, all)
 	}
 	for _, bad := range []string{"0", "101", "much"} {
-		if x := r.enter("Share", bad); x.note.text == "" || r.session.Plan().Walker().Share != 0.5 {
+		if x := r.enter("Share", bad); x.wrong.text == "" || r.session.Plan().Walker().Share != 0.5 {
 			t.Errorf("a share of %q was taken", bad)
 		}
 	}
@@ -81,7 +81,7 @@ func TestTargetForm(t *testing.T) {
 		t.Errorf("limits %v %v %v, %q m² see it, before %q", x.MaxAngle, x.Far, x.Near, r.form.facts[0].value.text, free)
 	}
 	for label, text := range map[string]string{"At most": "91", "Not farther": "0.5", "Not nearer": "4"} {
-		if x := r.enter(label, text); x.note.text == "" {
+		if x := r.enter(label, text); x.wrong.text == "" {
 			t.Errorf("%s %q was taken", label, text)
 		}
 		r.line(label).entry.TypedKey(&fyne.KeyEvent{Name: fyne.KeyEscape})

@@ -51,7 +51,7 @@ func (w *window) underlayWidth(u plan.Underlay, put func(string, func(*plan.Unde
 		return nil
 	}
 	f := w.lengthField("Width", int32(width+0.5), func(v int32) error {
-		return within(v, 1, exact.Limit-1, func() error {
+		return w.within(v, 1, exact.Limit-1, func() error {
 			return put("set underlay's scale", func(u *plan.Underlay) { u.MMPerPixel = float64(v) / exact.PerMM / float64(px) })
 		})
 	})

@@ -20,13 +20,9 @@ func (w *window) describeWalker(p *plan.Plan) []field {
 		return w.doEdit(tool.Named(label, plan.SetWalker{Walker: walker}))
 	}
 	radius := w.lengthField("Radius", walker.Radius, func(v int32) error {
-		switch {
-		case v < 0:
-			return errors.New("not below 0, please")
-		case v > plan.MaxBodyRadius:
-			return errors.New("2 m at most, please")
-		}
-		return put("change walker's radius", func(k *plan.Walker) { k.Radius = v })
+		return w.within(v, 0, plan.MaxBodyRadius, func() error {
+			return put("change walker's radius", func(k *plan.Walker) { k.Radius = v })
+		})
 	})
 	radius.under = radiusWords(walker.Radius, arrange.Sides(p))
 	return append([]field{

@@ -3,6 +3,7 @@ package gui
 import (
 	"slices"
 	"strconv"
+	"strings"
 
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/container"
@@ -40,6 +41,7 @@ type formRow struct {
 	dots  *swatches
 	note  *inkText
 	under *inkText // nil where the field has none
+	wrong *inkText // why what was typed was not taken; not there while all is well
 }
 
 // factText is one figure under the form.
@@ -104,7 +106,7 @@ func (f *form) build(c card) {
 	}
 	for i, h := range c.hint {
 		line := caption(h)
-		if i == 0 {
+		if i == 0 || strings.HasSuffix(c.hint[i-1], ",") { // a list that goes on
 			line = body(h)
 		}
 		f.page.Add(line)
@@ -194,20 +196,24 @@ func (f *form) row(d field) fyne.CanvasObject {
 		}
 	}
 	unit := newText(d.unit, assets.Regular, 12.5, roleInk2)
-	return container.New(fieldLayout{width}, body(d.label), value, unit, r.note)
+	r.wrong = newText("", assets.Regular, 11.5, roleRed).shrinking()
+	r.wrong.Hide()
+	return pile(container.New(fieldLayout{width}, body(d.label), value, unit, r.note), container.New(wrongLayout{}, r.wrong))
 }
 
-// tell shows why a field's text was not taken, in its note.
+// tell shows why a field's text was not taken, below it.
 func (f *form) tell(r *formRow, err error) {
-	if err == nil {
-		r.note.role = roleInk3
-		r.note.set(r.field.note)
-		r.note.Refresh()
+	text := ""
+	if err != nil {
+		text = err.Error()
+	}
+	if r.wrong.text == text {
 		return
 	}
-	r.note.role = roleRed
-	r.note.set(err.Error())
-	r.note.Refresh()
+	r.wrong.set(text)
+	r.wrong.Hidden = text == ""
+	f.page.Refresh()
+	f.scroll.Refresh()
 }
 
 // figures are the facts in a row of up to three, set large.
@@ -287,6 +293,26 @@ func (l fieldLayout) Layout(o []fyne.CanvasObject, s fyne.Size) {
 	}
 	note.Move(fyne.NewPos(x, 3))
 	note.Resize(fyne.NewSize(max(0, s.Width-x), 27))
+}
+
+// wrongLayout sets what is wrong with a field below it, from where the field begins if there is room for it.
+type wrongLayout struct{}
+
+// MinSize is for the toolkit.
+func (wrongLayout) MinSize(o []fyne.CanvasObject) fyne.Size {
+	if !o[0].Visible() {
+		return fyne.Size{}
+	}
+	return o[0].MinSize().AddWidthHeight(0, 5)
+}
+
+// Layout is for the toolkit.
+func (wrongLayout) Layout(o []fyne.CanvasObject, s fyne.Size) {
+	t := o[0].(*inkText)
+	width := textSize(t.text, t.weight, t.size).Width + 1
+	x := max(0, min(labelWidth, s.Width-width))
+	t.Move(fyne.NewPos(x, 0))
+	t.Resize(fyne.NewSize(s.Width-x, t.MinSize().Height))
 }
 
 // number writes a count or a figure for a fact.

@@ -71,12 +71,12 @@ func TestFormRefusesInPlace(t *testing.T) {
 	rev := r.session.Rev()
 	for label, text := range map[string]string{"Eye height": "tall", "View angle": "400", "Range": "-3", "Heading": "north"} {
 		x := r.enter(label, text)
-		if x.note.text == "" || x.entry.Text != text {
-			t.Errorf("%s %q: note %q, text %q: want the reason beside what was typed", label, text, x.note.text, x.entry.Text)
+		if x.wrong.text == "" || x.entry.Text != text {
+			t.Errorf("%s %q: note %q, text %q: want the reason beside what was typed", label, text, x.wrong.text, x.entry.Text)
 		}
 		x.entry.TypedKey(&fyne.KeyEvent{Name: fyne.KeyEscape})
-		if x.note.text != "" || x.entry.Text == text {
-			t.Errorf("%s: after Escape note %q, text %q", label, x.note.text, x.entry.Text)
+		if x.wrong.text != "" || x.entry.Text == text {
+			t.Errorf("%s: after Escape note %q, text %q", label, x.wrong.text, x.entry.Text)
 		}
 	}
 	if r.session.Rev() != rev {
@@ -157,7 +157,7 @@ func TestDoorAndMarkForms(t *testing.T) {
 	if o.Width != 12000 || !o.Shut {
 		t.Errorf("door %+v", o)
 	}
-	if x := r.enter("Width", "9"); x.note.text == "" {
+	if x := r.enter("Width", "9"); x.wrong.text == "" {
 		t.Error("a door wider than its wall was taken")
 	}
 	r.runes("b")
@@ -224,7 +224,7 @@ func TestPlanForm(t *testing.T) {
 	if p := r.session.Plan(); p.Sheet().Title != "Lower gallery" || p.Walker().Pace != 0.8 {
 		t.Errorf("title %q, pace %g", p.Sheet().Title, p.Walker().Pace)
 	}
-	if x := r.enter("Pace", "0"); x.note.text == "" {
+	if x := r.enter("Pace", "0"); x.wrong.text == "" {
 		t.Error("a pace of nothing was taken")
 	}
 	if err := r.line("Unit").field.pick(3); err != nil {

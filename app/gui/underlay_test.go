@@ -248,7 +248,7 @@ func TestUnderlayIsPickedByAClick(t *testing.T) {
 	r.click(x+3, y)
 	r.keys(fyne.KeyReturn, fyne.KeyEscape)
 	r.click(x+2, y)
-	if r.form.title.text != "Wall" {
+	if r.form.title.text != "Wall W1" {
 		t.Errorf("a click on the wall over it shows the form of %q", r.form.title.text)
 	}
 }

@@ -16,7 +16,7 @@ func TestWalkerRadius(t *testing.T) {
 	if x := r.line("Radius"); x.entry.Text != "0.00" || x.under == nil || !strings.Contains(x.under.text, "a point") {
 		t.Errorf("no radius is shown as %q, %+v", x.entry.Text, x.under)
 	}
-	if x := r.enter("Radius", "2.01"); x.note.text == "" || r.session.Plan().Walker().Radius != 0 {
+	if x := r.enter("Radius", "2.01"); x.wrong.text == "" || r.session.Plan().Walker().Radius != 0 {
 		t.Error("a radius of more than 2 m was taken")
 	}
 	r.enter("Radius", "0.3")

@@ -111,7 +111,7 @@ func (w *window) stepText(step float64) string {
 // stepField is the form's field for how far lines are apart.
 func (w *window) stepField() field {
 	f := w.lengthField("A line every", int32(w.walkingStep()*exact.PerMM+0.5), func(v int32) error {
-		return within(v, leastStep, plan.MaxCoord, func() error {
+		return w.within(v, leastStep, plan.MaxCoord, func() error {
 			w.setWalkingStep(float64(v) / exact.PerMM)
 			return nil
 		})

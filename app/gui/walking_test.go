@@ -51,7 +51,7 @@ func TestWalkingDistance(t *testing.T) {
 	if d := r.distances(); d == nil || d.Step != 1500 {
 		t.Errorf("lines every 1.5 m: %+v", d)
 	}
-	if x := r.enter("A line every", "1 cm"); x.note.text == "" || r.walkingStep() != 1500 {
+	if x := r.enter("A line every", "1 cm"); x.wrong.text == "" || r.walkingStep() != 1500 {
 		t.Error("lines every centimetre were taken")
 	}
 	r.toggleWalking()
