@@ -136,15 +136,15 @@ func unkey(k uint64) exact.Pt {
 // crossing returns the centre of the pixel in which the interiors of s and t cross at one point. Ends that lie on another
 // segment need none: their pixels are hot already.
 func crossing(s, t *Segment) (exact.Pt, bool) {
-	if min(s.A.X, s.B.X) > max(t.A.X, t.B.X) || min(t.A.X, t.B.X) > max(s.A.X, s.B.X) ||
-		min(s.A.Y, s.B.Y) > max(t.A.Y, t.B.Y) || min(t.A.Y, t.B.Y) > max(s.A.Y, s.B.Y) {
+	// How far each box reaches beyond the other's far side, on all four sides: one negative number parts them. Numbers are put
+	// together before they are asked, as each answer by itself is as often yes as no.
+	if (max(t.A.X, t.B.X)-min(s.A.X, s.B.X))|(max(s.A.X, s.B.X)-min(t.A.X, t.B.X))|
+		(max(t.A.Y, t.B.Y)-min(s.A.Y, s.B.Y))|(max(s.A.Y, s.B.Y)-min(t.A.Y, t.B.Y)) < 0 {
 		return exact.Pt{}, false
 	}
 	a, b := exact.Area2(t.A, t.B, s.A), exact.Area2(t.A, t.B, s.B)
-	if exact.Sign(a)*exact.Sign(b) >= 0 {
-		return exact.Pt{}, false
-	}
-	if exact.Orient(s.A, s.B, t.A)*exact.Orient(s.A, s.B, t.B) >= 0 {
+	c, e := exact.Area2(s.A, s.B, t.A), exact.Area2(s.A, s.B, t.B)
+	if a^b >= 0 || c^e >= 0 || a == 0 || b == 0 || c == 0 || e == 0 {
 		return exact.Pt{}, false
 	}
 	// The crossing is s.A + n/d (s.B - s.A), and floor(x + 1/2) = s.A.X + floor((2 n dx + d) / 2d).
@@ -161,8 +161,8 @@ func crossing(s, t *Segment) (exact.Pt, bool) {
 
 // passes reports whether segment ab passes the half-open pixel around c.
 func passes(a, b, c exact.Pt) bool {
-	if !exact.InBox(a, b, c) {
-		return false // ends are whole, pixel borders are halves: reaching the pixel in x or y means reaching its centre's row or column
+	if (c.X-min(a.X, b.X))|(max(a.X, b.X)-c.X)|(c.Y-min(a.Y, b.Y))|(max(a.Y, b.Y)-c.Y) < 0 {
+		return false // outside the box; ends are whole, pixel borders are halves: reaching the pixel in x or y means reaching its centre's row or column
 	}
 	d := b.Sub(a)
 	// In units of halves, the corners of the pixel lie at 2·Area2 ± d.X ± d.Y from the line.
@@ -278,7 +278,9 @@ func (g *Graph) merge(ctx context.Context, segs []Segment, passes []pass) error 
 			return err
 		}
 		list := links[start[a]:start[a+1]]
-		slices.SortStableFunc(list, func(l, m link) int { return cmp.Compare(l.b, m.b) })
+		if len(list) > 1 {
+			slices.SortStableFunc(list, func(l, m link) int { return cmp.Compare(l.b, m.b) })
+		}
 		for i := 0; i < len(list); {
 			j := i + 1
 			for j < len(list) && list[j].b == list[i].b {
@@ -324,8 +326,10 @@ func (g *Graph) mergeLinks(a int32, segs []Segment, links []link) {
 			g.addWind(int(e.Wind0), Wind{s.Body, delta})
 		}
 	}
-	kept := slices.DeleteFunc(g.Winds[e.Wind0:], func(w Wind) bool { return w.Delta == 0 })
-	g.Winds = g.Winds[:int(e.Wind0)+len(kept)]
+	if len(links) > 1 {
+		kept := slices.DeleteFunc(g.Winds[e.Wind0:], func(w Wind) bool { return w.Delta == 0 })
+		g.Winds = g.Winds[:int(e.Wind0)+len(kept)]
+	}
 	e.Wind1 = int32(len(g.Winds))
 	if line || e.Walk || e.Top > 0 || e.Wind0 < e.Wind1 { // else the outline of a body runs there and back
 		g.Edges = append(g.Edges, e)

@@ -123,6 +123,12 @@ func (tr *Triangulation) constrain(a, b, k int32) error {
 	if crossed && tr.tris[e.Tri()].v[e.Prev().Corner()] == b {
 		a, b = b, a // the way leads from the other end
 	}
+	if crossed && tr.apexBehind(e) == b && tr.tris[e.Tri()].c[e.Corner()] < 0 {
+		// One edge is crossed. The four around it remain in the triangulation, as a new edge only takes sight away.
+		t, _ := tr.flipTracked(e)
+		tr.mark(EdgeOf(t, 2), k)
+		return nil
+	}
 	if crossed {
 		if err := tr.flipThrough(a, b, e); err != nil {
 			return err
@@ -137,6 +143,12 @@ func (tr *Triangulation) constrain(a, b, k int32) error {
 		tr.restore()
 	}
 	return nil
+}
+
+// apexBehind returns the corner that lies opposite e in the triangle on the other side of it.
+func (tr *Triangulation) apexBehind(e Edge) int32 {
+	f := tr.tris[e.Tri()].n[e.Corner()]
+	return tr.tris[f.Tri()].v[f.Prev().Corner()]
 }
 
 // mark writes constraint k, -1 for none, on both sides of e.
