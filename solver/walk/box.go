@@ -1,8 +1,6 @@
 package walk
 
 import (
-	"math"
-
 	"enfilade/solver/exact"
 	"enfilade/solver/mesh"
 )
@@ -29,32 +27,20 @@ func (b box) meets(o box) bool {
 	return b.lo.X < o.hi.X && o.lo.X < b.hi.X && b.lo.Y < o.hi.Y && o.lo.Y < b.hi.Y && !b.empty() && !o.empty()
 }
 
-// gap2 returns the squared distance of two boxes; it only measures.
-func (b box) gap2(o box) float64 {
-	dx := float64(max(b.lo.X-o.hi.X, o.lo.X-b.hi.X, 0))
-	dy := float64(max(b.lo.Y-o.hi.Y, o.lo.Y-b.hi.Y, 0))
+// gap2 returns the squared distance of two boxes, below 2^61.
+func (b *box) gap2(o *box) int64 {
+	dx := int64(max(b.lo.X-o.hi.X, o.lo.X-b.hi.X, 0))
+	dy := int64(max(b.lo.Y-o.hi.Y, o.lo.Y-b.hi.Y, 0))
 	return dx*dx + dy*dy
 }
 
-// size2 returns the square of the longer side; it only measures.
-func (b box) size2() float64 {
-	long := float64(max(int64(b.hi.X)-int64(b.lo.X), int64(b.hi.Y)-int64(b.lo.Y)))
+// size2 returns the square of the longer side.
+func (b *box) size2() int64 {
+	long := max(int64(b.hi.X)-int64(b.lo.X), int64(b.hi.Y)-int64(b.lo.Y))
 	return long * long
 }
 
 // boxAt returns the box of two points.
 func boxAt(a, b exact.Pt) box {
 	return box{exact.Pt{X: min(a.X, b.X), Y: min(a.Y, b.Y)}, exact.Pt{X: max(a.X, b.X), Y: max(a.Y, b.Y)}}
-}
-
-// gap returns how far b is from the nearest of boxes, 0 when there is none; it only measures.
-func (b box) gap(boxes []box) float64 {
-	if len(boxes) == 0 {
-		return 0
-	}
-	least := math.Inf(1)
-	for i := range boxes {
-		least = min(least, b.gap2(boxes[i]))
-	}
-	return math.Sqrt(least)
 }

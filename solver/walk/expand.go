@@ -55,23 +55,19 @@ func (f *Finder) leave(n int32, e mesh.Edge, r, l exact.Vec, key float64) {
 	if t.StopsWalk(e.Corner()) {
 		return
 	}
-	switch c := (cone{key, n, t.N[e.Corner()], r, l}); {
-	case !f.enters(c.in.Tri()):
-	case f.passes(e.Tri(), c.in.Tri()):
+	c := cone{key, n, mesh.None, r, l}
+	if next := t.N[e.Corner()]; f.enters(next.Tri()) && f.goesOn(e.Tri(), e.Corner(), &c) {
 		f.expand(c)
-	default:
-		f.send(&c)
 	}
 }
 
-// expand lets cone c enter its triangle, and those beyond for as long as one cone alone goes on, over a neck, and holds no part
-// of a goal: that has nothing to wait for.
+// expand lets cone c enter its triangle, and those beyond for as long as it comes before all others.
 func (f *Finder) expand(c cone) {
 	for f.step(&c) {
 	}
 }
 
-// step lets cone c enter its triangle. It reports true when c, as it goes on, may be followed at once.
+// step lets cone c enter its triangle. It reports true when c, or the part of it that c then is, is to be followed at once.
 func (f *Finder) step(c *cone) bool {
 	f.Expanded++
 	now := c.in.Tri()
@@ -93,48 +89,68 @@ func (f *Finder) step(c *cone) bool {
 	goesLeft := onLeft > 0 && !t.StopsWalk(apex) && f.enters(t.N[apex].Tri())
 	switch {
 	case goesRight && goesLeft:
-		f.send(&cone{c.key, c.node, t.N[right], c.r, v})
-		f.send(&cone{c.key, c.node, t.N[apex], v, c.l})
-		return false
+		return f.split(c, t, right, apex, v)
 	case goesRight:
-		c.in = t.N[right]
 		if onLeft > 0 {
 			c.l = v
 		}
+		return f.goesOn(now, right, c)
 	case goesLeft:
-		c.in = t.N[apex]
 		if onRight > 0 {
 			c.r = v
 		}
-	default:
-		return false
+		return f.goesOn(now, apex, c)
 	}
-	if f.passes(now, c.in.Tri()) {
-		return true
-	}
-	f.send(c)
 	return false
 }
 
-// passes reports whether a neck leads from one triangle to the next, which holds no part of a goal.
-func (f *Finder) passes(from, to int32) bool {
-	return f.narrowed && f.necks.part[from] != f.necks.part[to] && f.heads[to] < 0
+// split lets both parts of cone c leave triangle t: that on the right of direction v through one edge, that on the left through
+// another. The one that comes first is c then.
+func (f *Finder) split(c *cone, t *mesh.Tri, right, left int, v exact.Vec) bool {
+	other := cone{c.key, c.node, t.N[left], v, c.l}
+	c.in, c.l = t.N[right], v
+	one, two := f.send(t, right, c), f.send(t, left, &other)
+	if two && (!one || other.key < c.key) {
+		*c, other = other, *c
+		one, two = two, one
+	}
+	if two {
+		f.queue.push(other)
+	}
+	return one && f.first(c)
 }
 
-// send queues cone c, which is about to enter a triangle and has the key of the one before it, unless corners already reached
-// lead to all of the edge at least as shortly.
-func (f *Finder) send(c *cone) {
-	t := &f.m.Tris[c.in.Tri()]
-	i := c.in.Corner()
+// goesOn lets cone c leave triangle t through edge i, and reports whether it is to be followed at once: when no other comes
+// before it, or when it goes over a neck and holds no part of a goal. Walks that are told apart at all are so before a neck.
+func (f *Finder) goesOn(t int32, i int, c *cone) bool {
+	tri := &f.m.Tris[t]
+	c.in = tri.N[i]
+	if next := c.in.Tri(); f.narrowed && f.necks.part[t] != f.necks.part[next] && f.heads[next] < 0 {
+		return true
+	}
+	return f.send(tri, i, c) && f.first(c)
+}
+
+// first reports whether cone c comes before all others; if not, it is queued.
+func (f *Finder) first(c *cone) bool {
+	if f.queue.empty() || c.key <= f.queue.heap[0].key {
+		return true
+	}
+	f.queue.push(*c)
+	return false
+}
+
+// send makes cone c ready to leave triangle t through edge i: it sets its key. It reports false when the cone ends there: when
+// corners already reached lead to all of the edge at least as shortly, or no goal can be reached in time.
+func (f *Finder) send(t *mesh.Tri, i int, c *cone) bool {
 	root := &f.nodes[c.node]
-	b, a := t.P[i], t.P[inc[i]] // left and right end of the edge as seen from the root
-	s := crossing(root.at, a, b, c.r, c.l)
-	if s.dominated(root.g, f.reach[t.V[inc[i]]], f.reach[t.V[i]]) {
-		return
+	k := inc[i]
+	s := crossing(root.at, t.P[i], t.P[k], c.r, c.l)
+	if s.dominated(root.g, f.reach[t.V[i]], f.reach[t.V[k]]) {
+		return false
 	}
-	if key := max(c.key, root.g+s.least()+f.left(a, b)); key <= f.limit {
-		f.queue.push(cone{key, c.node, c.in, c.r, c.l})
-	}
+	c.key = max(c.key, root.g+s.least()+f.left(t.P[i], t.P[k]))
+	return c.key <= f.limit
 }
 
 // span is where a cone crosses an edge, measured along that from its right end.
@@ -188,11 +204,16 @@ func (f *Finder) arrive(n int32, e mesh.Edge, v exact.Vec) {
 	}
 	t := &f.m.Tris[e.Tri()]
 	i := e.Corner()
-	if id := t.V[i]; f.m.OnePlace(id) && g < f.reach[id] {
-		if math.IsInf(f.reach[id], 1) {
-			f.wiped = append(f.wiped, id)
+	if id := t.V[i]; f.m.OnePlace(id) {
+		if g*tieSlack > f.reach[id] { // no shortest walk comes here by this way
+			return
 		}
-		f.reach[id] = g
+		if g < f.reach[id] {
+			if math.IsInf(f.reach[id], 1) {
+				f.wiped = append(f.wiped, id)
+			}
+			f.reach[id] = g
+		}
 	}
 	s := f.m.SectorAt(e)
 	if s < 0 {

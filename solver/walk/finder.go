@@ -41,7 +41,6 @@ type Finder struct {
 	reach []float64 // for each point of the mesh that is one place for walkers, an upper bound of its distance
 	wiped []int32   // points whose reach must be reset
 
-	start   exact.Pt
 	goals   []goal
 	ends    []ending
 	tied    []int32 // nodes to which there are equally long walks over other corners
@@ -51,8 +50,9 @@ type Finder struct {
 	marked  []int32 // triangles whose head must be reset
 	limit   float64 // no cone beyond this distance can help any goal
 	settled float64 // a cone beyond this distance tells that some goal's walk is found
-	ahead   []box   // that hold the goals still open
-	field   *Field  // which keeps the cones of the flood; nil when nobody asked
+	ahead   []ahead // the goals still open
+	boxes   []box
+	field   *Field // which keeps the cones of the flood; nil when nobody asked
 
 	necks    *necks   // nil until it pays to know them
 	spent    int      // triangles entered by the floods before
@@ -147,7 +147,6 @@ func (f *Finder) Flood(ctx context.Context, start exact.Pt, goals []Goal) ([]Pat
 
 // run sends cones from start until none can help any goal.
 func (f *Finder) run(ctx context.Context, start exact.Pt) error {
-	f.start = start
 	far := f.learn(start)
 	f.aim()
 	if err := f.begin(start); err != nil {
