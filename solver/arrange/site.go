@@ -96,6 +96,8 @@ func NewSite(ctx context.Context, o *Outline) (*Site, error) {
 	}
 	s := &Site{Outline: o, Graph: r.graph, segs: o.Segments, rounding: r}
 	var loose *mesh.Loose
+	var ends [][2]int32
+	var tags []mesh.Tag
 	err = pulse.Each(pulse.Part(ctx, 0.1, 0.5), 2, func(ctx context.Context, i int) (err error) {
 		if i == 0 {
 			loose, err = mesh.TriangulatePoints(ctx, r.graph.Pts)
@@ -104,6 +106,7 @@ func NewSite(ctx context.Context, o *Outline) (*Site, error) {
 		if err := r.draw(ctx, o); err != nil {
 			return err
 		}
+		ends, tags = r.graph.split()
 		return o.tooLarge(len(r.graph.Edges))
 	})
 	if err != nil {
@@ -114,8 +117,8 @@ func NewSite(ctx context.Context, o *Outline) (*Site, error) {
 		if loose, err = mesh.TriangulatePoints(ctx, r.graph.Pts); err != nil {
 			return nil, err
 		}
+		ends, tags = r.graph.split()
 	}
-	ends, tags := r.graph.split()
 	s.Mesh, err = r.graph.finish(pulse.Part(ctx, 0.5, 1), loose, ends, tags)
 	return s, err
 }

@@ -16,24 +16,25 @@ import (
 //   - Cost: O(n) for n triangles; cross is called less than twice for each face.
 func (tr *Triangulation) Faces(ctx context.Context, cross func(constraint, from int32), stops func() Tag) ([]Tag, error) {
 	n := len(tr.tris)
-	f := faces{tr: tr, solid: make([]Tag, n), seen: make([]bool, n), borders: make([]step, 0, n/8), face: make([]int32, 0, n/16)}
+	f := faces{tr: tr, solid: make([]Tag, n), seen: make([]bool, n), borders: make([]Edge, 0, n/2), face: make([]int32, 0, n/16)}
 	if err := f.fill(ctx, tr.outermost(), stops()); err != nil {
 		return nil, err
 	}
 	for len(f.borders) > 0 {
-		b := f.borders[len(f.borders)-1]
+		e := f.borders[len(f.borders)-1]
 		f.borders = f.borders[:len(f.borders)-1]
-		e := b.into
-		r := &tr.tris[e.Tri()]
-		if b.back {
+		if e < 0 { // on the way back
+			e = ^e
+			r := &tr.tris[e.Tri()]
 			cross(r.c[e.Corner()], r.v[e.Corner()])
 			continue
 		}
 		if f.seen[e.Tri()] {
 			continue
 		}
+		r := &tr.tris[e.Tri()]
 		cross(r.c[e.Corner()], r.v[inc[e.Corner()]])
-		f.borders = append(f.borders, step{e, true})
+		f.borders = append(f.borders, ^e)
 		if err := f.fill(ctx, e.Tri(), stops()); err != nil {
 			return nil, err
 		}
@@ -46,15 +47,9 @@ type faces struct {
 	tr      *Triangulation
 	solid   []Tag
 	seen    []bool
-	done    int // triangles seen
-	borders []step
+	done    int     // triangles seen
+	borders []Edge  // into the faces met behind constraints, and complements of those that were gone through, for the way back
 	face    []int32 // triangles of the present face whose neighbours are still to be seen
-}
-
-// step is one across a constraint: to a face that has been met, or back from it.
-type step struct {
-	into Edge // its triangle is the one behind the constraint
-	back bool
 }
 
 // fill writes what the face of triangle t stops, and adds its borders.
@@ -73,7 +68,7 @@ func (f *faces) fill(ctx context.Context, t int32, s Tag) error {
 			switch {
 			case n == None || seen[n.Tri()]:
 			case r.c[i] >= 0:
-				borders = append(borders, step{into: n})
+				borders = append(borders, n)
 			default:
 				seen[n.Tri()], solid[n.Tri()] = true, s
 				face = append(face, n.Tri())
