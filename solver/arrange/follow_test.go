@@ -19,6 +19,7 @@ import (
 // Without all, only of the triangles that are not solid: outside, the mesh depends on how far the first outline reached.
 func shape(s *arrange.Site, all bool) []string {
 	var lines []string
+	s.Mesh.NumSectors()
 	for t := range s.Mesh.Tris {
 		tri := &s.Mesh.Tris[t]
 		if tri.P[0] == tri.P[1] || !all && s.Mesh.Solid[t] == plan.Ceiling {
@@ -65,6 +66,7 @@ func TestFollowLaws(t *testing.T) {
 		if err != nil {
 			t.Fatal(err)
 		}
+		site.Mesh.NumSectors() // so that they are followed too
 		for range 12 {
 			next := nudge(r, p)
 			if next == nil {

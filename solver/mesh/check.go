@@ -63,4 +63,7 @@ func (tr *Triangulation) HasEdge(a, b, k int32) bool {
 }
 
 // Check is the triangulation's Check.
-func (m *Mesh) Check() error { return m.raw.Check() }
+func (m *Mesh) Check() error {
+	m.unsettle()
+	return m.raw.Check()
+}

@@ -23,6 +23,7 @@ type Editor struct {
 
 // NewEditor begins a change of m. The first one takes O(n).
 func NewEditor(m *Mesh) *Editor {
+	m.unsettle()
 	m.raw.log, m.raw.logs = m.raw.log[:0], true
 	if m.raw.out == nil { // only changes ask for it
 		m.raw.findOut()

@@ -25,7 +25,7 @@ func (tr *Triangulation) arrange(ctx context.Context, pts []exact.Pt, curve []in
 	if err != nil {
 		return err
 	}
-	tris := make([]rawTri, len(order), len(order)+len(order)/8)
+	tris := make([]rawTri, len(order))
 	_, err = pulse.Split(pulse.Part(ctx, 0.5, 1), len(tris), func(ctx context.Context, lo, hi int) (none struct{}, err error) {
 		for k := lo; k < hi && err == nil; k++ {
 			tris[k] = tr.arranged(order[k], curve, place, first)

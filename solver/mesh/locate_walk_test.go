@@ -27,6 +27,7 @@ func TestWander(t *testing.T) {
 			t.Fatal(err)
 		}
 		in := inserter{tr: tr, n: uint32(len(tr.Pts))}
+		m.unsettle() // tr is asked too
 		lo, hi := m.Box()
 		for range 500 {
 			from, p := r.Int32N(int32(len(m.Tris))), exact.Pt{X: r.Int32N(side+2) - 1, Y: r.Int32N(side+2) - 1}

@@ -45,6 +45,7 @@ type Mesh struct {
 	Solid []int32 // for each triangle the height up to which it is solid for sight
 	shut  []bool  // for each triangle whether nobody stands in it, as its Flags say
 	raw   *Triangulation
+	con   [][3]int32 // for each triangle the constraints on its edges, unless raw has them
 	tags  []Tag
 	grid  grid
 	turn  turning
@@ -54,7 +55,12 @@ type Mesh struct {
 func (m *Mesh) Box() (lo, hi exact.Pt) { return m.Pts[m.raw.box], m.Pts[m.raw.box+2] }
 
 // Constraint returns the index of the edge that lies on e, or -1.
-func (m *Mesh) Constraint(e Edge) int32 { return m.raw.tris[e.Tri()].c[e.Corner()] }
+func (m *Mesh) Constraint(e Edge) int32 {
+	if m.con != nil {
+		return m.con[e.Tri()][e.Corner()]
+	}
+	return m.raw.tris[e.Tri()].c[e.Corner()]
+}
 
 // Twin returns the half-edge on the other side of e.
 func (m *Mesh) Twin(e Edge) Edge { return m.Tris[e.Tri()].N[e.Corner()] }
@@ -90,6 +96,7 @@ func (tr *Triangulation) Finish(ctx context.Context, tags []Tag, solid []Tag) (*
 	if err != nil {
 		return nil, err
 	}
+	m.settle()
 	if m.grid, err = makeGrid(pulse.Part(ctx, 0.6, 0.9), m); err != nil {
 		return nil, err
 	}

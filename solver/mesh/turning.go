@@ -22,12 +22,15 @@ type turning struct {
 	made    atomic.Bool
 	making  sync.Mutex
 	sectors []Sector
-	at      []int32 // for each half-edge the sector that its starting corner belongs to, or -1
+	at      []int32 // for each half-edge, see slot, the sector that its starting corner belongs to, or -1
 	places  []uint8 // for each point the number of its sectors, wide or not, capped
 }
 
+// slot numbers the half-edges without gaps: three for each triangle.
+func slot(e Edge) int32 { return int32(e) - e.Tri() }
+
 // SectorAt returns the turning sector that the starting corner of e belongs to, or -1 where no shortest walk turns.
-func (m *Mesh) SectorAt(e Edge) int32 { return m.turning().at[e] }
+func (m *Mesh) SectorAt(e Edge) int32 { return m.turning().at[slot(e)] }
 
 // Sector returns turning sector s.
 func (m *Mesh) Sector(s int32) *Sector { return &m.turning().sectors[s] }
@@ -54,7 +57,7 @@ func (turn *turning) make(m *Mesh) {
 	if turn.made.Load() {
 		return
 	}
-	turn.at, turn.places = make([]int32, 4*len(m.Tris)), make([]uint8, len(m.Pts))
+	turn.at, turn.places = make([]int32, 3*len(m.Tris)), make([]uint8, len(m.Pts))
 	for i := range turn.at {
 		turn.at[i] = -1
 	}
@@ -89,7 +92,7 @@ func (turn *turning) update(m *Mesh, tris []int32) {
 	if !turn.made.Load() {
 		return
 	}
-	for len(turn.at) < 4*len(m.Tris) {
+	for len(turn.at) < 3*len(m.Tris) {
 		turn.at = append(turn.at, -1)
 	}
 	for len(turn.places) < len(m.Pts) {
@@ -103,7 +106,7 @@ func (turn *turning) update(m *Mesh, tris []int32) {
 			}
 			done[v] = true
 			turn.places[v] = 0
-			m.Around(EdgeOf(t, i), func(e Edge) { turn.at[e] = -1 })
+			m.Around(EdgeOf(t, i), func(e Edge) { turn.at[slot(e)] = -1 })
 			m.Around(EdgeOf(t, i), func(e Edge) {
 				if tri := &m.Tris[e.Tri()]; tri.Flags&FlagNoWalk == 0 && tri.StopsWalk(e.Corner()) {
 					turn.places[v] = min(turn.places[v]+1, 2)
@@ -134,7 +137,7 @@ func (turn *turning) add(m *Mesh, first Edge) {
 	id := int32(len(turn.sectors))
 	turn.sectors = append(turn.sectors, s)
 	for e := first; ; e = m.Twin(e.Prev()) {
-		turn.at[e] = id
+		turn.at[slot(e)] = id
 		if e == last {
 			return
 		}
