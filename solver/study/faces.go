@@ -148,7 +148,7 @@ func (g *ground) itemAt(e mesh.Edge) plan.Ref {
 	if con < 0 {
 		return plan.Ref{Kind: plan.KindFloor}
 	}
-	return g.outline.Items[g.graph.Edges[con].Item]
+	return g.itemAlong(con)
 }
 
 // tellFace appends the problem of a face that had to be moved, or of which only a part can be seen.

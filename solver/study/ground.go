@@ -11,13 +11,13 @@ import (
 	"enfilade/solver/plan"
 )
 
-// ground is an outline with its rounded graph and its mesh.
+// ground is a mesh, and what runs along its edges: that of a plan's obstacles as drawn, or grown for a walker with a body.
 type ground struct {
-	site    *arrange.Site
-	outline *arrange.Outline
-	graph   *arrange.Graph
-	mesh    *mesh.Mesh
-	eyes    []*eyes // for each height that faces are looked for at, once asked for
+	site  *arrange.Site  // as drawn
+	grown *arrange.Grown // or grown
+	mesh  *mesh.Mesh
+	items []plan.Ref
+	eyes  []*eyes // for each height that faces are looked for at, once asked for
 }
 
 // makeGround rounds and triangulates an outline.
@@ -30,7 +30,31 @@ func makeGround(ctx context.Context, o *arrange.Outline) (*ground, error) {
 }
 
 func groundOf(s *arrange.Site) *ground {
-	return &ground{site: s, outline: s.Outline, graph: s.Graph, mesh: s.Mesh}
+	return &ground{site: s, mesh: s.Mesh, items: s.Outline.Items}
+}
+
+// grow makes the ground for walkers of a radius, whose polygon has so many sides, from the ground as drawn.
+func (g *ground) grow(ctx context.Context, radius int32, sides int) (*ground, error) {
+	grown, err := arrange.NewGrown(ctx, g.site.Outline, g.mesh, radius, sides)
+	if err != nil {
+		return nil, fmt.Errorf("study: %w", err)
+	}
+	return &ground{grown: grown, mesh: grown.Mesh, items: grown.Items}, nil
+}
+
+// line returns what runs along an edge of the ground's graph: an index into items, and whether a line there stops walking.
+func (g *ground) line(con int32) (item int32, walk bool) {
+	if g.grown != nil {
+		return g.grown.Line(con)
+	}
+	e := &g.site.Graph.Edges[con]
+	return e.Item, e.Walk
+}
+
+// itemAlong returns the item that runs along an edge of the ground's graph.
+func (g *ground) itemAlong(con int32) plan.Ref {
+	item, _ := g.line(con)
+	return g.items[item]
 }
 
 // demand is what a mark asks of the place it stands at.
@@ -99,13 +123,14 @@ func (g *ground) parted(p exact.Pt) (plan.Ref, bool) {
 	if places < 2 || by < 0 {
 		return plan.Ref{}, places > 1
 	}
-	return g.outline.Items[g.graph.Edges[by].Item], true
+	return g.itemAlong(by), true
 }
 
 // holder returns the item, the first in the plan, of the bodies that wind about the solid place p and stop what stops says,
-// by the crossings of a ray to the right with the rounded graph. O(n).
+// by the crossings of a ray to the right with the rounded graph of the ground as drawn. O(n).
 func (g *ground) holder(p exact.Pt, stops func(arrange.Stops) bool) plan.Ref {
-	wind := make([]int32, len(g.graph.Bodies))
+	graph := g.site.Graph
+	wind := make([]int32, len(graph.Bodies))
 	for i := range g.mesh.Tris {
 		for k := range 3 {
 			e := mesh.EdgeOf(int32(i), k)
@@ -117,18 +142,18 @@ func (g *ground) holder(p exact.Pt, stops func(arrange.Stops) bool) plan.Ref {
 			if !(a.Y <= p.Y && b.Y > p.Y && exact.Orient(a, b, p) > 0) {
 				continue // the half-edges that lead up; their twins lead down
 			}
-			edge := &g.graph.Edges[con]
+			edge := &graph.Edges[con]
 			sign := int32(1)
 			if g.mesh.Pts[edge.A] != a {
 				sign = -1
 			}
-			for _, w := range g.graph.Winds[edge.Wind0:edge.Wind1] {
+			for _, w := range graph.Winds[edge.Wind0:edge.Wind1] {
 				wind[w.Body] += sign * w.Delta
 			}
 		}
 	}
 	best := int32(-1)
-	for i, b := range g.graph.Bodies {
+	for i, b := range graph.Bodies {
 		if i > 0 && wind[i] != 0 && stops(b.Stops) && (best < 0 || b.Item < best) {
 			best = b.Item
 		}
@@ -136,7 +161,7 @@ func (g *ground) holder(p exact.Pt, stops func(arrange.Stops) bool) plan.Ref {
 	if best < 0 {
 		return plan.Ref{Kind: plan.KindFloor}
 	}
-	return g.outline.Items[best]
+	return g.items[best]
 }
 
 // roomNear returns the distance from p to the nearest place on which the walker can stand, +Inf if there is none. It looks

@@ -90,11 +90,11 @@ func (s *Solver) groundFor(ctx context.Context, o *arrange.Outline) (*ground, er
 
 // makeScene sets the scene on the plain ground. A walker with a body takes a second one: the obstacles are grown in the first.
 func makeScene(ctx context.Context, plain *ground, radius int32, sides int) (*scene, error) {
-	sc := &scene{plain: plain, wide: plain, floor: floorRing(plain.outline), radius: radius}
+	sc := &scene{plain: plain, wide: plain, floor: floorRing(plain.site.Outline), radius: radius}
 	if radius > 0 {
 		_, sc.excess = arrange.Disc(radius, sides)
 		var err error
-		if sc.wide, err = makeGround(ctx, arrange.Grow(plain.outline, plain.mesh, radius, sides)); err != nil {
+		if sc.wide, err = plain.grow(ctx, radius, sides); err != nil {
 			return nil, err
 		}
 	}
