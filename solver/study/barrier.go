@@ -12,11 +12,17 @@ import (
 
 // barrierFinder tells what closes the way from a start: the first thing to be crossed on a way that crosses as few edges
 // that stop walking as can be. What only the walker's body is too wide for costs nothing to cross; when nothing else is in
-// the way, it is too narrow a gap. It searches the mesh once, when first asked, in O(n).
+// the way, it is too narrow a gap. It searches the mesh as far as it is asked, and once: O(n log n).
 type barrierFinder struct {
 	scene *scene
 	start exact.Pt
-	ways  []way // for each triangle the best way there
+	reach []int32 // for each triangle the best way there, an index into ways, or -1
+	ways  []way   // from the best on
+	now   []int32 // triangles that the last of the ways leads into
+	wave  []step  // into triangles by other ways that cross as much, the best one last
+	later []step  // by ways that cross one thing more
+	floor []bool  // for each item whether it is the floor
+	soft  []bool  // for each item whether it is the walker, whose outlines stop nobody
 }
 
 // way is how a place is reached: over how many edges that stop anyone, and which item is crossed first, -1 for none.
@@ -36,97 +42,125 @@ type step struct {
 	way
 }
 
-// search finds the best way to every triangle: all that cross nothing first, then all that cross one thing, those of the item
-// that comes first in the plan before the others, and so on.
-func (b *barrierFinder) search() {
-	b.ways = make([]way, len(b.scene.wide.mesh.Tris))
-	for i := range b.ways {
-		b.ways[i] = noWay
+// begin makes the search ready.
+func (b *barrierFinder) begin() {
+	g := b.scene.wide
+	b.reach = make([]int32, len(g.mesh.Tris))
+	for i := range b.reach {
+		b.reach[i] = -1
 	}
-	var now, later []step
-	b.scene.wide.holding(b.start, func(t int32) {
-		if !b.scene.wide.shut(t) {
-			now = append(now, step{t, way{0, -1}})
+	b.floor, b.soft = make([]bool, len(g.items)), make([]bool, len(g.items))
+	for i, item := range g.items {
+		b.floor[i], b.soft[i] = item.Kind == plan.KindFloor, item.Kind == plan.KindWalker
+	}
+	b.ways = append(b.ways, way{0, -1})
+	g.holding(b.start, func(t int32) {
+		if !g.shut(t) {
+			b.now = append(b.now, t)
 		}
 	})
-	for len(now) > 0 || len(later) > 0 {
-		if len(now) == 0 {
-			slices.SortFunc(later, func(a, b step) int { return cmp.Compare(b.first, a.first) })
-			now, later = later, now
-		}
-		s := now[len(now)-1]
-		now = now[:len(now)-1]
-		if b.ways[s.tri] == noWay {
-			b.ways[s.tri] = s.way
-			now, later = b.spread(s, now, later)
-		}
-	}
 }
 
-// spread appends the ways from s into the neighbours of its triangle: to now where nothing is crossed, else to later.
-func (b *barrierFinder) spread(s step, now, later []step) ([]step, []step) {
-	m := b.scene.wide.mesh
-	t := &m.Tris[s.tri]
-	for i := range 3 {
-		con := m.Constraint(mesh.EdgeOf(s.tri, i))
-		if t.N[i] == mesh.None || b.offFloor(con) {
+// next finds the best way to one triangle more and returns that: first all those to which a way crosses nothing, then all to
+// which one crosses one thing, those of the item that comes first in the plan before the others, and so on. It returns -1 when
+// there are no more.
+func (b *barrierFinder) next() int32 {
+	for {
+		if n := len(b.now); n > 0 {
+			t := b.now[n-1]
+			b.now = b.now[:n-1]
+			if b.reach[t] < 0 {
+				b.reach[t] = int32(len(b.ways) - 1)
+				b.spread(t)
+				return t
+			}
 			continue
 		}
-		next := step{t.N[i].Tri(), s.way}
-		if !b.hard(con) {
-			now = append(now, next)
+		if len(b.wave) == 0 {
+			if len(b.later) == 0 {
+				return -1
+			}
+			slices.SortFunc(b.later, func(a, b step) int { return cmp.Compare(b.first, a.first) })
+			b.wave, b.later = b.later, b.wave[:0]
+		}
+		s := b.wave[len(b.wave)-1]
+		b.wave = b.wave[:len(b.wave)-1]
+		if b.reach[s.tri] < 0 {
+			if s.way != b.ways[len(b.ways)-1] {
+				b.ways = append(b.ways, s.way)
+			}
+			b.now = append(b.now, s.tri)
+		}
+	}
+}
+
+// spread notes the ways on into the neighbours of triangle t: for now where nothing is crossed, else for later.
+func (b *barrierFinder) spread(t int32) {
+	g := b.scene.wide
+	own := b.ways[len(b.ways)-1]
+	for i, n := range g.mesh.Tris[t].N {
+		if n == mesh.None || b.reach[n.Tri()] >= 0 {
 			continue
 		}
-		next.crossed++
-		if next.first < 0 {
-			next.first = b.scene.wide.graph.Edges[con].Item
+		con := g.mesh.Constraint(mesh.EdgeOf(t, i))
+		if con < 0 {
+			b.now = append(b.now, n.Tri())
+			continue
 		}
-		later = append(later, next)
+		item, walk := g.line(con)
+		switch {
+		case b.floor[item]: // no way leads off it and back
+		case !walk || b.soft[item]:
+			b.now = append(b.now, n.Tri())
+		case own.first < 0:
+			b.later = append(b.later, step{n.Tri(), way{own.crossed + 1, item}})
+		default:
+			b.later = append(b.later, step{n.Tri(), way{own.crossed + 1, own.first}})
+		}
 	}
-	return now, later
 }
 
-// hard reports whether graph edge con, or -1 for none, stops walkers of any width.
-func (b *barrierFinder) hard(con int32) bool {
-	if con < 0 {
-		return false
+// known returns the best way to triangle t as far as the search went.
+func (b *barrierFinder) known(t int32) way {
+	if b.reach[t] < 0 {
+		return noWay
 	}
-	g := b.scene.wide
-	e := &g.graph.Edges[con]
-	return e.Walk && g.outline.Items[e.Item].Kind != plan.KindWalker
+	return b.ways[b.reach[t]]
 }
 
-// offFloor reports whether graph edge con, or -1 for none, is the floor's own: no way leads off it and back.
-func (b *barrierFinder) offFloor(con int32) bool {
-	g := b.scene.wide
-	return con >= 0 && g.outline.Items[g.graph.Edges[con].Item].Kind == plan.KindFloor
+// best returns the best of the ways to some triangles. The search goes on until it has come to one of them: all that it finds
+// later is as good at most.
+func (b *barrierFinder) best(tris []int32) way {
+	if b.reach == nil {
+		b.begin()
+	}
+	best, wanted := noWay, make(map[int32]bool, len(tris))
+	for _, t := range tris {
+		wanted[t] = true
+		if w := b.known(t); w.before(best) {
+			best = w
+		}
+	}
+	for best == noWay && len(tris) > 0 {
+		t := b.next()
+		if t < 0 {
+			break
+		}
+		if wanted[t] {
+			best = b.known(t)
+		}
+	}
+	return best
 }
 
 // beforeTriangles says what closes the way to a region that has parts in these triangles.
-func (b *barrierFinder) beforeTriangles(tris []int32) string {
-	best := noWay
-	for _, t := range tris {
-		best = b.better(best, t)
-	}
-	return b.says(best)
-}
+func (b *barrierFinder) beforeTriangles(tris []int32) string { return b.says(b.best(tris)) }
 
 // beforePoint says what closes the way to a point.
 func (b *barrierFinder) beforePoint(p exact.Pt) string {
-	best := noWay
-	b.scene.wide.holding(p, func(t int32) { best = b.better(best, t) })
-	return b.says(best)
-}
-
-// better returns the better of a way and the one to triangle t.
-func (b *barrierFinder) better(w way, t int32) way {
-	if b.ways == nil {
-		b.search()
-	}
-	if own := b.ways[t]; own.before(w) {
-		return own
-	}
-	return w
+	var tris []int32
+	b.scene.wide.holding(p, func(t int32) { tris = append(tris, t) })
+	return b.says(b.best(tris))
 }
 
 func (b *barrierFinder) says(w way) string {
@@ -136,5 +170,5 @@ func (b *barrierFinder) says(w way) string {
 	case w.first < 0:
 		return fmt.Sprintf("every way there is too narrow for a body of radius %.0f mm", mm(b.scene.radius))
 	}
-	return b.scene.nameOf(b.scene.wide.outline.Items[w.first]) + " closes the way"
+	return b.scene.nameOf(b.scene.wide.items[w.first]) + " closes the way"
 }
