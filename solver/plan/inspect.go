@@ -2,7 +2,6 @@ package plan
 
 import (
 	"cmp"
-	"fmt"
 	"slices"
 
 	"enfilade/solver/exact"
@@ -19,145 +18,119 @@ type Finding struct {
 const GapLimit int32 = 20 * exact.PerMM
 
 // Inspect returns what looks wrong with a drawing by itself, without solving it: walls that nearly meet something, walls that
-// lie on one another, and items outside the floor. They come in a fixed order.
+// lie on one another, and items outside the floor. They come in a fixed order. Of very many walls that lie on one another each
+// is told with a few.
 //
-// Cost: near-linear. Straight pieces are sorted into square cells about as wide as the pieces are long, and only pieces that
-// share a cell are compared. stop, which may be nil, is asked now and then; when it says so, what was found so far is returned.
+// stop, which may be nil, is asked every few thousand steps; when it says so, what was found so far is returned.
+//
+// Cost: O(n log n) for n straight pieces, and for each piece the ends of walls that are near to it and touch nothing yet.
 func Inspect(p *Plan, stop func() bool) []Finding {
-	c := newCells(p)
-	c.stop = stop
-	out := append(c.gaps(), c.doubles()...)
-	out = append(out, outsiders(p)...)
-	slices.SortStableFunc(out, func(a, b Finding) int {
+	return newSurvey(p, stop).findings()
+}
+
+// findings returns all that is found.
+func (s *survey) findings() []Finding {
+	out := append(s.gaps(), s.doubles()...)
+	out = append(out, s.outsiders()...)
+	sortAsking(s, out, func(a, b Finding) int {
 		return cmp.Or(cmp.Compare(a.Kind, b.Kind), a.At.Compare(b.At))
 	})
 	return out
 }
 
-// outsiders are the walls, blocks, zones and routes of which no point lies on the floor.
-func outsiders(p *Plan) (out []Finding) {
-	floor := p.obstacles.floor.pts
-	if len(floor) < 3 {
-		return nil
+// piece is one straight piece of something that walls can meet.
+type piece struct {
+	a, b        exact.Pt
+	wall        int32 // index of the wall, -1 for another thing
+	index       int32 // of the piece in its wall
+	ref         Ref
+	right, left float64 // how far the body reaches beside it, grid units
+}
+
+// survey is a drawing taken to pieces.
+type survey struct {
+	plan   *Plan
+	pieces []piece
+	doored map[string]bool // the walls with openings
+	stop   func() bool
+
+	compared int // two pieces with one another
+}
+
+// stopped asks, at each so-manieth step of a loop, whether to stop.
+func (s *survey) stopped(step int) bool {
+	const each = 2048
+	return step%each == 0 && s.stop != nil && s.stop()
+}
+
+func newSurvey(p *Plan, stop func() bool) *survey {
+	s := &survey{plan: p, doored: map[string]bool{}, stop: stop}
+	for i, o := range p.obstacles.openings.refs() {
+		if s.stopped(i) {
+			return s
+		}
+		s.doored[o.Wall] = true
 	}
-	tell := func(kind Kind, id string, c Chain) {
-		if len(c.pts) == 0 || slices.ContainsFunc(c.pts, func(q exact.Pt) bool { return onFloor(floor, q) }) {
+	add := func(q piece) {
+		if q.a != q.b && InRange(q.a) && InRange(q.b) {
+			s.pieces = append(s.pieces, q)
+		}
+	}
+	for i, w := range p.obstacles.walls.refs() {
+		if s.stopped(i) {
+			return s
+		}
+		right2, left2 := w.Sides2()
+		for k := range max(0, w.Line.Len()-1) {
+			add(piece{w.Line.At(k), w.Line.At(k + 1), int32(i), int32(k), Ref{KindWall, w.ID}, float64(right2) / 2, float64(left2) / 2})
+		}
+	}
+	ring := func(ref Ref, ring Chain) {
+		for k := range ring.Len() {
+			add(piece{a: ring.At(k), b: ring.At((k + 1) % ring.Len()), wall: -1, ref: ref})
+		}
+	}
+	for i, b := range p.obstacles.blocks.refs() {
+		if s.stopped(i) {
+			return s
+		}
+		ring(Ref{KindBlock, b.ID}, b.Ring)
+	}
+	ring(Ref{Kind: KindFloor}, p.obstacles.floor)
+	return s
+}
+
+// sortAsking sorts a list stably, in runs that are merged, and asks between them whether to stop: then the list is in some order.
+// O(n log n).
+func sortAsking[T any](s *survey, list []T, compare func(a, b T) int) {
+	const run = 1024
+	for from := 0; from < len(list); from += run {
+		if s.stopped(0) {
 			return
 		}
-		out = append(out, Finding{Problem: Problem{Kind: ProblemOutside, Items: []Ref{{kind, id}}, At: c.pts[0],
-			Text: "lies outside the floor; move it inside, or draw the floor around it"}})
+		slices.SortStableFunc(list[from:min(from+run, len(list))], compare)
 	}
-	for _, w := range p.obstacles.walls.refs() {
-		tell(KindWall, w.ID, w.Line)
+	if len(list) <= run {
+		return
 	}
-	for _, b := range p.obstacles.blocks.refs() {
-		tell(KindBlock, b.ID, b.Ring)
-	}
-	for _, z := range p.marks.zones.refs() {
-		tell(KindZone, z.ID, z.Ring)
-	}
-	for _, r := range p.marks.routes.refs() {
-		tell(KindRoute, r.ID, r.Via)
-	}
-	return out
-}
-
-// onFloor reports whether q lies in the ring or on it, by the crossings of a ray to the right.
-func onFloor(ring []exact.Pt, q exact.Pt) bool {
-	in := false
-	for i, a := range ring {
-		b := ring[(i+1)%len(ring)]
-		if exact.OnSegment(a, b, q) {
-			return true
+	from, to := list, make([]T, len(list))
+	for size := run; size < len(list); size *= 2 {
+		for lo := 0; lo < len(list); lo += 2 * size {
+			mid, hi := min(lo+size, len(list)), min(lo+2*size, len(list))
+			for i, j, k := lo, mid, lo; k < hi; k++ {
+				if s.stopped(k) {
+					return
+				}
+				if j == hi || i < mid && compare(from[i], from[j]) <= 0 {
+					to[k] = from[i]
+					i++
+				} else {
+					to[k] = from[j]
+					j++
+				}
+			}
 		}
-		if (a.Y > q.Y) != (b.Y > q.Y) && (exact.Orient(a, b, q) > 0) == (b.Y > a.Y) {
-			in = !in
-		}
+		from, to = to, from
 	}
-	return in
+	copy(list, from)
 }
-
-// doubles are the walls that lie on others for more than a point, each pair told once.
-func (c *cells) doubles() (out []Finding) {
-	told := map[[2]int32]bool{}
-	c.pairs(func(i, j int32) {
-		s, t := &c.pieces[i], &c.pieces[j]
-		if s.wall < 0 || t.wall < 0 || s.wall == t.wall || !overlap(s.a, s.b, t.a, t.b) {
-			return
-		}
-		k := [2]int32{min(s.wall, t.wall), max(s.wall, t.wall)}
-		if told[k] {
-			return
-		}
-		told[k] = true
-		out = append(out, c.double(k[0], k[1], between(s, t)))
-	})
-	return out
-}
-
-// overlap reports whether two segments share more than a point.
-func overlap(a, b, c, d exact.Pt) bool {
-	if a == b || c == d || exact.Area2(a, b, c) != 0 || exact.Area2(a, b, d) != 0 {
-		return false
-	}
-	lo := func(p, q exact.Pt) exact.Pt {
-		if q.Less(p) {
-			return q
-		}
-		return p
-	}
-	hi := func(p, q exact.Pt) exact.Pt {
-		if q.Less(p) {
-			return p
-		}
-		return q
-	}
-	from, to := lo(a, b), hi(a, b)
-	if l := lo(c, d); from.Less(l) {
-		from = l
-	}
-	if h := hi(c, d); h.Less(to) {
-		to = h
-	}
-	return from.Less(to)
-}
-
-// between returns the middle of an end of one piece that lies on the other and the piece's own middle: a place on both.
-func between(s, t *piece) exact.Pt {
-	for _, q := range [4]exact.Pt{t.a, t.b, s.a, s.b} {
-		if exact.OnSegment(s.a, s.b, q) && exact.OnSegment(t.a, t.b, q) {
-			return q
-		}
-	}
-	return s.a
-}
-
-// double tells of two walls; the later one may be deleted when it is nothing but the other again.
-func (c *cells) double(first, second int32, at exact.Pt) Finding {
-	v, w := c.plan.obstacles.walls.at(int(first)), c.plan.obstacles.walls.at(int(second))
-	f := Finding{Problem: Problem{Kind: ProblemDouble, Items: []Ref{{KindWall, w.ID}, {KindWall, v.ID}}, At: at,
-		Text: fmt.Sprintf("lies on wall %s for a part of its length; cut it back, or delete one of them", v.ID)}}
-	if !v.Line.Equal(w.Line) && !v.Line.Equal(w.backwards().Line) {
-		return f
-	}
-	f.Text = fmt.Sprintf("lies on wall %s, all along it; delete one of them", v.ID)
-	gone := w
-	if c.doored[w.ID] {
-		gone = v
-		f.Items[0], f.Items[1] = f.Items[1], f.Items[0]
-		f.Text = fmt.Sprintf("lies on wall %s, all along it; delete one of them", w.ID)
-	}
-	if same := v.Kind == w.Kind && v.Thickness == w.Thickness && v.Height == w.Height; same && !c.doored[gone.ID] {
-		f.Fix, f.Offer = named{Delete{[]Ref{{KindWall, gone.ID}}}, "delete doubled wall"}, "Delete it"
-	}
-	return f
-}
-
-// named is an edit under another label.
-type named struct {
-	Edit
-	label string
-}
-
-// Label returns the other label.
-func (n named) Label() string { return n.label }

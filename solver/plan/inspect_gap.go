@@ -3,84 +3,64 @@ package plan
 import (
 	"fmt"
 	"math"
-	"slices"
 	"strconv"
 
 	"enfilade/solver/exact"
 )
 
-// gap is how a wall's end comes near to a piece without touching it.
-type gap struct {
-	wide float64 // grid units
-	to   int32   // the piece
-}
-
 // gaps are the ends of walls that lie within the limit of another thing and do not touch it, each with the nearest.
-func (c *cells) gaps() (out []Finding) {
-	for i := range c.pieces {
-		s := &c.pieces[i]
-		if c.stopped(i) {
+func (s *survey) gaps() (out []Finding) {
+	t := s.newTips()
+	for i := range s.pieces {
+		if s.stopped(i * 8) { // a piece may be near to many ends
 			break
 		}
-		if s.wall < 0 {
-			continue
+		t.near(&s.pieces[i], 1, func(p *tip) { s.look(p, int32(i)) })
+	}
+	for i := range t.list {
+		if s.stopped(i) {
+			break
 		}
-		w := c.plan.obstacles.walls.at(int(s.wall))
-		if w.Line.Closed() {
-			continue
-		}
-		if s.index == 0 {
-			out = c.gapAt(out, w, int32(i), true)
-		}
-		if int(s.index) == w.Line.Len()-2 {
-			out = c.gapAt(out, w, int32(i), false)
+		if p := &t.list[i]; !p.touches && p.best.wide <= float64(GapLimit) {
+			out = append(out, s.tellGap(p))
 		}
 	}
-	return c.once(out)
+	return s.once(out)
 }
 
-// gapAt appends the gap at one end of a wall, if there is one: when the end touches nothing at all, and something is near.
-func (c *cells) gapAt(out []Finding, w *Wall, i int32, start bool) []Finding {
-	s := &c.pieces[i]
-	inner, end := s.a, s.b
-	if start {
-		inner, end = end, inner
+// look takes a piece for the one nearest to a wall's end, if it is.
+func (s *survey) look(p *tip, i int32) {
+	own, q := &s.pieces[p.piece], &s.pieces[i]
+	if i == p.piece || q.wall == own.wall && (q.index-own.index == 1 || own.index-q.index == 1) {
+		return
 	}
-	best := gap{math.Inf(1), -1}
-	touches := false
-	look := func(j int32) {
-		t := &c.pieces[j]
-		if touches || j == i || t.wall == s.wall && (t.index-s.index == 1 || s.index-t.index == 1) {
-			return
-		}
-		d := t.apart(s, inner, end)
-		switch {
-		case d == 0:
-			touches = true
-		case d < best.wide || d == best.wide && best.to >= 0 && t.ref.Kind < c.pieces[best.to].ref.Kind:
-			best = gap{d, j}
-		}
-	}
-	for _, q := range face(s, inner, end) {
-		c.near(exact.Pt{X: int32(math.Round(q[0])), Y: int32(math.Round(q[1]))}, look)
-	}
-	if touches || best.wide > float64(GapLimit) {
-		return out
-	}
-	t := &c.pieces[best.to]
-	f := Finding{Problem: Problem{Kind: ProblemGap, Items: []Ref{{KindWall, w.ID}}, At: end}, Offer: "Close the gap"}
-	what := t.ref.String()
+	s.compared++
+	d := q.apart(own, p.inner, p.end)
 	switch {
-	case t.wall == s.wall:
-		what = "itself"
-	case t.ref.Kind == KindFloor:
-		what, f.Items = "the edge of the floor", append(f.Items, t.ref)
-	default:
-		f.Items = append(f.Items, t.ref)
+	case d == 0:
+		p.touches = true
+	case d < p.best.wide || d == p.best.wide && p.best.to >= 0 && q.ref.Kind < s.pieces[p.best.to].ref.Kind:
+		p.best = gap{d, i}
 	}
-	f.Text = fmt.Sprintf("ends %s mm before %s; close the gap?", strconv.FormatFloat(math.Max(best.wide/exact.PerMM, 0.1), 'f', 1, 64), what)
-	f.Fix = closing(c.plan, w, t, inner, end, start)
-	return append(out, f)
+}
+
+// tellGap tells of the gap between a wall's end and what is nearest to it.
+func (s *survey) tellGap(p *tip) Finding {
+	q := &s.pieces[p.best.to]
+	f := Finding{Problem: Problem{Kind: ProblemGap, Items: []Ref{{KindWall, p.wall.ID}}, At: p.end}, Offer: "Close the gap"}
+	what := q.ref.String()
+	switch {
+	case q.wall == s.pieces[p.piece].wall:
+		what = "itself"
+	case q.ref.Kind == KindFloor:
+		what, f.Items = "the edge of the floor", append(f.Items, q.ref)
+	default:
+		f.Items = append(f.Items, q.ref)
+	}
+	wide := strconv.FormatFloat(math.Max(p.best.wide/exact.PerMM, 0.1), 'f', 1, 64)
+	f.Text = fmt.Sprintf("ends %s mm before %s; close the gap?", wide, what)
+	f.Fix = closing(s.plan, p.wall, q, p.inner, p.end, p.start)
+	return f
 }
 
 // apart returns how far the end of a wall's piece s is from the body along the piece t, 0 when s touches or crosses that body.
@@ -171,34 +151,43 @@ func closing(p *Plan, w *Wall, t *piece, inner, end exact.Pt, start bool) Edit {
 	return named{MoveCorner{Corner: Corner{Ref{KindWall, w.ID}, index}, To: at, Along: true}, "close gap"}
 }
 
+// seam is a gap between two walls, first in the order of names, in a cell of a coarse grid.
+type seam struct {
+	a, b string
+	x, y int32
+}
+
 // once drops the second of two gaps that are the same one seen from both its sides.
-func (c *cells) once(list []Finding) []Finding {
-	told := map[[3]string]bool{}
-	return slices.DeleteFunc(list, func(f Finding) bool {
-		last := f.Items[len(f.Items)-1]
-		if last.Kind != KindWall {
-			return false
+func (s *survey) once(list []Finding) (out []Finding) {
+	told := map[seam]bool{}
+	for i, f := range list {
+		if s.stopped(i) {
+			break
 		}
-		a, b := f.Items[0].ID, last.ID
-		near := f.At
-		if b < a {
-			a, b = b, a
+		if last := f.Items[len(f.Items)-1]; last.Kind != KindWall || !tellSeam(told, f.Items[0].ID, last.ID, f.At) {
+			out = append(out, f)
 		}
-		// Ends that meet end to end lie within the limit of one another: the same cell of a coarse grid, or its neighbour.
-		coarse := func(dx, dy int32) string {
-			const side = 4 * GapLimit
-			return fmt.Sprint(floorDiv(near.X, side)+dx, " ", floorDiv(near.Y, side)+dy)
-		}
-		for dx := int32(-1); dx <= 1; dx++ {
-			for dy := int32(-1); dy <= 1; dy++ {
-				if told[[3]string{a, b, coarse(dx, dy)}] {
-					return true
-				}
+	}
+	return out
+}
+
+// tellSeam reports whether the gap between two walls near a point has been told, and notes it if not. Ends that meet end to end
+// lie within the limit of one another: in the same cell of a coarse grid, or in its neighbour.
+func tellSeam(told map[seam]bool, a, b string, near exact.Pt) bool {
+	if b < a {
+		a, b = b, a
+	}
+	const side = 4 * GapLimit
+	k := seam{a, b, floorDiv(near.X, side), floorDiv(near.Y, side)}
+	for dx := int32(-1); dx <= 1; dx++ {
+		for dy := int32(-1); dy <= 1; dy++ {
+			if told[seam{a, b, k.x + dx, k.y + dy}] {
+				return true
 			}
 		}
-		told[[3]string{a, b, coarse(0, 0)}] = true
-		return false
-	})
+	}
+	told[k] = true
+	return false
 }
 
 func floorDiv(a, b int32) int32 {
