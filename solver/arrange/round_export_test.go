@@ -25,3 +25,6 @@ func PairCrossings(segs []Segment) (keys []uint64) {
 	slices.Sort(keys)
 	return keys
 }
+
+// LeastSegments is leastSegments.
+var LeastSegments = leastSegments

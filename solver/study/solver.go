@@ -54,6 +54,9 @@ func (s *Solver) Mesh(ctx context.Context, p *plan.Plan) error {
 	if s.scene != nil && s.obstacles == p.Obstacles() && s.box == box && s.radius == radius {
 		return nil
 	}
+	if err := arrange.Fits(p); err != nil {
+		return fmt.Errorf("study: %w", err)
+	}
 	outline, problems := arrange.Draw(p)
 	half := 1.0
 	if radius > 0 {
