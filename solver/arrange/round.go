@@ -372,12 +372,16 @@ func (g *Graph) compact(place []int32) {
 	}
 }
 
+// addWind adds a winding to those of the edge being made, which begin at from and are kept in the order of their bodies: in which
+// segments come, so that it is near the end that it looks for its place.
 func (g *Graph) addWind(from int, w Wind) {
-	for i := from; i < len(g.Winds); i++ {
-		if g.Winds[i].Body == w.Body {
-			g.Winds[i].Delta += w.Delta
-			return
-		}
+	i := len(g.Winds)
+	for i > from && g.Winds[i-1].Body > w.Body {
+		i--
 	}
-	g.Winds = append(g.Winds, w)
+	if i > from && g.Winds[i-1].Body == w.Body {
+		g.Winds[i-1].Delta += w.Delta
+		return
+	}
+	g.Winds = slices.Insert(g.Winds, i, w)
 }

@@ -1,6 +1,7 @@
 package arrange
 
 import (
+	"cmp"
 	"slices"
 
 	"enfilade/solver/exact"
@@ -25,7 +26,8 @@ func crossings(keys []uint64, segs []Segment, list []int32) []uint64 {
 }
 
 // crowdedCrossings does the same for a crowd. Thousands of segments in one cell mostly have an end in common, as the spokes of
-// a wheel do, and two that have do not cross: so only segments of different bunches are compared.
+// a wheel do, and two that have do not cross: so only segments of different bunches are compared, and of those that lie in one
+// place, as the sides of a wall drawn a thousand times do, one.
 func crowdedCrossings(keys []uint64, segs []Segment, list []int32) []uint64 {
 	bunches := bunch(segs, list)
 	for from := 0; from < len(bunches); {
@@ -42,13 +44,13 @@ func crowdedCrossings(keys []uint64, segs []Segment, list []int32) []uint64 {
 	return keys
 }
 
-// spoke is a segment, and the one of its ends that the most segments in the cell share.
+// spoke is a segment, the one of its ends that the most segments in the cell share, and the other one.
 type spoke struct {
-	hub uint64
-	seg int32
+	hub, far uint64
+	seg      int32
 }
 
-// bunch sorts segments by their hubs.
+// bunch sorts segments by their hubs; of those with both ends in common it takes one.
 func bunch(segs []Segment, list []int32) []spoke {
 	ends := make(map[exact.Pt]int32, len(list))
 	for _, s := range list {
@@ -57,20 +59,12 @@ func bunch(segs []Segment, list []int32) []spoke {
 	}
 	out := make([]spoke, len(list))
 	for i, s := range list {
-		hub := segs[s].A
-		if ends[segs[s].B] > ends[hub] {
-			hub = segs[s].B
+		hub, far := segs[s].A, segs[s].B
+		if ends[far] > ends[hub] || ends[far] == ends[hub] && far.Less(hub) {
+			hub, far = far, hub
 		}
-		out[i] = spoke{key(hub), s}
+		out[i] = spoke{key(hub), key(far), s}
 	}
-	slices.SortFunc(out, func(a, b spoke) int {
-		if a.hub != b.hub {
-			if a.hub < b.hub {
-				return -1
-			}
-			return 1
-		}
-		return int(a.seg - b.seg)
-	})
-	return out
+	slices.SortFunc(out, func(a, b spoke) int { return cmp.Or(cmp.Compare(a.hub, b.hub), cmp.Compare(a.far, b.far)) })
+	return slices.CompactFunc(out, func(a, b spoke) bool { return a.hub == b.hub && a.far == b.far })
 }

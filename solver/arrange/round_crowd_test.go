@@ -3,11 +3,13 @@ package arrange_test
 import (
 	"context"
 	"errors"
+	"fmt"
 	"slices"
 	"testing"
 
 	"enfilade/solver/arrange"
 	"enfilade/solver/exact"
+	"enfilade/solver/plan"
 	"enfilade/solver/plantest"
 )
 
@@ -26,6 +28,34 @@ func TestRoundOfBunches(t *testing.T) {
 	}
 	if len(want) < 10_000 {
 		t.Errorf("only %d crossings: the spokes lost their aim", len(want))
+	}
+}
+
+// TestRoundOfPile: segments that lie in one place, some of them the other way round, are compared with others once, and all
+// crossings are found. 20,000 walls in one place are rounded; pair by pair they would take minutes.
+func TestRoundOfPile(t *testing.T) {
+	var segs []arrange.Segment
+	for i := range int32(200) {
+		a, b := exact.Pt{X: i % 5, Y: 0}, exact.Pt{X: 3000 - i%3, Y: 2000 + i%4}
+		if i%7 < 3 {
+			a, b = exact.Pt{X: 1000, Y: i % 11 * -5}, exact.Pt{X: 900 + i%2, Y: 1500}
+		}
+		if i%2 == 0 {
+			a, b = b, a
+		}
+		segs = append(segs, arrange.Segment{A: a, B: b})
+	}
+	got, want := slices.Compact(arrange.CrowdedCrossings(segs)), slices.Compact(arrange.PairCrossings(segs))
+	if !slices.Equal(got, want) || len(want) < 100 {
+		t.Errorf("%d crossings, want %d", len(got), len(want))
+	}
+	var p plan.Parts
+	for i := range 20_000 {
+		p.Walls = append(p.Walls, plan.Wall{ID: fmt.Sprint("W", i), Line: chain("0,0 50000,0"), Height: plan.Ceiling, Thickness: 2000})
+	}
+	o, _ := arrange.Draw(plan.From(p))
+	if g := arrange.Round(o); len(g.Edges) != 4+4 || len(g.Winds) != 4+4*20_000 {
+		t.Errorf("%d edges, %d windings", len(g.Edges), len(g.Winds))
 	}
 }
 
