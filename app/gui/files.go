@@ -80,9 +80,13 @@ func (w *window) show(load func()) {
 func (w *window) open(path string) {
 	path = absolute(path)
 	before := w.session.Committed()
+	w.status.solve.set("reading " + filepath.Base(path))
 	w.errands.run(func() func() {
 		p, print, err := readPlan(path)
 		return func() {
+			if !w.closing {
+				w.report()
+			}
 			switch {
 			case w.closing:
 			case err != nil:

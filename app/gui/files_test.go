@@ -41,6 +41,22 @@ func TestSaveAndReopenIsTheSamePlan(t *testing.T) {
 	}
 }
 
+// TestReadingIsTold: while a file is read the status line says so, and afterwards how the study stands, also when it could not be
+// read.
+func TestReadingIsTold(t *testing.T) {
+	r := newGallery(t)
+	r.errands.inline = false
+	solved := r.status.solve.text
+	r.open(filepath.Join(t.TempDir(), "gone.enfilade"))
+	if got := r.status.solve.text; got != "reading gone.enfilade" {
+		t.Errorf("while a file is read: %q", got)
+	}
+	r.until("it is told", func() bool { return r.notice.box.Visible() })
+	if got := r.status.solve.text; got != solved {
+		t.Errorf("after a file that is not there: %q, want %q", got, solved)
+	}
+}
+
 func TestUnsavedWorkIsAskedAbout(t *testing.T) {
 	for _, c := range []struct {
 		choice  int
