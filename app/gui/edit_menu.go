@@ -129,11 +129,11 @@ func (w *window) say(text string) {
 	time.AfterFunc(saying+saying/100, func() {
 		w.do(func() {
 			if !w.closing {
-				w.status.hint.set(w.onFoot(w.hint()))
+				w.status.tell(w.onFoot(w.hint()))
 			}
 		})
 	})
-	w.status.hint.set(w.onFoot(w.hint()))
+	w.status.tell(w.onFoot(w.hint()))
 }
 
 // justSaid is the sentence that still stands in the status line.

@@ -2,6 +2,7 @@ package gui
 
 import (
 	"fmt"
+	"strings"
 	"time"
 
 	"fyne.io/fyne/v2"
@@ -32,6 +33,14 @@ func newStatus() *status {
 	row := container.New(statusRow{}, s.place, tick(), s.snap, tick(), s.counts, tick(), s.solve, s.progress, s.hint)
 	s.box = around(hairline(), nil, nil, nil, inset(14, 4, 18, 5, row))
 	return s
+}
+
+// tell shows a hint; where there is no room for it, its first part alone.
+func (s *status) tell(hint string) {
+	first, _, _ := strings.Cut(hint, " · ")
+	first, _, _ = strings.Cut(first, "; ")
+	s.hint.brief = first
+	s.hint.set(hint)
 }
 
 // tick is the short rule between two parts of the line.

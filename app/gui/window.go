@@ -171,7 +171,7 @@ func (w *window) acted() {
 	w.view.Refresh()
 	w.status.at(w.view.cam.Grid(w.view.place()), p.Sheet().Unit, w.view.inside)
 	w.status.snap.set(w.snapText(w.sketch.Snap, w.view.cam))
-	w.status.hint.set(w.onFoot(w.hint()))
+	w.status.tell(w.onFoot(w.hint()))
 	w.status.count(p, w.problems)
 	w.form.update(p, w.session.Selection())
 	w.table.update()

@@ -321,7 +321,13 @@ func (t *Chain) Hint(h Host) string {
 		return "Tab goes between length and angle, Enter puts the corner, Esc gives it back to the pointer"
 	case n == 0:
 		return "click where the " + what + " begins" + body
-	case n < 3:
+	case n > 2 && t.at == t.pts[0]:
+		return "click to close the " + what
+	case n > 2 && t.ring():
+		return "click the next corner, or the first one to close; Enter or Esc closes the " + what
+	case n == 1 || t.ring():
+		return "click the next corner, or type its length; Backspace takes the last one back" + body
+	case n == 2:
 		return "click the next corner, or type its length; Enter or Esc ends the " + what + body
 	}
 	return "click the next corner, or the first one to close; Enter or Esc ends the " + what + body

@@ -259,7 +259,10 @@ func (t *Door) Hint(h Host) string {
 	case t.on:
 		return "click, drag, or type a width · " + leafHint(h.Defaults()) + " · Shift: plain gap"
 	}
-	return "point at a wall · " + leafHint(h.Defaults())
+	if h.Plan().NumWalls() == 0 {
+		return "a door sits in a wall; draw one first (W)"
+	}
+	return "point at a wall to cut a door or a gap into · " + leafHint(h.Defaults())
 }
 
 // leafHint says how new doors hang, and the keys that change it.

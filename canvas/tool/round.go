@@ -154,5 +154,5 @@ func (t *Round) Hint(h Host) string {
 	case t.press.moved:
 		return "release when the column is wide enough"
 	}
-	return "click for a column, drag from its centre or type a number for another radius · C again: other shapes"
+	return "click for a column, drag from its centre or type a number for another radius"
 }

@@ -159,8 +159,10 @@ func (t *Route) Sketch(h Host) Sketch {
 }
 
 // Hint says what the next click does.
-func (t *Route) Hint(Host) string {
+func (t *Route) Hint(h Host) string {
 	switch {
+	case h.Plan().NumStarts() == 0:
+		return "a route begins at a start; put one down first (B)"
 	case t.from == "" && t.on:
 		return "click to begin the route at this start"
 	case t.from == "":
@@ -168,5 +170,12 @@ func (t *Route) Hint(Host) string {
 	case t.on:
 		return "click to end the route at this target"
 	}
-	return "click waypoints, then the target; Enter or Esc ends the route here, Backspace takes a point back"
+	then := ""
+	if h.Plan().NumTargets() > 0 {
+		then = ", then the target"
+	}
+	if len(t.via) == 0 {
+		return "click waypoints" + then + "; Esc leaves the route"
+	}
+	return "click waypoints" + then + "; Enter or Esc ends the route here, Backspace takes a point back"
 }
