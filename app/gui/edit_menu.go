@@ -39,6 +39,8 @@ func (w *window) editMenu() []command {
 		{label: "Delete", key: "Del", do: w.deleteSelection, dead: some == 0},
 		{label: "Select all", key: "Ctrl+A", shortcut: &fyne.ShortcutSelectAll{}, do: w.selectAll, rule: true},
 		{label: "Select all of this kind", key: "Ctrl+Shift+A", shortcut: ctrl(fyne.KeyA, fyne.KeyModifierShift), do: w.selectKind, dead: some == 0},
+		{label: "Select the next item", key: "N", do: func() { w.nextItem(1) }},
+		{label: "Select the one before", key: "Shift+N", do: func() { w.nextItem(-1) }},
 		{label: "Rotate…", key: "Ctrl+R", shortcut: ctrl(fyne.KeyR, 0), do: w.askRotate, dead: some == 0, rule: true},
 		{label: "Mirror…", key: "Ctrl+M", shortcut: ctrl(fyne.KeyM, 0), do: w.askMirror, dead: some == 0},
 	}

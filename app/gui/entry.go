@@ -10,6 +10,7 @@ import (
 // not taken stays, and its fault is told.
 type entry struct {
 	textEntry
+	heeded
 	shown  string                   // the text last put in by the program
 	accept func(text string) error  // takes the text over
 	fault  func(err error)          // shows why it was not, or nil that all is well; may be nil
@@ -63,6 +64,7 @@ func (e *entry) FocusGained() {
 	e.inside = true
 	e.textEntry.FocusGained()
 	e.Entry.TypedShortcut(&fyne.ShortcutSelectAll{})
+	e.heed()
 }
 
 // FocusLost takes the text over.

@@ -100,7 +100,7 @@ func (f *form) build(c card) {
 	f.head(c)
 	f.figures(c.facts)
 	f.fault = newText("", assets.Regular, 12, roleRed).shrinking()
-	if f.legs = newLegTable(c.legs, f.w.tips); f.legs != nil { // what is wrong belongs to a leg
+	if f.legs = newLegTable(c.legs, f.w.tips, f.reveal); f.legs != nil { // what is wrong belongs to a leg
 		f.page.Add(f.legs.box)
 		f.page.Add(f.fault)
 	}
@@ -130,7 +130,7 @@ func (f *form) build(c card) {
 	}
 	f.actions(c.actions)
 	if c.delete {
-		f.page.Add(inset(0, 10, 0, 0, container.NewHBox(newPushButton("Delete", func() { f.w.typedKey(fyne.KeyDelete) }))))
+		f.page.Add(inset(0, 10, 0, 0, container.NewHBox(f.button("Delete", func() { f.w.typedKey(fyne.KeyDelete) }))))
 	}
 	f.page.Refresh()
 	if other {
@@ -144,10 +144,17 @@ func (f *form) actions(list []choice) {
 	for i := 0; i < len(list); i += 2 {
 		row := container.NewHBox()
 		for _, a := range list[i:min(i+2, len(list))] {
-			row.Add(inset(0, 0, 4, 0, newPushButton(a.text, a.do)))
+			row.Add(inset(0, 0, 4, 0, f.button(a.text, a.do)))
 		}
 		f.page.Add(inset(0, 8, 0, 0, row))
 	}
+}
+
+// button makes a button of the form.
+func (f *form) button(text string, do func()) *pushButton {
+	b := newPushButton(text, do)
+	b.gained = func() { f.reveal(b) }
+	return b
 }
 
 // head is the item's sign, letter and place.
@@ -180,14 +187,17 @@ func (f *form) row(d field) fyne.CanvasObject {
 	switch {
 	case d.colour:
 		r.dots = newSwatches(func(i int) { f.tell(r, r.field.pick(i)) })
+		r.dots.gained = func() { f.reveal(r.dots) }
 		value, width = r.dots, 0
 	case d.choices != nil:
 		r.pick = newPicker(d.choices, func(i int) { f.tell(r, r.field.pick(i)) })
+		r.pick.gained = func() { f.reveal(r.pick) }
 		value, width = r.pick, 0
 	default:
 		r.entry = newEntry(func(text string) error { return r.field.set(text) })
 		r.entry.fault = func(err error) { f.tell(r, err) }
 		r.entry.beyond = f.w.shortcut
+		r.entry.gained = func() { f.reveal(r.entry) }
 		r.entry.leave = func() { f.w.win.Canvas().Focus(f.w.view) }
 		r.entry.SetPlaceHolder(d.empty)
 		value = r.entry

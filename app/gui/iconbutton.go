@@ -14,6 +14,7 @@ import (
 // iconButton is a small button with a sign alone, for the end of a line; its tip says what it does.
 type iconButton struct {
 	widget.BaseWidget
+	heeded
 	icon             *icon
 	tip              string
 	tips             *tips
@@ -46,7 +47,7 @@ func (b *iconButton) TypedKey(e *fyne.KeyEvent) {
 }
 
 // FocusGained draws the focus ring and shows the tip after a while.
-func (b *iconButton) FocusGained() { b.focused = true; b.tell(); b.Refresh() }
+func (b *iconButton) FocusGained() { b.focused = true; b.tell(); b.Refresh(); b.heed() }
 
 // FocusLost takes the focus ring away.
 func (b *iconButton) FocusLost() { b.focused = false; b.tips.hide(); b.Refresh() }

@@ -81,6 +81,12 @@ func (w *window) typedRune(r rune) {
 		w.zoom(0.8)
 	case '0':
 		w.view.fit()
+	case 'n', 'N':
+		by := 1
+		if w.modifiers()&fyne.KeyModifierShift != 0 {
+			by = -1
+		}
+		w.nextItem(by)
 	case '9':
 		w.fitSelection()
 	}

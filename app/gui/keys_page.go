@@ -35,6 +35,7 @@ func keyGroups(unit string) []keyGroup {
 			{"click again", "what lies below"},
 			{"Shift and click", "add, or take out"},
 			{"drag a box", "what lies inside; with Ctrl also what it touches"},
+			{"N, Shift+N", "the next item, the one before"},
 			{"Ctrl+A, Ctrl+Shift+A", "all, or all of the same kind"},
 			{"arrows", nudgeRow(unit)},
 			{"H, J, K, U", "selected doors: hinges, side, leaf, open or shut"},

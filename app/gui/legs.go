@@ -102,8 +102,8 @@ type legLine struct {
 	row            legRow
 }
 
-// newLegTable makes a table for as many rows, nil for none.
-func newLegTable(rows []legRow, t *tips) *legTable {
+// newLegTable makes a table for as many rows, nil for none. reveal brings one of its buttons into sight.
+func newLegTable(rows []legRow, t *tips, reveal func(fyne.CanvasObject)) *legTable {
 	if len(rows) == 0 {
 		return nil
 	}
@@ -112,6 +112,9 @@ func newLegTable(rows []legRow, t *tips) *legTable {
 		l := &legLine{to: body("").shrinking(), far: newText("", assets.Bold, 12.5, roleInk).right(), time: newText("", assets.Regular, 12, roleInk2).right()}
 		l.sooner = newIconButton("chevron-up", "before waypoint "+number(float64(i), 0), t, func() { l.row.sooner() })
 		l.remove = newIconButton("close", "delete waypoint "+number(float64(i+1), 0), t, func() { l.row.remove() })
+		for _, b := range []*iconButton{l.sooner, l.remove} {
+			b.gained = func() { reveal(b) }
+		}
 		table.rows = append(table.rows, l)
 		table.box.Add(container.New(legLayout{}, l.to, l.far, l.time, l.sooner, l.remove))
 	}

@@ -14,6 +14,7 @@ import (
 // picker is a field that shows one of a few choices and drops down the others.
 type picker struct {
 	widget.BaseWidget
+	heeded
 	text    *inkText
 	chevron *icon
 	choices []string
@@ -56,7 +57,7 @@ func (p *picker) drop() {
 func (p *picker) Tapped(*fyne.PointEvent) { p.drop() }
 
 // FocusGained draws the focus ring.
-func (p *picker) FocusGained() { p.focused = true; p.Refresh() }
+func (p *picker) FocusGained() { p.focused = true; p.Refresh(); p.heed() }
 
 // FocusLost takes the focus ring away.
 func (p *picker) FocusLost() { p.focused = false; p.Refresh() }
@@ -64,11 +65,13 @@ func (p *picker) FocusLost() { p.focused = false; p.Refresh() }
 // TypedRune does nothing.
 func (p *picker) TypedRune(rune) {}
 
-// TypedKey drops the choices down on Space, Enter and Down.
+// TypedKey drops the choices down on Space, Enter and Down; the rest is the window's.
 func (p *picker) TypedKey(e *fyne.KeyEvent) {
 	switch e.Name {
 	case fyne.KeySpace, fyne.KeyReturn, fyne.KeyEnter, fyne.KeyDown:
 		p.drop()
+	default:
+		passOn(p, e)
 	}
 }
 

@@ -14,6 +14,7 @@ import (
 // pushButton is a button with words, a thin border and no colour; the primary one is filled with ink.
 type pushButton struct {
 	widget.BaseWidget
+	heeded
 	text    *inkText
 	primary bool
 	hovered bool
@@ -35,7 +36,7 @@ func (b *pushButton) first() *pushButton { b.primary = true; return b }
 func (b *pushButton) Tapped(*fyne.PointEvent) { b.tapped() }
 
 // FocusGained draws the focus ring.
-func (b *pushButton) FocusGained() { b.focused = true; b.Refresh() }
+func (b *pushButton) FocusGained() { b.focused = true; b.Refresh(); b.heed() }
 
 // FocusLost takes the focus ring away.
 func (b *pushButton) FocusLost() { b.focused = false; b.Refresh() }

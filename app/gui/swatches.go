@@ -6,11 +6,13 @@ import (
 	"fyne.io/fyne/v2/widget"
 )
 
-// swatches is a row of the eight observers' colours: four discs, then the same as rings.
+// swatches is a row of the eight observers' colours: four discs, then the same as rings. Arrows go from one to the next.
 type swatches struct {
 	widget.BaseWidget
-	chosen int
-	picked func(i int)
+	heeded
+	chosen  int
+	focused bool
+	picked  func(i int)
 }
 
 const (
@@ -38,9 +40,35 @@ func (s *swatches) Tapped(e *fyne.PointEvent) {
 	}
 }
 
+// FocusGained draws the focus ring.
+func (s *swatches) FocusGained() { s.focused = true; s.Refresh(); s.heed() }
+
+// FocusLost takes the focus ring away.
+func (s *swatches) FocusLost() { s.focused = false; s.Refresh() }
+
+// TypedRune does nothing.
+func (s *swatches) TypedRune(rune) {}
+
+// TypedKey picks the colour beside the chosen one, or the first or the last; other keys are the window's.
+func (s *swatches) TypedKey(e *fyne.KeyEvent) {
+	switch e.Name {
+	case fyne.KeyRight, fyne.KeyDown:
+		s.picked(min(s.chosen+1, swatchCount-1))
+	case fyne.KeyLeft, fyne.KeyUp:
+		s.picked(max(s.chosen-1, 0))
+	case fyne.KeyHome:
+		s.picked(0)
+	case fyne.KeyEnd:
+		s.picked(swatchCount - 1)
+	default:
+		passOn(s, e)
+	}
+}
+
 // CreateRenderer is for the toolkit.
 func (s *swatches) CreateRenderer() fyne.WidgetRenderer {
-	r := &swatchRenderer{s: s, ring: canvas.NewCircle(nil)}
+	r := &swatchRenderer{s: s, ring: canvas.NewCircle(nil), frame: canvas.NewRectangle(nil)}
+	r.frame.CornerRadius = 4
 	for range swatchCount {
 		r.dots = append(r.dots, canvas.NewCircle(nil))
 	}
@@ -52,6 +80,8 @@ type swatchRenderer struct {
 	s    *swatches
 	ring *canvas.Circle
 	dots []*canvas.Circle
+
+	frame *canvas.Rectangle // keyboard focus
 }
 
 func (r *swatchRenderer) Layout(size fyne.Size) {
@@ -63,6 +93,8 @@ func (r *swatchRenderer) Layout(size fyne.Size) {
 		circle(d, 9+float32(i)*swatchPitch, 6)
 	}
 	circle(r.ring, 9+float32(r.s.chosen)*swatchPitch, 9)
+	r.frame.Move(fyne.NewPos(-4, 0))
+	r.frame.Resize(fyne.NewSize(swatchCount*swatchPitch+3, size.Height))
 }
 
 func (r *swatchRenderer) MinSize() fyne.Size { return fyne.NewSize(swatchCount*swatchPitch, 27) }
@@ -78,12 +110,14 @@ func (r *swatchRenderer) Refresh() {
 	}
 	r.ring.FillColor, r.ring.StrokeColor, r.ring.StrokeWidth = faded(p.Ink, 0), p.Ink, 1.5
 	r.ring.Hidden = r.s.chosen < 0
+	r.frame.FillColor, r.frame.StrokeColor, r.frame.StrokeWidth = faded(p.Ink, 0), p.Ink, 2
+	r.frame.Hidden = !r.s.focused
 	r.Layout(r.s.Size())
 	canvas.Refresh(r.s)
 }
 
 func (r *swatchRenderer) Objects() []fyne.CanvasObject {
-	o := []fyne.CanvasObject{r.ring}
+	o := []fyne.CanvasObject{r.frame, r.ring}
 	for _, d := range r.dots {
 		o = append(o, d)
 	}

@@ -1,6 +1,8 @@
 package gui
 
 import (
+	"image/color"
+
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
 	"fyne.io/fyne/v2/widget"
@@ -24,5 +26,5 @@ func (w *wheel) Scrolled(e *fyne.ScrollEvent) { w.scroll.Scrolled(e) }
 
 // CreateRenderer is for the toolkit.
 func (w *wheel) CreateRenderer() fyne.WidgetRenderer {
-	return widget.NewSimpleRenderer(canvas.NewRectangle(nil))
+	return widget.NewSimpleRenderer(canvas.NewRectangle(color.Transparent))
 }
