@@ -35,8 +35,12 @@ func (w *window) typedKey(name fyne.KeyName) {
 	}
 	mods := w.modifiers()
 	k, known := toolKeys[name]
-	if known && w.tool.Key(w.host, tool.Key{Name: k, Shift: mods&fyne.KeyModifierShift != 0, Ctrl: mods&fyne.KeyModifierControl != 0}) {
+	key := tool.Key{Name: k, Shift: mods&fyne.KeyModifierShift != 0, Ctrl: mods&fyne.KeyModifierControl != 0}
+	if known && w.tool.Key(w.host, key) {
 		w.acted()
+		return
+	}
+	if w.view.arrow(name, key) {
 		return
 	}
 	switch name {

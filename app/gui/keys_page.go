@@ -26,6 +26,7 @@ func keyGroups(unit string) []keyGroup {
 			{"Backspace, Ctrl+Z", "take the last corner back"},
 			{"double click, Esc", "end the run; the first corner closes it"},
 			{"Shift", "eight directions, squares; a plain gap"},
+			{"arrows, Space", "move the pointer, and click there: all without a mouse"},
 			{"Ctrl", "nothing snaps; the Snap menu switches each kind"},
 			{"J", "the other side: of a wall's body, a door, a target's wall"},
 			{"H", "walls: thin or thick; doors: hinges at the other jamb"},

@@ -35,6 +35,7 @@ type planView struct {
 	pressed desktop.MouseButton // the button that is down over the picture, 0 for none
 	panning bool
 	space   bool
+	keyed   keyedPointer
 	alt     bool      // Alt is down and nothing else has happened since
 	clicked time.Time // for double clicks
 	at      fyne.Position
@@ -47,7 +48,7 @@ const (
 )
 
 func newPlanView(w *window) *planView {
-	v := &planView{w: w, fitted: true, around: w.bounds(), pix: 1, over: newOverlay(), ring: canvas.NewRectangle(nil)}
+	v := &planView{w: w, fitted: true, around: w.bounds(), pix: 1, over: newOverlay(), keyed: newKeyedPointer(), ring: canvas.NewRectangle(nil)}
 	v.raster = canvas.NewRaster(w.picture.draw)
 	v.raster.ScaleMode = canvas.ImageScalePixels // a pixel of the picture is one of the screen: nothing to blend
 	v.ExtendBaseWidget(v)
@@ -143,7 +144,10 @@ func (v *planView) DragEnd() {
 func (v *planView) MouseIn(e *desktop.MouseEvent) { v.MouseMoved(e) }
 
 // MouseMoved is a move, with or without a button.
-func (v *planView) MouseMoved(e *desktop.MouseEvent) { v.moved(e.Position) }
+func (v *planView) MouseMoved(e *desktop.MouseEvent) {
+	v.unkey()
+	v.moved(e.Position)
+}
 
 func (v *planView) moved(p fyne.Position) {
 	v.inside = p.X >= 0 && p.Y >= 0 && p.X < v.Size().Width && p.Y < v.Size().Height
@@ -160,6 +164,7 @@ func (v *planView) moved(p fyne.Position) {
 
 // MouseOut tells the tool that the pointer is gone.
 func (v *planView) MouseOut() {
+	v.unkey()
 	v.inside = false
 	if v.pressed == 0 {
 		v.w.tool.Leave(v.w.host)
@@ -274,6 +279,7 @@ func (v *planView) KeyUp(e *fyne.KeyEvent) {
 	switch e.Name {
 	case fyne.KeySpace:
 		v.space = false
+		v.press()
 	case fyne.KeyTab:
 		if v.w.win.Canvas().Focused() == fyne.Focusable(v) && !v.AcceptsTab() {
 			v.ringed = true
@@ -300,10 +306,11 @@ func (r *viewRenderer) Refresh() {
 	r.v.ring.FillColor, r.v.ring.StrokeColor, r.v.ring.StrokeWidth = nil, themed().Ink, 2
 	r.v.ring.Hidden = !r.v.ringed
 	r.v.ring.Refresh()
+	r.v.keyed.place(r.v.last)
 	r.v.raster.Refresh()
 }
 
 func (r *viewRenderer) Objects() []fyne.CanvasObject {
-	return []fyne.CanvasObject{r.v.raster, r.v.over.root, r.v.ring}
+	return []fyne.CanvasObject{r.v.raster, r.v.over.root, r.v.keyed.cross[0], r.v.keyed.cross[1], r.v.ring}
 }
 func (r *viewRenderer) Destroy() {}

@@ -32,16 +32,21 @@ func nudgeWords(h Host) string {
 	return "arrows nudge by 0.1 m"
 }
 
-// nudge is the step of an arrow key.
-func nudge(h Host, k Key) exact.Vec {
+// NudgeStep is how far an arrow key goes, in grid units.
+func NudgeStep(h Host, k Key) int32 {
 	n := nudgesOf(h)
-	step := n.Step
 	switch {
 	case k.Shift:
-		step = n.Far
+		return n.Far
 	case k.Ctrl:
-		step = n.Fine
+		return n.Fine
 	}
+	return n.Step
+}
+
+// nudge is the step of an arrow key.
+func nudge(h Host, k Key) exact.Vec {
+	step := NudgeStep(h, k)
 	switch k.Name {
 	case KeyLeft:
 		return exact.Vec{X: -step}
