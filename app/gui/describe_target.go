@@ -47,7 +47,7 @@ func (w *window) turnActions(p *plan.Plan, t plan.Target) []choice {
 	}
 	text := "Turn round (J)"
 	if _, hangs := pick.Hanging(p, pick.TargetAt(t), heading); hangs {
-		text = "To the wall's other face (J)"
+		text = "To the other face (J)"
 	}
 	ref := plan.Ref{Kind: plan.KindTarget, ID: t.ID}
 	return []choice{{text, func() {

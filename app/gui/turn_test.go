@@ -27,7 +27,7 @@ func TestATargetIsHungOnTheOtherFaceByItsForm(t *testing.T) {
 		}
 		r.form.offered[0].do()
 	}
-	press("To the wall's other face")
+	press("To the other face")
 	if q, _ := r.session.Plan().Target("T1"); q.At != m(4, 4.9) || *q.Normal != -90 {
 		t.Errorf("target at %v, looking to %v", q.At, *q.Normal)
 	}

@@ -8,7 +8,7 @@ import (
 	"enfilade/solver/plan"
 )
 
-// Face is a place on the free side of a wall's face.
+// Face is a place on the free side of a face: of a wall, a block, or the floor's outline.
 type Face struct {
 	At     exact.Pt
 	Normal float64 // degrees, away from the wall
@@ -16,8 +16,9 @@ type Face struct {
 	Ends   [2]exact.Pt // of the face, on its free side, which is to the left of the way from the first to the second
 	Middle bool        // the pointer is in the middle between this face and the one behind it, which could be meant as well
 
-	edge   edge // that it belongs to
-	behind edge // that the face behind it belongs to; of a wall only
+	edge   edge       // that it belongs to
+	behind edge       // that the face behind it belongs to; of a wall only
+	body   plan.Chain // the ring of the block whose face it is; of a block only
 }
 
 // edge is a face as its finder knows it: it lies off grid units to the left of the way from a to b.
@@ -25,61 +26,6 @@ type edge struct {
 	a, b exact.Pt
 	off  float64
 }
-
-// Other returns the face on the other side of a wall for the pixel place (x, y), in steps along it. ok is false of a block's
-// face and of the floor's.
-func (f Face) Other(cam view.Camera, x, y float64, step int32) (other Face, ok bool) {
-	return f.across(pointer(cam, x, y), step)
-}
-
-// Across returns the face on the other side of a wall, at the place over against q. ok is false of a block's face and of the
-// floor's.
-func (f Face) Across(q exact.Pt) (other Face, ok bool) { return f.across(spotOf(q), 1) }
-
-func (f Face) across(s spot, step int32) (Face, bool) {
-	if f.behind.a == f.behind.b {
-		return Face{}, false
-	}
-	g := faceFinder{s: s, step: step, best: math.Inf(1)}
-	g.side(f.behind, f.Ref)
-	g.face.behind, g.face.Middle = f.edge, f.Middle
-	return g.face, g.ok
-}
-
-// hangs is how far off a wall's face a thing is that hangs on it, at most, in grid units: 20 mm; and hangsTurned how far from
-// the face's normal it looks, in degrees.
-const hangs, hangsTurned = 20 * exact.PerMM, 0.5
-
-// Hanging returns the face of a wall on which a thing at a place hangs that looks to a direction in degrees; ok is false when
-// it hangs on none.
-func Hanging(p *plan.Plan, at exact.Pt, normal float64) (face Face, ok bool) {
-	f := faceFinder{s: spotOf(at), step: 1, best: hangs}
-	for _, w := range p.Walls() {
-		right2, left2 := w.Sides2()
-		if f.s.apart(w.Line, hangs+float64(max(right2, left2))/2) {
-			continue
-		}
-		edges(w.Line, false, func(_ int, a, b exact.Pt) bool {
-			left, right := edge{a, b, float64(left2) / 2}, edge{b, a, float64(right2) / 2}
-			for _, e := range [2][2]edge{{left, right}, {right, left}} {
-				turned := math.Remainder(e[0].normal()-normal, 360)
-				if math.Abs(turned) <= hangsTurned && f.side(e[0], plan.Ref{Kind: plan.KindWall, ID: w.ID}) {
-					f.face.behind = e[1]
-				}
-			}
-			return true
-		})
-	}
-	return f.face, f.ok
-}
-
-// normal is the direction a face looks to, in degrees.
-func (e edge) normal() float64 {
-	return math.Atan2(float64(e.b.X)-float64(e.a.X), float64(e.a.Y)-float64(e.b.Y)) * 180 / math.Pi
-}
-
-// Same reports whether both are places on the same face.
-func (f Face) Same(g Face) bool { return f.Ref == g.Ref && f.edge == g.edge }
 
 // middleReach is how near the pointer is to the middle of a wall to be in it, in px at 100 %: the pixel right on it.
 const middleReach = 0.5
@@ -92,8 +38,9 @@ const faceReach = 16
 const standOff = 1.5
 
 // FaceAt returns the nearest face of a wall, a block or the floor's inside within reach of the pixel place (x, y), and the
-// grid point on its free side; in the middle of a wall the face that looks up, or of an upright wall to the left. On a level or upright face of whole grid units the point lies on the face itself; along it
-// the point takes steps. Screens and glazing have faces too; openings are not looked at.
+// grid point on its free side; in the middle of a wall the face that looks up, or of an upright wall to the left. On a level or
+// upright face of whole grid units the point lies on the face itself; along it the point takes steps. Screens and glazing have
+// faces too; openings are not looked at.
 func FaceAt(p *plan.Plan, cam view.Camera, x, y float64, step int32) (Face, bool) {
 	s := pointer(cam, x, y)
 	f := faceFinder{s: s, step: step, best: units(cam, faceReach), middle: units(cam, middleReach)}
@@ -109,11 +56,11 @@ func FaceAt(p *plan.Plan, cam view.Camera, x, y float64, step int32) (Face, bool
 	}
 	for _, b := range p.Blocks() {
 		if !b.Hidden && !s.apart(b.Ring, f.best) {
-			f.ring(b.Ring, clockwise(b.Ring), plan.Ref{Kind: plan.KindBlock, ID: b.ID})
+			f.ring(b.Ring, clockwise(b.Ring), plan.Ref{Kind: plan.KindBlock, ID: b.ID}, b.Ring)
 		}
 	}
 	if p.Floor().Len() > 0 {
-		f.ring(p.Floor(), !clockwise(p.Floor()), plan.Ref{Kind: plan.KindFloor})
+		f.ring(p.Floor(), !clockwise(p.Floor()), plan.Ref{Kind: plan.KindFloor}, plan.Chain{})
 	}
 	return f.face, f.ok
 }
@@ -127,13 +74,23 @@ type faceFinder struct {
 	ok     bool
 }
 
-// ring offers the edges of a ring, with the free side to their left when left says so.
-func (f *faceFinder) ring(c plan.Chain, left bool, ref plan.Ref) {
+// ring offers the edges of a ring, with the free side to their left when left says so. body is the ring of a block, empty for the
+// floor.
+func (f *faceFinder) ring(c plan.Chain, left bool, ref plan.Ref, body plan.Chain) {
+	outward(c, left, func(e edge) {
+		if f.side(e, ref) {
+			f.face.body = body
+		}
+	})
+}
+
+// outward yields the edges of a ring with their free side to the left; it is there already when left says so.
+func outward(c plan.Chain, left bool, yield func(edge)) {
 	edges(c, true, func(_ int, a, b exact.Pt) bool {
 		if left {
-			f.side(edge{a, b, 0}, ref)
+			yield(edge{a, b, 0})
 		} else {
-			f.side(edge{b, a, 0}, ref)
+			yield(edge{b, a, 0})
 		}
 		return true
 	})

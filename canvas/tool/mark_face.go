@@ -18,7 +18,7 @@ func (t *Mark) hangs() string {
 	side := faceName(f.Normal)
 	switch {
 	case f.Ref.Kind == plan.KindBlock:
-		return "click to " + what + " the block's " + side + " face"
+		return "click to " + what + " the block's " + side + " face; J: the one behind"
 	case f.Ref.Kind == plan.KindFloor:
 		return "click to " + what + " the floor's edge, looking " + lookWords(f.Normal)
 	case f.Middle && t.side == nil:

@@ -1,6 +1,8 @@
 package tool_test
 
 import (
+	"math"
+	"slices"
 	"strings"
 	"testing"
 
@@ -113,6 +115,36 @@ func TestTurnRound(t *testing.T) {
 	h := oneWall(t)
 	if e := tool.TurnRound(h.plan, plan.Ref{Kind: plan.KindTarget, ID: "T9"}); e != nil {
 		t.Error("a target that is none is turned")
+	}
+}
+
+// TestABlocksOtherFace: of a block the face behind is the one that the line straight through it comes out by.
+func TestABlocksOtherFace(t *testing.T) {
+	ring := plan.ChainOf(m(0, 0), m(4, 0), m(4, 1), m(2, 1), m(2, 3), m(0, 3)) // an L
+	for _, reversed := range []bool{false, true} {
+		pts := ring.Points()
+		if reversed {
+			slices.Reverse(pts)
+		}
+		for _, c := range []struct{ x, y, toX, toY, normal float64 }{
+			{3, -0.1, 3, 1, 90}, {1, -0.1, 1, 3, 90}, {-0.1, 2, 2, 2, 0}, {-0.1, 0.5, 4, 0.5, 0}, {3, 1.1, 3, 0, -90}, {2.1, 2, 0, 2, 180},
+		} {
+			h := newHost(t, plan.Parts{Blocks: []plan.Block{{ID: "B1", Ring: plan.ChainOf(pts...), Height: plan.Ceiling}}})
+			tg := &tool.Mark{Kind: plan.KindTarget}
+			h.move(tg, c.x, c.y)
+			was, _ := h.shown.Target("T1")
+			h.typed(tg, "j")
+			q, _ := h.shown.Target("T1")
+			if q.At != m(c.toX, c.toY) || q.Normal == nil || math.Abs(math.Remainder(*q.Normal-c.normal, 360)) > 1e-9 {
+				t.Errorf("reversed %v: from %v, %v to %v, looking to %v", reversed, c.x, c.y, q.At, *q.Normal)
+			}
+			h.click(tg, c.x, c.y)
+			h.Select(plan.Ref{Kind: plan.KindTarget, ID: "T1"})
+			h.typed(&tool.Select{}, "j")
+			if q, _ := h.plan.Target("T1"); q.At != was.At {
+				t.Errorf("reversed %v: back from %v, %v it hangs at %v, not %v", reversed, c.toX, c.toY, q.At, was.At)
+			}
+		}
 	}
 }
 

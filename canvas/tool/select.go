@@ -322,7 +322,7 @@ func selectionHint(h Host) string {
 	case plan.KindWall:
 		return arrows + ", Delete takes away · J: body centred, left, right"
 	case plan.KindTarget:
-		return arrows + ", Delete takes away · J: to the wall's other face, or turned round"
+		return arrows + ", Delete takes away · J: to the other face, or turned round"
 	}
 	return arrows + " (Shift more, Ctrl less), Delete takes away"
 }
