@@ -1,10 +1,15 @@
 package gui
 
 import (
+	"strconv"
+	"strings"
 	"testing"
 
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/driver/desktop"
+
+	"enfilade/solver/exact"
+	"enfilade/solver/plan"
 )
 
 // open opens the menu with a title by the mouse.
@@ -60,5 +65,28 @@ func TestMenuGivesWay(t *testing.T) {
 	}
 	if r.showKeys(); d.Visible() {
 		t.Error("the menu stays open over a page")
+	}
+}
+
+// TestClosableWalls: only a wall with corners enough and open ends can be closed to a ring.
+func TestClosableWalls(t *testing.T) {
+	r := newRig(t, realSolver)
+	for name, c := range map[string]struct {
+		line string
+		want bool
+	}{
+		"one piece": {"0 0 3 0", false}, "two pieces": {"0 0 3 0 3 2", true}, "a ring": {"0 0 3 0 3 2 0 0", false},
+	} {
+		var pts []exact.Pt
+		for f := strings.Fields(c.line); len(f) > 0; f = f[2:] {
+			x, _ := strconv.ParseFloat(f[0], 64)
+			y, _ := strconv.ParseFloat(f[1], 64)
+			pts = append(pts, m(x, y))
+		}
+		w := plan.Wall{ID: "W1", Line: plan.ChainOf(pts...)}
+		r.session.Open(plan.From(plan.Parts{Walls: []plan.Wall{w}}), "")
+		if got := r.closable("W1"); got != c.want {
+			t.Errorf("%s: closable is %v", name, got)
+		}
 	}
 }

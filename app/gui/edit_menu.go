@@ -62,8 +62,14 @@ func (w *window) wallMenu(walls []string) []command {
 		{label: "Lengthen to…", do: func() { w.takeUp(&tool.Meet{Lengthen: true}) }, dead: n == 0},
 		{label: "Split wall…", do: func() { w.takeUp(&tool.Split{}) }, dead: w.session.Plan().NumWalls() == 0},
 		{label: "Join walls", key: "Ctrl+J", shortcut: ctrl(fyne.KeyJ, 0), do: func() { w.try(plan.JoinWalls{Walls: walls}) }, dead: n < 2},
-		{label: "Close wall to a ring", do: func() { w.try(plan.CloseWall{Wall: walls[0]}) }, dead: n != 1},
+		{label: "Close wall to a ring", do: func() { w.try(plan.CloseWall{Wall: walls[0]}) }, dead: n != 1 || !w.closable(walls[0])},
 	}
+}
+
+// closable reports whether a wall has corners enough for a ring, and is none yet.
+func (w *window) closable(id string) bool {
+	x, ok := w.session.Plan().Wall(id)
+	return ok && x.Line.Len() > 2 && x.Line.At(0) != x.Line.At(x.Line.Len()-1)
 }
 
 // selectedWalls are the ids of the selected walls that are not locked.

@@ -66,9 +66,13 @@ func (w *window) askShown() {
 	var eyes, ways []*checkRow
 	var ids []string
 	var pairs []paint.Walk
-	for _, o := range p.Observers() {
+	for i, o := range p.Observers() {
 		on := w.results.all || slices.Contains(w.shown.regions, o.ID)
-		eyes, ids = append(eyes, newCheckRow(itemTitle(o.ID, o.Name), on)), append(ids, o.ID)
+		title := observerLetter(i) // as in the picture
+		if o.Name != "" {
+			title += " · " + o.Name
+		}
+		eyes, ids = append(eyes, newCheckRow(title, on)), append(ids, o.ID)
 		regions.Add(eyes[len(eyes)-1])
 	}
 	for _, s := range p.Starts() {
@@ -129,14 +133,6 @@ func (w *window) setShown(regions []string, observers int, walks []paint.Walk, p
 		w.shown.choice = paint.WalksNone
 	}
 	w.acted()
-}
-
-// itemTitle is an item's letter or number with its name.
-func itemTitle(id, name string) string {
-	if name == "" {
-		return id
-	}
-	return name + " (" + id + ")"
 }
 
 // fitSelection shows what is selected, or the whole plan when nothing is.
