@@ -5,6 +5,7 @@ import (
 	"strings"
 
 	"enfilade/canvas/tool"
+	"enfilade/solver/exact"
 	"enfilade/solver/plan"
 	"enfilade/solver/study"
 )
@@ -30,6 +31,7 @@ func (w *window) describeObserver(c *card, p *plan.Plan, o plan.Observer) {
 	}
 	c.fields = []field{
 		textField("Name", o.Name, func(t string) error { return put("rename observer", func(o *plan.Observer) { o.Name = t }) }),
+		w.placeField(o.At, func(q exact.Pt) error { return put("move observer", func(o *plan.Observer) { o.At = q }) }),
 		w.lengthField("Eye height", o.Eye, func(v int32) error {
 			if v <= 0 || v > maxEye {
 				return errPositive
@@ -126,6 +128,9 @@ func (w *window) describeStart(c *card, p *plan.Plan, s plan.Start) {
 	c.fields = []field{textField("Name", s.Name, func(t string) error {
 		s.Name = t
 		return w.doEdit(tool.Named("rename start", set(s)))
+	}), w.placeField(s.At, func(q exact.Pt) error {
+		s.At = q
+		return w.doEdit(tool.Named("move start", set(s)))
 	}), facing}
 	if w.walking.shown {
 		c.fields = append(c.fields, w.stepField())

@@ -26,6 +26,9 @@ func (w *window) describeTarget(c *card, p *plan.Plan, t plan.Target) {
 	c.fields = []field{textField("Name", t.Name, func(s string) error {
 		return put("rename target", func(t *plan.Target) { t.Name = s })
 	})}
+	if t.Face == nil { // a face stands where its ends do
+		c.fields = append(c.fields, w.placeField(t.At, func(q exact.Pt) error { return put("move target", func(t *plan.Target) { t.At = q }) }))
+	}
 	c.fields = append(c.fields, w.describeFace(t, put)...)
 	c.fields = append(c.fields, w.describeLimits(t, put)...)
 	c.actions = w.turnActions(p, t)
@@ -220,8 +223,19 @@ func (w *window) placeText(q exact.Pt) string {
 	return strings.TrimSpace(fmt.Sprintf("%s; %s", formatLength(q.X, w.unit()), formatLength(q.Y, w.unit())))
 }
 
+// placeField is the field of where a mark stands.
+func (w *window) placeField(at exact.Pt, set func(exact.Pt) error) field {
+	return field{label: "At", wide: true, text: w.placeText(at), set: func(text string) error {
+		q, err := parsePlace(text, w.unit())
+		if err != nil {
+			return err
+		}
+		return set(q)
+	}}
+}
+
 // errPlace is what a form says of a text that is no place.
-var errPlace = errors.New("x; y, please")
+var errPlace = errors.New("x and y, please: 3.20; 1.50")
 
 // parsePlace reads a place: x and y parted by a semicolon, or by a space or a comma where that can mean nothing else.
 func parsePlace(text, unit string) (exact.Pt, error) {

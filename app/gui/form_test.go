@@ -45,6 +45,15 @@ func TestObserverForm(t *testing.T) {
 	if r.form.facts[0].value.text != "104.8" || r.form.facts[1].value.text != "4 of 7" {
 		t.Errorf("facts %q, %q", r.form.facts[0].value.text, r.form.facts[1].value.text)
 	}
+	for text, want := range map[string]exact.Pt{"11.5; 8.75": m(11.5, 8.75), "11,35; 8,75": m(11.35, 8.75)} {
+		if r.enter("At", text); r.observer("O1").At != want {
+			t.Errorf("at %q stands at %v", text, r.observer("O1").At)
+		}
+	}
+	if x := r.enter("At", "11"); x.wrong.text == "" || !x.wrong.Visible() {
+		t.Error("one number is taken for a place")
+	}
+	r.line("At").entry.TypedKey(&fyne.KeyEvent{Name: fyne.KeyEscape})
 	r.enter("Eye height", "1,2")
 	r.enter("Heading", "90,5")
 	r.enter("View angle", "120")
