@@ -17,12 +17,16 @@ func (r *rig) retype(text string) {
 func TestTabAndTypeReplaces(t *testing.T) {
 	r := newGallery(t)
 	r.click(11.35, 8.75)
-	name, eye := r.line("Name").entry, r.line("Eye height").entry
+	name, at, eye := r.line("Name").entry, r.line("At").entry, r.line("Eye height").entry
 	r.win.Canvas().Focus(name)
 	r.retype("Guard")
 	r.win.Canvas().FocusNext()
-	if r.win.Canvas().Focused() != eye {
+	if r.win.Canvas().Focused() != at {
 		t.Fatalf("after the name the focus is on %T", r.win.Canvas().Focused())
+	}
+	r.win.Canvas().FocusNext()
+	if r.win.Canvas().Focused() != eye {
+		t.Fatalf("after the place the focus is on %T", r.win.Canvas().Focused())
 	}
 	r.retype("1.2")
 	r.win.Canvas().Focus(r.view)
