@@ -1,7 +1,7 @@
 package plan
 
 import (
-	"maps"
+	"cmp"
 	"slices"
 )
 
@@ -76,21 +76,29 @@ func put[T any, P item[T]](s *setter, kind Kind, l list[T], items []T) list[T] {
 // fittedAll is fitted for all walls for which touched holds, in one pass over the openings. An opening that names none of the
 // walls is an error when its wall was to be touched.
 func fittedAll(openings list[Opening], walls *list[Wall], touched func(id string) bool) (list[Opening], error) {
-	own := map[int][]int{} // by the wall's place
-	lost := -1             // the first whose wall is not there
+	type hung struct{ wall, opening int }
+	var own []hung
+	lost := -1 // the first whose wall is not there
 	for i, o := range openings.refs() {
 		if !touched(o.Wall) {
 			continue
 		}
 		if k := at(walls, o.Wall); k >= 0 {
-			own[k] = append(own[k], i)
+			own = append(own, hung{k, i})
 		} else if lost < 0 {
 			lost = i
 		}
 	}
+	// In the plan's order, so that the same plan gives the same error.
+	slices.SortFunc(own, func(a, b hung) int { return cmp.Or(cmp.Compare(a.wall, b.wall), cmp.Compare(a.opening, b.opening)) })
 	e := openings.edit()
-	for _, k := range slices.Sorted(maps.Keys(own)) { // in the plan's order, so that the same plan gives the same error
-		if err := fitOwn(&e, own[k], walls.at(k)); err != nil {
+	var list []int
+	for n := 0; n < len(own); {
+		k := own[n].wall
+		for list = list[:0]; n < len(own) && own[n].wall == k; n++ {
+			list = append(list, own[n].opening)
+		}
+		if err := fitOwn(&e, list, walls.at(k)); err != nil {
 			return openings, err
 		}
 	}
