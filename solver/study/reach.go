@@ -3,6 +3,7 @@ package study
 import (
 	"context"
 	"fmt"
+	"slices"
 
 	"github.com/paulmach/orb"
 
@@ -139,13 +140,20 @@ const flatness = 1 * exact.PerMM
 // Contours returns the lines on which the distance is a multiple of step, which is in mm and more than 0, in pieces. The points
 // of a piece are exactly as far as its level, to measuring; its chords stray from the line by at most 1 mm.
 func (f *Field) Contours(ctx context.Context, step float64) ([]Contour, error) {
-	var all []Contour
-	err := f.field.Contours(ctx, step*exact.PerMM, flatness, func(level float64, line [][2]float64) {
-		c := Contour{Level: mm(level), Line: make(orb.LineString, len(line))}
-		for i, p := range line {
-			c.Line[i] = orb.Point{mm(p[0]), mm(p[1])}
-		}
-		all = append(all, c)
+	parts, err := pulse.Split(ctx, f.field.Triangles(), func(ctx context.Context, lo, hi int) (list []Contour, err error) {
+		var room orb.LineString // what the lines are cut from
+		err = f.field.ContoursIn(ctx, lo, hi, step*exact.PerMM, flatness, func(level float64, line [][2]float64) {
+			if len(room) < len(line) {
+				room = make(orb.LineString, max(len(line), 1<<12))
+			}
+			c := Contour{Level: mm(level), Line: room[:len(line):len(line)]}
+			room = room[len(line):]
+			for i, p := range line {
+				c.Line[i] = orb.Point{mm(p[0]), mm(p[1])}
+			}
+			list = append(list, c)
+		})
+		return list, err
 	})
-	return all, err
+	return slices.Concat(parts...), err
 }

@@ -21,9 +21,17 @@ import (
 //   - Cost: for each triangle with k parts and each multiple, O(k² log k) and the points of the polylines; no allocation once
 //     the buffers have grown.
 func (d *Field) Contours(ctx context.Context, step, flat float64, do func(level float64, line [][2]float64)) error {
+	return d.ContoursIn(ctx, 0, d.Triangles(), step, flat, do)
+}
+
+// Triangles returns the number of triangles that the field lies on.
+func (d *Field) Triangles() int { return len(d.m.Tris) }
+
+// ContoursIn is Contours for the triangles from lo up to hi alone. Several may run at once.
+func (d *Field) ContoursIn(ctx context.Context, lo, hi int, step, flat float64, do func(level float64, line [][2]float64)) error {
 	c := contourer{field: d, flat: flat, do: do}
-	for t := range d.m.Tris {
-		if err := pulse.Step(ctx, t, len(d.m.Tris)); err != nil {
+	for t := lo; t < hi; t++ {
+		if err := pulse.Step(ctx, t-lo, hi-lo); err != nil {
 			return err
 		}
 		if c.tri, c.parts = &d.m.Tris[t], d.of(int32(t)); len(c.parts) == 0 {
@@ -108,9 +116,11 @@ func (c *contourer) arc(i int, level float64) {
 	long := math.Sqrt(float64(k.r.Len2()))
 	a.ux, a.uy = float64(k.r.X)/long, float64(k.r.Y)/long
 	a.end = math.Atan2(float64(k.r.Cross(k.l)), float64(k.r.Dot(k.l)))
+	a.point()
 	if !c.enter(&a, from) {
 		return
 	}
+	a.point()
 	for j := range c.parts {
 		if j != i && c.spans[j][0] < level {
 			c.cutByPart(&a, k, &c.parts[j], level)
@@ -160,8 +170,20 @@ func (c *contourer) enter(a *arc, from *root) bool {
 	return true
 }
 
-// arc is a stretch of a circle around a root; angles are counted from the right side of a cone.
-type arc struct{ radius, ux, uy, start, end float64 }
+// arc is a stretch of a circle around a root, less than half of it; angles are counted from the right side of a cone.
+type arc struct {
+	radius, ux, uy, start, end float64
+
+	sx, sy, ex, ey float64 // directions from the root to its start and its end
+}
+
+// point finds the directions to the arc's start and end.
+func (a *arc) point() {
+	s, c := math.Sincos(a.start)
+	a.sx, a.sy = c*a.ux-s*a.uy, s*a.ux+c*a.uy
+	s, c = math.Sincos(a.end)
+	a.ex, a.ey = c*a.ux-s*a.uy, s*a.ux+c*a.uy
+}
 
 // at returns the point of the arc at an angle, as an offset from the root.
 func (a *arc) at(angle float64) (x, y float64) {
@@ -171,6 +193,9 @@ func (a *arc) at(angle float64) (x, y float64) {
 
 // cut notes the angle of the point at an offset from the root, if it lies on the arc.
 func (c *contourer) cut(a *arc, x, y float64) {
+	if a.sx*y-a.sy*x < 0 || a.ex*y-a.ey*x > 0 {
+		return // most do not, and angles take long to measure
+	}
 	if angle := math.Atan2(a.ux*y-a.uy*x, a.ux*x+a.uy*y); angle > a.start && angle < a.end {
 		c.cuts = append(c.cuts, angle)
 	}
@@ -178,9 +203,13 @@ func (c *contourer) cut(a *arc, x, y float64) {
 
 // cutByLine cuts the arc where it meets the line through the point at offset x, y in direction fx, fy.
 func (c *contourer) cutByLine(a *arc, x, y, fx, fy float64) {
-	long := math.Hypot(fx, fy)
-	fx, fy = fx/long, fy/long
-	along, off := x*fx+y*fy, x*fy-y*fx
+	off, long := x*fy-y*fx, fx*fx+fy*fy
+	if a.radius*a.radius*long <= off*off {
+		return
+	}
+	long = math.Sqrt(long)
+	fx, fy, off = fx/long, fy/long, off/long
+	along := x*fx + y*fy
 	if half := a.radius*a.radius - off*off; half > 0 {
 		half = math.Sqrt(half)
 		footX, footY := x-along*fx, y-along*fy
