@@ -22,6 +22,7 @@ func (w *window) describeWall(c *card, x plan.Wall) {
 	c.fields = []field{{label: "Kind", choices: wallKinds, chosen: int(x.Kind), pick: func(i int) error {
 		return put("change kind of wall", func(x *plan.Wall) { w.setKind(x, plan.WallKind(i)) })
 	}}}
+	c.fields = append(c.fields, w.straightFields(x)...)
 	if x.Kind == plan.Solid || x.Kind == plan.Low {
 		c.fields = append(c.fields, w.lengthField("Thickness", x.Thickness, func(v int32) error {
 			return w.within(v, 0, plan.MaxThickness, func() error { return put("change thickness", func(x *plan.Wall) { x.Thickness = v }) })
@@ -117,6 +118,10 @@ func (w *window) describeBlock(c *card, x plan.Block) {
 			})
 		}))
 	}
+	c.fields = append(c.fields, w.sideFields(x.Ring, func(ring plan.Chain) error {
+		x.Ring = ring
+		return w.doEdit(tool.Named("change size of block", set(x)))
+	})...)
 	c.fields = append(c.fields, w.heightField(x.Height, func(v int32) error {
 		x.Height = v
 		return w.doEdit(tool.Named("change height", set(x)))
@@ -138,6 +143,10 @@ func (w *window) describeZone(c *card, x plan.Zone) {
 			return w.doEdit(tool.Named("change kind of zone", set(x)))
 		}},
 	}
+	c.fields = append(c.fields, w.sideFields(x.Ring, func(ring plan.Chain) error {
+		x.Ring = ring
+		return w.doEdit(tool.Named("change size of zone", set(x)))
+	})...)
 	c.fault = problemOf(w.results.result, plan.Ref{Kind: plan.KindZone, ID: x.ID})
 	c.reach = w.reachRows(x.ID)
 }
