@@ -81,7 +81,7 @@ func median(list []float64) (float64, bool) {
 
 func print(figures map[key][]float64) {
 	out := tabwriter.NewWriter(os.Stdout, 0, 0, 2, ' ', tabwriter.AlignRight)
-	fmt.Fprintln(out, "what\tplan\twalls\tours\tCGAL\ttimes as fast\tallocations\tbytes\tns/triangle\tsingle floods\tours, growth\tCGAL, growth\t")
+	fmt.Fprintln(out, "what\tplan\twalls\tours\tCGAL\ttimes as fast\tallocations\tbytes\tns/triangle\tfloods of all floor\tours, growth\tCGAL, growth\t")
 	for _, r := range rows {
 		first := map[string]key{}
 		for _, k := range sizes(figures, r.ours, r.unit) {
