@@ -131,7 +131,7 @@ func (w *window) describeBlock(c *card, x plan.Block) {
 
 // describeZone is the form of a named area.
 func (w *window) describeZone(c *card, x plan.Zone) {
-	c.title, c.icon, c.where = "Zone", "zone", fmt.Sprintf("%s m²", number(ringArea(x.Ring), 1))
+	c.title, c.icon, c.where = "Zone", "zone", areaWords(w.unit(), ringArea(x.Ring), 1)
 	room := 1
 	if x.Room {
 		room = 0

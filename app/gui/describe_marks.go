@@ -67,9 +67,10 @@ func (w *window) describeObserver(c *card, p *plan.Plan, o plan.Observer) {
 			c.fault = s.Problem
 			return
 		}
-		c.facts = []fact{{number(s.Area, 1), "m² seen"},
+		area, square := areaText(w.unit(), s.Area, 1)
+		c.facts = []fact{{area, square + " seen"},
 			{fmt.Sprintf("%d of %d", len(s.TargetsSeen), p.NumTargets()), "targets seen"},
-			{number(s.Occluding, 1) + " m", "open border"}}
+			{farText(w.unit(), s.Occluding*1000), "open border"}}
 	}
 }
 

@@ -38,7 +38,8 @@ func (w *window) describeTarget(c *card, p *plan.Plan, t plan.Target) {
 			c.fault = s.Problem
 			return
 		}
-		c.facts = []fact{{number(s.Area, 1), "m² see " + askedShort(s.Asked)}, {w.seenBy(p, t.ID), "see it now"}}
+		area, square := areaText(w.unit(), s.Area, 1)
+		c.facts = []fact{{area, square + " see " + askedShort(s.Asked)}, {w.seenBy(p, t.ID), "see it now"}}
 	}
 }
 

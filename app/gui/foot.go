@@ -37,11 +37,11 @@ func walkLine(p *plan.Plan, r *results) string {
 	if !ok {
 		return head
 	}
-	return head + "  ·  " + strings.Join(walkParts(a, p.Walker().Pace), "  ·  ")
+	return head + "  ·  " + strings.Join(walkParts(a, p.Walker().Pace, p.Sheet().Unit), "  ·  ")
 }
 
-// walkParts are the facts about an approach.
-func walkParts(a study.Approach, pace float64) []string {
+// walkParts are the facts about an approach, its lengths in the plan's unit.
+func walkParts(a study.Approach, pace float64, unit string) []string {
 	if a.Problem != "" {
 		return []string{a.Problem}
 	}
@@ -49,25 +49,25 @@ func walkParts(a study.Approach, pace float64) []string {
 	what := askedWords(a.Asked)
 	switch a.Status {
 	case study.StatusSeen:
-		parts = append(parts, strings.TrimSpace(what+" in sight from the start, ")+" "+metres(a.SightLine, 1)+" m away")
+		parts = append(parts, strings.TrimSpace(what+" in sight from the start, ")+" "+farText(unit, a.SightLine)+" away")
 	case study.StatusApproach:
 		if what != "" {
 			what = "of " + what + " "
 		}
-		parts = append(parts, fmt.Sprintf("first sight %safter %s m (%.1f s)", what, metres(a.Length, 1), a.Seconds),
-			"sight line "+metres(a.SightLine, 1)+" m")
+		parts = append(parts, fmt.Sprintf("first sight %safter %s (%.1f s)", what, farText(unit, a.Length), a.Seconds),
+			"sight line "+farText(unit, a.SightLine))
 	default:
 		parts = append(parts, "never in sight: "+because(a.Reason))
 	}
 	switch {
 	case a.HasFullWalk && pace > 0:
-		parts = append(parts, fmt.Sprintf("full walk %s m (%.1f s)", metres(a.FullWalk, 1), a.FullWalk/1000/pace))
+		parts = append(parts, fmt.Sprintf("full walk %s (%.1f s)", farText(unit, a.FullWalk), a.FullWalk/1000/pace))
 	case a.HasFullWalk:
-		parts = append(parts, "full walk "+metres(a.FullWalk, 1)+" m")
+		parts = append(parts, "full walk "+farText(unit, a.FullWalk))
 	case a.Status != study.StatusNone:
 		parts = append(parts, "no full walk: "+because(a.Reason))
 	}
-	if w := widthWords(a); w != "" {
+	if w := widthWords(a, unit); w != "" {
 		parts = append(parts, w)
 	}
 	if a.Ties {

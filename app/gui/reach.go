@@ -28,7 +28,7 @@ func (w *window) reachRows(zone string) (rows []reachRow) {
 				case k.Problem != "" || !k.Found:
 					row.near, row.far, row.old = "no way", "", old
 				default:
-					row.near, row.far, row.old = metres(k.Nearest, 1)+" m", metres(k.Farthest, 1)+" m", old
+					row.near, row.far, row.old = farText(w.unit(), k.Nearest), farText(w.unit(), k.Farthest), old
 					if k.Cut {
 						row.far = "in part " + row.far
 					}

@@ -150,7 +150,7 @@ func tableRows(p *plan.Plan, r *results) []row {
 			w := row{pair: pr, from: startName(p, s.ID), to: targetName(p, g.ID), mark: "unknown", stale: stale,
 				chosen: pr == pair{r.start, r.target}}
 			if a, ok := found[pr]; ok {
-				w.fill(a)
+				w.fill(a, p.Sheet().Unit)
 			}
 			rows = append(rows, w)
 		}
@@ -158,11 +158,11 @@ func tableRows(p *plan.Plan, r *results) []row {
 	return rows
 }
 
-// fill puts an approach's figures into its row.
-func (w *row) fill(a study.Approach) {
-	w.full, w.tip = "–", tipWords(a)
+// fill puts an approach's figures into its row, in the plan's unit.
+func (w *row) fill(a study.Approach, unit string) {
+	w.full, w.tip = "–", tipWords(a, unit)
 	if a.HasFullWalk {
-		w.full = metres(a.FullWalk, 1) + " m"
+		w.full = farText(unit, a.FullWalk)
 	}
 	switch {
 	case a.Problem != "":
@@ -170,7 +170,7 @@ func (w *row) fill(a study.Approach) {
 	case a.Status == study.StatusSeen:
 		w.mark, w.first = "seen", "at once"
 	case a.Status == study.StatusApproach:
-		w.mark, w.first = "first-sight", metres(a.Length, 1)+" m"
+		w.mark, w.first = "first-sight", farText(unit, a.Length)
 	default:
 		w.mark, w.first = "unseen", "never"
 	}

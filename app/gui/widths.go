@@ -9,26 +9,26 @@ import (
 )
 
 // widthWords tells how wide a body can be and still make some walk, empty when nothing narrows it or nothing is known.
-func widthWords(a study.Approach) string {
-	first, full := metres(a.ClearWidth, 2), metres(a.FullClearWidth, 2)
+func widthWords(a study.Approach, unit string) string {
+	first, full := wideText(unit, a.ClearWidth), wideText(unit, a.FullClearWidth)
 	switch {
 	case a.Problem != "":
 		return ""
 	case a.WidthsUnknown:
 		return "clear width not known: too many walls stand side by side"
 	case a.HasClearWidth && a.HasFullClearWidth && first != full:
-		return "clear width " + full + " m, to first sight " + first + " m"
+		return "clear width " + full + ", to first sight " + first
 	case a.HasFullClearWidth:
-		return "clear width " + full + " m"
+		return "clear width " + full
 	case a.HasClearWidth:
-		return "clear width to first sight " + first + " m"
+		return "clear width to first sight " + first
 	}
 	return ""
 }
 
 // tipWords tells what a row has no column for: how much of a face must be in view, and the clear width.
-func tipWords(a study.Approach) string {
-	what, wide := askedWords(a.Asked), widthWords(a)
+func tipWords(a study.Approach, unit string) string {
+	what, wide := askedWords(a.Asked), widthWords(a, unit)
 	switch {
 	case a.Problem != "":
 		return a.Problem

@@ -46,7 +46,7 @@ func TestWidthWords(t *testing.T) {
 		{study.Approach{ClearWidth: 920, HasClearWidth: true, FullClearWidth: 920, HasFullClearWidth: true}, "clear width 0.92 m"},
 		{study.Approach{ClearWidth: 920, HasClearWidth: true, Problem: "start S1 stands in wall W1"}, ""},
 	} {
-		if got := widthWords(c.a); got != c.want {
+		if got := widthWords(c.a, "m"); got != c.want {
 			t.Errorf("%+v: %q, want %q", c.a, got, c.want)
 		}
 	}
