@@ -73,6 +73,7 @@ func (p *picture) draw(w, h int) image.Image {
 	}
 	if v.cam.W != w || v.cam.H != h || v.pix != pix {
 		v.resized(w, h, pix)
+		p.w.do(p.w.acted) // handles and the snap's step stand where the camera was
 	}
 	scene := p.scene()
 	under := p.baseFor(scene)
