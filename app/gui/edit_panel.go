@@ -43,9 +43,6 @@ type panelRow struct {
 	pick        *picker
 }
 
-// panelWidth is the width of an edit's panel, in px at 100 %.
-const panelWidth = 286
-
 // open shows the panel and takes its tool in hand.
 func (w *window) openPanel(p *editPanel) {
 	w.choose(0)
@@ -87,20 +84,7 @@ func (p *editPanel) build() {
 	buttons := container.NewHBox(layout.NewSpacer(), newPushButton("Cancel", func() { p.w.choose(0) }), inset(8, 0, 0, 0, newPushButton(p.title, p.apply).first()))
 	page.Add(inset(0, 8, 0, 0, buttons))
 	frame := container.NewStack(newPaper(roleRule), inset(1, 1, 1, 1, on(rolePanel, inset(16, 14, 16, 14, page))))
-	p.box = container.New(cornered{}, frame)
-}
-
-// cornered puts a panel into the upper right corner of the picture.
-type cornered struct{}
-
-// MinSize is for the toolkit.
-func (cornered) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.Size{} }
-
-// Layout is for the toolkit.
-func (cornered) Layout(o []fyne.CanvasObject, s fyne.Size) {
-	h := o[0].MinSize().Height
-	o[0].Resize(fyne.NewSize(panelWidth, h))
-	o[0].Move(fyne.NewPos(max(0, s.Width-panelWidth-14), 34))
+	p.box = container.New(cornered{p.w.panelAtLeft(frame.MinSize().Height)}, frame)
 }
 
 // focus puts the cursor into the first entry.
