@@ -107,7 +107,7 @@ func hinge(x plan.Opening) (i int) {
 // describeBlock is the form of a column, a plinth or another body.
 func (w *window) describeBlock(c *card, x plan.Block) {
 	c.title, c.icon = "Block", "box"
-	c.where = fmt.Sprintf("%s m² of floor", number(ringArea(x.Ring), 2))
+	c.where = areaWords(w.unit(), ringArea(x.Ring), 2) + " of floor"
 	if x.Circle != nil {
 		c.title, c.icon = "Column", "block"
 		c.fields = append(c.fields, w.lengthField("Radius", x.Circle.Radius, func(v int32) error {

@@ -4,6 +4,7 @@ import (
 	"strings"
 	"testing"
 
+	"enfilade/assets"
 	"enfilade/solver/plan"
 )
 
@@ -22,9 +23,19 @@ func TestFiguresInThePlansUnit(t *testing.T) {
 		r.session.Select(plan.Ref{Kind: plan.KindObserver, ID: r.results.observer})
 		r.acted()
 		r.settle()
-		for _, row := range tableRows(r.session.Plan(), &r.results) {
+		for _, row := range r.table.rows {
 			if row.full != "–" && !strings.HasSuffix(row.full, c.length) {
 				t.Errorf("%s: the table says %q", c.unit, row.full)
+			}
+		}
+		cells := r.table.columns.Objects
+		for i, text := range []string{"62345 mm", "62345 mm"} {
+			weight, size := assets.Bold, float32(12.5)
+			if i == 1 {
+				weight, size = assets.Regular, 12
+			}
+			if need := textSize(text, weight, size).Width; c.unit == "mm" && cells[2+i].Size().Width < need+2 {
+				t.Errorf("a column of %g px for a figure of %g", cells[2+i].Size().Width, need)
 			}
 		}
 		if line := r.foot.line.text; !strings.Contains(line, c.length+" (") || c.unit != "m" && strings.Contains(line, " m ") {

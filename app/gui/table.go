@@ -18,20 +18,22 @@ import (
 // table lists the approaches to every target under the start they are from. The row under the pointer is shown in the plan
 // while it is there; a click chooses it.
 type table struct {
-	w     *window
-	box   *fyne.Container
-	count *inkText
-	empty *fyne.Container
-	list  *widget.List
-	rows  []row
-	lines []int // what the list shows: indices of rows, and for the heading above a row -1 less its index
-	seen  tableKey
-	fresh freshRows
+	w       *window
+	box     *fyne.Container
+	columns *fyne.Container // their heads
+	count   *inkText
+	empty   *fyne.Container
+	list    *widget.List
+	rows    []row
+	lines   []int // what the list shows: indices of rows, and for the heading above a row -1 less its index
+	seen    tableKey
+	fresh   freshRows
 }
 
 // tableKey is all that the table depends on.
 type tableKey struct {
 	marks         *plan.Marks
+	unit          string
 	result        *study.Result
 	start, target string
 	stale         bool
@@ -64,9 +66,9 @@ func newTable(w *window) *table {
 	t.empty = pile(body("No approaches yet."), caption("Put down a start (B) and a target (T): the walk to"),
 		caption("first sight is worked out as you draw."))
 	head := around(nil, nil, heading("Approaches"), nil, t.count)
-	columns := container.New(rowLayout{}, newText("", assets.Regular, 11, roleInk3), newText("target", assets.Regular, 11, roleInk3),
+	t.columns = container.New(rowLayout{t}, newText("", assets.Regular, 11, roleInk3), newText("target", assets.Regular, 11, roleInk3),
 		newText("first sight", assets.Regular, 11, roleInk3).right(), newText("full walk", assets.Regular, 11, roleInk3).right())
-	top := pile(inset(18, 14, 18, 4, head), columns)
+	top := pile(inset(18, 14, 18, 4, head), t.columns)
 	t.box = around(pile(hairline(), top), nil, nil, nil,
 		container.NewStack(container.NewThemeOverride(inset(0, 2, 0, 6, t.list), tightLook{w}), inset(18, 8, 18, 0, t.empty)))
 	return t
@@ -75,12 +77,13 @@ func newTable(w *window) *table {
 // update brings the rows up to date.
 func (t *table) update() {
 	p, r := t.w.session.Plan(), &t.w.results
-	key := tableKey{p.Marks(), r.result, r.start, r.target, r.stale(live.StageApproaches)}
+	key := tableKey{p.Marks(), p.Sheet().Unit, r.result, r.start, r.target, r.stale(live.StageApproaches)}
 	if key == t.seen {
 		return
 	}
 	other := key.start != t.seen.start || key.target != t.seen.target
 	t.seen = key
+	t.columns.Refresh()
 	rows := tableRows(p, r)
 	t.fresh.compare(t.w, rows)
 	t.show(rows)
@@ -290,7 +293,7 @@ func (r *tableRow) MouseOut() {
 
 // CreateRenderer is for the toolkit.
 func (r *tableRow) CreateRenderer() fyne.WidgetRenderer {
-	cells := container.New(rowLayout{}, r.mark, r.walk, r.first, r.full)
+	cells := container.New(rowLayout{r.t}, r.mark, r.walk, r.first, r.full)
 	x := &tableRowRenderer{r: r, ground: canvas.NewRectangle(nil), bar: canvas.NewRectangle(nil), cells: cells,
 		from: inset(18, 6, 18, 0, r.from)}
 	x.Refresh()
@@ -332,15 +335,19 @@ func (x *tableRowRenderer) Objects() []fyne.CanvasObject {
 }
 func (x *tableRowRenderer) Destroy() {}
 
-// rowLayout is the table's columns: mark, walk, first sight, full walk.
-type rowLayout struct{}
+// rowLayout is the table's columns: mark, walk, first sight, full walk; the figures' are wider in a unit that takes more digits.
+type rowLayout struct{ t *table }
 
 // MinSize is for the toolkit.
 func (rowLayout) MinSize([]fyne.CanvasObject) fyne.Size { return fyne.NewSize(200, 18) }
 
 // Layout is for the toolkit.
-func (rowLayout) Layout(o []fyne.CanvasObject, s fyne.Size) {
-	const side, firstWide, fullWide = 18, 54, 50
+func (l rowLayout) Layout(o []fyne.CanvasObject, s fyne.Size) {
+	const side = 18
+	firstWide, fullWide := float32(54), float32(50)
+	if u := l.t.seen.unit; u == "mm" || u == "cm" {
+		firstWide, fullWide = 74, 66
+	}
 	place := func(o fyne.CanvasObject, x, w float32) {
 		o.Move(fyne.NewPos(x, 0))
 		o.Resize(fyne.NewSize(w, s.Height))
