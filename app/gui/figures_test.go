@@ -23,6 +23,9 @@ func TestFiguresInThePlansUnit(t *testing.T) {
 		r.session.Select(plan.Ref{Kind: plan.KindObserver, ID: r.results.observer})
 		r.acted()
 		r.settle()
+		if step := formatLength(r.host.Snapper().Step(r.view.cam), c.unit); !strings.Contains(r.status.snap.text, step) {
+			t.Errorf("%s: the status line says %q of a grid of %s", c.unit, r.status.snap.text, step)
+		}
 		for _, row := range r.table.rows {
 			if row.full != "–" && !strings.HasSuffix(row.full, c.length) {
 				t.Errorf("%s: the table says %q", c.unit, row.full)

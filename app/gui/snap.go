@@ -54,7 +54,7 @@ func (w *window) snapText(s *pick.Snap, cam view.Camera) string {
 	if cam.Scale == 0 {
 		return ""
 	}
-	grid := strings.TrimSpace("Snap: grid " + formatLength(w.snapper.Step(cam), w.unit()) + " " + unitMark(w.unit()))
+	grid := strings.TrimSpace("Snap: grid " + formatLength(w.host.Snapper().Step(cam), w.unit()) + " " + unitMark(w.unit()))
 	if !w.snapper.On.Has(pick.SnapGrid) {
 		grid = "Snap: no grid"
 	}
