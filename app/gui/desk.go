@@ -10,7 +10,7 @@ import (
 type desk struct {
 	parts   parts
 	look    *look
-	setting bool      // the look is being set: the toolkit tells that its settings have changed
+	setting bool      // the toolkit is being given its theme, and tells that its settings have changed
 	size    fyne.Size // of windows, where it was asked for
 	windows []*window
 	opened  int // windows so far: each has a number of its own
@@ -58,14 +58,23 @@ func (d *desk) quitFrom(i int) {
 	}
 }
 
-// setLook changes the theme of every window.
-func (d *desk) setLook(l *look) {
-	d.look = l
+// setLook changes the colours of every window. The toolkit is not given another theme: it would throw away all measures of texts
+// and parse its fonts anew, for which it holds the window for a tenth of a second, where sizes and fonts stay as they are.
+func (d *desk) setLook(l look) {
+	*d.look = l
 	for _, w := range d.windows {
-		w.look = l
+		c := w.win.Canvas()
+		for _, o := range append(c.Overlays().List(), c.Content()) {
+			o.Refresh()
+		}
+		w.acted()
 	}
+}
+
+// rescale has the toolkit look at its scale, which it does when it is given a theme.
+func (d *desk) rescale() {
 	d.setting = true
-	d.parts.app.Settings().SetTheme(l)
+	d.parts.app.Settings().SetTheme(d.look)
 	d.setting = false
 	for _, w := range d.windows {
 		w.acted()

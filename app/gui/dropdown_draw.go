@@ -3,6 +3,8 @@ package gui
 import (
 	"fyne.io/fyne/v2"
 	"fyne.io/fyne/v2/canvas"
+
+	"enfilade/canvas/paint"
 )
 
 // pack sets the commands below one another: closer together in a window too low for them, and where that is not enough they are
@@ -68,9 +70,12 @@ func (d *dropDown) reveal(i int) {
 }
 
 // CreateRenderer is for the toolkit.
-func (d *dropDown) CreateRenderer() fyne.WidgetRenderer { return &dropRenderer{d} }
+func (d *dropDown) CreateRenderer() fyne.WidgetRenderer { return &dropRenderer{d: d} }
 
-type dropRenderer struct{ d *dropDown }
+type dropRenderer struct {
+	d     *dropDown
+	drawn *paint.Theme // the lines were last drawn in
+}
 
 func (r *dropRenderer) Layout(fyne.Size) {
 	d := r.d
@@ -133,6 +138,12 @@ func (r *dropRenderer) Refresh() {
 	d.tint.FillColor = faded(p.Ink, 10)
 	r.Layout(d.Size())
 	canvas.Refresh(d)
+	if r.drawn != p {
+		r.drawn = p
+		for _, o := range r.Objects()[2:] {
+			o.Refresh()
+		}
+	}
 }
 
 func (r *dropRenderer) Objects() []fyne.CanvasObject {

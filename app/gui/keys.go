@@ -159,7 +159,7 @@ func (w *window) next(kind plan.Kind) {
 // setTheme changes the look and remembers it.
 func (w *window) setTheme(choice string) {
 	w.app.Preferences().SetString(prefTheme, choice)
-	w.desk.setLook(&look{choice: choice, silent: w.look.silent})
+	w.desk.setLook(look{choice: choice, silent: w.look.silent})
 }
 
 // showAbout says what the program is and what it is not.

@@ -42,7 +42,7 @@ func (w *window) setScale(s float64) {
 	for _, v := range w.desk.windows {
 		sizes[v] = v.win.Canvas().Size()
 	}
-	w.desk.setLook(w.look) // the toolkit looks at its scale when it is given a theme
+	w.desk.rescale()
 	w.do(func() {
 		for v, size := range sizes {
 			if !v.closing {

@@ -11,6 +11,7 @@ import (
 
 	"enfilade/app/live"
 	"enfilade/assets"
+	"enfilade/canvas/paint"
 	"enfilade/solver/plan"
 	"enfilade/solver/study"
 )
@@ -188,6 +189,7 @@ type tableRow struct {
 	t           *table
 	row         row
 	head        bool // it is the heading of the row's start
+	drawn       *paint.Theme
 	hovered     bool
 	mark        *icon
 	from, walk  *inkText
@@ -203,7 +205,7 @@ func newTableRow(t *table) *tableRow {
 }
 
 func (r *tableRow) put(w row) {
-	if r.row == w && !r.head {
+	if r.row == w && !r.head && r.drawn == themed() {
 		return
 	}
 	r.row, r.head = w, false
@@ -227,7 +229,7 @@ func (r *tableRow) put(w row) {
 
 // putHead makes the line the heading of the start that a row is from.
 func (r *tableRow) putHead(w row) {
-	if r.head && r.row.pair == w.pair && r.row.from == w.from {
+	if r.head && r.row.pair == w.pair && r.row.from == w.from && r.drawn == themed() {
 		return
 	}
 	r.row, r.head = w, true
@@ -315,6 +317,7 @@ func (x *tableRowRenderer) Layout(s fyne.Size) {
 func (x *tableRowRenderer) MinSize() fyne.Size { return fyne.NewSize(200, 28) }
 func (x *tableRowRenderer) Refresh() {
 	p := themed()
+	x.r.drawn = p
 	x.ground.FillColor, x.bar.FillColor = color.Transparent, color.Transparent
 	switch {
 	case x.r.row.chosen:

@@ -54,7 +54,7 @@ func (d *desk) hearSystem() {
 		}
 		d.parts.do(func() {
 			if d.look.silent {
-				d.setLook(&look{choice: d.look.choice})
+				d.setLook(look{choice: d.look.choice})
 			}
 		})
 	})

@@ -24,7 +24,7 @@ func TestSilentSystemIsLight(t *testing.T) {
 	}
 	r := newRig(t, realSolver)
 	r.desk.hearSystem()
-	r.desk.setLook(&look{choice: themeSystem, silent: true})
+	r.desk.setLook(look{choice: themeSystem, silent: true})
 	r.setTheme(themeSystem)
 	r.until("nothing is queued", func() bool { return len(r.queue) == 0 })
 	if !r.look.silent {
