@@ -69,6 +69,7 @@ func TestKeyboardReachesEverything(t *testing.T) {
 
 // TestEscapePutsEveryDialogAway, wherever the focus is in it, and nothing has changed.
 func TestEscapePutsEveryDialogAway(t *testing.T) {
+	long(t)
 	for name, open := range map[string]func(*rig){
 		"open": func(r *rig) { r.askOpen() }, "save": func(r *rig) { r.askSave(nil) }, "picture": func(r *rig) { r.askPicture() },
 		"underlay": func(r *rig) { r.askUnderlay() }, "keys": func(r *rig) { r.showKeys() }, "about": func(r *rig) { r.showAbout() },

@@ -13,6 +13,7 @@ import (
 // TestEveryStepOfEveryToolSaysWhatTheNextClickDoes goes through the tools step by step: at each the status line says something
 // of its own, all of which has room at 1440 px and the first part of which at 1024 px.
 func TestEveryStepOfEveryToolSaysWhatTheNextClickDoes(t *testing.T) {
+	long(t)
 	for _, c := range []struct {
 		name, keys string
 		steps      func(r *rig, says func(part string))

@@ -47,6 +47,7 @@ func (r *rig) stops() (all []fyne.Focusable) {
 // TestTabLeadsWhereItCanBeSeen: what has the focus lies in sight, whatever is selected and however low the window is, and Tab
 // comes round by the picture, the column, the menus and the tools.
 func TestTabLeadsWhereItCanBeSeen(t *testing.T) {
+	long(t)
 	for _, sel := range []plan.Ref{{Kind: plan.KindObserver, ID: "O1"}, {Kind: plan.KindRoute, ID: "R1"}, {Kind: plan.KindTarget, ID: "T1"}, {}} {
 		r := keyed(t, sel)
 		if sel == (plan.Ref{}) {
@@ -124,6 +125,7 @@ func TestWhatCanBeClickedCanBeReachedByKeys(t *testing.T) {
 
 // TestTheFocusIsVisible in both themes: each kind of part looks otherwise with the focus than without.
 func TestTheFocusIsVisible(t *testing.T) {
+	long(t)
 	for _, theme := range []string{themeLight, themeDark} {
 		r := keyed(t, plan.Ref{Kind: plan.KindObserver, ID: "O1"})
 		r.setTheme(theme)

@@ -38,6 +38,13 @@ func newRig(t testing.TB, solver func() live.Solver) *rig {
 	return r
 }
 
+// long leaves a long test out under the race detector: nothing in it runs beside the window that shorter ones do not run too.
+func long(t *testing.T) {
+	if raceEnabled {
+		t.Skip("long, and made of what other tests do under the race detector")
+	}
+}
+
 // newGallery is a window with the first sample in it, solved.
 func newGallery(t *testing.T) *rig {
 	t.Helper()
