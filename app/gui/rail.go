@@ -91,7 +91,7 @@ func newRail(t *tips, choose func(i int)) (*fyne.Container, []*toolButton) {
 		buttons = append(buttons, b)
 		objects = append(objects, b)
 	}
-	return container.New(railLayout{}, objects...), buttons
+	return on(roleChrome, container.New(railLayout{}, objects...)), buttons
 }
 
 // railLayout stacks the rail: it is 54 px wide and a button's pitch is 40.

@@ -110,7 +110,8 @@ func newWindow(d *desk) *window {
 	return w
 }
 
-// build puts the window together. The toolkit clears it in the chrome's colour, so that bars and rail need no ground of their own.
+// build puts the window together. Bars and rail have a ground each, and there is none under the whole: where there
+// is no GPU the processor would paint every pixel twice.
 func (w *window) build() {
 	w.tips, w.notice, w.status = newTips(w.do), newNotice(), newStatus()
 	w.view, w.foot, w.form, w.table, w.first = newPlanView(w), newFoot(), newForm(w), newTable(w), newFirstSteps()
@@ -130,7 +131,7 @@ func (w *window) build() {
 	w.bar = newMenuBar(w.menus())
 	w.bar.drop.take = func() { w.win.Canvas().Focus(w.bar.drop) }
 	w.bar.drop.back = w.view.grab
-	page := around(pile(w.bar, hairline(), w.notice.box), w.status.box, nil, nil, w.middle)
+	page := around(pile(on(roleChrome, w.bar), hairline(), w.notice.box), on(roleChrome, w.status.box), nil, nil, w.middle)
 	w.notice.page = page
 	w.win.SetContent(container.NewStack(page, w.bar.drop, w.tips.layer))
 	w.shortcuts()
