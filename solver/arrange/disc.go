@@ -40,8 +40,8 @@ func Sides(p *plan.Plan) int {
 const spare = 2
 
 // Disc returns a polygon with grid corners around the origin that encloses the disc of the given radius and two units more,
-// counter-clockwise, the same under quarter turns and mirroring. It has FineSides or CoarseSides sides. Excess is how far its farthest corner lies beyond the
-// radius, in grid units.
+// counter-clockwise, the same under quarter turns and mirroring. It has FineSides or CoarseSides sides. Excess is how far its
+// farthest corner lies beyond the radius, in grid units.
 func Disc(radius int32, sides int) (ring []exact.Vec, excess float64) {
 	r := int64(radius) + spare
 	for reach := float64(r) / math.Cos(math.Pi/float64(sides)); ; reach++ {

@@ -113,7 +113,7 @@ func (s *survey) keepOpen(open []stretch, t stretch) []stretch {
 	return open
 }
 
-// between returns the middle of an end of one piece that lies on the other and the piece's own middle: a place on both.
+// between returns an end of one piece that lies on the other: a place on both.
 func between(s, t *piece) exact.Pt {
 	for _, q := range [4]exact.Pt{t.a, t.b, s.a, s.b} {
 		if exact.OnSegment(s.a, s.b, q) && exact.OnSegment(t.a, t.b, q) {

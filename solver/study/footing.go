@@ -35,7 +35,7 @@ func (sc *scene) stand(p exact.Pt, d demand) footing {
 		}
 	}
 	f := footing{at: p}
-	if f.off = !inRing(sc.floor, p); f.off {
+	if f.off = !exact.InRing(sc.floor, p); f.off {
 		f.text = "lies outside the floor; move it inside"
 		return f
 	}
@@ -75,21 +75,3 @@ var nearby = func() []exact.Vec {
 	})
 	return all
 }()
-
-// inRing reports whether p lies in the closed region that the ring winds around, by the crossings of a ray to the right.
-func inRing(ring []exact.Pt, p exact.Pt) bool {
-	wind := 0
-	for i, a := range ring {
-		b := ring[(i+1)%len(ring)]
-		if exact.OnSegment(a, b, p) {
-			return true
-		}
-		switch {
-		case a.Y <= p.Y && b.Y > p.Y && exact.Orient(a, b, p) > 0:
-			wind++
-		case b.Y <= p.Y && a.Y > p.Y && exact.Orient(a, b, p) < 0:
-			wind--
-		}
-	}
-	return wind != 0
-}
