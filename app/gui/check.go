@@ -93,8 +93,7 @@ func (c *checkRenderer) Refresh() {
 	c.box.FillColor, c.box.StrokeColor, c.box.StrokeWidth = p.Field, p.FieldBorder, 1
 	c.tint.FillColor = faded(p.Ink, 7)
 	c.tint.Hidden = !c.r.hovered
-	c.ring.FillColor, c.ring.StrokeColor, c.ring.StrokeWidth = faded(p.Ink, 0), p.Ink, 2
-	c.ring.Hidden = !c.r.focused
+	showFocus(c.ring, c.r.focused)
 	c.r.tick.Hidden = !c.r.on
 	c.r.text.Refresh()
 	c.r.tick.Refresh()

@@ -96,11 +96,9 @@ func (r *iconButtonRenderer) Refresh() {
 	if r.b.hovered {
 		r.tint.FillColor = faded(p.Ink, 10)
 	}
-	r.ring.FillColor, r.ring.StrokeColor, r.ring.StrokeWidth = faded(p.Ink, 0), p.Ink, 2
-	r.ring.Hidden = !r.b.focused
+	showFocus(r.ring, r.b.focused)
 	r.b.icon.Refresh()
 	canvas.Refresh(r.tint)
-	canvas.Refresh(r.ring)
 }
 
 func (r *iconButtonRenderer) Objects() []fyne.CanvasObject {

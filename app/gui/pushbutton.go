@@ -109,12 +109,10 @@ func (r *pushRenderer) Refresh() {
 			r.tint.FillColor = faded(p.ToolIcon, 13)
 		}
 	}
-	r.ring.FillColor, r.ring.StrokeColor, r.ring.StrokeWidth = faded(p.Ink, 0), p.Ink, 2
-	r.ring.Hidden = !r.b.focused
+	showFocus(r.ring, r.b.focused)
 	r.b.text.Refresh()
 	canvas.Refresh(r.ground)
 	canvas.Refresh(r.tint)
-	canvas.Refresh(r.ring)
 }
 
 func (r *pushRenderer) Objects() []fyne.CanvasObject {

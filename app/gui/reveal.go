@@ -1,6 +1,9 @@
 package gui
 
-import "fyne.io/fyne/v2"
+import (
+	"fyne.io/fyne/v2"
+	"fyne.io/fyne/v2/canvas"
+)
 
 // heeded is a widget that tells when it gets the focus, so that what holds it can bring it into sight.
 type heeded struct {
@@ -12,6 +15,14 @@ func (h *heeded) heed() {
 	if h.gained != nil {
 		h.gained()
 	}
+}
+
+// showFocus draws the ring of a widget that has the focus, and takes it away from others.
+func showFocus(ring *canvas.Rectangle, focused bool) {
+	ink := themed().Ink
+	ring.FillColor, ring.StrokeColor, ring.StrokeWidth = faded(ink, 0), ink, 2
+	ring.Hidden = !focused
+	canvas.Refresh(ring)
 }
 
 // ringRoom is how far a focus ring reaches beyond its widget, in px at 100 %.

@@ -110,8 +110,7 @@ func (r *swatchRenderer) Refresh() {
 	}
 	r.ring.FillColor, r.ring.StrokeColor, r.ring.StrokeWidth = faded(p.Ink, 0), p.Ink, 1.5
 	r.ring.Hidden = r.s.chosen < 0
-	r.frame.FillColor, r.frame.StrokeColor, r.frame.StrokeWidth = faded(p.Ink, 0), p.Ink, 2
-	r.frame.Hidden = !r.s.focused
+	showFocus(r.frame, r.s.focused)
 	r.Layout(r.s.Size())
 	canvas.Refresh(r.s)
 }

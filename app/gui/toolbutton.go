@@ -155,10 +155,8 @@ func (r *toolButtonRenderer) Refresh() {
 	}
 	r.b.icon.Refresh()
 	r.b.letter.Refresh()
-	r.ring.FillColor, r.ring.StrokeColor, r.ring.StrokeWidth = faded(p.Ink, 0), p.Ink, 2
-	r.ring.Hidden = !r.b.focused
+	showFocus(r.ring, r.b.focused)
 	canvas.Refresh(r.ground)
-	canvas.Refresh(r.ring)
 }
 
 func (r *toolButtonRenderer) Objects() []fyne.CanvasObject {
